@@ -37,4 +37,7 @@ const fonts = dirname(require.resolve('dejavu-fonts-ttf/package.json'));
 for (const font of ['DejaVuSans', 'DejaVuSans-Bold', 'DejaVuSansMono']) {
   await copyFile(join(fonts, 'ttf', `${font}.ttf`), join(dist, `${font}.ttf`));
 }
-await copyFile(join(dirname(require.resolve('manifold-3d/package.json')), 'manifold.wasm'), join(dist, 'manifold.wasm'));
+await copyFile(
+  join(dirname(require.resolve('manifold-3d/package.json')), 'manifold.wasm'),
+  join(dist, 'manifold.wasm'),
+);

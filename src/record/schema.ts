@@ -80,7 +80,9 @@ export const windingSchema = z.strictObject({
   pitchKind: z.enum(['close', 'spacer', 'groove']),
   spacerMm: num.describe('thickness of what is wound along; 0 when none'),
   spacerName: text,
-  turnPositionsMm: z.array(num).describe('Z of the wire centre at the middle of each turn; the last may be a part turn'),
+  turnPositionsMm: z
+    .array(num)
+    .describe('Z of the wire centre at the middle of each turn; the last may be a part turn'),
   startMm: num.describe('Z of the wire centre at the start hole (turn 0)'),
   finishMm: num.describe('Z of the wire centre at the finish hole'),
   meanDiameterMm: num.describe('twice the radius of the wire centre'),
@@ -116,11 +118,15 @@ export const formerSchema = z.strictObject({
     .strictObject({
       depthMm: num.describe('from the outside to the flat floor'),
       floorMm: num.describe('width of the flat floor; flanks rise at 45 degrees'),
-      runInTurns: num.describe('the groove deepens from nothing over this many turns before the start and after the finish'),
+      runInTurns: num.describe(
+        'the groove deepens from nothing over this many turns before the start and after the finish',
+      ),
     })
     .nullable(),
   chamferMm: num.describe('on the lower outer and inner edges, for the first layers'),
-  ears: z.array(z.strictObject({ angleDeg: num, holeDiameterMm: num, centreRadiusMm: num, widthMm: num, thicknessMm: num })),
+  ears: z.array(
+    z.strictObject({ angleDeg: num, holeDiameterMm: num, centreRadiusMm: num, widthMm: num, thicknessMm: num }),
+  ),
   numbers: z
     .array(z.strictObject({ text, angleDeg: num, tap: num.int().nullable() }))
     .describe('tap numbers and the letter S, cut into the face of the upper flange at the angle of their hole'),
@@ -210,7 +216,15 @@ export const recordSchema = z.strictObject({
   checks: z.array(checkSchema),
   corrections: z.array(correctionSchema),
   cautions: z.array(text),
-  chosen: z.strictObject({ prefer: text, why: text, lossFactor: num, massG: num, worstTapPercent: num, tried: num.int(), feasible: num.int() }),
+  chosen: z.strictObject({
+    prefer: text,
+    why: text,
+    lossFactor: num,
+    massG: num,
+    worstTapPercent: num,
+    tried: num.int(),
+    feasible: num.int(),
+  }),
   warnings: z.array(z.strictObject({ code: text, text })),
   given: z.record(text, z.unknown()),
   assumed: z.record(text, z.unknown()),
