@@ -1,0 +1,126 @@
+import { arcOwnShare } from './arc.ts';
+import { needPositive } from './domain.ts';
+import { ringMutual, ringSelf } from './maxwell.ts';
+
+/**
+ * Low-frequency inductance L (H) of a winding as coaxial rings at the axial `positions` of their wire centres, in any order.
+ *
+ * Units: m; `wireRadius` is the bare radius. The last ring may be only `lastFraction` of a turn (0 to 1): its mutual terms are
+ * taken times that fraction, which is exact by symmetry, and its own term is that of an arc (`arcOwnShare`).
+ * Domain: at least one position, no two alike (Infinity), 0 < wireRadius < radius.
+ * Source: Maxwell 1873, art. 701 and 706; Grover 1946, ch. 16. Evenly spaced rings cost N evaluations of M, others N^2/2.
+ * Accuracy: 1e-9 relative against 11 independently computed ring sums; 0.2 % or better against the true helix of those coils
+ * (the worst has 10 turns at a pitch of a tenth of the diameter; close-wound coils agree within 0.02 %).
+ *
+ * Example: ringSumMatrixFree([0, 0.002], 0.05, 0.0005) = 1.034779e-6
+ */
+export function ringSumMatrixFree(
+  positions: ArrayLike<number>,
+  radius: number,
+  wireRadius: number,
+  lastFraction = 1,
+): number {
+  const count = positions.length;
+  if (count === 0) throw new RangeError('a winding needs at least one ring');
+  if (lastFraction === 1) return prefixes(positions, count, radius, wireRadius)[count]!;
+  const whole = prefixes(positions, count - 1, radius, wireRadius)[count - 1]!;
+  return whole + arcAfter(positions, count - 1, positions[count - 1]!, lastFraction, radius, wireRadius);
+}
+
+export interface CumulativeInductance {
+  /** Inductance (H) of turns 0 to `turn`, for any real turn from 0 (where it is 0) to the number of turns; RangeError beyond. */
+  at(turn: number): number;
+}
+
+/**
+ * Low-frequency inductance L (H) from the start of a winding to any turn of it: what a tap there sees with the rest open.
+ *
+ * Units: m. `positions[k]` is the wire centre at the middle of turn k, that is at u = k + 1/2 turns from the start. A winding that
+ * ends in a part of a turn has one more position, at the middle of that part, u = (whole turns + turns)/2, and says so by `turns`
+ * (default: the number of positions, all whole).
+ * A tap at K + f turns has the rings 0 to K - 1 whole, and an arc f at the place that the positions, joined by straight lines,
+ * have at u = K + f/2.
+ * Domain: turns > 0, as many positions as turns rounded up. Continuous in `turn`; at a whole turn the ring sum of the first ones.
+ * Source: as `ringSumMatrixFree`. Cost: N evaluations of M to prepare evenly spaced turns, N^2/2 otherwise (500 turns: about 3 ms);
+ * after that nothing at a whole turn and N evaluations between two.
+ *
+ * Example: cumulativeInductance([0, 0.002], 0.05, 0.0005).at(2) = 1.034779e-6
+ */
+export function cumulativeInductance(
+  positions: ArrayLike<number>,
+  radius: number,
+  wireRadius: number,
+  turns = positions.length,
+): CumulativeInductance {
+  needPositive({ turns });
+  const nearest = Math.round(turns);
+  const whole = Math.abs(turns - nearest) < TURN_SLACK ? nearest : Math.floor(turns);
+  const count = whole < nearest || turns - whole > TURN_SLACK ? whole + 1 : whole;
+  if (positions.length !== count) {
+    throw new RangeError(`${turns} turns need ${count} positions, got ${positions.length}`);
+  }
+  const prefix = prefixes(positions, whole, radius, wireRadius);
+  const node = (i: number) => (i < whole ? i + 0.5 : (whole + turns) / 2);
+  const place = (u: number) => {
+    if (count === 1) return positions[0]!;
+    const i = Math.min(Math.max(Math.floor(u - 0.5), 0), count - 2);
+    const before = positions[i]!;
+    return before + ((positions[i + 1]! - before) * (u - node(i))) / (node(i + 1) - node(i));
+  };
+  return {
+    at(turn) {
+      if (!(turn >= 0 && turn <= turns + TURN_SLACK)) throw new RangeError(`turn ${turn} is not in [0, ${turns}]`);
+      const complete = Math.min(Math.floor(turn + TURN_SLACK), whole);
+      const part = turn - complete;
+      if (part <= TURN_SLACK) return prefix[complete]!;
+      const arc = arcAfter(positions, complete, place(complete + part / 2), part, radius, wireRadius);
+      return prefix[complete]! + arc;
+    },
+  };
+}
+
+/** Turns nearer than this are the same: below it the arc has no length to speak of. */
+const TURN_SLACK = 1e-9;
+
+/** What an arc of `fraction` of a turn at `place` adds to the first `count` rings. */
+function arcAfter(
+  positions: ArrayLike<number>,
+  count: number,
+  place: number,
+  fraction: number,
+  radius: number,
+  wireRadius: number,
+): number {
+  let mutual = 0;
+  for (let i = 0; i < count; i++) mutual += ringMutual(radius, place - positions[i]!);
+  return 2 * fraction * mutual + ringSelf(radius, wireRadius) * arcOwnShare(fraction, radius, wireRadius);
+}
+
+/** Inductance of the first 0, 1, ... `count` rings, all whole. */
+function prefixes(positions: ArrayLike<number>, count: number, radius: number, wireRadius: number): Float64Array {
+  const own = ringSelf(radius, wireRadius);
+  const sums = new Float64Array(count + 1);
+  const pitch = evenPitch(positions, count);
+  let mutual = 0;
+  for (let k = 0; k < count; k++) {
+    if (pitch === undefined) {
+      mutual = 0;
+      for (let i = 0; i < k; i++) mutual += ringMutual(radius, positions[k]! - positions[i]!);
+    } else if (k > 0) {
+      mutual += ringMutual(radius, k * pitch);
+    }
+    sums[k + 1] = sums[k]! + own + 2 * mutual;
+  }
+  return sums;
+}
+
+/** The pitch of evenly spaced rings; undefined when a ring is off by more than a thousandth of a millionth of it. */
+function evenPitch(positions: ArrayLike<number>, count: number): number | undefined {
+  if (count < 3) return undefined;
+  const first = positions[0]!;
+  const pitch = (positions[count - 1]! - first) / (count - 1);
+  for (let i = 1; i < count - 1; i++) {
+    if (!(Math.abs(positions[i]! - first - i * pitch) <= 1e-9 * Math.abs(pitch))) return undefined;
+  }
+  return pitch;
+}
