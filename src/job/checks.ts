@@ -1,0 +1,318 @@
+/** What must hold between keys of a job. Each check names both values. */
+import { frequencyText, inductanceText, lengthText } from '../quantity/format.ts';
+import { findMaterial } from '../stock/materials.ts';
+import type { Values } from './field.ts';
+import { MOST_TAPS, type ReadJob } from './schema.ts';
+import type { Path } from './tree.ts';
+
+export interface Finding {
+  readonly code: string;
+  readonly path: Path;
+  readonly got: string;
+  readonly expected: string;
+  readonly todo: string;
+}
+
+/** Sections that could be read; what is missing is not checked here. */
+export type Readable = Partial<ReadJob>;
+
+export function crossCheck(job: Readable): readonly Finding[] {
+  return [...checkWant(job), ...checkFormer(job), ...checkWinding(job), ...checkPrinter(job)];
+}
+
+type Want = ReadJob['want'];
+
+function checkWant({ want, set, ...rest }: Readable): Finding[] {
+  if (want === undefined) return [];
+  if (want.band !== undefined) return checkBand(want, 'set' in rest || set !== undefined);
+  const found: Finding[] = [];
+  if (want.overlap !== undefined) {
+    found.push(
+      finding(
+        'key-without-band',
+        ['want', 'overlap'],
+        'an overlap without a band',
+        'overlap with want.band only',
+        'remove overlap, or ask for a band',
+      ),
+    );
+  }
+  if (Array.isArray(want.spacing)) return [...found, ...checkSpacingList(want, want.spacing)];
+  if (want.inductance === undefined) {
+    found.push(
+      finding(
+        'no-wish',
+        ['want'],
+        'neither an inductance nor a band',
+        'want.inductance or want.band',
+        'add inductance: 20 uH to 240 uH, or band: 530 kHz to 1700 kHz',
+      ),
+    );
+    return found;
+  }
+  if ('list' in want.inductance)
+    return [...found, ...checkList(want.inductance.list, ['want', 'inductance'], want.taps)];
+  const { low, high } = want.inductance;
+  const span = `${inductanceText(low)} to ${inductanceText(high)}`;
+  if (want.taps === undefined) {
+    found.push(
+      finding(
+        'missing-key',
+        ['want', 'taps'],
+        `the range ${span} without a number of taps`,
+        `a whole number from 2 to ${MOST_TAPS}`,
+        'add taps: 12',
+      ),
+    );
+  } else if (want.taps < 2) {
+    found.push(
+      finding(
+        'too-few-taps',
+        ['want', 'taps'],
+        `${want.taps} tap for the range ${span}`,
+        'two taps or more: one for each end',
+        'raise taps, or write one inductance instead of a range',
+      ),
+    );
+  }
+  return found;
+}
+
+/** `set` may be absent because it was not written, or because it could not be read. */
+function checkBand(want: Want, hasSet: boolean): Finding[] {
+  const found: Finding[] = [];
+  const { low, high } = want.band ?? { low: 0, high: 0 };
+  const band = `the band ${frequencyText(low)} to ${frequencyText(high)}`;
+  if (want.inductance !== undefined) {
+    found.push(
+      finding(
+        'two-wishes',
+        ['want', 'inductance'],
+        `an inductance besides ${band}`,
+        'one of the two',
+        'remove want.inductance or want.band',
+      ),
+    );
+  }
+  if (want.spacing !== undefined) {
+    found.push(
+      finding(
+        'key-with-band',
+        ['want', 'spacing'],
+        `a spacing besides ${band}`,
+        'a band, whose positions are spread by their overlap',
+        'remove spacing',
+      ),
+    );
+  }
+  if (!hasSet) {
+    found.push(
+      finding(
+        'missing-key',
+        ['set'],
+        `${band} without the set that tunes it`,
+        'the key set with a capacitor',
+        'add set: { capacitor: 15 pF to 380 pF }',
+      ),
+    );
+  }
+  if (want.overlap !== undefined && want.overlap > 0.5) {
+    found.push(
+      finding(
+        'overlap',
+        ['want', 'overlap'],
+        `an overlap of ${Number((want.overlap * 100).toPrecision(6))} %`,
+        'at most 50 %',
+        'write 5 % or thereabouts',
+      ),
+    );
+  }
+  return found;
+}
+
+function checkSpacingList(want: Want, list: readonly number[]): Finding[] {
+  const path: Path = ['want', 'spacing'];
+  const found = checkList(list, path, want.taps);
+  if (want.inductance === undefined) return found;
+  if ('list' in want.inductance) {
+    found.push(
+      finding(
+        'two-wishes',
+        path,
+        'a list of inductances in want.inductance and another here',
+        'one of the two',
+        'remove one',
+      ),
+    );
+    return found;
+  }
+  const { low, high } = want.inductance;
+  const [first, last] = [list[0], list.at(-1)];
+  if (first !== undefined && first !== low) found.push(endDiffers(path, 'first', first, 'lower', low));
+  if (last !== undefined && last !== high) found.push(endDiffers(path, 'last', last, 'upper', high));
+  return found;
+}
+
+function endDiffers(path: Path, which: string, listed: number, end: string, wanted: number): Finding {
+  return finding(
+    'list-and-range',
+    path,
+    `${inductanceText(listed)} as the ${which} of the list`,
+    `the ${end} end of want.inductance, ${inductanceText(wanted)}`,
+    'make the two equal, or leave want.inductance out',
+  );
+}
+
+function checkList(list: readonly number[], path: Path, taps: number | undefined): Finding[] {
+  const found: Finding[] = [];
+  list.forEach((value, index) => {
+    const before = list[index - 1];
+    if (before === undefined || before < value) return;
+    const relation = before === value ? 'equal to' : 'below';
+    found.push(
+      finding(
+        'not-ascending',
+        [...path, index],
+        `${inductanceText(value)}, ${relation} ${inductanceText(before)} before it`,
+        'the lowest inductance first, each above the one before',
+        'sort the list and remove repeats',
+      ),
+    );
+  });
+  if (list.length > MOST_TAPS) {
+    found.push(
+      finding('too-many-taps', path, `${list.length} inductances`, `at most ${MOST_TAPS}`, 'shorten the list'),
+    );
+  }
+  if (taps !== undefined && taps !== list.length) {
+    found.push(
+      finding(
+        'tap-count',
+        ['want', 'taps'],
+        `${taps} taps for ${list.length} inductances`,
+        'one tap for each inductance',
+        `write taps: ${list.length}, or leave it out`,
+      ),
+    );
+  }
+  return found;
+}
+
+const ends = (values: Values): readonly number[] => ('list' in values ? values.list : [values.low, values.high]);
+
+function checkFormer({ former, printer }: Readable): Finding[] {
+  if (former === undefined) return [];
+  const found: Finding[] = [];
+  const diameters = ends(former['outside-diameter']);
+  const [least, most] = [Math.min(...diameters), Math.max(...diameters)];
+  if (former.wall !== undefined && former.wall >= least / 2) {
+    found.push(
+      finding(
+        'wall',
+        ['former', 'wall'],
+        `a wall of ${lengthText(former.wall)} at a diameter of ${lengthText(least)}`,
+        `less than half the diameter, ${lengthText(least / 2)}`,
+        'make the wall thinner or the former wider',
+      ),
+    );
+  }
+  const material = findMaterial(former.material);
+  const use = former.kind === 'printed' ? 'print' : 'tube';
+  if (material.ok && material.material.use !== use) {
+    found.push(
+      finding(
+        'material',
+        ['former', 'material'],
+        `${former.material} for a former of kind ${former.kind}`,
+        `a material for ${use === 'print' ? 'printing' : 'tubes'}`,
+        'see: coilwright stock',
+      ),
+    );
+  }
+  if (former.kind === 'tube') {
+    if (former.mounting === 'ears') found.push(onTube('mounting', 'ears'));
+    if (former.flanges) found.push(onTube('flanges', 'flanges'));
+    return found;
+  }
+  if (printer === undefined) return found;
+  if (former.longest > printer.height) {
+    found.push(
+      finding(
+        'taller-than-printer',
+        ['former', 'longest'],
+        `a printed former up to ${lengthText(former.longest)} long on a printer ${lengthText(printer.height)} high`,
+        'no more than printer.height',
+        'shorten former.longest, or state printer.height',
+      ),
+    );
+  }
+  const bed = Math.min(printer.bed.x, printer.bed.y);
+  if (most >= bed) {
+    found.push(
+      finding(
+        'wider-than-bed',
+        ['former', 'outside-diameter'],
+        `a printed former ${lengthText(most)} wide on a bed of ${lengthText(printer.bed.x)} x ${lengthText(printer.bed.y)}`,
+        'less than the shorter side of printer.bed',
+        'choose a smaller diameter, or state printer.bed',
+      ),
+    );
+  }
+  return found;
+}
+
+function onTube(key: string, what: string): Finding {
+  return finding(
+    'on-a-tube',
+    ['former', key],
+    `${what} on a tube that is bought`,
+    'a plain tube',
+    `remove former.${key}, or take kind: printed`,
+  );
+}
+
+function checkWinding({ winding }: Readable): Finding[] {
+  if (winding?.spacers === undefined || winding.pitch !== 'close') return [];
+  return [
+    finding(
+      'spacers',
+      ['winding', 'spacers'],
+      'spacers for a winding with pitch: close',
+      'spacers for a spaced winding only',
+      'remove spacers, or take pitch: spaced',
+    ),
+  ];
+}
+
+function checkPrinter({ printer }: Readable): Finding[] {
+  if (printer === undefined) return [];
+  const found: Finding[] = [];
+  const { layer, line, nozzle } = printer;
+  if (layer > nozzle) {
+    found.push(
+      finding(
+        'layer',
+        ['printer', 'layer'],
+        `a layer of ${lengthText(layer)} from a nozzle of ${lengthText(nozzle)}`,
+        'a layer no higher than the nozzle is wide',
+        'lower printer.layer, or state printer.nozzle',
+      ),
+    );
+  }
+  if (line < nozzle / 2 || line > nozzle * 2) {
+    found.push(
+      finding(
+        'line',
+        ['printer', 'line'],
+        `a line of ${lengthText(line)} from a nozzle of ${lengthText(nozzle)}`,
+        'between half and twice the nozzle',
+        'mend printer.line, or state printer.nozzle',
+      ),
+    );
+  }
+  return found;
+}
+
+function finding(code: string, path: Path, got: string, expected: string, todo: string): Finding {
+  return { code, path, got, expected, todo };
+}

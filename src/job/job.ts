@@ -1,0 +1,96 @@
+/** A job as the planner takes it: plain data, complete, checked, in the units that the names end in. */
+import type { Wire } from '../stock/wire.ts';
+import type { PREFERENCES, SPACINGS, SWITCHES, TAP_LAYOUTS, TAP_METHODS } from './schema.ts';
+
+export type Spacing = (typeof SPACINGS)[number];
+export type SwitchRest = (typeof SWITCHES)[number];
+export type TapMethod = (typeof TAP_METHODS)[number];
+export type TapLayout = (typeof TAP_LAYOUTS)[number];
+export type Preference = (typeof PREFERENCES)[number];
+
+export type Want =
+  /** `taps` inductances from low to high, 2 to 60 of them. */
+  | {
+      readonly kind: 'range';
+      readonly lowUh: number;
+      readonly highUh: number;
+      readonly taps: number;
+      readonly spacing: Spacing;
+    }
+  /** One inductance a tap, ascending. */
+  | { readonly kind: 'list'; readonly inductancesUh: readonly number[] }
+  /** `overlap` is a fraction of frequency; `taps` null: the fewest that give it. Comes with a set. */
+  | {
+      readonly kind: 'band';
+      readonly lowKhz: number;
+      readonly highKhz: number;
+      readonly overlap: number;
+      readonly taps: number | null;
+    };
+
+export interface ReceivingSet {
+  readonly capacitorLowPf: number;
+  readonly capacitorHighPf: number;
+  readonly strayPf: number;
+  readonly aerialPf: number;
+  readonly switch: SwitchRest;
+}
+
+/** A range to choose from freely, or the diameters there are, ascending. */
+export type Diameters = { readonly lowMm: number; readonly highMm: number } | { readonly listMm: readonly number[] };
+
+export interface JobFormer {
+  readonly kind: 'printed' | 'tube';
+  /** Outside. */
+  readonly diametersMm: Diameters;
+  /** Whole former at most, ends included. */
+  readonly longestMm: number;
+  /** Null: to be derived from the line width (printed only). */
+  readonly wallMm: number | null;
+  readonly material: string;
+  readonly mounting: 'ears' | 'none';
+  readonly flanges: boolean;
+}
+
+export interface JobWinding {
+  readonly hand: 'right' | 'left';
+  readonly earthed: 'start' | 'finish';
+  /** A number is a pitch in mm. */
+  readonly pitch: 'any' | 'close' | 'spaced' | number;
+  /** Thicknesses in mm, ascending; null: all in stock. */
+  readonly spacers: readonly number[] | null;
+  readonly tapMethod: TapMethod;
+  readonly tapLayout: TapLayout;
+  readonly finishTrim: boolean;
+}
+
+export interface Printer {
+  readonly bedXMm: number;
+  readonly bedYMm: number;
+  readonly heightMm: number;
+  readonly nozzleMm: number;
+  readonly lineMm: number;
+  readonly layerMm: number;
+  readonly clearanceMm: number;
+  readonly holeCompensationMm: number;
+}
+
+export interface Job {
+  readonly name: string;
+  /** YYYY-MM-DD. */
+  readonly date: string | null;
+  readonly paper: 'A4' | 'Letter';
+  readonly want: Want;
+  readonly set: ReceivingSet | null;
+  readonly former: JobFormer;
+  readonly wires: readonly Wire[] | 'stock';
+  readonly winding: JobWinding;
+  readonly prefer: Preference;
+  /** Frequency for the loss estimate when there is no set; null when not given. */
+  readonly atKhz: number | null;
+  readonly printer: Printer;
+  /** What the person wrote, as written, by dotted key. */
+  readonly given: Readonly<Record<string, unknown>>;
+  /** Every default taken, by dotted key. */
+  readonly assumed: Readonly<Record<string, unknown>>;
+}

@@ -1,0 +1,153 @@
+/**
+ * A job file to a {@link Job}: text -> tree with lines -> defaults -> schema -> checks across keys -> plain data.
+ * Every fault of the file is reported in one go, in the order of its lines.
+ */
+import { Fault, type FaultParts } from '../fault.ts';
+import type { FoundWire } from '../stock/find.ts';
+import type { Wire } from '../stock/wire.ts';
+import { crossCheck, type Readable } from './checks.ts';
+import { type Assumed, complete, isData } from './defaults.ts';
+import { faultsOf, keyText } from './faults.ts';
+import type { Values } from './field.ts';
+import type { Diameters, Job, Want } from './job.ts';
+import { jobSchema, type ReadJob } from './schema.ts';
+import { readTree, type Tree } from './tree.ts';
+
+/** Reads a job, YAML or JSON. Throws a {@link Fault} with exit code 3. `file` is only for messages. */
+export function readJob(text: string, file: string): Job {
+  const tree = readTree(text, file);
+  const { data, assumed } = complete(tree.data);
+  const parsed = jobSchema.safeParse(data);
+  const findings = crossCheck(parsed.success ? parsed.data : readable(data));
+  const faults: FaultParts[] = findings.map(({ code, path, got, expected, todo }) => ({
+    code,
+    place: { file, line: tree.lineOf(path), key: keyText(path) },
+    got,
+    expected,
+    todo,
+  }));
+  for (const issue of parsed.error?.issues ?? []) {
+    // A default made from a key that is wrong is wrong too; the key itself is reported.
+    if (!Object.hasOwn(assumed, issue.path.join('.'))) faults.push(...faultsOf(issue, tree, file));
+  }
+  if (faults.length > 0 || !parsed.success) {
+    throw new Fault(
+      3,
+      faults.sort((a, b) => (a.place?.line ?? 0) - (b.place?.line ?? 0)),
+    );
+  }
+  return toJob(parsed.data, tree, assumed);
+}
+
+/** The sections that can be read on their own, when the whole cannot. */
+function readable(data: unknown): Readable {
+  if (!isData(data)) return {};
+  const found: Record<string, unknown> = {};
+  for (const [key, schema] of Object.entries(jobSchema.shape)) {
+    const parsed = schema.safeParse(data[key]);
+    // A set that is there and wrong counts as there.
+    if (parsed.success) found[key] = parsed.data;
+    else if (key in data) found[key] = undefined;
+  }
+  return found as Readable;
+}
+
+function toJob(read: ReadJob, tree: Tree, assumed: Assumed): Job {
+  const { former, winding, printer } = read;
+  return {
+    name: read.job,
+    date: read.date ?? null,
+    paper: read.paper,
+    want: toWant(read.want),
+    set:
+      read.set === undefined
+        ? null
+        : {
+            capacitorLowPf: read.set.capacitor.low,
+            capacitorHighPf: read.set.capacitor.high,
+            strayPf: read.set.stray,
+            aerialPf: read.set.aerial,
+            switch: read.set.switch,
+          },
+    former: {
+      kind: former.kind,
+      diametersMm: toDiameters(former['outside-diameter']),
+      longestMm: former.longest,
+      wallMm: former.wall ?? null,
+      material: former.material,
+      mounting: former.mounting,
+      flanges: former.flanges,
+    },
+    wires: read.wire === undefined ? 'stock' : toWires(read.wire),
+    winding: {
+      hand: winding.hand,
+      earthed: winding.earthed,
+      pitch: winding.pitch,
+      spacers: winding.spacers === undefined ? null : ascending(winding.spacers),
+      tapMethod: winding['tap-method'],
+      tapLayout: winding['tap-layout'],
+      finishTrim: winding['finish-trim'],
+    },
+    prefer: read.prefer,
+    atKhz: read.at ?? null,
+    printer: {
+      bedXMm: printer.bed.x,
+      bedYMm: printer.bed.y,
+      heightMm: printer.height,
+      nozzleMm: printer.nozzle,
+      lineMm: printer.line,
+      layerMm: printer.layer,
+      clearanceMm: printer.clearance,
+      holeCompensationMm: printer['hole-compensation'],
+    },
+    given: given(tree.data),
+    assumed: { ...assumed, ...assumedCoverings(read.wire ?? []) },
+  };
+}
+
+function toWant(want: ReadJob['want']): Want {
+  if (want.band !== undefined) {
+    return {
+      kind: 'band',
+      lowKhz: want.band.low,
+      highKhz: want.band.high,
+      overlap: want.overlap ?? 0,
+      taps: want.taps ?? null,
+    };
+  }
+  if (typeof want.spacing === 'object') return { kind: 'list', inductancesUh: want.spacing };
+  if (want.inductance === undefined || 'list' in want.inductance) {
+    return { kind: 'list', inductancesUh: want.inductance?.list ?? [] };
+  }
+  const { low, high } = want.inductance;
+  return { kind: 'range', lowUh: low, highUh: high, taps: want.taps ?? 2, spacing: want.spacing ?? 'even ratio' };
+}
+
+function toDiameters(values: Values): Diameters {
+  return 'list' in values ? { listMm: ascending(values.list) } : { lowMm: values.low, highMm: values.high };
+}
+
+const ascending = (list: readonly number[]): readonly number[] => [...new Set(list)].sort((a, b) => a - b);
+
+function toWires(found: readonly FoundWire[]): readonly Wire[] {
+  return [...new Map(found.map(({ wire }) => [wire.name, wire])).values()];
+}
+
+function assumedCoverings(found: readonly FoundWire[]): Record<string, string> {
+  const assumed: Record<string, string> = {};
+  found.forEach(({ wire, coveringAssumed }, index) => {
+    if (coveringAssumed) assumed[found.length === 1 ? 'wire' : `wire[${index + 1}]`] = wire.name;
+  });
+  return assumed;
+}
+
+/** What was written, leaf by leaf; sections that hold nothing and the key for editors are left out. */
+function given(data: unknown): Record<string, unknown> {
+  const found: Record<string, unknown> = {};
+  for (const [key, value] of Object.entries(isData(data) ? data : {})) {
+    if (key === '$schema' || value === null) continue;
+    if (!isData(value)) found[key] = value;
+    else for (const [inner, leaf] of Object.entries(value)) found[`${key}.${inner}`] = leaf;
+  }
+  return found;
+}

@@ -1,0 +1,215 @@
+/**
+ * The job file, defined once: keys, meaning, units, defaults. The JSON Schema that editors use and the reader of jobs
+ * are both made from it. Whatever depends on two keys at once is in `checks.ts`; defaults that depend on another key
+ * are in `defaults.ts`.
+ */
+import { z } from 'zod';
+import type { Parsed } from '../quantity/parse.ts';
+import { type FoundWire, findWire } from '../stock/find.ts';
+import { findMaterial } from '../stock/materials.ts';
+import { DEFAULTS } from './defaults.ts';
+import {
+  choice,
+  choiceOrLength,
+  choiceOrList,
+  count,
+  field,
+  flag,
+  listOf,
+  quantities,
+  quantity,
+  range,
+  shown,
+  size,
+  values,
+} from './field.ts';
+import { readDate, readName } from './name.ts';
+
+export const SPACINGS = ['even ratio', 'even turns', 'even frequency'] as const;
+export const SWITCHES = ['open', 'shorted', 'shorted in sections', 'disconnected'] as const;
+export const TAP_METHODS = ['auto', 'twisted loop', 'lifted turn', 'cut pair', 'lug', 'drawn in'] as const;
+export const TAP_LAYOUTS = ['auto', 'in line', 'staggered'] as const;
+export const PREFERENCES = ['least loss', 'compact', 'least wire', 'closest taps'] as const;
+/** Most switch positions of one coil. */
+export const MOST_TAPS = 60;
+
+const wantSchema = z
+  .strictObject({
+    inductance: values('inductance', {
+      text: 'A range "20 uH to 240 uH", shared out among the taps by spacing; or a list, one inductance a tap, lowest first.',
+    }).optional(),
+    band: range('frequency', {
+      text: 'The band the set must tune, all positions together, "530 kHz to 1700 kHz". Needs set.',
+    }).optional(),
+    overlap: quantity(
+      'ratio',
+      {
+        text: 'How far, in frequency, one position must reach into the next: "5 %". For a band. 5 % when taps are left out, else 0 %.',
+      },
+      { zero: true },
+    ).optional(),
+    taps: count(1, MOST_TAPS, {
+      text: 'Switch positions, the whole coil included. For a band it may be left out: then the fewest that give the overlap.',
+    }).optional(),
+    spacing: choiceOrList(SPACINGS, 'inductance', {
+      text: 'How the taps share out the range: by even ratio, turns or frequency; or a list of inductances, lowest first.',
+    }).optional(),
+  })
+  .describe('What the coil must do: an inductance range, a list of inductances, or a band.');
+
+const setSchema = z
+  .strictObject({
+    capacitor: range('capacitance', { text: 'Tuning capacitor, least to greatest: "15 pF to 380 pF".' }),
+    stray: quantity(
+      'capacitance',
+      { text: 'Wiring, valve and switch, always across the coil.', default: DEFAULTS['set.stray'] },
+      { zero: true },
+    ),
+    aerial: quantity(
+      'capacitance',
+      { text: 'What the aerial adds across the coil.', default: DEFAULTS['set.aerial'] },
+      { zero: true },
+    ),
+    switch: choice(SWITCHES, {
+      text: 'What the range switch does with the turns that are not in use.',
+      default: DEFAULTS['set.switch'],
+    }),
+  })
+  .describe('The receiver that the coil goes into; needed for a band.');
+
+const readMaterial = (raw: unknown): Parsed<string> => {
+  const found = findMaterial(typeof raw === 'string' ? raw : '');
+  if (found.ok) return { ok: true, value: found.material.name };
+  return typeof raw === 'string' ? found : { ...found, got: shown(raw) };
+};
+
+const formerSchema = z
+  .strictObject({
+    kind: choice(['printed', 'tube'], {
+      text: 'Printed for this coil, or a tube that is bought or found.',
+      default: DEFAULTS['former.kind'],
+    }),
+    'outside-diameter': values('length', {
+      text: 'One diameter, a range "60 mm to 90 mm", or a list of those on hand. Needed for a tube; 50 mm to 90 mm when printed.',
+    }),
+    longest: quantity('length', {
+      text: 'The whole former at most, ends included. The height of the printer when printed, else 200 mm.',
+    }),
+    wall: quantity('length', {
+      text: 'Wall thickness. Derived from the line width when printed and left out; 1.5 mm for a tube.',
+    }).optional(),
+    material: field(
+      readMaterial,
+      { text: 'What the former is made of. PLA when printed, card for a tube.' },
+      { type: 'string' },
+    ),
+    mounting: choice(['ears', 'none'], {
+      text: 'Ears with a hole for a screw, or none. Ears when printed, none on a tube.',
+    }),
+    flanges: flag({ text: 'Rims at both ends. True when printed, false on a tube.' }),
+  })
+  .describe('What the wire is wound on.');
+
+const readWire = (raw: unknown): Parsed<FoundWire> => {
+  if (typeof raw !== 'string') {
+    return {
+      ok: false,
+      got: shown(raw),
+      expected: 'a wire: a size and a covering, such as 24 AWG enamel',
+      todo: 'write AWG, SWG or mm behind the number, and the covering; "coilwright stock" lists them',
+    };
+  }
+  const found = findWire(raw.slice(0, 200));
+  return found.ok ? { ok: true, value: found } : found;
+};
+
+const windingSchema = z
+  .strictObject({
+    hand: choice(['right', 'left'], {
+      text: 'Hand of the helix; a right-hand one climbs counterclockwise seen from above.',
+      default: DEFAULTS['winding.hand'],
+    }),
+    earthed: choice(['start', 'finish'], {
+      text: 'Which end is earthed; taps are counted from the start.',
+      default: DEFAULTS['winding.earthed'],
+    }),
+    pitch: choiceOrLength(['any', 'close', 'spaced'], {
+      text: 'Close wound, spaced, whichever is better, or a pitch centre to centre such as 0.6 mm.',
+      default: DEFAULTS['winding.pitch'],
+    }),
+    spacers: quantities('length', {
+      text: 'Thicknesses of what can be wound along as a spacer; all in stock when left out.',
+    }).optional(),
+    'tap-method': choice(TAP_METHODS, {
+      text: 'How taps are made; auto goes by covering and pitch.',
+      default: DEFAULTS['winding.tap-method'],
+    }),
+    'tap-layout': choice(TAP_LAYOUTS, {
+      text: 'Taps in one line are whole turns; staggered ones may be fractions of a turn.',
+      default: DEFAULTS['winding.tap-layout'],
+    }),
+    'finish-trim': flag({
+      text: 'Spare finish holes for a turn more or less.',
+      default: DEFAULTS['winding.finish-trim'],
+    }),
+  })
+  .describe('How it is wound.');
+
+const printerSchema = z
+  .strictObject({
+    bed: size({ text: 'Bed, width x depth.', default: DEFAULTS['printer.bed'] }),
+    height: quantity('length', { text: 'Tallest part.', default: DEFAULTS['printer.height'] }),
+    nozzle: quantity('length', { text: 'Nozzle bore.', default: DEFAULTS['printer.nozzle'] }),
+    line: quantity('length', { text: 'Width of a printed line. 1.125 of the nozzle when left out.' }),
+    layer: quantity('length', { text: 'Layer height. Half of the nozzle when left out.' }),
+    clearance: quantity(
+      'length',
+      { text: 'Play on diameter between parts that fit together.', default: DEFAULTS['printer.clearance'] },
+      { zero: true },
+    ),
+    'hole-compensation': quantity(
+      'length',
+      {
+        text: 'Added to the diameter of every hole, because holes print small.',
+        default: DEFAULTS['printer.hole-compensation'],
+      },
+      { zero: true, negative: true },
+    ),
+  })
+  .describe('The printer, for a printed former.');
+
+export const jobSchema = z
+  .strictObject({
+    $schema: z.unknown().optional().meta({ description: 'For editors; not read.', type: 'string' }),
+    job: field(
+      readName,
+      { text: 'Name of the job; the output folder is named after it.' },
+      { type: 'string', minLength: 1, maxLength: 80 },
+    ),
+    date: field(
+      readDate,
+      { text: 'Printed on the sheets, as YYYY-MM-DD; none when left out.' },
+      { type: 'string', format: 'date' },
+    ).optional(),
+    paper: choice(['A4', 'Letter'], { text: 'Paper of sheets and templates.', default: DEFAULTS.paper }),
+    want: wantSchema,
+    set: setSchema.optional(),
+    former: formerSchema,
+    wire: listOf(
+      readWire,
+      'a wire',
+      { text: 'The wires to choose from, "24 AWG enamel"; all in stock when left out.' },
+      { type: 'string' },
+    ).optional(),
+    winding: windingSchema,
+    prefer: choice(PREFERENCES, { text: 'What the best coil is.', default: DEFAULTS.prefer }),
+    at: quantity('frequency', { text: 'Frequency at which losses are compared when there is no set.' }).optional(),
+    printer: printerSchema,
+  })
+  .meta({
+    title: 'Coil job',
+    description: 'What a coil must do and what it may be made of. Every quantity carries its unit.',
+  });
+
+/** A job as read: complete, in the units of the code, not yet checked across keys. */
+export type ReadJob = z.output<typeof jobSchema>;

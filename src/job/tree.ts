@@ -1,0 +1,203 @@
+/**
+ * Text of a job to plain data, with the line of every key. YAML 1.2 or JSON. What could hurt is refused before it is
+ * parsed: great size, deep nesting, aliases, tags of other programs.
+ */
+import { isAlias, isMap, isPair, isSeq, LineCounter, type Node, parseAllDocuments, visit, type YAMLError } from 'yaml';
+import { Fault, type FaultParts } from '../fault.ts';
+import { quote } from '../quantity/parse.ts';
+
+export type Path = readonly (string | number)[];
+
+export interface Tree {
+  /** Maps, lists, texts, numbers, booleans and null. */
+  readonly data: unknown;
+  /** Line of the key or list entry at the path; of the nearest enclosing one when the path itself is not there. */
+  readonly lineOf: (path: Path) => number | undefined;
+}
+
+/** 1 MB: a job is a page. */
+export const LARGEST_BYTES = 1_000_000;
+/** A job nests three deep. */
+const DEEPEST = 32;
+
+/** Bytes to text: UTF-8, with or without its mark. Throws a {@link Fault} with exit code 3. */
+export function decode(bytes: Uint8Array, file: string): string {
+  if (bytes.length > LARGEST_BYTES) throw tooLarge(bytes.length, file);
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
+  } catch {
+    throw new Fault(3, {
+      code: 'not-utf-8',
+      place: { file },
+      got: 'bytes that are not UTF-8 text',
+      expected: 'a job in YAML or JSON, in UTF-8',
+      todo: 'save the file as UTF-8 text; PDF, ZIP and word processor files cannot be read',
+    });
+  }
+}
+
+/** Text to data. Throws a {@link Fault} with exit code 3 that carries every fault found. */
+export function readTree(text: string, file: string): Tree {
+  const bytes = Buffer.byteLength(text);
+  if (bytes > LARGEST_BYTES) throw tooLarge(bytes, file);
+  const source = text.replace(/^\ufeff/, '');
+  const deep = firstTooDeep(source);
+  if (deep !== null) {
+    throw new Fault(3, {
+      code: 'too-deep',
+      place: { file, line: deep },
+      got: `more than ${DEEPEST} levels, one inside the other`,
+      expected: 'a job, which needs three',
+      todo: 'look for brackets or indents that are never closed',
+    });
+  }
+  const lines = new LineCounter();
+  const documents = parseAllDocuments(source, {
+    lineCounter: lines,
+    schema: 'core',
+    stringKeys: true,
+    uniqueKeys: true,
+    prettyErrors: false,
+    logLevel: 'silent',
+  });
+  const document = Array.isArray(documents) ? documents[0] : undefined;
+  if (document?.contents == null || document.contents.range == null) {
+    if (document !== undefined && document.errors.length > 0) throw broken(document.errors, lines, file);
+    throw empty(file);
+  }
+  const faults = documents.flatMap((one) => [...one.errors, ...one.warnings]);
+  if (faults.length > 0) throw broken(faults, lines, file);
+  if (documents.length > 1) {
+    const second = documents[1]?.contents?.range?.[0];
+    throw new Fault(3, {
+      code: 'several-documents',
+      place: { file, line: second === undefined ? undefined : lines.linePos(second).line },
+      got: `${documents.length} documents in one file`,
+      expected: 'one job a file',
+      todo: 'put each job into a file of its own and remove the line ---',
+    });
+  }
+  const contents = document.contents as Node;
+  refuseAliases(contents, lines, file);
+  const data: unknown = document.toJS({ maxAliasCount: 0 });
+  if (data === null || data === '') throw empty(file);
+  return { data, lineOf: (path) => lineAt(contents, path, lines) };
+}
+
+function tooLarge(bytes: number, file: string): Fault {
+  return new Fault(3, {
+    code: 'too-large',
+    place: { file },
+    got: `${bytes} bytes`,
+    expected: `a job of at most ${LARGEST_BYTES} bytes`,
+    todo: 'check that this is the job file',
+  });
+}
+
+function empty(file: string): Fault {
+  return new Fault(3, {
+    code: 'empty',
+    place: { file },
+    got: 'an empty job',
+    expected: 'at least the keys job and want',
+    todo: 'begin with: coilwright start',
+  });
+}
+
+function broken(errors: readonly YAMLError[], lines: LineCounter, file: string): Fault {
+  return new Fault(
+    3,
+    errors.map((error): FaultParts => {
+      const place = { file, line: lines.linePos(error.pos[0]).line };
+      const got = (error.message.split('\n')[0] ?? '').replace(/[\p{Cc}\p{Cf}]/gu, '?').slice(0, 200);
+      if (error.code === 'DUPLICATE_KEY') {
+        return {
+          code: 'key-twice',
+          place,
+          got: 'a key that was given before',
+          expected: 'every key once',
+          todo: 'remove one of the two',
+        };
+      }
+      if (error.code === 'TAG_RESOLVE_FAILED') {
+        return {
+          code: 'tag',
+          place,
+          got,
+          expected: 'plain values',
+          todo: 'remove the tag, or put the text in quotes when it starts with !',
+        };
+      }
+      return {
+        code: 'not-yaml',
+        place,
+        got,
+        expected: 'YAML or JSON',
+        todo: 'check indents, colons, quotes and brackets on this line and the one before',
+      };
+    }),
+  );
+}
+
+/** Line at which the nesting passes the limit. Counts generously: brackets in quotes and comments count too. */
+function firstTooDeep(source: string): number | null {
+  let open = 0;
+  let line = 0;
+  for (const row of source.split('\n')) {
+    line += 1;
+    // A level of a block needs a column of indent, and in lists a mark of its own.
+    const indent = /^[ \t]*(?:[-?:][ \t]+)*/.exec(row)?.[0] ?? '';
+    const marks = indent.replace(/[ \t]/g, '').length;
+    if (marks > DEEPEST || indent.length > DEEPEST * 6) return line;
+    for (const character of row) {
+      if (character === '[' || character === '{') open += 1;
+      else if ((character === ']' || character === '}') && open > 0) open -= 1;
+      if (open > DEEPEST) return line;
+    }
+  }
+  return null;
+}
+
+function refuseAliases(contents: Node, lines: LineCounter, file: string): void {
+  const faults: FaultParts[] = [];
+  visit(contents, {
+    Node: (_key, node) => {
+      if (!isAlias(node) && !('anchor' in node && node.anchor !== undefined)) return;
+      const start = node.range?.[0];
+      faults.push({
+        code: 'alias',
+        place: { file, line: start === undefined ? undefined : lines.linePos(start).line },
+        got: isAlias(node)
+          ? `a reference ${quote(`*${node.source}`)}`
+          : `an anchor ${quote(`&${String(node.anchor)}`)}`,
+        expected: 'every value written out',
+        todo: 'write the value itself, or put the text in quotes when it starts with * or &',
+      });
+    },
+  });
+  if (faults.length > 0) throw new Fault(3, faults);
+}
+
+function lineAt(contents: Node, path: Path, lines: LineCounter): number | undefined {
+  let node: unknown = contents;
+  let at: number | undefined;
+  for (const step of path) {
+    let found: { readonly range?: unknown } | null = null;
+    if (isMap(node)) {
+      const entry = node.items.find((item) => isPair(item) && keyText(item.key) === String(step));
+      found = (entry?.key ?? null) as { readonly range?: unknown } | null;
+      node = entry?.value;
+    } else if (isSeq(node)) {
+      node = node.items[Number(step)];
+      found = (node ?? null) as { readonly range?: unknown } | null;
+    }
+    if (found === null) break;
+    const start = Array.isArray(found.range) ? Number(found.range[0]) : undefined;
+    if (start !== undefined) at = lines.linePos(start).line;
+  }
+  return at;
+}
+
+function keyText(key: unknown): string {
+  return typeof key === 'object' && key !== null && 'value' in key ? String(key.value) : String(key);
+}
