@@ -13,9 +13,9 @@ import { ringMutual } from './maxwell.ts';
  * for equal arcs it is the single integral of (P - t) cos t/sqrt(4 R^2 sin^2(t/2) + g^2). Over the whole ring it is Maxwell's M
  * at the distance g. Since the integrand is the same at t and 2 pi - t, share(f) = 2 f - 1 + share(1 - f): only half a ring is
  * ever integrated, and t = (g/R) sinh s makes that smooth.
- * Accuracy: 1e-9 against adaptive integration, 8 fractions of 6 wire radii from R/2000 to R/5.
+ * Accuracy: 3e-9 against the integral by 20000 midpoints, 6 fractions up to 0.6 of 6 wire radii from R/2000 to R/5.
  *
- * Example: arcOwnShare(0.5, 0.038, 0.00025) = 0.5
+ * Example: arcOwnShare(0.5, 0.038, 0.00025) = 0.5101
  */
 export function arcOwnShare(fraction: number, radius: number, wireRadius: number): number {
   needPositive({ radius, wireRadius });

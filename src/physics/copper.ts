@@ -13,7 +13,7 @@ export const DENSITY = 8890;
  * Units: m. Domain: length >= 0, diameter > 0, strands >= 1. The take-up of stranding (1.5 % a bunching, 2.5 % a cabling step) is
  * not in it. Source: NBS Circular 31, 100 % IACS.
  *
- * Example: dcResistance(24, 0.0005) = 2.1073
+ * Example: dcResistance(24, 0.0005) = 2.1074
  */
 export function dcResistance(length: number, diameter: number, strands = 1): number {
   needPositive({ diameter, strands });

@@ -4,7 +4,8 @@
  * Domain: 0 < k' <= 1; at k' = 1 both are pi/2; as k' -> 0, K grows like ln(4/k') and E -> 1; outside, RangeError.
  * Fed with k' and never with 1 - k: for short coils and neighbouring turns k is so near 1 that the difference has no digits.
  * Source: Gauss's arithmetic-geometric mean, as in Abramowitz & Stegun 1964, 17.6.
- * Accuracy: 1e-15 relative over 400 values of k' from 1e-7 to 1, against an independent library.
+ * Accuracy: 4e-15 relative over 400 values of k' from 0.1 to 1 against an independent library, and in Legendre's relation
+ * over 300 values down to 1e-5.
  *
  * Example: ellipticKE(0.8).K = 1.75075380
  * Example: ellipticKE(0.8).E = 1.41808339
@@ -36,6 +37,8 @@ export function ellipticKE(kPrime: number): { K: number; E: number } {
  * The innermost loop of every ring sum: returns a bare number and checks nothing.
  */
 export function maxwellFactor(kSquared: number, kPrime: number): number {
+  // The same circle twice: the mean would creep towards 0 for ever.
+  if (kPrime === 0) return Number.POSITIVE_INFINITY;
   let a = (1 + kPrime) / 2;
   let b = Math.sqrt(kPrime);
   let c = kSquared / (2 * (1 + kPrime));

@@ -7,7 +7,7 @@ import { needPositive } from './domain.ts';
  * Units: m; D to the wire's centre. Domain: diameter > 0, turns > 0 (any fraction), advance of either sign; exact for an even helix.
  * Source: Pythagoras on the unrolled cylinder. For turns of unequal advance see `helixLengthOfTurns`.
  *
- * Example: helixLength(0.076, 100, 0.06) = 23.8761
+ * Example: helixLength(0.076, 100, 0.06) = 23.8762
  */
 export function helixLength(diameter: number, turns: number, axialAdvance: number): number {
   needPositive({ diameter, turns });
@@ -19,7 +19,7 @@ export function helixLength(diameter: number, turns: number, axialAdvance: numbe
  *
  * Domain: diameter > 0; no advances: 0. Source: as `helixLength`.
  *
- * Example: helixLengthOfTurns(0.076, [0.0006, 0.0012]) = 0.477531
+ * Example: helixLengthOfTurns(0.076, [0.0006, 0.0012]) = 0.477526
  */
 export function helixLengthOfTurns(diameter: number, advances: ArrayLike<number>): number {
   needPositive({ diameter });

@@ -41,7 +41,7 @@ export interface LossEstimate {
  * Source: Medhurst 1947 and Sullivan 1999, joined as said. Accuracy against two finite-element solutions of solid coils: +6 % (5
  * turns of 1.5 mm at 4 mm, 1 MHz), -15 % (20 close turns, shorter than the diameter, where the table is known to be low).
  *
- * Example: lossEstimate({"turns":20,"meanDiameter":0.05,"length":0.0112,"pitch":0.00056,"wireDiameter":0.0005,"strands":1,"strandDiameter":0.0005,"wireLength":3.1416,"frequency":1.5e6}).resistance = 2.0
+ * Example: lossEstimate({"turns":20,"meanDiameter":0.05,"length":0.0112,"pitch":0.00056,"wireDiameter":0.0005,"strands":1,"strandDiameter":0.0005,"wireLength":3.1416,"frequency":1.5e6}).resistance = 1.9338
  */
 export function lossEstimate(input: LossInput): LossEstimate {
   const { wireLength, wireDiameter, strands, strandDiameter, frequency } = input;

@@ -9,7 +9,7 @@ import { needPositive } from './domain.ts';
  * monotone cubic (Fritsch & Carlson 1980) of ln H against ln(l/D), without overshoot at the flat minimum near l = D.
  * Accuracy: exact at the points; 5 % measured, on solid polystyrene rod; a thick or denser former adds to it.
  *
- * Example: selfCapacitance(0.06, 0.0766) = 3.5236e-12
+ * Example: selfCapacitance(0.06, 0.0766) = 3.5272e-12
  */
 export function selfCapacitance(length: number, diameter: number): number {
   needPositive({ length, diameter });

@@ -22,7 +22,7 @@ export function skinDepth(frequency: number): number {
  * Up to x = 100 by the continued fraction of that ratio, beyond by Hankel's series: no overflow at any x.
  * Accuracy: 6e-7 (rounding) against 31 computed values of x from 0.1 to 100.
  *
- * Example: skinRatio(0.0005, 1e6) = 2.1594
+ * Example: skinRatio(0.0005, 1e6) = 2.1663
  */
 export function skinRatio(diameter: number, frequency: number): number {
   needPositive({ diameter, frequency });

@@ -8,7 +8,7 @@ import { needPositive } from './domain.ts';
  * length = diameter/4 and worse below.
  * Source: Wheeler 1928, Proc. IRE 16, 1398. Accuracy as measured over 200 lengths from 0.4 to 50 diameters.
  *
- * Example: wheeler1928(100, 0.0762, 0.06) = 0.00060708
+ * Example: wheeler1928(100, 0.0762, 0.06) = 0.00060611
  */
 export function wheeler1928(turns: number, diameter: number, length: number): number {
   needPositive({ turns, diameter, length });
@@ -24,7 +24,7 @@ export function wheeler1928(turns: number, diameter: number, length: number): nu
  * Units: m. Domain: all positive; goes to the endless coil and to the flat ring at its edges.
  * Source: Wheeler 1982, Proc. IEEE 70, 1449. Accuracy: 0 to +0.1 % against the current sheet over 400 lengths from 0.001 to 1000 diameters.
  *
- * Example: wheeler1982(100, 0.0762, 0.06) = 0.00060572
+ * Example: wheeler1982(100, 0.0762, 0.06) = 0.00060618
  */
 export function wheeler1982(turns: number, diameter: number, length: number): number {
   needPositive({ turns, diameter, length });
@@ -38,7 +38,7 @@ export function wheeler1982(turns: number, diameter: number, length: number): nu
  * Source: Wheeler 1982, solved by Newton's method in ln N. Accuracy: 1e-12 relative in N against wheeler1982 over 500 random
  * coils; a start for a search, as good as that formula.
  *
- * Example: wheelerTurns(605.72e-6, 0.0762, 0.0006) = 100.000
+ * Example: wheelerTurns(606.179e-6, 0.0762, 0.0006) = 100.000
  */
 export function wheelerTurns(inductance: number, diameter: number, pitch: number): number {
   needPositive({ inductance, diameter, pitch });
