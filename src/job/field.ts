@@ -12,12 +12,8 @@ import { nearest } from './nearest.ts';
 /** JSON Schema of one field, beside its description. */
 type Json = Readonly<Record<string, unknown>>;
 
-export interface Doc {
-  /** One plain sentence: what it is. */
-  readonly text: string;
-  /** The value taken when the key is left out, as it would be written. */
-  readonly default?: string | number | boolean;
-}
+/** One plain sentence: what the key is. */
+export type Doc = string;
 
 export function field<T>(read: (raw: unknown) => Parsed<T>, doc: Doc, json: Json) {
   return z
@@ -28,7 +24,7 @@ export function field<T>(read: (raw: unknown) => Parsed<T>, doc: Doc, json: Json
       refuse(context, parsed);
       return z.NEVER;
     })
-    .meta({ description: doc.text, ...(doc.default === undefined ? {} : { default: doc.default }), ...json });
+    .meta({ description: doc, ...json });
 }
 
 interface Context {
@@ -61,14 +57,15 @@ function readQuantity(raw: unknown, kind: KindName, allowed: Allowed): Parsed<nu
   return { ok: false, got: shown(raw), expected: `${noun}, such as ${example}`, todo: 'write one number and its unit' };
 }
 
-const jsonText = (kind: KindName): Json => ({
-  type: kind === 'ratio' ? ['string', 'number'] : 'string',
-  examples: KINDS[kind].example.split(' or '),
-});
+/** The sentence with what the value measures and how one is written. */
+const described = (doc: Doc, kind: KindName): Doc =>
+  `${doc} ${capital(KINDS[kind].noun)}, such as ${KINDS[kind].example}.`;
+const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 
 /** One quantity, in the unit of its kind. */
 export function quantity(kind: KindName, doc: Doc, allowed: Allowed = {}) {
-  return field((raw) => readQuantity(raw, kind, allowed), doc, jsonText(kind));
+  const type = kind === 'ratio' ? ['string', 'number'] : 'string';
+  return field((raw) => readQuantity(raw, kind, allowed), described(doc, kind), { type });
 }
 
 /** A range, low end first. */
@@ -98,7 +95,7 @@ export function values(kind: KindName, doc: Doc) {
       }
       return { list: readList(raw, context, (one) => readQuantity(one, kind, {}), KINDS[kind].noun) };
     })
-    .meta({ description: doc.text, ...defaultOf(doc), anyOf: [{ type: 'string' }, jsonList({ type: 'string' })] });
+    .meta({ description: doc, anyOf: [{ type: 'string' }, jsonList({ type: 'string' })] });
 }
 
 /** One entry, or a list of at least one. */
@@ -106,7 +103,7 @@ export function listOf<T>(read: (raw: unknown) => Parsed<T>, noun: string, doc: 
   return z
     .unknown()
     .transform((raw, context): readonly T[] => readList(raw, context, read, noun))
-    .meta({ description: doc.text, ...defaultOf(doc), anyOf: [json, jsonList(json)] });
+    .meta({ description: doc, anyOf: [json, jsonList(json)] });
 }
 
 /** Quantities, one or a list. */
@@ -116,7 +113,6 @@ export function quantities(kind: KindName, doc: Doc) {
 
 const MOST = 200;
 const jsonList = (items: Json): Json => ({ type: 'array', items, minItems: 1, maxItems: MOST });
-const defaultOf = (doc: Doc): Json => (doc.default === undefined ? {} : { default: doc.default });
 
 function readList<T>(raw: unknown, context: Context, read: (raw: unknown) => Parsed<T>, noun: string): T[] {
   const entries = Array.isArray(raw) ? raw : [raw];
@@ -181,7 +177,7 @@ export function choiceOrList<const W extends string>(words: readonly W[], kind: 
       refuse(context, { ...chosen, expected: `${chosen.expected}, or a list such as [20 uH, 80 uH, 240 uH]` });
       return z.NEVER;
     })
-    .meta({ description: doc.text, ...defaultOf(doc), anyOf: [{ enum: [...words] }, jsonList({ type: 'string' })] });
+    .meta({ description: doc, anyOf: [{ enum: [...words] }, jsonList({ type: 'string' })] });
 }
 
 /** A whole number. */
@@ -215,5 +211,5 @@ export function size(doc: Doc) {
     const refused = parseSize('');
     return refused.ok ? refused : { ...refused, got: shown(raw) };
   };
-  return field(read, doc, { type: 'string', examples: ['220 x 220 mm'] });
+  return field(read, doc, { type: 'string' });
 }

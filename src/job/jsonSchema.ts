@@ -27,5 +27,9 @@ function relax(node: Node, prefix: string, filled: ReadonlySet<string>): void {
     node.required = node.required.filter((key) => !filled.has(`${prefix}${key}`));
     if (node.required.length === 0) delete node.required;
   }
-  for (const [key, inner] of Object.entries(node.properties ?? {})) relax(inner, `${prefix}${key}.`, filled);
+  for (const [key, inner] of Object.entries(node.properties ?? {})) {
+    const dotted = `${prefix}${key}`;
+    if (Object.hasOwn(DEFAULTS, dotted)) inner.default = DEFAULTS[dotted as keyof typeof DEFAULTS];
+    relax(inner, `${dotted}.`, filled);
+  }
 }

@@ -1,13 +1,12 @@
 /**
- * The job file, defined once: keys, meaning, units, defaults. The JSON Schema that editors use and the reader of jobs
- * are both made from it. Whatever depends on two keys at once is in `checks.ts`; defaults that depend on another key
- * are in `defaults.ts`.
+ * The job file, defined once: keys, meaning, units. The JSON Schema that editors use and the reader of jobs
+ * are both made from it. Whatever depends on two keys at once is in `checks.ts`; what is taken when a key is left out
+ * is in `defaults.ts`.
  */
 import { z } from 'zod';
 import type { Parsed } from '../quantity/parse.ts';
 import { type FoundWire, findWire } from '../stock/find.ts';
 import { findMaterial } from '../stock/materials.ts';
-import { DEFAULTS } from './defaults.ts';
 import {
   choice,
   choiceOrLength,
@@ -35,45 +34,38 @@ export const MOST_TAPS = 60;
 
 const wantSchema = z
   .strictObject({
-    inductance: values('inductance', {
-      text: 'A range "20 uH to 240 uH", shared out among the taps by spacing; or a list, one inductance a tap, lowest first.',
-    }).optional(),
-    band: range('frequency', {
-      text: 'The band the set must tune, all positions together, "530 kHz to 1700 kHz". Needs set.',
-    }).optional(),
+    inductance: values(
+      'inductance',
+      'A range "20 uH to 240 uH", shared out among the taps by spacing; or a list, one inductance a tap, lowest first.',
+    ).optional(),
+    band: range(
+      'frequency',
+      'The band the set must tune, all positions together, "530 kHz to 1700 kHz". Needs set.',
+    ).optional(),
     overlap: quantity(
       'ratio',
-      {
-        text: 'How far, in frequency, one position must reach into the next: "5 %". For a band. 5 % when taps are left out, else 0 %.',
-      },
+      'How far, in frequency, one position must reach into the next: "5 %". For a band. 5 % when taps are left out, else 0 %.',
       { zero: true },
     ).optional(),
-    taps: count(1, MOST_TAPS, {
-      text: 'Switch positions, the whole coil included. For a band it may be left out: then the fewest that give the overlap.',
-    }).optional(),
-    spacing: choiceOrList(SPACINGS, 'inductance', {
-      text: 'How the taps share out the range: by even ratio, turns or frequency; or a list of inductances, lowest first.',
-    }).optional(),
+    taps: count(
+      1,
+      MOST_TAPS,
+      'Switch positions, the whole coil included. For a band it may be left out: then the fewest that give the overlap.',
+    ).optional(),
+    spacing: choiceOrList(
+      SPACINGS,
+      'inductance',
+      'How the taps share out the range: by even ratio, turns or frequency; or a list of inductances, lowest first.',
+    ).optional(),
   })
   .describe('What the coil must do: an inductance range, a list of inductances, or a band.');
 
 const setSchema = z
   .strictObject({
-    capacitor: range('capacitance', { text: 'Tuning capacitor, least to greatest: "15 pF to 380 pF".' }),
-    stray: quantity(
-      'capacitance',
-      { text: 'Wiring, valve and switch, always across the coil.', default: DEFAULTS['set.stray'] },
-      { zero: true },
-    ),
-    aerial: quantity(
-      'capacitance',
-      { text: 'What the aerial adds across the coil.', default: DEFAULTS['set.aerial'] },
-      { zero: true },
-    ),
-    switch: choice(SWITCHES, {
-      text: 'What the range switch does with the turns that are not in use.',
-      default: DEFAULTS['set.switch'],
-    }),
+    capacitor: range('capacitance', 'Tuning capacitor, least to greatest: "15 pF to 380 pF".'),
+    stray: quantity('capacitance', 'Wiring, valve and switch, always across the coil.', { zero: true }),
+    aerial: quantity('capacitance', 'What the aerial adds across the coil.', { zero: true }),
+    switch: choice(SWITCHES, 'What the range switch does with the turns that are not in use.'),
   })
   .describe('The receiver that the coil goes into; needed for a band.');
 
@@ -85,28 +77,22 @@ const readMaterial = (raw: unknown): Parsed<string> => {
 
 const formerSchema = z
   .strictObject({
-    kind: choice(['printed', 'tube'], {
-      text: 'Printed for this coil, or a tube that is bought or found.',
-      default: DEFAULTS['former.kind'],
-    }),
-    'outside-diameter': values('length', {
-      text: 'One diameter, a range "60 mm to 90 mm", or a list of those on hand. Needed for a tube; 50 mm to 90 mm when printed.',
-    }),
-    longest: quantity('length', {
-      text: 'The whole former at most, ends included. The height of the printer when printed, else 200 mm.',
-    }),
-    wall: quantity('length', {
-      text: 'Wall thickness. Derived from the line width when printed and left out; 1.5 mm for a tube.',
-    }).optional(),
-    material: field(
-      readMaterial,
-      { text: 'What the former is made of. PLA when printed, card for a tube.' },
-      { type: 'string' },
+    kind: choice(['printed', 'tube'], 'Printed for this coil, or a tube that is bought or found.'),
+    'outside-diameter': values(
+      'length',
+      'One diameter, a range "60 mm to 90 mm", or a list of those on hand. Needed for a tube; 50 mm to 90 mm when printed.',
     ),
-    mounting: choice(['ears', 'none'], {
-      text: 'Ears with a hole for a screw, or none. Ears when printed, none on a tube.',
-    }),
-    flanges: flag({ text: 'Rims at both ends. True when printed, false on a tube.' }),
+    longest: quantity(
+      'length',
+      'The whole former at most, ends included. The height of the printer when printed, else 200 mm.',
+    ),
+    wall: quantity(
+      'length',
+      'Wall thickness. Derived from the line width when printed and left out; 1.5 mm for a tube.',
+    ).optional(),
+    material: field(readMaterial, 'What the former is made of. PLA when printed, card for a tube.', { type: 'string' }),
+    mounting: choice(['ears', 'none'], 'Ears with a hole for a screw, or none. Ears when printed, none on a tube.'),
+    flanges: flag('Rims at both ends. True when printed, false on a tube.'),
   })
   .describe('What the wire is wound on.');
 
@@ -125,85 +111,59 @@ const readWire = (raw: unknown): Parsed<FoundWire> => {
 
 const windingSchema = z
   .strictObject({
-    hand: choice(['right', 'left'], {
-      text: 'Hand of the helix; a right-hand one climbs counterclockwise seen from above.',
-      default: DEFAULTS['winding.hand'],
-    }),
-    earthed: choice(['start', 'finish'], {
-      text: 'Which end is earthed; taps are counted from the start.',
-      default: DEFAULTS['winding.earthed'],
-    }),
-    pitch: choiceOrLength(['any', 'close', 'spaced'], {
-      text: 'Close wound, spaced, whichever is better, or a pitch centre to centre such as 0.6 mm.',
-      default: DEFAULTS['winding.pitch'],
-    }),
-    spacers: quantities('length', {
-      text: 'Thicknesses of what can be wound along as a spacer; all in stock when left out.',
-    }).optional(),
-    'tap-method': choice(TAP_METHODS, {
-      text: 'How taps are made; auto goes by covering and pitch.',
-      default: DEFAULTS['winding.tap-method'],
-    }),
-    'tap-layout': choice(TAP_LAYOUTS, {
-      text: 'Taps in one line are whole turns; staggered ones may be fractions of a turn.',
-      default: DEFAULTS['winding.tap-layout'],
-    }),
-    'finish-trim': flag({
-      text: 'Spare finish holes for a turn more or less.',
-      default: DEFAULTS['winding.finish-trim'],
-    }),
+    hand: choice(['right', 'left'], 'Hand of the helix; a right-hand one climbs counterclockwise seen from above.'),
+    earthed: choice(['start', 'finish'], 'Which end is earthed; taps are counted from the start.'),
+    pitch: choiceOrLength(
+      ['any', 'close', 'spaced'],
+      'Close wound, spaced, whichever is better, or a pitch centre to centre such as 0.6 mm.',
+    ),
+    spacers: quantities(
+      'length',
+      'Thicknesses of what can be wound along as a spacer; all in stock when left out.',
+    ).optional(),
+    'tap-method': choice(TAP_METHODS, 'How taps are made; auto goes by covering and pitch.'),
+    'tap-layout': choice(TAP_LAYOUTS, 'Taps in one line are whole turns; staggered ones may be fractions of a turn.'),
+    'finish-trim': flag('Spare finish holes for a turn more or less.'),
   })
   .describe('How it is wound.');
 
 const printerSchema = z
   .strictObject({
-    bed: size({ text: 'Bed, width x depth.', default: DEFAULTS['printer.bed'] }),
-    height: quantity('length', { text: 'Tallest part.', default: DEFAULTS['printer.height'] }),
-    nozzle: quantity('length', { text: 'Nozzle bore.', default: DEFAULTS['printer.nozzle'] }),
-    line: quantity('length', { text: 'Width of a printed line. 1.125 of the nozzle when left out.' }),
-    layer: quantity('length', { text: 'Layer height. Half of the nozzle when left out.' }),
-    clearance: quantity(
-      'length',
-      { text: 'Play on diameter between parts that fit together.', default: DEFAULTS['printer.clearance'] },
-      { zero: true },
-    ),
-    'hole-compensation': quantity(
-      'length',
-      {
-        text: 'Added to the diameter of every hole, because holes print small.',
-        default: DEFAULTS['printer.hole-compensation'],
-      },
-      { zero: true, negative: true },
-    ),
+    bed: size('Bed, width x depth.'),
+    height: quantity('length', 'Tallest part.'),
+    nozzle: quantity('length', 'Nozzle bore.'),
+    line: quantity('length', 'Width of a printed line. 1.125 of the nozzle when left out.'),
+    layer: quantity('length', 'Layer height. Half of the nozzle when left out.'),
+    clearance: quantity('length', 'Play on diameter between parts that fit together.', { zero: true }),
+    'hole-compensation': quantity('length', 'Added to the diameter of every hole, because holes print small.', {
+      zero: true,
+      negative: true,
+    }),
   })
   .describe('The printer, for a printed former.');
 
 export const jobSchema = z
   .strictObject({
     $schema: z.unknown().optional().meta({ description: 'For editors; not read.', type: 'string' }),
-    job: field(
-      readName,
-      { text: 'Name of the job; the output folder is named after it.' },
-      { type: 'string', minLength: 1, maxLength: 80 },
-    ),
-    date: field(
-      readDate,
-      { text: 'Printed on the sheets, as YYYY-MM-DD; none when left out.' },
-      { type: 'string', format: 'date' },
-    ).optional(),
-    paper: choice(['A4', 'Letter'], { text: 'Paper of sheets and templates.', default: DEFAULTS.paper }),
+    job: field(readName, 'Name of the job; the output folder is named after it.', {
+      type: 'string',
+      minLength: 1,
+      maxLength: 80,
+    }),
+    date: field(readDate, 'Printed on the sheets, as YYYY-MM-DD; none when left out.', {
+      type: 'string',
+      format: 'date',
+    }).optional(),
+    paper: choice(['A4', 'Letter'], 'Paper of sheets and templates.'),
     want: wantSchema,
     set: setSchema.optional(),
     former: formerSchema,
-    wire: listOf(
-      readWire,
-      'a wire',
-      { text: 'The wires to choose from, "24 AWG enamel"; all in stock when left out.' },
-      { type: 'string' },
-    ).optional(),
+    wire: listOf(readWire, 'a wire', 'The wires to choose from, "24 AWG enamel"; all in stock when left out.', {
+      type: 'string',
+    }).optional(),
     winding: windingSchema,
-    prefer: choice(PREFERENCES, { text: 'What the best coil is.', default: DEFAULTS.prefer }),
-    at: quantity('frequency', { text: 'Frequency at which losses are compared when there is no set.' }).optional(),
+    prefer: choice(PREFERENCES, 'What the best coil is.'),
+    at: quantity('frequency', 'Frequency at which losses are compared when there is no set.').optional(),
     printer: printerSchema,
   })
   .meta({

@@ -1,0 +1,31 @@
+/** Whether a folder is one that this program made, and which files in it are its own. */
+import { lstat, readFile } from 'node:fs/promises';
+import { join } from 'node:path';
+
+/** The file that marks a folder as ours. */
+export const RECORD_NAME = 'plan.json';
+/** No record is larger; what is, is not ours. */
+const LARGEST_BYTES = 64_000_000;
+
+/** Relative paths that the record lists, and the record itself; null when the folder is not ours. */
+export async function filesOf(folder: string): Promise<ReadonlySet<string> | null> {
+  const path = join(folder, RECORD_NAME);
+  try {
+    const found = await lstat(path);
+    if (!found.isFile() || found.size > LARGEST_BYTES) return null;
+    const record: unknown = JSON.parse(await readFile(path, 'utf8'));
+    if (typeof record !== 'object' || record === null || !('record' in record) || record.record !== 1) return null;
+    if (!('program' in record) || typeof record.program !== 'string' || !/^coilwright\b/.test(record.program))
+      return null;
+    const listed = 'files' in record && Array.isArray(record.files) ? record.files : [];
+    return new Set([RECORD_NAME, ...listed.flatMap(pathOf)]);
+  } catch {
+    return null;
+  }
+}
+
+function pathOf(file: unknown): string[] {
+  return typeof file === 'object' && file !== null && 'path' in file && typeof file.path === 'string'
+    ? [file.path]
+    : [];
+}

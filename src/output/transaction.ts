@@ -1,0 +1,171 @@
+/**
+ * One folder, written whole or not at all, for every verb that writes.
+ *
+ *     lock -> mend what a killed run left -> judge the folder that is there -> write a new one beside it, synced
+ *          -> give what is not ours a second name in it -> old to backup -> new into place -> backup away -> unlock
+ *
+ * At every moment the old folder or the new one is whole, under its name or as the backup; the next run puts a backup
+ * back. A folder is ours when its plan.json says so; the files it lists are what may be replaced.
+ */
+import { lstat, mkdir, open, readdir, rename, rm, rmdir } from 'node:fs/promises';
+import { basename, dirname, join, resolve } from 'node:path';
+import { carryOver } from './carry.ts';
+import { isErrno, outputFault, refuseFolder } from './faults.ts';
+import { lock } from './lock.ts';
+import { filesOf } from './ours.ts';
+
+export interface OutputFile {
+  /** Relative, with forward slashes. */
+  readonly path: string;
+  readonly bytes: Uint8Array;
+}
+
+export interface Names {
+  readonly temporary: string;
+  readonly backup: string;
+  readonly lock: string;
+}
+
+/** Names beside the folder that a killed run may leave. */
+export function namesBeside(dir: string): Names {
+  const target = resolve(dir);
+  const beside = join(dirname(target), `.${basename(target)}.coilwright`);
+  return { temporary: `${beside}-new`, backup: `${beside}-old`, lock: `${beside}-lock` };
+}
+
+/**
+ * Writes `files` as the folder `dir`, replacing a folder of ours that is there. Returns its absolute path.
+ * Throws a Fault with exit code 5; what was there is then there still.
+ */
+export async function writeFolder(dir: string, files: readonly OutputFile[]): Promise<string> {
+  const target = resolve(dir);
+  const written = new Set(files.map((file) => checked(file.path)));
+  if (dirname(target) === target) {
+    throw refuseFolder(target, 'the root of the file system', 'choose a folder below it');
+  }
+  try {
+    await mkdir(dirname(target), { recursive: true });
+    const names = namesBeside(target);
+    const unlock = await lock(names.lock, target);
+    try {
+      await mend(target, names);
+      const ours = await judge(target);
+      await writeAll(names.temporary, files);
+      if (ours === null) {
+        await rename(names.temporary, target);
+      } else {
+        await carryOver(target, names.temporary, ours, written);
+        await swap(target, names);
+      }
+      await sync(dirname(target));
+    } finally {
+      await rm(names.temporary, { recursive: true, force: true });
+      await unlock();
+    }
+  } catch (error) {
+    throw outputFault(error, target);
+  }
+  return target;
+}
+
+/** A path of our own making; one that leads elsewhere is a mistake of the program. */
+function checked(path: string): string {
+  if (!path.split('/').every((part) => /^[A-Za-z0-9_][A-Za-z0-9._-]*$/.test(part))) {
+    throw new Error(`not a plain relative path: ${path}`);
+  }
+  return path;
+}
+
+/** Puts back, or clears away, what a killed run left. */
+async function mend(target: string, names: Names): Promise<void> {
+  await rm(names.temporary, { recursive: true, force: true });
+  if ((await kindOf(names.backup)) !== 'folder') return;
+  const there = await kindOf(target);
+  // Killed between the two renames: the old folder lies under the backup name only.
+  if (there === 'nothing') return rename(names.backup, target);
+  if (there === 'folder') {
+    // Killed while clearing away: the new folder has all that was not ours.
+    if ((await filesOf(target)) !== null) return rm(names.backup, { recursive: true, force: true });
+    if ((await readdir(target)).length === 0) {
+      await rmdir(target);
+      return rename(names.backup, target);
+    }
+  }
+  throw refuseFolder(
+    target,
+    `something that coilwright did not make, while the folder of an interrupted run waits as ${names.backup}`,
+    'move one of the two elsewhere',
+  );
+}
+
+/** Paths of ours in the folder that is there; null when there is none. */
+async function judge(target: string): Promise<ReadonlySet<string> | null> {
+  const there = await kindOf(target);
+  if (there === 'nothing') return null;
+  if (there === 'link')
+    throw refuseFolder(target, 'a symbolic link', 'give the folder that it leads to, or another one');
+  if (there === 'other') throw refuseFolder(target, 'a file', 'choose another name with --out');
+  const ours = await filesOf(target);
+  if (ours !== null) return ours;
+  if ((await readdir(target)).length === 0) return new Set();
+  throw refuseFolder(
+    target,
+    'a folder that coilwright did not make',
+    'choose a new or empty folder with --out, or move what is in it elsewhere; nothing was changed',
+  );
+}
+
+async function kindOf(path: string): Promise<'nothing' | 'folder' | 'link' | 'other'> {
+  try {
+    const found = await lstat(path);
+    if (found.isSymbolicLink()) return 'link';
+    return found.isDirectory() ? 'folder' : 'other';
+  } catch (error) {
+    if (isErrno(error, 'ENOENT')) return 'nothing';
+    throw error;
+  }
+}
+
+async function writeAll(folder: string, files: readonly OutputFile[]): Promise<void> {
+  await mkdir(folder);
+  const folders = new Set([folder]);
+  for (const { path, bytes } of files) {
+    const full = join(folder, path);
+    await mkdir(dirname(full), { recursive: true });
+    folders.add(dirname(full));
+    const handle = await open(full, 'wx');
+    try {
+      await handle.writeFile(bytes);
+      await handle.sync();
+    } finally {
+      await handle.close();
+    }
+  }
+  for (const one of folders) await sync(one);
+}
+
+/** When the second rename fails the first is undone. */
+async function swap(target: string, names: Names): Promise<void> {
+  await rename(target, names.backup);
+  try {
+    await rename(names.temporary, target);
+  } catch (error) {
+    await rename(names.backup, target);
+    throw error;
+  }
+  await sync(dirname(target));
+  await rm(names.backup, { recursive: true, force: true });
+}
+
+/** Makes the names in a folder last; some systems cannot, and need not. */
+async function sync(folder: string): Promise<void> {
+  const handle = await open(folder, 'r').catch(() => null);
+  if (handle === null) return;
+  try {
+    await handle.sync();
+  } catch (error) {
+    if (!isErrno(error, 'EINVAL', 'EPERM', 'EISDIR', 'EBADF', 'ENOTSUP')) throw error;
+  } finally {
+    await handle.close();
+  }
+}
