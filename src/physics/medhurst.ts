@@ -126,7 +126,10 @@ const LOG_RATIO = SELF_CAPACITANCE.map(([ratio]) => Math.log(ratio));
 const LOG_H = SELF_CAPACITANCE.map(([, h]) => Math.log(h));
 const SLOPE = monotoneSlopes(LOG_RATIO, LOG_H);
 
-/** Slopes at the points of a cubic that rises and falls only where its points do: harmonic means of the chords on both sides. */
+/**
+ * Slopes at the points of a cubic that rises and falls only where its points do: harmonic means of the chords on both sides.
+ * Beside a flat chord, as there is at the minimum, the mean is 0; these points never turn without one.
+ */
 function monotoneSlopes(x: readonly number[], y: readonly number[]): number[] {
   const chord = (i: number) => (y[i + 1]! - y[i]!) / (x[i + 1]! - x[i]!);
   const last = x.length - 1;
@@ -134,7 +137,6 @@ function monotoneSlopes(x: readonly number[], y: readonly number[]): number[] {
     if (i === 0) return chord(0);
     if (i === last) return chord(last - 1);
     const [before, after] = [chord(i - 1), chord(i)];
-    if (before * after <= 0) return 0;
     const [left, right] = [x[i]! - x[i - 1]!, x[i + 1]! - x[i]!];
     const [p, q] = [left + 2 * right, 2 * left + right];
     return (p + q) / (p / before + q / after);
