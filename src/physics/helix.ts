@@ -4,13 +4,14 @@ import { needPositive } from './domain.ts';
  * Length of wire (m) of `turns` turns of a helix that together advance `axialAdvance` along the axis: the sum of
  * sqrt((pi D)^2 + p^2) per turn.
  *
- * Units: m; D to the wire's centre. Domain: diameter > 0, turns > 0 (any fraction), advance of either sign; exact for an even helix.
+ * Units: m; D to the wire's centre. Domain: diameter > 0, turns >= 0 (any fraction), advance of either sign; exact for an even helix.
  * Source: Pythagoras on the unrolled cylinder. For turns of unequal advance see `helixLengthOfTurns`.
  *
  * Example: helixLength(0.076, 100, 0.06) = 23.8762
  */
 export function helixLength(diameter: number, turns: number, axialAdvance: number): number {
-  needPositive({ diameter, turns });
+  needPositive({ diameter });
+  if (!(turns >= 0)) throw new RangeError(`turns must be 0 or more, got ${turns}`);
   return Math.hypot(Math.PI * diameter * turns, axialAdvance);
 }
 

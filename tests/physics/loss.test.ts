@@ -41,6 +41,8 @@ test('wire of a helix: the same in one piece and turn by turn', () => {
     { seed: SEED },
   );
   expect(helixLengthOfTurns(0.07, [])).toBe(0);
+  expect(helixLength(0.07, 0, 0)).toBe(0);
+  expect(() => helixLength(0.07, -1, 0)).toThrow(/turns/);
   // Uneven turns are longer than even ones of the same advance.
   expect(helixLengthOfTurns(0.07, [0, 0.02])).toBeGreaterThan(helixLength(0.07, 2, 0.02));
 });
