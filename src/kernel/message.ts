@@ -1,0 +1,14 @@
+/** What client and worker say to one another. */
+import type { FaultExit, FaultParts } from '../fault.ts';
+import type { CoilRecord } from '../record/schema.ts';
+import type { PartFile } from './make.ts';
+
+export interface MakeRequest {
+  readonly id: number;
+  readonly record: CoilRecord;
+}
+
+export type MakeReply =
+  | { readonly id: number; readonly kind: 'made'; readonly parts: PartFile[] }
+  | { readonly id: number; readonly kind: 'fault'; readonly exit: FaultExit; readonly faults: readonly FaultParts[] }
+  | { readonly id: number; readonly kind: 'error'; readonly text: string };

@@ -1,0 +1,105 @@
+/**
+ * Named dimensions of the former, derived from the record. Lengths in millimetres, turns from the start hole.
+ */
+import { axialAt } from '../coil/layout.ts';
+import type { CoilRecord, Former, Hole } from '../record/schema.ts';
+
+/** Width of one extruded line from the common 0.4 mm nozzle (common practice); walls are counted in such lines. */
+export const LINE_MM = 0.45;
+
+export interface FormerDimensions {
+  readonly former: Former;
+  readonly segments: number;
+  readonly hand: 'right' | 'left';
+  readonly outsideR: number;
+  readonly boreR: number;
+  /** Radius of the foot: that of the lower rim, or the outside when there is none. */
+  readonly footR: number;
+  readonly topR: number;
+  readonly lengthMm: number;
+  readonly chamferMm: number;
+  /** The plain winding surface lies between these two. */
+  readonly surfaceFromMm: number;
+  readonly surfaceToMm: number;
+  /** Holes through the wall, each along a radius. */
+  readonly holes: readonly Hole[];
+  /** The groove runs over these turns, its runs-in included; null when smooth. */
+  readonly groove: GrooveSpan | null;
+  readonly axialMm: (turn: number) => number;
+}
+
+export interface GrooveSpan {
+  readonly depthMm: number;
+  readonly floorMm: number;
+  readonly rampTurns: number;
+  readonly fromTurn: number;
+  readonly toTurn: number;
+}
+
+/** Height of a teardrop's point over its centre: the roof rises at 45 degrees. */
+export function roofMm(diameterMm: number): number {
+  return diameterMm * Math.SQRT1_2;
+}
+
+export function formerDimensions(record: CoilRecord): FormerDimensions {
+  const { former } = record;
+  const winding = record.windings[0]!;
+  const outsideR = former.outsideDiameterMm / 2;
+  const flangeR = former.flange ? former.flange.diameterMm / 2 : outsideR;
+  const holes = wallHoles(record);
+  const axialMm = (turn: number) => axialAt(winding.turnPositionsMm, winding.turns, winding.pitchMm, turn);
+  const surfaceToMm = former.flange
+    ? former.lengthMm - former.flange.upperMm - (flangeR - outsideR)
+    : former.lengthMm - former.topMm;
+  return {
+    former,
+    segments: former.segments,
+    hand: record.frame.hand,
+    outsideR,
+    boreR: former.boreDiameterMm / 2,
+    footR: flangeR,
+    topR: flangeR,
+    lengthMm: former.lengthMm,
+    chamferMm: former.chamferMm,
+    surfaceFromMm: former.flange ? former.flange.lowerMm : former.footMm,
+    surfaceToMm,
+    holes,
+    groove: former.groove ? grooveSpan(former.groove, winding.turns, holes, axialMm, surfaceToMm) : null,
+    axialMm,
+  };
+}
+
+/** Mounting holes that stand in an ear are cut with the ear; all others go through the wall. */
+function wallHoles(record: CoilRecord): Hole[] {
+  const inEar = (hole: Hole) =>
+    hole.purpose === 'mount' && record.former.ears.some((ear) => angleBetween(ear.angleDeg, hole.angleDeg) < 0.01);
+  return record.holes.filter((hole) => !inEar(hole));
+}
+
+export function angleBetween(aDeg: number, bDeg: number): number {
+  const d = Math.abs(aDeg - bDeg) % 360;
+  return Math.min(d, 360 - d);
+}
+
+/**
+ * The groove goes on to the last hole of the finish row when there is room, so that turns added in trimming lie in it too;
+ * otherwise it ends at the finish.
+ */
+function grooveSpan(
+  groove: NonNullable<Former['groove']>,
+  turns: number,
+  holes: readonly Hole[],
+  axialMm: (turn: number) => number,
+  surfaceToMm: number,
+): GrooveSpan {
+  const lastRow = Math.max(turns, ...holes.map((hole) => (hole.purpose === 'finish' ? (hole.turn ?? 0) : 0)));
+  const halfMm = groove.floorMm / 2 + groove.depthMm;
+  const fits = axialMm(lastRow + groove.runInTurns) + halfMm <= surfaceToMm;
+  return {
+    depthMm: groove.depthMm,
+    floorMm: groove.floorMm,
+    rampTurns: groove.runInTurns,
+    fromTurn: -groove.runInTurns,
+    toTurn: (fits ? lastRow : turns) + groove.runInTurns,
+  };
+}

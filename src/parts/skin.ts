@@ -1,0 +1,51 @@
+/** The former's turned surface: profile from the foot over rims and groove to the top, and the bore back down. */
+import type { FormerDimensions } from './dimensions.ts';
+import type { Groove, GrooveSample, ProfileRow, Skin } from './solid.ts';
+
+export function formerSkin(d: FormerDimensions): Skin {
+  const { flange } = d.former;
+  const c = d.chamferMm;
+  const foot: ProfileRow[] = [{ rMm: d.footR - c, zMm: 0 }];
+  if (c > 0) foot.push({ rMm: d.footR, zMm: c });
+  if (flange && flange.lowerMm > c && d.footR > d.outsideR)
+    foot.push({ rMm: d.footR, zMm: flange.lowerMm }, { rMm: d.outsideR, zMm: flange.lowerMm });
+  const top: ProfileRow[] =
+    flange && d.topR > d.outsideR
+      ? [
+          { rMm: d.outsideR, zMm: d.surfaceToMm },
+          { rMm: d.topR, zMm: d.lengthMm - flange.upperMm },
+          { rMm: d.topR, zMm: d.lengthMm },
+        ]
+      : [{ rMm: d.outsideR, zMm: d.lengthMm }];
+  const bore: ProfileRow[] = [
+    { rMm: d.boreR, zMm: d.lengthMm },
+    { rMm: d.boreR, zMm: c },
+  ];
+  if (c > 0) bore.push({ rMm: d.boreR + c, zMm: 0 });
+  return {
+    segments: d.segments,
+    hand: d.hand,
+    outer: [...foot, ...top],
+    inner: bore,
+    groove: grooveSamples(d, foot.length - 1),
+  };
+}
+
+/** One sample a column; the first and the last lie just outside the ramps, at depth 0. */
+function grooveSamples(d: FormerDimensions, afterRow: number): Groove | null {
+  const { groove, segments } = d;
+  if (!groove) return null;
+  const firstColumn = Math.floor(groove.fromTurn * segments - 0.5);
+  const lastColumn = Math.ceil(groove.toTurn * segments - 0.5);
+  const samples: GrooveSample[] = [];
+  for (let column = firstColumn; column <= lastColumn; column++) {
+    const turn = (column + 0.5) / segments;
+    const ramp = groove.rampTurns > 0 ? Math.min(turn - groove.fromTurn, groove.toTurn - turn) / groove.rampTurns : 1;
+    const outside = column === firstColumn || column === lastColumn;
+    samples.push({
+      zMm: d.axialMm(turn),
+      depthMm: outside ? 0 : groove.depthMm * Math.min(1, Math.max(0, ramp)),
+    });
+  }
+  return { afterRow, floorMm: groove.floorMm, firstColumn, samples };
+}

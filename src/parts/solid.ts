@@ -1,0 +1,80 @@
+/**
+ * Solids as data: what a part is made of, before any mesh exists. Millimetres, Z up from the print bed, the former's axis
+ * at x = y = 0. Parts write these descriptions and the kernel turns them into meshes; neither knows how the other works.
+ */
+
+export type Point2 = readonly [number, number];
+export type Point3 = readonly [number, number, number];
+
+/** One circle of a turned profile. The radius is the true one: outside chords are inscribed, a bore is circumscribed. */
+export interface ProfileRow {
+  readonly rMm: number;
+  readonly zMm: number;
+}
+
+/** One cross-section of the groove: the wire's place along the axis and the depth below the outside (0 at both ends). */
+export interface GrooveSample {
+  readonly zMm: number;
+  readonly depthMm: number;
+}
+
+/**
+ * A helical groove with a flat floor and flanks at 45 degrees. Sample i stands at column `firstColumn + i`, counted on
+ * over the turns; column c lies at turn (c + 1/2) / segments from the start hole.
+ */
+export interface Groove {
+  readonly afterRow: number;
+  readonly floorMm: number;
+  readonly firstColumn: number;
+  readonly samples: readonly GrooveSample[];
+}
+
+/** A tube turned from a closed profile: `outer` from foot to top, then `inner` from top to foot. */
+export interface Skin {
+  readonly segments: number;
+  readonly hand: 'right' | 'left';
+  readonly outer: readonly ProfileRow[];
+  readonly inner: readonly ProfileRow[];
+  readonly groove: Groove | null;
+}
+
+/** A solid through rings of equally many points; both ends are closed by fans, from `hubs` or from a ring's first point. */
+export interface Loft {
+  readonly kind: 'loft';
+  readonly name: string;
+  readonly rings: readonly (readonly Point3[])[];
+  readonly hubs: readonly [Point3, Point3] | null;
+}
+
+/** Strokes with round ends, cut down into an upward face at `zMm`. */
+export interface Engraving {
+  readonly kind: 'engraving';
+  readonly name: string;
+  readonly zMm: number;
+  readonly depthMm: number;
+  readonly widthMm: number;
+  readonly strokes: readonly (readonly Point2[])[];
+}
+
+/** What the mesh must turn out to be; computed from the dimensions, not from a mesh. */
+export interface Expected {
+  readonly bodies: number;
+  /** Handles of the surface: one for the bore, one for every hole through. */
+  readonly genus: number;
+  readonly genusIs: string;
+  readonly minMm: Point3;
+  readonly maxMm: Point3;
+  readonly volumeMm3: number;
+}
+
+/** (body + adders) - cutters. */
+export interface Solid {
+  readonly part: string;
+  readonly path: string;
+  readonly body: Skin;
+  readonly adders: readonly Loft[];
+  readonly cutters: readonly (Loft | Engraving)[];
+  readonly expected: Expected;
+  readonly densityGCm3: number;
+  readonly printNote: string;
+}
