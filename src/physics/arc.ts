@@ -1,5 +1,5 @@
 import { MU0 } from './constants.ts';
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 import { gaussLegendre } from './gauss.ts';
 import { ringMutual } from './maxwell.ts';
 
@@ -18,7 +18,7 @@ import { ringMutual } from './maxwell.ts';
  * Example: arcOwnShare(0.5, 0.038, 0.00025) = 0.5101
  */
 export function arcOwnShare(fraction: number, radius: number, wireRadius: number): number {
-  needPositive({ radius, wireRadius });
+  if (!allPositive(radius, wireRadius)) needPositive({ radius, wireRadius });
   if (!(fraction >= 0 && fraction <= 1)) throw new RangeError(`fraction must lie in [0, 1], got ${fraction}`);
   if (fraction > 0.5) return 2 * fraction - 1 + shareUpToHalf(1 - fraction, radius, wireRadius);
   return shareUpToHalf(fraction, radius, wireRadius);

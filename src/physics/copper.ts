@@ -1,4 +1,4 @@
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 
 /** Resistivity rho of annealed copper at 20 C, ohm m (International Annealed Copper Standard; NBS Circular 31). */
 export const RESISTIVITY_20C = 1.7241e-8;
@@ -16,6 +16,6 @@ export const DENSITY = 8890;
  * Example: dcResistance(24, 0.0005) = 2.1074
  */
 export function dcResistance(length: number, diameter: number, strands = 1): number {
-  needPositive({ diameter, strands });
+  if (!allPositive(diameter, strands)) needPositive({ diameter, strands });
   return (4 * RESISTIVITY_20C * length) / (Math.PI * diameter * diameter * strands);
 }

@@ -6,3 +6,8 @@ export function needPositive(values: Readonly<Record<string, number>>): void {
     }
   }
 }
+
+/** The same question without naming anything: laws are asked millions of times in a search, and the answer is nearly always yes. */
+export function allPositive(a: number, b = 1, c = 1, d = 1): boolean {
+  return a > 0 && b > 0 && c > 0 && d > 0 && a + b + c + d < Number.POSITIVE_INFINITY;
+}

@@ -1,4 +1,4 @@
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 
 /**
  * Length of wire (m) of `turns` turns of a helix that together advance `axialAdvance` along the axis: the sum of
@@ -10,7 +10,7 @@ import { needPositive } from './domain.ts';
  * Example: helixLength(0.076, 100, 0.06) = 23.8762
  */
 export function helixLength(diameter: number, turns: number, axialAdvance: number): number {
-  needPositive({ diameter });
+  if (!allPositive(diameter)) needPositive({ diameter });
   if (!(turns >= 0)) throw new RangeError(`turns must be 0 or more, got ${turns}`);
   return Math.hypot(Math.PI * diameter * turns, axialAdvance);
 }
@@ -23,7 +23,7 @@ export function helixLength(diameter: number, turns: number, axialAdvance: numbe
  * Example: helixLengthOfTurns(0.076, [0.0006, 0.0012]) = 0.477526
  */
 export function helixLengthOfTurns(diameter: number, advances: ArrayLike<number>): number {
-  needPositive({ diameter });
+  if (!allPositive(diameter)) needPositive({ diameter });
   let sum = 0;
   for (let i = 0; i < advances.length; i++) sum += Math.hypot(Math.PI * diameter, advances[i]!);
   return sum;

@@ -1,5 +1,5 @@
 import { MU0 } from './constants.ts';
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 import { maxwellFactor } from './elliptic.ts';
 
 /**
@@ -12,7 +12,7 @@ import { maxwellFactor } from './elliptic.ts';
  * Example: ringSelf(0.05, 0.0005) = 3.10056e-7
  */
 export function ringSelf(radius: number, wireRadius: number): number {
-  needPositive({ radius, wireRadius });
+  if (!allPositive(radius, wireRadius)) needPositive({ radius, wireRadius });
   const log = Math.log((8 * radius) / wireRadius);
   const thickness = wireRadius / radius;
   return MU0 * radius * (log - 1.75 + ((thickness * thickness) / 8) * (log + 1 / 3));

@@ -1,4 +1,4 @@
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 
 /**
  * Self-capacitance C (F) of a single-layer coil with one end earthed: H(l/D) x D, 1 pF per cm of diameter for H = 1.
@@ -12,7 +12,7 @@ import { needPositive } from './domain.ts';
  * Example: selfCapacitance(0.06, 0.0766) = 3.5272e-12
  */
 export function selfCapacitance(length: number, diameter: number): number {
-  needPositive({ length, diameter });
+  if (!allPositive(length, diameter)) needPositive({ length, diameter });
   const x = Math.min(Math.max(Math.log(length / diameter), LOG_RATIO[0]!), LOG_RATIO.at(-1)!);
   let i = 0;
   while (i < LOG_RATIO.length - 2 && x > LOG_RATIO[i + 1]!) i++;

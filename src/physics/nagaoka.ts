@@ -1,5 +1,5 @@
 import { MU0 } from './constants.ts';
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 
 /**
  * Nagaoka's coefficient K (dimensionless) of a cylindrical current sheet: its inductance over that of a piece of an endless one.
@@ -15,7 +15,7 @@ import { needPositive } from './domain.ts';
  * Example: nagaokaK(100, 1) = 0.03496024577
  */
 export function nagaokaK(diameter: number, length: number): number {
-  needPositive({ diameter, length });
+  if (!allPositive(diameter, length)) needPositive({ diameter, length });
   const hypotenuse = Math.hypot(diameter, length);
   const k = diameter / hypotenuse;
   const kPrime = length / hypotenuse;

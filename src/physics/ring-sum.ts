@@ -1,5 +1,5 @@
 import { arcOwnShare } from './arc.ts';
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 import { ringMutual, ringSelf } from './maxwell.ts';
 
 /**
@@ -52,7 +52,7 @@ export function cumulativeInductance(
   wireRadius: number,
   turns = positions.length,
 ): CumulativeInductance {
-  needPositive({ turns });
+  if (!allPositive(turns)) needPositive({ turns });
   const nearest = Math.round(turns);
   const whole = Math.abs(turns - nearest) < TURN_SLACK ? nearest : Math.floor(turns);
   const count = whole < nearest || turns - whole > TURN_SLACK ? whole + 1 : whole;

@@ -1,5 +1,5 @@
 import { MU0 } from './constants.ts';
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 import { sheetInductance } from './nagaoka.ts';
 
 /**
@@ -11,7 +11,7 @@ import { sheetInductance } from './nagaoka.ts';
  * Example: rosaA(0.5) = -0.136294
  */
 export function rosaA(wireOverPitch: number): number {
-  needPositive({ wireOverPitch });
+  if (!allPositive(wireOverPitch)) needPositive({ wireOverPitch });
   return 1.25 - Math.LN2 + Math.log(wireOverPitch);
 }
 

@@ -1,6 +1,6 @@
 import { MU0 } from './constants.ts';
 import { RESISTIVITY_20C } from './copper.ts';
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 
 /**
  * Skin depth delta (m) of copper at 20 C: sqrt(2 rho/(omega mu0)).
@@ -10,7 +10,7 @@ import { needPositive } from './domain.ts';
  * Example: skinDepth(1e6) = 6.6085e-5
  */
 export function skinDepth(frequency: number): number {
-  needPositive({ frequency });
+  if (!allPositive(frequency)) needPositive({ frequency });
   return Math.sqrt(RESISTIVITY_20C / (Math.PI * frequency * MU0));
 }
 
@@ -25,7 +25,7 @@ export function skinDepth(frequency: number): number {
  * Example: skinRatio(0.0005, 1e6) = 2.1663
  */
 export function skinRatio(diameter: number, frequency: number): number {
-  needPositive({ diameter, frequency });
+  if (!allPositive(diameter, frequency)) needPositive({ diameter, frequency });
   const x = diameter / (Math.SQRT2 * skinDepth(frequency));
   return x > 100 ? byHankel(x) : byFraction(x);
 }

@@ -1,5 +1,5 @@
 import { SPEED_OF_LIGHT } from './constants.ts';
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 
 /**
  * Resonant frequency f (Hz) of an inductance (H) and a capacitance (F): 1/(2 pi sqrt(L C)).
@@ -9,7 +9,7 @@ import { needPositive } from './domain.ts';
  * Example: resonance(240e-6, 100e-12) = 1.02734e6
  */
 export function resonance(inductance: number, capacitance: number): number {
-  needPositive({ inductance, capacitance });
+  if (!allPositive(inductance, capacitance)) needPositive({ inductance, capacitance });
   return 1 / (2 * Math.PI * Math.sqrt(inductance * capacitance));
 }
 
@@ -19,7 +19,7 @@ export function resonance(inductance: number, capacitance: number): number {
  * Example: inductanceFor(1e6, 100e-12) = 2.5330e-4
  */
 export function inductanceFor(frequency: number, capacitance: number): number {
-  needPositive({ frequency, capacitance });
+  if (!allPositive(frequency, capacitance)) needPositive({ frequency, capacitance });
   return 1 / ((2 * Math.PI * frequency) ** 2 * capacitance);
 }
 
@@ -29,7 +29,7 @@ export function inductanceFor(frequency: number, capacitance: number): number {
  * Example: capacitanceFor(1e6, 253.3e-6) = 1.0000e-10
  */
 export function capacitanceFor(frequency: number, inductance: number): number {
-  needPositive({ frequency, inductance });
+  if (!allPositive(frequency, inductance)) needPositive({ frequency, inductance });
   return 1 / ((2 * Math.PI * frequency) ** 2 * inductance);
 }
 
@@ -39,6 +39,6 @@ export function capacitanceFor(frequency: number, inductance: number): number {
  * Example: wavelength(1e6) = 299.792458
  */
 export function wavelength(frequency: number): number {
-  needPositive({ frequency });
+  if (!allPositive(frequency)) needPositive({ frequency });
   return SPEED_OF_LIGHT / frequency;
 }

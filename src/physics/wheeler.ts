@@ -1,5 +1,5 @@
 import { MU0 } from './constants.ts';
-import { needPositive } from './domain.ts';
+import { allPositive, needPositive } from './domain.ts';
 
 /**
  * Inductance L (H) of a single-layer coil by Wheeler's short formula: r^2 N^2/(9 r + 10 l) microhenries, inches.
@@ -11,7 +11,7 @@ import { needPositive } from './domain.ts';
  * Example: wheeler1928(100, 0.0762, 0.06) = 0.00060611
  */
 export function wheeler1928(turns: number, diameter: number, length: number): number {
-  needPositive({ turns, diameter, length });
+  if (!allPositive(turns, diameter, length)) needPositive({ turns, diameter, length });
   const radiusInch = diameter / 2 / INCH;
   const lengthInch = length / INCH;
   return (1e-6 * radiusInch * radiusInch * turns * turns) / (9 * radiusInch + 10 * lengthInch);
@@ -27,7 +27,7 @@ export function wheeler1928(turns: number, diameter: number, length: number): nu
  * Example: wheeler1982(100, 0.0762, 0.06) = 0.00060618
  */
 export function wheeler1982(turns: number, diameter: number, length: number): number {
-  needPositive({ turns, diameter, length });
+  if (!allPositive(turns, diameter, length)) needPositive({ turns, diameter, length });
   return MU0 * turns * turns * (diameter / 2) * shape1982((2 * length) / diameter).value;
 }
 
@@ -41,7 +41,7 @@ export function wheeler1982(turns: number, diameter: number, length: number): nu
  * Example: wheelerTurns(606.179e-6, 0.0762, 0.0006) = 100.000
  */
 export function wheelerTurns(inductance: number, diameter: number, pitch: number): number {
-  needPositive({ inductance, diameter, pitch });
+  if (!allPositive(inductance, diameter, pitch)) needPositive({ inductance, diameter, pitch });
   const radius = diameter / 2;
   // The long-coil form mu0 pi R^2 N^2/(N p + 0.9 R) as a first guess.
   const s = inductance / (MU0 * Math.PI * radius * radius);

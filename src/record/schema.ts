@@ -177,6 +177,7 @@ export const alternativeSchema = z.strictObject({
   massG: num,
   worstTapPercent: num,
   lossFactor: num.describe('mean of 1/Q over the taps where they work, estimate'),
+  tapMethod: text.describe('how the taps are brought out, and their layout'),
   betterIn: z.array(text),
 });
 

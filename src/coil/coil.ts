@@ -1,0 +1,135 @@
+/**
+ * The coil as an immutable value: turns where they really lie, and every figure that follows from that alone.
+ * Millimetres, microhenry, picofarad, ohm and metres outside; SI is used only to ask the laws of `physics/`.
+ */
+
+import { dcResistance } from '../physics/copper.ts';
+import { helixLength } from '../physics/helix.ts';
+import { selfCapacitance } from '../physics/medhurst.ts';
+import { cumulativeInductance } from '../physics/rings.ts';
+import type { Wire } from '../stock/wire.ts';
+import { axialAt, type Gap, layTurns } from './layout.ts';
+
+export interface CoilShape {
+  readonly wire: Wire;
+  /** Twice the radius of the wire centre. */
+  readonly meanDiameterMm: number;
+  /** Centre to centre where no tap pushes. */
+  readonly pitchMm: number;
+  readonly turns: number;
+  readonly gaps: readonly Gap[];
+  /** Z of the wire centre at the start hole. */
+  readonly startMm: number;
+}
+
+/** Copper is longer in a stranded bundle than the bundle: 1.5 % for one bunching (Sullivan 1999 gives the same order). */
+const LITZ_TAKE_UP = 1.015;
+
+export class Coil {
+  readonly shape: CoilShape;
+  /** Z of the turn middles; see `layout.ts`. */
+  readonly places: Float64Array;
+  readonly #curve: { at(turn: number): number };
+
+  constructor(shape: CoilShape) {
+    this.shape = shape;
+    this.places = layTurns(shape.turns, shape.pitchMm, shape.gaps, shape.startMm);
+    this.#curve = cumulativeInductance(
+      Float64Array.from(this.places, (z) => z / 1e3),
+      shape.meanDiameterMm / 2e3,
+      shape.wire.bareMm / 2e3,
+      shape.turns,
+    );
+  }
+
+  get turns(): number {
+    return this.shape.turns;
+  }
+
+  /** Low-frequency inductance of turns 0..turn by the ring sum, uH. */
+  inductanceUh(turn: number): number {
+    return this.#curve.at(turn) * 1e6;
+  }
+
+  /**
+   * The turn at which the section from the start has this inductance: the inverse of `inductanceUh`, to 1e-7 turn.
+   * Values above the whole coil's run on with its slope, so that a search can see how many turns are missing.
+   */
+  turnFor(inductanceUh: number): number {
+    const whole = Math.floor(this.turns);
+    let low = 0;
+    let high = whole;
+    if (this.inductanceUh(this.turns) < inductanceUh) {
+      const top = this.inductanceUh(this.turns);
+      const slope = top - this.inductanceUh(Math.max(this.turns - 1, 1e-3));
+      return this.turns + (inductanceUh - top) / slope;
+    }
+    if (whole === 0 || this.inductanceUh(whole) < inductanceUh) {
+      low = whole;
+      high = this.turns;
+    } else {
+      while (high - low > 1) {
+        const middle = (low + high) >> 1;
+        if (this.inductanceUh(middle) < inductanceUh) low = middle;
+        else high = middle;
+      }
+    }
+    return this.#within(low, high, inductanceUh);
+  }
+
+  #within(from: number, to: number, target: number): number {
+    let low = from;
+    let high = to;
+    let lowValue = (low > 0 ? this.inductanceUh(low) : 0) - target;
+    let highValue = this.inductanceUh(high) - target;
+    // Regula falsi with the Illinois halving: the curve is smooth and rises, a handful of steps do.
+    for (let step = 0; step < 60 && high - low > 1e-7; step++) {
+      const guess = (low * highValue - high * lowValue) / (highValue - lowValue);
+      const value = this.inductanceUh(guess) - target;
+      if (Math.abs(value) < 1e-10 * target) return guess;
+      if (value > 0) {
+        high = guess;
+        highValue = value;
+        lowValue /= 2;
+      } else {
+        low = guess;
+        lowValue = value;
+        highValue /= 2;
+      }
+    }
+    return (low + high) / 2;
+  }
+
+  /** Z of the wire centre at a turn. */
+  positionMm(turn: number): number {
+    return axialAt(this.places, this.turns, this.shape.pitchMm, turn);
+  }
+
+  /** Edge to edge over the wires, from the start hole to this turn. */
+  woundMm(turn: number): number {
+    return this.positionMm(turn) - this.positionMm(0) + this.shape.wire.overallMm;
+  }
+
+  /** Wire along the helix from the start hole to this turn, m; loops of taps are not in it. */
+  wireM(turn: number): number {
+    return helixLength(this.shape.meanDiameterMm / 1e3, turn, (this.positionMm(turn) - this.positionMm(0)) / 1e3);
+  }
+
+  /** DC resistance at 20 C of the turns up to here, ohm. */
+  resistanceOhm(turn: number, bareMm: number = this.shape.wire.bareMm): number {
+    const { strands, strandMm, bareMm: nominal } = this.shape.wire;
+    const litz = strands > 1;
+    const diameter = litz ? strandMm * (bareMm / nominal) : bareMm;
+    return dcResistance(this.wireM(turn) * (litz ? LITZ_TAKE_UP : 1), diameter / 1e3, strands);
+  }
+
+  /** Medhurst's self-capacitance of the section up to this turn, pF. */
+  selfPf(turn: number): number {
+    return selfCapacitance(this.woundMm(turn) / 1e3, this.shape.meanDiameterMm / 1e3) * 1e12;
+  }
+
+  /** Mean centre-to-centre distance over the turns up to here, gaps of taps included. */
+  meanPitchMm(turn: number): number {
+    return (this.positionMm(turn) - this.positionMm(0)) / turn;
+  }
+}

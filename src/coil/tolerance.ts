@@ -1,0 +1,57 @@
+/**
+ * How far off a finished coil may be: 95 % limits of every tap from the spread of what it is made of.
+ *
+ * Each input is moved by its half width, the ring sum is taken again, and the changes are added as squares (the inputs are
+ * independent and the response is nearly linear over these widths: JCGM 100:2008, 5.1.2). Half widths are taken as 95 %
+ * limits. Where no standard states one it is common practice, and the record lists it among what was assumed.
+ */
+import { Coil, type CoilShape } from './coil.ts';
+
+/** Half widths at 95 %. */
+export interface Spread {
+  /** Mean diameter: former and how the wire beds on it, mm. */
+  readonly diameterMm: number;
+  /** Pitch, a fraction. */
+  readonly pitch: number;
+  readonly bareMm: number;
+  /** Gap that a tap makes, a fraction of it. */
+  readonly gap: number;
+  /** Place of a tap along the wire, turns. */
+  readonly turn: number;
+  /** Lead of a tap, uH. */
+  readonly leadUh: number;
+}
+
+export type SpreadInput = keyof Spread;
+
+export interface Limits {
+  readonly lowUh: number;
+  readonly highUh: number;
+  readonly dominant: SpreadInput;
+}
+
+/** Limits of the sections up to each of `turns`, in their order. */
+export function limitsOf(coil: Coil, turns: readonly number[], spread: Spread): Limits[] {
+  const { shape } = coil;
+  const moved: Record<Exclude<SpreadInput, 'turn' | 'leadUh'>, CoilShape> = {
+    diameterMm: { ...shape, meanDiameterMm: shape.meanDiameterMm + spread.diameterMm },
+    pitch: { ...shape, pitchMm: shape.pitchMm * (1 + spread.pitch) },
+    bareMm: { ...shape, wire: { ...shape.wire, bareMm: shape.wire.bareMm + spread.bareMm } },
+    gap: { ...shape, gaps: shape.gaps.map((gap) => ({ ...gap, gapMm: gap.gapMm * (1 + spread.gap) })) },
+  };
+  const coils = Object.entries(moved).map(([name, other]) => ({ name: name as SpreadInput, coil: new Coil(other) }));
+  return turns.map((turn) => {
+    const nominal = coil.inductanceUh(turn);
+    // A tap may end a little early or late; at the finish only early, the slope is the same.
+    const back = Math.min(spread.turn, turn / 2);
+    const perTurn = back > 0 ? (nominal - coil.inductanceUh(turn - back)) / back : 0;
+    const changes: { name: SpreadInput; change: number }[] = coils.map(({ name, coil: other }) => ({
+      name,
+      change: other.inductanceUh(turn) - nominal,
+    }));
+    changes.push({ name: 'turn', change: perTurn * spread.turn }, { name: 'leadUh', change: spread.leadUh });
+    const half = Math.hypot(...changes.map(({ change }) => change));
+    const dominant = changes.reduce((a, b) => (Math.abs(b.change) > Math.abs(a.change) ? b : a)).name;
+    return { lowUh: nominal - half, highUh: nominal + half, dominant };
+  });
+}

@@ -1,0 +1,70 @@
+/**
+ * The pipeline of `plan`, without I/O:
+ *
+ *     job ──> demand ──> candidates ──> designs ──> chosen coil ──> record ──┬──> winding sheet (PDF)
+ *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template (PDF)
+ *      │     demand)     candidates)    design)     search)        make)     ├──> former (STL, in a worker)
+ *      └────────────────────── nothing fits: solve/refusal ──> fault 4       └──> plan.json
+ *
+ * Everything right of the record reads the record and nothing else. The worker that builds the former warms up while the
+ * search runs, and works while the pages are written.
+ */
+import { createHash } from 'node:crypto';
+import type { Job } from './job/job.ts';
+import { startKernel } from './kernel/client.ts';
+import { makeRecord } from './record/make.ts';
+import type { CoilRecord } from './record/schema.ts';
+import { refusal } from './solve/refusal.ts';
+import { search } from './solve/search.ts';
+
+export interface PlanFile {
+  readonly path: string;
+  readonly kind: string;
+  readonly bytes: Uint8Array;
+  /** For people: size and use, printed after the run. */
+  readonly note: string;
+}
+
+export interface Plan {
+  readonly record: CoilRecord;
+  /** plan.json first. */
+  readonly files: readonly PlanFile[];
+}
+
+/** The record alone; throws the fault of exit 4 when nothing fits. */
+export function recordOf(job: Job, version: string): CoilRecord {
+  const found = search(job);
+  if (!('chosen' in found)) throw refusal(job, found);
+  return makeRecord(job, found, version);
+}
+
+const sha256 = (bytes: Uint8Array) => createHash('sha256').update(bytes).digest('hex');
+
+/** The record and every file of the output folder. */
+export async function planJob(job: Job, options: { version: string }): Promise<Plan> {
+  const kernel = job.former.kind === 'printed' ? startKernel() : null;
+  try {
+    const record = recordOf(job, options.version);
+    const parts = kernel?.make(record) ?? Promise.resolve([]);
+    // A fault of the worker is reported when it is awaited below, not as an unhandled rejection meanwhile.
+    parts.catch(() => undefined);
+    const { windingSheet } = await import('./sheets/winding-sheet.ts');
+    const { wrapTemplate } = await import('./sheets/wrap-template.ts');
+    const sheet = await windingSheet(record);
+    const template = await wrapTemplate(record);
+    const files: PlanFile[] = [
+      { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
+      { path: 'wrap-template.pdf', kind: 'pdf', bytes: template, note: 'true scale, print at 100 %' },
+    ];
+    for (const part of await parts) {
+      const { boxMm, massG, printNote } = part.report;
+      const note = `${boxMm.map((mm) => mm.toFixed(1)).join(' x ')} mm, ${massG.toFixed(0)} g of ${record.former.material}; ${printNote}`;
+      files.push({ path: part.path, kind: part.kind, bytes: part.bytes, note });
+    }
+    const listed = { ...record, files: files.map(({ path, kind, bytes }) => ({ path, kind, sha256: sha256(bytes) })) };
+    const json = new TextEncoder().encode(`${JSON.stringify(listed, null, 2)}\n`);
+    return { record: listed, files: [{ path: 'plan.json', kind: 'json', bytes: json, note: 'the record' }, ...files] };
+  } finally {
+    await kernel?.close();
+  }
+}

@@ -1,0 +1,113 @@
+/** The winding in order, from the design: what to do, at which turn, with how much wire used. */
+import { CORRECTION, STEP } from '../../templates/wording/steps.ts';
+import { Coil } from '../coil/coil.ts';
+import type { Job } from '../job/job.ts';
+import type { Design } from '../solve/design.ts';
+import { decimals } from './rounding.ts';
+import type { CoilRecord, Step, Winding } from './schema.ts';
+
+/** Wire left free at each end, mm. */
+export const LEAD_MM = 200;
+const SPREAD_TURNS = 5;
+
+/** A turn as people count: 12, 12.25. */
+const turnText = (turn: number) => String(decimals(turn, 2));
+
+function placeText(turn: number, angleDeg: number): string {
+  const whole = Math.floor(turn + 1e-6);
+  return turn - whole < 1e-6 ? STEP.turn(whole) : STEP.turnAndAngle(whole, angleDeg.toFixed(0));
+}
+
+function percentPerTenth(design: Design): string {
+  const { coil } = design;
+  const wider = new Coil({ ...coil.shape, meanDiameterMm: coil.shape.meanDiameterMm + 0.1 });
+  return (100 * (wider.inductanceUh(coil.turns) / coil.inductanceUh(coil.turns) - 1)).toFixed(2);
+}
+
+export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
+  const { former, method, holes } = design;
+  const steps: Step[] = [];
+  const add = (kind: Step['kind'], text: string, place?: { tap?: number; turn: number; wireM: number }) =>
+    steps.push({
+      step: steps.length + 1,
+      kind,
+      tap: place?.tap ?? null,
+      turn: place?.turn ?? null,
+      wireM: place?.wireM ?? null,
+      text,
+    });
+  add('prepare', STEP.measure(former.outsideDiameterMm.toFixed(2), percentPerTenth(design)));
+  if (former.kind === 'tube') {
+    const sizes = [...new Set(holes.map((hole) => hole.diameterMm))].sort((a, b) => a - b);
+    add('prepare', STEP.drill(`the ${holes.length} holes (${sizes.map((size) => `${size} mm`).join(', ')})`));
+  }
+  if (method.holes === 0 && winding.taps.length > 1) add('prepare', STEP.mark);
+  const metres = (winding.wireLengthM + winding.leadsM).toFixed(1);
+  add('prepare', STEP.set(metres, winding.tensionLowN.toFixed(1), winding.tensionHighN.toFixed(1)));
+  if (winding.pitchKind === 'spacer') add('prepare', STEP.spacer(winding.spacerName));
+  add('start', STEP.start(LEAD_MM), { turn: 0, wireM: 0 });
+  add('start', STEP.direction[job.winding.hand]);
+  let last = 0;
+  let checked = false;
+  for (const tap of winding.taps) {
+    const whole = tap.tap === winding.taps.length;
+    if (!checked && last < 20 && tap.turn > 20 && winding.pitchKind !== 'groove') {
+      checked = true;
+      add('wind', `${STEP.wind(turnText(20 - last), STEP.turn(20))}. ${STEP.check(overTwenty(design).toFixed(1))}`, {
+        turn: 20,
+        wireM: decimals(design.coil.wireM(20) + method.loopM * (tap.tap - 1), 2),
+      });
+      last = 20;
+    }
+    const wind = STEP.wind(turnText(tap.turn - last), placeText(tap.turn, tap.angleDeg));
+    const then = whole ? STEP.finish(LEAD_MM) : STEP.tap(tap.tap, method.name);
+    add(whole ? 'finish' : 'tap', whole ? `${wind}. ${then}` : `${wind}; ${then}`, {
+      tap: tap.tap,
+      turn: tap.turn,
+      wireM: decimals(tap.wireFromStartM, 2),
+    });
+    last = tap.turn;
+  }
+  if (winding.pitchKind === 'spacer') add('after', STEP.takeSpacer);
+  if (winding.taps.length > 1) add('after', STEP.taps);
+  add('after', STEP.afterMeasure);
+  const textile = /cotton|silk/.test(winding.wire.covering);
+  add('after', textile ? STEP.seal.textile : STEP.seal.other);
+  return steps;
+}
+
+/** Edge to edge over turns 1 to 20, measured along one line between taps. */
+export function overTwenty(design: Design): number {
+  const { places, shape } = design.coil;
+  return places[19]! - places[0]! + shape.wire.overallMm;
+}
+
+/** What can be done to a coil that reads high or low, worked out for this coil by the ring sum. */
+export function correctionsOf(design: Design): CoilRecord['corrections'] {
+  const { coil, taps } = design;
+  const first = taps[0]!.turn;
+  const spread = (from: number): Coil => {
+    const gapMm = coil.shape.wire.overallMm;
+    const gaps = Array.from({ length: SPREAD_TURNS }, (_, i) => ({ turn: from + i, gapMm }));
+    return new Coil({ ...coil.shape, gaps: [...coil.shape.gaps, ...gaps] });
+  };
+  const line = (doing: string, other: Coil, whole: number) => ({
+    doing,
+    wholePercent: decimals(100 * (other.inductanceUh(whole) / coil.inductanceUh(coil.turns) - 1), 2),
+    firstTapPercent: decimals(
+      taps.length > 1 ? 100 * (other.inductanceUh(first) / coil.inductanceUh(first) - 1) : 0,
+      2,
+    ),
+  });
+  const list: CoilRecord['corrections'] = [];
+  if (coil.turns > 2) list.push(line(CORRECTION.turnOff, coil, coil.turns - 1));
+  const more = new Coil({ ...coil.shape, turns: coil.turns + 1 });
+  list.push(line(CORRECTION.turnOn, more, coil.turns + 1));
+  if (coil.turns > 2 * SPREAD_TURNS && design.candidate.pitch.kind !== 'groove') {
+    list.push(line(CORRECTION.spreadFinish, spread(coil.turns - SPREAD_TURNS), coil.turns));
+    list.push(line(CORRECTION.spreadStart, spread(1), coil.turns));
+  }
+  const wider = new Coil({ ...coil.shape, meanDiameterMm: coil.shape.meanDiameterMm + 0.1 });
+  list.push(line(CORRECTION.thicker, wider, coil.turns));
+  return list;
+}

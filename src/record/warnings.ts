@@ -1,0 +1,71 @@
+/** What a person should know before winding that no figure shows. */
+import type { Job } from '../job/job.ts';
+import { strandLossValid } from '../physics/loss.ts';
+import { selfCapacitanceValid } from '../physics/medhurst.ts';
+import type { Found } from '../solve/search.ts';
+import type { CoilRecord } from './schema.ts';
+
+type Warning = CoilRecord['warnings'][number];
+
+/** A tap farther off than this is pointed out. */
+const FAR_OFF = 0.01;
+
+export function warningsOf(job: Job, found: Found, alternatives: number): Warning[] {
+  const { chosen } = found;
+  const { coil, taps, candidate, former, layout } = chosen;
+  const list: Warning[] = [];
+  const add = (code: string, text: string) => list.push({ code, text });
+  add(
+    'loss-is-an-estimate',
+    'Q and loss are estimates of the copper alone (skin effect, Medhurst’s ratio): use them to compare coils, not as a promise.',
+  );
+  if (job.set !== null && taps.length > 1)
+    add(
+      'dead-turns-not-counted',
+      'Ranges are those of the turns in use. Turns left open beyond a tap lower its upper edge further, by a few percent near the whole coil and by up to a quarter at the lowest taps.',
+    );
+  if (layout === 'staggered' && job.winding.tapLayout === 'auto')
+    add(
+      'taps-staggered',
+      'Taps do not clear one another in one line: they stand at angles, and the fractions of a turn are counted in.',
+    );
+  const off = taps
+    .map((tap, index) => ({ tap: index + 1, deviation: tap.deviation }))
+    .filter(({ deviation }) => Math.abs(deviation) > FAR_OFF);
+  if (off.length > 0) {
+    const which = off
+      .map(({ tap, deviation }) => `${tap} (${deviation > 0 ? '+' : ''}${(deviation * 100).toFixed(1)} %)`)
+      .join(', ');
+    const cure = layout === 'in line' ? '; `tap-layout: staggered` under `winding` brings them nearer' : '';
+    add('taps-off-target', `Nearest places are more than 1 % off target at tap ${which}${cure}.`);
+  }
+  const ratio = coil.woundMm(coil.turns) / coil.shape.meanDiameterMm;
+  if (!selfCapacitanceValid(ratio))
+    add(
+      'self-capacitance-outside-table',
+      `Length over diameter is ${ratio.toFixed(2)}; Medhurst’s table of self-capacitance runs from 0.1 to 50, its end value is used.`,
+    );
+  const fastest = Math.max(...taps.map((tap) => tap.workingKhz));
+  if (candidate.wire.strands > 1 && !strandLossValid(candidate.wire.strandMm / 1e3, fastest * 1e3))
+    add(
+      'strands-thick',
+      `Strands of ${candidate.wire.strandMm} mm are thicker than 1.5 skin depths at ${fastest.toFixed(0)} kHz: the loss of litz is overstated there.`,
+    );
+  if (/estimated|memory/i.test(candidate.wire.status))
+    add(
+      'wire-table-status',
+      `Diameters of ${candidate.wire.name}: ${candidate.wire.status}. Measure the wire at hand.`,
+    );
+  if (former.kind === 'printed') add('former-shrinks', `${former.stiffness}.`);
+  if (former.kind === 'tube')
+    add(
+      'measure-the-tube',
+      'A bought tube is rarely its nominal size: measure it across at three places and enter that.',
+    );
+  if (alternatives < 4)
+    add(
+      'few-alternatives',
+      `Only ${alternatives} other coils within what the job permits are better in some respect; permit more wires, diameters or pitches to see others.`,
+    );
+  return list;
+}

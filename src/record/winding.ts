@@ -1,0 +1,92 @@
+/** The winding and its taps as the record holds them, from a design. */
+
+import { angleOf } from '../coil/layout.ts';
+import { limitsOf } from '../coil/tolerance.ts';
+import type { Job } from '../job/job.ts';
+import type { Design, DesignTap } from '../solve/design.ts';
+import { spreadOf } from '../solve/spread.ts';
+import { decimals, mm, significant } from './rounding.ts';
+import type { Tap, Winding } from './schema.ts';
+import { LEAD_MM } from './steps.ts';
+
+/** Length of wire on the coil as wound by hand, against the helix: a percent either way (common practice). */
+const WIRE_SPREAD = 0.01;
+
+function tapOf(
+  job: Job,
+  design: Design,
+  tap: DesignTap,
+  index: number,
+  limits: { lowUh: number; highUh: number },
+): Tap {
+  const { coil, method, taps } = design;
+  const { wire } = coil.shape;
+  const { turn, coverage } = tap;
+  const inductanceUh = significant(tap.inductanceUh);
+  const targetUh = significant(tap.targetUh);
+  return {
+    tap: index + 1,
+    turn: decimals(turn, 6),
+    positionMm: mm(coil.positionMm(turn)),
+    angleDeg: angleOf(turn, job.winding.hand),
+    gapMm: index < taps.length - 1 ? mm(method.gapMm) : 0,
+    targetUh,
+    inductanceUh,
+    deviationPercent: decimals(100 * (inductanceUh / targetUh - 1), 3),
+    inductanceLowUh: significant(limits.lowUh),
+    inductanceHighUh: significant(limits.highUh),
+    wireFromStartM: decimals(coil.wireM(turn) + method.loopM * index, 4),
+    resistanceDcOhm: significant(coil.resistanceOhm(turn)),
+    resistanceLowOhm: significant(coil.resistanceOhm(turn, wire.bareHighMm) * (1 - WIRE_SPREAD)),
+    resistanceHighOhm: significant(coil.resistanceOhm(turn, wire.bareLowMm) * (1 + WIRE_SPREAD)),
+    woundLengthMm: mm(coil.woundMm(turn)),
+    working: {
+      frequencyKhz: significant(tap.workingKhz, 5),
+      resistanceOhm: significant(tap.lossOhm, 4),
+      q: significant(1 / tap.lossFactor, 3),
+      kind: 'estimate of the copper alone',
+    },
+    range:
+      coverage === null
+        ? null
+        : {
+            lowKhz: significant(coverage.lowKhz, 6),
+            highKhz: significant(coverage.highKhz, 6),
+            capacitanceLowPf: significant(coverage.outPf, 5),
+            capacitanceHighPf: significant(coverage.inPf, 5),
+          },
+  };
+}
+
+export function windingOf(job: Job, design: Design): Winding {
+  const { coil, candidate, metrics, taps, tension } = design;
+  const limits = limitsOf(
+    coil,
+    taps.map((tap) => tap.turn),
+    spreadOf(job, design),
+  );
+  const list = taps.map((tap, index) => tapOf(job, design, tap, index, limits[index]!));
+  return {
+    name: 'main',
+    turns: decimals(coil.turns, 6),
+    pitchMm: mm(coil.shape.pitchMm),
+    pitchKind: candidate.pitch.kind,
+    spacerMm: mm(candidate.pitch.spacerMm),
+    spacerName: candidate.pitch.spacerName,
+    turnPositionsMm: Array.from(coil.places, mm),
+    startMm: mm(coil.positionMm(0)),
+    finishMm: mm(coil.positionMm(coil.turns)),
+    meanDiameterMm: mm(coil.shape.meanDiameterMm),
+    windingLengthMm: mm(coil.woundMm(coil.turns)),
+    wire: { ...candidate.wire },
+    wireLengthM: decimals(metrics.wireM, 4),
+    leadsM: (2 * LEAD_MM) / 1000,
+    wireMassG: significant(metrics.massG, 4),
+    resistanceDcOhm: list[list.length - 1]!.resistanceDcOhm,
+    inductanceUh: list[list.length - 1]!.inductanceUh,
+    selfCapacitancePf: significant(coil.selfPf(coil.turns), 4),
+    tensionLowN: significant(tension.low, 2),
+    tensionHighN: significant(tension.high, 2),
+    taps: list,
+  };
+}

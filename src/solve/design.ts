@@ -1,0 +1,244 @@
+/** A candidate worked out in full by the ring sum, judged against every limit of the job. */
+import type { Coil } from '../coil/coil.ts';
+import type { Job } from '../job/job.ts';
+import type { Former, Hole } from '../record/schema.ts';
+import type { Candidate } from './candidates.ts';
+import type { Demand } from './demand.ts';
+import { type Around, formerFor, holesFor, startMm, tensionN, tightestPair } from './former.ts';
+import { coilOf, freedomsOf, type Setting, settle, targetsOf } from './settle.ts';
+import { inductanceSpread } from './spread.ts';
+import type { TapLayout, TapMethod } from './tap-methods.ts';
+import { type Coverage, coverageOf, lossFactor, sectionLossOhm, workingKhz } from './working.ts';
+
+export interface DesignTap {
+  readonly turn: number;
+  readonly targetUh: number;
+  readonly inductanceUh: number;
+  /** Inductance against target, a fraction. */
+  readonly deviation: number;
+  readonly coverage: Coverage | null;
+  readonly workingKhz: number;
+  readonly lossOhm: number;
+  readonly lossFactor: number;
+}
+
+export interface Metrics {
+  readonly lossFactor: number;
+  readonly volumeMm3: number;
+  readonly lengthMm: number;
+  readonly diameterMm: number;
+  readonly wireM: number;
+  readonly massG: number;
+  readonly worstTap: number;
+  readonly turns: number;
+  readonly spread: number;
+}
+
+export interface Design {
+  readonly candidate: Candidate;
+  readonly coil: Coil;
+  readonly method: TapMethod;
+  readonly layout: TapLayout;
+  readonly taps: readonly DesignTap[];
+  readonly former: Former;
+  readonly holes: readonly Hole[];
+  readonly tension: { readonly low: number; readonly high: number };
+  readonly metrics: Metrics;
+}
+
+export type Limit =
+  | 'former.longest'
+  | 'printer.height'
+  | 'printer.bed'
+  | 'former.wall'
+  | 'want.taps'
+  | 'want.overlap'
+  | 'want.band'
+  | 'winding.tap-method'
+  | 'holes';
+
+/** A limit of the job that a candidate breaks, with the value it has and the value that the job allows. */
+export interface Breach {
+  readonly limit: Limit;
+  readonly got: number;
+  readonly allowed: number;
+  readonly text: string;
+}
+
+export type Outcome =
+  | { readonly ok: true; readonly design: Design }
+  | { readonly ok: false; readonly breaches: readonly Breach[] };
+
+/** A printed former grows 0.1 % at most by its angle step; what is finer than this is not a miss of the band. */
+const BAND_SLACK = 2e-3;
+
+export function sectionOf(coil: Coil, turn: number) {
+  const { wire, meanDiameterMm } = coil.shape;
+  return { wire, meanDiameterMm, turns: turn, pitchMm: coil.meanPitchMm(turn), wireM: coil.wireM(turn) };
+}
+
+export function copperMm2(candidate: Candidate): number {
+  return (Math.PI / 4) * candidate.wire.strandMm ** 2 * candidate.wire.strands;
+}
+
+function tapsOf(setting: Setting, coil: Coil, turns: readonly number[]): DesignTap[] {
+  const targets = targetsOf(setting, coil);
+  return turns.map((turn, index) => {
+    const inductanceUh = coil.inductanceUh(turn);
+    const selfPf = coil.selfPf(turn);
+    const kHz = workingKhz(setting.job, inductanceUh, selfPf);
+    const lossOhm = sectionLossOhm(sectionOf(coil, turn), kHz);
+    return {
+      turn,
+      targetUh: targets[index]!,
+      inductanceUh,
+      deviation: inductanceUh / targets[index]! - 1,
+      coverage: coverageOf(setting.job, inductanceUh, selfPf),
+      workingKhz: kHz,
+      lossOhm,
+      lossFactor: lossFactor(inductanceUh, lossOhm, kHz),
+    };
+  });
+}
+
+function bandBreaches(demand: Demand, taps: readonly DesignTap[]): Breach[] {
+  if (demand.band === null || demand.overlap === null) return [];
+  const breaches: Breach[] = [];
+  const cover = taps.map((tap) => tap.coverage!);
+  for (let i = 1; i < cover.length; i++) {
+    const overlap = cover[i]!.highKhz / cover[i - 1]!.lowKhz - 1;
+    if (overlap < demand.overlap - BAND_SLACK)
+      breaches.push({
+        limit: 'want.overlap',
+        got: overlap,
+        allowed: demand.overlap,
+        text: `positions ${i} and ${i + 1} overlap by ${(overlap * 100).toFixed(1)} %, wanted ${(demand.overlap * 100).toFixed(1)} %`,
+      });
+  }
+  const low = cover[cover.length - 1]!.lowKhz;
+  const high = cover[0]!.highKhz;
+  if (low > demand.band.lowKhz * (1 + BAND_SLACK) || high < demand.band.highKhz * (1 - BAND_SLACK))
+    breaches.push({
+      limit: 'want.band',
+      got: high / low,
+      allowed: demand.band.highKhz / demand.band.lowKhz,
+      text: `covers ${low.toFixed(0)} to ${high.toFixed(0)} kHz of ${demand.band.lowKhz} to ${demand.band.highKhz} kHz`,
+    });
+  return breaches;
+}
+
+function sizeBreaches(job: Job, former: Former): Breach[] {
+  const breaches: Breach[] = [];
+  const check = (limit: Limit, got: number, allowed: number, what: string) => {
+    if (got > allowed + 1e-9)
+      breaches.push({ limit, got, allowed, text: `${what} ${got.toFixed(1)} mm, allowed ${allowed.toFixed(1)} mm` });
+  };
+  check('former.longest', former.lengthMm, job.former.longestMm, 'the former would be');
+  if (former.kind !== 'printed') return breaches;
+  check('printer.height', former.lengthMm, job.printer.heightMm, 'the former would stand');
+  const round = former.flange?.diameterMm ?? former.outsideDiameterMm;
+  const ear = former.ears[0];
+  const across = ear === undefined ? round : 2 * ear.centreRadiusMm + ear.widthMm;
+  check('printer.bed', across, Math.max(job.printer.bedXMm, job.printer.bedYMm), 'the former is across its ears');
+  check('printer.bed', round, Math.min(job.printer.bedXMm, job.printer.bedYMm), 'the former is across');
+  return breaches;
+}
+
+function wallBreaches(job: Job, former: Former): Breach[] {
+  if (former.kind !== 'printed') return [];
+  const left = former.wallMm - (former.groove?.depthMm ?? 0);
+  const least = 2 * job.printer.lineMm;
+  if (left >= least - 1e-9 && former.boreDiameterMm > 0) return [];
+  const text = `wall ${former.wallMm} mm leaves ${left.toFixed(2)} mm under the winding, two lines are ${least.toFixed(2)} mm`;
+  return [{ limit: 'former.wall', got: left, allowed: least, text }];
+}
+
+function designWith(job: Job, demand: Demand, candidate: Candidate, method: TapMethod, layout: TapLayout): Outcome {
+  const tension = tensionN(copperMm2(candidate));
+  const hand = job.winding.hand;
+  const base = {
+    job,
+    grooved: candidate.pitch.kind === 'groove',
+    overallMm: candidate.wire.overallMm,
+    tensionN: tension.high,
+  };
+  const start = startMm({ ...base, outsideMm: candidate.formerMm, pitchMm: candidate.pitch.mm });
+  const setting: Setting = { job, demand, candidate, method, layout, startMm: start };
+  let settled: ReturnType<typeof settle> = 'no room';
+  for (const freedom of freedomsOf(job, candidate)) {
+    settled = settle(setting, freedom);
+    if (settled !== 'no room') break;
+  }
+  if (settled === 'no room') throw new Error('the finish angle always finds room');
+  if ('noPlaceFor' in settled) {
+    const text = `tap ${settled.noPlaceFor} finds no place: its neighbours are nearer than a ${method.name} allows`;
+    return { ok: false, breaches: [{ limit: 'want.taps', got: demand.taps, allowed: settled.noPlaceFor - 1, text }] };
+  }
+  const coil = coilOf(setting, settled, settled.turns);
+  const turns = [...settled.taps, settled.turns];
+  const around: Around = { ...base, outsideMm: settled.outsideMm, pitchMm: settled.pitchMm };
+  const former = formerFor(around, coil, turns, hand);
+  const holes = holesFor(around, coil, turns, method, hand);
+  const taps = tapsOf(setting, coil, turns);
+  const breaches = [...sizeBreaches(job, former), ...wallBreaches(job, former), ...bandBreaches(demand, taps)];
+  const tight = tightestPair(holes, former.outsideDiameterMm);
+  if (tight !== null)
+    breaches.push({
+      limit: 'holes',
+      got: tight.leftMm,
+      allowed: 0.8,
+      text: `holes ${tight.a.label} and ${tight.b.label} leave ${tight.leftMm.toFixed(2)} mm between them`,
+    });
+  if (breaches.length > 0) return { ok: false, breaches };
+  const wireM = coil.wireM(coil.turns) + method.loopM * settled.taps.length;
+  const metrics: Metrics = {
+    lossFactor: taps.reduce((sum, tap) => sum + tap.lossFactor, 0) / taps.length,
+    volumeMm3: (Math.PI / 4) * former.outsideDiameterMm ** 2 * former.lengthMm,
+    lengthMm: former.lengthMm,
+    diameterMm: former.outsideDiameterMm,
+    wireM,
+    massG: wireM * copperMm2(candidate) * 8.89,
+    worstTap: Math.max(...taps.map((tap) => Math.abs(tap.deviation))),
+    turns: coil.turns,
+    spread: inductanceSpread(job, candidate),
+  };
+  return { ok: true, design: { candidate, coil, method, layout, taps, former, holes, tension, metrics } };
+}
+
+/**
+ * The best design of a candidate: the usual tap method first, in one line when the taps clear one another there, else
+ * staggered; `closest taps` looks at both and takes the closer. Without one, what the first method breaks.
+ */
+export function designOf(job: Job, demand: Demand, candidate: Candidate): Outcome {
+  const asked = job.winding.tapLayout;
+  const layouts: readonly TapLayout[] = asked === 'auto' ? ['in line', 'staggered'] : [asked];
+  const found: Design[] = [];
+  let breaches: readonly Breach[] = [
+    { limit: 'winding.tap-method', got: 0, allowed: 0, text: `${job.winding.tapMethod} is not possible at this pitch` },
+  ];
+  for (const method of candidate.methods) {
+    for (const layout of layouts) {
+      const outcome = designWith(job, demand, candidate, method, layout);
+      if (!outcome.ok) breaches = outcome.breaches;
+      else if (job.prefer === 'closest taps') found.push(outcome.design);
+      else return outcome;
+    }
+    if (found.length > 0) break;
+    // Another tap method helps where a tap found no place or holes collide, not against a former that is too long.
+    if (!breaches.some((breach) => breach.limit === 'want.taps' || breach.limit === 'holes')) break;
+  }
+  const best = found.sort((a, b) => a.metrics.worstTap - b.metrics.worstTap)[0];
+  return best === undefined ? { ok: false, breaches } : { ok: true, design: best };
+}
+
+/** The same candidate with its taps brought out in every other way that fits. */
+export function variantsOf(job: Job, demand: Demand, design: Design): Design[] {
+  const list: Design[] = [];
+  for (const method of design.candidate.methods)
+    for (const layout of ['in line', 'staggered'] as const) {
+      if (method.name === design.method.name && layout === design.layout) continue;
+      const outcome = designWith(job, demand, design.candidate, method, layout);
+      if (outcome.ok) list.push(outcome.design);
+    }
+  return list;
+}

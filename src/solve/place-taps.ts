@@ -1,0 +1,77 @@
+/**
+ * Where each tap goes: the nearest place to its inductance that a person can make. In one line the places are whole
+ * turns; staggered they are steps of 5 degrees, which a protractor can set out too. Neighbours keep the distance that
+ * their tap method needs, in turns or else in angle; who stands too near moves to the next free place.
+ */
+import type { Coil } from '../coil/coil.ts';
+import type { TapLayout, TapMethod } from './tap-methods.ts';
+
+export const STAGGER_STEPS = 72;
+/** How far from its best place a tap may be moved to clear its neighbours: a quarter of a turn. */
+const REACH = STAGGER_STEPS / 4;
+/** Turns over which the row of finish holes reaches back from the finish, and the angle that it needs. */
+const FINISH_ROW_TURNS = 3;
+const FINISH_ROW_DEGREES = 15;
+
+/** Angle between two places on the winding, 0..180 degrees. */
+export function degreesBetween(a: number, b: number): number {
+  const fraction = Math.abs(a - b) % 1;
+  return 360 * Math.min(fraction, 1 - fraction);
+}
+
+function clears(turn: number, others: readonly number[], wholeTurns: number, method: TapMethod): boolean {
+  for (const other of others) {
+    if (Math.abs(turn - other) < method.turnsApart - 1e-9 && degreesBetween(turn, other) < method.degreesApart - 1e-9)
+      return false;
+  }
+  // The start hole is a neighbour too: within a turn of it nothing can be tied off at the same angle.
+  if (turn < 1 && degreesBetween(turn, 0) < method.degreesApart) return false;
+  const row = method.holes > 0 ? FINISH_ROW_TURNS + method.turnsApart : method.turnsApart;
+  const needed = method.holes > 0 ? method.degreesApart + FINISH_ROW_DEGREES : method.degreesApart;
+  return wholeTurns - turn >= row - 1e-9 || degreesBetween(turn, wholeTurns) >= needed - 1e-9;
+}
+
+export interface Placing {
+  readonly layout: TapLayout;
+  readonly method: TapMethod;
+  /** Turns of the whole coil. */
+  readonly turns: number;
+  /** The first tap may not lie above its target: it has to reach the upper edge of a band. */
+  readonly firstNotAbove: boolean;
+}
+
+/**
+ * Turns of the taps below the whole coil for these target inductances (lowest first, the whole coil's not among them),
+ * or the number of the first tap that finds no place.
+ */
+export function placeTaps(
+  coil: Coil,
+  targetsUh: readonly number[],
+  placing: Placing,
+): { turns: number[] } | { noPlaceFor: number } {
+  const step = placing.layout === 'in line' ? 1 : 1 / STAGGER_STEPS;
+  const reach = placing.layout === 'in line' ? 0 : REACH;
+  const placed: number[] = [];
+  for (const [index, target] of targetsUh.entries()) {
+    const ideal = coil.turnFor(target);
+    const under = Math.floor(ideal / step + 1e-9);
+    const below = under * step;
+    const above = below + step;
+    const nearer =
+      below > 0 && target - coil.inductanceUh(below) <= coil.inductanceUh(Math.min(above, coil.turns)) - target;
+    const base = index === 0 && placing.firstNotAbove ? under : nearer ? under : under + 1;
+    let found: number | null = null;
+    for (let k = 0; k <= 2 * reach && found === null; k++) {
+      const offset = k % 2 === 0 ? -k / 2 : (k + 1) / 2;
+      if (index === 0 && placing.firstNotAbove && offset > 0) continue;
+      // Steps are counted in whole numbers so that a place is the same number whichever way it was reached.
+      const turn = (base + offset) * step;
+      const previous = placed[index - 1] ?? 0;
+      if (turn <= previous + 1e-9 || turn >= placing.turns - 1e-9 || turn < Math.min(0.5, placing.turns)) continue;
+      if (clears(turn, placed, placing.turns, placing.method)) found = turn;
+    }
+    if (found === null) return { noPlaceFor: index + 1 };
+    placed.push(found);
+  }
+  return { turns: placed };
+}

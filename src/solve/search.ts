@@ -1,0 +1,141 @@
+/**
+ * The search: every candidate is estimated, those near the best are designed in full, the best design wins.
+ *
+ * The estimate errs by a few tenths of a percent in turns and by a few percent in loss (only three positions are looked
+ * at), so pruning keeps a margin: designs go on, in the order of the estimate, until the estimate is worse than the best
+ * design by more than MARGIN, or DESIGNS are done. On small spaces this finds what designing every candidate finds.
+ */
+import type { Job } from '../job/job.ts';
+import { selfCapacitance } from '../physics/medhurst.ts';
+import { type Candidate, candidatesOf, diametersFor } from './candidates.ts';
+import { type Demand, demandOf } from './demand.ts';
+import { type Breach, type Design, designOf, variantsOf } from './design.ts';
+import { type Estimate, estimateOf, type Size, sizeOf } from './estimate.ts';
+import { ALL_ASPECTS, type Aspect, aspectOf } from './prefer.ts';
+
+/** How much worse than the best design an estimate may be and still be worked out. */
+const MARGIN = 0.08;
+const DESIGNS = 48;
+/** Designs looked at for each aspect in which another coil may be better ... */
+const OTHERS = 3;
+/** ... unless they lose more than so many times what the chosen one loses. */
+const TOO_LOSSY = 2.5;
+/** With fewer other designs than this, other ways to tap the chosen coil are worked out too. */
+const FEW = 12;
+
+export interface Found {
+  readonly demand: Demand;
+  readonly chosen: Design;
+  /** Every other design that was worked out and fits. */
+  readonly others: readonly Design[];
+  /** Candidates looked at, and those of them that fit as far as the estimate tells. */
+  readonly tried: number;
+  readonly feasible: number;
+}
+
+export interface NotFound {
+  readonly demand: Demand;
+  readonly tried: number;
+  /** The limits broken by those that came nearest, and the shortest former that was seen. */
+  readonly breaches: readonly Breach[];
+}
+
+/** The demand, with the narrowest positions that any coil of the job may have. */
+export function demandFor(job: Job): Demand {
+  const widest = Math.max(...diametersFor(job), 10);
+  return demandOf(job, selfCapacitance(widest / 1e3, widest / 1e3) * 1e12);
+}
+
+/** Longest former that both the job and the printer allow, mm. */
+export function longestMm(job: Job): number {
+  return job.former.kind === 'printed' ? Math.min(job.former.longestMm, job.printer.heightMm) : job.former.longestMm;
+}
+
+/** As far as the estimate tells; a margin of 3 % and 2 mm keeps what the design may still bring in. */
+function mayFit(size: Size, job: Job, demand: Demand): boolean {
+  return size.formerLengthMm <= longestMm(job) * 1.03 + 2 && size.turns >= demand.taps * 0.5;
+}
+
+/** Estimates of all candidates that may fit the job's length. */
+export function hopefulOf(job: Job, demand: Demand, candidates: readonly Candidate[]): Estimate[] {
+  const list: Estimate[] = [];
+  for (const candidate of candidates) {
+    const size = sizeOf(job, demand, candidate);
+    if (size === null || !mayFit(size, job, demand)) continue;
+    const one = estimateOf(job, demand, size);
+    if (one.firstTapTurns > 0.45) list.push(one);
+  }
+  return list;
+}
+
+export function search(job: Job): Found | NotFound {
+  const demand = demandFor(job);
+  const candidates = candidatesOf(job);
+  const hopeful = hopefulOf(job, demand, candidates);
+  const aspect = aspectOf(job.prefer);
+  const outcomes = new Map<Candidate, Design | null>();
+  const breaches: Breach[] = [];
+  const work = (candidate: Candidate): Design | null => {
+    const known = outcomes.get(candidate);
+    if (known !== undefined) return known;
+    const outcome = designOf(job, demand, candidate);
+    if (!outcome.ok) breaches.push(...outcome.breaches);
+    const design = outcome.ok ? outcome.design : null;
+    outcomes.set(candidate, design);
+    return design;
+  };
+  let chosen = bestOf(hopeful, aspect, work);
+  if (chosen === null) return { demand, tried: candidates.length, breaches };
+  const loss = chosen.metrics.lossFactor;
+  const narrow = hopeful.length < 4 * DESIGNS;
+  const sensible = narrow ? hopeful : hopeful.filter((one) => one.lossFactor <= TOO_LOSSY * loss);
+  for (const other of ALL_ASPECTS) for (const one of bestByWire(sensible, other, OTHERS)) work(one.candidate);
+  const designs = [...outcomes.values()].filter((design) => design !== null);
+  for (const design of designs) if (isBetter(design, chosen, aspect)) chosen = design;
+  const others = designs.filter((design) => design !== chosen);
+  if (others.length < FEW) others.push(...variantsOf(job, demand, chosen));
+  return { demand, chosen, others, tried: candidates.length, feasible: hopeful.length };
+}
+
+/** Better in the aspect; equal within 1e-9 the one with less loss. */
+export function isBetter(a: Design, b: Design, aspect: Aspect): boolean {
+  const [x, y] = [aspect.of(a.metrics), aspect.of(b.metrics)];
+  if (Math.abs(x - y) > 1e-9 * Math.abs(y)) return x < y;
+  return a.metrics.lossFactor < b.metrics.lossFactor;
+}
+
+/** The `count` best in an aspect, no two of the same wire and kind of pitch. */
+function bestByWire(list: readonly Estimate[], aspect: Aspect, count: number): Estimate[] {
+  const best = new Map<string, { one: Estimate; value: number }>();
+  for (const one of list) {
+    const name = one.candidate.family;
+    const value = aspect.guess(one);
+    const known = best.get(name);
+    if (known === undefined || value < known.value) best.set(name, { one, value });
+  }
+  const sorted = [...best.values()].sort((a, b) => a.value - b.value);
+  return sorted.slice(0, count).map(({ one }) => one);
+}
+
+function bestOf(
+  hopeful: readonly Estimate[],
+  aspect: Aspect,
+  work: (candidate: Candidate) => Design | null,
+): Design | null {
+  const sorted = hopeful.map((one) => ({ one, guess: aspect.guess(one) })).sort((a, b) => a.guess - b.guess);
+  let best: Design | null = null;
+  let bestGuess = 0;
+  let done = 0;
+  for (const { one, guess } of sorted) {
+    if (best !== null && (guess > bestGuess * (1 + MARGIN) || done >= DESIGNS)) break;
+    const design = work(one.candidate);
+    done++;
+    if (design !== null && (best === null || isBetter(design, best, aspect))) {
+      best = design;
+      bestGuess = guess;
+    }
+    // A space in which nothing fits is left to the refusal, which looks for the nearest change.
+    if (best === null && done >= 4 * DESIGNS) break;
+  }
+  return best;
+}

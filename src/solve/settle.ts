@@ -1,0 +1,158 @@
+/**
+ * Turns, tap places, diameter and pitch of a candidate, settled together: taps push the turns after them aside, which
+ * changes the inductance, which moves the taps. A few rounds bring it to rest.
+ *
+ * What is free takes up the last fraction so that the whole coil meets its inductance: the diameter inside the range of
+ * the job, or the pitch of a groove (by a tenth of a layer at most, so that it still prints as whole layers), or the
+ * angle of the finish hole. A bought tube wound in one line leaves nothing free.
+ */
+import { Coil } from '../coil/coil.ts';
+import type { Gap } from '../coil/layout.ts';
+import type { Job } from '../job/job.ts';
+import type { Candidate } from './candidates.ts';
+import type { CoilView, Demand } from './demand.ts';
+import { meanDiameterMm, turnsFor } from './estimate.ts';
+import { placeTaps, STAGGER_STEPS } from './place-taps.ts';
+import type { TapLayout, TapMethod } from './tap-methods.ts';
+
+/** `more` and `fewer`: the diameter or pitch follows the whole turns above or below instead of the nearest. */
+export type Freedom = 'nearest' | 'more' | 'fewer' | 'finish angle' | 'none';
+
+export interface Settled {
+  readonly outsideMm: number;
+  readonly pitchMm: number;
+  readonly turns: number;
+  /** Turns of the taps below the whole coil. */
+  readonly taps: readonly number[];
+}
+
+export interface Setting {
+  readonly job: Job;
+  readonly demand: Demand;
+  readonly candidate: Candidate;
+  readonly method: TapMethod;
+  readonly layout: TapLayout;
+  readonly startMm: number;
+}
+
+/** Largest change of a groove's pitch, as a part of a layer, that still prints as whole layers. */
+const PITCH_PLAY_LAYERS = 0.1;
+const ROUNDS = 14;
+/** The finish hole of a printed former stands at whole degrees. */
+const FINISH_STEPS = 360;
+
+const roundTo = (value: number, steps: number) => Math.round(value * steps) / steps;
+
+/** What may take up the fraction, the best first. */
+export function freedomsOf(job: Job, candidate: Candidate): readonly Freedom[] {
+  if (job.former.kind !== 'printed') return ['none'];
+  const groove = candidate.pitch.kind === 'groove' && typeof job.winding.pitch !== 'number';
+  return hasDiameterRange(job) || groove ? ['nearest', 'more', 'fewer', 'finish angle'] : ['finish angle'];
+}
+
+function hasDiameterRange(job: Job): boolean {
+  const wanted = job.former.diametersMm;
+  return 'lowMm' in wanted && wanted.highMm > wanted.lowMm;
+}
+
+export function coilOf(setting: Setting, state: Settled, turns: number): Coil {
+  const { candidate, method } = setting;
+  const gaps: Gap[] = method.gapMm > 0 ? state.taps.map((turn) => ({ turn, gapMm: method.gapMm })) : [];
+  return new Coil({
+    wire: candidate.wire,
+    meanDiameterMm: meanDiameterMm({ ...candidate, formerMm: state.outsideMm }),
+    pitchMm: state.pitchMm,
+    turns,
+    gaps,
+    startMm: setting.startMm,
+  });
+}
+
+function within(setting: Setting, state: Settled): boolean {
+  const wanted = setting.job.former.diametersMm;
+  const play = PITCH_PLAY_LAYERS * setting.job.printer.layerMm;
+  if (Math.abs(state.pitchMm - setting.candidate.pitch.mm) > play) return false;
+  if ('lowMm' in wanted && wanted.highMm > wanted.lowMm)
+    return state.outsideMm >= wanted.lowMm - 1e-9 && state.outsideMm <= wanted.highMm + 1e-9;
+  return true;
+}
+
+/** The view of a coil that the demand asks; sections beyond the whole coil count as the whole coil. */
+function viewOf(coil: Coil, wholeUh: number): CoilView {
+  return {
+    selfPf: (uh) => coil.selfPf(Math.min(coil.turnFor(Math.min(uh, wholeUh)), coil.turns)),
+    at: (turn) => coil.inductanceUh(turn),
+    turnFor: (uh) => coil.turnFor(uh),
+  };
+}
+
+function wholeTarget(demand: Demand, coil: Coil): number {
+  let wholeUh = demand.wholeUh(coil.selfPf(coil.turns));
+  if (demand.kind === 'band')
+    for (let k = 0; k < 2; k++) wholeUh = demand.wholeUh(coil.selfPf(Math.min(coil.turnFor(wholeUh), coil.turns)));
+  return wholeUh;
+}
+
+function wholeTurns(setting: Setting, freedom: Freedom, exact: number): number {
+  if (freedom === 'finish angle') return Math.max(1 / FINISH_STEPS, roundTo(exact, FINISH_STEPS));
+  if (freedom === 'nearest') return Math.max(1, Math.round(exact));
+  if (freedom === 'more') return Math.ceil(exact);
+  if (freedom === 'fewer') return Math.max(1, Math.floor(exact));
+  const steps = setting.layout === 'in line' ? 1 : STAGGER_STEPS;
+  // On a tube that leaves nothing free a band is reached at its lower edge, so rather a little too much.
+  if (setting.demand.kind === 'band') return Math.ceil(exact * steps - 1e-6) / steps;
+  return Math.max(1 / steps, roundTo(exact, steps));
+}
+
+/**
+ * The coil at rest; or the first tap that finds no place; or `no room` when this freedom cannot take up the fraction
+ * inside what the job permits.
+ */
+export function settle(setting: Setting, freedom: Freedom): Settled | { noPlaceFor: number } | 'no room' {
+  const { demand, candidate, method, layout } = setting;
+  const mean = meanDiameterMm(candidate);
+  const gapsMm = method.gapMm * (demand.taps - 1);
+  const guess = turnsFor(demand.wholeUh(mean * 0.05), mean, candidate.pitch.mm, candidate.wire.bareMm, gapsMm);
+  let length = Math.ceil(guess * 1.05) + 5;
+  let state: Settled = { outsideMm: candidate.formerMm, pitchMm: candidate.pitch.mm, turns: 0, taps: [] };
+  let fixedTurns: number | null = null;
+  for (let round = 0; round < ROUNDS; round++) {
+    const coil = coilOf(setting, state, length);
+    const wholeUh = wholeTarget(demand, coil);
+    const exact = coil.turnFor(wholeUh);
+    if (exact > length - 2) {
+      length = Math.ceil(exact * 1.05) + 5;
+      continue;
+    }
+    // Whole turns are chosen once, or a diameter that follows them could chase them for ever.
+    const turns: number = fixedTurns ?? wholeTurns(setting, freedom, exact);
+    const next = { ...state, turns };
+    if (freedom !== 'finish angle' && freedom !== 'none') {
+      fixedTurns = turns;
+      const ratio = wholeUh / coil.inductanceUh(turns);
+      // L goes with about D^1.65 and p^-0.6.
+      if (hasDiameterRange(setting.job)) next.outsideMm = roundTo(state.outsideMm * ratio ** (1 / 1.65), 100);
+      else next.pitchMm = roundTo(state.pitchMm * ratio ** (-1 / 0.6), 1e4);
+      if (!within(setting, next)) return 'no room';
+    }
+    const targets = demand.targetsUh(viewOf(coil, wholeUh)).slice(0, -1);
+    const placing = { layout, method, turns, firstNotAbove: demand.kind === 'band' };
+    const placed = placeTaps(coil, targets, placing);
+    if ('noPlaceFor' in placed) return placed;
+    next.taps = placed.turns;
+    const previous: Settled = state;
+    const atRest =
+      next.turns === previous.turns &&
+      next.outsideMm === previous.outsideMm &&
+      next.pitchMm === previous.pitchMm &&
+      next.taps.every((turn, i) => turn === previous.taps[i]);
+    if (atRest) break;
+    state = next;
+  }
+  return state;
+}
+
+/** Targets of the final coil, the whole coil's last. */
+export function targetsOf(setting: Setting, coil: Coil): number[] {
+  return setting.demand.targetsUh(viewOf(coil, coil.inductanceUh(coil.turns)));
+}

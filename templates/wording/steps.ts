@@ -1,0 +1,86 @@
+/** The steps of winding in words, and how each tap method is done. Common practice, from memory. */
+
+export type MethodName = 'twisted loop' | 'lifted turn' | 'cut pair' | 'lug' | 'drawn in';
+
+const DO_TAP: Record<MethodName, string> = {
+  'twisted loop': 'pull out a loop, twist it tight to the root',
+  'lifted turn': 'lift this turn over a strip',
+  'cut pair': 'lead the wire in at a, cut, lead the next end out at b',
+  lug: 'lay the lug under this turn',
+  'drawn in': 'draw a loop in through the hole and twist it inside',
+};
+
+export const HOW: Record<MethodName, (loopMm: number) => string[]> = {
+  'twisted loop': (mm) => [
+    `Stop at the tap's turn and angle and pull out a loop of ${mm} mm of wire.`,
+    'Hold the root against the former and twist the loop tight down to the root.',
+    'Go on winding; the next turn lies against the root.',
+    'When the coil is done, bare the end of each loop, tin it, and solder the twist at its root.',
+  ],
+  'lifted turn': () => [
+    'Slip a strip of card or plastic, 5 mm wide and 1 mm thick, under the turn at the tap’s angle.',
+    'Go on winding with the strip in place; neither neighbour is moved.',
+    'When the coil is done, bare the crown of the lifted turn and tin it.',
+    'Solder the lead to the crown; leave the strip in.',
+  ],
+  'cut pair': (mm) => [
+    `Lead the wire in through hole a, leave ${mm / 2} mm inside and cut.`,
+    `Lead the new end out through hole b with ${mm / 2} mm inside and go on winding, as tight as before.`,
+    'Bare both ends, tin every strand, twist the pair and solder it.',
+  ],
+  lug: () => [
+    'Lay a lug of 0.5 mm sheet, 4 mm wide, under the turn at the tap’s angle.',
+    'Go on winding; the next turn lies against the lug’s edge.',
+    'When the coil is done, bare the wire on the lug, solder it, and lead off from the eye.',
+  ],
+  'drawn in': (mm) => [
+    `Stop at the tap's hole and draw a loop of ${mm} mm of wire in through it.`,
+    'Twist the loop tight inside the former, up to the wall.',
+    'Go on winding in the next turn.',
+    'When the coil is done, bare the end of each loop and tin it.',
+  ],
+};
+
+export const STEP = {
+  measure: (mm: string, effect: string) =>
+    `Measure the former across at three places: ${mm} mm outside. Each 0.1 mm more is ${effect} % more inductance.`,
+  drill: (what: string) => `Wrap the template round the tube, printed side out, and drill ${what}. Take the burrs off.`,
+  mark: 'Wrap the template and mark the angle and place of every tap on the former.',
+  set: (metres: string, low: string, high: string) =>
+    `Have ${metres} m of wire on the spool. Set the drag to ${low} to ${high} N.`,
+  spacer: (name: string) => `Have the spacer ready: ${name}, wound along beside the wire from start to finish.`,
+  start: (mm: number) =>
+    `Lead the end in through A and out through S; leave ${mm} mm free outside. Knot or wedge it inside.`,
+  direction: {
+    right:
+      'Wind right-hand: foot down, coil in front of you, the turns climb to the right (counterclockwise seen from above).',
+    left: 'Wind left-hand: foot down, coil in front of you, the turns climb to the left (clockwise seen from above).',
+  },
+  /** `to` says where to stop, as a turn and an angle. */
+  wind: (turns: string, to: string) => `Wind ${turns} turns, to ${to}`,
+  turn: (turn: number) => `turn ${turn}`,
+  turnAndAngle: (turn: number, angle: string) => `turn ${turn} and on to the ${angle}° line`,
+  tap: (tap: number, method: MethodName) => `tap ${tap}: ${DO_TAP[method]}.`,
+  check: (mm: string) =>
+    `Stop and measure over 20 turns: ${mm} mm edge to edge. Press the turns together or ease them until it is.`,
+  finish: (mm: number) =>
+    `Hold the tension. Lead the end in through F and out through F+1; leave ${mm} mm free. Pull tight.`,
+  afterMeasure:
+    'Measure the coil by sheet “to check by” before the wire is cut short; trim at the finish row if it asks for it.',
+  takeSpacer: 'Unwind the spacer, or leave it in; nothing here changes if it stays.',
+  taps: 'Bare, tin and solder the taps.',
+  seal: {
+    textile:
+      'Dry the coil in a warm, dry place for a day; dope it sparingly with clear varnish, let it cure a day, and measure again.',
+    other:
+      'Fix the end turns with a touch of varnish at three places, not over the whole winding; let it cure a day, and measure again.',
+  },
+} as const;
+
+export const CORRECTION = {
+  turnOff: 'one turn off at the finish (into F-1)',
+  turnOn: 'one turn on at the finish (into F+1)',
+  spreadFinish: 'last five turns spread, one wire apart each',
+  spreadStart: 'first five turns spread, one wire apart each',
+  thicker: 'former 0.1 mm larger (next coil)',
+} as const;
