@@ -1,0 +1,83 @@
+/**
+ * The coil seen from above, the start hole in front (at the bottom), angles counterclockwise: where round the former
+ * each tap stands. Taps at one angle share a line. Millimetres on paper, the origin on the axis.
+ */
+import type { CoilRecord } from '../record/schema.ts';
+import type { Drawing, Shape } from './drawing.ts';
+import { arrowHead, circle, label, line, polyline, SMALL_MM } from './shapes.ts';
+import { spread } from './spread.ts';
+
+export interface EndView extends Drawing {
+  readonly radiusMm: number;
+}
+
+/** True when the taps do not all stand over the start hole, give or take a degree. */
+export function isStaggered(record: CoilRecord): boolean {
+  return record.windings[0]!.taps.some((tap) => Math.min(tap.angleDeg, 360 - tap.angleDeg) > 1);
+}
+
+interface Group {
+  readonly angle: number;
+  readonly names: string[];
+}
+
+function groups(record: CoilRecord): Group[] {
+  const { taps } = record.windings[0]!;
+  const marks = [
+    { angle: 0, name: 'S' },
+    ...taps.map((tap) => ({ angle: tap.angleDeg, name: tap.tap === taps.length ? `F${tap.tap}` : `${tap.tap}` })),
+  ].sort((a, b) => a.angle - b.angle);
+  const found: Group[] = [];
+  for (const mark of marks) {
+    const last = found[found.length - 1];
+    if (last && mark.angle - last.angle < 1) last.names.push(mark.name);
+    else found.push({ angle: mark.angle, names: [mark.name] });
+  }
+  return found;
+}
+
+/** Lines of at most `most` names. */
+function rows(names: readonly string[], most: number): string[] {
+  const lines: string[] = [];
+  for (let i = 0; i < names.length; i += most) lines.push(names.slice(i, i + most).join(' '));
+  return lines;
+}
+
+export function endView(record: CoilRecord, rimMm: number): EndView {
+  const found = groups(record);
+  // The circle of labels is cut where the gap between neighbours is widest, then they are moved apart along it.
+  const gaps = found.map((group, i) => (found[(i + 1) % found.length]!.angle - group.angle + 360) % 360 || 360);
+  const widest = gaps.indexOf(Math.max(...gaps));
+  const order = [...found.slice(widest + 1), ...found.slice(0, widest + 1)];
+  const first = order[0]!.angle;
+  const wanted = order.map((group) => (group.angle - first + 360) % 360);
+  const step = Math.min(22, 360 / order.length);
+  const centre = gaps[widest]! / 2;
+  const places = spread(wanted, step, -centre + step / 2, 360 - centre - step / 2);
+  const outer = Math.max(rimMm + 7, 3.6 / (2 * Math.sin((step * Math.PI) / 360)));
+  const shapes: Shape[] = [circle(0, 0, rimMm, 'outline'), circle(0, 0, rimMm * 0.88, 'hair')];
+  shapes.push(line(-2, 0, 2, 0, 'hair'), line(0, -2, 0, 2, 'hair'));
+  const at = (angle: number, r: number) => {
+    const a = (angle * Math.PI) / 180;
+    return [r * Math.sin(a), -r * Math.cos(a)] as const;
+  };
+  order.forEach((group, i) => {
+    const place = places[i]! + first;
+    const [x1, y1] = at(group.angle, rimMm);
+    const [x2, y2] = at(place, outer - 3);
+    shapes.push(circle(x1, y1, 0.75, 'thin', 0), line(x1, y1, x2, y2, 'hair'));
+    const [x, y] = at(place, outer);
+    const lines = rows(group.names, 4);
+    const sideways = Math.sin((place * Math.PI) / 180);
+    const align = lines[0]!.length <= 3 ? 'centre' : sideways > 0.3 ? 'left' : sideways < -0.3 ? 'right' : 'centre';
+    const drop = y < 0 ? 0 : (lines.length - 1) * 3.3;
+    lines.forEach((text, k) => {
+      shapes.push(label(x, y + drop - k * 3.3, text, { anchor: 'middle', align, bold: true }));
+    });
+  });
+  // The sense of angles, inside the rim.
+  const sense = Array.from({ length: 13 }, (_, i) => at(20 + i * 5, rimMm * 0.6));
+  const [tx, ty] = sense[12]!;
+  shapes.push(polyline(sense, 'thin'), arrowHead(tx, ty, 80, 2.2));
+  return { shapes, radiusMm: outer + SMALL_MM };
+}

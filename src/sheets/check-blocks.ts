@@ -1,0 +1,168 @@
+/** The blocks of the page to check by. */
+import { CHECKS } from '../../templates/wording/winding-sheet.ts';
+import type { Measure } from '../drawing/boxes.ts';
+import type { Shape } from '../drawing/drawing.ts';
+import { label, line, SMALL_MM } from '../drawing/shapes.ts';
+import type { CoilRecord } from '../record/schema.ts';
+import { type Block, heading, list, paragraph, stack } from './block.ts';
+import { type Column, shares, table } from './table.ts';
+import { figures, fixed, short, signed } from './text.ts';
+
+function columnsOf(widthMm: number, parts: readonly (readonly [string, number, Partial<Column>])[]): Column[] {
+  const widths = shares(
+    widthMm,
+    parts.map(([, part]) => part),
+  );
+  return parts.map(([head, , rest], i) => ({ head, widthMm: widths[i]!, ...rest }));
+}
+
+const RIGHT = { align: 'right' } as const;
+const CENTRE = { align: 'centre' } as const;
+const BLANK = { kind: 'blank', align: 'centre' } as const;
+const TICK = { kind: 'tick', align: 'centre' } as const;
+
+export function checks(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block {
+  const columns = columnsOf(widthMm, [
+    [CHECKS.what, 74, {}],
+    [CHECKS.low, 18, RIGHT],
+    [CHECKS.nominal, 18, { ...RIGHT, bold: true }],
+    [CHECKS.high, 18, RIGHT],
+    [CHECKS.unit, 14, {}],
+    [CHECKS.reading, 28, BLANK],
+    [CHECKS.good, 16, TICK],
+  ]);
+  const rows = record.checks.map((check) => [
+    check.what,
+    fixed(check.low, check.digits),
+    fixed(check.nominal, check.digits),
+    fixed(check.high, check.digits),
+    check.unit,
+  ]);
+  return stack([heading(CHECKS.heading, widthMm, measure), table(columns, rows, measure, { rowMm })], 0);
+}
+
+export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block {
+  const { taps } = record.windings[0]!;
+  const ranged = taps.some((tap) => tap.range !== null);
+  const columns = columnsOf(widthMm, [
+    ['tap', 10, { ...CENTRE, bold: true }],
+    [CHECKS.length, 18, RIGHT],
+    [CHECKS.reading, 19, BLANK],
+    [CHECKS.inductance, 30, CENTRE],
+    [CHECKS.reading, 20, BLANK],
+    [CHECKS.resistance, 32, CENTRE],
+    [CHECKS.reading, 20, BLANK],
+    ...(ranged ? ([[CHECKS.range, 26, CENTRE]] as const) : []),
+    [CHECKS.good, 13, TICK],
+  ]);
+  const rows = taps.map((tap) => {
+    const cells = [
+      `${tap.tap}`,
+      fixed(tap.woundLengthMm, 2),
+      '',
+      CHECKS.between(figures(tap.inductanceLowUh), figures(tap.inductanceHighUh)),
+      '',
+      CHECKS.between(figures(tap.resistanceLowOhm), figures(tap.resistanceHighOhm)),
+      '',
+    ];
+    if (ranged) cells.push(tap.range ? CHECKS.between(fixed(tap.range.lowKhz, 0), fixed(tap.range.highKhz, 0)) : '');
+    return cells;
+  });
+  return stack([heading(CHECKS.taps, widthMm, measure), table(columns, rows, measure, { rowMm })], 0);
+}
+
+export function corrections(record: CoilRecord, widthMm: number, measure: Measure): Block {
+  const columns = columnsOf(widthMm, [
+    [CHECKS.doing, 62, {}],
+    [CHECKS.whole, 18, RIGHT],
+    [CHECKS.first, 18, RIGHT],
+  ]);
+  const rows = record.corrections.map((each) => [
+    each.doing,
+    signed(each.wholePercent, 2),
+    signed(each.firstTapPercent, 2),
+  ]);
+  const how = paragraph(CHECKS.correctionsHow, widthMm, measure, { sizeMm: SMALL_MM });
+  return stack([heading(CHECKS.corrections, widthMm, measure), table(columns, rows, measure), how], 0.6);
+}
+
+export function formerSizes(record: CoilRecord, widthMm: number, measure: Measure): Block {
+  const { former } = record;
+  const rows: [string, string][] = [
+    [CHECKS.outside, fixed(former.outsideDiameterMm, 2)],
+    [CHECKS.length2, fixed(former.lengthMm, 2)],
+    [CHECKS.bore, fixed(former.boreDiameterMm, 2)],
+    [CHECKS.wall, fixed(former.wallMm, 2)],
+  ];
+  if (former.flange) rows.push([CHECKS.rim, fixed(former.flange.diameterMm, 2)]);
+  if (former.groove) rows.push([CHECKS.groove, fixed(former.groove.depthMm, 2)]);
+  const columns = columnsOf(widthMm, [
+    [CHECKS.part, 36, {}],
+    [CHECKS.mm, 18, { ...RIGHT, bold: true }],
+    [CHECKS.reading, 24, BLANK],
+  ]);
+  const what = paragraph(`${former.material}. ${former.stiffness}.`.replace('..', '.'), widthMm, measure, {
+    sizeMm: SMALL_MM,
+  });
+  return stack([heading(CHECKS.former, widthMm, measure), table(columns, rows, measure), what], 0.6);
+}
+
+export function signature(widthMm: number, measure: Measure): Block {
+  const heightMm = 9;
+  const widths = shares(widthMm, [48, 30, 48, 30, 30]);
+  const shapes: Shape[] = [];
+  let x = 0;
+  CHECKS.signature.forEach((words, i) => {
+    shapes.push(label(x, -heightMm + 1, words));
+    shapes.push(line(x + measure.width(words, SMALL_MM) + 1.5, -heightMm + 0.6, x + widths[i]! - 3, -heightMm + 0.6));
+    x += widths[i]!;
+  });
+  return { widthMm, heightMm, shapes };
+}
+
+export function reasons(record: CoilRecord, widthMm: number, measure: Measure): Block {
+  const { chosen } = record;
+  const first = CHECKS.chosen(chosen.prefer, `${chosen.tried}`, `${chosen.feasible}`);
+  const text = paragraph(`${first} ${chosen.why}`, widthMm, measure);
+  return stack([heading(CHECKS.why, widthMm, measure), text], 0);
+}
+
+export function alternatives(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
+  if (record.alternatives.length === 0) return null;
+  const columns = columnsOf(widthMm, [
+    [CHECKS.wire, 36, {}],
+    [CHECKS.formerMm, 15, RIGHT],
+    [CHECKS.pitch, 24, RIGHT],
+    [CHECKS.turns, 15, RIGHT],
+    [CHECKS.windingMm, 15, RIGHT],
+    [CHECKS.wireM, 14, RIGHT],
+    [CHECKS.mass, 14, RIGHT],
+    [CHECKS.worst, 15, RIGHT],
+    [CHECKS.loss, 16, RIGHT],
+    [CHECKS.better, 34, {}],
+  ]);
+  const rows = record.alternatives.map((each) => [
+    each.wire,
+    short(each.formerMm, 2),
+    `${short(each.pitchMm, 3)} ${each.pitchKind}`,
+    short(each.turns, 2),
+    fixed(each.lengthMm, 1),
+    fixed(each.wireM, 2),
+    fixed(each.massG, 1),
+    fixed(each.worstTapPercent, 2),
+    fixed(each.lossFactor, 5),
+    each.betterIn.join(', '),
+  ]);
+  const body = table(columns, rows, measure, { sizeMm: SMALL_MM });
+  return stack([heading(CHECKS.alternatives, widthMm, measure), body], 0);
+}
+
+export function warnings(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
+  if (record.warnings.length === 0) return null;
+  const items = list(
+    record.warnings.map((each) => ({ mark: '•', text: each.text })),
+    widthMm,
+    measure,
+  );
+  return stack([heading(CHECKS.warnings, widthMm, measure), ...items], 0.5);
+}

@@ -1,0 +1,182 @@
+/**
+ * Pages in millimetres to PDF bytes: the one place that knows points. A page is a drawing whose origin is the lower
+ * left corner of the paper, Y up. Written with fixed dates, so that the same pages give the same bytes.
+ */
+import PDFDocument from 'pdfkit';
+import type { Measure } from '../drawing/boxes.ts';
+import type { Drawing, Shape, Stroke, Text, Weight } from '../drawing/drawing.ts';
+import { CAP_SHARE } from '../drawing/shapes.ts';
+import { fontFiles } from './fonts.ts';
+
+export const PAPER_MM = { A4: [210, 297], Letter: [215.9, 279.4] } as const;
+export type PaperName = keyof typeof PAPER_MM;
+
+export interface Page extends Drawing {
+  readonly widthMm: number;
+  readonly heightMm: number;
+}
+
+export interface DocumentInfo {
+  readonly title: string;
+  readonly subject: string;
+}
+
+const POINTS = 72 / 25.4;
+const WEIGHT_MM: Record<Weight, number> = { outline: 0.5, thin: 0.25, hair: 0.12 };
+const DASH_MM = { dashed: [1.6, 1], centre: [5, 1, 1, 1] };
+
+/** What is used of a glyph and of a face of pdfkit; its type declarations leave them out. */
+interface Glyph {
+  readonly id: number;
+  readonly advanceWidth: number;
+  readonly codePoints: readonly number[];
+}
+interface Face {
+  readonly scale: number;
+  readonly font: { glyphForCodePoint(code: number): Glyph };
+  layoutRun(text: string): unknown;
+}
+
+/**
+ * Sets a face without kerning or ligatures. A width is then the sum of its advances, so that what was measured is what
+ * is printed, figures stand in columns, and no time goes into shaping.
+ */
+function setPlainly(face: Face): void {
+  const { scale } = face;
+  face.layoutRun = (text) => {
+    const glyphs = Array.from(text, (sign) => face.font.glyphForCodePoint(sign.codePointAt(0)!));
+    const positions = glyphs.map((glyph) => ({
+      xAdvance: glyph.advanceWidth * scale,
+      yAdvance: 0,
+      xOffset: 0,
+      yOffset: 0,
+      advanceWidth: glyph.advanceWidth * scale,
+    }));
+    const advanceWidth = positions.reduce((sum, position) => sum + position.advanceWidth, 0);
+    return { glyphs, positions, advanceWidth };
+  };
+}
+
+/** A document to lay out for and then to write, once. */
+export class Paper implements Measure {
+  readonly #document: PDFKit.PDFDocument;
+  readonly #chunks: Uint8Array[] = [];
+  readonly #ended: Promise<void>;
+  readonly #widths: [Map<string, number>, Map<string, number>] = [new Map(), new Map()];
+
+  /** The weight and dash that the page is set to. */
+  #pen = '';
+
+  constructor(info: DocumentInfo) {
+    const options = {
+      font: null,
+      autoFirstPage: false,
+      lang: 'en',
+      pdfVersion: '1.7',
+      info: {
+        Title: info.title,
+        Subject: info.subject,
+        Creator: 'coilwright',
+        Producer: 'coilwright',
+        CreationDate: new Date(Date.UTC(2000, 0, 1)),
+      },
+    };
+    this.#document = new PDFDocument(options as unknown as PDFKit.PDFDocumentOptions);
+    const catalogue = this.#document as unknown as {
+      _root: { data: { ViewerPreferences?: unknown } };
+      ref(data: object): unknown;
+    };
+    catalogue._root.data.ViewerPreferences = catalogue.ref({ PrintScaling: 'None', DisplayDocTitle: true });
+    const files = fontFiles();
+    for (const [name, file] of [
+      ['plain', files.plain],
+      ['bold', files.bold],
+    ] as const) {
+      this.#document.registerFont(name, file).font(name);
+      setPlainly((this.#document as unknown as { _font: Face })._font);
+    }
+    this.#document.on('data', (chunk: Uint8Array) => this.#chunks.push(chunk));
+    this.#ended = new Promise((resolve) => this.#document.on('end', resolve));
+  }
+
+  width(text: string, sizeMm: number, bold = false): number {
+    const known = this.#widths[bold ? 1 : 0];
+    let width = known.get(text);
+    if (width === undefined) {
+      this.#document.font(bold ? 'bold' : 'plain').fontSize(1000);
+      width = this.#document.widthOfString(text) / 1000;
+      known.set(text, width);
+    }
+    return width * sizeMm;
+  }
+
+  /** The bytes of a document of these pages. */
+  async write(pages: readonly Page[]): Promise<Uint8Array> {
+    for (const page of pages) {
+      this.#document.addPage({ size: [page.widthMm * POINTS, page.heightMm * POINTS], margin: 0 }).strokeColor('black');
+      this.#pen = '';
+      for (const shape of page.shapes) this.#draw(shape, page.heightMm);
+    }
+    this.#document.end();
+    await this.#ended;
+    return Buffer.concat(this.#chunks);
+  }
+
+  #draw(shape: Shape, height: number): void {
+    const x = (mm: number) => mm * POINTS;
+    const y = (mm: number) => (height - mm) * POINTS;
+    const to = this.#document;
+    switch (shape.shape) {
+      case 'text':
+        this.#write(shape, x(shape.x), y(shape.y));
+        return;
+      case 'line':
+        to.moveTo(x(shape.x1), y(shape.y1)).lineTo(x(shape.x2), y(shape.y2));
+        this.#ink(shape);
+        return;
+      case 'circle':
+        to.circle(x(shape.x), y(shape.y), shape.r * POINTS);
+        this.#ink(shape, shape.fill);
+        return;
+      default: {
+        shape.points.forEach(([px, py], i) => {
+          if (i === 0) to.moveTo(x(px), y(py));
+          else to.lineTo(x(px), y(py));
+        });
+        if (shape.closed) to.closePath();
+        this.#ink(shape, shape.fill);
+      }
+    }
+  }
+
+  #ink(stroke: Stroke, fill?: number): void {
+    const to = this.#document;
+    const dash = stroke.dash ?? 'solid';
+    const pen = `${stroke.weight} ${dash}`;
+    if (pen !== this.#pen) {
+      this.#pen = pen;
+      to.lineWidth(WEIGHT_MM[stroke.weight] * POINTS);
+      if (dash === 'solid') to.undash();
+      else to.dash(DASH_MM[dash].map((mm) => mm * POINTS) as unknown as number, {});
+    }
+    if (fill === undefined) to.stroke();
+    else {
+      const grey = Math.round(fill * 255);
+      to.fillAndStroke([grey, grey, grey], 'black');
+    }
+  }
+
+  #write(text: Text, x: number, y: number): void {
+    const to = this.#document;
+    const width = this.width(text.text, text.sizeMm, text.bold) * POINTS;
+    const left = text.align === 'right' ? width : text.align === 'centre' ? width / 2 : 0;
+    const drop = text.anchor === 'middle' ? (CAP_SHARE * text.sizeMm * POINTS) / 2 : 0;
+    to.font(text.bold ? 'bold' : 'plain')
+      .fontSize(text.sizeMm * POINTS)
+      .fillColor('black');
+    const turned = text.turnDeg !== undefined && text.turnDeg !== 0;
+    if (turned) to.save().rotate(-text.turnDeg!, { origin: [x, y] });
+    to.text(text.text, x - left, y + drop, { lineBreak: false, baseline: 'alphabetic' });
+    if (turned) to.restore();
+  }
+}

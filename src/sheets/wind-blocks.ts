@@ -1,0 +1,172 @@
+/** The blocks of the page to wind from. */
+import * as TAP_WORDS from '../../templates/wording/tap-method.ts';
+import { CAUTIONS, DRAWING, FACTS, STEPS, TAPS } from '../../templates/wording/winding-sheet.ts';
+import type { Measure } from '../drawing/boxes.ts';
+import type { Shape } from '../drawing/drawing.ts';
+import { elevation, elevationScale, scaleText } from '../drawing/elevation.ts';
+import { endView, isStaggered } from '../drawing/end-view.ts';
+import { BODY_MM, CAP_SHARE, label, line, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
+import { PANEL_MM, tapPicture } from '../drawing/tap-picture.ts';
+import type { CoilRecord } from '../record/schema.ts';
+import { type Block, beside, columns, heading, list, paragraph, stack, tickBox } from './block.ts';
+import { shares, table } from './table.ts';
+import { figures, fixed, short, signed } from './text.ts';
+
+/** Wire, winding, pitch, tension, what to have ready, the whole coil: one strip. */
+export function facts(record: CoilRecord, widthMm: number, measure: Measure): Block {
+  const winding = record.windings[0]!;
+  const { wire } = winding;
+  const pitchWords =
+    winding.pitchKind === 'close'
+      ? FACTS.close
+      : winding.pitchKind === 'groove'
+        ? FACTS.groove
+        : FACTS.spacer(winding.spacerName, short(winding.spacerMm, 3));
+  const cells: [string, string, string][] = [
+    [FACTS.wire, wire.name, FACTS.overall(short(wire.overallMm, 3))],
+    [FACTS.winding, FACTS.turns(short(winding.turns, 3)), FACTS.hand[record.frame.hand]],
+    [FACTS.pitch, `${short(winding.pitchMm, 4)} mm`, pitchWords],
+    [FACTS.tension, FACTS.newton(short(winding.tensionLowN, 1), short(winding.tensionHighN, 1)), FACTS.steady],
+    [
+      FACTS.cut,
+      `${fixed(winding.wireLengthM + winding.leadsM, 2)} m`,
+      FACTS.ends(short(winding.leadsM, 2), fixed(winding.wireMassG, 1)),
+    ],
+    [FACTS.coil, `${figures(winding.inductanceUh)} µH`, FACTS.low],
+  ];
+  const widths = shares(widthMm, [34, 30, 31, 29, 35, 27]);
+  const blocks = cells.map(([name, value, more], i) => {
+    const inner = widths[i]! - 3;
+    const parts = [
+      paragraph(name, inner, measure, { sizeMm: SMALL_MM }),
+      paragraph(value, inner, measure, { sizeMm: 3.4, bold: true }),
+      paragraph(more, inner, measure, { sizeMm: SMALL_MM }),
+    ];
+    return { ...stack(parts, 0.5), widthMm: widths[i]! };
+  });
+  const row = beside(blocks, 0);
+  const heightMm = row.heightMm + 2;
+  const shapes: Shape[] = [rectangle(0, -heightMm, widthMm, heightMm, 'thin')];
+  let x = 0;
+  for (const width of widths.slice(0, -1)) {
+    x += width;
+    shapes.push(line(x, 0, x, -heightMm, 'hair'));
+  }
+  shapes.push(...movedAll(row, 1.5, -1.2));
+  return { widthMm, heightMm, shapes };
+}
+
+/** The coil to scale, with what must be said about the frame. */
+export function coilDrawing(record: CoilRecord, widthMm: number, highMm: number, measure: Measure): Block {
+  const words = { ...DRAWING };
+  const scale = elevationScale(record, widthMm, highMm, words, measure);
+  const picture = elevation(record, scale, words, measure);
+  const head = heading(DRAWING.heading(scaleText(scale)), widthMm, measure);
+  const spare = Math.max(0, widthMm - picture.leftMm - picture.rightMm);
+  const drawn: Block = {
+    widthMm,
+    heightMm: picture.upMm + picture.downMm,
+    shapes: movedAll(picture, picture.leftMm + spare / 2, -picture.upMm),
+  };
+  const words8 = (text: string, bold = false) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM, bold });
+  const notes = [
+    words8(`${DRAWING.hand[record.frame.hand]} ${DRAWING.earthed[record.frame.earthedEnd]}`, true),
+    words8(`${DRAWING.seen} ${DRAWING.datumIs(record.frame.datum)}`),
+  ];
+  return stack([head, drawn, ...notes], 1);
+}
+
+export function tapTable(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block {
+  const { taps } = record.windings[0]!;
+  const widths = shares(widthMm, [8, 16, 14, 13, 13, 13, 13]);
+  const heads = [TAPS.tap, TAPS.turn, TAPS.position, TAPS.angle, TAPS.inductance, TAPS.deviation, TAPS.wire];
+  const rows = taps.map((tap) => [
+    `${tap.tap}`,
+    short(tap.turn, 3),
+    fixed(tap.positionMm, 2),
+    fixed(tap.angleDeg, 1),
+    figures(tap.inductanceUh),
+    signed(tap.deviationPercent, 2),
+    fixed(tap.wireFromStartM, 2),
+  ]);
+  const columnsOf = heads.map((head, i) => ({
+    head,
+    widthMm: widths[i]!,
+    align: i === 0 ? ('centre' as const) : ('right' as const),
+    bold: i < 2,
+  }));
+  return stack([heading(TAPS.heading, widthMm, measure), table(columnsOf, rows, measure, { rowMm })], 0);
+}
+
+/** Where round the former the taps stand; nothing when they stand in one line. */
+export function tapAngles(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
+  if (!isStaggered(record)) return null;
+  const view = endView(record, 13);
+  const size = 2 * view.radiusMm;
+  const words = stack(
+    [
+      heading(DRAWING.above, widthMm - size - 12, measure),
+      paragraph(DRAWING.aboveWords, widthMm - size - 12, measure, { sizeMm: SMALL_MM }),
+    ],
+    0,
+  );
+  const drawn: Block = { widthMm: size + 8, heightMm: size, shapes: movedAll(view, size / 2 + 4, -size / 2) };
+  return { ...beside([words, drawn], 4), widthMm };
+}
+
+/** The tap of this coil, drawn, and how it is made. */
+export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure): Block {
+  const method = record.tapMethod;
+  const { wire } = record.windings[0]!;
+  const panels = TAP_WORDS.STAGES[method.name].map((words, i) => {
+    const stage = i as 0 | 1 | 2;
+    const drawn: Block = {
+      widthMm: PANEL_MM.width,
+      heightMm: PANEL_MM.height,
+      shapes: movedAll(tapPicture(method.name, stage), 0, -PANEL_MM.height),
+    };
+    const under = paragraph(words, PANEL_MM.width - 2, measure, { sizeMm: SMALL_MM });
+    return { ...stack([drawn, under], 0.8), widthMm: PANEL_MM.width };
+  });
+  const how = list(
+    [
+      ...method.how.map((text, i) => ({ mark: `${i + 1}.`, text })),
+      { mark: '•', text: TAP_WORDS.baring(wire.covering, wire.strands, wire.solderable) },
+    ],
+    widthMm,
+    measure,
+  );
+  const head = heading(TAP_WORDS.HEADING[method.name], widthMm, measure);
+  return { ...stack([head, beside(panels, 0.5), ...how], 0.8), widthMm };
+}
+
+/** Each step with its box, number and, where it has one, the turn at which the counter stands. */
+export function stepItems(record: CoilRecord, widthMm: number, measure: Measure): Block[] {
+  return record.steps.map((step) => {
+    const turn = step.turn === null || step.turn === 0 ? '' : STEPS.turn(short(step.turn, 3));
+    const turnWidth = turn === '' ? 0 : measure.width(turn, BODY_MM, true) + 2;
+    const text = paragraph(step.text, widthMm - 11 - turnWidth, measure);
+    const base = -(CAP_SHARE + 0.1) * BODY_MM;
+    const shapes: Shape[] = [
+      tickBox(0, -3.3),
+      label(9.6, base, `${step.step}`, { sizeMm: BODY_MM, align: 'right', bold: true }),
+      ...movedAll(text, 11, 0),
+    ];
+    if (turn !== '') shapes.push(label(widthMm, base, turn, { sizeMm: BODY_MM, align: 'right', bold: true }));
+    return { widthMm, heightMm: Math.max(4.2, text.heightMm), shapes };
+  });
+}
+
+/** Cautions in a frame, in one column or two. */
+export function cautions(record: CoilRecord, widthMm: number, count: 1 | 2, measure: Measure): Block {
+  const inner = widthMm - 5;
+  const items = list(
+    record.cautions.map((text) => ({ mark: '•', text })),
+    count === 1 ? inner : (inner - 5) / 2,
+    measure,
+  );
+  const body = stack([heading(CAUTIONS.heading, inner, measure), columns(items, count, 5, 0.5)], 0);
+  const heightMm = body.heightMm + 3;
+  const shapes: Shape[] = [rectangle(0, -heightMm, widthMm, heightMm, 'outline'), ...movedAll(body, 2.5, -1.5)];
+  return { widthMm, heightMm, shapes };
+}

@@ -1,0 +1,227 @@
+/**
+ * The winding sheet: page 1 to wind from, page 2 to check by; more pages only when the content does not fit. It reads
+ * the record and nothing else: same record, same bytes.
+ */
+import { STEPS, TITLE } from '../../templates/wording/winding-sheet.ts';
+import type { Box, Measure } from '../drawing/boxes.ts';
+import type { Shape } from '../drawing/drawing.ts';
+import { moved } from '../drawing/shapes.ts';
+import type { CoilRecord } from '../record/schema.ts';
+import { type Block, beside, columns, heading, stack } from './block.ts';
+import * as check from './check-blocks.ts';
+import { PAPER_MM, type Page, Paper } from './page.ts';
+import { titleBlock } from './title-block.ts';
+import * as wind from './wind-blocks.ts';
+
+/** Left free round every sheet: across, and along. */
+export const MARGIN_MM = { across: 12, along: 11 } as const;
+const GAP = 3.5;
+const COLUMN_GAP = 6;
+
+/** A sheet without its head: what it is called, and its blocks from the top. */
+interface Body {
+  readonly part: string;
+  readonly blocks: Block[];
+  /** Stands at the foot of the sheet. */
+  readonly foot?: Block;
+}
+
+interface Room {
+  readonly widthMm: number;
+  readonly heightMm: number;
+}
+
+const height = (blocks: readonly Block[]) => stack(blocks, GAP).heightMm;
+const present = (block: Block | null): Block[] => (block === null ? [] : [block]);
+
+/** A page in two columns over an optional foot that takes the whole width. */
+interface Arrangement {
+  readonly left: readonly Block[];
+  readonly right: readonly Block[];
+  readonly foot?: Block;
+}
+
+function fits(arrangement: Arrangement, heightMm: number): boolean {
+  const foot = arrangement.foot ? arrangement.foot.heightMm + GAP : 0;
+  return Math.max(height(arrangement.left), height(arrangement.right)) + foot <= heightMm + 1e-9;
+}
+
+/** Steps under their heading, in one column or two. */
+function stepsBlock(items: readonly Block[], words: string, count: 1 | 2, gapMm: number, measure: Measure): Block {
+  const head = heading(words, items[0]!.widthMm, measure);
+  return stack([head, columns(items, count, COLUMN_GAP, gapMm)], 0.3);
+}
+
+/** How closely page 1 is set: height of the drawing, of a row of the tap table, and the space between steps. */
+const CLOSENESS = [
+  { drawingMm: 90, rowMm: 5.4, gapMm: 1.4 },
+  { drawingMm: 84, rowMm: 5, gapMm: 1 },
+  { drawingMm: 72, rowMm: 4.7, gapMm: 0.6 },
+  { drawingMm: 60, rowMm: 4.5, gapMm: 0.4 },
+] as const;
+
+/** The most leading steps that `holds` lets pass; 0 when not one. */
+function mostSteps(items: readonly Block[], holds: (first: readonly Block[]) => boolean): number {
+  let count = items.length;
+  while (count > 0 && !holds(items.slice(0, count))) count--;
+  return count;
+}
+
+/** Steps that found no place on the first page, in two columns a page. */
+function moreSteps(rest: readonly Block[], first: boolean, heightMm: number, measure: Measure): Body[] {
+  const bodies: Body[] = [];
+  let left = rest;
+  while (left.length > 0) {
+    const words = first && bodies.length === 0 ? STEPS.heading : STEPS.more;
+    const count = Math.max(
+      1,
+      mostSteps(left, (some) => stepsBlock(some, words, 2, 1.4, measure).heightMm <= heightMm),
+    );
+    bodies.push({ part: TITLE.more, blocks: [stepsBlock(left.slice(0, count), words, 2, 1.4, measure)] });
+    left = left.slice(count);
+  }
+  return bodies;
+}
+
+/** Page 1: of the arrangements that hold everything the first, set as widely as it allows; else the steps run on. */
+function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
+  const column = (room.widthMm - COLUMN_GAP) / 2;
+  const strip = wind.facts(record, room.widthMm, measure);
+  const free = room.heightMm - strip.heightMm - GAP;
+  const method = wind.tapMethod(record, column, measure);
+  const angles = present(wind.tapAngles(record, column, measure));
+  const wide = wind.cautions(record, room.widthMm, 2, measure);
+  const narrow = wind.cautions(record, column, 1, measure);
+  const items = wind.stepItems(record, column, measure);
+  const page = ({ left, right, foot }: Arrangement): Body => ({
+    part: TITLE.wind,
+    blocks: [strip, beside([{ ...stack(left, GAP), widthMm: column }, stack(right, GAP)], COLUMN_GAP)],
+    ...(foot ? { foot } : {}),
+  });
+  for (const { drawingMm, rowMm, gapMm } of CLOSENESS) {
+    const drawing = wind.coilDrawing(record, column, drawingMm, measure);
+    const taps = wind.tapTable(record, column, rowMm, measure);
+    const steps = stepsBlock(items, STEPS.heading, 1, gapMm, measure);
+    const whole: Arrangement[] = [
+      { left: [drawing, method, ...angles], right: [taps, steps], foot: wide },
+      { left: [drawing, method], right: [taps, ...angles, steps], foot: wide },
+      { left: [drawing, ...angles], right: [taps, steps, method], foot: wide },
+      { left: [drawing, method, narrow], right: [taps, ...angles, steps] },
+      { left: [drawing, method, ...angles, narrow], right: [taps, steps] },
+      { left: [drawing, ...angles, narrow], right: [taps, steps, method] },
+    ];
+    const found = whole.find((each) => fits(each, free));
+    if (found) return [page(found)];
+  }
+
+  const drawing = wind.coilDrawing(record, column, 84, measure);
+  const taps = wind.tapTable(record, column, 4.7, measure);
+  // Not all of it fits: the steps run on over the next pages, and what is left finds its place there too.
+  const some: Arrangement[] = [
+    { left: [drawing, method, ...angles], right: [taps], foot: wide },
+    { left: [drawing, method], right: [taps, ...angles], foot: wide },
+    { left: [drawing, method], right: [taps], foot: wide },
+    { left: [drawing], right: [taps] },
+  ];
+  const first = some.find((each) => fits(each, free)) ?? some[some.length - 1]!;
+  const under = (begun: readonly Block[]) => ({
+    ...first,
+    right: [...first.right, stepsBlock(begun, STEPS.heading, 1, 1, measure)],
+  });
+  const most = mostSteps(items, (begun) => fits(under(begun), free));
+  // A few steps torn off from the rest are worse than all of them on the next page.
+  const count = most >= 4 ? most : 0;
+  const placed = new Set([...first.left, ...first.right, first.foot]);
+  const bodies = [
+    page(count > 0 ? under(items.slice(0, count)) : first),
+    ...moreSteps(items.slice(count), count === 0, room.heightMm, measure),
+  ];
+  for (const block of [method, ...angles, wide]) {
+    if (placed.has(block)) continue;
+    const last = bodies[bodies.length - 1]!;
+    if (bodies.length > 1 && height([...last.blocks, block]) <= room.heightMm) last.blocks.push(block);
+    else bodies.push({ part: TITLE.more, blocks: [block] });
+  }
+  return bodies;
+}
+
+function checkBlocks(record: CoilRecord, room: Room, rowMm: number, measure: Measure): Block[] {
+  const { widthMm } = room;
+  const left = (widthMm - 6) * 0.58;
+  return [
+    check.checks(record, widthMm, rowMm, measure),
+    check.tapChecks(record, widthMm, rowMm, measure),
+    beside(
+      [
+        { ...check.corrections(record, left, measure), widthMm: left },
+        check.formerSizes(record, widthMm - 6 - left, measure),
+      ],
+      6,
+    ),
+    check.signature(widthMm, measure),
+    check.reasons(record, widthMm, measure),
+    ...present(check.alternatives(record, widthMm, measure)),
+    ...present(check.warnings(record, widthMm, measure)),
+  ];
+}
+
+function toCheckBy(record: CoilRecord, room: Room, measure: Measure): Body[] {
+  let blocks: Block[] = [];
+  for (const rowMm of [7, 6.4, 5.8, 5.3]) {
+    blocks = checkBlocks(record, room, rowMm, measure);
+    if (height(blocks) <= room.heightMm) return [{ part: TITLE.check, blocks }];
+  }
+  // On two sheets there is room to write again.
+  const bodies: Body[] = [];
+  let here: Block[] = [];
+  for (const block of checkBlocks(record, room, 6.4, measure)) {
+    if (here.length > 0 && height([...here, block]) > room.heightMm) {
+      bodies.push({ part: bodies.length === 0 ? TITLE.check : TITLE.checkMore, blocks: here });
+      here = [];
+    }
+    here.push(block);
+  }
+  bodies.push({ part: bodies.length === 0 ? TITLE.check : TITLE.checkMore, blocks: here });
+  return bodies;
+}
+
+/** The pages as drawings. */
+export function layOutWindingSheet(record: CoilRecord, measure: Measure): Page[] {
+  const [paperWidth, paperHeight] = PAPER_MM[record.paper];
+  const widthMm = paperWidth - 2 * MARGIN_MM.across;
+  const headOf = (part: string, sheet: string) =>
+    titleBlock(record, { document: TITLE.document, part, sheet }, widthMm, measure);
+  const head = headOf(TITLE.more, TITLE.sheet(10, 10));
+  const room = { widthMm, heightMm: paperHeight - 2 * MARGIN_MM.along - head.heightMm - GAP };
+  const bodies = [...toWindFrom(record, room, measure), ...toCheckBy(record, room, measure)];
+  return bodies.map((body, i) => {
+    const top = { ...headOf(body.part, TITLE.sheet(i + 1, bodies.length)), heightMm: head.heightMm };
+    const content = stack([top, ...body.blocks], GAP);
+    const shapes: Shape[] = content.shapes.map((shape) =>
+      moved(shape, MARGIN_MM.across, paperHeight - MARGIN_MM.along),
+    );
+    if (body.foot)
+      for (const shape of body.foot.shapes)
+        shapes.push(moved(shape, MARGIN_MM.across, MARGIN_MM.along + body.foot.heightMm));
+    return { widthMm: paperWidth, heightMm: paperHeight, shapes };
+  });
+}
+
+/** What a page keeps free of ink. */
+export function sheetFrame(page: Page): Box {
+  return {
+    left: MARGIN_MM.across,
+    right: page.widthMm - MARGIN_MM.across,
+    bottom: MARGIN_MM.along,
+    top: page.heightMm - MARGIN_MM.along,
+  };
+}
+
+/** The winding sheet of a record as the bytes of a PDF. */
+export async function windingSheet(record: CoilRecord): Promise<Uint8Array> {
+  const paper = new Paper({
+    title: `${TITLE.document}: ${record.job}`,
+    subject: TITLE.record(record.hash.slice(0, 12)),
+  });
+  return paper.write(layOutWindingSheet(record, paper));
+}

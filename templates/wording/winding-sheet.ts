@@ -1,0 +1,120 @@
+/** The fixed words of the winding sheet. */
+
+export const TITLE = {
+  document: 'Winding sheet',
+  wind: 'to wind from',
+  more: 'to wind from, continued',
+  check: 'to check by',
+  checkMore: 'to check by, continued',
+  job: 'job',
+  sheet: (n: number, of: number) => `sheet ${n} of ${of}`,
+  record: (hash: string) => `record ${hash}`,
+  date: (date: string) => `date ${date}`,
+} as const;
+
+export const FACTS = {
+  wire: 'Wire',
+  overall: (mm: string) => `${mm} mm over the covering`,
+  winding: 'Winding',
+  turns: (turns: string) => `${turns} turns`,
+  hand: { right: 'right-hand', left: 'left-hand' },
+  pitch: 'Pitch',
+  close: 'close wound, turn against turn',
+  groove: 'in the groove of the former',
+  spacer: (name: string, mm: string) => `spacer: ${name}, ${mm} mm`,
+  tension: 'Tension',
+  newton: (low: string, high: string) => `${low} to ${high} N`,
+  steady: 'steady, from start to finish',
+  cut: 'Wire to have ready',
+  ends: (metres: string, grams: string) => `${metres} m of it in the two ends; ${grams} g`,
+  former: 'Former',
+  coil: 'Whole coil',
+  low: 'at low frequency',
+} as const;
+
+export const DRAWING = {
+  datum: 'datum',
+  start: 'S start',
+  finish: 'F',
+  tap: 'tap',
+  top: 'top',
+  rightHand: 'right-hand',
+  leftHand: 'left-hand',
+  heading: (scale: string) => `The coil, scale ${scale}`,
+  seen: 'Start hole in front. Full dot: this side; hollow: behind. Figures: mm from the datum to the wire centre.',
+  hand: {
+    right: 'Right-hand: turns climb to the right on the side you see.',
+    left: 'Left-hand: turns climb to the left on the side you see.',
+  },
+  earthed: { start: 'Earthed end: the start S.', finish: 'Earthed end: the finish F.' },
+  datumIs: (words: string) => `Datum: ${words}.`,
+  above: 'Seen from above',
+  aboveWords: 'Angles from the start hole S, counterclockwise; F is the finish.',
+} as const;
+
+export const TAPS = {
+  heading: 'Taps, counted from the start S',
+  tap: 'tap',
+  turn: 'turn',
+  position: 'from datum mm',
+  angle: 'angle °',
+  inductance: 'µH',
+  deviation: 'off target %',
+  wire: 'wire used m',
+} as const;
+
+export const STEPS = {
+  heading: 'Steps: tick each when it is done',
+  more: 'Steps, continued',
+  turn: (turn: string) => `turn ${turn}`,
+} as const;
+
+export const CAUTIONS = { heading: 'Take care' } as const;
+
+export const CHECKS = {
+  heading: 'Measure and write down',
+  what: 'what',
+  low: 'low',
+  nominal: 'nominal',
+  high: 'high',
+  unit: 'unit',
+  reading: 'reading',
+  good: 'in limits',
+  taps: 'Every tap, measured from the start S',
+  length: 'wound length mm',
+  inductance: 'inductance µH',
+  resistance: 'DC resistance Ω at 20 °C',
+  range: 'tunes kHz',
+  between: (low: string, high: string) => `${low} – ${high}`,
+  corrections: 'When it reads high or low',
+  correctionsHow:
+    'A reading that is too high wants a line with a minus, one too low a line with a plus. Measure again after each.',
+  doing: 'what to do',
+  whole: 'whole coil %',
+  first: 'first tap %',
+  former: 'Former, before winding',
+  part: 'size',
+  mm: 'mm',
+  outside: 'outside diameter',
+  bore: 'bore',
+  wall: 'wall',
+  length2: 'length, foot to top',
+  rim: 'rim diameter',
+  groove: 'depth of the groove',
+  signature: ['wound by', 'date', 'checked by', 'date', 'coil no.'],
+  why: 'Why this coil',
+  chosen: (prefer: string, tried: string, feasible: string) =>
+    `Chosen for ${prefer}: ${tried} coils were tried, ${feasible} met the demands.`,
+  alternatives: 'Other coils that meet the demands',
+  wire: 'wire',
+  formerMm: 'former ⌀ mm',
+  pitch: 'pitch mm',
+  turns: 'turns',
+  windingMm: 'length mm',
+  wireM: 'wire m',
+  mass: 'mass g',
+  worst: 'worst tap %',
+  loss: 'loss 1/Q',
+  better: 'better in',
+  warnings: 'Note',
+} as const;
