@@ -1,0 +1,83 @@
+// npm run check:outside: what other people's programs say of our files. A program that is not there is skipped and named.
+import { spawnSync } from 'node:child_process';
+import { mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { basename, dirname, join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+
+const root = join(dirname(fileURLToPath(import.meta.url)), '..', '..');
+const program = join(root, 'dist', 'coilwright.js');
+const jobs = join(root, 'templates', 'jobs');
+const work = mkdtempSync(join(tmpdir(), 'coilwright-outside-'));
+let passed = 0;
+let failed = 0;
+const skipped = new Set();
+
+const run = (command, args) => spawnSync(command, args, { encoding: 'utf8', maxBuffer: 1 << 26 });
+const has = (command) => {
+  const there = !spawnSync(command, ['--version']).error;
+  if (!there) skipped.add(command);
+  return there;
+};
+function check(what, good, said) {
+  if (good) passed++;
+  else {
+    failed++;
+    console.log(`FAILED ${what}\n${said}`);
+  }
+}
+
+function pdf(path, record) {
+  if (has('qpdf')) {
+    const { status, stdout, stderr } = run('qpdf', ['--check', path]);
+    check(`qpdf --check ${path}`, status === 0, stdout + stderr);
+  }
+  if (has('pdftotext')) {
+    const { stdout } = run('pdftotext', ['-layout', path, '-']);
+    check(`pdftotext ${path} shows the job's name`, stdout.replace(/\s+/g, ' ').includes(record.job), stdout.slice(0, 500));
+    check(`pdftotext ${path} shows the record's hash`, stdout.includes(record.hash.slice(0, 12)), stdout.slice(0, 500));
+  }
+  if (has('pdffonts')) {
+    const { stdout } = run('pdffonts', [path]);
+    const rows = stdout.trim().split('\n').slice(2);
+    check(`pdffonts ${path}: every font embedded`, rows.length > 0 && rows.every((row) => / yes +yes /.test(row)), stdout);
+  }
+}
+
+function stl(path) {
+  if (has('admesh')) {
+    const { status, stdout } = run('admesh', [path]);
+    const zero = ['Total disconnected facets', 'Degenerate facets', 'Edges fixed', 'Facets removed', 'Facets added', 'Facets reversed', 'Backwards edges'];
+    for (const what of zero) {
+      const count = [...stdout.matchAll(new RegExp(`${what}\\s*:\\s*(\\d+)(?:\\s+(\\d+))?`, 'g'))].flatMap((m) => [m[1], m[2]]);
+      const good = status === 0 && count.length > 0 && count.every((n) => n === undefined || n === '0');
+      check(`admesh ${path}: ${what} 0`, good, stdout);
+    }
+    check(`admesh ${path}: one part`, /Number of parts\s*:\s*1\b/.test(stdout), stdout);
+  }
+  if (has('prusa-slicer')) {
+    const { stdout } = run('prusa-slicer', ['--info', path]);
+    check(`prusa-slicer --info ${path}: manifold`, /manifold = yes/.test(stdout), stdout);
+  }
+}
+
+try {
+  const starters = readdirSync(jobs).filter((name) => name.endsWith('.yaml'));
+  for (const name of starters) {
+    const out = join(work, basename(name, '.yaml'));
+    const { status, stderr } = run(process.execPath, [program, 'plan', join(jobs, name), '--out', out]);
+    check(`plan ${name}`, status === 0, stderr);
+    if (status !== 0) continue;
+    const record = JSON.parse(readFileSync(join(out, 'plan.json'), 'utf8'));
+    for (const file of record.files) {
+      if (file.kind === 'pdf') pdf(join(out, file.path), record);
+      if (file.kind === 'stl') stl(join(out, file.path));
+    }
+  }
+  check('there are starter jobs', starters.length > 0, jobs);
+} finally {
+  rmSync(work, { recursive: true, force: true });
+}
+if (skipped.size > 0) console.log(`skipped, not installed: ${[...skipped].join(', ')}`);
+console.log(`outside checks: ${passed} good, ${failed} bad`);
+if (failed > 0 || passed === 0) process.exit(1);
