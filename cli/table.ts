@@ -24,7 +24,12 @@ export function wrap(text: string, columns: number): readonly string[] {
   return [...lines, line];
 }
 
-function lay(header: readonly string[], body: readonly (readonly string[])[], right: readonly boolean[]): string[] {
+/** A header, a rule, the rows; columns as wide as their widest cell. */
+export function lay(
+  header: readonly string[],
+  body: readonly (readonly string[])[],
+  right: readonly boolean[],
+): string[] {
   const rows = [header, ...body];
   const widths = header.map((_, i) => rows.reduce((most, row) => Math.max(most, row[i]!.length), 0));
   const pad = (text: string, i: number) => (right[i] ? text.padStart(widths[i]!) : text.padEnd(widths[i]!));

@@ -1,0 +1,73 @@
+/** `plan`: reads a job, plans it, writes the output folder, says what came of it. */
+import { join, relative, resolve } from 'node:path';
+import type { Argv } from 'yargs';
+import { Fault } from '../src/fault.ts';
+import { slug } from '../src/job/name.ts';
+import { readJob } from '../src/job/read.ts';
+import { writeFolder } from '../src/output/transaction.ts';
+import type { planJob } from '../src/plan.ts';
+import { readJobText } from './read-job.ts';
+import { showPlan } from './show-plan.ts';
+import type { Terminal } from './terminal.ts';
+
+export function describePlan(yargs: Argv) {
+  return yargs
+    .positional('job', { type: 'string', demandOption: true, describe: 'job file, YAML or JSON; - for standard input' })
+    .option('out', {
+      type: 'string',
+      requiresArg: true,
+      describe: 'folder to write; out/<name of the job> when left out',
+    })
+    .option('json', { type: 'boolean', default: false, describe: 'print the record, and nothing else' })
+    .example('$0 plan low-bench-receiver.yaml', 'writes out/low-bench-receiver')
+    .example(
+      '$0 plan - --out coil --json < job.yaml',
+      'reads standard input, writes the folder coil, prints the record',
+    );
+}
+
+export interface PlanOptions {
+  readonly job: string;
+  readonly out?: string | undefined;
+  readonly json: boolean;
+}
+
+/** The planner, loaded only once there is a job to plan. */
+export type LoadPlanner = () => Promise<typeof planJob>;
+
+/** Throws a Fault with exit code 2, 3, 4 or 5. Nothing is written unless all of it is. */
+export async function runPlan(
+  options: PlanOptions,
+  terminal: Terminal,
+  version: string,
+  load: LoadPlanner,
+): Promise<void> {
+  checkOut(options.out);
+  const job = readJob(await readJobText(options.job, terminal), options.job);
+  const planner = await load();
+  const { record, files } = await planner(job, { version });
+  const folder = await writeFolder(resolve(terminal.folder, options.out ?? join('out', slug(job.name))), files);
+  if (options.json) {
+    terminal.out(`${JSON.stringify(record, null, 2)}\n`);
+    return;
+  }
+  const below = relative(terminal.folder, folder);
+  const shown = below === '' ? '.' : below.startsWith('..') ? folder : below;
+  terminal.out(showPlan(record, shown, files, terminal.columns));
+}
+
+function checkOut(out: string | undefined): void {
+  if (out !== '' && out !== '-') return;
+  throw new Fault(2, {
+    code: 'no-folder',
+    place: { key: '--out' },
+    got: out === '' ? 'nothing' : '-, which is standard output',
+    expected: 'a folder',
+    todo: out === '' ? 'name a folder, or leave the option out' : 'name a folder; --json prints the record besides',
+  });
+}
+
+/** With the real planner. */
+export async function plan(options: PlanOptions, terminal: Terminal, version: string): Promise<void> {
+  await runPlan(options, terminal, version, async () => (await import('../src/plan.ts')).planJob);
+}

@@ -1,0 +1,63 @@
+/** The bytes of a job file, or of standard input for `-`. */
+import { open, readdir } from 'node:fs/promises';
+import { basename, dirname, join, resolve } from 'node:path';
+import { Fault } from '../src/fault.ts';
+import { nearest } from '../src/job/nearest.ts';
+import { decode, LARGEST_BYTES } from '../src/job/tree.ts';
+import type { Terminal } from './terminal.ts';
+
+/** Text of the job. Throws a Fault with exit code 3. */
+export async function readJobText(file: string, terminal: Terminal): Promise<string> {
+  const bytes =
+    file === '-' ? await terminal.input(LARGEST_BYTES) : await readBytes(resolve(terminal.folder, file), file);
+  return decode(bytes, file);
+}
+
+/** No more is read than says that the file is too large; a pipe or a device is read as a file is. */
+async function readBytes(path: string, file: string): Promise<Uint8Array> {
+  try {
+    const handle = await open(path, 'r');
+    try {
+      const buffer = Buffer.alloc(LARGEST_BYTES + 1);
+      let length = 0;
+      for (;;) {
+        const { bytesRead } = await handle.read(buffer, length, buffer.length - length, null);
+        length += bytesRead;
+        if (bytesRead === 0 || length === buffer.length) return buffer.subarray(0, length);
+      }
+    } finally {
+      await handle.close();
+    }
+  } catch (error) {
+    throw await asFault(error, path, file);
+  }
+}
+
+async function asFault(error: unknown, path: string, file: string): Promise<unknown> {
+  if (!(error instanceof Error) || !('code' in error)) return error;
+  const fault = (code: string, got: string, todo: string) =>
+    new Fault(3, { code, place: { file }, got, expected: 'a job file in YAML or JSON', todo });
+  switch (error.code) {
+    case 'ENOENT':
+    case 'ENOTDIR': {
+      const names = await readdir(dirname(path)).catch(() => []);
+      const near = nearest(
+        basename(path),
+        names.filter((name) => /\.(?:ya?ml|json)$/i.test(name)),
+      );
+      const meant = near === null ? null : `did you mean ${join(dirname(file), near)}?`;
+      return fault(
+        'no-such-file',
+        'no file of this name',
+        meant ?? 'check the path; "coilwright start" writes a job to begin with',
+      );
+    }
+    case 'EISDIR':
+      return fault('is-a-folder', 'a folder', 'name the job file in it');
+    case 'EACCES':
+    case 'EPERM':
+      return fault('not-readable', 'a file that may not be read', 'change its permissions');
+    default:
+      return fault('not-readable', `a file that cannot be read (${String(error.code)})`, 'check the path');
+  }
+}

@@ -1,0 +1,128 @@
+/** `start`: writes a commented job to begin with. */
+import { writeFile } from 'node:fs/promises';
+import { relative, resolve } from 'node:path';
+import type { Argv } from 'yargs';
+import { Fault } from '../src/fault.ts';
+import { nearest } from '../src/job/nearest.ts';
+import { outputFault } from '../src/output/faults.ts';
+import { STARTERS, type Starter } from '../templates/jobs/starters.ts';
+import type { Terminal } from './terminal.ts';
+
+export function describeStart(yargs: Argv) {
+  return yargs
+    .positional('name', { type: 'string', describe: `starter job; ${STARTERS[0].name} when left out` })
+    .option('out', {
+      type: 'string',
+      requiresArg: true,
+      describe: 'file to write, - for standard output; <name>.yaml when left out',
+    })
+    .option('list', { type: 'boolean', default: false, describe: 'list the starter jobs' })
+    .option('schema', {
+      type: 'boolean',
+      default: false,
+      describe: 'write job.schema.json, for editors, instead of a job',
+    })
+    .example('$0 start', `writes ${STARTERS[0].name}.yaml`)
+    .example('$0 start forty-coil-lot --out lot.yaml', 'writes that starter as lot.yaml');
+}
+
+export interface StartOptions {
+  readonly name?: string | undefined;
+  readonly out?: string | undefined;
+  readonly list: boolean;
+  readonly schema: boolean;
+}
+
+/** Throws a Fault with exit code 2 or 5. A file that is there is never overwritten. */
+export async function runStart(options: StartOptions, terminal: Terminal): Promise<void> {
+  if (options.list) {
+    if (options.out !== undefined || options.schema || options.name !== undefined) throw listAlone();
+    const width = Math.max(...STARTERS.map(({ name }) => name.length)) + 2;
+    for (const { name, use } of STARTERS) terminal.out(`${name.padEnd(width)}${use}\n`);
+    return;
+  }
+  const { name, text, next } = options.schema ? await schemaFile(options.name) : jobFile(options);
+  if (options.out === '-') {
+    terminal.out(text);
+    return;
+  }
+  const path = resolve(terminal.folder, options.out ?? name);
+  const shown = relative(terminal.folder, path).startsWith('..') ? path : relative(terminal.folder, path);
+  await writeNew(path, shown, text);
+  terminal.out(`${shown} written; ${next(shown)}\n`);
+}
+
+function listAlone(): Fault {
+  return new Fault(2, {
+    code: 'list-alone',
+    place: { key: '--list' },
+    got: '--list together with something to write',
+    expected: '--list alone',
+    todo: 'run start twice',
+  });
+}
+
+interface NewFile {
+  readonly name: string;
+  readonly text: string;
+  /** What to do with the file written under this name. */
+  readonly next: (shown: string) => string;
+}
+
+function jobFile({ name }: StartOptions): NewFile {
+  const starter = find(name);
+  return {
+    name: `${starter.name}.yaml`,
+    text: starter.text,
+    next: (shown) => `edit it, then: coilwright plan ${shown}`,
+  };
+}
+
+async function schemaFile(starter: string | undefined): Promise<NewFile> {
+  if (starter !== undefined) {
+    throw new Fault(2, {
+      code: 'schema-of-starter',
+      place: { key: '--schema' },
+      got: `--schema together with ${starter}`,
+      expected: 'one of the two: the schema is the same for every job',
+      todo: 'run start twice',
+    });
+  }
+  const { jobJsonSchema } = await import('../src/job/jsonSchema.ts');
+  return {
+    name: 'job.schema.json',
+    text: `${JSON.stringify(jobJsonSchema(), null, 2)}\n`,
+    next: (shown) => `name it in a job: $schema: ./${shown}`,
+  };
+}
+
+function find(name: string | undefined): Starter {
+  if (name === undefined) return STARTERS[0];
+  const names = STARTERS.map((starter) => starter.name);
+  const found = STARTERS.find((starter) => starter.name === name.replace(/\.ya?ml$/, ''));
+  if (found !== undefined) return found;
+  const near = nearest(name, names);
+  throw new Fault(2, {
+    code: 'no-such-starter',
+    got: `the starter "${name.slice(0, 60)}"`,
+    expected: `one of: ${names.join(', ')}`,
+    todo: near === null ? 'choose one; coilwright start --list says what each is for' : `did you mean ${near}?`,
+  });
+}
+
+async function writeNew(path: string, shown: string, text: string): Promise<void> {
+  try {
+    await writeFile(path, text, { flag: 'wx' });
+  } catch (error) {
+    if (error instanceof Error && 'code' in error && error.code === 'EEXIST') {
+      throw new Fault(5, {
+        code: 'already-there',
+        place: { file: shown },
+        got: 'a file or folder that is there already',
+        expected: 'a new file',
+        todo: 'choose another name with --out; nothing was changed',
+      });
+    }
+    throw outputFault(error, shown);
+  }
+}

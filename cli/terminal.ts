@@ -1,0 +1,37 @@
+/** What a verb has of the outside: where it writes, how wide that is, standard input, the current folder. */
+
+export interface Terminal {
+  readonly out: (text: string) => void;
+  readonly err: (text: string) => void;
+  /** Width of the page in characters. */
+  readonly columns: number;
+  /** Standard input, at most `most` bytes and one more. */
+  readonly input: (most: number) => Promise<Uint8Array>;
+  readonly folder: string;
+}
+
+/** Narrower pages are not laid out for; wider lines are hard to read. */
+const WIDTH = { least: 40, usual: 80, most: 110 } as const;
+
+export function systemTerminal(): Terminal {
+  const columns = process.stdout.columns ?? process.stderr.columns ?? WIDTH.usual;
+  return {
+    out: (text) => void process.stdout.write(text),
+    err: (text) => void process.stderr.write(text),
+    columns: Math.min(WIDTH.most, Math.max(WIDTH.least, columns)),
+    input: readInput,
+    folder: process.cwd(),
+  };
+}
+
+async function readInput(most: number): Promise<Uint8Array> {
+  const chunks: Uint8Array[] = [];
+  let bytes = 0;
+  for await (const chunk of process.stdin) {
+    const piece = chunk as Uint8Array;
+    chunks.push(piece);
+    bytes += piece.length;
+    if (bytes > most) break;
+  }
+  return Buffer.concat(chunks);
+}

@@ -1,0 +1,22 @@
+/** The verbs: how each is written, what it does, its options. Help, the parser and the hints all read this. */
+
+export const VERBS = {
+  start: { written: 'start [name]', does: 'write a commented job to begin with', options: ['out', 'list', 'schema'] },
+  plan: {
+    written: 'plan <job>',
+    does: 'choose the coil for a job; write sheet, template, former and record',
+    options: ['out', 'json'],
+  },
+  stock: {
+    written: 'stock [what] [words..]',
+    does: 'list the wires, tubes, materials and spacers that are known',
+    options: ['from', 'to', 'json'],
+  },
+} as const;
+export type Verb = keyof typeof VERBS;
+
+export const VERB_NAMES = Object.keys(VERBS) as readonly Verb[];
+/** Every verb has these. */
+export const COMMON_OPTIONS = ['help', 'version'] as const;
+
+export const isVerb = (word: string): word is Verb => VERB_NAMES.some((verb) => verb === word);
