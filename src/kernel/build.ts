@@ -9,19 +9,19 @@ import { skinMesh } from './skin.ts';
 /** @throws MeshError naming the shape or operation that failed */
 export function buildSolid(kernel: ManifoldToplevel, solid: Solid): TriangleMesh {
   const made: Manifold[] = [];
-  const keep = (name: string, manifold: Manifold): Manifold => {
+  const keep = (operation: string, make: () => Manifold): Manifold => {
+    const manifold = good(solid.part, operation, make);
     made.push(manifold);
-    requireGood(solid.part, name, manifold);
     return manifold;
   };
   try {
-    const body = keep('turned body', fromMesh(kernel, skinMesh(solid.body)));
-    const adders = solid.adders.map((adder) => keep(adder.name, fromMesh(kernel, loftMesh(adder))));
+    const body = keep('turned body', () => fromMesh(kernel, skinMesh(solid.body)));
+    const adders = solid.adders.map((adder) => keep(adder.name, () => fromMesh(kernel, loftMesh(adder))));
     const cutters = solid.cutters.map((cutter) =>
-      keep(cutter.name, cutter.kind === 'loft' ? fromMesh(kernel, loftMesh(cutter)) : engrave(kernel, cutter)),
+      keep(cutter.name, () => (cutter.kind === 'loft' ? fromMesh(kernel, loftMesh(cutter)) : engrave(kernel, cutter))),
     );
-    const whole = adders.length > 0 ? keep('joining', kernel.Manifold.union([body, ...adders])) : body;
-    const cut = cutters.length > 0 ? keep('cutting', kernel.Manifold.difference([whole, ...cutters])) : whole;
+    const whole = adders.length > 0 ? keep('joining', () => kernel.Manifold.union([body, ...adders])) : body;
+    const cut = cutters.length > 0 ? keep('cutting', () => kernel.Manifold.difference([whole, ...cutters])) : whole;
     const mesh = cut.getMesh();
     if (mesh.numProp !== 3) throw new MeshError(solid.part, 'reading back', `${mesh.numProp} numbers a vertex, not 3`);
     return { vertices: mesh.vertProperties, triangles: mesh.triVerts };
@@ -34,11 +34,19 @@ export function fromMesh(kernel: ManifoldToplevel, mesh: TriangleMesh): Manifold
   return new kernel.Manifold(new kernel.Mesh({ numProp: 3, vertProperties: mesh.vertices, triVerts: mesh.triangles }));
 }
 
-/** Errors of the kernel are lazy: they show only when asked for. */
-function requireGood(part: string, operation: string, manifold: Manifold): void {
+/** Some errors of the kernel are thrown at once, the others are lazy and show only when asked for. */
+export function good(part: string, operation: string, make: () => Manifold): Manifold {
+  let manifold: Manifold;
+  try {
+    manifold = make();
+  } catch (error) {
+    throw new MeshError(part, operation, `${error instanceof Error ? error.message : error}, expected a closed solid`);
+  }
   const status = manifold.status();
-  if (status !== 'NoError') throw new MeshError(part, operation, `status ${status}, expected NoError`);
-  if (manifold.numTri() === 0) throw new MeshError(part, operation, 'nothing left, expected a solid');
+  const triangles = manifold.numTri();
+  if (status === 'NoError' && triangles > 0) return manifold;
+  manifold.delete();
+  throw new MeshError(part, operation, `status ${status}, ${triangles} triangles, expected a closed solid`);
 }
 
 /** Strokes widened and joined flat, then extruded to stand proud of the face. */

@@ -1,7 +1,7 @@
 /** The last gate: the bytes that are about to be written are read back and must be the part that was described. */
 import type { ManifoldToplevel } from 'manifold-3d';
 import type { Expected } from '../parts/solid.ts';
-import { fromMesh } from './build.ts';
+import { fromMesh, good } from './build.ts';
 import { signedVolume, type TriangleMesh } from './mesh.ts';
 import { MeshError } from './mesh-error.ts';
 import { readStl } from './stl.ts';
@@ -31,12 +31,7 @@ export function checkBytes(kernel: ManifoldToplevel, part: string, bytes: Uint8A
     fail('edges', `${faulty} of ${3 * count} edge sides lack exactly one opposite side; expected 0`);
   const bodies = countBodies(mesh);
   if (bodies !== expected.bodies) fail('bodies', `${bodies}, expected ${expected.bodies}`);
-  const manifold = fromMesh(kernel, mesh);
-  try {
-    if (manifold.status() !== 'NoError') fail('status', `${manifold.status()}, expected NoError`);
-  } finally {
-    manifold.delete();
-  }
+  good(part, 'checking status', () => fromMesh(kernel, mesh)).delete();
   // Euler: vertices - edges + triangles = 2 (bodies - genus), and every triangle owns one and a half edges.
   const genus = bodies - (mesh.vertices.length / 3 - count / 2) / 2;
   if (genus !== expected.genus) fail('genus', `${genus}, expected ${expected.genus} (${expected.genusIs})`);

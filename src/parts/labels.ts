@@ -4,7 +4,7 @@
  *
  * The rule: ticks closer than `tickGapMm` become one tick with one joined text (`S,1-12` for taps in line). Texts that
  * would overlap are moved apart, least squares of the moves; where a text would have to move by more than `moveMm` it is
- * joined to its neighbour instead (`4,5`). When even that is too wide for the ring, every second, then every third number
+ * joined to its neighbour instead (`4,5`, at most three ticks). When even that is too wide for the ring, every second, then every third number
  * is left out and keeps its tick. Texts run counterclockwise, as does the angle.
  */
 
@@ -37,6 +37,8 @@ export interface Ring {
   readonly gapMm: number;
   readonly widthMm: (text: string) => number;
 }
+
+const MOST_TICKS = 3;
 
 interface Group {
   readonly labels: readonly Label[];
@@ -135,25 +137,31 @@ function joinUntilTheyFit(start: readonly Group[], ring: Ring): PlacedText[] | n
         angleDeg: ((placed[i]! / ring.radiusMm) * 180) / Math.PI,
         ticksDeg: group.ticks,
       }));
-    if (groups.length === 1) return null;
-    groups = joinClosest(groups, moved, ring);
+    const joined = joinClosest(groups, moved, ring);
+    if (!joined) return null;
+    groups = joined;
   }
 }
 
-/** Joins the two neighbours that stand closest among those that moved too far (among all, when only the seam is tight). */
-function joinClosest(groups: readonly Group[], moved: readonly number[], ring: Ring): Group[] {
+/**
+ * Joins the two neighbours that stand closest among those that moved too far (among all, when only the seam is tight).
+ * Null when every such pair would make a text of more than {@link MOST_TICKS} ticks, which nobody could tell apart.
+ */
+function joinClosest(groups: readonly Group[], moved: readonly number[], ring: Ring): Group[] | null {
   let best = -1;
   let least = Number.POSITIVE_INFINITY;
   const far = (i: number) => moved[i]! > ring.moveMm;
   const any = groups.some((_, i) => far(i));
   for (let i = 0; i + 1 < groups.length; i++) {
     if (any && !far(i) && !far(i + 1)) continue;
+    if (groups[i]!.ticks.length + groups[i + 1]!.ticks.length > MOST_TICKS) continue;
     const apart = groups[i + 1]!.ticks[0]! - groups[i]!.ticks[groups[i]!.ticks.length - 1]!;
     if (apart < least) {
       least = apart;
       best = i;
     }
   }
+  if (best < 0) return null;
   const a = groups[best]!;
   const b = groups[best + 1]!;
   const both: Group = { labels: [...a.labels, ...b.labels], ticks: [...a.ticks, ...b.ticks] };

@@ -64,7 +64,7 @@ function chooseHeight(d: FormerDimensions): { face: Face; placement: Placement }
       radiusMm: face.middleR,
       tickGapMm: 2 * face.strokeMm,
       moveMm: 2,
-      gapMm: face.strokeMm + 0.8,
+      gapMm: face.strokeMm + 1.6,
       widthMm: (text) => textWidth(text, face),
     });
     if (placement && (!best || cost(placement) < cost(best.placement))) best = { face, placement };
@@ -91,12 +91,28 @@ interface Glyph {
 
 const drawn = new Map<string, Glyph>();
 
+/** The font's own comma hangs below the foot line, into the ticks, and its dash is wider than a figure. */
+const OWN_GLYPHS: Readonly<Record<string, Point2[][]>> = {
+  ',': [
+    [
+      [0.1, 0.15],
+      [0, -0.02],
+    ],
+  ],
+  '-': [
+    [
+      [0, 0.5],
+      [0.4, 0.5],
+    ],
+  ],
+};
+
 /** A figure one unit high, its left edge and its foot line at 0. */
 function glyph(char: string): Glyph {
   const known = drawn.get(char);
   if (known) return known;
   // The font's nominal height is two thirds of its capitals'.
-  const raw = vectorText({ height: 1 / 1.5 }, char);
+  const raw: readonly Point2[][] = OWN_GLYPHS[char] ?? vectorText({ height: 1 / 1.5 }, char);
   const xs = raw.flat().map((p) => p[0]);
   const left = Math.min(...xs);
   const made = {

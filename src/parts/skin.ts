@@ -31,6 +31,9 @@ export function formerSkin(d: FormerDimensions): Skin {
   };
 }
 
+/** A ramp starts with at least this depth, which no printer shows, so that its first triangles are not slivers. */
+const SHALLOWEST_MM = 0.01;
+
 /** One sample a column; the first and the last lie just outside the ramps, at depth 0. */
 function grooveSamples(d: FormerDimensions, afterRow: number): Groove | null {
   const { groove, segments } = d;
@@ -42,10 +45,8 @@ function grooveSamples(d: FormerDimensions, afterRow: number): Groove | null {
     const turn = (column + 0.5) / segments;
     const ramp = groove.rampTurns > 0 ? Math.min(turn - groove.fromTurn, groove.toTurn - turn) / groove.rampTurns : 1;
     const outside = column === firstColumn || column === lastColumn;
-    samples.push({
-      zMm: d.axialMm(turn),
-      depthMm: outside ? 0 : groove.depthMm * Math.min(1, Math.max(0, ramp)),
-    });
+    const depthMm = groove.depthMm * Math.min(1, ramp);
+    samples.push({ zMm: d.axialMm(turn), depthMm: outside || depthMm < SHALLOWEST_MM ? 0 : depthMm });
   }
   return { afterRow, floorMm: groove.floorMm, firstColumn, samples };
 }

@@ -1,0 +1,118 @@
+import { describe, expect, test } from 'vitest';
+import { Fault } from '../../src/fault.ts';
+import { formerSolid } from '../../src/parts/former.ts';
+import { teardrop } from '../../src/parts/holes.ts';
+import type { Engraving } from '../../src/parts/solid.ts';
+import type { CoilRecord } from '../../src/record/schema.ts';
+import { sampleRecord } from '../helpers/sample.ts';
+
+function codes(record: CoilRecord): string[] {
+  try {
+    formerSolid(record);
+  } catch (error) {
+    if (!(error instanceof Fault)) throw error;
+    expect(error.exit).toBe(4);
+    return error.faults.map((fault) => fault.code);
+  }
+  return [];
+}
+
+const base = sampleRecord();
+const former = (change: Partial<CoilRecord['former']>): CoilRecord => ({
+  ...base,
+  former: { ...base.former, ...change },
+});
+const hole = (label: string, change: Partial<CoilRecord['holes'][number]>): CoilRecord => ({
+  ...base,
+  holes: base.holes.map((h) => (h.label === label ? { ...h, ...change } : h)),
+});
+const ear = base.former.ears[0]!;
+
+describe('a former that cannot be is refused by name', () => {
+  test.each<[string, CoilRecord]>([
+    ['former-wall-thin', former({ boreDiameterMm: 58 })],
+    ['former-segments', former({ segments: 30 })],
+    ['former-flange-small', former({ flange: { diameterMm: 50, lowerMm: 3, upperMm: 3 } })],
+    ['former-rim-no-room', former({ flange: { diameterMm: 80, lowerMm: 3, upperMm: 3 } })],
+    ['former-groove-no-room', former({ groove: { ...base.former.groove!, runInTurns: 9 } })],
+    ['former-groove-no-land', former({ groove: { ...base.former.groove!, depthMm: 0.6 } })],
+    ['former-hole-no-room', hole('A', { axialMm: 0.6 })],
+    ['former-hole-no-room', hole('A', { diameterMm: 40 })],
+    ['former-holes-meet', hole('A', { angleDeg: 0, axialMm: 11 })],
+    ['former-ear-no-room', former({ ears: [{ ...ear, widthMm: 5 }] })],
+    ['former-ear-no-room', former({ ears: [{ ...ear, centreRadiusMm: 33 }] })],
+    ['former-ear-hides-datum', former({ ears: [{ ...ear, angleDeg: 5 }] })],
+    ['former-numbers-no-room', former({ numberHeightMm: 1.5 })],
+  ])('%s', (code, record) => {
+    expect(codes(record)).toContain(code);
+  });
+
+  test('the sample itself is not', () => {
+    expect(codes(base)).toEqual([]);
+  });
+
+  test('a groove of one turn', () => {
+    const one = sampleRecord({ turns: [0.4, 0.8] });
+    expect(codes({ ...one, holes: [], former: { ...one.former, numbers: [] } })).toContain('former-groove-short');
+  });
+});
+
+test('a teardrop clears its whole diameter and has a roof at 45 degrees', () => {
+  for (const d of [0.6, 1.2, 1.6, 4.3]) {
+    const points = teardrop(d);
+    for (const [i, [x, y]] of points.entries()) {
+      const [u, v] = points[(i + 1) % points.length]!;
+      // Distance of the side from the centre.
+      expect(Math.abs(x * v - y * u) / Math.hypot(u - x, v - y)).toBeCloseTo(d / 2, 9);
+    }
+    const [top, left] = points;
+    expect(top![1] - left![1]).toBeCloseTo(Math.abs(left![0]), 9);
+    expect(Math.max(...points.slice(1).map(([x, y]) => Math.hypot(x, y))) - d / 2).toBeLessThan(0.02);
+  }
+});
+
+test('numbers read from outside: up is inwards, on runs counterclockwise', () => {
+  // One figure 1 at angle 0: the font draws it from the flag over the top down to the foot.
+  const record = former({ numbers: [{ text: '7', angleDeg: 0, tap: 7 }] });
+  const numbers = formerSolid(record)!.cutters.find((c): c is Engraving => c.kind === 'engraving')!;
+  const figure = numbers.strokes.filter((line) => line.every(([x]) => x < base.former.flange!.diameterMm / 2 - 1.5));
+  const points = figure.flat();
+  // The bar of a 7 is its top: it lies inwards; its foot lies outwards, left of the bar's right end.
+  const inner = Math.min(...points.map((p) => p[0]));
+  const bar = points.filter((p) => p[0] < inner + 0.01);
+  expect(Math.max(...bar.map((p) => p[1])) - Math.min(...bar.map((p) => p[1]))).toBeGreaterThan(1.5);
+  const foot = points.reduce((a, b) => (b[0] > a[0] ? b : a));
+  const middle = (Math.max(...points.map((p) => p[1])) + Math.min(...points.map((p) => p[1]))) / 2;
+  expect(foot[1]).toBeLessThan(middle + 0.1);
+  expect(foot[0] - inner).toBeCloseTo(base.former.numberHeightMm, 1);
+});
+
+test('no numbers without a flange, no datum notch when there is none', () => {
+  const names = (record: CoilRecord) => formerSolid(record)!.cutters.map((c) => c.name);
+  expect(names(base)).toContain('numbers');
+  expect(names(base)).toContain('datum mark');
+  const plain = former({ flange: null, datumMark: null, ears: [] });
+  expect(names(plain)).not.toContain('numbers');
+  expect(names(plain)).not.toContain('datum mark');
+});
+
+test('the groove goes on to the last hole of the finish row when there is room, else it ends at the finish', () => {
+  const last = (record: CoilRecord) => {
+    const groove = formerSolid(record)!.body.groove!;
+    return (groove.firstColumn + groove.samples.length - 0.5) / record.former.segments;
+  };
+  const turns = base.windings[0]!.turns;
+  const row = Math.max(...base.holes.map((h) => h.turn ?? 0));
+  const runIn = base.former.groove!.runInTurns;
+  expect(last(base)).toBeCloseTo(row + runIn, 1);
+  const finish = base.holes.filter((h) => h.purpose !== 'finish' || h.turn! <= turns);
+  expect(last({ ...base, holes: finish })).toBeCloseTo(turns + runIn, 1);
+});
+
+test('a mounting hole that stands in an ear is not cut through the wall too', () => {
+  const mount = { purpose: 'mount' as const, tap: null, turn: null, label: 'M', axialMm: 20, diameterMm: 4 };
+  const genus = (angleDeg: number) =>
+    formerSolid({ ...base, holes: [...base.holes, { ...mount, angleDeg }] })!.expected.genus;
+  expect(genus(ear.angleDeg)).toBe(formerSolid(base)!.expected.genus);
+  expect(genus(ear.angleDeg + 90)).toBe(formerSolid(base)!.expected.genus + 1);
+});
