@@ -162,7 +162,7 @@ function ordinates(record: CoilRecord, s: number, words: ElevationWords, edge: n
   const places = spread(
     items.map((item) => item.z * s),
     STEP,
-    -9,
+    -16,
   );
   const body = (record.former.outsideDiameterMm / 2) * s;
   const shapes: Shape[] = [];

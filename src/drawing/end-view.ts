@@ -3,12 +3,14 @@
  * each tap stands. Taps at one angle share a line. Millimetres on paper, the origin on the axis.
  */
 import type { CoilRecord } from '../record/schema.ts';
+import { type Box, type Measure, shapeBox } from './boxes.ts';
 import type { Drawing, Shape } from './drawing.ts';
-import { arrowHead, circle, label, line, polyline, SMALL_MM } from './shapes.ts';
+import { arrowHead, circle, label, line, polyline } from './shapes.ts';
 import { spread } from './spread.ts';
 
 export interface EndView extends Drawing {
-  readonly radiusMm: number;
+  /** All that is drawn, text included. */
+  readonly box: Box;
 }
 
 /** True when the taps do not all stand over the start hole, give or take a degree. */
@@ -43,7 +45,7 @@ function rows(names: readonly string[], most: number): string[] {
   return lines;
 }
 
-export function endView(record: CoilRecord, rimMm: number): EndView {
+export function endView(record: CoilRecord, rimMm: number, measure: Measure): EndView {
   const found = groups(record);
   // The circle of labels is cut where the gap between neighbours is widest, then they are moved apart along it.
   const gaps = found.map((group, i) => (found[(i + 1) % found.length]!.angle - group.angle + 360) % 360 || 360);
@@ -79,5 +81,14 @@ export function endView(record: CoilRecord, rimMm: number): EndView {
   const sense = Array.from({ length: 13 }, (_, i) => at(20 + i * 5, rimMm * 0.6));
   const [tx, ty] = sense[12]!;
   shapes.push(polyline(sense, 'thin'), arrowHead(tx, ty, 80, 2.2));
-  return { shapes, radiusMm: outer + SMALL_MM };
+  const boxes = shapes.map((shape) => shapeBox(shape, measure));
+  return {
+    shapes,
+    box: {
+      left: Math.min(...boxes.map((box) => box.left)),
+      right: Math.max(...boxes.map((box) => box.right)),
+      bottom: Math.min(...boxes.map((box) => box.bottom)),
+      top: Math.max(...boxes.map((box) => box.top)),
+    },
+  };
 }

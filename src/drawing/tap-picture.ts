@@ -8,7 +8,11 @@ import { arrow, circle, line, polyline, rectangle } from './shapes.ts';
 
 export type TapMethodName = CoilRecord['tapMethod']['name'];
 
-export const PANEL_MM = { width: 29.5, height: 23 } as const;
+/** Room of one picture; those of a wall cut through are lower. */
+export const PANEL_MM = { width: 29.5, height: { wall: 17.5, turns: 22.5 } } as const;
+
+export const panelHeight = (method: TapMethodName): number =>
+  method === 'drawn in' || method === 'cut pair' ? PANEL_MM.height.wall : PANEL_MM.height.turns;
 
 const WIRE = 'outline';
 

@@ -6,7 +6,7 @@ import { label, line, SMALL_MM } from '../drawing/shapes.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Block, heading, list, paragraph, stack } from './block.ts';
 import { type Column, shares, table } from './table.ts';
-import { figures, fixed, short, signed } from './text.ts';
+import { figures, fixed, sentence, short, signed } from './text.ts';
 
 function columnsOf(widthMm: number, parts: readonly (readonly [string, number, Partial<Column>])[]): Column[] {
   const widths = shares(
@@ -73,9 +73,9 @@ export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, me
 
 export function corrections(record: CoilRecord, widthMm: number, measure: Measure): Block {
   const columns = columnsOf(widthMm, [
-    [CHECKS.doing, 62, {}],
-    [CHECKS.whole, 18, RIGHT],
-    [CHECKS.first, 18, RIGHT],
+    [CHECKS.doing, 70, {}],
+    [CHECKS.whole, 16, RIGHT],
+    [CHECKS.first, 15, RIGHT],
   ]);
   const rows = record.corrections.map((each) => [
     each.doing,
@@ -83,7 +83,7 @@ export function corrections(record: CoilRecord, widthMm: number, measure: Measur
     signed(each.firstTapPercent, 2),
   ]);
   const how = paragraph(CHECKS.correctionsHow, widthMm, measure, { sizeMm: SMALL_MM });
-  return stack([heading(CHECKS.corrections, widthMm, measure), table(columns, rows, measure), how], 0.6);
+  return stack([heading(CHECKS.corrections, widthMm, measure), table(columns, rows, measure), how], 1);
 }
 
 export function formerSizes(record: CoilRecord, widthMm: number, measure: Measure): Block {
@@ -101,10 +101,10 @@ export function formerSizes(record: CoilRecord, widthMm: number, measure: Measur
     [CHECKS.mm, 18, { ...RIGHT, bold: true }],
     [CHECKS.reading, 24, BLANK],
   ]);
-  const what = paragraph(`${former.material}. ${former.stiffness}.`.replace('..', '.'), widthMm, measure, {
+  const what = paragraph(`${sentence(former.material)} ${sentence(former.stiffness)}`, widthMm, measure, {
     sizeMm: SMALL_MM,
   });
-  return stack([heading(CHECKS.former, widthMm, measure), table(columns, rows, measure), what], 0.6);
+  return stack([heading(CHECKS.former, widthMm, measure), table(columns, rows, measure), what], 1);
 }
 
 export function signature(widthMm: number, measure: Measure): Block {
@@ -123,23 +123,22 @@ export function signature(widthMm: number, measure: Measure): Block {
 export function reasons(record: CoilRecord, widthMm: number, measure: Measure): Block {
   const { chosen } = record;
   const first = CHECKS.chosen(chosen.prefer, `${chosen.tried}`, `${chosen.feasible}`);
-  const text = paragraph(`${first} ${chosen.why}`, widthMm, measure);
+  const text = paragraph(`${first} ${sentence(chosen.why)}`, widthMm, measure);
   return stack([heading(CHECKS.why, widthMm, measure), text], 0);
 }
 
 export function alternatives(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
   if (record.alternatives.length === 0) return null;
   const columns = columnsOf(widthMm, [
-    [CHECKS.wire, 36, {}],
-    [CHECKS.formerMm, 15, RIGHT],
-    [CHECKS.pitch, 24, RIGHT],
-    [CHECKS.turns, 15, RIGHT],
-    [CHECKS.windingMm, 15, RIGHT],
+    [CHECKS.wire, 46, {}],
+    [CHECKS.formerMm, 14, RIGHT],
+    [CHECKS.pitch, 21, RIGHT],
+    [CHECKS.turns, 13, RIGHT],
+    [CHECKS.windingMm, 13, RIGHT],
     [CHECKS.wireM, 14, RIGHT],
-    [CHECKS.mass, 14, RIGHT],
-    [CHECKS.worst, 15, RIGHT],
-    [CHECKS.loss, 16, RIGHT],
-    [CHECKS.better, 34, {}],
+    [CHECKS.worst, 13, RIGHT],
+    [CHECKS.loss, 15, RIGHT],
+    [CHECKS.better, 42, {}],
   ]);
   const rows = record.alternatives.map((each) => [
     each.wire,
@@ -148,12 +147,11 @@ export function alternatives(record: CoilRecord, widthMm: number, measure: Measu
     short(each.turns, 2),
     fixed(each.lengthMm, 1),
     fixed(each.wireM, 2),
-    fixed(each.massG, 1),
     fixed(each.worstTapPercent, 2),
     fixed(each.lossFactor, 5),
     each.betterIn.join(', '),
   ]);
-  const body = table(columns, rows, measure, { sizeMm: SMALL_MM });
+  const body = table(columns, rows, measure, { sizeMm: SMALL_MM, rowMm: 4.8 });
   return stack([heading(CHECKS.alternatives, widthMm, measure), body], 0);
 }
 

@@ -58,3 +58,9 @@ export function signed(value: number, digits: number): string {
   const text = fixed(value, digits);
   return Number(text) > 0 ? `+${text}` : text.replace('-', '−');
 }
+
+/** With a capital first and a full stop last. */
+export function sentence(text: string): string {
+  const whole = text.charAt(0).toUpperCase() + text.slice(1);
+  return /[.!?]$/.test(whole) ? whole : `${whole}.`;
+}

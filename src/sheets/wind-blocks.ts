@@ -1,12 +1,12 @@
 /** The blocks of the page to wind from. */
 import * as TAP_WORDS from '../../templates/wording/tap-method.ts';
-import { CAUTIONS, DRAWING, FACTS, STEPS, TAPS } from '../../templates/wording/winding-sheet.ts';
+import { CAUTIONS, DRAWING, FACTS, TAPS } from '../../templates/wording/winding-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { elevation, elevationScale, scaleText } from '../drawing/elevation.ts';
 import { endView, isStaggered } from '../drawing/end-view.ts';
 import { BODY_MM, CAP_SHARE, label, line, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
-import { PANEL_MM, tapPicture } from '../drawing/tap-picture.ts';
+import { PANEL_MM, panelHeight, tapPicture } from '../drawing/tap-picture.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Block, beside, columns, heading, list, paragraph, stack, tickBox } from './block.ts';
 import { shares, table } from './table.ts';
@@ -101,17 +101,15 @@ export function tapTable(record: CoilRecord, widthMm: number, rowMm: number, mea
 /** Where round the former the taps stand; nothing when they stand in one line. */
 export function tapAngles(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
   if (!isStaggered(record)) return null;
-  const view = endView(record, 13);
-  const size = 2 * view.radiusMm;
-  const words = stack(
-    [
-      heading(DRAWING.above, widthMm - size - 12, measure),
-      paragraph(DRAWING.aboveWords, widthMm - size - 12, measure, { sizeMm: SMALL_MM }),
-    ],
-    0,
-  );
-  const drawn: Block = { widthMm: size + 8, heightMm: size, shapes: movedAll(view, size / 2 + 4, -size / 2) };
-  return { ...beside([words, drawn], 4), widthMm };
+  const { shapes, box } = endView(record, 13, measure);
+  const size = box.right - box.left;
+  const words = paragraph(DRAWING.aboveWords, widthMm - size - 4, measure, { sizeMm: SMALL_MM });
+  const drawn: Block = {
+    widthMm: size,
+    heightMm: box.top - box.bottom,
+    shapes: movedAll({ shapes }, -box.left, -box.top),
+  };
+  return { ...stack([heading(DRAWING.above, widthMm, measure), beside([words, drawn], 4)], 0), widthMm };
 }
 
 /** The tap of this coil, drawn, and how it is made. */
@@ -122,8 +120,8 @@ export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure)
     const stage = i as 0 | 1 | 2;
     const drawn: Block = {
       widthMm: PANEL_MM.width,
-      heightMm: PANEL_MM.height,
-      shapes: movedAll(tapPicture(method.name, stage), 0, -PANEL_MM.height),
+      heightMm: panelHeight(method.name),
+      shapes: movedAll(tapPicture(method.name, stage), 0, -panelHeight(method.name)),
     };
     const under = paragraph(words, PANEL_MM.width - 2, measure, { sizeMm: SMALL_MM });
     return { ...stack([drawn, under], 0.8), widthMm: PANEL_MM.width };
@@ -140,19 +138,13 @@ export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure)
   return { ...stack([head, beside(panels, 0.5), ...how], 0.8), widthMm };
 }
 
-/** Each step with its box, number and, where it has one, the turn at which the counter stands. */
+/** Each step with its box and its number. */
 export function stepItems(record: CoilRecord, widthMm: number, measure: Measure): Block[] {
   return record.steps.map((step) => {
-    const turn = step.turn === null || step.turn === 0 ? '' : STEPS.turn(short(step.turn, 3));
-    const turnWidth = turn === '' ? 0 : measure.width(turn, BODY_MM, true) + 2;
-    const text = paragraph(step.text, widthMm - 11 - turnWidth, measure);
+    const text = paragraph(step.text, widthMm - 11, measure);
     const base = -(CAP_SHARE + 0.1) * BODY_MM;
-    const shapes: Shape[] = [
-      tickBox(0, -3.3),
-      label(9.6, base, `${step.step}`, { sizeMm: BODY_MM, align: 'right', bold: true }),
-      ...movedAll(text, 11, 0),
-    ];
-    if (turn !== '') shapes.push(label(widthMm, base, turn, { sizeMm: BODY_MM, align: 'right', bold: true }));
+    const number = label(9.6, base, `${step.step}`, { sizeMm: BODY_MM, align: 'right', bold: true });
+    const shapes: Shape[] = [tickBox(0, -3.3), number, ...movedAll(text, 11, 0)];
     return { widthMm, heightMm: Math.max(4.2, text.heightMm), shapes };
   });
 }

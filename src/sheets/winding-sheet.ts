@@ -52,12 +52,14 @@ function stepsBlock(items: readonly Block[], words: string, count: 1 | 2, gapMm:
   return stack([head, columns(items, count, COLUMN_GAP, gapMm)], 0.3);
 }
 
-/** How closely page 1 is set: height of the drawing, of a row of the tap table, and the space between steps. */
+/** Height of the drawing of the coil on page 1, the largest first. */
+const DRAWING_MM = [90, 84, 72, 60, 48];
+/** How closely the rest is set: a row of the tap table, and the space between steps. */
 const CLOSENESS = [
-  { drawingMm: 90, rowMm: 5.4, gapMm: 1.4 },
-  { drawingMm: 84, rowMm: 5, gapMm: 1 },
-  { drawingMm: 72, rowMm: 4.7, gapMm: 0.6 },
-  { drawingMm: 60, rowMm: 4.5, gapMm: 0.4 },
+  { rowMm: 5.4, gapMm: 1.4 },
+  { rowMm: 5, gapMm: 1 },
+  { rowMm: 4.7, gapMm: 0.6 },
+  { rowMm: 4.5, gapMm: 0.4 },
 ] as const;
 
 /** The most leading steps that `holds` lets pass; 0 when not one. */
@@ -98,32 +100,36 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
     blocks: [strip, beside([{ ...stack(left, GAP), widthMm: column }, stack(right, GAP)], COLUMN_GAP)],
     ...(foot ? { foot } : {}),
   });
-  for (const { drawingMm, rowMm, gapMm } of CLOSENESS) {
-    const drawing = wind.coilDrawing(record, column, drawingMm, measure);
+  const drawings = DRAWING_MM.map((drawingMm) => wind.coilDrawing(record, column, drawingMm, measure));
+  for (const { rowMm, gapMm } of CLOSENESS) {
     const taps = wind.tapTable(record, column, rowMm, measure);
     const steps = stepsBlock(items, STEPS.heading, 1, gapMm, measure);
-    const whole: Arrangement[] = [
-      { left: [drawing, method, ...angles], right: [taps, steps], foot: wide },
-      { left: [drawing, method], right: [taps, ...angles, steps], foot: wide },
-      { left: [drawing, ...angles], right: [taps, steps, method], foot: wide },
-      { left: [drawing, method, narrow], right: [taps, ...angles, steps] },
-      { left: [drawing, method, ...angles, narrow], right: [taps, steps] },
-      { left: [drawing, ...angles, narrow], right: [taps, steps, method] },
-    ];
-    const found = whole.find((each) => fits(each, free));
-    if (found) return [page(found)];
+    for (const drawing of drawings) {
+      const whole: Arrangement[] = [
+        { left: [drawing, method, ...angles], right: [taps, steps], foot: wide },
+        { left: [drawing, method], right: [taps, ...angles, steps], foot: wide },
+        { left: [drawing, ...angles], right: [taps, steps, method], foot: wide },
+        { left: [drawing, method, narrow], right: [taps, ...angles, steps] },
+        { left: [drawing, method, ...angles, narrow], right: [taps, steps] },
+        { left: [drawing, ...angles, narrow], right: [taps, steps, method] },
+      ];
+      const found = whole.find((each) => fits(each, free));
+      if (found) return [page(found)];
+    }
   }
 
-  const drawing = wind.coilDrawing(record, column, 84, measure);
-  const taps = wind.tapTable(record, column, 4.7, measure);
   // Not all of it fits: the steps run on over the next pages, and what is left finds its place there too.
-  const some: Arrangement[] = [
-    { left: [drawing, method, ...angles], right: [taps], foot: wide },
-    { left: [drawing, method], right: [taps, ...angles], foot: wide },
-    { left: [drawing, method], right: [taps], foot: wide },
-    { left: [drawing], right: [taps] },
+  const taps = wind.tapTable(record, column, 4.7, measure);
+  const some: ((drawing: Block) => Arrangement)[] = [
+    (drawing) => ({ left: [drawing, method, ...angles], right: [taps], foot: wide }),
+    (drawing) => ({ left: [drawing, method], right: [taps, ...angles], foot: wide }),
+    (drawing) => ({ left: [drawing, method, narrow], right: [taps, ...angles] }),
+    (drawing) => ({ left: [drawing, method], right: [taps], foot: wide }),
+    (drawing) => ({ left: [drawing, narrow], right: [taps, ...angles] }),
+    (drawing) => ({ left: [drawing], right: [taps], foot: wide }),
   ];
-  const first = some.find((each) => fits(each, free)) ?? some[some.length - 1]!;
+  const tries = some.flatMap((arranged) => drawings.slice(1).map(arranged));
+  const first = tries.find((each) => fits(each, free)) ?? { left: [drawings[3]!], right: [taps] };
   const under = (begun: readonly Block[]) => ({
     ...first,
     right: [...first.right, stepsBlock(begun, STEPS.heading, 1, 1, measure)],
@@ -131,7 +137,7 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
   const most = mostSteps(items, (begun) => fits(under(begun), free));
   // A few steps torn off from the rest are worse than all of them on the next page.
   const count = most >= 4 ? most : 0;
-  const placed = new Set([...first.left, ...first.right, first.foot]);
+  const placed = new Set([...first.left, ...first.right, first.foot, ...(first.left.includes(narrow) ? [wide] : [])]);
   const bodies = [
     page(count > 0 ? under(items.slice(0, count)) : first),
     ...moreSteps(items.slice(count), count === 0, room.heightMm, measure),
@@ -145,44 +151,56 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
   return bodies;
 }
 
-function checkBlocks(record: CoilRecord, room: Room, rowMm: number, measure: Measure): Block[] {
+/** What is measured and what to do about it; then why the coil is as it is. */
+function checkBlocks(record: CoilRecord, room: Room, rowMm: number, measure: Measure): [Block[], Block[]] {
   const { widthMm } = room;
-  const left = (widthMm - 6) * 0.58;
+  const left = (widthMm - COLUMN_GAP) * 0.6;
+  const doing = { ...check.corrections(record, left, measure), widthMm: left };
+  const former = check.formerSizes(record, widthMm - COLUMN_GAP - left, measure);
   return [
-    check.checks(record, widthMm, rowMm, measure),
-    check.tapChecks(record, widthMm, rowMm, measure),
-    beside(
-      [
-        { ...check.corrections(record, left, measure), widthMm: left },
-        check.formerSizes(record, widthMm - 6 - left, measure),
-      ],
-      6,
-    ),
-    check.signature(widthMm, measure),
-    check.reasons(record, widthMm, measure),
-    ...present(check.alternatives(record, widthMm, measure)),
-    ...present(check.warnings(record, widthMm, measure)),
+    [
+      check.checks(record, widthMm, rowMm, measure),
+      check.tapChecks(record, widthMm, rowMm, measure),
+      beside([doing, former], COLUMN_GAP),
+      check.signature(widthMm, measure),
+    ],
+    [
+      check.reasons(record, widthMm, measure),
+      ...present(check.alternatives(record, widthMm, measure)),
+      ...present(check.warnings(record, widthMm, measure)),
+    ],
   ];
 }
 
-function toCheckBy(record: CoilRecord, room: Room, measure: Measure): Body[] {
-  let blocks: Block[] = [];
-  for (const rowMm of [7, 6.4, 5.8, 5.3]) {
-    blocks = checkBlocks(record, room, rowMm, measure);
-    if (height(blocks) <= room.heightMm) return [{ part: TITLE.check, blocks }];
-  }
-  // On two sheets there is room to write again.
+/** Blocks over as many pages as they need. */
+function flow(blocks: readonly Block[], first: string, more: string, heightMm: number): Body[] {
   const bodies: Body[] = [];
   let here: Block[] = [];
-  for (const block of checkBlocks(record, room, 6.4, measure)) {
-    if (here.length > 0 && height([...here, block]) > room.heightMm) {
-      bodies.push({ part: bodies.length === 0 ? TITLE.check : TITLE.checkMore, blocks: here });
+  const close = () => bodies.push({ part: bodies.length === 0 ? first : more, blocks: here });
+  for (const block of blocks) {
+    if (here.length > 0 && height([...here, block]) > heightMm) {
+      close();
       here = [];
     }
     here.push(block);
   }
-  bodies.push({ part: bodies.length === 0 ? TITLE.check : TITLE.checkMore, blocks: here });
+  close();
   return bodies;
+}
+
+/** Page 2; what explains the coil moves to a page of its own when rows to write in would become too low. */
+function toCheckBy(record: CoilRecord, room: Room, measure: Measure): Body[] {
+  const set = (rowMm: number) => checkBlocks(record, room, rowMm, measure);
+  for (const rowMm of [7, 6.4, 5.8, 5.2]) {
+    const blocks = set(rowMm).flat();
+    if (height(blocks) <= room.heightMm) return [{ part: TITLE.check, blocks }];
+  }
+  const rowMm = [7.5, 7, 6.4, 5.8, 5.2].find((row) => height(set(row)[0]) <= room.heightMm) ?? 6.4;
+  const [measured, explained] = set(rowMm);
+  return [
+    ...flow(measured, TITLE.check, TITLE.checkMore, room.heightMm),
+    ...flow(explained, TITLE.why, TITLE.why, room.heightMm),
+  ];
 }
 
 /** The pages as drawings. */

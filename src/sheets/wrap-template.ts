@@ -1,1 +1,300 @@
-export {};
+/**
+ * The wrap template: the surface of the former at true scale, to wrap round it printed side out. One page where it
+ * fits, turned if need be, else tiles. It reads the record and nothing else: same record, same bytes.
+ */
+import { TITLE } from '../../templates/wording/winding-sheet.ts';
+import { WRAP } from '../../templates/wording/wrap-template.ts';
+import type { Box, Measure } from '../drawing/boxes.ts';
+import { clipped } from '../drawing/clip.ts';
+import type { Shape } from '../drawing/drawing.ts';
+import { freePlace, placeLabels } from '../drawing/labels.ts';
+import { checkSquare, cross, RULER_BREADTH_MM, rulerAcross, rulerUp, SQUARE_ROOM_MM } from '../drawing/rulers.ts';
+import { arrow, label, line, moved, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
+import { type Developed, developed, PAPER_THICKNESS_MM, SCALE_MM, TAB_MM } from '../drawing/template.ts';
+import type { CoilRecord } from '../record/schema.ts';
+import { type Block, paragraph, stack } from './block.ts';
+import { PAPER_MM, type Page, Paper } from './page.ts';
+import { fixed, short } from './text.ts';
+import { crossPlaces, SHARED_MM, type Tile, type Tiling, tile } from './tiles.ts';
+import { titleBlock } from './title-block.ts';
+
+/** Left free round every page, mm: what most printers cannot print on. */
+export const TEMPLATE_MARGIN_MM = 7;
+const RULER_BAND = RULER_BREADTH_MM + 3;
+const HEAD_GAP = 3;
+const INFO = { width: 47, height: 14 };
+
+/** One page to be: its size, the room for the drawing and its tiling. */
+interface Format {
+  readonly widthMm: number;
+  readonly heightMm: number;
+  readonly tiling: Tiling;
+  readonly roomWidthMm: number;
+  readonly roomHeightMm: number;
+}
+
+/** What to do with the sheet, in two columns under the title. */
+function instructions(record: CoilRecord, drawn: Developed, tiled: boolean, widthMm: number, measure: Measure): Block {
+  const { former } = record;
+  const set =
+    former.flange !== null
+      ? WRAP.setRim(fixed(drawn.bottomMm, 2))
+      : former.kind === 'tube'
+        ? WRAP.setTube
+        : WRAP.setFoot;
+  const words = [
+    WRAP.print,
+    WRAP.side,
+    `${set} ${former.kind === 'tube' ? WRAP.jig : WRAP.printed}${drawn.unbored ? ` ${WRAP.unbored}` : ''}`,
+    WRAP.measure(
+      short(former.outsideDiameterMm / 2, 3),
+      short(PAPER_THICKNESS_MM / 2, 3),
+      fixed(drawn.circumferenceMm, 2),
+    ),
+    ...(tiled ? [WRAP.tiles] : []),
+  ];
+  const lines = words.map((text, i) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM, bold: i === 0 }));
+  return stack(lines, 0.3);
+}
+
+/** Where among its neighbours a tile lies. */
+function tileMap(tiling: Tiling, here: Tile): Block {
+  const cell = { width: 8, height: 4.6 };
+  const heightMm = tiling.rows * cell.height;
+  const shapes: Shape[] = [];
+  for (const each of tiling.tiles) {
+    const x = each.column * cell.width;
+    const y = -heightMm + each.row * cell.height;
+    shapes.push(rectangle(x, y, cell.width, cell.height, 'thin', each === here ? 0.8 : 1));
+    shapes.push(label(x + cell.width / 2, y + cell.height / 2, each.name, { align: 'centre', anchor: 'middle' }));
+  }
+  return { widthMm: tiling.columns * cell.width, heightMm, shapes };
+}
+
+/** Title and instructions of one page. */
+function head(
+  record: CoilRecord,
+  drawn: Developed,
+  tiling: Tiling,
+  here: Tile,
+  sheet: string,
+  widthMm: number,
+  measure: Measure,
+): Block {
+  const tiled = tiling.tiles.length > 1;
+  const part = tiled ? WRAP.tile(here.name) : WRAP.part('1:1');
+  const title = titleBlock(record, { document: WRAP.document, part, sheet }, widthMm, measure);
+  const map = tileMap(tiling, here);
+  const wordsWidth = tiled ? widthMm - map.widthMm - 4 : widthMm;
+  const words = instructions(record, drawn, tiled, wordsWidth, measure);
+  const shapes: Shape[] = [...title.shapes, ...movedAll(words, 0, -title.heightMm - 1.5)];
+  if (tiled) shapes.push(...movedAll(map, widthMm - map.widthMm - 0.5, -title.heightMm - 2));
+  const under = Math.max(words.heightMm, tiled ? map.heightMm + 0.5 : 0);
+  return { widthMm, heightMm: title.heightMm + 1.5 + under, shapes };
+}
+
+const wholeOf = (drawn: Developed): Box => ({
+  left: 0,
+  right: drawn.circumferenceMm + TAB_MM,
+  bottom: drawn.bottomMm,
+  top: drawn.topMm + SCALE_MM,
+});
+
+/** The way to lay the paper that needs the fewest pages; upright when it makes no difference. */
+function formatOf(record: CoilRecord, drawn: Developed, measure: Measure): Format {
+  const [short, long] = PAPER_MM[record.paper];
+  const whole = wholeOf(drawn);
+  const formats = [
+    [short, long],
+    [long, short],
+  ].map(([widthMm, heightMm]): Format => {
+    const inner = widthMm! - 2 * TEMPLATE_MARGIN_MM;
+    const roomWidthMm = inner - RULER_BAND;
+    // The head is lower without a map: try one page first.
+    const room = (tiling: Tiling) =>
+      heightMm! -
+      2 * TEMPLATE_MARGIN_MM -
+      RULER_BAND -
+      HEAD_GAP -
+      head(record, drawn, tiling, tiling.tiles[0]!, TITLE.sheet(10, 10), inner, measure).heightMm;
+    const one = tile(whole, Infinity, Infinity);
+    let roomHeightMm = room(one);
+    let tiling = tile(whole, roomWidthMm, roomHeightMm);
+    if (tiling.tiles.length > 1)
+      for (let i = 0; i < 2; i++) {
+        roomHeightMm = room(tiling);
+        tiling = tile(whole, roomWidthMm, roomHeightMm);
+      }
+    return { widthMm: widthMm!, heightMm: heightMm!, tiling, roomWidthMm, roomHeightMm };
+  });
+  const [upright, turned] = formats as [Format, Format];
+  return turned.tiling.tiles.length < upright.tiling.tiles.length ? turned : upright;
+}
+
+/** The arrow up, which side is printed, and which way the wire climbs. */
+function info(record: CoilRecord): Shape[] {
+  const right = record.frame.hand === 'right';
+  const [from, to] = right ? [6, INFO.width - 2] : [INFO.width - 2, 6];
+  return [
+    ...arrow(2.5, 0.5, 2.5, INFO.height - 0.5, 'outline'),
+    label(6, INFO.height - 3, `${WRAP.up}, ${WRAP.out}`, { bold: true }),
+    label(6, INFO.height - 7.2, WRAP.wire[record.frame.hand]),
+    ...arrow(from, 1.5, to, 3.5, 'outline'),
+  ];
+}
+
+/** What the lower edge is, written along it where there is room. */
+function datumWords(drawn: Developed, here: Tile, taken: readonly Box[], measure: Measure): Shape[] {
+  if (here.row > 0) return [];
+  const words = drawn.bottomMm === 0 ? WRAP.datum : WRAP.aboveDatum(fixed(drawn.bottomMm, 2));
+  const strip = { ...surface(drawn, here), bottom: drawn.bottomMm + 0.5, top: drawn.bottomMm + 3.5 };
+  const width = measure.width(words, SMALL_MM);
+  const place = freePlace(strip, [...taken, ...drawn.lines], width, 2.8) ?? freePlace(strip, taken, width, 2.8);
+  return place ? [label(place.x, place.y + 0.7, words)] : [];
+}
+
+/** The words on the tab, as much of them as a window shows whole. */
+function tabWords(drawn: Developed, window: Box, measure: Measure): Shape[] {
+  const low = Math.max(drawn.bottomMm, window.bottom);
+  const high = Math.min(drawn.topMm, window.top);
+  const long = Math.max(...WRAP.overlap.map((words) => measure.width(words, SMALL_MM)));
+  if (high - low < long + 2) return [];
+  const words = WRAP.overlap.map((text, i) =>
+    label(drawn.circumferenceMm + 3.8 + i * 3.8, (low + high) / 2, text, { align: 'centre', turnDeg: 90 }),
+  );
+  return clipped(words, window, measure);
+}
+
+/** Crosses on the shared strips with their letters, and the lines to cut along. */
+function joints(tiling: Tiling, taken: readonly Box[], measure: Measure): { shapes: Shape[]; taken: Box[] } {
+  const marks = crossPlaces(tiling).map((place, i) => ({
+    text: String.fromCharCode(97 + (i % 26)),
+    x: place.x,
+    y: place.y,
+    reachMm: 2.5,
+  }));
+  const shapes = marks.flatMap((mark) => cross(mark.x, mark.y, 2.5));
+  for (const { row, column, window } of tiling.tiles) {
+    const x = window.right - SHARED_MM / 2;
+    const y = window.top - SHARED_MM / 2;
+    if (column < tiling.columns - 1) shapes.push(line(x, window.bottom, x, window.top, 'hair', 'centre'));
+    if (row < tiling.rows - 1) shapes.push(line(window.left, y, window.right, y, 'hair', 'centre'));
+  }
+  // A letter has to be whole on both tiles: it stays in the strip, so the region is cut to it mark by mark.
+  const now = [...taken];
+  for (const mark of marks) {
+    const strip = { left: mark.x - 6, right: mark.x + 6, bottom: mark.y - 6, top: mark.y + 6 };
+    const placed = placeLabels([mark], strip, now, [], measure);
+    shapes.push(...placed.shapes);
+    now.splice(0, now.length, ...placed.taken);
+  }
+  return { shapes, taken: now };
+}
+
+/** Where the check square goes: beside the drawing, above it, or on free surface. */
+function squarePlace(format: Format, drawn: Developed, taken: readonly Box[]) {
+  for (const here of format.tiling.tiles) {
+    const { window } = here;
+    const width = window.right - window.left;
+    const high = window.top - window.bottom;
+    const last = here.column === format.tiling.columns - 1;
+    if (last && format.roomWidthMm - width >= SQUARE_ROOM_MM + 4)
+      return { tile: here, x: window.right + 4, y: window.bottom + 1 };
+    if (here.row === format.tiling.rows - 1 && format.roomHeightMm - high >= SQUARE_ROOM_MM + 2)
+      return { tile: here, x: window.left + 1, y: window.top + 2 };
+  }
+  for (const here of format.tiling.tiles) {
+    const free = surface(drawn, here);
+    const place =
+      freePlace(free, [...taken, ...drawn.lines], SQUARE_ROOM_MM, SQUARE_ROOM_MM) ??
+      freePlace(free, taken, SQUARE_ROOM_MM, SQUARE_ROOM_MM);
+    if (place) return { tile: here, x: place.x + 1, y: place.y + 1 };
+  }
+  return null;
+}
+
+/** The part of the sheet proper that a tile shows, a little inside its edges. */
+function surface(drawn: Developed, here: Tile): Box {
+  return {
+    left: Math.max(0, here.window.left) + 2,
+    right: Math.min(drawn.circumferenceMm, here.window.right) - 2,
+    bottom: Math.max(drawn.bottomMm, here.window.bottom) + 2,
+    top: Math.min(drawn.topMm, here.window.top) - 2,
+  };
+}
+
+/** The pages as drawings. */
+export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[] {
+  const drawn = developed(record, measure);
+  const format = formatOf(record, drawn, measure);
+  const { tiling } = format;
+  const joined = joints(tiling, drawn.taken, measure);
+  const all = [...drawn.shapes, ...joined.shapes];
+  const square = squarePlace(format, drawn, joined.taken);
+  const pictures = checkSquare(WRAP.square, measure);
+  const many = tiling.tiles.length + (square ? 0 : 1);
+  const x0 = TEMPLATE_MARGIN_MM + RULER_BAND;
+  const y0 = TEMPLATE_MARGIN_MM + RULER_BAND;
+  const inner = format.widthMm - 2 * TEMPLATE_MARGIN_MM;
+
+  const page = (here: Tile, n: number, content: readonly Shape[]): Page => {
+    const top = head(record, drawn, tiling, here, TITLE.sheet(n, many), inner, measure);
+    return {
+      widthMm: format.widthMm,
+      heightMm: format.heightMm,
+      shapes: [
+        ...movedAll(top, TEMPLATE_MARGIN_MM, format.heightMm - TEMPLATE_MARGIN_MM),
+        ...movedAll(rulerAcross(WRAP.unit), x0, TEMPLATE_MARGIN_MM + RULER_BREADTH_MM),
+        ...movedAll(rulerUp(WRAP.unit), TEMPLATE_MARGIN_MM + RULER_BREADTH_MM, y0),
+        ...content,
+      ],
+    };
+  };
+
+  const pages = tiling.tiles.map((here, i) => {
+    const toPage = (shape: Shape) => moved(shape, x0 - here.window.left, y0 - here.window.bottom);
+    const taken = [...joined.taken];
+    const shapes = [...clipped(all, here.window, measure), ...tabWords(drawn, here.window, measure)];
+    if (square?.tile === here) {
+      shapes.push(...movedAll(pictures, square.x, square.y));
+      taken.push({
+        left: square.x - 1,
+        right: square.x + SQUARE_ROOM_MM,
+        bottom: square.y - 1,
+        top: square.y + SQUARE_ROOM_MM,
+      });
+    }
+    const free = surface(drawn, here);
+    const place =
+      freePlace(free, [...taken, ...drawn.lines], INFO.width, INFO.height) ??
+      freePlace(free, taken, INFO.width, INFO.height);
+    if (place) {
+      shapes.push(...info(record).map((shape) => moved(shape, place.x, place.y)));
+      taken.push({ left: place.x, right: place.x + INFO.width, bottom: place.y, top: place.y + INFO.height });
+    }
+    shapes.push(...datumWords(drawn, here, taken, measure));
+    return page(here, i + 1, shapes.map(toPage));
+  });
+  // A surface too full for the square: it gets a page.
+  if (!square) pages.push(page(tiling.tiles[0]!, many, movedAll(pictures, x0 + 4, y0 + 4)));
+  return pages;
+}
+
+/** What a page of the template keeps free of ink. */
+export function templateFrame(page: Page): Box {
+  return {
+    left: TEMPLATE_MARGIN_MM,
+    right: page.widthMm - TEMPLATE_MARGIN_MM,
+    bottom: TEMPLATE_MARGIN_MM,
+    top: page.heightMm - TEMPLATE_MARGIN_MM,
+  };
+}
+
+/** The wrap template of a record as the bytes of a PDF. */
+export async function wrapTemplate(record: CoilRecord): Promise<Uint8Array> {
+  const paper = new Paper({
+    title: `${WRAP.document}: ${record.job}`,
+    subject: TITLE.record(record.hash.slice(0, 12)),
+  });
+  return paper.write(layOutWrapTemplate(record, paper));
+}

@@ -6,6 +6,7 @@ export const TITLE = {
   more: 'to wind from, continued',
   check: 'to check by',
   checkMore: 'to check by, continued',
+  why: 'why this coil',
   job: 'job',
   sheet: (n: number, of: number) => `sheet ${n} of ${of}`,
   record: (hash: string) => `record ${hash}`,
@@ -41,12 +42,12 @@ export const DRAWING = {
   rightHand: 'right-hand',
   leftHand: 'left-hand',
   heading: (scale: string) => `The coil, scale ${scale}`,
-  seen: 'Start hole in front. Full dot: this side; hollow: behind. Figures: mm from the datum to the wire centre.',
+  seen: 'Start hole in front. Dots: full on this side, hollow behind. Heights: mm from the datum to the wire centre.',
   hand: {
-    right: 'Right-hand: turns climb to the right on the side you see.',
-    left: 'Left-hand: turns climb to the left on the side you see.',
+    right: 'Climbs to the right on this side.',
+    left: 'Climbs to the left on this side.',
   },
-  earthed: { start: 'Earthed end: the start S.', finish: 'Earthed end: the finish F.' },
+  earthed: { start: 'Earthed end: start S.', finish: 'Earthed end: finish F.' },
   datumIs: (words: string) => `Datum: ${words}.`,
   above: 'Seen from above',
   aboveWords: 'Angles from the start hole S, counterclockwise; F is the finish.',
@@ -56,17 +57,16 @@ export const TAPS = {
   heading: 'Taps, counted from the start S',
   tap: 'tap',
   turn: 'turn',
-  position: 'from datum mm',
+  position: 'height mm',
   angle: 'angle °',
   inductance: 'µH',
-  deviation: 'off target %',
-  wire: 'wire used m',
+  deviation: 'off %',
+  wire: 'wire m',
 } as const;
 
 export const STEPS = {
   heading: 'Steps: tick each when it is done',
   more: 'Steps, continued',
-  turn: (turn: string) => `turn ${turn}`,
 } as const;
 
 export const CAUTIONS = { heading: 'Take care' } as const;
@@ -112,7 +112,6 @@ export const CHECKS = {
   turns: 'turns',
   windingMm: 'length mm',
   wireM: 'wire m',
-  mass: 'mass g',
   worst: 'worst tap %',
   loss: 'loss 1/Q',
   better: 'better in',

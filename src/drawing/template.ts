@@ -1,0 +1,149 @@
+/**
+ * The surface of the former, developed and seen from outside, at true scale. X is the arc, growing to the right with
+ * the angle (counterclockwise seen from above is to the right seen from outside with Z up); Y is Z, from the datum.
+ * The paper counts: the arc is taken at the outside radius and half its thickness. The seam lies in the widest angle
+ * without a hole.
+ */
+import type { CoilRecord, Hole } from '../record/schema.ts';
+import type { Box, Measure } from './boxes.ts';
+import type { Shape } from './drawing.ts';
+import { type Marked, placeLabels } from './labels.ts';
+import { circle, label, line, rectangle } from './shapes.ts';
+
+/** Thickness of the paper, mm. */
+export const PAPER_THICKNESS_MM = 0.1;
+/** Width of the overlap beyond the seam, mm. */
+export const TAB_MM = 10;
+/** Height of the scale of angles above the sheet, mm. */
+export const SCALE_MM = 6.5;
+
+export interface Developed {
+  readonly shapes: readonly Shape[];
+  /** What labels and holes take up. */
+  readonly taken: readonly Box[];
+  /** The edges of the winding: written over only where there is no better place. */
+  readonly lines: readonly Box[];
+  /** Some tap has no hole. */
+  readonly unbored: boolean;
+  readonly circumferenceMm: number;
+  readonly seamDeg: number;
+  /** Lower and upper edge of the sheet above the datum. */
+  readonly bottomMm: number;
+  readonly topMm: number;
+}
+
+interface Place {
+  readonly name: string;
+  readonly label: string;
+  readonly angleDeg: number;
+  readonly axialMm: number;
+  /** 0 when there is no hole. */
+  readonly diameterMm: number;
+}
+
+const holeName = (hole: Hole) => `hole ${hole.purpose} ${hole.label}`;
+
+/** Every hole of the wall, and the places of taps that have none. */
+export function places(record: CoilRecord): Place[] {
+  const found: Place[] = record.holes.map((hole) => ({
+    name: holeName(hole),
+    label: hole.label,
+    angleDeg: hole.angleDeg,
+    axialMm: hole.axialMm,
+    diameterMm: hole.diameterMm,
+  }));
+  const { taps } = record.windings[0]!;
+  for (const tap of taps.slice(0, -1)) {
+    if (record.holes.some((hole) => hole.purpose === 'tap' && hole.tap === tap.tap)) continue;
+    found.push({
+      name: `tap ${tap.tap}`,
+      label: `${tap.tap}`,
+      angleDeg: tap.angleDeg,
+      axialMm: tap.positionMm,
+      diameterMm: 0,
+    });
+  }
+  return found;
+}
+
+/** The middle of the widest gap between neighbouring angles. */
+export function seamOf(angles: readonly number[]): number {
+  const sorted = [...new Set(angles.map((angle) => ((angle % 360) + 360) % 360))].sort((a, b) => a - b);
+  let best = { from: sorted[0] ?? 0, gap: 0 };
+  sorted.forEach((from, i) => {
+    const gap = i + 1 < sorted.length ? sorted[i + 1]! - from : sorted[0]! + 360 - from;
+    if (gap > best.gap) best = { from, gap };
+  });
+  return (best.from + best.gap / 2) % 360;
+}
+
+/** A centre cross that runs past the hole. */
+function crossAt(x: number, y: number, reach: number): Shape[] {
+  return [line(x - reach, y, x + reach, y, 'hair'), line(x, y - reach, x, y + reach, 'hair')];
+}
+
+function markOf(place: Place, x: number): Shape[] {
+  const y = place.axialMm;
+  const r = place.diameterMm / 2;
+  if (r > 0) return [circle(x, y, r, 'hair', undefined, place.name), ...crossAt(x, y, r + 0.7)];
+  const d = 1.4;
+  return [line(x - d, y - d, x + d, y + d, 'thin'), line(x - d, y + d, x + d, y - d, 'thin')];
+}
+
+/** Ticks every 10 degrees, figures every 30 where they clear the corners, above the upper edge. */
+function angleScale(seam: number, circumference: number, top: number): Shape[] {
+  const shapes: Shape[] = [];
+  for (let angle = 0; angle < 360; angle += 10) {
+    const x = (((angle - seam + 360) % 360) / 360) * circumference;
+    const long = angle % 30 === 0;
+    shapes.push(line(x, top, x, top + (long ? 2.6 : 1.4), long ? 'thin' : 'hair'));
+    if (long && x > 4.5) shapes.push(label(x, top + 3.4, `${angle}°`, { align: 'centre' }));
+  }
+  return shapes;
+}
+
+export function developed(record: CoilRecord, measure: Measure): Developed {
+  const { former } = record;
+  const winding = record.windings[0]!;
+  const circumference = Math.PI * (former.outsideDiameterMm + PAPER_THICKNESS_MM);
+  const bottom = former.flange ? former.flange.lowerMm : 0;
+  const top = former.lengthMm - (former.flange ? former.flange.upperMm : 0);
+  const all = places(record).filter((place) => place.axialMm > bottom && place.axialMm < top);
+  const seam = seamOf(all.map((place) => place.angleDeg));
+  const x = (angleDeg: number) => ((((angleDeg - seam) % 360) + 360) % 360) * (circumference / 360);
+  const shapes: Shape[] = [
+    rectangle(0, bottom, circumference, top - bottom, 'outline'),
+    line(circumference, bottom, circumference + TAB_MM, bottom, 'thin', 'dashed'),
+    line(circumference + TAB_MM, bottom, circumference + TAB_MM, top, 'thin', 'dashed'),
+    line(circumference, top, circumference + TAB_MM, top, 'thin', 'dashed'),
+    ...angleScale(seam, circumference, top),
+  ];
+  const half = winding.wire.overallMm / 2;
+  const edges = [winding.startMm - half, winding.finishMm + half];
+  for (const z of edges) shapes.push(line(0, z, circumference, z, 'hair', 'dashed'));
+  const lines = edges.map((z): Box => ({ left: 0, right: circumference, bottom: z - 0.1, top: z + 0.1 }));
+  const marks: Marked[] = [];
+  for (const place of all) {
+    const at = x(place.angleDeg);
+    shapes.push(...markOf(place, at));
+    marks.push({
+      text: place.label,
+      x: at,
+      y: place.axialMm,
+      reachMm: place.diameterMm > 0 ? place.diameterMm / 2 + 0.7 : 1.5,
+    });
+  }
+  const region = { left: 1, right: circumference - 1, bottom: bottom + 0.6, top: top - 0.6 };
+  const labels = placeLabels(marks, region, [], lines, measure);
+  shapes.push(...labels.shapes);
+  return {
+    shapes,
+    taken: labels.taken,
+    lines,
+    unbored: all.some((place) => place.diameterMm === 0),
+    circumferenceMm: circumference,
+    seamDeg: seam,
+    bottomMm: bottom,
+    topMm: top,
+  };
+}
