@@ -1,5 +1,13 @@
 /** What `plan` says when it is done: the coil, why it, its taps, what else was possible, what was written. */
-import { capacitanceText, inductanceText, lengthText, resistanceText, tidy, wireText } from '../src/quantity/format.ts';
+import {
+  capacitanceText,
+  inductanceText,
+  lengthText,
+  resistanceText,
+  significantText,
+  tidy,
+  wireText,
+} from '../src/quantity/format.ts';
 import type { CoilRecord, Tap } from '../src/record/schema.ts';
 import { lay, wrap } from './table.ts';
 
@@ -33,7 +41,7 @@ function chosen(record: CoilRecord, columns: number): string[] {
     winding.pitchKind
   ];
   const facts = [
-    `${winding.wire.name}, ${tidy(winding.turns)} turns ${pitch}, pitch ${lengthText(winding.pitchMm, 3)}, ${record.frame.hand} hand, ${record.frame.earthedEnd} earthed`,
+    `${winding.wire.name}, ${tidy(Number(winding.turns.toFixed(3)))} turns ${pitch}, pitch ${lengthText(winding.pitchMm, 3)}, ${record.frame.hand} hand, ${record.frame.earthedEnd} earthed`,
     `former: ${former.kind}, ${former.material}, ${lengthText(former.outsideDiameterMm, 3)} outside, ${lengthText(former.lengthMm)} long; winding ${lengthText(winding.windingLengthMm)}`,
     `whole coil: ${inductanceText(winding.inductanceUh)}, ${resistanceText(winding.resistanceDcOhm)} at DC, ${capacitanceText(winding.selfCapacitancePf)} of its own`,
     `wire: ${wireText(winding.wireLengthM)} and ${wireText(winding.leadsM)} for the ends, ${tidy(winding.wireMassG, 3)} g`,
@@ -46,10 +54,10 @@ function chosen(record: CoilRecord, columns: number): string[] {
 /** Columns of the tap table, the most needed first; what does not fit the page is in plan.json and on the sheet. */
 const TAP_COLUMNS: readonly (readonly [title: string, cell: (tap: Tap) => string])[] = [
   ['tap', (tap) => String(tap.tap)],
-  ['turn', (tap) => tap.turn.toFixed(2)],
+  ['turn', (tap) => tap.turn.toFixed(3)],
   ['angle', (tap) => `${tap.angleDeg.toFixed(1)}°`],
   ['at mm', (tap) => tap.positionMm.toFixed(2)],
-  ['µH', (tap) => tidy(tap.inductanceUh, 4)],
+  ['µH', (tap) => significantText(tap.inductanceUh, 4)],
   ['off %', (tap) => signed(tap.deviationPercent)],
   ['wire m', (tap) => tap.wireFromStartM.toFixed(2)],
   ['kHz', (tap) => (tap.range === null ? '' : `${tap.range.lowKhz.toFixed(0)}..${tap.range.highKhz.toFixed(0)}`)],
@@ -144,10 +152,8 @@ function written(record: CoilRecord, folder: string, files: readonly Written[], 
     hung(`  ${path.padEnd(name)}${sizeText(bytes.length).padStart(8)}  `, note, columns),
   );
   const assumed = Object.keys(record.assumed).length;
-  const remark =
-    assumed === 0
-      ? []
-      : wrap(`${assumed} values were left to the program; plan.json lists them under assumed.`, columns);
+  const left = assumed === 1 ? '1 value was' : `${assumed} values were`;
+  const remark = assumed === 0 ? [] : wrap(`${left} left to the program; plan.json lists them under assumed.`, columns);
   return [...wrap(`Written to ${folder}`, columns), ...lines, ...remark];
 }
 

@@ -13,7 +13,7 @@ export interface Finding {
   readonly todo: string;
 }
 
-/** Sections that could be read; what is missing is not checked here. */
+/** Sections that could be read. One that is there and could not be read is undefined; one that is not there is absent. */
 export type Readable = Partial<ReadJob>;
 
 export function crossCheck(job: Readable): readonly Finding[] {
@@ -22,9 +22,10 @@ export function crossCheck(job: Readable): readonly Finding[] {
 
 type Want = ReadJob['want'];
 
-function checkWant({ want, set, ...rest }: Readable): Finding[] {
+function checkWant(job: Readable): Finding[] {
+  const { want } = job;
   if (want === undefined) return [];
-  if (want.band !== undefined) return checkBand(want, 'set' in rest || set !== undefined);
+  if (want.band !== undefined) return checkBand(want, 'set' in job);
   const found: Finding[] = [];
   if (want.overlap !== undefined) {
     found.push(
@@ -78,7 +79,6 @@ function checkWant({ want, set, ...rest }: Readable): Finding[] {
   return found;
 }
 
-/** `set` may be absent because it was not written, or because it could not be read. */
 function checkBand(want: Want, hasSet: boolean): Finding[] {
   const found: Finding[] = [];
   const { low, high } = want.band ?? { low: 0, high: 0 };

@@ -44,10 +44,9 @@ function readable(data: unknown): Readable {
   if (!isData(data)) return {};
   const found: Record<string, unknown> = {};
   for (const [key, schema] of Object.entries(jobSchema.shape)) {
+    if (!Object.hasOwn(data, key)) continue;
     const parsed = schema.safeParse(data[key]);
-    // A set that is there and wrong counts as there.
-    if (parsed.success) found[key] = parsed.data;
-    else if (key in data) found[key] = undefined;
+    found[key] = parsed.success ? parsed.data : undefined;
   }
   return found as Readable;
 }

@@ -104,11 +104,14 @@ function empty(file: string): Fault {
   });
 }
 
+/** One fault a line: what follows on the same line is mostly the same slip seen again. */
 function broken(errors: readonly YAMLError[], lines: LineCounter, file: string): Fault {
+  const lineOf = (error: YAMLError) => lines.linePos(error.pos[0]).line;
+  const first = errors.filter((error, index) => errors.findIndex((other) => lineOf(other) === lineOf(error)) === index);
   return new Fault(
     3,
-    errors.map((error): FaultParts => {
-      const place = { file, line: lines.linePos(error.pos[0]).line };
+    first.map((error): FaultParts => {
+      const place = { file, line: lineOf(error) };
       const got = (error.message.split('\n')[0] ?? '').replace(/[\p{Cc}\p{Cf}]/gu, '?').slice(0, 200);
       if (error.code === 'DUPLICATE_KEY') {
         return {

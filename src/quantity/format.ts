@@ -10,6 +10,14 @@ export function tidy(value: number, digits = 6): string {
   return text.includes('.') ? text.replace(/\.?0+$/, '') : text;
 }
 
+/** Exactly `digits` significant digits, for columns that line up: 14.50, 205.0, 1700. */
+export function significantText(value: number, digits: number): string {
+  if (value === 0 || !Number.isFinite(value)) return String(value);
+  const rounded = Number(value.toPrecision(digits));
+  const decimals = digits - 1 - Math.floor(Math.log10(Math.abs(rounded)));
+  return rounded.toFixed(Math.min(20, Math.max(0, decimals)));
+}
+
 /** `3.48 µH`, `240 µH`, `1.2 mH`. */
 export function inductanceText(uH: number): string {
   if (Math.abs(uH) >= 1e4) return `${tidy(uH / 1e3, 4)} mH`;

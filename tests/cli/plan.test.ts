@@ -290,7 +290,7 @@ describe('what plan says', () => {
     const { record, files } = await planned();
     const text = await shown(80);
     for (const tap of record.windings[0]?.taps ?? []) {
-      expect(text).toMatch(new RegExp(`^ +${tap.tap} +${tap.turn.toFixed(2)} +${tap.angleDeg.toFixed(1)}° `, 'm'));
+      expect(text).toMatch(new RegExp(`^ +${tap.tap} +${tap.turn.toFixed(3)} +${tap.angleDeg.toFixed(1)}° `, 'm'));
     }
     for (const [index, one] of record.alternatives.entries()) {
       expect(text).toContain(

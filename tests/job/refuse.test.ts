@@ -155,6 +155,18 @@ describe('a job that is refused', () => {
     ]);
   });
 
+  it('for a set that is wrong, and not for one that is missing besides', () => {
+    expect(lines('job: x\nwant: { band: 530 kHz to 1700 kHz }\nset: { capacitor: 15 pf to 380 pF }')).toEqual([
+      '3 set.capacitor: "15 pf", whose unit "pf" is not known (lower end of "15 pf to 380 pF")',
+    ]);
+  });
+
+  it('with one fault for a line that is not YAML', () => {
+    expect(lines('job: x\nwant:\n%  band: 5')).toEqual([
+      '3 -: Plain value cannot start with directive indicator character %',
+    ]);
+  });
+
   it('with the nearest known key or word', () => {
     const todo = (text: string) => refusals(text).map((fault) => fault.todo);
     expect(todo(`${WISH}papper: A4`)).toEqual(['did you mean paper?']);
