@@ -86,18 +86,21 @@ function list(inductancesUh: readonly number[]): Demand {
   };
 }
 
-/** Fewest positions whose coverages, each `cover` wide in frequency, fill `band` with this overlap. */
+/** Fewest positions whose coverages, each `cover` wide in frequency, fill `band` with this overlap; may be Infinity. */
 export function fewestPositions(band: number, cover: number, overlap: number): number {
   const gain = cover / (1 + overlap);
   if (gain <= 1) return Number.POSITIVE_INFINITY;
   return Math.max(1, Math.ceil(1 + Math.log(band / cover) / Math.log(gain) - 1e-9));
 }
 
-function band(want: Extract<Wish, { kind: 'band' }>, set: SetCircuit, largestSelfPf: number): Demand {
+/** Fewest positions that a band needs when every section has this self-capacitance in pF; may be Infinity. */
+export function positionsFor(want: Extract<Wish, { kind: 'band' }>, set: SetCircuit, selfPf: number): number {
   const { outPf, inPf } = setCapacitance(set);
-  const ratio = want.highKhz / want.lowKhz;
-  const cover = Math.sqrt((inPf + largestSelfPf) / (outPf + largestSelfPf));
-  const taps = want.taps ?? fewestPositions(ratio, cover, want.overlap);
+  return fewestPositions(want.highKhz / want.lowKhz, Math.sqrt((inPf + selfPf) / (outPf + selfPf)), want.overlap);
+}
+
+function band(want: Extract<Wish, { kind: 'band' }>, set: SetCircuit, taps: number): Demand {
+  const { outPf, inPf } = setCapacitance(set);
   const targets = (view: CoilView): number[] => {
     const whole = uh(want.lowKhz, inPf + view.selfPf(Number.POSITIVE_INFINITY));
     const wholeTop = want.lowKhz * Math.sqrt((inPf + view.selfPf(whole)) / (outPf + view.selfPf(whole)));
@@ -122,12 +125,12 @@ function band(want: Extract<Wish, { kind: 'band' }>, set: SetCircuit, largestSel
 }
 
 /**
- * The demand of a job. `largestSelfPf` is the self-capacitance of the largest coil that may come out: it narrows every
- * position and so sets how many are needed. A band without a set has been refused when the job was read.
+ * The demand of a job. A band that leaves the taps out gets as many as it needs when every section has `selfPf`; that
+ * number may be more than a switch has, or Infinity. A band without a set has been refused when the job was read.
  */
-export function demandOf(job: Job, largestSelfPf: number): Demand {
+export function demandOf(job: Job, selfPf: number): Demand {
   if (job.want.kind === 'range') return range(job.want);
   if (job.want.kind === 'list') return list(job.want.inductancesUh);
   if (job.set === null) throw new Error('a band without a set passed the reading of the job');
-  return band(job.want, job.set, largestSelfPf);
+  return band(job.want, job.set, job.want.taps ?? positionsFor(job.want, job.set, selfPf));
 }

@@ -171,7 +171,9 @@ function designWith(job: Job, demand: Demand, candidate: Candidate, method: TapM
   }
   if (settled === 'no room') throw new Error('the finish angle always finds room');
   if ('noPlaceFor' in settled) {
-    const text = `tap ${settled.noPlaceFor} finds no place: its neighbours are nearer than a ${method.name} allows`;
+    const text = settled.beyond
+      ? `tap ${settled.noPlaceFor} of ${demand.taps} would lie beyond the whole coil: fewer switch positions are enough`
+      : `tap ${settled.noPlaceFor} finds no place: its neighbours are nearer than a ${method.name} allows`;
     return { ok: false, breaches: [{ limit: 'want.taps', got: demand.taps, allowed: settled.noPlaceFor - 1, text }] };
   }
   const coil = coilOf(setting, settled, settled.turns);

@@ -40,29 +40,40 @@ export interface Placing {
   readonly firstNotAbove: boolean;
 }
 
+/** Why a tap (numbered from 1) finds no place: its neighbours are too near, or it asks for more than the whole coil has. */
+export interface NoPlace {
+  readonly noPlaceFor: number;
+  readonly beyond: boolean;
+}
+
+/** Whether taps that were placed for another number of turns still clear the start, one another and the finish. */
+export function stillClear(taps: readonly number[], placing: Placing): boolean {
+  const { turns, method } = placing;
+  return taps.every((turn, index) => turn < turns - 1e-9 && clears(turn, taps.slice(0, index), turns, method));
+}
+
 /**
  * Turns of the taps below the whole coil for these target inductances (lowest first, the whole coil's not among them),
- * or the number of the first tap that finds no place.
+ * or the first tap that finds no place.
  */
-export function placeTaps(
-  coil: Coil,
-  targetsUh: readonly number[],
-  placing: Placing,
-): { turns: number[] } | { noPlaceFor: number } {
+export function placeTaps(coil: Coil, targetsUh: readonly number[], placing: Placing): { turns: number[] } | NoPlace {
   const step = placing.layout === 'in line' ? 1 : 1 / STAGGER_STEPS;
   const reach = placing.layout === 'in line' ? 0 : REACH;
   const placed: number[] = [];
   for (const [index, target] of targetsUh.entries()) {
     const ideal = coil.turnFor(target);
+    if (ideal >= coil.turns) return { noPlaceFor: index + 1, beyond: true };
     const under = Math.floor(ideal / step + 1e-9);
     const below = under * step;
     const above = below + step;
     const nearer =
       below > 0 && target - coil.inductanceUh(below) <= coil.inductanceUh(Math.min(above, coil.turns)) - target;
     const base = index === 0 && placing.firstNotAbove ? under : nearer ? under : under + 1;
+    // The place on the other side of the ideal one is the second nearest, and so on in turn.
+    const toOther = base === under ? 1 : -1;
     let found: number | null = null;
     for (let k = 0; k <= 2 * reach && found === null; k++) {
-      const offset = k % 2 === 0 ? -k / 2 : (k + 1) / 2;
+      const offset = toOther * (k % 2 === 0 ? -k / 2 : (k + 1) / 2);
       if (index === 0 && placing.firstNotAbove && offset > 0) continue;
       // Steps are counted in whole numbers so that a place is the same number whichever way it was reached.
       const turn = (base + offset) * step;
@@ -70,7 +81,7 @@ export function placeTaps(
       if (turn <= previous + 1e-9 || turn >= placing.turns - 1e-9 || turn < Math.min(0.5, placing.turns)) continue;
       if (clears(turn, placed, placing.turns, placing.method)) found = turn;
     }
-    if (found === null) return { noPlaceFor: index + 1 };
+    if (found === null) return { noPlaceFor: index + 1, beyond: ideal >= placing.turns };
     placed.push(found);
   }
   return { turns: placed };

@@ -6,16 +6,19 @@
  * design by more than MARGIN, or DESIGNS are done. On small spaces this finds what designing every candidate finds.
  */
 import type { Job } from '../job/job.ts';
+import { MOST_TAPS } from '../job/schema.ts';
 import { selfCapacitance } from '../physics/medhurst.ts';
 import { type Candidate, candidatesOf, diametersFor } from './candidates.ts';
-import { type Demand, demandOf } from './demand.ts';
+import { type Demand, demandOf, positionsFor } from './demand.ts';
 import { type Breach, type Design, designOf, variantsOf } from './design.ts';
 import { type Estimate, estimateOf, type Size, sizeOf } from './estimate.ts';
-import { ALL_ASPECTS, type Aspect, aspectOf } from './prefer.ts';
+import { ALL_ASPECTS, ASPECTS, type Aspect, aspectOf } from './prefer.ts';
 
 /** How much worse than the best design an estimate may be and still be worked out. */
 const MARGIN = 0.08;
 const DESIGNS = 48;
+/** How near the taps fall is a matter of luck that no estimate knows: there as many again are worked out, near or not. */
+const DESIGNS_FOR_TAPS = 2 * DESIGNS;
 /** Designs looked at for each aspect in which another coil may be better ... */
 const OTHERS = 3;
 /** ... unless they lose more than so many times what the chosen one loses. */
@@ -40,10 +43,22 @@ export interface NotFound {
   readonly breaches: readonly Breach[];
 }
 
+/** Self-capacitance in pF of a coil as long as it is wide, on the widest former of the job. */
+function largestSelfPf(job: Job): number {
+  const widest = Math.max(...diametersFor(job), 10);
+  return selfCapacitance(widest / 1e3, widest / 1e3) * 1e12;
+}
+
 /** The demand, with the narrowest positions that any coil of the job may have. */
 export function demandFor(job: Job): Demand {
-  const widest = Math.max(...diametersFor(job), 10);
-  return demandOf(job, selfCapacitance(widest / 1e3, widest / 1e3) * 1e12);
+  return demandOf(job, largestSelfPf(job));
+}
+
+/** A job whose band leaves the taps out, with the fewest that a coil without self-capacitance would need. */
+function withFewestTaps(job: Job): Job {
+  const { want, set } = job;
+  if (want.kind !== 'band' || want.taps !== null || set === null) return job;
+  return { ...job, want: { ...want, taps: positionsFor(want, set, 0) } };
 }
 
 /** Longest former that both the job and the printer allow, mm. */
@@ -68,8 +83,30 @@ export function hopefulOf(job: Job, demand: Demand, candidates: readonly Candida
   return list;
 }
 
+/**
+ * The coil for a job. Self-capacitance narrows the positions of a band a little, and only the coil tells how much: where
+ * it decides whether one position fewer is enough, that is tried first.
+ */
 export function search(job: Job): Found | NotFound {
   const demand = demandFor(job);
+  const fewest = demandFor(withFewestTaps(job));
+  if (fewest.taps < demand.taps && fewest.taps <= MOST_TAPS) {
+    const found = searchFor(job, fewest);
+    if ('chosen' in found) return found;
+  }
+  if (demand.taps > MOST_TAPS) return { demand, tried: 0, breaches: [tooManyPositions(demand)] };
+  return searchFor(job, demand);
+}
+
+/** For a band that no switch can cover in positions as narrow as the set's capacitor makes them. */
+function tooManyPositions(demand: Demand): Breach {
+  const text = Number.isFinite(demand.taps)
+    ? `the capacitor of the set spans so little that ${demand.taps} switch positions would be needed, ${MOST_TAPS} are the most`
+    : 'the capacitor of the set spans less than the overlap takes up: no number of switch positions fills the band';
+  return { limit: 'want.overlap', got: demand.taps, allowed: MOST_TAPS, text };
+}
+
+function searchFor(job: Job, demand: Demand): Found | NotFound {
   const candidates = candidatesOf(job);
   const hopeful = hopefulOf(job, demand, candidates);
   const aspect = aspectOf(job.prefer);
@@ -126,8 +163,10 @@ function bestOf(
   let best: Design | null = null;
   let bestGuess = 0;
   let done = 0;
+  const byLuck = aspect === ASPECTS.worstTap;
+  const [margin, most] = byLuck ? [Number.POSITIVE_INFINITY, DESIGNS_FOR_TAPS] : [MARGIN, DESIGNS];
   for (const { one, guess } of sorted) {
-    if (best !== null && (guess > bestGuess * (1 + MARGIN) || done >= DESIGNS)) break;
+    if (best !== null && (guess > bestGuess * (1 + margin) || done >= most)) break;
     const design = work(one.candidate);
     done++;
     if (design !== null && (best === null || isBetter(design, best, aspect))) {

@@ -12,7 +12,7 @@ import type { Job } from '../job/job.ts';
 import type { Candidate } from './candidates.ts';
 import type { CoilView, Demand } from './demand.ts';
 import { meanDiameterMm, turnsFor } from './estimate.ts';
-import { placeTaps, STAGGER_STEPS } from './place-taps.ts';
+import { type NoPlace, type Placing, placeTaps, STAGGER_STEPS, stillClear } from './place-taps.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
 
 /** `more` and `fewer`: the diameter or pitch follows the whole turns above or below instead of the nearest. */
@@ -37,9 +37,12 @@ export interface Setting {
 
 /** Largest change of a groove's pitch, as a part of a layer, that still prints as whole layers. */
 const PITCH_PLAY_LAYERS = 0.1;
-const ROUNDS = 14;
-/** The finish hole of a printed former stands at whole degrees. */
-const FINISH_STEPS = 360;
+const ROUNDS = 18;
+const TRIMS = 8;
+/** Two places for a tap can call for one another without end; from this round on it stays where it was, if it may. */
+const TAPS_STAY_FROM = 9;
+/** The finish hole of a printed former stands at whole degrees; of few turns a degree is too much, there at tenths. */
+const finishSteps = (turns: number) => (turns < 10 ? 3600 : 360);
 
 const roundTo = (value: number, steps: number) => Math.round(value * steps) / steps;
 
@@ -94,7 +97,7 @@ function wholeTarget(demand: Demand, coil: Coil): number {
 }
 
 function wholeTurns(setting: Setting, freedom: Freedom, exact: number): number {
-  if (freedom === 'finish angle') return Math.max(1 / FINISH_STEPS, roundTo(exact, FINISH_STEPS));
+  if (freedom === 'finish angle') return Math.max(1 / finishSteps(exact), roundTo(exact, finishSteps(exact)));
   if (freedom === 'nearest') return Math.max(1, Math.round(exact));
   if (freedom === 'more') return Math.ceil(exact);
   if (freedom === 'fewer') return Math.max(1, Math.floor(exact));
@@ -108,8 +111,8 @@ function wholeTurns(setting: Setting, freedom: Freedom, exact: number): number {
  * The coil at rest; or the first tap that finds no place; or `no room` when this freedom cannot take up the fraction
  * inside what the job permits.
  */
-export function settle(setting: Setting, freedom: Freedom): Settled | { noPlaceFor: number } | 'no room' {
-  const { demand, candidate, method, layout } = setting;
+export function settle(setting: Setting, freedom: Freedom): Settled | NoPlace | 'no room' {
+  const { demand, candidate, method } = setting;
   const mean = meanDiameterMm(candidate);
   const gapsMm = method.gapMm * (demand.taps - 1);
   const guess = turnsFor(demand.wholeUh(mean * 0.05), mean, candidate.pitch.mm, candidate.wire.bareMm, gapsMm);
@@ -136,10 +139,12 @@ export function settle(setting: Setting, freedom: Freedom): Settled | { noPlaceF
       if (!within(setting, next)) return 'no room';
     }
     const targets = demand.targetsUh(viewOf(coil, wholeUh)).slice(0, -1);
-    const placing = { layout, method, turns, firstNotAbove: demand.kind === 'band' };
-    const placed = placeTaps(coil, targets, placing);
-    if ('noPlaceFor' in placed) return placed;
-    next.taps = placed.turns;
+    const placing = placingOf(setting, turns);
+    if (round < TAPS_STAY_FROM || !stillClear(state.taps, placing)) {
+      const placed = placeTaps(coil, targets, placing);
+      if ('noPlaceFor' in placed) return placed;
+      next.taps = placed.turns;
+    }
     const previous: Settled = state;
     const atRest =
       next.turns === previous.turns &&
@@ -149,7 +154,47 @@ export function settle(setting: Setting, freedom: Freedom): Settled | { noPlaceF
     if (atRest) break;
     state = next;
   }
-  return state;
+  return freedom === 'finish angle' ? trimmed(setting, state) : state;
+}
+
+/**
+ * The finish moved by its own steps until the coil that ends there is right. A longer trial coil has a whole last turn where
+ * this one has a part of one, and with a tap in that turn the two differ by a few tenths of a percent.
+ */
+function trimmed(setting: Setting, settled: Settled): Settled {
+  const steps = finishSteps(settled.turns);
+  let state = settled;
+  let best = settled;
+  let least = Number.POSITIVE_INFINITY;
+  for (let round = 0; round < TRIMS; round++) {
+    const coil = coilOf(setting, state, state.turns);
+    const wholeUh = wholeTarget(setting.demand, coil);
+    const ratio = wholeUh / coil.inductanceUh(state.turns);
+    if (Math.abs(ratio - 1) < least) {
+      best = state;
+      least = Math.abs(ratio - 1);
+    }
+    // L goes with the turns to about the power of 1.7.
+    const move = Math.round(state.turns * (ratio ** (1 / 1.7) - 1) * steps);
+    if (move === 0) break;
+    const turns = roundTo(state.turns + move / steps, steps);
+    const taps = tapsKept(setting, coil, state.taps, turns, wholeUh);
+    if (taps === null) break;
+    state = { ...state, turns, taps };
+  }
+  return best;
+}
+
+/** The taps as they are when they clear the finish at `turns`, else placed anew; null when that cannot be. */
+function tapsKept(setting: Setting, coil: Coil, taps: readonly number[], turns: number, wholeUh: number) {
+  const placing = placingOf(setting, turns);
+  if (stillClear(taps, placing)) return taps;
+  const placed = placeTaps(coil, setting.demand.targetsUh(viewOf(coil, wholeUh)).slice(0, -1), placing);
+  return 'noPlaceFor' in placed ? null : placed.turns;
+}
+
+function placingOf(setting: Setting, turns: number): Placing {
+  return { layout: setting.layout, method: setting.method, turns, firstNotAbove: setting.demand.kind === 'band' };
 }
 
 /** Targets of the final coil, the whole coil's last. */
