@@ -37,7 +37,4 @@ const fonts = dirname(require.resolve('dejavu-fonts-ttf/package.json'));
 for (const font of ['DejaVuSans', 'DejaVuSans-Bold', 'DejaVuSansMono']) {
   await copyFile(join(fonts, 'ttf', `${font}.ttf`), join(dist, `${font}.ttf`));
 }
-await copyFile(
-  join(dirname(require.resolve('manifold-3d/package.json')), 'manifold.wasm'),
-  join(dist, 'manifold.wasm'),
-);
+await copyFile(require.resolve('manifold-3d/manifold.wasm'), join(dist, 'manifold.wasm'));

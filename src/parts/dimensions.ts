@@ -4,9 +4,6 @@
 import { axialAt } from '../coil/layout.ts';
 import type { CoilRecord, Former, Hole } from '../record/schema.ts';
 
-/** Width of one extruded line from the common 0.4 mm nozzle (common practice); walls are counted in such lines. */
-export const LINE_MM = 0.45;
-
 export interface FormerDimensions {
   readonly former: Former;
   readonly segments: number;
@@ -18,6 +15,8 @@ export interface FormerDimensions {
   readonly topR: number;
   readonly lengthMm: number;
   readonly chamferMm: number;
+  /** Width of one printed line; walls are counted in such lines. */
+  readonly lineMm: number;
   /** The plain winding surface lies between these two. */
   readonly surfaceFromMm: number;
   readonly surfaceToMm: number;
@@ -42,7 +41,7 @@ export function roofMm(diameterMm: number): number {
 }
 
 export function formerDimensions(record: CoilRecord): FormerDimensions {
-  const { former } = record;
+  const former = asCut(record.former);
   const winding = record.windings[0]!;
   const outsideR = former.outsideDiameterMm / 2;
   const flangeR = former.flange ? former.flange.diameterMm / 2 : outsideR;
@@ -61,6 +60,7 @@ export function formerDimensions(record: CoilRecord): FormerDimensions {
     topR: flangeR,
     lengthMm: former.lengthMm,
     chamferMm: former.chamferMm,
+    lineMm: former.print?.lineMm ?? 0,
     surfaceFromMm: former.flange ? former.flange.lowerMm : former.footMm,
     surfaceToMm,
     holes,
@@ -69,11 +69,18 @@ export function formerDimensions(record: CoilRecord): FormerDimensions {
   };
 }
 
-/** Mounting holes that stand in an ear are cut with the ear; all others go through the wall. */
+/** The former with its ears' holes as they are modelled: wider by the printer's compensation. */
+function asCut(former: Former): Former {
+  const more = former.print?.holeCompensationMm ?? 0;
+  return { ...former, ears: former.ears.map((ear) => ({ ...ear, holeDiameterMm: ear.holeDiameterMm + more })) };
+}
+
+/** Mounting holes that stand in an ear are cut with the ear; all others go through the wall, by the printer's compensation wider. */
 function wallHoles(record: CoilRecord): Hole[] {
   const inEar = (hole: Hole) =>
     hole.purpose === 'mount' && record.former.ears.some((ear) => angleBetween(ear.angleDeg, hole.angleDeg) < 0.01);
-  return record.holes.filter((hole) => !inEar(hole));
+  const more = record.former.print?.holeCompensationMm ?? 0;
+  return record.holes.filter((hole) => !inEar(hole)).map((hole) => ({ ...hole, diameterMm: hole.diameterMm + more }));
 }
 
 export function angleBetween(aDeg: number, bDeg: number): number {

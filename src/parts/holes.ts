@@ -1,6 +1,6 @@
 /** Holes, ears and the datum mark of the former: what is cut out of the turned body and what is set on it. */
 import type { Former } from '../record/schema.ts';
-import { type FormerDimensions, LINE_MM } from './dimensions.ts';
+import type { FormerDimensions } from './dimensions.ts';
 import type { Loft, Point2, Point3 } from './solid.ts';
 
 const RAD = Math.PI / 180;
@@ -114,7 +114,7 @@ export function earCutters(d: FormerDimensions): Loft[] {
         const corner = radius / Math.cos(Math.PI / n);
         return at(ear.angleDeg, ear.centreRadiusMm + corner * Math.cos(a), corner * Math.sin(a), z);
       });
-    const c = Math.min(d.chamferMm, ear.widthMm / 2 - r - LINE_MM);
+    const c = Math.min(d.chamferMm, ear.widthMm / 2 - r - d.lineMm);
     const foot = c > 0 ? [ring(r + c + PROUD_MM, -PROUD_MM), ring(r, c)] : [ring(r, -PROUD_MM)];
     return {
       kind: 'loft',

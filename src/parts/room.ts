@@ -4,7 +4,7 @@
  */
 import { Fault, type FaultParts } from '../fault.ts';
 import type { Hole } from '../record/schema.ts';
-import { angleBetween, type FormerDimensions, LINE_MM, roofMm } from './dimensions.ts';
+import { angleBetween, type FormerDimensions, roofMm } from './dimensions.ts';
 import { earHalfRootMm, earOverlapMm } from './holes.ts';
 
 const mm = (x: number) => `${Number(x.toFixed(3))} mm`;
@@ -19,11 +19,11 @@ export function requireRoom(d: FormerDimensions): void {
 function wallFaults(d: FormerDimensions): FaultParts[] {
   const faults: FaultParts[] = [];
   const left = d.outsideR - d.boreR - (d.groove?.depthMm ?? 0);
-  if (!(d.boreR > 0) || !(left >= 2 * LINE_MM))
+  if (!(d.boreR > 0) || !(left >= 2 * d.lineMm))
     faults.push({
       code: 'former-wall-thin',
       got: `a wall of ${mm(left)} under the winding (outside ${mm(2 * d.outsideR)}, bore ${mm(2 * d.boreR)})`,
-      expected: `at least two printed lines, ${mm(2 * LINE_MM)}, and a bore`,
+      expected: `at least two printed lines, ${mm(2 * d.lineMm)}, and a bore`,
       todo: 'make the wall thicker or the groove shallower',
     });
   if (!Number.isInteger(d.segments) || d.segments < 24 || d.segments % 4 !== 0)
@@ -98,7 +98,7 @@ function holeFaults(d: FormerDimensions): FaultParts[] {
     const r = hole.diameterMm / 2;
     const under = hole.axialMm - r - d.chamferMm;
     const over = d.lengthMm - hole.axialMm - roofMm(hole.diameterMm);
-    if (!(r > 0) || r > 0.6 * d.boreR || under < LINE_MM || over < LINE_MM)
+    if (!(r > 0) || r > 0.6 * d.boreR || under < d.lineMm || over < d.lineMm)
       faults.push({
         code: 'former-hole-no-room',
         got: `hole ${hole.label} of ${mm(hole.diameterMm)} at ${mm(hole.axialMm)}`,
@@ -134,7 +134,7 @@ function earFaults(d: FormerDimensions): FaultParts[] {
   const faults: FaultParts[] = [];
   for (const ear of d.former.ears) {
     const r = ear.holeDiameterMm / 2;
-    if (ear.widthMm / 2 - r < 2 * LINE_MM || ear.centreRadiusMm - r < d.footR || ear.thicknessMm <= 2 * d.chamferMm)
+    if (ear.widthMm / 2 - r < 2 * d.lineMm || ear.centreRadiusMm - r < d.footR || ear.thicknessMm <= 2 * d.chamferMm)
       faults.push({
         code: 'former-ear-no-room',
         got: `an ear ${mm(ear.widthMm)} wide and ${mm(ear.thicknessMm)} thick, its hole of ${mm(ear.holeDiameterMm)} at radius ${mm(ear.centreRadiusMm)}`,

@@ -132,6 +132,10 @@ export const formerSchema = z.strictObject({
     .describe('tap numbers and the letter S, cut into the face of the upper flange at the angle of their hole'),
   numberHeightMm: num,
   datumMark: z.strictObject({ angleDeg: num, widthMm: num, depthMm: num }).nullable(),
+  print: z
+    .strictObject({ lineMm: num, holeCompensationMm: num.describe('added to every hole as modelled') })
+    .nullable()
+    .describe('what the printer needs; null for a tube'),
   segments: num.int().describe('chords round the former'),
   stiffness: text.describe('what the winding tension does to this wall'),
 });

@@ -6,7 +6,7 @@ import type { Coil } from '../coil/coil.ts';
 import { angleOf, type Hand } from '../coil/layout.ts';
 import type { Job } from '../job/job.ts';
 import type { Former, Hole } from '../record/schema.ts';
-import { findMaterial } from '../stock/materials.ts';
+import { findMaterial, type Material } from '../stock/materials.ts';
 import { type TapMethod, WEB_MM, wireHoleMm } from './tap-methods.ts';
 
 const RIM_MM = 4;
@@ -16,8 +16,10 @@ const TUBE_MARGIN_MM = 10;
 const ANCHOR_ARC_MM = 6;
 /** Strain that the winding may put on a printed wall before it is made thicker: 0.2 % of diameter is 0.3 % of L. */
 const STRAIN_GOAL = 0.002;
-export const FINISH_BACK = 3;
-export const FINISH_ON = 2;
+const FINISH_BACK = 3;
+const FINISH_ON = 2;
+/** Least that may be left between two holes. */
+export const LEAST_WEB_MM = 0.8;
 
 /** Depth and floor of a groove for this wire: half a wire deep, so that the wire's centre lies at the outside diameter. */
 export function grooveFor(overallMm: number): { depthMm: number; floorMm: number; widthMm: number } {
@@ -56,15 +58,15 @@ export function startMm(around: Around): number {
   return Math.ceil((foot + Math.max(anchor, runIn, 3)) * 2) / 2;
 }
 
-/** Turns from one finish hole to the next: a turn and the part of it that keeps the holes apart. */
-function finishStep(around: Around, meanMm: number): number {
+/** Turns from one finish hole to the next: a turn and the part of it that keeps the holes apart, also inside the wall. */
+function finishStep(around: Around): number {
   const apart = wireHoleMm(around.overallMm, 1) + WEB_MM;
   const arc = Math.sqrt(Math.max(0, apart ** 2 - around.pitchMm ** 2));
-  return 1 + arc / (Math.PI * meanMm);
+  return 1 + arc / (Math.PI * insideMm(around));
 }
 
 export function finishHoles(around: Around, coil: Coil): { turn: number; offset: number }[] {
-  const step = finishStep(around, coil.shape.meanDiameterMm);
+  const step = finishStep(around);
   const trim = around.job.winding.finishTrim;
   const back = trim ? Math.min(FINISH_BACK, Math.floor(coil.turns - 1)) : 0;
   const row: { turn: number; offset: number }[] = [];
@@ -82,16 +84,25 @@ export function formerLengthMm(around: Around, coil: Coil): number {
   return Math.ceil((last + runOut + rim) * 2) / 2;
 }
 
-function wallFor(around: Around, modulusGPa: number): { wallMm: number; strain: number } {
+function wallFor(around: Around): { wallMm: number; strain: number; material: Material } {
   const { job, grooved, overallMm } = around;
+  const found = findMaterial(job.former.material);
+  if (!found.ok) throw new Error(`material ${job.former.material} passed the reading of the job`);
+  const { material } = found;
   const groove = grooved ? overallMm / 2 : 0;
-  const strainAt = (wall: number) => hoopStrain(around.tensionN, around.pitchMm, wall - groove, modulusGPa);
-  if (job.former.wallMm !== null) return { wallMm: job.former.wallMm, strain: strainAt(job.former.wallMm) };
+  const strainAt = (wall: number) => hoopStrain(around.tensionN, around.pitchMm, wall - groove, material.modulusGPa);
+  const stated = job.former.wallMm;
+  if (stated !== null) return { wallMm: stated, strain: strainAt(stated), material };
   const line = job.printer.lineMm;
   let lines = 4;
   while (lines < 8 && strainAt(lines * line + groove) > STRAIN_GOAL) lines++;
   const wallMm = Math.round((lines * line + groove) * 100) / 100;
-  return { wallMm, strain: strainAt(wallMm) };
+  return { wallMm, strain: strainAt(wallMm), material };
+}
+
+/** Diameter at which holes come nearest to one another: the bore of a printed former, about the outside of a thin tube. */
+function insideMm(around: Around): number {
+  return Math.max(around.outsideMm - 2 * wallFor(around).wallMm, around.outsideMm / 4);
 }
 
 /** Ears at the foot for M4 screws, across the start hole's line so that leads stay free. */
@@ -109,9 +120,7 @@ function earsFor(radiusMm: number): Former['ears'] {
 export function formerFor(around: Around, coil: Coil, taps: readonly number[], hand: Hand): Former {
   const { job, outsideMm, grooved, overallMm } = around;
   const printed = job.former.kind === 'printed';
-  const found = findMaterial(job.former.material);
-  if (!found.ok) throw new Error(`material ${job.former.material} passed the reading of the job`);
-  const { wallMm, strain } = wallFor(around, found.material.modulusGPa);
+  const { wallMm, strain, material } = wallFor(around);
   const flanges = printed && job.former.flanges;
   const flangeMm = outsideMm + 2 * RIM_MM;
   const groove = grooveFor(overallMm);
@@ -124,8 +133,8 @@ export function formerFor(around: Around, coil: Coil, taps: readonly number[], h
   return {
     kind: job.former.kind,
     surface: grooved ? 'grooved' : 'smooth',
-    material: found.material.name,
-    densityGCm3: found.material.densityGPerCm3,
+    material: material.name,
+    densityGCm3: material.densityGPerCm3,
     outsideDiameterMm: outsideMm,
     boreDiameterMm: Math.round((outsideMm - 2 * wallMm) * 100) / 100,
     wallMm,
@@ -139,9 +148,10 @@ export function formerFor(around: Around, coil: Coil, taps: readonly number[], h
     numbers: flanges ? numbers : [],
     numberHeightMm: 3.2,
     datumMark: printed ? { angleDeg: 0, widthMm: 1.2, depthMm: 0.6 } : null,
+    print: printed ? { lineMm: job.printer.lineMm, holeCompensationMm: job.printer.holeCompensationMm } : null,
     // Chords within 0.01 mm of the circle at this diameter, in steps of 12 so that marks fall on them.
     segments: Math.max(48, Math.ceil(Math.PI / Math.acos(1 - 0.01 / (outsideMm / 2)) / 12) * 12),
-    stiffness: `${around.tensionN.toFixed(1)} N at this pitch takes ${percent} % off the diameter of a ${wallMm.toFixed(2)} mm wall of ${found.material.name} (modulus ${found.material.modulusGPa} GPa), ${(strain * 160).toFixed(2)} % off the inductance; wind no tighter`,
+    stiffness: `${around.tensionN.toFixed(1)} N at this pitch takes ${percent} % off the diameter of a ${wallMm.toFixed(2)} mm wall of ${material.name} (modulus ${material.modulusGPa} GPa), ${(strain * 160).toFixed(2)} % off the inductance; wind no tighter`,
   };
 }
 
@@ -190,17 +200,22 @@ export function holesFor(around: Around, coil: Coil, taps: readonly number[], me
   return holes;
 }
 
-/** The two holes that come nearest to one another for their size, if they leave less than 0.8 mm between them. */
-export function tightestPair(holes: readonly Hole[], outsideMm: number): { a: Hole; b: Hole; leftMm: number } | null {
+/**
+ * The two holes that come nearest to one another for their size, if they leave less than 0.8 mm between them anywhere in
+ * the wall; printed holes have a roof that rises to 0.71 of their diameter.
+ */
+export function tightestPair(holes: readonly Hole[], boreMm: number): { a: Hole; b: Hole; leftMm: number } | null {
   let worst: { a: Hole; b: Hole; leftMm: number } | null = null;
   for (let i = 0; i < holes.length; i++)
     for (let j = i + 1; j < holes.length; j++) {
-      const a = holes[i]!;
-      const b = holes[j]!;
+      const [a, b] = holes[i]!.axialMm <= holes[j]!.axialMm ? [holes[i]!, holes[j]!] : [holes[j]!, holes[i]!];
       const turn = Math.abs(a.angleDeg - b.angleDeg) / 360;
-      const arc = Math.min(turn, 1 - turn) * Math.PI * outsideMm;
-      const leftMm = Math.hypot(arc, a.axialMm - b.axialMm) - (a.diameterMm + b.diameterMm) / 2;
-      if (leftMm < 0.8 - 1e-6 && (worst === null || leftMm < worst.leftMm)) worst = { a, b, leftMm };
+      const arc = Math.min(turn, 1 - turn) * Math.PI * boreMm;
+      const rise = b.axialMm - a.axialMm;
+      const round = Math.hypot(arc, rise) - (a.diameterMm + b.diameterMm) / 2;
+      const roof = Math.hypot(arc, rise - a.diameterMm * Math.SQRT1_2) - b.diameterMm / 2;
+      const leftMm = Math.min(round, roof);
+      if (leftMm < LEAST_WEB_MM - 1e-6 && (worst === null || leftMm < worst.leftMm)) worst = { a, b, leftMm };
     }
   return worst;
 }

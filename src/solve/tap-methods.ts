@@ -36,6 +36,11 @@ export function wireHoleMm(overallMm: number, wires: 1 | 2): number {
   return Math.max(0.8, Math.ceil((overallMm * (wires + 0.25) + 0.2) * 10) / 10);
 }
 
+/** Whole turns between two holes in one line; a printed hole has a roof that makes it a fifth taller. */
+function turnsBetweenHoles(holeMm: number, pitchMm: number): number {
+  return Math.ceil((1.21 * holeMm + WEB_MM) / pitchMm);
+}
+
 /** A hole of two wires clears the turns beside it. */
 export function hasLand(pitchMm: number, overallMm: number): boolean {
   return wireHoleMm(overallMm, 2) <= 2 * pitchMm - overallMm + 1e-9;
@@ -49,7 +54,7 @@ export function tapMethodsFor(wire: Wire, pitchMm: number, close: boolean): read
   const drawn: TapMethod = {
     name: 'drawn in',
     gapMm: 0,
-    turnsApart: Math.ceil((wireHoleMm(w, 2) + WEB_MM) / pitchMm),
+    turnsApart: turnsBetweenHoles(wireHoleMm(w, 2), pitchMm),
     degreesApart: 15,
     holes: 1,
     holeMm: wireHoleMm(w, 2),
@@ -79,7 +84,7 @@ export function tapMethodsFor(wire: Wire, pitchMm: number, close: boolean): read
   const pair: TapMethod = {
     name: 'cut pair',
     gapMm: 0,
-    turnsApart: Math.ceil((wireHoleMm(w, 1) + WEB_MM) / pitchMm),
+    turnsApart: turnsBetweenHoles(wireHoleMm(w, 1), pitchMm),
     degreesApart: 20,
     holes: 2,
     holeMm: wireHoleMm(w, 1),

@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { Fault } from '../../src/fault.ts';
+import { formerDimensions } from '../../src/parts/dimensions.ts';
 import { formerSolid } from '../../src/parts/former.ts';
 import { teardrop } from '../../src/parts/holes.ts';
 import type { Engraving } from '../../src/parts/solid.ts';
@@ -115,4 +116,19 @@ test('a mounting hole that stands in an ear is not cut through the wall too', ()
     formerSolid({ ...base, holes: [...base.holes, { ...mount, angleDeg }] })!.expected.genus;
   expect(genus(ear.angleDeg)).toBe(formerSolid(base)!.expected.genus);
   expect(genus(ear.angleDeg + 90)).toBe(formerSolid(base)!.expected.genus + 1);
+});
+
+describe('hole compensation of the printer', () => {
+  test('widens every modelled hole, in wall and ears, and leaves the record alone', () => {
+    const record = sampleRecord({ surface: 'grooved' });
+    const wider = { ...record, former: { ...record.former, print: { lineMm: 0.45, holeCompensationMm: 0.2 } } };
+    const plain = formerDimensions(record);
+    const cut = formerDimensions(wider);
+    expect(cut.holes.length).toBeGreaterThan(5);
+    for (const [i, hole] of cut.holes.entries())
+      expect(hole.diameterMm).toBeCloseTo(plain.holes[i]!.diameterMm + 0.2, 9);
+    for (const [i, ear] of cut.former.ears.entries())
+      expect(ear.holeDiameterMm).toBeCloseTo(plain.former.ears[i]!.holeDiameterMm + 0.2, 9);
+    expect(wider.holes).toEqual(record.holes);
+  });
 });
