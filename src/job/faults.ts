@@ -1,5 +1,5 @@
 /** From the issues of the schema to faults with file, line and key. */
-import type { z } from 'zod';
+import type * as z from 'zod';
 import type { FaultParts } from '../fault.ts';
 import { shown } from './field.ts';
 import { nearest } from './nearest.ts';

@@ -2,7 +2,7 @@
  * Fields of a job: each reads one value as written and answers with the value in the unit of the code, or with what
  * was wrong, as an issue whose `params` are the parts of a fault. Each carries its own piece of JSON Schema.
  */
-import { z } from 'zod';
+import * as z from 'zod';
 import type { KindName } from '../quantity/kind.ts';
 import { KINDS } from '../quantity/kind.ts';
 import { type Allowed, type Parsed, parseQuantity, quote, type Range, type Refused } from '../quantity/parse.ts';

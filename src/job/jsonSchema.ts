@@ -1,5 +1,5 @@
 /** The JSON Schema of a job file, for editors; shipped as `templates/schemas/job.schema.json`. */
-import { z } from 'zod';
+import * as z from 'zod';
 import { DEFAULTS } from './defaults.ts';
 import { jobSchema } from './schema.ts';
 

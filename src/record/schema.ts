@@ -6,7 +6,7 @@
  * lower end. Angle 0 is the start hole, positive counterclockwise seen from above; a right-hand helix climbs that way,
  * so a hole at turn t lies at angle +360 frac(t) for a right-hand and at -360 frac(t) (mod 360) for a left-hand coil.
  */
-import { z } from 'zod';
+import * as z from 'zod';
 
 const text = z.string();
 const num = z.number();

@@ -1,4 +1,5 @@
 import fc from 'fast-check';
+import { create, unitDependencies } from 'mathjs';
 import { describe, expect, it } from 'vitest';
 import { KINDS, type KindName } from '../../src/quantity/kind.ts';
 import { parseQuantity } from '../../src/quantity/parse.ts';
@@ -138,6 +139,21 @@ describe('a quantity', () => {
     );
     console.log(`quantities there and back: ${ran}`);
     expect(ran).toBeGreaterThan(0);
+  });
+
+  it('knows or refuses every unit of the library, for every kind, without throwing', () => {
+    const { Unit } = create({ ...unitDependencies });
+    const names = Object.keys(Reflect.get(Unit, 'UNITS'));
+    let ran = 0;
+    for (const name of names) {
+      for (const kind of Object.keys(KINDS) as KindName[]) {
+        parseQuantity(`5 ${name}`, kind);
+        parseQuantity(`5 k${name}`, kind);
+        ran += 2;
+      }
+    }
+    console.log(`units of the library tried: ${names.length}, quantities: ${ran}`);
+    expect(names.length).toBeGreaterThan(100);
   });
 
   it('answers any text without throwing, and any accepted value lies in the range of its kind', () => {
