@@ -32,6 +32,8 @@ export interface Placed {
   readonly shapes: Shape[];
   /** What is now taken: the marks and their labels. */
   readonly taken: Box[];
+  /** Labels for which there was no room. */
+  readonly missing: string[];
 }
 
 /** Directions of a label from its mark, the handiest first. */
@@ -76,8 +78,7 @@ function findPlace(mark: Marked, region: Box, taken: readonly Box[], lines: read
 
 /**
  * A label beside every mark, clear of all marks and labels and inside `region`; a thin leader joins the two where they
- * are not side by side. `lines` may be written over where there is no better place. Throws when the region is too
- * small for its labels.
+ * are not side by side. `lines` may be written over where there is no better place. What found no room at all is named.
  */
 export function placeLabels(
   marks: readonly Marked[],
@@ -88,9 +89,13 @@ export function placeLabels(
 ): Placed {
   const all = [...taken, ...marks.map((mark) => around(mark.x, mark.y, mark.reachMm))];
   const shapes: Shape[] = [];
+  const missing: string[] = [];
   for (const mark of marks) {
     const found = findPlace(mark, region, all, lines, measure);
-    if (!found) throw new Error(`no room for the label ${mark.text}`);
+    if (!found) {
+      missing.push(mark.text);
+      continue;
+    }
     if (found.leader) {
       shapes.push(found.leader);
       // What is placed later keeps off the leader's middle.
@@ -101,7 +106,7 @@ export function placeLabels(
     shapes.push(found.text);
     all.push(found.box);
   }
-  return { shapes, taken: all };
+  return { shapes, taken: all, missing };
 }
 
 /** Lower left corner of a free rectangle in a region, nearest to the region's middle, or null. */

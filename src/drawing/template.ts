@@ -17,12 +17,17 @@ export const TAB_MM = 10;
 /** Height of the scale of angles above the sheet, mm. */
 export const SCALE_MM = 6.5;
 
+/** Room that a figure of the scale of angles needs. */
+const FIGURE_ROOM_MM = 9;
+
 export interface Developed {
   readonly shapes: readonly Shape[];
   /** What labels and holes take up. */
   readonly taken: readonly Box[];
   /** The edges of the winding: written over only where there is no better place. */
   readonly lines: readonly Box[];
+  /** Labels for which there was no room. */
+  readonly unlabelled: readonly string[];
   /** Some tap has no hole. */
   readonly unbored: boolean;
   readonly circumferenceMm: number;
@@ -90,14 +95,15 @@ function markOf(place: Place, x: number): Shape[] {
   return [line(x - d, y - d, x + d, y + d, 'thin'), line(x - d, y + d, x + d, y - d, 'thin')];
 }
 
-/** Ticks every 10 degrees, figures every 30 where they clear the corners, above the upper edge. */
+/** Ticks every 10 degrees, figures every 30 (on a small former fewer) clear of the corners, above the upper edge. */
 function angleScale(seam: number, circumference: number, top: number): Shape[] {
   const shapes: Shape[] = [];
+  const figures = [30, 60, 90, 180].find((step) => (step / 360) * circumference >= FIGURE_ROOM_MM) ?? 360;
   for (let angle = 0; angle < 360; angle += 10) {
     const x = (((angle - seam + 360) % 360) / 360) * circumference;
     const long = angle % 30 === 0;
     shapes.push(line(x, top, x, top + (long ? 2.6 : 1.4), long ? 'thin' : 'hair'));
-    if (long && x > 4.5) shapes.push(label(x, top + 3.4, `${angle}°`, { align: 'centre' }));
+    if (angle % figures === 0 && x > 4.5) shapes.push(label(x, top + 3.4, `${angle}°`, { align: 'centre' }));
   }
   return shapes;
 }
@@ -140,6 +146,7 @@ export function developed(record: CoilRecord, measure: Measure): Developed {
     shapes,
     taken: labels.taken,
     lines,
+    unlabelled: labels.missing,
     unbored: all.some((place) => place.diameterMm === 0),
     circumferenceMm: circumference,
     seamDeg: seam,

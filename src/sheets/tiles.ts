@@ -43,27 +43,32 @@ export function tile(whole: Box, roomWidthMm: number, roomHeightMm: number): Til
   return { rows, columns, tiles };
 }
 
-/** Where the crosses stand: on the middle of every shared strip, two to a side of a tile. */
-export function crossPlaces(tiling: Tiling): { name: string; x: number; y: number }[] {
-  const found: { name: string; x: number; y: number }[] = [];
-  for (const { name, row, column, window } of tiling.tiles) {
-    const right = tiling.tiles.find((other) => other.row === row && other.column === column + 1);
-    const above = tiling.tiles.find((other) => other.column === column && other.row === row + 1);
-    const share = [0.3, 0.7];
-    if (right)
-      for (const part of share)
-        found.push({
-          name: `${name}${right.name}`,
-          x: window.right - SHARED_MM / 2,
-          y: window.bottom + part * (window.top - window.bottom),
-        });
-    if (above)
-      for (const part of share)
-        found.push({
-          name: `${name}${above.name}`,
-          x: window.left + part * (window.right - window.left),
-          y: window.top - SHARED_MM / 2,
-        });
+/** A place on the middle line of a shared strip, and how far along it one may move. */
+export interface Joint {
+  readonly x: number;
+  readonly y: number;
+  readonly along: 'x' | 'y';
+  readonly low: number;
+  readonly high: number;
+}
+
+/** Where crosses are wanted: two to every shared side of a tile. */
+export function joints(tiling: Tiling): Joint[] {
+  const found: Joint[] = [];
+  for (const { row, column, window } of tiling.tiles) {
+    const at = (low: number, high: number, part: number) => low + part * (high - low);
+    for (const part of [0.3, 0.7]) {
+      if (column < tiling.columns - 1) {
+        const x = window.right - SHARED_MM / 2;
+        const [low, high] = [window.bottom, window.top];
+        found.push({ x, y: at(low, high, part), along: 'y', low, high });
+      }
+      if (row < tiling.rows - 1) {
+        const y = window.top - SHARED_MM / 2;
+        const [low, high] = [window.left, window.right];
+        found.push({ x: at(low, high, part), y, along: 'x', low, high });
+      }
+    }
   }
   return found;
 }

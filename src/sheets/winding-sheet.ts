@@ -31,7 +31,8 @@ interface Room {
   readonly heightMm: number;
 }
 
-const height = (blocks: readonly Block[]) => stack(blocks, GAP).heightMm;
+const height = (blocks: readonly Block[]) =>
+  blocks.reduce((sum, block) => sum + block.heightMm, Math.max(0, blocks.length - 1) * GAP);
 const present = (block: Block | null): Block[] => (block === null ? [] : [block]);
 
 /** A page in two columns over an optional foot that takes the whole width. */

@@ -4,10 +4,10 @@
  */
 import { TITLE } from '../../templates/wording/winding-sheet.ts';
 import { WRAP } from '../../templates/wording/wrap-template.ts';
-import type { Box, Measure } from '../drawing/boxes.ts';
+import { type Box, type Measure, overlap } from '../drawing/boxes.ts';
 import { clipped } from '../drawing/clip.ts';
 import type { Shape } from '../drawing/drawing.ts';
-import { freePlace, placeLabels } from '../drawing/labels.ts';
+import { freePlace } from '../drawing/labels.ts';
 import { checkSquare, cross, RULER_BREADTH_MM, rulerAcross, rulerUp, SQUARE_ROOM_MM } from '../drawing/rulers.ts';
 import { arrow, label, line, moved, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
 import { type Developed, developed, PAPER_THICKNESS_MM, SCALE_MM, TAB_MM } from '../drawing/template.ts';
@@ -15,7 +15,7 @@ import type { CoilRecord } from '../record/schema.ts';
 import { type Block, paragraph, stack } from './block.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
 import { fixed, short } from './text.ts';
-import { crossPlaces, SHARED_MM, type Tile, type Tiling, tile } from './tiles.ts';
+import { type Joint, joints, SHARED_MM, type Tile, type Tiling, tile } from './tiles.ts';
 import { titleBlock } from './title-block.ts';
 
 /** Left free round every page, mm: what most printers cannot print on. */
@@ -51,6 +51,7 @@ function instructions(record: CoilRecord, drawn: Developed, tiled: boolean, widt
       short(PAPER_THICKNESS_MM / 2, 3),
       fixed(drawn.circumferenceMm, 2),
     ),
+    ...(drawn.unlabelled.length > 0 ? [WRAP.unlabelled(drawn.unlabelled.join(', '))] : []),
     ...(tiled ? [WRAP.tiles] : []),
   ];
   const lines = words.map((text, i) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM, bold: i === 0 }));
@@ -165,30 +166,41 @@ function tabWords(drawn: Developed, window: Box, measure: Measure): Shape[] {
   return clipped(words, window, measure);
 }
 
+/** The nearest place along a strip where a cross and its letter stand clear, or null. */
+function slide(joint: Joint, taken: readonly Box[]): { x: number; y: number; room: Box } | null {
+  const half = SHARED_MM / 2;
+  const from = joint[joint.along];
+  for (let off = 0; off <= joint.high - joint.low; off += 1)
+    for (const place of [from + off, from - off]) {
+      if (place < joint.low + half || place > joint.high - half) continue;
+      const x = joint.along === 'x' ? place : joint.x;
+      const y = joint.along === 'y' ? place : joint.y;
+      const room = { left: x - half, right: x + half, bottom: y - half, top: y + half };
+      if (!taken.some((box) => overlap(box, room))) return { x, y, room };
+    }
+  return null;
+}
+
 /** Crosses on the shared strips with their letters, and the lines to cut along. */
-function joints(tiling: Tiling, taken: readonly Box[], measure: Measure): { shapes: Shape[]; taken: Box[] } {
-  const marks = crossPlaces(tiling).map((place, i) => ({
-    text: String.fromCharCode(97 + (i % 26)),
-    x: place.x,
-    y: place.y,
-    reachMm: 2.5,
-  }));
-  const shapes = marks.flatMap((mark) => cross(mark.x, mark.y, 2.5));
+function joined(tiling: Tiling, drawn: Developed): { shapes: Shape[]; taken: Box[] } {
+  const shapes: Shape[] = [];
+  const taken = [...drawn.taken];
   for (const { row, column, window } of tiling.tiles) {
     const x = window.right - SHARED_MM / 2;
     const y = window.top - SHARED_MM / 2;
     if (column < tiling.columns - 1) shapes.push(line(x, window.bottom, x, window.top, 'hair', 'centre'));
     if (row < tiling.rows - 1) shapes.push(line(window.left, y, window.right, y, 'hair', 'centre'));
   }
-  // A letter has to be whole on both tiles: it stays in the strip, so the region is cut to it mark by mark.
-  const now = [...taken];
-  for (const mark of marks) {
-    const strip = { left: mark.x - 6, right: mark.x + 6, bottom: mark.y - 6, top: mark.y + 6 };
-    const placed = placeLabels([mark], strip, now, [], measure);
-    shapes.push(...placed.shapes);
-    now.splice(0, now.length, ...placed.taken);
+  let letters = 0;
+  for (const joint of joints(tiling)) {
+    const place = slide(joint, taken);
+    if (!place) continue;
+    const text = String.fromCharCode(97 + (letters++ % 26));
+    const letter = label(place.x + 2.8, place.y + 2, text, { anchor: 'middle', bold: true });
+    shapes.push(...cross(place.x, place.y, 2.5), letter);
+    taken.push(place.room);
   }
-  return { shapes, taken: now };
+  return { shapes, taken };
 }
 
 /** Where the check square goes: beside the drawing, above it, or on free surface. */
@@ -228,9 +240,9 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
   const drawn = developed(record, measure);
   const format = formatOf(record, drawn, measure);
   const { tiling } = format;
-  const joined = joints(tiling, drawn.taken, measure);
-  const all = [...drawn.shapes, ...joined.shapes];
-  const square = squarePlace(format, drawn, joined.taken);
+  const { shapes: seams, taken: used } = joined(tiling, drawn);
+  const all = [...drawn.shapes, ...seams];
+  const square = squarePlace(format, drawn, used);
   const pictures = checkSquare(WRAP.square, measure);
   const many = tiling.tiles.length + (square ? 0 : 1);
   const x0 = TEMPLATE_MARGIN_MM + RULER_BAND;
@@ -253,7 +265,7 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
 
   const pages = tiling.tiles.map((here, i) => {
     const toPage = (shape: Shape) => moved(shape, x0 - here.window.left, y0 - here.window.bottom);
-    const taken = [...joined.taken];
+    const taken = [...used];
     const shapes = [...clipped(all, here.window, measure), ...tabWords(drawn, here.window, measure)];
     if (square?.tile === here) {
       shapes.push(...movedAll(pictures, square.x, square.y));

@@ -14,6 +14,7 @@ export const WRAP = {
   jig: 'Prick each centre through, then drill. Dashed: edges of the winding.',
   printed: 'The holes are in the former: this sheet checks and marks them. Dashed: edges of the winding.',
   unbored: 'X: place of a tap without a hole.',
+  unlabelled: (names: string) => `No room for the label of ${names}: see the tap table of the winding sheet.`,
   measure: (outside: string, paper: string, round: string) =>
     `Across: angle × (outside radius ${outside} mm + ${paper} mm, half of 0.1 mm paper); ${round} mm once round. Up: mm from the datum.`,
   tiles:

@@ -1,0 +1,193 @@
+import fc from 'fast-check';
+import { describe, expect, test } from 'vitest';
+import { PAPER_MM, Paper } from '../../src/sheets/page.ts';
+import { layOutWindingSheet, sheetFrame, windingSheet } from '../../src/sheets/winding-sheet.ts';
+import { evenTurns, fullRecord, layoutBoxes, layoutFaults } from '../helpers/layout.ts';
+import { type PdfPage, type PdfText, readPdf } from '../helpers/pdf.ts';
+import { sampleRecord } from '../helpers/sample.ts';
+
+const measure = new Paper({ title: 'measure', subject: 'measure' });
+const number = (text: string) => Number(text.replace('−', '-').replace('+', ''));
+
+/** Texts of a page that stand on the line of another, from left to right. */
+function onLine(page: PdfPage, of: PdfText): string[] {
+  return page.texts
+    .filter((text) => Math.abs(text.y - of.y) < 0.4)
+    .sort((a, b) => a.x - b.x)
+    .map((text) => text.text);
+}
+
+describe('winding sheet, read back', () => {
+  test.each(['right', 'left'] as const)('prints the figures of a %s-hand record', async (hand) => {
+    const record = sampleRecord({ hand });
+    const pdf = await readPdf(await windingSheet(record));
+    const [first, second] = pdf.pages as [PdfPage, PdfPage];
+    const all = pdf.pages.map((page) => page.texts.map((text) => text.text).join(' ')).join(' ');
+    expect(all).toContain(record.job);
+    expect(all).toContain(record.hash.slice(0, 12));
+    expect(all).toContain(record.program);
+    expect(all).toContain(hand === 'right' ? 'right-hand' : 'left-hand');
+    expect(all).not.toContain(hand === 'right' ? 'left-hand' : 'right-hand');
+    expect(all).toContain('Earthed end: start S.');
+    for (const step of record.steps) expect(all.replace(/\s+/g, ' ')).toContain(step.text);
+    for (const caution of record.cautions) expect(all.replace(/\s+/g, ' ')).toContain(caution);
+
+    // The tap table: the columns stand right of the middle of the sheet. Half a unit of the last digit printed.
+    const { taps } = record.windings[0]!;
+    const middle = first.widthMm / 2;
+    const table = { ...first, texts: first.texts.filter((text) => text.x > middle) };
+    let checked = 0;
+    for (const tap of taps) {
+      const rows = table.texts.filter((text) => text.text === `${tap.tap}`).map((text) => onLine(table, text));
+      const row = rows.find((cells) => cells.length === 7)!.map(number);
+      const wanted = [
+        tap.tap,
+        tap.turn,
+        tap.positionMm,
+        tap.angleDeg,
+        tap.inductanceUh,
+        tap.deviationPercent,
+        tap.wireFromStartM,
+      ];
+      const within = [0, 0.0005, 0.005, 0.05, tap.inductanceUh * 5e-4, 0.005, 0.005];
+      wanted.forEach((value, i) => {
+        expect(Math.abs(row[i]! - value)).toBeLessThanOrEqual(within[i]! + 1e-9);
+        checked++;
+      });
+      // Beside the drawing: the distance from the datum.
+      expect(first.texts.some((text) => text.x < middle && text.text === tap.positionMm.toFixed(2))).toBe(true);
+    }
+    // Page 2: limits of every tap.
+    for (const tap of taps) {
+      const low = second.texts.filter((text) => text.text === `${tap.tap}`).map((text) => onLine(second, text));
+      const row = low.find((cells) => cells.length === 5)!;
+      const between = (text: string) => text.split('–').map((part) => number(part.trim()));
+      expect(number(row[1]!)).toBeCloseTo(tap.woundLengthMm, 2);
+      const [lowUh, highUh] = between(row[2]!) as [number, number];
+      expect(Math.abs(lowUh / tap.inductanceLowUh - 1)).toBeLessThan(1e-3);
+      expect(Math.abs(highUh / tap.inductanceHighUh - 1)).toBeLessThan(1e-3);
+      const [lowOhm, highOhm] = between(row[3]!) as [number, number];
+      expect(Math.abs(lowOhm / tap.resistanceLowOhm - 1)).toBeLessThan(1e-3);
+      expect(Math.abs(highOhm / tap.resistanceHighOhm - 1)).toBeLessThan(1e-3);
+      expect(between(row[4]!)).toEqual([tap.range!.lowKhz, tap.range!.highKhz]);
+      checked += 6;
+    }
+    for (const check of record.checks) expect(all).toContain(check.nominal.toFixed(check.digits));
+    console.log(`winding sheet, ${hand}: ${checked} printed figures agree with the record`);
+    expect(checked).toBe(taps.length * 13);
+  });
+
+  test('signs, title, language, scaling and sheet numbers', async () => {
+    const record = { ...sampleRecord(), job: 'Signs: µ Ω ≤ → ⌀ °' };
+    const pdf = await readPdf(await windingSheet(record));
+    const all = pdf.pages.flatMap((page) => page.texts.map((text) => text.text)).join(' ');
+    for (const sign of ['µH', 'Ω', '≤', '→', '⌀', '°', '−']) expect(all).toContain(sign);
+    expect(pdf.title).toBe(`Winding sheet: ${record.job}`);
+    expect(pdf.language).toBe('en');
+    expect(pdf.printScaling).toBe('None');
+    pdf.pages.forEach((page, i) => {
+      const found = page.texts.some((text) => text.text === `sheet ${i + 1} of ${pdf.pages.length}`);
+      expect(found).toBe(true);
+    });
+  });
+
+  test('a date only when given', async () => {
+    const without = await readPdf(await windingSheet(sampleRecord()));
+    const dated = await readPdf(await windingSheet({ ...sampleRecord(), date: '2031-05-17' }));
+    const has = (pdf: typeof without) => pdf.pages[0]!.texts.some((text) => text.text.startsWith('date 2031-05-17'));
+    expect([has(without), has(dated)]).toEqual([false, true]);
+  });
+
+  test.each(['A4', 'Letter'] as const)('%s has its size, and two pages do for five taps', async (paper) => {
+    const pdf = await readPdf(await windingSheet(sampleRecord({ paper })));
+    expect(pdf.pages.length).toBe(2);
+    for (const page of pdf.pages) {
+      expect(page.widthMm).toBeCloseTo(PAPER_MM[paper][0], 3);
+      expect(page.heightMm).toBeCloseTo(PAPER_MM[paper][1], 3);
+    }
+  });
+
+  test('same record, same bytes', async () => {
+    const [one, two] = [await windingSheet(sampleRecord()), await windingSheet(sampleRecord())];
+    expect(Buffer.compare(one, two)).toBe(0);
+  });
+
+  test('what was measured is where it was printed', async () => {
+    const record = fullRecord();
+    const pages = layOutWindingSheet(record, measure);
+    const pdf = await readPdf(await windingSheet(record));
+    let found = 0;
+    layoutBoxes(pages, measure).forEach((each) => {
+      const middle = (each.box.left + each.box.right) / 2;
+      // The reader works in 32 bit floats and joins neighbouring runs: only whole ones are compared, to 0.05 mm.
+      const match = pdf.pages[each.page - 1]!.texts.find(
+        (text) => text.text === each.text && Math.abs(text.x + text.width / 2 - middle) < 0.05,
+      );
+      if (match && match.turnDeg === 0) found++;
+    });
+    const all = layoutBoxes(pages, measure).length;
+    console.log(`winding sheet: ${found} of ${all} texts found where they were measured`);
+    expect(found / all).toBeGreaterThan(0.9);
+  });
+});
+
+describe('winding sheet, laid out', () => {
+  const cases = [3, 24].flatMap((taps) =>
+    (['A4', 'Letter'] as const).flatMap((paper) =>
+      [false, true].flatMap((staggered) =>
+        ['Set', `Long ${'name of a job for the upper workshop '.repeat(5)}`, 'Unbroken'.repeat(20)].map((job) => ({
+          taps,
+          paper,
+          staggered,
+          job,
+        })),
+      ),
+    ),
+  );
+
+  test('nothing overlaps, leaves the margins or is too small', () => {
+    let boxes = 0;
+    for (const { taps, paper, staggered, job } of cases) {
+      const turns = evenTurns(taps, 96, staggered);
+      const pages = layOutWindingSheet(fullRecord({ turns, paper, job, diameterMm: 76 }), measure);
+      expect(layoutFaults(pages, sheetFrame, measure), `${taps} taps, ${paper}, ${job.slice(0, 12)}`).toEqual([]);
+      boxes += layoutBoxes(pages, measure).length;
+    }
+    console.log(`winding sheet: ${cases.length} layouts, ${boxes} texts`);
+    expect(boxes).toBeGreaterThan(1000);
+  });
+
+  test('the same over random records', () => {
+    let runs = 0;
+    const options = fc.record({
+      hand: fc.constantFrom('right' as const, 'left' as const),
+      kind: fc.constantFrom('printed' as const, 'tube' as const),
+      surface: fc.constantFrom('smooth' as const, 'grooved' as const),
+      paper: fc.constantFrom('A4' as const, 'Letter' as const),
+      method: fc.constantFrom('twisted loop', 'lifted turn', 'cut pair', 'lug', 'drawn in'),
+      taps: fc.integer({ min: 1, max: 24 }),
+      whole: fc.integer({ min: 25, max: 150 }),
+      staggered: fc.boolean(),
+      diameterMm: fc.double({ min: 12, max: 160, noNaN: true }),
+      stepWords: fc.integer({ min: 1, max: 60 }),
+      job: fc.string({ minLength: 1, maxLength: 160 }),
+    });
+    fc.assert(
+      fc.property(options, ({ taps, whole, staggered, method, ...rest }) => {
+        const record = fullRecord({ ...rest, method: method as 'lug', turns: evenTurns(taps, whole, staggered) });
+        expect(layoutFaults(layOutWindingSheet(record, measure), sheetFrame, measure)).toEqual([]);
+        runs++;
+      }),
+      { seed: 20, numRuns: 40 },
+    );
+    console.log(`winding sheet: ${runs} random records laid out`);
+    expect(runs).toBe(40);
+  });
+
+  test('text set over text is noticed', () => {
+    const [page] = layOutWindingSheet(fullRecord(), measure);
+    const text = page!.shapes.find((shape) => shape.shape === 'text')!;
+    const spoilt = { ...page!, shapes: [...page!.shapes, text] };
+    expect(layoutFaults([spoilt], sheetFrame, measure).length).toBe(1);
+  });
+});
