@@ -9,14 +9,13 @@ import { clipped } from '../drawing/clip.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { freePlace } from '../drawing/labels.ts';
 import { checkSquare, cross, RULER_BREADTH_MM, rulerAcross, rulerUp, SQUARE_ROOM_MM } from '../drawing/rulers.ts';
-import { arrow, label, line, moved, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
-import { type Developed, developed, PAPER_THICKNESS_MM, SCALE_MM, TAB_MM } from '../drawing/template.ts';
+import { arrow, label, line, moved, movedAll, SMALL_MM } from '../drawing/shapes.ts';
+import { type Developed, developed, SCALE_MM, TAB_MM } from '../drawing/template.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { type Block, paragraph, stack } from './block.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
-import { fixed, short } from './text.ts';
+import { templateHead } from './template-head.ts';
+import { fixed } from './text.ts';
 import { type Joint, joints, SHARED_MM, type Tile, type Tiling, tile } from './tiles.ts';
-import { titleBlock } from './title-block.ts';
 
 /** Left free round every page, mm: what most printers cannot print on. */
 export const TEMPLATE_MARGIN_MM = 7;
@@ -31,67 +30,6 @@ interface Format {
   readonly tiling: Tiling;
   readonly roomWidthMm: number;
   readonly roomHeightMm: number;
-}
-
-/** What to do with the sheet, in two columns under the title. */
-function instructions(record: CoilRecord, drawn: Developed, tiled: boolean, widthMm: number, measure: Measure): Block {
-  const { former } = record;
-  const set =
-    former.flange !== null
-      ? WRAP.setRim(fixed(drawn.bottomMm, 2))
-      : former.kind === 'tube'
-        ? WRAP.setTube
-        : WRAP.setFoot;
-  const words = [
-    WRAP.print,
-    WRAP.side,
-    `${set} ${former.kind === 'tube' ? WRAP.jig : WRAP.printed}${drawn.unbored ? ` ${WRAP.unbored}` : ''}`,
-    WRAP.measure(
-      short(former.outsideDiameterMm / 2, 3),
-      short(PAPER_THICKNESS_MM / 2, 3),
-      fixed(drawn.circumferenceMm, 2),
-    ),
-    ...(drawn.unlabelled.length > 0 ? [WRAP.unlabelled(drawn.unlabelled.join(', '))] : []),
-    ...(tiled ? [WRAP.tiles] : []),
-  ];
-  const lines = words.map((text, i) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM, bold: i === 0 }));
-  return stack(lines, 0.3);
-}
-
-/** Where among its neighbours a tile lies. */
-function tileMap(tiling: Tiling, here: Tile): Block {
-  const cell = { width: 8, height: 4.6 };
-  const heightMm = tiling.rows * cell.height;
-  const shapes: Shape[] = [];
-  for (const each of tiling.tiles) {
-    const x = each.column * cell.width;
-    const y = -heightMm + each.row * cell.height;
-    shapes.push(rectangle(x, y, cell.width, cell.height, 'thin', each === here ? 0.8 : 1));
-    shapes.push(label(x + cell.width / 2, y + cell.height / 2, each.name, { align: 'centre', anchor: 'middle' }));
-  }
-  return { widthMm: tiling.columns * cell.width, heightMm, shapes };
-}
-
-/** Title and instructions of one page. */
-function head(
-  record: CoilRecord,
-  drawn: Developed,
-  tiling: Tiling,
-  here: Tile,
-  sheet: string,
-  widthMm: number,
-  measure: Measure,
-): Block {
-  const tiled = tiling.tiles.length > 1;
-  const part = tiled ? WRAP.tile(here.name) : WRAP.part('1:1');
-  const title = titleBlock(record, { document: WRAP.document, part, sheet }, widthMm, measure);
-  const map = tileMap(tiling, here);
-  const wordsWidth = tiled ? widthMm - map.widthMm - 4 : widthMm;
-  const words = instructions(record, drawn, tiled, wordsWidth, measure);
-  const shapes: Shape[] = [...title.shapes, ...movedAll(words, 0, -title.heightMm - 1.5)];
-  if (tiled) shapes.push(...movedAll(map, widthMm - map.widthMm - 0.5, -title.heightMm - 2));
-  const under = Math.max(words.heightMm, tiled ? map.heightMm + 0.5 : 0);
-  return { widthMm, heightMm: title.heightMm + 1.5 + under, shapes };
 }
 
 const wholeOf = (drawn: Developed): Box => ({
@@ -117,7 +55,7 @@ function formatOf(record: CoilRecord, drawn: Developed, measure: Measure): Forma
       2 * TEMPLATE_MARGIN_MM -
       RULER_BAND -
       HEAD_GAP -
-      head(record, drawn, tiling, tiling.tiles[0]!, TITLE.sheet(10, 10), inner, measure).heightMm;
+      templateHead(record, drawn, tiling, tiling.tiles[0]!, TITLE.sheet(10, 10), inner, measure).heightMm;
     const one = tile(whole, Infinity, Infinity);
     let roomHeightMm = room(one);
     let tiling = tile(whole, roomWidthMm, roomHeightMm);
@@ -250,7 +188,7 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
   const inner = format.widthMm - 2 * TEMPLATE_MARGIN_MM;
 
   const page = (here: Tile, n: number, content: readonly Shape[]): Page => {
-    const top = head(record, drawn, tiling, here, TITLE.sheet(n, many), inner, measure);
+    const top = templateHead(record, drawn, tiling, here, TITLE.sheet(n, many), inner, measure);
     return {
       widthMm: format.widthMm,
       heightMm: format.heightMm,
@@ -278,11 +216,11 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
     }
     const free = surface(drawn, here);
     const place =
-      freePlace(free, [...taken, ...drawn.lines], INFO.width, INFO.height) ??
-      freePlace(free, taken, INFO.width, INFO.height);
+      freePlace(free, [...taken, ...drawn.lines], INFO.width + 4, INFO.height + 4) ??
+      freePlace(free, taken, INFO.width + 4, INFO.height + 4);
     if (place) {
-      shapes.push(...info(record).map((shape) => moved(shape, place.x, place.y)));
-      taken.push({ left: place.x, right: place.x + INFO.width, bottom: place.y, top: place.y + INFO.height });
+      shapes.push(...info(record).map((shape) => moved(shape, place.x + 2, place.y + 2)));
+      taken.push({ left: place.x, right: place.x + INFO.width + 4, bottom: place.y, top: place.y + INFO.height + 4 });
     }
     shapes.push(...datumWords(drawn, here, taken, measure));
     return page(here, i + 1, shapes.map(toPage));

@@ -1,0 +1,72 @@
+/** The head of a page of the wrap template: title block, what to do, and where among its neighbours a tile lies. */
+import { WRAP } from '../../templates/wording/wrap-template.ts';
+import type { Measure } from '../drawing/boxes.ts';
+import type { Shape } from '../drawing/drawing.ts';
+import { label, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
+import { type Developed, PAPER_THICKNESS_MM } from '../drawing/template.ts';
+import type { CoilRecord } from '../record/schema.ts';
+import { type Block, paragraph, stack } from './block.ts';
+import { fixed, short } from './text.ts';
+import type { Tile, Tiling } from './tiles.ts';
+import { titleBlock } from './title-block.ts';
+
+/** What to do with the sheet. */
+function instructions(record: CoilRecord, drawn: Developed, tiled: boolean, widthMm: number, measure: Measure): Block {
+  const { former } = record;
+  const set =
+    former.flange !== null
+      ? WRAP.setRim(fixed(drawn.bottomMm, 2))
+      : former.kind === 'tube'
+        ? WRAP.setTube
+        : WRAP.setFoot;
+  const words = [
+    WRAP.print,
+    WRAP.side,
+    `${set} ${former.kind === 'tube' ? WRAP.jig : WRAP.printed}${drawn.unbored ? ` ${WRAP.unbored}` : ''}`,
+    WRAP.measure(
+      short(former.outsideDiameterMm / 2, 3),
+      short(PAPER_THICKNESS_MM / 2, 3),
+      fixed(drawn.circumferenceMm, 2),
+    ),
+    ...(drawn.unlabelled.length > 0 ? [WRAP.unlabelled(drawn.unlabelled.join(', '))] : []),
+    ...(tiled ? [WRAP.tiles] : []),
+  ];
+  const lines = words.map((text, i) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM, bold: i === 0 }));
+  return stack(lines, 0.3);
+}
+
+/** Where among its neighbours a tile lies. */
+function tileMap(tiling: Tiling, here: Tile): Block {
+  const cell = { width: 8, height: 4.6 };
+  const heightMm = tiling.rows * cell.height;
+  const shapes: Shape[] = [];
+  for (const each of tiling.tiles) {
+    const x = each.column * cell.width;
+    const y = -heightMm + each.row * cell.height;
+    shapes.push(rectangle(x, y, cell.width, cell.height, 'thin', each === here ? 0.8 : 1));
+    shapes.push(label(x + cell.width / 2, y + cell.height / 2, each.name, { align: 'centre', anchor: 'middle' }));
+  }
+  return { widthMm: tiling.columns * cell.width, heightMm, shapes };
+}
+
+/** The head of one page. `here` is the tile that it shows. */
+export function templateHead(
+  record: CoilRecord,
+  drawn: Developed,
+  tiling: Tiling,
+  here: Tile,
+  sheet: string,
+  widthMm: number,
+  measure: Measure,
+): Block {
+  const tiled = tiling.tiles.length > 1;
+  const part = tiled ? WRAP.tile(here.name) : WRAP.part('1:1');
+  const title = titleBlock(record, { document: WRAP.document, part, sheet }, widthMm, measure);
+  const map = tileMap(tiling, here);
+  const wordsWidth = tiled ? widthMm - map.widthMm - 4 : widthMm;
+  const words = instructions(record, drawn, tiled, wordsWidth, measure);
+  const shapes: Shape[] = [...title.shapes, ...movedAll(words, 0, -title.heightMm - 1.5)];
+  if (tiled) shapes.push(...movedAll(map, widthMm - map.widthMm - 0.5, -title.heightMm - 2));
+  const under = Math.max(words.heightMm, tiled ? map.heightMm + 0.5 : 0);
+  return { widthMm, heightMm: title.heightMm + 1.5 + under, shapes };
+}
