@@ -4,7 +4,7 @@ import type { Argv } from 'yargs';
 import { Fault } from '../src/fault.ts';
 import { slug } from '../src/job/name.ts';
 import { readJob } from '../src/job/read.ts';
-import { writeFolder } from '../src/output/transaction.ts';
+import { checkFolder, writeFolder } from '../src/output/transaction.ts';
 import type { planJob } from '../src/plan.ts';
 import { readJobText } from './read-job.ts';
 import { showPlan } from './show-plan.ts';
@@ -44,9 +44,11 @@ export async function runPlan(
 ): Promise<void> {
   checkOut(options.out);
   const job = readJob(await readJobText(options.job, terminal), options.job);
+  const target = resolve(terminal.folder, options.out ?? join('out', slug(job.name)));
+  await checkFolder(target);
   const planner = await load();
   const { record, files } = await planner(job, { version });
-  const folder = await writeFolder(resolve(terminal.folder, options.out ?? join('out', slug(job.name))), files);
+  const folder = await writeFolder(target, files);
   if (options.json) {
     terminal.out(`${JSON.stringify(record, null, 2)}\n`);
     return;

@@ -7,7 +7,7 @@
  * At every moment the old folder or the new one is whole, under its name or as the backup; the next run puts a backup
  * back. A folder is ours when its plan.json says so; the files it lists are what may be replaced.
  */
-import { lstat, mkdir, open, readdir, rename, rm, rmdir } from 'node:fs/promises';
+import { access, constants, lstat, mkdir, open, readdir, rename, rm, rmdir } from 'node:fs/promises';
 import { basename, dirname, join, resolve } from 'node:path';
 import { carryOver } from './carry.ts';
 import { isErrno, outputFault, refuseFolder } from './faults.ts';
@@ -66,6 +66,24 @@ export async function writeFolder(dir: string, files: readonly OutputFile[]): Pr
     throw outputFault(error, target);
   }
   return target;
+}
+
+/**
+ * Whether `dir` could be written as things stand: what can be refused without writing is refused here, before the work
+ * is done. Throws a Fault with exit code 5. The answer may be out of date when {@link writeFolder} is called.
+ */
+export async function checkFolder(dir: string): Promise<void> {
+  const target = resolve(dir);
+  try {
+    if ((await judge(target)) === null) await access(await nearestThere(dirname(target)), constants.W_OK);
+  } catch (error) {
+    throw outputFault(error, target);
+  }
+}
+
+/** The folder itself, or the nearest above it that is there. */
+async function nearestThere(folder: string): Promise<string> {
+  return (await kindOf(folder)) === 'nothing' ? nearestThere(dirname(folder)) : folder;
 }
 
 /** A path of our own making; one that leads elsewhere is a mistake of the program. */

@@ -10,16 +10,19 @@ import { expect, it } from 'vitest';
 import { namesBeside, writeFolder } from '../../src/output/transaction.ts';
 import { below, output, scratch } from './folder.ts';
 
+/** What the transaction takes from the file system. */
+const CALLS = 'access copyFile link lstat mkdir open readdir readFile readlink rename rm rmdir symlink utimes'.split(
+  ' ',
+);
 const COUNTED = `
 import * as real from 'real-fs';
+export { constants } from 'real-fs';
 let left = Number(process.env.KILL_AT);
 const counted = (call) => (...given) => {
   if (left-- <= 0) process.kill(process.pid, 'SIGKILL');
   return call(...given);
 };
-const { ${['copyFile', 'link', 'lstat', 'mkdir', 'open', 'readdir', 'readFile', 'readlink', 'rename', 'rm', 'rmdir', 'symlink', 'utimes'].join(', ')} } =
-  Object.fromEntries(Object.entries(real).map(([name, call]) => [name, typeof call === 'function' ? counted(call) : call]));
-export { copyFile, link, lstat, mkdir, open, readdir, readFile, readlink, rename, rm, rmdir, symlink, utimes };
+${CALLS.map((name) => `export const ${name} = counted(real.${name});`).join('\n')}
 `;
 
 const OLD = output({ 'sheet.pdf': 'old', 'parts/former.stl': 'old', 'dropped.txt': 'old' });

@@ -15,7 +15,7 @@ import { describe, expect, it } from 'vitest';
 import { Fault } from '../../src/fault.ts';
 import { outputFault } from '../../src/output/faults.ts';
 import { lock } from '../../src/output/lock.ts';
-import { namesBeside, writeFolder } from '../../src/output/transaction.ts';
+import { checkFolder, namesBeside, writeFolder } from '../../src/output/transaction.ts';
 import { below, faultOf, output, scratch } from './folder.ts';
 
 const FIRST = output({ 'sheet.pdf': 'first', 'parts/former.stl': 'first' });
@@ -96,8 +96,10 @@ describe('a place that is refused', () => {
       writeFileSync(join(coil, 'thesis.txt'), 'mine');
       if (record !== null) writeFileSync(join(coil, 'plan.json'), record);
       const before = below(coil);
-      const fault = await faultOf(writeFolder(coil, FIRST));
-      expect([fault.exit, fault.got]).toEqual([5, 'a folder that coilwright did not make']);
+      for (const attempt of [writeFolder, checkFolder]) {
+        const fault = await faultOf(attempt(coil, FIRST));
+        expect([fault.exit, fault.got]).toEqual([5, 'a folder that coilwright did not make']);
+      }
       expect(below(coil)).toEqual(before);
     }
   });
@@ -130,6 +132,7 @@ describe('a place that is refused', () => {
     const got = async (path: string) => {
       const fault = await faultOf(writeFolder(path, FIRST));
       expect(fault.exit).toBe(5);
+      if (path !== '/' && !path.includes('deep')) expect((await faultOf(checkFolder(path))).got).toBe(fault.got);
       return fault.got;
     };
     expect(await got(join(base, 'file'))).toBe('a file');
@@ -139,6 +142,14 @@ describe('a place that is refused', () => {
     expect(await got('/')).toBe('the root of the file system');
     expect(await got(join(base, 'x'.repeat(300)))).toBe('a path that is too long for the file system');
     expect(below(base)).toEqual({ file: 'mine', link: '-> real', real: 'folder' });
+  });
+
+  it('and no place that can be written', async () => {
+    const base = scratch();
+    await writeFolder(join(base, 'coil'), FIRST);
+    mkdirSync(join(base, 'empty'));
+    for (const path of ['coil', 'empty', 'new', 'deep/er/new']) await checkFolder(join(base, path));
+    expect(Object.keys(below(base)).length).toBe(4);
   });
 
   it('every answer of the file system has a message, and a mistake of ours stays one', () => {
