@@ -101,11 +101,17 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
     blocks: [strip, beside([{ ...stack(left, GAP), widthMm: column }, stack(right, GAP)], COLUMN_GAP)],
     ...(foot ? { foot } : {}),
   });
-  const drawings = DRAWING_MM.map((drawingMm) => wind.coilDrawing(record, column, drawingMm, measure));
+  // Most sheets take the first size: the others are drawn only when asked for.
+  const drawn: Block[] = [];
+  const drawingOf = (size: number) => {
+    drawn[size] ??= wind.coilDrawing(record, column, DRAWING_MM[size]!, measure);
+    return drawn[size];
+  };
   for (const { rowMm, gapMm } of CLOSENESS) {
     const taps = wind.tapTable(record, column, rowMm, measure);
     const steps = stepsBlock(items, STEPS.heading, 1, gapMm, measure);
-    for (const drawing of drawings) {
+    for (const size of DRAWING_MM.keys()) {
+      const drawing = drawingOf(size);
       const whole: Arrangement[] = [
         { left: [drawing, method, ...angles], right: [taps, steps], foot: wide },
         { left: [drawing, method], right: [taps, ...angles, steps], foot: wide },
@@ -129,8 +135,8 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
     (drawing) => ({ left: [drawing, narrow], right: [taps, ...angles] }),
     (drawing) => ({ left: [drawing], right: [taps], foot: wide }),
   ];
-  const tries = some.flatMap((arranged) => drawings.slice(1).map(arranged));
-  const first = tries.find((each) => fits(each, free)) ?? { left: [drawings[3]!], right: [taps] };
+  const tries = some.flatMap((arranged) => [1, 2, 3, 4].map((size) => arranged(drawingOf(size))));
+  const first = tries.find((each) => fits(each, free)) ?? { left: [drawingOf(3)], right: [taps] };
   const under = (begun: readonly Block[]) => ({
     ...first,
     right: [...first.right, stepsBlock(begun, STEPS.heading, 1, 1, measure)],
