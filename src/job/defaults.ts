@@ -21,7 +21,6 @@ export const DEFAULTS = {
   'printer.bed': '220 x 220 mm',
   'printer.height': '250 mm',
   'printer.nozzle': '0.4 mm',
-  'printer.clearance': '0.2 mm',
   'printer.hole-compensation': '0 mm',
 } as const;
 

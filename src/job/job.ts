@@ -71,7 +71,6 @@ export interface Printer {
   readonly nozzleMm: number;
   readonly lineMm: number;
   readonly layerMm: number;
-  readonly clearanceMm: number;
   readonly holeCompensationMm: number;
 }
 

@@ -96,7 +96,6 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed): Job {
       nozzleMm: printer.nozzle,
       lineMm: printer.line,
       layerMm: printer.layer,
-      clearanceMm: printer.clearance,
       holeCompensationMm: printer['hole-compensation'],
     },
     given: given(tree.data),

@@ -134,7 +134,6 @@ const printerSchema = z
     nozzle: quantity('length', 'Nozzle bore.'),
     line: quantity('length', 'Width of a printed line. 1.125 of the nozzle when left out.'),
     layer: quantity('length', 'Layer height. Half of the nozzle when left out.'),
-    clearance: quantity('length', 'Play on diameter between parts that fit together.', { zero: true }),
     'hole-compensation': quantity('length', 'Added to the diameter of every hole, because holes print small.', {
       zero: true,
       negative: true,

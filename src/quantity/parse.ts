@@ -27,7 +27,7 @@ export interface Range {
 }
 
 export interface Allowed {
-  /** Zero is a sensible answer (stray capacitance, clearance). */
+  /** Zero is a sensible answer (stray capacitance, hole compensation). */
   readonly zero?: boolean;
   /** Below zero is a sensible answer (hole compensation, temperature). */
   readonly negative?: boolean;

@@ -10,6 +10,7 @@ import type { Design } from '../solve/design.ts';
 import { aspectOf } from '../solve/prefer.ts';
 import type { Found } from '../solve/search.ts';
 import { spreadInWords, spreadOf } from '../solve/spread.ts';
+import { DEFAULT_AT_KHZ } from '../solve/working.ts';
 import { checksOf } from './checks.ts';
 import { hashOf } from './hash.ts';
 import { decimals, deg, mm, significant } from './rounding.ts';
@@ -101,6 +102,18 @@ function whyChosen(job: Job, found: Found): string {
   return `${figure}: the best of ${others.length + 1} designs worked out by the ring sum, ${next}`;
 }
 
+/** What the program chose or took where the job is silent, beyond the defaults of the job itself. */
+function derivedOf(job: Job, design: Design): Record<string, string> {
+  const { former } = design;
+  const derived: Record<string, string> = { temperature: '20 °C' };
+  if (job.former.wallMm === null)
+    derived['former.wall'] = `${former.wallMm} mm, from lines of ${job.printer.lineMm} mm`;
+  if (job.wires === 'stock') derived.wire = 'all in stock from 0.15 mm bare up';
+  if (job.former.kind === 'tube' && job.winding.spacers === null) derived['winding.spacers'] = 'all in stock';
+  if (job.set === null && job.atKhz === null) derived.at = `${DEFAULT_AT_KHZ} kHz, for the loss`;
+  return derived;
+}
+
 /** The record of a found design, files still to come. The schema is checked, so that nothing leaves in another shape. */
 export function makeRecord(job: Job, found: Found, version: string): CoilRecord {
   const { chosen } = found;
@@ -147,7 +160,7 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     },
     warnings: warningsOf(job, found, alternatives.length),
     given: { ...job.given },
-    assumed: { ...job.assumed, ...spreadInWords(spread) },
+    assumed: { ...job.assumed, ...derivedOf(job, chosen), ...spreadInWords(spread) },
     alternatives: alternatives.map(({ design, betterIn }) => alternativeOf(design, betterIn)),
   };
   return recordSchema.parse({ ...body, program: `coilwright ${version}`, hash: hashOf(body), files: [] });

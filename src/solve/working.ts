@@ -9,7 +9,7 @@ import type { Wire } from '../stock/wire.ts';
 import { setCapacitance } from './demand.ts';
 
 /** Frequency for the loss when the job names neither a set nor `at`. */
-const DEFAULT_AT_KHZ = 1000;
+export const DEFAULT_AT_KHZ = 1000;
 
 export interface Coverage {
   readonly lowKhz: number;

@@ -14,7 +14,7 @@ set:    { capacitor: 15 pF to 380 pF, stray: 12 pF, aerial: 60 pF, switch: open 
 
 /** Keys whose default a starter shows behind a mark; the others have none, or one that depends on other keys. */
 const SHOWN = new Set(
-  'paper material mounting flanges hand earthed pitch tap-method tap-layout finish-trim prefer line layer clearance hole-compensation'.split(
+  'paper material mounting flanges hand earthed pitch tap-method tap-layout finish-trim prefer line layer hole-compensation'.split(
     ' ',
   ),
 );
@@ -70,7 +70,6 @@ describe('a job', () => {
       'printer.nozzle': '0.4 mm',
       'printer.line': '0.45 mm',
       'printer.layer': '0.2 mm',
-      'printer.clearance': '0.2 mm',
       'printer.hole-compensation': '0 mm',
     });
   });
