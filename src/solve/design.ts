@@ -63,6 +63,8 @@ export interface Breach {
   readonly got: number;
   readonly allowed: number;
   readonly text: string;
+  /** No other way to bring out the taps would mend it. */
+  readonly anyMethod?: true;
 }
 
 export type Outcome =
@@ -171,10 +173,11 @@ function designWith(job: Job, demand: Demand, candidate: Candidate, method: TapM
   }
   if (settled === 'no room') throw new Error('the finish angle always finds room');
   if ('noPlaceFor' in settled) {
-    const text = settled.beyond
-      ? `tap ${settled.noPlaceFor} of ${demand.taps} would lie beyond the whole coil: fewer switch positions are enough`
-      : `tap ${settled.noPlaceFor} finds no place: its neighbours are nearer than a ${method.name} allows`;
-    return { ok: false, breaches: [{ limit: 'want.taps', got: demand.taps, allowed: settled.noPlaceFor - 1, text }] };
+    const breach = { limit: 'want.taps', got: demand.taps, allowed: settled.noPlaceFor - 1 } as const;
+    const beyond = `tap ${settled.noPlaceFor} of ${demand.taps} would lie beyond the whole coil: fewer switch positions are enough`;
+    const near = `tap ${settled.noPlaceFor} finds no place: its neighbours are nearer than a ${method.name} allows`;
+    if (settled.beyond) return { ok: false, breaches: [{ ...breach, text: beyond, anyMethod: true }] };
+    return { ok: false, breaches: [{ ...breach, text: near }] };
   }
   const coil = coilOf(setting, settled, settled.turns);
   const turns = [...settled.taps, settled.turns];
@@ -227,7 +230,8 @@ export function designOf(job: Job, demand: Demand, candidate: Candidate): Outcom
     }
     if (found.length > 0) break;
     // Another tap method helps where a tap found no place or holes collide, not against a former that is too long.
-    if (!breaches.some((breach) => breach.limit === 'want.taps' || breach.limit === 'holes')) break;
+    const byMethod = ({ limit, anyMethod }: Breach) => !anyMethod && (limit === 'want.taps' || limit === 'holes');
+    if (!breaches.some(byMethod)) break;
   }
   const best = found.sort((a, b) => a.metrics.worstTap - b.metrics.worstTap)[0];
   return best === undefined ? { ok: false, breaches } : { ok: true, design: best };

@@ -9,7 +9,7 @@ import type { Job } from '../job/job.ts';
 import { MOST_TAPS } from '../job/schema.ts';
 import { selfCapacitance } from '../physics/medhurst.ts';
 import { type Candidate, candidatesOf, diametersFor } from './candidates.ts';
-import { type Demand, demandOf, positionsFor } from './demand.ts';
+import { type Demand, demandOf } from './demand.ts';
 import { type Breach, type Design, designOf, variantsOf } from './design.ts';
 import { type Estimate, estimateOf, type Size, sizeOf } from './estimate.ts';
 import { ALL_ASPECTS, ASPECTS, type Aspect, aspectOf } from './prefer.ts';
@@ -17,6 +17,8 @@ import { ALL_ASPECTS, ASPECTS, type Aspect, aspectOf } from './prefer.ts';
 /** How much worse than the best design an estimate may be and still be worked out. */
 const MARGIN = 0.08;
 const DESIGNS = 48;
+/** So many are worked out when none of them fits. */
+const IN_VAIN = 4 * DESIGNS;
 /** How near the taps fall is a matter of luck that no estimate knows: there as many again are worked out, near or not. */
 const DESIGNS_FOR_TAPS = 2 * DESIGNS;
 /** Designs looked at for each aspect in which another coil may be better ... */
@@ -54,13 +56,6 @@ export function demandFor(job: Job): Demand {
   return demandOf(job, largestSelfPf(job));
 }
 
-/** A job whose band leaves the taps out, with the fewest that a coil without self-capacitance would need. */
-function withFewestTaps(job: Job): Job {
-  const { want, set } = job;
-  if (want.kind !== 'band' || want.taps !== null || set === null) return job;
-  return { ...job, want: { ...want, taps: positionsFor(want, set, 0) } };
-}
-
 /** Longest former that both the job and the printer allow, mm. */
 export function longestMm(job: Job): number {
   return job.former.kind === 'printed' ? Math.min(job.former.longestMm, job.printer.heightMm) : job.former.longestMm;
@@ -88,14 +83,38 @@ export function hopefulOf(job: Job, demand: Demand, candidates: readonly Candida
  * it decides whether one position fewer is enough, that is tried first.
  */
 export function search(job: Job): Found | NotFound {
-  const demand = demandFor(job);
-  const fewest = demandFor(withFewestTaps(job));
-  if (fewest.taps < demand.taps && fewest.taps <= MOST_TAPS) {
-    const found = searchFor(job, fewest);
+  const candidates = candidatesOf(job);
+  let notFound: NotFound | null = null;
+  for (const demand of demandsFor(job, candidates)) {
+    const found = searchFor(job, demand, candidates);
     if ('chosen' in found) return found;
+    notFound = found;
   }
-  if (demand.taps > MOST_TAPS) return { demand, tried: 0, breaches: [tooManyPositions(demand)] };
-  return searchFor(job, demand);
+  if (notFound !== null) return notFound;
+  const demand = demandFor(job);
+  return { demand, tried: 0, breaches: [tooManyPositions(demand)] };
+}
+
+/** Whether the search would find a coil; as the search, but it stops at the first. */
+export function hasCoil(job: Job): boolean {
+  const candidates = candidatesOf(job);
+  const aspect = aspectOf(job.prefer);
+  return demandsFor(job, candidates).some((demand) =>
+    inOrder(hopefulOf(job, demand, candidates), aspect)
+      .slice(0, IN_VAIN)
+      .some(({ one }) => designOf(job, demand, one.candidate).ok),
+  );
+}
+
+/** The demands to try, the fewest switch positions first; none when a switch has not as many as the last would need. */
+function demandsFor(job: Job, candidates: readonly Candidate[]): Demand[] {
+  const { want, set } = job;
+  const usual = demandFor(job);
+  if (want.kind !== 'band' || want.taps !== null || set === null) return [usual];
+  const sizes = candidates.map((candidate) => sizeOf(job, usual, candidate)).filter((size) => size !== null);
+  const selfPf = Math.min(...sizes.filter((size) => mayFit(size, job, usual)).map((size) => size.selfPf));
+  const fewer = Number.isFinite(selfPf) && usual.taps <= MOST_TAPS + 1 ? demandOf(job, selfPf) : usual;
+  return (fewer.taps < usual.taps ? [fewer, usual] : [usual]).filter(({ taps }) => taps <= MOST_TAPS);
 }
 
 /** For a band that no switch can cover in positions as narrow as the set's capacitor makes them. */
@@ -106,8 +125,7 @@ function tooManyPositions(demand: Demand): Breach {
   return { limit: 'want.overlap', got: demand.taps, allowed: MOST_TAPS, text };
 }
 
-function searchFor(job: Job, demand: Demand): Found | NotFound {
-  const candidates = candidatesOf(job);
+function searchFor(job: Job, demand: Demand, candidates: readonly Candidate[]): Found | NotFound {
   const hopeful = hopefulOf(job, demand, candidates);
   const aspect = aspectOf(job.prefer);
   const outcomes = new Map<Candidate, Design | null>();
@@ -154,18 +172,20 @@ function bestByWire(list: readonly Estimate[], aspect: Aspect, count: number): E
   return sorted.slice(0, count).map(({ one }) => one);
 }
 
+const inOrder = (hopeful: readonly Estimate[], aspect: Aspect) =>
+  hopeful.map((one) => ({ one, guess: aspect.guess(one) })).sort((a, b) => a.guess - b.guess);
+
 function bestOf(
   hopeful: readonly Estimate[],
   aspect: Aspect,
   work: (candidate: Candidate) => Design | null,
 ): Design | null {
-  const sorted = hopeful.map((one) => ({ one, guess: aspect.guess(one) })).sort((a, b) => a.guess - b.guess);
   let best: Design | null = null;
   let bestGuess = 0;
   let done = 0;
   const byLuck = aspect === ASPECTS.worstTap;
   const [margin, most] = byLuck ? [Number.POSITIVE_INFINITY, DESIGNS_FOR_TAPS] : [MARGIN, DESIGNS];
-  for (const { one, guess } of sorted) {
+  for (const { one, guess } of inOrder(hopeful, aspect)) {
     if (best !== null && (guess > bestGuess * (1 + margin) || done >= most)) break;
     const design = work(one.candidate);
     done++;
@@ -174,7 +194,7 @@ function bestOf(
       bestGuess = guess;
     }
     // A space in which nothing fits is left to the refusal, which looks for the nearest change.
-    if (best === null && done >= 4 * DESIGNS) break;
+    if (best === null && done >= IN_VAIN) break;
   }
   return best;
 }
