@@ -60,8 +60,8 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
       last = 20;
     }
     const wind = STEP.wind(turnText(tap.turn - last), placeText(tap.turn, tap.angleDeg));
-    const then = whole ? STEP.finish(LEAD_MM) : STEP.tap(tap.tap, method.name);
-    add(whole ? 'finish' : 'tap', whole ? `${wind}. ${then}` : `${wind}; ${then}`, {
+    const then = whole ? STEP.finish(LEAD_MM) : STEP.tap(tap.tap);
+    add(whole ? 'finish' : 'tap', whole ? `${wind}. ${then}` : `${wind}: ${then}`, {
       tap: tap.tap,
       turn: tap.turn,
       wireM: decimals(tap.wireFromStartM, 2),

@@ -2,14 +2,6 @@
 
 export type MethodName = 'twisted loop' | 'lifted turn' | 'cut pair' | 'lug' | 'drawn in';
 
-const DO_TAP: Record<MethodName, string> = {
-  'twisted loop': 'pull out a loop, twist it tight to the root',
-  'lifted turn': 'lift this turn over a strip',
-  'cut pair': 'lead the wire in at a, cut, lead the next end out at b',
-  lug: 'lay the lug under this turn',
-  'drawn in': 'draw a loop in through the hole and twist it inside',
-};
-
 export const HOW: Record<MethodName, (loopMm: number) => string[]> = {
   'twisted loop': (mm) => [
     `Stop at the tap's turn and angle and pull out a loop of ${mm} mm of wire.`,
@@ -59,8 +51,8 @@ export const STEP = {
   /** `to` says where to stop, as a turn and an angle. */
   wind: (turns: string, to: string) => `Wind ${turns} turns, to ${to}`,
   turn: (turn: number) => `turn ${turn}`,
-  turnAndAngle: (turn: number, angle: string) => `turn ${turn} and on to the ${angle}° line`,
-  tap: (tap: number, method: MethodName) => `tap ${tap}: ${DO_TAP[method]}.`,
+  turnAndAngle: (turn: number, angle: string) => `turn ${turn} and on to ${angle}°`,
+  tap: (tap: number) => `make tap ${tap}.`,
   check: (mm: string) =>
     `Stop and measure over 20 turns: ${mm} mm edge to edge. Press the turns together or ease them until it is.`,
   finish: (mm: number) =>
