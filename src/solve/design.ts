@@ -71,6 +71,8 @@ export type Outcome =
   | { readonly ok: true; readonly design: Design }
   | { readonly ok: false; readonly breaches: readonly Breach[] };
 
+/** A whole coil on a printed former that is farther off than this is not taken. */
+const WHOLE_OFF = 1e-3;
 /** A printed former grows 0.1 % at most by its angle step; what is finer than this is not a miss of the band. */
 const BAND_SLACK = 2e-3;
 
@@ -186,6 +188,11 @@ function designWith(job: Job, demand: Demand, candidate: Candidate, method: TapM
   const holes = holesFor(around, coil, turns, method, hand);
   const taps = tapsOf(setting, coil, turns);
   const breaches = [...sizeBreaches(job, former), ...wallBreaches(job, former), ...bandBreaches(demand, taps)];
+  const off = Math.abs(taps[taps.length - 1]!.deviation);
+  if (former.kind === 'printed' && off > WHOLE_OFF) {
+    const text = `taps keep the finish from its place: the whole coil would be ${(off * 100).toFixed(2)} % off, ${WHOLE_OFF * 100} % at most`;
+    breaches.push({ limit: 'want.taps', got: off, allowed: WHOLE_OFF, text });
+  }
   const tight = tightestPair(holes, former.outsideDiameterMm);
   if (tight !== null)
     breaches.push({
