@@ -4,7 +4,7 @@ import type { Job } from '../job/job.ts';
 import type { Former, Hole } from '../record/schema.ts';
 import type { Candidate } from './candidates.ts';
 import type { Demand } from './demand.ts';
-import { type Around, formerFor, holesFor, startMm, tensionN, tightestPair } from './former.ts';
+import { type Around, formerFor, holesFor, LEAST_WEB_MM, startMm, tensionN, tightestPair } from './former.ts';
 import { coilOf, freedomsOf, type Setting, settle, targetsOf } from './settle.ts';
 import { inductanceSpread } from './spread.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
@@ -193,12 +193,12 @@ function designWith(job: Job, demand: Demand, candidate: Candidate, method: TapM
     const text = `taps keep the finish from its place: the whole coil would be ${(off * 100).toFixed(2)} % off, ${WHOLE_OFF * 100} % at most`;
     breaches.push({ limit: 'want.taps', got: off, allowed: WHOLE_OFF, text });
   }
-  const tight = tightestPair(holes, former.outsideDiameterMm);
+  const tight = tightestPair(holes, former.boreDiameterMm);
   if (tight !== null)
     breaches.push({
       limit: 'holes',
       got: tight.leftMm,
-      allowed: 0.8,
+      allowed: LEAST_WEB_MM,
       text: `holes ${tight.a.label} and ${tight.b.label} leave ${tight.leftMm.toFixed(2)} mm between them`,
     });
   if (breaches.length > 0) return { ok: false, breaches };
