@@ -53,11 +53,10 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
     const whole = tap.tap === winding.taps.length;
     if (!checked && last < 20 && tap.turn > 20 && winding.pitchKind !== 'groove') {
       checked = true;
-      add('wind', `${STEP.wind(turnText(20 - last), STEP.turn(20))}. ${STEP.check(overTwenty(design).toFixed(1))}`, {
+      add('wind', STEP.check(overTwenty(design).toFixed(1)), {
         turn: 20,
         wireM: decimals(design.coil.wireM(20) + method.loopM * (tap.tap - 1), 2),
       });
-      last = 20;
     }
     const wind = STEP.wind(turnText(tap.turn - last), placeText(tap.turn, tap.angleDeg));
     const then = whole ? STEP.finish(LEAD_MM) : STEP.tap(tap.tap);

@@ -46,6 +46,7 @@ export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, me
   const ranged = taps.some((tap) => tap.range !== null);
   const columns = columnsOf(widthMm, [
     ['tap', 10, { ...CENTRE, bold: true }],
+    [CHECKS.deviation, 14, RIGHT],
     [CHECKS.length, 18, RIGHT],
     [CHECKS.reading, 19, BLANK],
     [CHECKS.inductance, 30, CENTRE],
@@ -58,6 +59,7 @@ export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, me
   const rows = taps.map((tap) => {
     const cells = [
       `${tap.tap}`,
+      signed(tap.deviationPercent, 2),
       fixed(tap.woundLengthMm, 2),
       '',
       CHECKS.between(figures(tap.inductanceLowUh), figures(tap.inductanceHighUh)),

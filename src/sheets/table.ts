@@ -20,6 +20,8 @@ export interface TableOptions {
 }
 
 const PAD = 1.2;
+/** In a column of boxes: this row has none. */
+export const NO_BOX = '-';
 
 /** Widths that fill `totalMm` in the given shares. */
 export function shares(totalMm: number, parts: readonly number[]): number[] {
@@ -95,8 +97,9 @@ export function table(
     const height = Math.max(rowMm, most * sizeMm * LEADING + 1.2);
     x = 0;
     columns.forEach((column, c) => {
-      if (column.kind === 'tick') shapes.push(tickBox(x + column.widthMm / 2 - 1.7, y - height / 2 - 1.7));
-      else if (column.kind !== 'blank') {
+      if (column.kind === 'tick') {
+        if (row[c] !== NO_BOX) shapes.push(tickBox(x + column.widthMm / 2 - 1.7, y - height / 2 - 1.7));
+      } else if (column.kind !== 'blank') {
         const lines = cells[c]!;
         const at = place(column, x);
         const middle = y - height / 2 + ((lines.length - 1) * sizeMm * LEADING) / 2;

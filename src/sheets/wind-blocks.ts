@@ -1,6 +1,6 @@
 /** The blocks of the page to wind from. */
 import * as TAP_WORDS from '../../templates/wording/tap-method.ts';
-import { CAUTIONS, DRAWING, FACTS, TAPS } from '../../templates/wording/winding-sheet.ts';
+import { CAUTIONS, DRAWING, FACTS, STEPS, TAPS } from '../../templates/wording/winding-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { elevation, elevationScale, scaleText } from '../drawing/elevation.ts';
@@ -9,8 +9,8 @@ import { BODY_MM, CAP_SHARE, label, line, movedAll, rectangle, SMALL_MM } from '
 import { PANEL_MM, panelHeight, tapPicture } from '../drawing/tap-picture.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Block, beside, columns, heading, list, paragraph, stack, tickBox } from './block.ts';
-import { shares, table } from './table.ts';
-import { figures, fixed, short, signed } from './text.ts';
+import { type Column, NO_BOX, shares, table } from './table.ts';
+import { figures, fixed, short } from './text.ts';
 
 /** Wire, winding, pitch, tension, what to have ready, the whole coil: one strip. */
 export function facts(record: CoilRecord, widthMm: number, measure: Measure): Block {
@@ -76,25 +76,38 @@ export function coilDrawing(record: CoilRecord, widthMm: number, highMm: number,
   return stack([head, drawn, ...notes], 1);
 }
 
+/** The taps in the order of winding; each row is a step and has its box. The finish is ticked among the other steps. */
 export function tapTable(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block {
   const { taps } = record.windings[0]!;
-  const widths = shares(widthMm, [8, 16, 14, 13, 13, 13, 13]);
-  const heads = [TAPS.tap, TAPS.turn, TAPS.position, TAPS.angle, TAPS.inductance, TAPS.deviation, TAPS.wire];
-  const rows = taps.map((tap) => [
-    `${tap.tap}`,
-    short(tap.turn, 3),
-    fixed(tap.positionMm, 2),
-    fixed(tap.angleDeg, 1),
-    figures(tap.inductanceUh),
-    signed(tap.deviationPercent, 2),
-    fixed(tap.wireFromStartM, 2),
-  ]);
-  const columnsOf = heads.map((head, i) => ({
-    head,
-    widthMm: widths[i]!,
-    align: i === 0 ? ('centre' as const) : ('right' as const),
-    bold: i < 2,
-  }));
+  const stepOf = new Map(record.steps.map((step) => [step.tap, step]));
+  const parts: readonly (readonly [string, number, Partial<Column>])[] = [
+    [TAPS.step, 8, {}],
+    [TAPS.done, 7, { kind: 'tick' }],
+    [TAPS.tap, 7, { align: 'centre', bold: true }],
+    [TAPS.turn, 15, { bold: true }],
+    [TAPS.angle, 12, { bold: true }],
+    [TAPS.position, 13, {}],
+    [TAPS.inductance, 13, {}],
+    [TAPS.wire, 13, {}],
+  ];
+  const widths = shares(
+    widthMm,
+    parts.map(([, width]) => width),
+  );
+  const rows = taps.map((tap) => {
+    const step = stepOf.get(tap.tap);
+    return [
+      step ? `${step.step}` : '',
+      step?.kind === 'tap' ? '' : NO_BOX,
+      `${tap.tap}`,
+      short(tap.turn, 3),
+      fixed(tap.angleDeg, 1),
+      fixed(tap.positionMm, 2),
+      figures(tap.inductanceUh),
+      fixed(tap.wireFromStartM, 2),
+    ];
+  });
+  const columnsOf = parts.map(([head, , more], i) => ({ head, widthMm: widths[i]!, align: 'right' as const, ...more }));
   return stack([heading(TAPS.heading, widthMm, measure), table(columnsOf, rows, measure, { rowMm })], 0);
 }
 
@@ -138,15 +151,29 @@ export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure)
   return { ...stack([head, beside(panels, 0.5), ...how], 0.8), widthMm };
 }
 
-/** Each step with its box and its number. */
+/** The other steps, each with its box and number; steps that are rows of the tap table are named in their place. */
 export function stepItems(record: CoilRecord, widthMm: number, measure: Measure): Block[] {
-  return record.steps.map((step) => {
-    const text = paragraph(step.text, widthMm - 11, measure);
-    const base = -(CAP_SHARE + 0.1) * BODY_MM;
-    const number = label(9.6, base, `${step.step}`, { sizeMm: BODY_MM, align: 'right', bold: true });
-    const shapes: Shape[] = [tickBox(0, -3.3), number, ...movedAll(text, 11, 0)];
-    return { widthMm, heightMm: Math.max(4.2, text.heightMm), shapes };
-  });
+  const items: Block[] = [];
+  const { steps } = record;
+  const indent = 11;
+  const add = (mark: Shape[], words: string) => {
+    const text = paragraph(words, widthMm - indent, measure);
+    const shapes: Shape[] = [...mark, ...movedAll(text, indent, 0)];
+    items.push({ widthMm, heightMm: Math.max(4.2, text.heightMm), shapes });
+  };
+  const base = -(CAP_SHARE + 0.1) * BODY_MM;
+  for (let i = 0; i < steps.length; i++) {
+    const step = steps[i]!;
+    if (step.kind !== 'tap' || step.tap === null) {
+      const number = label(9.6, base, `${step.step}`, { sizeMm: BODY_MM, align: 'right', bold: true });
+      add([tickBox(0, -3.3), number], step.text);
+      continue;
+    }
+    let last = step;
+    while (steps[i + 1]?.kind === 'tap') last = steps[++i]!;
+    add([], STEPS.rows(step.step, last.step));
+  }
+  return items;
 }
 
 /** Cautions in a frame, in one column or two. */

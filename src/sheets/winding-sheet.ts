@@ -54,7 +54,7 @@ function stepsBlock(items: readonly Block[], words: string, count: 1 | 2, gapMm:
 }
 
 /** Height of the drawing of the coil on page 1, the largest first. */
-const DRAWING_MM = [90, 84, 72, 60, 48];
+const DRAWING_MM = [90, 84, 72, 60, 48, 42];
 /** How closely the rest is set: a row of the tap table, and the space between steps. */
 const CLOSENESS = [
   { rowMm: 5.4, gapMm: 1.4 },

@@ -35,37 +35,30 @@ export const HOW: Record<MethodName, (loopMm: number) => string[]> = {
 
 export const STEP = {
   measure: (mm: string, effect: string) =>
-    `Measure the former across at three places: ${mm} mm outside. Each 0.1 mm more is ${effect} % more inductance.`,
+    `Measure the former: ${mm} mm outside. 0.1 mm more is ${effect} % more inductance.`,
   drill: (what: string) => `Wrap the template round the tube, printed side out, and drill ${what}. Take the burrs off.`,
   mark: 'Wrap the template and mark the angle and place of every tap on the former.',
   set: (metres: string, low: string, high: string) =>
     `Have ${metres} m of wire on the spool. Set the drag to ${low} to ${high} N.`,
   spacer: (name: string) => `Have the spacer ready: ${name}, wound along beside the wire from start to finish.`,
-  start: (mm: number) =>
-    `Lead the end in through A and out through S; leave ${mm} mm free outside. Knot or wedge it inside.`,
+  start: (mm: number) => `Lead the end in at A and out at S; leave ${mm} mm outside.`,
   direction: {
-    right:
-      'Wind right-hand: foot down, coil in front of you, the turns climb to the right (counterclockwise seen from above).',
-    left: 'Wind left-hand: foot down, coil in front of you, the turns climb to the left (clockwise seen from above).',
+    right: 'Wind right-hand: as you face the coil, foot down, the turns climb to the right.',
+    left: 'Wind left-hand: as you face the coil, foot down, the turns climb to the left.',
   },
   /** `to` says where to stop, as a turn and an angle. */
   wind: (turns: string, to: string) => `Wind ${turns} turns, to ${to}`,
   turn: (turn: number) => `turn ${turn}`,
   turnAndAngle: (turn: number, angle: string) => `turn ${turn} and on to ${angle}°`,
   tap: (tap: number) => `make tap ${tap}.`,
-  check: (mm: string) =>
-    `Stop and measure over 20 turns: ${mm} mm edge to edge. Press the turns together or ease them until it is.`,
-  finish: (mm: number) =>
-    `Hold the tension. Lead the end in through F and out through F+1; leave ${mm} mm free. Pull tight.`,
-  afterMeasure:
-    'Measure the coil by sheet “to check by” before the wire is cut short; trim at the finish row if it asks for it.',
+  check: (mm: string) => `At turn 20 stop: 20 turns measure ${mm} mm edge to edge; press or ease them until they do.`,
+  finish: (mm: number) => `Keep the tension; lead the end in at F and out at F+1, tight; leave ${mm} mm.`,
+  afterMeasure: 'Measure by the sheet “to check by” before the wire is cut short; trim at the finish row.',
   takeSpacer: 'Unwind the spacer, or leave it in; nothing here changes if it stays.',
   taps: 'Bare, tin and solder the taps.',
   seal: {
-    textile:
-      'Dry the coil in a warm, dry place for a day; dope it sparingly with clear varnish, let it cure a day, and measure again.',
-    other:
-      'Fix the end turns with a touch of varnish at three places, not over the whole winding; let it cure a day, and measure again.',
+    textile: 'Dry the coil in a warm place for a day; dope it sparingly, let it cure a day, measure again.',
+    other: 'Fix the end turns with a touch of varnish at three places; let it cure a day, measure again.',
   },
 } as const;
 

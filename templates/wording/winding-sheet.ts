@@ -54,7 +54,9 @@ export const DRAWING = {
 } as const;
 
 export const TAPS = {
-  heading: 'Taps, counted from the start S',
+  heading: 'Taps: tick each row when it is wound',
+  step: 'step',
+  done: '',
   tap: 'tap',
   turn: 'turn',
   position: 'height mm',
@@ -67,6 +69,8 @@ export const TAPS = {
 export const STEPS = {
   heading: 'Steps: tick each when it is done',
   more: 'Steps, continued',
+  rows: (first: number, last: number) =>
+    first === last ? `Step ${first}: in the table.` : `Steps ${first} to ${last}: row by row in the table.`,
 } as const;
 
 export const CAUTIONS = { heading: 'Take care' } as const;
@@ -81,6 +85,7 @@ export const CHECKS = {
   reading: 'reading',
   good: 'in limits',
   taps: 'Every tap, measured from the start S',
+  deviation: 'off target %',
   length: 'wound length mm',
   inductance: 'inductance µH',
   resistance: 'DC resistance Ω at 20 °C',

@@ -34,22 +34,41 @@ function pdf(path, record) {
   }
   if (has('pdftotext')) {
     const { stdout } = run('pdftotext', ['-layout', path, '-']);
-    check(`pdftotext ${path} shows the job's name`, stdout.replace(/\s+/g, ' ').includes(record.job), stdout.slice(0, 500));
+    check(
+      `pdftotext ${path} shows the job's name`,
+      stdout.replace(/\s+/g, ' ').includes(record.job),
+      stdout.slice(0, 500),
+    );
     check(`pdftotext ${path} shows the record's hash`, stdout.includes(record.hash.slice(0, 12)), stdout.slice(0, 500));
   }
   if (has('pdffonts')) {
     const { stdout } = run('pdffonts', [path]);
     const rows = stdout.trim().split('\n').slice(2);
-    check(`pdffonts ${path}: every font embedded`, rows.length > 0 && rows.every((row) => / yes +yes /.test(row)), stdout);
+    check(
+      `pdffonts ${path}: every font embedded`,
+      rows.length > 0 && rows.every((row) => / yes +yes /.test(row)),
+      stdout,
+    );
   }
 }
 
 function stl(path) {
   if (has('admesh')) {
     const { status, stdout } = run('admesh', [path]);
-    const zero = ['Total disconnected facets', 'Degenerate facets', 'Edges fixed', 'Facets removed', 'Facets added', 'Facets reversed', 'Backwards edges'];
+    const zero = [
+      'Total disconnected facets',
+      'Degenerate facets',
+      'Edges fixed',
+      'Facets removed',
+      'Facets added',
+      'Facets reversed',
+      'Backwards edges',
+    ];
     for (const what of zero) {
-      const count = [...stdout.matchAll(new RegExp(`${what}\\s*:\\s*(\\d+)(?:\\s+(\\d+))?`, 'g'))].flatMap((m) => [m[1], m[2]]);
+      const count = [...stdout.matchAll(new RegExp(`${what}\\s*:\\s*(\\d+)(?:\\s+(\\d+))?`, 'g'))].flatMap((m) => [
+        m[1],
+        m[2],
+      ]);
       const good = status === 0 && count.length > 0 && count.every((n) => n === undefined || n === '0');
       check(`admesh ${path}: ${what} 0`, good, stdout);
     }
