@@ -123,6 +123,7 @@ export function formerFor(around: Around, coil: Coil, taps: readonly number[], h
   const { wallMm, strain, material } = wallFor(around);
   const flanges = printed && job.former.flanges;
   const flangeMm = outsideMm + 2 * RIM_MM;
+  const widest = flanges ? flangeMm : outsideMm;
   const groove = grooveFor(overallMm);
   const numbers = [
     { text: 'S', angleDeg: 0, tap: null },
@@ -149,8 +150,8 @@ export function formerFor(around: Around, coil: Coil, taps: readonly number[], h
     numberHeightMm: 3.2,
     datumMark: printed ? { angleDeg: 0, widthMm: 1.2, depthMm: 0.6 } : null,
     print: printed ? { lineMm: job.printer.lineMm, holeCompensationMm: job.printer.holeCompensationMm } : null,
-    // Chords within 0.01 mm of the circle at this diameter, in steps of 12 so that marks fall on them.
-    segments: Math.max(48, Math.ceil(Math.PI / Math.acos(1 - 0.01 / (outsideMm / 2)) / 12) * 12),
+    // Chords within 0.01 mm of the widest circle, in steps of 12 so that marks fall on them.
+    segments: Math.max(48, Math.ceil(Math.PI / Math.acos(1 - 0.01 / (widest / 2)) / 12) * 12),
     stiffness: `${around.tensionN.toFixed(1)} N at this pitch takes ${percent} % off the diameter of a ${wallMm.toFixed(2)} mm wall of ${material.name} (modulus ${material.modulusGPa} GPa), ${(strain * 160).toFixed(2)} % off the inductance; wind no tighter`,
   };
 }
