@@ -88,9 +88,10 @@ function list(inductancesUh: readonly number[]): Demand {
 
 /** Fewest positions whose coverages, each `cover` wide in frequency, fill `band` with this overlap; may be Infinity. */
 export function fewestPositions(band: number, cover: number, overlap: number): number {
+  if (band <= cover) return 1;
   const gain = cover / (1 + overlap);
   if (gain <= 1) return Number.POSITIVE_INFINITY;
-  return Math.max(1, Math.ceil(1 + Math.log(band / cover) / Math.log(gain) - 1e-9));
+  return Math.ceil(1 + Math.log(band / cover) / Math.log(gain) - 1e-9);
 }
 
 /** Fewest positions that a band needs when every section has this self-capacitance in pF; may be Infinity. */
