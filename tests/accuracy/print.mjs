@@ -1,0 +1,50 @@
+/**
+ * Works the accuracy ledger out afresh and prints it as a table in Markdown; with --write it also puts errors and numbers of cases into
+ * ledger.json. Bounds are changed by hand, or with --bounds to what is needed now (never more than
+ * was asked for).
+ */
+import { readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { build } from 'esbuild';
+
+const here = new URL('.', import.meta.url);
+const data = new URL('ledger.json', here);
+const bundle = new URL(`.ledger.${process.pid}.mjs`, here);
+await build({
+  entryPoints: [new URL('ledger.ts', here).pathname],
+  outfile: bundle.pathname,
+  bundle: true,
+  platform: 'node',
+  format: 'esm',
+  packages: 'external',
+  logLevel: 'error',
+});
+try {
+  const { boundFor, canTighten, measure } = await import(bundle.href);
+  const cases = JSON.parse(readFileSync(data, 'utf8')).map((row) => {
+    const now = measure(row.id);
+    const error = Number(now.error.toPrecision(3));
+    const needed = Math.min(boundFor(now.error), row.demand ?? Number.POSITIVE_INFINITY);
+    const bound = process.argv.includes('--bounds') ? needed : row.bound;
+    return { ...row, cases: now.cases, error, bound };
+  });
+  const shown = (value) => (value < 1e-3 ? value.toExponential() : `${Number((100 * value).toPrecision(3))} %`);
+  console.log('| what | against | status | cases | error now | bound |');
+  console.log('| --- | --- | --- | --: | --: | --: |');
+  for (const { what, kind, reference, status, cases: count, error, bound } of cases) {
+    const unit = kind === 'absolute' ? ' (absolute)' : '';
+    const cell = (value) => (kind === 'absolute' ? value.toExponential() : shown(value));
+    console.log(`| ${what}${unit} | ${reference} | ${status} | ${count} | ${cell(error)} | ${cell(bound)} |`);
+  }
+  for (const { id, error, bound } of cases) {
+    if (canTighten(bound, error)) console.error(`${id}: the bound ${bound} can be tightened, the error is ${error}`);
+    if (error > bound) {
+      console.error(`${id}: the error ${error} is past its bound ${bound}`);
+      process.exitCode = 1;
+    }
+  }
+  if (process.argv.includes('--write') || process.argv.includes('--bounds')) {
+    writeFileSync(data, `${JSON.stringify(cases, null, 2)}\n`);
+  }
+} finally {
+  rmSync(bundle);
+}
