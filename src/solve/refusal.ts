@@ -31,7 +31,9 @@ function noCandidate(job: Job): { key: string; got: string } {
 /** What to call the limit that failed: that of the candidate which came nearest, else the length. */
 function worst(job: Job, notFound: NotFound): { key: string; got: string } {
   const excess = (breach: Breach) => Math.abs(breach.got - breach.allowed) / Math.max(Math.abs(breach.allowed), 1e-9);
-  const nearest = [...notFound.breaches].sort((a, b) => excess(a) - excess(b))[0];
+  const worstOf = (breaches: readonly Breach[]) => breaches.reduce((a, b) => (excess(b) > excess(a) ? b : a));
+  // Of each candidate the limit that it misses most, and of these the nearest miss.
+  const nearest = notFound.breaches.map(worstOf).sort((a, b) => excess(a) - excess(b))[0];
   if (nearest !== undefined) return { key: keyOf(job, nearest.limit), got: nearest.text };
   if (notFound.tried === 0) return noCandidate(job);
   const demand = demandFor(job);

@@ -41,8 +41,8 @@ export interface Found {
 export interface NotFound {
   readonly demand: Demand;
   readonly tried: number;
-  /** The limits broken by those that came nearest, and the shortest former that was seen. */
-  readonly breaches: readonly Breach[];
+  /** The limits broken by each that was worked out. */
+  readonly breaches: readonly (readonly Breach[])[];
 }
 
 /** Self-capacitance in pF of a coil as long as it is wide, on the widest former of the job. */
@@ -92,7 +92,7 @@ export function search(job: Job): Found | NotFound {
   }
   if (notFound !== null) return notFound;
   const demand = demandFor(job);
-  return { demand, tried: 0, breaches: [tooManyPositions(demand)] };
+  return { demand, tried: 0, breaches: [[tooManyPositions(demand)]] };
 }
 
 /** Whether the search would find a coil; as the search, but it stops at the first. */
@@ -111,9 +111,10 @@ function demandsFor(job: Job, candidates: readonly Candidate[]): Demand[] {
   const { want, set } = job;
   const usual = demandFor(job);
   if (want.kind !== 'band' || want.taps !== null || set === null) return [usual];
+  if (usual.taps > MOST_TAPS + 1) return [];
   const sizes = candidates.map((candidate) => sizeOf(job, usual, candidate)).filter((size) => size !== null);
   const selfPf = Math.min(...sizes.filter((size) => mayFit(size, job, usual)).map((size) => size.selfPf));
-  const fewer = Number.isFinite(selfPf) && usual.taps <= MOST_TAPS + 1 ? demandOf(job, selfPf) : usual;
+  const fewer = Number.isFinite(selfPf) ? demandOf(job, selfPf) : usual;
   return (fewer.taps < usual.taps ? [fewer, usual] : [usual]).filter(({ taps }) => taps <= MOST_TAPS);
 }
 
@@ -129,12 +130,12 @@ function searchFor(job: Job, demand: Demand, candidates: readonly Candidate[]): 
   const hopeful = hopefulOf(job, demand, candidates);
   const aspect = aspectOf(job.prefer);
   const outcomes = new Map<Candidate, Design | null>();
-  const breaches: Breach[] = [];
+  const breaches: (readonly Breach[])[] = [];
   const work = (candidate: Candidate): Design | null => {
     const known = outcomes.get(candidate);
     if (known !== undefined) return known;
     const outcome = designOf(job, demand, candidate);
-    if (!outcome.ok) breaches.push(...outcome.breaches);
+    if (!outcome.ok) breaches.push(outcome.breaches);
     const design = outcome.ok ? outcome.design : null;
     outcomes.set(candidate, design);
     return design;
