@@ -51,7 +51,7 @@ export interface FieldOptions {
  * of the wire centres, `wireRadius` the bare one. Domain: 0 < wireRadius < radius, no two turns nearer than a wire (RangeError).
  * Fields of a ring at an equal ring a distance h away: B_z = mu0/(2 pi s) (K - E), B_r = mu0 h/(2 pi R s) [(2 R^2 + h^2)/h^2 E - K] with
  * s^2 = 4 R^2 + h^2 (Smythe 1950, 7.10).
- * Cost: N evaluations at an even pitch, N^2/2 otherwise; 500 uneven turns take about 40 ms and 25 MB.
+ * Cost: N evaluations at an even pitch, N^2/2 otherwise; 500 uneven turns take about 50 ms and 30 MB.
  *
  * Example: fieldTables([0, 4e-3, 8e-3], 0.03, 7.5e-4).order = 2
  */

@@ -67,11 +67,17 @@ export function denseSolution(coil: DenseCoil): { Z: Complex[][]; dissipated: nu
     return e;
   });
   const answer = (column: number) => C[(Math.floor(column / 2) % order) + 1]!;
-  const system = T.map((row, r) =>
-    Array.from(row, (value, c): Complex => sub([r === c ? 1 : 0, 0], times(value, answer(c)))),
-  );
+  const rows = T.map((row, r) => {
+    const re = new Float64Array(size);
+    const im = new Float64Array(size);
+    for (let c = 0; c < size; c++) {
+      re[c] = (r === c ? 1 : 0) - row[c]! * answer(c)[0];
+      im[c] = -row[c]! * answer(c)[1];
+    }
+    return { re, im };
+  });
   const x = eliminate(
-    system,
+    rows,
     excitations.map((e) => Array.from(e, (value): Complex => [value, 0])),
   );
   const perWeber = (2 * Math.PI * R * 2 * Math.PI) / MU0;
@@ -130,21 +136,30 @@ function outer(coil: DenseCoil, s: readonly [number, number], t: readonly [numbe
   return sum;
 }
 
+interface Row {
+  readonly re: Float64Array;
+  readonly im: Float64Array;
+}
+
 /** Solves for several right-hand sides at once. */
-function eliminate(matrix: Complex[][], columns: Complex[][]): Complex[][] {
-  const size = matrix.length;
-  const norm = (a: Complex) => Math.hypot(...a);
+function eliminate(rows: Row[], columns: Complex[][]): Complex[][] {
+  const size = rows.length;
+  const entry = (i: number, j: number): Complex => [rows[i]!.re[j]!, rows[i]!.im[j]!];
   for (let k = 0; k < size; k++) {
     let pivot = k;
-    for (let i = k + 1; i < size; i++) if (norm(matrix[i]![k]!) > norm(matrix[pivot]![k]!)) pivot = i;
-    [matrix[k], matrix[pivot]] = [matrix[pivot]!, matrix[k]!];
+    for (let i = k + 1; i < size; i++) if (Math.hypot(...entry(i, k)) > Math.hypot(...entry(pivot, k))) pivot = i;
+    [rows[k], rows[pivot]] = [rows[pivot]!, rows[k]!];
     for (const column of columns) [column[k], column[pivot]] = [column[pivot]!, column[k]!];
-    const row = matrix[k]!;
+    const { re: pRe, im: pIm } = rows[k]!;
     for (let i = k + 1; i < size; i++) {
-      const target = matrix[i]!;
-      if (target[k]![0] === 0 && target[k]![1] === 0) continue;
-      const factor = div(target[k]!, row[k]!);
-      for (let j = k; j < size; j++) target[j] = sub(target[j]!, mul(factor, row[j]!));
+      const factor = div(entry(i, k), entry(k, k));
+      const [fRe, fIm] = factor;
+      if (fRe === 0 && fIm === 0) continue;
+      const { re, im } = rows[i]!;
+      for (let j = k; j < size; j++) {
+        re[j]! -= fRe * pRe[j]! - fIm * pIm[j]!;
+        im[j]! -= fRe * pIm[j]! + fIm * pRe[j]!;
+      }
       for (const column of columns) column[i] = sub(column[i]!, mul(factor, column[k]!));
     }
   }
@@ -152,8 +167,8 @@ function eliminate(matrix: Complex[][], columns: Complex[][]): Complex[][] {
     const x = column.slice();
     for (let k = size - 1; k >= 0; k--) {
       let sum = x[k]!;
-      for (let j = k + 1; j < size; j++) sum = sub(sum, mul(matrix[k]![j]!, x[j]!));
-      x[k] = div(sum, matrix[k]![k]!);
+      for (let j = k + 1; j < size; j++) sum = sub(sum, mul(entry(k, j), x[j]!));
+      x[k] = div(sum, entry(k, k));
     }
     return x;
   });

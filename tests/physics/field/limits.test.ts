@@ -136,6 +136,45 @@ test('a part turn goes over into none and into a whole one', () => {
   expect(off(add(arcs.resistance), ring.resistance[0]!)).toBeCloseTo(0, 11);
 });
 
+test('a winding that ends in a part of a turn, wound close', () => {
+  // The middle of the last 0.2 turn is 0.6 pitch from the turn before it, nearer than a wire; the wire itself is not.
+  const close = (part: number) => {
+    const places = part === 0 ? even(10, 5.6e-4) : [...even(10, 5.6e-4), (9 + 0.5 + part / 2) * 5.6e-4];
+    return fieldTables(places, 0.02, 2.5e-4, { turns: 10 + part });
+  };
+  expect(close(0.2).powers[2]!.stride).toBe(0);
+  expect(close(0.2).order).toBe(close(0).order);
+  const longer = fieldTables(even(11, 5.6e-4), 0.02, 2.5e-4);
+  const [none, whole11] = [whole(close(0), 1e6), whole(longer, 1e6)];
+  let before = none;
+  for (const part of [1e-6, 0.2, 0.5, 0.8, 1 - 1e-6]) {
+    const z = whole(close(part), 1e6);
+    expect(z.resistance[0]!).toBeGreaterThan(before.resistance[0]!);
+    expect(z.inductance[0]!).toBeGreaterThan(before.inductance[0]!);
+    before = z;
+    // Almost none, almost all: a microturn of ten.
+    if (part === 1e-6) expect(Math.abs(off(z.resistance[0]!, none.resistance[0]!))).toBeLessThan(1e-6);
+  }
+  expect(Math.abs(off(before.resistance[0]!, whole11.resistance[0]!))).toBeLessThan(1e-6);
+  expect(Math.abs(off(before.inductance[0]!, whole11.inductance[0]!))).toBeLessThan(1e-6);
+  const losses = turnLosses(close(0.5), 1e6, RHO, { from: 0, to: 10.5 });
+  expect(off(add(losses), whole(close(0.5), 1e6).resistance[0]!)).toBeCloseTo(0, 7);
+});
+
+test('five hundred close turns of a thick wire at a perfect conductor settle', () => {
+  // The hardest that is let in: d/p = 0.95, 2 of 3 turns dead, skin 0.07 % of the radius.
+  const tables = fieldTables(
+    even(500, 3e-3 / 0.95).map((z, i) => z + (i > 100 ? 1e-3 : 0)),
+    0.05,
+    1.5e-3,
+  );
+  const z = solveField(tables, 4e9, RHO, sectionsOf([0, 170, 500]));
+  expect(z.products).toBeLessThan(80);
+  expect(positive(z.resistance, 2)).toBe(true);
+  const thin = solveField(fieldTables(even(500, 6e-5), 0.02, 2.5e-5), 1e4, RHO, sectionsOf([0, 500]));
+  expect(off(thin.resistance[0]!, 500 * 0.04 * Math.PI * (RHO / (Math.PI * 2.5e-5 ** 2)))).toBeCloseTo(0, 3);
+});
+
 test('a cut within a turn changes the whole by no more than the places of its arcs', () => {
   const tables = fieldTables(even(30, 6e-4), 0.038, 2.5e-4);
   const joined = sectionInductances(tables, [{ from: 0, to: 30 }])[0]!;
