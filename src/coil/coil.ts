@@ -115,12 +115,12 @@ export class Coil {
     return helixLength(this.shape.meanDiameterMm / 1e3, turn, (this.positionMm(turn) - this.positionMm(0)) / 1e3);
   }
 
-  /** DC resistance at 20 C of the turns up to here, ohm. */
-  resistanceOhm(turn: number, bareMm: number = this.shape.wire.bareMm): number {
+  /** DC resistance at 20 C of the turns up to here and of `loopsM` of the same wire, ohm. */
+  resistanceOhm(turn: number, bareMm: number = this.shape.wire.bareMm, loopsM = 0): number {
     const { strands, strandMm, bareMm: nominal } = this.shape.wire;
     const litz = strands > 1;
     const diameter = litz ? strandMm * (bareMm / nominal) : bareMm;
-    return dcResistance(this.wireM(turn) * (litz ? LITZ_TAKE_UP : 1), diameter / 1e3, strands);
+    return dcResistance((this.wireM(turn) + loopsM) * (litz ? LITZ_TAKE_UP : 1), diameter / 1e3, strands);
   }
 
   /** Medhurst's self-capacitance of the section up to this turn, pF. */

@@ -60,7 +60,7 @@ export const tapSchema = z.strictObject({
   inductanceLowUh: num.describe('lower 95 % limit'),
   inductanceHighUh: num.describe('upper 95 % limit'),
   wireFromStartM: num.describe('wire used from the start hole to here, loops of earlier taps included'),
-  resistanceDcOhm: num.describe('of the turns up to the tap at 20 C'),
+  resistanceDcOhm: num.describe('of the wire from the start to the tap at 20 C, loops that stay in circuit included'),
   resistanceLowOhm: num,
   resistanceHighOhm: num,
   woundLengthMm: num.describe('edge to edge over the wires of the turns up to the tap'),

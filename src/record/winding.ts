@@ -24,6 +24,10 @@ function tapOf(
   const { turn, coverage } = tap;
   const inductanceUh = significant(tap.inductanceUh);
   const targetUh = significant(tap.targetUh);
+  // A tap is measured at the end of its own loop, half of which leads there.
+  const loops = index < taps.length - 1 ? index + 0.5 : index;
+  const loopsM = method.loopInCircuit ? method.loopM * loops : 0;
+  const ohm = (bareMm: number) => coil.resistanceOhm(turn, bareMm, loopsM);
   return {
     tap: index + 1,
     turn: decimals(turn, 6),
@@ -36,9 +40,9 @@ function tapOf(
     inductanceLowUh: significant(limits.lowUh),
     inductanceHighUh: significant(limits.highUh),
     wireFromStartM: decimals(coil.wireM(turn) + method.loopM * index, 4),
-    resistanceDcOhm: significant(coil.resistanceOhm(turn)),
-    resistanceLowOhm: significant(coil.resistanceOhm(turn, wire.bareHighMm) * (1 - WIRE_SPREAD)),
-    resistanceHighOhm: significant(coil.resistanceOhm(turn, wire.bareLowMm) * (1 + WIRE_SPREAD)),
+    resistanceDcOhm: significant(ohm(wire.bareMm)),
+    resistanceLowOhm: significant(ohm(wire.bareHighMm) * (1 - WIRE_SPREAD)),
+    resistanceHighOhm: significant(ohm(wire.bareLowMm) * (1 + WIRE_SPREAD)),
     woundLengthMm: mm(coil.woundMm(turn)),
     working: {
       frequencyKhz: significant(tap.workingKhz, 5),

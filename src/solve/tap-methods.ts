@@ -25,6 +25,8 @@ export interface TapMethod {
   readonly holeMm: number;
   /** Extra wire in each tap, m. */
   readonly loopM: number;
+  /** That wire stays in circuit from start to finish; a loop that is soldered at its root does not. */
+  readonly loopInCircuit: boolean;
   readonly why: string;
 }
 
@@ -59,6 +61,7 @@ export function tapMethodsFor(wire: Wire, pitchMm: number, close: boolean): read
     holes: 1,
     holeMm: wireHoleMm(w, 2),
     loopM: 0.12,
+    loopInCircuit: true,
     why: `a pitch of ${pitchMm.toFixed(2)} mm leaves land for a hole of two wires`,
   };
   const loop: TapMethod = {
@@ -69,6 +72,7 @@ export function tapMethodsFor(wire: Wire, pitchMm: number, close: boolean): read
     holes: 0,
     holeMm: 0,
     loopM: 0.1,
+    loopInCircuit: false,
     why: 'the winding leaves no land for holes and this wire twists without breaking',
   };
   const lifted: TapMethod = {
@@ -79,6 +83,7 @@ export function tapMethodsFor(wire: Wire, pitchMm: number, close: boolean): read
     holes: 0,
     holeMm: 0,
     loopM: 0.004,
+    loopInCircuit: true,
     why: 'wire this thick does not twist; lifted over a strip it is bared without a gap',
   };
   const pair: TapMethod = {
@@ -89,6 +94,7 @@ export function tapMethodsFor(wire: Wire, pitchMm: number, close: boolean): read
     holes: 2,
     holeMm: wireHoleMm(w, 1),
     loopM: 0.2,
+    loopInCircuit: true,
     why: 'stranded wire is cut, every strand tinned, and anchored as a pair',
   };
   const lug: TapMethod = {
@@ -99,6 +105,7 @@ export function tapMethodsFor(wire: Wire, pitchMm: number, close: boolean): read
     holes: 0,
     holeMm: 0,
     loopM: 0.01,
+    loopInCircuit: true,
     why: 'a lug of 0.5 mm sheet under the turn, soldered',
   };
   const order: TapMethod[] = [];
