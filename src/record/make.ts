@@ -93,7 +93,7 @@ function whyChosen(job: Job, found: Found): string {
     'least loss': `mean 1/Q ${value.toPrecision(3)} (estimated; mean Q about ${(1 / value).toFixed(0)})`,
     compact: `${(value / 1000).toFixed(0)} cm³ of former`,
     'least wire': `${value.toFixed(1)} m of wire`,
-    'closest taps': `worst tap ${(value * 100).toFixed(2)} % off`,
+    'closest taps': `worst tap ${(chosen.metrics.worstTap * 100).toFixed(2)} % off; of coils within 0.1 % the one with the least loss`,
   }[job.prefer];
   const second = others.map((one) => aspect.of(one.metrics)).sort((a, b) => a - b)[0];
   if (second === undefined) return `${figure}: the only coil that fits what the job permits`;

@@ -12,8 +12,7 @@ const WORTH = 0.01;
 const SHOWN = 6;
 
 function betterIn(design: Design, chosen: Design): string[] {
-  // A tap that is a tenth of a percent out is as good as one that is not.
-  const value = (aspect: Aspect, one: Design) => Math.max(aspect.of(one.metrics), aspect.name === 'taps' ? 1e-3 : 0);
+  const value = (aspect: Aspect, one: Design) => aspect.of(one.metrics);
   return ALL_ASPECTS.filter((aspect) => value(aspect, design) < value(aspect, chosen) * (1 - WORTH)).map(
     (aspect) => aspect.better,
   );

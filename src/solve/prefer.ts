@@ -12,14 +12,17 @@ export interface Aspect {
   guess(estimate: Estimate): number;
 }
 
-/** How far out a tap on the first whole turn may be; the fewer turns the coarser. */
-const coarseness = (estimate: Estimate) => 1 / Math.max(estimate.firstTapTurns, 1e-3);
+/** Taps this near are as good as nearer ones: no bench tells them apart, and other figures decide. */
+const NEAR_ENOUGH = 1e-3;
+
+/** About how far out the first tap is when half a step of 5 degrees is missing; L goes with about the power of 1.8 there. */
+const coarseness = (estimate: Estimate) => Math.max(NEAR_ENOUGH, 1.8 / 144 / Math.max(estimate.firstTapTurns, 1e-3));
 
 export const ASPECTS = {
   loss: { name: 'loss', better: 'less loss', of: (m) => m.lossFactor, guess: (e) => e.lossFactor },
   volume: { name: 'size', better: 'more compact', of: (m) => m.volumeMm3, guess: (e) => e.volumeMm3 },
   wire: { name: 'wire', better: 'less wire', of: (m) => m.wireM, guess: (e) => e.wireM },
-  worstTap: { name: 'taps', better: 'closer taps', of: (m) => m.worstTap, guess: coarseness },
+  worstTap: { name: 'taps', better: 'closer taps', of: (m) => Math.max(m.worstTap, NEAR_ENOUGH), guess: coarseness },
   mass: { name: 'copper', better: 'less copper', of: (m) => m.massG, guess: (e) => e.massG },
   length: { name: 'length', better: 'shorter', of: (m) => m.lengthMm, guess: (e) => e.formerLengthMm },
   turns: { name: 'turns', better: 'fewer turns', of: (m) => m.turns, guess: (e) => e.turns },

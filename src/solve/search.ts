@@ -174,7 +174,9 @@ function bestByWire(list: readonly Estimate[], aspect: Aspect, count: number): E
 }
 
 const inOrder = (hopeful: readonly Estimate[], aspect: Aspect) =>
-  hopeful.map((one) => ({ one, guess: aspect.guess(one) })).sort((a, b) => a.guess - b.guess);
+  hopeful
+    .map((one) => ({ one, guess: aspect.guess(one) }))
+    .sort((a, b) => a.guess - b.guess || a.one.lossFactor - b.one.lossFactor);
 
 function bestOf(
   hopeful: readonly Estimate[],
