@@ -63,20 +63,23 @@ export function placeTaps(coil: Coil, targetsUh: readonly number[], placing: Pla
   for (const [index, target] of targetsUh.entries()) {
     const ideal = coil.turnFor(target);
     if (ideal >= coil.turns) return { noPlaceFor: index + 1, beyond: true };
-    const under = Math.floor(ideal / step + 1e-9);
-    const below = under * step;
-    const above = below + step;
-    const nearer =
-      below > 0 && target - coil.inductanceUh(below) <= coil.inductanceUh(Math.min(above, coil.turns)) - target;
-    const base = index === 0 && placing.firstNotAbove ? under : nearer ? under : under + 1;
-    // The place on the other side of the ideal one is the second nearest, and so on in turn.
-    const toOther = base === under ? 1 : -1;
+    const onlyBelow = index === 0 && placing.firstNotAbove;
+    const off = (place: number) => {
+      const turn = place * step;
+      return turn > 0 && turn <= coil.turns ? Math.abs(coil.inductanceUh(turn) - target) : Number.POSITIVE_INFINITY;
+    };
+    // Places are counted in whole numbers so that a place is the same number whichever way it was reached; they are tried
+    // from the target outwards, each time on the side that is nearer in inductance.
+    let below = Math.floor(ideal / step + 1e-9);
+    let above = below + 1;
+    let belowOff = off(below);
+    let aboveOff = onlyBelow ? Number.POSITIVE_INFINITY : off(above);
     let found: number | null = null;
-    for (let k = 0; k <= 2 * reach && found === null; k++) {
-      const offset = toOther * (k % 2 === 0 ? -k / 2 : (k + 1) / 2);
-      if (index === 0 && placing.firstNotAbove && offset > 0) continue;
-      // Steps are counted in whole numbers so that a place is the same number whichever way it was reached.
-      const turn = (base + offset) * step;
+    for (let k = 0; k <= 2 * reach && found === null && Math.min(belowOff, aboveOff) < Number.POSITIVE_INFINITY; k++) {
+      const takeBelow = belowOff <= aboveOff;
+      const turn = (takeBelow ? below : above) * step;
+      if (takeBelow) belowOff = off(--below);
+      else aboveOff = off(++above);
       const previous = placed[index - 1] ?? 0;
       if (turn <= previous + 1e-9 || turn >= placing.turns - 1e-9 || turn < Math.min(0.5, placing.turns)) continue;
       if (clears(turn, placed, placing.turns, placing.method)) found = turn;

@@ -94,6 +94,33 @@ describe('limits of a finished coil', () => {
     expect(cases).toBeGreaterThan(0);
   });
 
+  it('are as wide for one input alone as that input moves the coil', () => {
+    const { wire, meanDiameterMm, pitchMm, gaps } = SHAPE;
+    const moved: Record<keyof Spread, (side: number, turn: number) => number> = {
+      diameterMm: (side, turn) =>
+        new Coil({ ...SHAPE, meanDiameterMm: meanDiameterMm + side * SPREAD.diameterMm }).inductanceUh(turn),
+      pitch: (side, turn) => new Coil({ ...SHAPE, pitchMm: pitchMm * (1 + side * SPREAD.pitch) }).inductanceUh(turn),
+      bareMm: (side, turn) =>
+        new Coil({ ...SHAPE, wire: { ...wire, bareMm: wire.bareMm + side * SPREAD.bareMm } }).inductanceUh(turn),
+      gap: (side, turn) =>
+        new Coil({
+          ...SHAPE,
+          gaps: gaps.map((gap) => ({ ...gap, gapMm: gap.gapMm * (1 + side * SPREAD.gap) })),
+        }).inductanceUh(turn),
+      turn: (side, turn) => new Coil({ ...SHAPE, turns: 41 }).inductanceUh(turn + side * SPREAD.turn),
+      leadUh: (side, turn) => new Coil(SHAPE).inductanceUh(turn) + side * SPREAD.leadUh,
+    };
+    for (const [input, at] of Object.entries(moved) as [keyof Spread, (side: number, turn: number) => number][])
+      for (const [i, { lowUh, highUh }] of limitsOf(new Coil(SHAPE), TAPS, {
+        ...NONE,
+        [input]: SPREAD[input],
+      }).entries()) {
+        const both = Math.abs(at(1, TAPS[i]!) - at(-1, TAPS[i]!));
+        // One side stands for both: the response bends by a few percent over these widths, the gap's by more.
+        expect(Math.abs(highUh - lowUh - both)).toBeLessThanOrEqual(0.08 * both + 1e-9);
+      }
+  });
+
   it('close on the value when nothing spreads', () => {
     for (const [i, { lowUh, highUh }] of limitsOf(new Coil(SHAPE), TAPS, NONE).entries()) {
       expect(lowUh).toBe(highUh);

@@ -62,6 +62,33 @@ const printed = fc
     };
   });
 
+/** Thick wire on thin formers, with holes at every tap: where holes would run into one another. */
+const thin = printed.map(
+  (one): Parts => ({
+    ...one,
+    want: { ...one.want, inductance: '0.4 uH to 3 uH' },
+    former: { ...one.former, 'outside-diameter': '17 mm', longest: '120 mm' },
+    wire: ['1 mm enamel'],
+    winding: { ...one.winding, pitch: 'spaced', 'tap-method': 'drawn in', 'tap-layout': 'staggered' },
+  }),
+);
+
+/** So few turns that a degree of the finish or a tap beside it is felt. */
+const FEW_TURNS: readonly Parts[] = (
+  [
+    ['0.8783 uH to 3.406 uH', 5, '99 mm', '22 AWG double cotton', 'lug', 'close'],
+    ['0.2730 uH to 3.683 uH', 9, '66.7 mm', '28 AWG single silk', 'twisted loop', 'close'],
+    ['0.4346 uH to 7.110 uH', 8, '101.3 mm', '28 AWG single silk', 'auto', 'close'],
+    ['2.940 uH to 5.317 uH', 4, '68.1 mm', '0.2 mm enamel', 'lug', 'any'],
+    ['3.030 uH to 8.134 uH', 10, '64 mm', '0.5 mm enamel', 'lug', 'close'],
+  ] as const
+).map(([inductance, taps, diameter, wire, method, pitch]) => ({
+  want: { inductance, taps },
+  former: { 'outside-diameter': diameter, longest: '240 mm' },
+  wire: [wire],
+  winding: { pitch, 'tap-method': method, 'tap-layout': 'staggered', hand: 'left' },
+}));
+
 function designsOf(parts: Parts): readonly Design[] {
   const found = search(jobOf(parts));
   return 'chosen' in found ? [found.chosen, ...found.others] : [];
@@ -88,7 +115,8 @@ const apart = (a: number, b: number) => {
 describe('designs on a printed former', () => {
   const designs: { parts: Parts; design: Design }[] = [];
   let refused = 0;
-  for (const parts of fc.sample(printed, { numRuns: 150, seed: 76 })) {
+  const thins = fc.sample(thin, { numRuns: 30, seed: 17 });
+  for (const parts of [...fc.sample(printed, { numRuns: 150, seed: 76 }), ...thins, ...FEW_TURNS]) {
     const found = designsOf(parts);
     if (found.length === 0) refused++;
     for (const design of found) designs.push({ parts, design });
@@ -97,7 +125,7 @@ describe('designs on a printed former', () => {
 
   it('are many and of every kind', () => {
     console.log(
-      `designs: ${designs.length} from 150 jobs (${refused} of them refused); ${many((d) => d.method.name).join(', ')}; ${many((d) => d.layout).join(', ')}; ${many((d) => d.candidate.pitch.kind).join(', ')}`,
+      `designs: ${designs.length} from 185 jobs (${refused} of them refused); ${many((d) => d.method.name).join(', ')}; ${many((d) => d.layout).join(', ')}; ${many((d) => d.candidate.pitch.kind).join(', ')}`,
     );
     expect(designs.length).toBeGreaterThan(300);
     expect(many((d) => d.method.name)).toEqual(['cut pair', 'drawn in', 'lifted turn', 'lug', 'twisted loop']);
@@ -113,6 +141,10 @@ describe('designs on a printed former', () => {
       worst = Math.max(worst, off);
     }
     console.log(`whole coil: worst ${(worst * 100).toFixed(3)} %`);
+  });
+
+  it('are found for few turns too', () => {
+    for (const parts of FEW_TURNS) expect(designs.some((one) => one.parts === parts)).toBe(true);
   });
 
   it('stay within the job and hold everything that is on them', () => {

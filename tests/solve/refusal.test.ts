@@ -2,11 +2,28 @@ import { describe, expect, it } from 'vitest';
 import { Fault } from '../../src/fault.ts';
 import type { Job } from '../../src/job/job.ts';
 import { recordOf } from '../../src/plan.ts';
+import { threeDigits } from '../../src/solve/first-fit.ts';
 import { hasCoil } from '../../src/solve/search.ts';
 import { BAND, change, jobOf, type Parts, RANGE, TUBE } from '../helpers/jobs.ts';
 
+interface Refusal {
+  readonly key: string;
+  readonly got: string;
+  readonly todo: string;
+}
+
+const told = new Map<Parts, Refusal>();
+
 /** What a job that nothing meets is told. */
-function refusalOf(parts: Parts): { key: string; got: string; todo: string } {
+function refusalOf(parts: Parts): Refusal {
+  const known = told.get(parts);
+  if (known !== undefined) return known;
+  const refusal = refuse(parts);
+  told.set(parts, refusal);
+  return refusal;
+}
+
+function refuse(parts: Parts): Refusal {
   try {
     recordOf(jobOf(parts), '0');
   } catch (fault) {
@@ -111,10 +128,10 @@ const IMPOSSIBLE: readonly [string, Parts, string, RegExp][] = [
     'wire',
     /2 mm enamel, 2\.\d+ mm\) does not lie at a pitch of the job round 20 mm/,
   ],
-  ['a wall too thin', change(RANGE, 'former', { wall: '0.5 mm' }), 'former.wall', /leaves 0\.50 mm .* 0\.90 mm/],
+  ['a wall too thin', change(SHORT, 'former', { wall: '0.5 mm' }), 'former.wall', /leaves 0\.50 mm .* 0\.90 mm/],
   [
     'a bed too small',
-    { ...change(RANGE, 'former', { 'outside-diameter': '110 mm' }), printer: { bed: '120 x 120 mm' } },
+    { ...change(SHORT, 'former', { 'outside-diameter': '110 mm' }), printer: { bed: '120 x 120 mm' } },
     'printer.bed',
     /143\.0 mm, allowed 120\.0 mm/,
   ],
@@ -172,6 +189,24 @@ describe('a job that nothing meets', () => {
   it('was offered changes that were all tried', () => {
     console.log(`refusals: ${IMPOSSIBLE.length} jobs, ${offers} offers hold, ${least} of them were the least that do`);
     expect(Math.min(offers, least)).toBeGreaterThan(0);
+  });
+
+  it('is offered a change of every kind that could help', () => {
+    const { todo } = refusalOf(IMPOSSIBLE[0]![1]);
+    for (const kind of [
+      'raise former.longest',
+      'raise former.outside-diameter',
+      'use ',
+      'lower the upper end of want.inductance',
+    ])
+      expect(todo).toContain(kind);
+    expect(refusalOf(IMPOSSIBLE[6]![1]).todo).toContain('lower want.overlap');
+  });
+
+  it('is told values of three digits, rounded towards what fits', () => {
+    const values = [1234.4, 0.061251, 140, 9.999];
+    expect(values.map((value) => threeDigits(value, 'down'))).toEqual([1230, 0.0612, 140, 9.99]);
+    expect(values.map((value) => threeDigits(value, 'up'))).toEqual([1240, 0.0613, 140, 10]);
   });
 
   it('is told so when no single change would do', () => {
