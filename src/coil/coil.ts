@@ -23,7 +23,7 @@ export interface CoilShape {
 }
 
 /** Copper is longer in a stranded bundle than the bundle: 1.5 % for one bunching (Sullivan 1999 gives the same order). */
-const LITZ_TAKE_UP = 1.015;
+export const LITZ_TAKE_UP = 1.015;
 
 export class Coil {
   readonly shape: CoilShape;

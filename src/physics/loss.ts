@@ -50,7 +50,8 @@ export function lossEstimate(input: LossInput): LossEstimate {
     const ratio = 1 + (skinRatio(wireDiameter, frequency) - 1) * phi;
     return { resistance: dcResistance(wireLength, wireDiameter) * ratio, kind: 'estimate' };
   }
-  if (!allPositive(wireDiameter, strandDiameter, strands, frequency)) needPositive({ wireDiameter, strandDiameter, strands, frequency });
+  if (!allPositive(wireDiameter, strandDiameter, strands, frequency))
+    needPositive({ wireDiameter, strandDiameter, strands, frequency });
   const coilField = input.turns / (2 * Math.hypot(input.length, input.meanDiameter));
   const ownFieldSquared = 1 / (2 * Math.PI ** 2 * wireDiameter ** 2);
   const omega = 2 * Math.PI * frequency;

@@ -1,0 +1,138 @@
+/**
+ * The coil where it works: resistance, inductance and Q of every switch position by the field of every turn, and what each
+ * position tunes with its dead turns as a coupled circuit.
+ *
+ * Microhenry, picofarad, kilohertz, ohm and turns outside; SI only towards `physics/`. Geometry tables and the circuit are
+ * made once, when first asked for.
+ */
+import { type CoupledWinding, coupledWinding, nodesFor, resonanceBracket } from '../physics/coupled/coupled.ts';
+import {
+  type FieldTables,
+  fieldTables,
+  resistivityAt,
+  type SectionImpedance,
+  sectionInductances,
+  solveField,
+  solveLitz,
+  terminalImpedance,
+} from '../physics/field/field.ts';
+import { skinDepth } from '../physics/skin.ts';
+import { type Coil, LITZ_TAKE_UP } from './coil.ts';
+
+export const RESTS = ['open', 'shorted', 'shorted in sections', 'disconnected'] as const;
+/** What the switch does with the turns that it does not use. */
+export type Rest = (typeof RESTS)[number];
+
+/** What hangs on the coil besides the tuning capacitor. */
+export interface Surroundings {
+  /** Each tap's lead and switch contact to earth, at its own turn, pF. */
+  readonly leadPf: number;
+  readonly earthed: 'start' | 'finish';
+  readonly celsius: number;
+}
+
+export interface Terminal {
+  readonly kHz: number;
+  readonly inductanceUh: number;
+  readonly resistanceOhm: number;
+  readonly q: number;
+}
+
+/** A resonance with what is not known of it; `secondKhz` null where there is none. */
+export interface Tuned {
+  readonly kHz: number;
+  readonly uncertaintyKhz: number;
+  readonly secondKhz: number | null;
+}
+
+export class WorkingCoil {
+  readonly coil: Coil;
+  /** Turns of the switch positions, the whole coil last. */
+  readonly taps: readonly number[];
+  readonly around: Surroundings;
+  #tables: FieldTables | null = null;
+  #winding: CoupledWinding | null = null;
+  readonly #solved = new Map<string, SectionImpedance>();
+
+  constructor(coil: Coil, taps: readonly number[], around: Surroundings) {
+    this.coil = coil;
+    this.taps = taps;
+    this.around = around;
+  }
+
+  get #geometry(): FieldTables {
+    const { places, shape, turns } = this.coil;
+    const metres = Float64Array.from(places, (z) => z / 1e3);
+    this.#tables ??= fieldTables(metres, shape.meanDiameterMm / 2e3, shape.wire.bareMm / 2e3, { turns });
+    return this.#tables;
+  }
+
+  get #circuit(): CoupledWinding {
+    if (this.#winding === null) {
+      const nodes = nodesFor(this.coil.turns, this.taps.slice(0, -1));
+      const sections = nodes.slice(1).map((to, i) => ({ from: nodes[i]!, to }));
+      this.#winding = coupledWinding(nodes, sectionInductances(this.#geometry, sections));
+    }
+    return this.#winding;
+  }
+
+  /** Strands of litz thin enough for their model at this frequency; solid wire always is. */
+  lossValid(kHz: number): boolean {
+    const { strands, strandMm } = this.coil.shape.wire;
+    return strands === 1 || strandMm / 1e3 < 1.5 * skinDepth(kHz * 1e3);
+  }
+
+  #solve(kHz: number, cuts: readonly number[]): SectionImpedance {
+    const ends = [0, ...cuts, this.coil.turns].filter((turn, i, all) => i === 0 || turn - all[i - 1]! > 1e-6);
+    const key = `${kHz} ${ends.join(' ')}`;
+    const known = this.#solved.get(key);
+    if (known !== undefined) return known;
+    const sections = ends.slice(1).map((to, i) => ({ from: ends[i]!, to }));
+    const { wire } = this.coil.shape;
+    const rho = resistivityAt(this.around.celsius);
+    const solved =
+      wire.strands > 1
+        ? solveLitz(
+            this.#geometry,
+            kHz * 1e3,
+            rho,
+            { strands: wire.strands, strandDiameter: wire.strandMm / 1e3, takeUp: LITZ_TAKE_UP },
+            sections,
+          )
+        : solveField(this.#geometry, kHz * 1e3, rho, sections);
+    this.#solved.set(key, solved);
+    return solved;
+  }
+
+  /** Resistance and inductance at the ends of the turns 0..turn in use, the rest as the switch leaves it. */
+  terminal(turn: number, kHz: number, rest: Rest): Terminal {
+    const later = this.taps.filter((tap) => tap >= turn - 1e-6 && tap < this.coil.turns - 1e-6);
+    const solved = this.#solve(kHz, rest === 'shorted in sections' ? later : [turn]);
+    const { resistance, inductance, q } = terminalImpedance(solved, { from: 0, to: 1 }, rest);
+    return { kHz, inductanceUh: inductance * 1e6, resistanceOhm: resistance, q };
+  }
+
+  /**
+   * First and second resonance of the turns 0..turn with this much capacitance across them, besides the coil's own and the
+   * leads'. The circuit is worked out with low-frequency inductances; what crowding of the current takes off the inductance
+   * at the working frequency is put on the resonance afterwards, as the square root of its ratio.
+   */
+  tuned(turn: number, pf: number, rest: Rest): Tuned {
+    const { leadPf, earthed } = this.around;
+    const found = resonanceBracket(this.#circuit, {
+      from: 0,
+      to: turn,
+      earthed: earthed === 'start' ? 'from' : 'to',
+      rest,
+      taps: this.taps,
+      selfCapacitance: this.coil.selfPf(this.coil.turns) * 1e-12,
+      tuning: pf * 1e-12,
+      strays: leadPf > 0 ? this.taps.map((tap) => ({ turn: tap, capacitance: leadPf * 1e-12 })) : [],
+    });
+    return {
+      kHz: found.first.mean / 1e3,
+      uncertaintyKhz: found.first.uncertainty / 1e3,
+      secondKhz: found.second === undefined ? null : found.second.mean / 1e3,
+    };
+  }
+}
