@@ -55,10 +55,10 @@ function changed(parts: Parts, offer: string): Parts {
   return section2 === undefined ? once : change(once, section2 as keyof Parts, { [key2!]: given });
 }
 
-const TWO_WIRES = ['0.5 mm enamel', '22 AWG double cotton'];
+const ONE_WIRE = ['0.5 mm enamel'];
 /** A band on one diameter. */
-const ONE: Parts = { ...change(BAND, 'former', { 'outside-diameter': '76 mm' }), wire: TWO_WIRES };
-const SHORT: Parts = { ...RANGE, wire: TWO_WIRES };
+const ONE: Parts = { ...change(BAND, 'former', { 'outside-diameter': '76 mm' }), wire: ONE_WIRE };
+const SHORT: Parts = { ...RANGE, wire: ONE_WIRE };
 
 const IMPOSSIBLE: readonly [string, Parts, string, RegExp][] = [
   ['too short', change(RANGE, 'former', { longest: '40 mm' }), 'former.longest', /8 mm over the limit of 40 mm/],
