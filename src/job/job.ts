@@ -88,6 +88,8 @@ export interface Job {
   /** Frequency for the loss estimate when there is no set; null when not given. */
   readonly atKhz: number | null;
   readonly printer: Printer;
+  /** Where it was written: the file, and the line of every key that is in it, by dotted key. */
+  readonly source: { readonly file: string; readonly lines: Readonly<Record<string, number>> };
   /** What the person wrote, as written, by dotted key. */
   readonly given: Readonly<Record<string, unknown>>;
   /** Every default taken, by dotted key. */

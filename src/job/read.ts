@@ -36,7 +36,7 @@ export function readJob(text: string, file: string): Job {
       faults.sort((a, b) => (a.place?.line ?? 0) - (b.place?.line ?? 0)),
     );
   }
-  return toJob(parsed.data, tree, assumed);
+  return toJob(parsed.data, tree, assumed, file);
 }
 
 /** The sections that can be read on their own, when the whole cannot. */
@@ -51,8 +51,10 @@ function readable(data: unknown): Readable {
   return found as Readable;
 }
 
-function toJob(read: ReadJob, tree: Tree, assumed: Assumed): Job {
+function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
   const { former, winding, printer } = read;
+  const written = given(tree.data);
+  const lines = Object.keys(written).map((key) => [key, tree.lineOf(key.split('.'))]);
   return {
     name: read.job,
     date: read.date ?? null,
@@ -98,7 +100,8 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed): Job {
       layerMm: printer.layer,
       holeCompensationMm: printer['hole-compensation'],
     },
-    given: given(tree.data),
+    source: { file, lines: Object.fromEntries(lines) },
+    given: written,
     assumed: { ...assumed, ...assumedCoverings(read.wire ?? []) },
   };
 }

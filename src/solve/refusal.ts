@@ -1,5 +1,5 @@
 /** When nothing fits: which limit failed, by how much, and what change of a single limit would help. */
-import { Fault } from '../fault.ts';
+import { Fault, type Place } from '../fault.ts';
 import type { Job } from '../job/job.ts';
 import { candidatesOf, diametersFor, wiresFor } from './candidates.ts';
 import { changesFor, lengthKey } from './changes.ts';
@@ -57,6 +57,12 @@ function worst(job: Job, notFound: NotFound): { key: string; got: string } {
   return { key: 'want.taps', got };
 }
 
+/** Where the limit stands in the job; the line of what it belongs to when the limit itself was left out. */
+function placeOf(job: Job, key: string): Place {
+  const { file, lines } = job.source;
+  return { file, line: lines[key] ?? lines[key.split('.')[0]!], key };
+}
+
 /** The fault for a job that nothing meets. */
 export function refusal(job: Job, notFound: NotFound): Fault {
   const { key, got } = worst(job, notFound);
@@ -66,5 +72,5 @@ export function refusal(job: Job, notFound: NotFound): Fault {
       ? 'no change of a single limit would do; widen several of former.longest, former.outside-diameter, wire and want together'
       : `any one of these alone would do: ${changes.join('; ')}`;
   const expected = `a coil for ${notFound.demand.text} inside the limits of the job (${notFound.tried} combinations of wire, former and pitch were tried)`;
-  return new Fault(4, { code: 'nothing-fits', place: { key }, got, expected, todo });
+  return new Fault(4, { code: 'nothing-fits', place: placeOf(job, key), got, expected, todo });
 }
