@@ -112,12 +112,17 @@ export class WorkingCoil {
     return { kHz, inductanceUh: inductance * 1e6, resistanceOhm: resistance, q };
   }
 
+  /** What crowding of the current takes off the inductance at this frequency: low-frequency over working inductance, 1 or more. */
+  crowding(turn: number, kHz: number): number {
+    return this.coil.inductanceUh(turn) / this.terminal(turn, kHz, 'open').inductanceUh;
+  }
+
   /**
    * First and second resonance of the turns 0..turn with this much capacitance across them, besides the coil's own and the
-   * leads'. The circuit is worked out with low-frequency inductances; what crowding of the current takes off the inductance
-   * at the working frequency is put on the resonance afterwards, as the square root of its ratio.
+   * leads'. The circuit has low-frequency inductances; `crowding` (1 = none) raises what comes out by its square root, which
+   * holds as long as all inductances shrink by the same share.
    */
-  tuned(turn: number, pf: number, rest: Rest): Tuned {
+  tuned(turn: number, pf: number, rest: Rest, crowding = 1): Tuned {
     const { leadPf, earthed } = this.around;
     const found = resonanceBracket(this.#circuit, {
       from: 0,
@@ -129,10 +134,11 @@ export class WorkingCoil {
       tuning: pf * 1e-12,
       strays: leadPf > 0 ? this.taps.map((tap) => ({ turn: tap, capacitance: leadPf * 1e-12 })) : [],
     });
+    const scale = Math.sqrt(crowding) / 1e3;
     return {
-      kHz: found.first.mean / 1e3,
-      uncertaintyKhz: found.first.uncertainty / 1e3,
-      secondKhz: found.second === undefined ? null : found.second.mean / 1e3,
+      kHz: found.first.mean * scale,
+      uncertaintyKhz: found.first.uncertainty * scale,
+      secondKhz: found.second === undefined ? null : found.second.mean * scale,
     };
   }
 }

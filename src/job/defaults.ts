@@ -11,6 +11,8 @@ export const DEFAULTS = {
   'set.stray': '12 pF',
   'set.aerial': '0 pF',
   'set.switch': 'open',
+  'set.lead': '2 pF',
+  temperature: '20 °C',
   'former.kind': 'printed',
   'winding.hand': 'right',
   'winding.earthed': 'start',

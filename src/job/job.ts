@@ -34,6 +34,8 @@ export interface ReceivingSet {
   readonly strayPf: number;
   readonly aerialPf: number;
   readonly switch: SwitchRest;
+  /** Lead and switch contact of each tap, to earth. */
+  readonly leadPf: number;
 }
 
 /** A range to choose from freely, or the diameters there are, ascending. */
@@ -87,6 +89,8 @@ export interface Job {
   readonly prefer: Preference;
   /** Frequency for the loss estimate when there is no set; null when not given. */
   readonly atKhz: number | null;
+  /** Of the copper at work. */
+  readonly celsius: number;
   readonly printer: Printer;
   /** Where it was written: the file, and the line of every key that is in it, by dotted key. */
   readonly source: { readonly file: string; readonly lines: Readonly<Record<string, number>> };

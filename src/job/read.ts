@@ -69,6 +69,7 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
             strayPf: read.set.stray,
             aerialPf: read.set.aerial,
             switch: read.set.switch,
+            leadPf: read.set.lead,
           },
     former: {
       kind: former.kind,
@@ -91,6 +92,7 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
     },
     prefer: read.prefer,
     atKhz: read.at ?? null,
+    celsius: read.temperature,
     printer: {
       bedXMm: printer.bed.x,
       bedYMm: printer.bed.y,

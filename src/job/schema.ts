@@ -66,6 +66,7 @@ const setSchema = z
     stray: quantity('capacitance', 'Wiring, valve and switch, always across the coil.', { zero: true }),
     aerial: quantity('capacitance', 'What the aerial adds across the coil.', { zero: true }),
     switch: choice(SWITCHES, 'What the range switch does with the turns that are not in use.'),
+    lead: quantity('capacitance', 'Lead and switch contact of each tap to earth.', { zero: true }),
   })
   .describe('The receiver that the coil goes into; needed for a band.');
 
@@ -163,6 +164,7 @@ export const jobSchema = z
     winding: windingSchema,
     prefer: choice(PREFERENCES, 'What the best coil is.'),
     at: quantity('frequency', 'Frequency at which losses are compared when there is no set.').optional(),
+    temperature: quantity('temperature', 'Temperature of the copper at work.'),
     printer: printerSchema,
   })
   .meta({

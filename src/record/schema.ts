@@ -64,13 +64,36 @@ export const tapSchema = z.strictObject({
   resistanceLowOhm: num,
   resistanceHighOhm: num,
   woundLengthMm: num.describe('edge to edge over the wires of the turns up to the tap'),
+  dominant: text.describe('which input makes the limits wide'),
   working: z
-    .strictObject({ frequencyKhz: num, resistanceOhm: num, q: num, kind: text })
-    .describe('loss at the frequency that this tap works at; kind says estimate or solution'),
+    .strictObject({ frequencyKhz: num, inductanceUh: num, resistanceOhm: num, q: num, kind: text })
+    .describe('the position at the frequency it is judged at, with what the switch leaves of the rest'),
   range: z
-    .strictObject({ lowKhz: num, highKhz: num, capacitanceLowPf: num, capacitanceHighPf: num })
+    .strictObject({
+      lowKhz: num,
+      lowUncertaintyKhz: num,
+      highKhz: num,
+      highUncertaintyKhz: num,
+      secondLowKhz: num.nullable().describe('second resonance with the capacitor in; the dead-end effect'),
+      secondHighKhz: num.nullable().describe('second resonance with the capacitor out'),
+      capacitanceLowPf: num.describe('of the set across the position, capacitor out'),
+      capacitanceHighPf: num,
+    })
     .nullable()
-    .describe('frequencies tuned with the capacitor of the set; null when no set is given'),
+    .describe('frequencies tuned with the capacitor of the set, dead turns counted; null when no set is given'),
+  ends: z
+    .array(
+      z.strictObject({
+        at: z.enum(['low', 'middle', 'high']),
+        frequencyKhz: num,
+        inductanceUh: num,
+        resistanceOhm: num,
+        q: num,
+        bandwidthKhz: num.describe('frequency over Q, unloaded'),
+        parallelKohm: num.describe('parallel resistance at resonance, unloaded'),
+      }),
+    )
+    .describe('the position at both ends and the middle of its range; empty without a set'),
 });
 
 export const windingSchema = z.strictObject({
@@ -206,6 +229,45 @@ export const recordSchema = z.strictObject({
       .strictObject({ capacitorLowPf: num, capacitorHighPf: num, strayPf: num, aerialPf: num, switch: text })
       .nullable(),
   }),
+  surroundings: z
+    .strictObject({
+      leadPf: num.describe('lead and switch contact of each tap to earth'),
+      celsius: num.describe('copper'),
+      rest: z.enum(['open', 'shorted', 'shorted in sections', 'disconnected']),
+      formerLossTangent: num,
+      formerLoss: text.describe('how the loss of the former is estimated'),
+    })
+    .describe('what the figures at working frequency were taken with'),
+  coverage: z
+    .strictObject({
+      neighbours: z.array(
+        z.strictObject({ from: num.int(), to: num.int(), overlapPercent: num.describe('below 0: a gap') }),
+      ),
+      gaps: z.array(
+        z.strictObject({ from: num.int(), to: num.int(), lowKhz: num, highKhz: num, tapsToClose: num.int() }),
+      ),
+      deadEnds: z
+        .array(z.strictObject({ tap: num.int(), secondKhz: num }))
+        .describe('positions whose second resonance falls into what the switch tunes, up to a third above it'),
+    })
+    .nullable(),
+  switchKinds: z.array(
+    z.strictObject({
+      kind: z.enum(['open', 'shorted', 'shorted in sections', 'disconnected']),
+      inUse: z.boolean(),
+      note: text,
+      positions: z.array(
+        z.strictObject({
+          tap: num.int(),
+          frequencyKhz: num,
+          inductanceUh: num,
+          q: num,
+          lowKhz: num.nullable(),
+          highKhz: num.nullable(),
+        }),
+      ),
+    }),
+  ),
   windings: z.array(windingSchema).min(1),
   former: formerSchema,
   tapMethod: z.strictObject({
@@ -246,3 +308,4 @@ export type Step = z.infer<typeof stepSchema>;
 export type Check = z.infer<typeof checkSchema>;
 export type RecordWire = z.infer<typeof wireSchema>;
 export type Alternative = z.infer<typeof alternativeSchema>;
+export type Coverage = CoilRecord['coverage'];
