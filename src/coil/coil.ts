@@ -31,14 +31,29 @@ export class Coil {
   readonly places: Float64Array;
   readonly #curve: { at(turn: number): number };
 
-  constructor(shape: CoilShape) {
+  /** `places` where they are known better than the shape tells them, as in a record; else as `layTurns` lays them. */
+  constructor(shape: CoilShape, places?: ArrayLike<number>) {
     this.shape = shape;
-    this.places = layTurns(shape.turns, shape.pitchMm, shape.gaps, shape.startMm);
+    this.places =
+      places === undefined
+        ? layTurns(shape.turns, shape.pitchMm, shape.gaps, shape.startMm)
+        : Float64Array.from(places);
     this.#curve = cumulativeInductance(
       Float64Array.from(this.places, (z) => z / 1e3),
       shape.meanDiameterMm / 2e3,
       shape.wire.bareMm / 2e3,
       shape.turns,
+    );
+  }
+
+  /** This coil with measures of its shape changed, as many turns; every turn keeps what it stands off its laid place. */
+  changed(measures: Partial<Omit<CoilShape, 'turns'>>): Coil {
+    const shape = { ...this.shape, ...measures };
+    const laid = ({ turns, pitchMm, gaps, startMm }: CoilShape) => layTurns(turns, pitchMm, gaps, startMm);
+    const [before, after] = [laid(this.shape), laid(shape)];
+    return new Coil(
+      shape,
+      this.places.map((place, i) => place + (after[i]! - before[i]!)),
     );
   }
 

@@ -5,7 +5,7 @@
  * independent and the response is nearly linear over these widths: JCGM 100:2008, 5.1.2). Half widths are taken as 95 %
  * limits. Where no standard states one it is common practice, and the record lists it among what was assumed.
  */
-import { Coil, type CoilShape } from './coil.ts';
+import type { Coil } from './coil.ts';
 
 /** Half widths at 95 %. */
 export interface Spread {
@@ -28,30 +28,36 @@ export interface Limits {
   readonly lowUh: number;
   readonly highUh: number;
   readonly dominant: SpreadInput;
+  /** What each input moved by its half width does to the inductance, uH. */
+  readonly changes: Readonly<Record<SpreadInput, number>>;
 }
 
 /** Limits of the sections up to each of `turns`, in their order. */
 export function limitsOf(coil: Coil, turns: readonly number[], spread: Spread): Limits[] {
   const { shape } = coil;
-  const moved: Record<Exclude<SpreadInput, 'turn' | 'leadUh'>, CoilShape> = {
-    diameterMm: { ...shape, meanDiameterMm: shape.meanDiameterMm + spread.diameterMm },
-    pitch: { ...shape, pitchMm: shape.pitchMm * (1 + spread.pitch) },
-    bareMm: { ...shape, wire: { ...shape.wire, bareMm: shape.wire.bareMm + spread.bareMm } },
-    gap: { ...shape, gaps: shape.gaps.map((gap) => ({ ...gap, gapMm: gap.gapMm * (1 + spread.gap) })) },
+  const coils = {
+    diameterMm: coil.changed({ meanDiameterMm: shape.meanDiameterMm + spread.diameterMm }),
+    pitch: coil.changed({ pitchMm: shape.pitchMm * (1 + spread.pitch) }),
+    bareMm: coil.changed({ wire: { ...shape.wire, bareMm: shape.wire.bareMm + spread.bareMm } }),
+    gap: coil.changed({ gaps: shape.gaps.map((gap) => ({ ...gap, gapMm: gap.gapMm * (1 + spread.gap) })) }),
   };
-  const coils = Object.entries(moved).map(([name, other]) => ({ name: name as SpreadInput, coil: new Coil(other) }));
   return turns.map((turn) => {
     const nominal = coil.inductanceUh(turn);
     // A tap may end a little early or late; at the finish only early, the slope is the same.
     const back = Math.min(spread.turn, turn / 2);
     const perTurn = back > 0 ? (nominal - coil.inductanceUh(turn - back)) / back : 0;
-    const changes: { name: SpreadInput; change: number }[] = coils.map(({ name, coil: other }) => ({
-      name,
-      change: other.inductanceUh(turn) - nominal,
-    }));
-    changes.push({ name: 'turn', change: perTurn * spread.turn }, { name: 'leadUh', change: spread.leadUh });
-    const half = Math.hypot(...changes.map(({ change }) => change));
-    const dominant = changes.reduce((a, b) => (Math.abs(b.change) > Math.abs(a.change) ? b : a)).name;
-    return { lowUh: nominal - half, highUh: nominal + half, dominant };
+    const by = (other: Coil) => other.inductanceUh(turn) - nominal;
+    const changes = {
+      diameterMm: by(coils.diameterMm),
+      pitch: by(coils.pitch),
+      bareMm: by(coils.bareMm),
+      gap: by(coils.gap),
+      turn: perTurn * spread.turn,
+      leadUh: spread.leadUh,
+    };
+    const half = Math.hypot(...Object.values(changes));
+    const names = Object.keys(changes) as SpreadInput[];
+    const dominant = names.reduce((a, b) => (Math.abs(changes[b]) > Math.abs(changes[a]) ? b : a));
+    return { lowUh: nominal - half, highUh: nominal + half, dominant, changes };
   });
 }

@@ -5,7 +5,13 @@
  * Microhenry, picofarad, kilohertz, ohm and turns outside; SI only towards `physics/`. Geometry tables and the circuit are
  * made once, when first asked for.
  */
-import { type CoupledWinding, coupledWinding, nodesFor, resonanceBracket } from '../physics/coupled/coupled.ts';
+import {
+  type CoupledWinding,
+  coupledWinding,
+  nodesFor,
+  resonanceBracket,
+  type TunedCircuit,
+} from '../physics/coupled/coupled.ts';
 import {
   type FieldTables,
   fieldTables,
@@ -82,7 +88,8 @@ export class WorkingCoil {
     return strands === 1 || strandMm / 1e3 < 1.5 * skinDepth(kHz * 1e3);
   }
 
-  #solve(kHz: number, cuts: readonly number[]): SectionImpedance {
+  /** Impedance of the sections between these turns, rising, and both ends. */
+  sections(kHz: number, cuts: readonly number[]): SectionImpedance {
     const ends = [0, ...cuts, this.coil.turns].filter((turn, i, all) => i === 0 || turn - all[i - 1]! > 1e-6);
     const key = `${kHz} ${ends.join(' ')}`;
     const known = this.#solved.get(key);
@@ -107,7 +114,7 @@ export class WorkingCoil {
   /** Resistance and inductance at the ends of the turns 0..turn in use, the rest as the switch leaves it. */
   terminal(turn: number, kHz: number, rest: Rest): Terminal {
     const later = this.taps.filter((tap) => tap >= turn - 1e-6 && tap < this.coil.turns - 1e-6);
-    const solved = this.#solve(kHz, rest === 'shorted in sections' ? later : [turn]);
+    const solved = this.sections(kHz, rest === 'shorted in sections' ? later : [turn]);
     const { resistance, inductance, q } = terminalImpedance(solved, { from: 0, to: 1 }, rest);
     return { kHz, inductanceUh: inductance * 1e6, resistanceOhm: resistance, q };
   }
@@ -118,22 +125,32 @@ export class WorkingCoil {
   }
 
   /**
-   * First and second resonance of the turns 0..turn with this much capacitance across them, besides the coil's own and the
-   * leads'. The circuit has low-frequency inductances; `crowding` (1 = none) raises what comes out by its square root, which
-   * holds as long as all inductances shrink by the same share.
+   * The winding between nodes, low-frequency inductances, and what hangs on it with the turns 0..turn in use and this much
+   * capacitance across them.
    */
-  tuned(turn: number, pf: number, rest: Rest, crowding = 1): Tuned {
+  circuit(turn: number, pf: number, rest: Rest): { winding: CoupledWinding; on: Omit<TunedCircuit, 'distribution'> } {
     const { leadPf, earthed } = this.around;
-    const found = resonanceBracket(this.#circuit, {
+    const on = {
       from: 0,
       to: turn,
-      earthed: earthed === 'start' ? 'from' : 'to',
+      earthed: earthed === 'start' ? ('from' as const) : ('to' as const),
       rest,
       taps: this.taps,
       selfCapacitance: this.coil.selfPf(this.coil.turns) * 1e-12,
       tuning: pf * 1e-12,
       strays: leadPf > 0 ? this.taps.map((tap) => ({ turn: tap, capacitance: leadPf * 1e-12 })) : [],
-    });
+    };
+    return { winding: this.#circuit, on };
+  }
+
+  /**
+   * First and second resonance of the turns 0..turn with this much capacitance across them, besides the coil's own and the
+   * leads'. The circuit has low-frequency inductances; `crowding` (1 = none) raises what comes out by its square root, which
+   * holds as long as all inductances shrink by the same share.
+   */
+  tuned(turn: number, pf: number, rest: Rest, crowding = 1): Tuned {
+    const { winding, on } = this.circuit(turn, pf, rest);
+    const found = resonanceBracket(winding, on);
     const scale = Math.sqrt(crowding) / 1e3;
     return {
       kHz: found.first.mean * scale,

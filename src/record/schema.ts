@@ -238,6 +238,17 @@ export const recordSchema = z.strictObject({
       formerLoss: text.describe('how the loss of the former is estimated'),
     })
     .describe('what the figures at working frequency were taken with'),
+  spread: z
+    .strictObject({
+      diameterMm: num.describe('mean diameter'),
+      pitch: num.describe('a fraction of the pitch'),
+      bareMm: num,
+      gap: num.describe('a fraction of the gap at each tap'),
+      turn: num.describe('place of a tap along the wire, turns'),
+      leadUh: num.describe('lead of a tap'),
+    })
+    .optional()
+    .describe('half widths at 95 % of what the limits of every tap come from'),
   coverage: z
     .strictObject({
       neighbours: z.array(
@@ -309,3 +320,8 @@ export type Check = z.infer<typeof checkSchema>;
 export type RecordWire = z.infer<typeof wireSchema>;
 export type Alternative = z.infer<typeof alternativeSchema>;
 export type Coverage = CoilRecord['coverage'];
+
+/** What the printed parts read of a record: known before the figures at work are. */
+export type PartsRecord = Pick<CoilRecord, 'frame' | 'former' | 'holes'> & {
+  readonly windings: readonly Pick<Winding, 'turns' | 'pitchMm' | 'turnPositionsMm'>[];
+};
