@@ -12,10 +12,10 @@
 import { createHash } from 'node:crypto';
 import type { Job } from './job/job.ts';
 import { startKernel } from './kernel/client.ts';
-import { makeRecord } from './record/make.ts';
+import { makeRecord, partsRecordOf } from './record/make.ts';
 import type { CoilRecord } from './record/schema.ts';
 import { refusal } from './solve/refusal.ts';
-import { search } from './solve/search.ts';
+import { type Found, search } from './solve/search.ts';
 
 export interface PlanFile {
   readonly path: string;
@@ -33,9 +33,13 @@ export interface Plan {
 
 /** The record alone; throws the fault of exit 4 when nothing fits. */
 export function recordOf(job: Job, version: string): CoilRecord {
+  return makeRecord(job, foundFor(job), version);
+}
+
+function foundFor(job: Job): Found {
   const found = search(job);
   if (!('chosen' in found)) throw refusal(job, found);
-  return makeRecord(job, found, version);
+  return found;
 }
 
 const sha256 = (bytes: Uint8Array) => createHash('sha256').update(bytes).digest('hex');
@@ -44,10 +48,12 @@ const sha256 = (bytes: Uint8Array) => createHash('sha256').update(bytes).digest(
 export async function planJob(job: Job, options: { version: string }): Promise<Plan> {
   const kernel = job.former.kind === 'printed' ? startKernel() : null;
   try {
-    const record = recordOf(job, options.version);
-    const parts = kernel?.make(record) ?? Promise.resolve([]);
+    const found = foundFor(job);
+    // The parts need no figures at work: they are made while those are worked out.
+    const parts = kernel?.make(partsRecordOf(job, found)) ?? Promise.resolve([]);
     // A fault of the worker is reported when it is awaited below, not as an unhandled rejection meanwhile.
     parts.catch(() => undefined);
+    const record = makeRecord(job, found, options.version);
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
     const { wrapTemplate } = await import('./sheets/wrap-template.ts');
     const sheet = await windingSheet(record);

@@ -1,7 +1,7 @@
 /** The kernel as the pipeline sees it: started early, asked once, closed. */
 import { Worker } from 'node:worker_threads';
 import { Fault } from '../fault.ts';
-import type { CoilRecord } from '../record/schema.ts';
+import type { PartsRecord } from '../record/schema.ts';
 import type { PartFile } from './make.ts';
 import type { MakeReply, MakeRequest } from './message.ts';
 
@@ -12,7 +12,7 @@ export interface Kernel {
    * @throws Fault for dimensions that cannot be (exit 4)
    * @throws Error with one line when a part did not come out as described or the thread died
    */
-  make(record: CoilRecord): Promise<PartFile[]>;
+  make(record: PartsRecord): Promise<PartFile[]>;
   close(): Promise<void>;
 }
 

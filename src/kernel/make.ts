@@ -7,7 +7,7 @@
  */
 import { formerSolid } from '../parts/former.ts';
 import type { Solid } from '../parts/solid.ts';
-import type { CoilRecord } from '../record/schema.ts';
+import type { PartsRecord } from '../record/schema.ts';
 import { buildSolid } from './build.ts';
 import { checkBytes } from './check.ts';
 import { loadKernel } from './load.ts';
@@ -36,7 +36,7 @@ export interface PartReport {
  * @throws Fault for dimensions that cannot be (exit 4)
  * @throws MeshError when a part did not come out as described
  */
-export async function makeParts(record: CoilRecord): Promise<PartFile[]> {
+export async function makeParts(record: PartsRecord): Promise<PartFile[]> {
   const solid = formerSolid(record);
   return solid ? [await makeFile(solid)] : [];
 }

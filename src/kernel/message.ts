@@ -1,11 +1,11 @@
 /** What client and worker say to one another. */
 import type { FaultExit, FaultParts } from '../fault.ts';
-import type { CoilRecord } from '../record/schema.ts';
+import type { PartsRecord } from '../record/schema.ts';
 import type { PartFile } from './make.ts';
 
 export interface MakeRequest {
   readonly id: number;
-  readonly record: CoilRecord;
+  readonly record: PartsRecord;
 }
 
 export type MakeReply =

@@ -2,7 +2,7 @@
  * Named dimensions of the former, derived from the record. Lengths in millimetres, turns from the start hole.
  */
 import { axialAt } from '../coil/layout.ts';
-import type { CoilRecord, Former, Hole } from '../record/schema.ts';
+import type { Former, Hole, PartsRecord } from '../record/schema.ts';
 
 export interface FormerDimensions {
   readonly former: Former;
@@ -40,7 +40,7 @@ export function roofMm(diameterMm: number): number {
   return diameterMm * Math.SQRT1_2;
 }
 
-export function formerDimensions(record: CoilRecord): FormerDimensions {
+export function formerDimensions(record: PartsRecord): FormerDimensions {
   const former = asCut(record.former);
   const winding = record.windings[0]!;
   const outsideR = former.outsideDiameterMm / 2;
@@ -76,7 +76,7 @@ function asCut(former: Former): Former {
 }
 
 /** Mounting holes that stand in an ear are cut with the ear; all others go through the wall, by the printer's compensation wider. */
-function wallHoles(record: CoilRecord): Hole[] {
+function wallHoles(record: PartsRecord): Hole[] {
   const inEar = (hole: Hole) =>
     hole.purpose === 'mount' && record.former.ears.some((ear) => angleBetween(ear.angleDeg, hole.angleDeg) < 0.01);
   const more = record.former.print?.holeCompensationMm ?? 0;

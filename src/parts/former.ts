@@ -7,7 +7,7 @@
  *
  * The axis stays at x = y = 0, so that angles of the record are angles of the part.
  */
-import type { CoilRecord } from '../record/schema.ts';
+import type { PartsRecord } from '../record/schema.ts';
 import { type FormerDimensions, formerDimensions } from './dimensions.ts';
 import { datumCutters, earAdders, earCutters, wallCutters } from './holes.ts';
 import { numberCutters } from './numbers.ts';
@@ -17,7 +17,7 @@ import type { Expected, Loft, Point3, Skin, Solid } from './solid.ts';
 import { formerVolume } from './volume.ts';
 
 /** Null for a bought tube. @throws Fault (exit 4) that names every dimension that cannot be. */
-export function formerSolid(record: CoilRecord): Solid | null {
+export function formerSolid(record: PartsRecord): Solid | null {
   if (record.former.kind !== 'printed') return null;
   const d = formerDimensions(record);
   requireRoom(d);
@@ -59,7 +59,7 @@ function box(skin: Skin, adders: readonly Loft[]): Pick<Expected, 'minMm' | 'max
   return { minMm: min, maxMm: max };
 }
 
-function printNote(record: CoilRecord, d: FormerDimensions): string {
+function printNote(record: PartsRecord, d: FormerDimensions): string {
   return [
     `print standing on the foot, no supports, axis at x = y = 0`,
     `${record.former.material}`,

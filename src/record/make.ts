@@ -6,18 +6,21 @@ import { cautionsFor } from '../../templates/wording/cautions.ts';
 import { HOW } from '../../templates/wording/steps.ts';
 import type { Job } from '../job/job.ts';
 import { alternativesTo } from '../solve/alternatives.ts';
+import { setCapacitance } from '../solve/demand.ts';
 import type { Design } from '../solve/design.ts';
 import { aspectOf } from '../solve/prefer.ts';
+import { fieldLoss, lossTangentOf, workingCoilOf } from '../solve/refine.ts';
 import type { Found } from '../solve/search.ts';
 import { spreadInWords, spreadOf } from '../solve/spread.ts';
 import { DEFAULT_AT_KHZ } from '../solve/working.ts';
 import { checksOf } from './checks.ts';
+import { figuresOf } from './figures.ts';
 import { hashOf } from './hash.ts';
 import { decimals, deg, mm, significant } from './rounding.ts';
-import { type Alternative, type CoilRecord, type Former, type Hole, recordSchema } from './schema.ts';
+import { type Alternative, type CoilRecord, type Former, type Hole, type PartsRecord, recordSchema } from './schema.ts';
 import { correctionsOf, stepsOf } from './steps.ts';
 import { warningsOf } from './warnings.ts';
-import { windingOf } from './winding.ts';
+import { placesOf, windingOf } from './winding.ts';
 
 function frameOf(job: Job): CoilRecord['frame'] {
   return {
@@ -32,6 +35,12 @@ function frameOf(job: Job): CoilRecord['frame'] {
   };
 }
 
+/** The set as it was asked for; leads are among what figures were taken with. */
+function setOf(set: NonNullable<Job['set']>): CoilRecord['demand']['set'] {
+  const { capacitorLowPf, capacitorHighPf, strayPf, aerialPf, switch: rest } = set;
+  return { capacitorLowPf, capacitorHighPf, strayPf, aerialPf, switch: rest };
+}
+
 function demandOf(job: Job, found: Found): CoilRecord['demand'] {
   const { demand } = found;
   return {
@@ -42,7 +51,7 @@ function demandOf(job: Job, found: Found): CoilRecord['demand'] {
     bandLowKhz: demand.band?.lowKhz ?? null,
     bandHighKhz: demand.band?.highKhz ?? null,
     overlapPercent: demand.overlap === null ? null : decimals(demand.overlap * 100, 3),
-    set: job.set === null ? null : { ...job.set },
+    set: job.set === null ? null : setOf(job.set),
   };
 }
 
@@ -67,7 +76,7 @@ function holeOf(hole: Hole): Hole {
   return { ...hole, turn, angleDeg: deg(hole.angleDeg), axialMm: mm(hole.axialMm) };
 }
 
-function alternativeOf(design: Design, betterIn: readonly string[]): Alternative {
+function alternativeOf(design: Design, betterIn: readonly string[], lossFactor: number): Alternative {
   const { candidate, metrics, former, coil } = design;
   return {
     wire: candidate.wire.name,
@@ -79,25 +88,27 @@ function alternativeOf(design: Design, betterIn: readonly string[]): Alternative
     wireM: decimals(metrics.wireM, 2),
     massG: significant(metrics.massG, 3),
     worstTapPercent: decimals(metrics.worstTap * 100, 2),
-    lossFactor: significant(metrics.lossFactor, 4),
+    lossFactor: significant(lossFactor, 4),
     tapMethod: `${design.method.name}, ${design.layout}`,
     betterIn: [...betterIn],
   };
 }
 
-function whyChosen(job: Job, found: Found): string {
+function whyChosen(job: Job, found: Found, lossFactor: number): string {
   const aspect = aspectOf(job.prefer);
-  const { chosen, others } = found;
+  const { chosen, others, ranked } = found;
   const value = aspect.of(chosen.metrics);
   const figure = {
-    'least loss': `mean 1/Q ${value.toPrecision(3)} (estimated; mean Q about ${(1 / value).toFixed(0)})`,
+    'least loss': `mean 1/Q ${lossFactor.toPrecision(3)} by the field of every turn (mean Q about ${(1 / lossFactor).toFixed(0)})`,
     compact: `${(value / 1000).toFixed(0)} cm³ of former`,
     'least wire': `${value.toFixed(1)} m of wire`,
     'closest taps': `worst tap ${(chosen.metrics.worstTap * 100).toFixed(2)} % off; of coils within 0.1 % the one with the least loss`,
   }[job.prefer];
   const second = others.map((one) => aspect.of(one.metrics)).sort((a, b) => a - b)[0];
   if (second === undefined) return `${figure}: the only coil that fits what the job permits`;
-  const ahead = value > 0 ? 100 * (second / value - 1) : 0;
+  const [first, runnerUp] = ranked;
+  const byField = first !== undefined && runnerUp !== undefined ? runnerUp.lossFactor / first.lossFactor : null;
+  const ahead = 100 * ((byField ?? second / value) - 1);
   const next = ahead < 0.05 ? 'level with the next best' : `${ahead.toFixed(1)} % ahead of the next best`;
   return `${figure}: the best of ${others.length + 1} designs worked out by the ring sum, ${next}`;
 }
@@ -114,10 +125,29 @@ function derivedOf(job: Job, design: Design): Record<string, string> {
   return derived;
 }
 
+/** What the parts of a found design read: the same figures as in its record, before the rest of that is worked out. */
+export function partsRecordOf(job: Job, found: Found): PartsRecord {
+  const { chosen } = found;
+  return {
+    frame: frameOf(job),
+    former: formerOf(chosen.former),
+    holes: chosen.holes.map(holeOf),
+    windings: [placesOf(chosen)],
+  };
+}
+
 /** The record of a found design, files still to come. The schema is checked, so that nothing leaves in another shape. */
 export function makeRecord(job: Job, found: Found, version: string): CoilRecord {
   const { chosen } = found;
-  const winding = windingOf(job, chosen);
+  const conditions = {
+    tuning: job.set === null ? null : setCapacitance(job.set),
+    atKhz: job.atKhz ?? (job.set === null ? DEFAULT_AT_KHZ : null),
+    rest: job.set?.switch ?? ('open' as const),
+    lossTangent: lossTangentOf(job),
+  };
+  const figures = figuresOf(chosen.working ?? workingCoilOf(job, chosen), conditions);
+  const lossFactor = figures.taps.reduce((sum, tap) => sum + 1 / tap.working.q, 0) / figures.taps.length;
+  const winding = windingOf(job, chosen, figures.taps);
   const spread = spreadOf(job, chosen);
   const { method, candidate } = chosen;
   const alternatives = alternativesTo(chosen, found.others);
@@ -130,6 +160,9 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     frame: frameOf(job),
     demand: demandOf(job, found),
     windings: [winding],
+    surroundings: figures.surroundings,
+    coverage: figures.coverage,
+    switchKinds: figures.switchKinds,
     former: formerOf(chosen.former),
     tapMethod: {
       name: method.name,
@@ -151,8 +184,8 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     }),
     chosen: {
       prefer: job.prefer,
-      why: whyChosen(job, found),
-      lossFactor: significant(chosen.metrics.lossFactor, 4),
+      why: whyChosen(job, found, lossFactor),
+      lossFactor: significant(lossFactor, 4),
       massG: significant(chosen.metrics.massG, 4),
       worstTapPercent: decimals(chosen.metrics.worstTap * 100, 3),
       tried: found.tried,
@@ -161,7 +194,7 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     warnings: warningsOf(job, found, alternatives.length),
     given: { ...job.given },
     assumed: { ...job.assumed, ...derivedOf(job, chosen), ...spreadInWords(spread) },
-    alternatives: alternatives.map(({ design, betterIn }) => alternativeOf(design, betterIn)),
+    alternatives: alternatives.map(({ design, betterIn }) => alternativeOf(design, betterIn, fieldLoss(job, design))),
   };
   return recordSchema.parse({ ...body, program: `coilwright ${version}`, hash: hashOf(body), files: [] });
 }

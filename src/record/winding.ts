@@ -1,27 +1,32 @@
 /** The winding and its taps as the record holds them, from a design. */
 
 import { angleOf } from '../coil/layout.ts';
-import { limitsOf } from '../coil/tolerance.ts';
+import { type Limits, limitsOf, type SpreadInput } from '../coil/tolerance.ts';
 import type { Job } from '../job/job.ts';
 import type { Design, DesignTap } from '../solve/design.ts';
 import { spreadOf } from '../solve/spread.ts';
+import type { WorkingFigures } from './figures.ts';
 import { decimals, mm, significant } from './rounding.ts';
-import type { Tap, Winding } from './schema.ts';
+import type { PartsRecord, Tap, Winding } from './schema.ts';
 import { LEAD_MM } from './steps.ts';
 
 /** Length of wire on the coil as wound by hand, against the helix: a percent either way (common practice). */
 const WIRE_SPREAD = 0.01;
 
-function tapOf(
-  job: Job,
-  design: Design,
-  tap: DesignTap,
-  index: number,
-  limits: { lowUh: number; highUh: number },
-): Tap {
+/** What makes the limits of a tap wide, in words. */
+export const INPUT: Record<SpreadInput, string> = {
+  diameterMm: 'former diameter',
+  pitch: 'pitch',
+  bareMm: 'bare wire',
+  gap: 'gaps at taps',
+  turn: 'place of the tap',
+  leadUh: 'lead of the tap',
+};
+
+function tapOf(job: Job, design: Design, tap: DesignTap, index: number, limits: Limits, at: WorkingFigures): Tap {
   const { coil, method, taps } = design;
   const { wire } = coil.shape;
-  const { turn, coverage } = tap;
+  const { turn } = tap;
   const inductanceUh = significant(tap.inductanceUh);
   const targetUh = significant(tap.targetUh);
   // A tap is measured at the end of its own loop, half of which leads there.
@@ -44,40 +49,35 @@ function tapOf(
     resistanceLowOhm: significant(ohm(wire.bareHighMm) * (1 - WIRE_SPREAD)),
     resistanceHighOhm: significant(ohm(wire.bareLowMm) * (1 + WIRE_SPREAD)),
     woundLengthMm: mm(coil.woundMm(turn)),
-    working: {
-      frequencyKhz: significant(tap.workingKhz, 5),
-      resistanceOhm: significant(tap.lossOhm, 4),
-      q: significant(1 / tap.lossFactor, 3),
-      kind: 'estimate of the copper alone',
-    },
-    range:
-      coverage === null
-        ? null
-        : {
-            lowKhz: significant(coverage.lowKhz, 6),
-            highKhz: significant(coverage.highKhz, 6),
-            capacitanceLowPf: significant(coverage.outPf, 5),
-            capacitanceHighPf: significant(coverage.inPf, 5),
-          },
+    dominant: INPUT[limits.dominant],
+    ...at,
   };
 }
 
-export function windingOf(job: Job, design: Design): Winding {
+/** Where the turns lie: all that the parts need of a winding. */
+export function placesOf({ coil }: Design): PartsRecord['windings'][number] {
+  return {
+    turns: decimals(coil.turns, 6),
+    pitchMm: mm(coil.shape.pitchMm),
+    turnPositionsMm: Array.from(coil.places, mm),
+  };
+}
+
+/** The winding of a design; `figures` are those of its taps at work, in order. */
+export function windingOf(job: Job, design: Design, figures: readonly WorkingFigures[]): Winding {
   const { coil, candidate, metrics, taps, tension } = design;
   const limits = limitsOf(
     coil,
     taps.map((tap) => tap.turn),
     spreadOf(job, design),
   );
-  const list = taps.map((tap, index) => tapOf(job, design, tap, index, limits[index]!));
+  const list = taps.map((tap, index) => tapOf(job, design, tap, index, limits[index]!, figures[index]!));
   return {
     name: 'main',
-    turns: decimals(coil.turns, 6),
-    pitchMm: mm(coil.shape.pitchMm),
+    ...placesOf(design),
     pitchKind: candidate.pitch.kind,
     spacerMm: mm(candidate.pitch.spacerMm),
     spacerName: candidate.pitch.spacerName,
-    turnPositionsMm: Array.from(coil.places, mm),
     startMm: mm(coil.positionMm(0)),
     finishMm: mm(coil.positionMm(coil.turns)),
     meanDiameterMm: mm(coil.shape.meanDiameterMm),

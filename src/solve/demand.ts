@@ -3,8 +3,8 @@
  *
  * A band is turned by the tuned circuit f = 1 / (2 pi sqrt(L C)): the whole coil with all capacitance in reaches the lower
  * edge, the first tap with all capacitance out the upper edge, and the upper edges of the positions between are spread
- * evenly in ratio. Capacitance is that of the set (capacitor, stray, aerial) and the self-capacitance of the turns in use.
- * Every position is taken by its own section; what dead turns add is not in these figures and the record says so.
+ * evenly in ratio. Capacitance is that of the set (capacitor, stray, aerial) and what the coil itself puts across the
+ * position, its dead turns counted (`CoilView.selfPf`).
  */
 import type { Job } from '../job/job.ts';
 import { inductanceFor } from '../physics/tuning.ts';
@@ -14,7 +14,7 @@ export type SetCircuit = NonNullable<Job['set']>;
 
 /** What a coil must tell to have its targets worked out; inductances in uH, capacitances in pF. */
 export interface CoilView {
-  /** Self-capacitance of the section up to this inductance. */
+  /** Capacitance that the coil itself puts across the section up to this inductance, dead turns counted. */
   selfPf(inductanceUh: number): number;
   /** Inductance of the section up to this turn. */
   at(turn: number): number;
@@ -109,7 +109,7 @@ function band(want: Extract<Wish, { kind: 'band' }>, set: SetCircuit, taps: numb
       if (i === taps - 1) return whole;
       const top = want.highKhz * (wholeTop / want.highKhz) ** (i / (taps - 1));
       let value = uh(top, outPf);
-      for (let round = 0; round < 4; round++) value = uh(top, outPf + view.selfPf(value));
+      for (let round = 0; round < 8; round++) value = uh(top, outPf + view.selfPf(value));
       return value;
     });
   };

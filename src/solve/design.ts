@@ -1,14 +1,15 @@
 /** A candidate worked out in full by the ring sum, judged against every limit of the job. */
 import type { Coil } from '../coil/coil.ts';
+import type { WorkingCoil } from '../coil/working-coil.ts';
 import type { Job } from '../job/job.ts';
 import type { Former, Hole } from '../record/schema.ts';
 import type { Candidate } from './candidates.ts';
 import type { Demand } from './demand.ts';
 import { type Around, formerFor, holesFor, LEAST_WEB_MM, startMm, tensionN, tightestPair } from './former.ts';
-import { coilOf, freedomsOf, type Setting, settle, targetsOf } from './settle.ts';
+import { coilOf, freedomsOf, type Setting, sectionAt, settle, targetsOf } from './settle.ts';
 import { inductanceSpread } from './spread.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
-import { type Coverage, coverageOf, lossFactor, sectionLossOhm, workingKhz } from './working.ts';
+import { type Coverage, coverageEstimate, lossFactor, sectionLossOhm, workingKhz } from './working.ts';
 
 export interface DesignTap {
   readonly turn: number;
@@ -44,6 +45,8 @@ export interface Design {
   readonly holes: readonly Hole[];
   readonly tension: { readonly low: number; readonly high: number };
   readonly metrics: Metrics;
+  /** The coil at work, once it has been asked for. */
+  readonly working?: WorkingCoil;
 }
 
 export type Limit =
@@ -86,18 +89,19 @@ export function copperMm2(candidate: Candidate): number {
 }
 
 function tapsOf(setting: Setting, coil: Coil, turns: readonly number[]): DesignTap[] {
-  const targets = targetsOf(setting, coil);
+  const taps = turns.slice(0, -1);
+  const targets = targetsOf(setting, coil, taps);
   return turns.map((turn, index) => {
     const inductanceUh = coil.inductanceUh(turn);
-    const selfPf = coil.selfPf(turn);
-    const kHz = workingKhz(setting.job, inductanceUh, selfPf);
+    const coverage = coverageEstimate(setting.job, sectionAt(coil, turn, coil.turns, taps));
+    const kHz = workingKhz(setting.job, coverage);
     const lossOhm = sectionLossOhm(sectionOf(coil, turn), kHz);
     return {
       turn,
       targetUh: targets[index]!,
       inductanceUh,
       deviation: inductanceUh / targets[index]! - 1,
-      coverage: coverageOf(setting.job, inductanceUh, selfPf),
+      coverage,
       workingKhz: kHz,
       lossOhm,
       lossFactor: lossFactor(inductanceUh, lossOhm, kHz),
@@ -105,7 +109,7 @@ function tapsOf(setting: Setting, coil: Coil, turns: readonly number[]): DesignT
   });
 }
 
-function bandBreaches(demand: Demand, taps: readonly DesignTap[]): Breach[] {
+export function bandBreaches(demand: Demand, taps: readonly DesignTap[]): Breach[] {
   if (demand.band === null || demand.overlap === null) return [];
   const breaches: Breach[] = [];
   const cover = taps.map((tap) => tap.coverage!);
@@ -157,7 +161,18 @@ function wallBreaches(job: Job, former: Former): Breach[] {
   return [{ limit: 'former.wall', got: left, allowed: least, text }];
 }
 
-function designWith(job: Job, demand: Demand, candidate: Candidate, method: TapMethod, layout: TapLayout): Outcome {
+/**
+ * A candidate with its taps brought out in one way. `correction` is what the coupled circuit found over the estimate; with
+ * it the taps are placed, and whether they cover a band is left to the circuit.
+ */
+export function designWith(
+  job: Job,
+  demand: Demand,
+  candidate: Candidate,
+  method: TapMethod,
+  layout: TapLayout,
+  correction: NonNullable<Setting['correction']> = [],
+): Outcome {
   const tension = tensionN(copperMm2(candidate));
   const hand = job.winding.hand;
   const base = {
@@ -167,7 +182,7 @@ function designWith(job: Job, demand: Demand, candidate: Candidate, method: TapM
     tensionN: tension.high,
   };
   const start = startMm({ ...base, outsideMm: candidate.formerMm, pitchMm: candidate.pitch.mm });
-  const setting: Setting = { job, demand, candidate, method, layout, startMm: start };
+  const setting: Setting = { job, demand, candidate, method, layout, startMm: start, correction };
   let settled: ReturnType<typeof settle> = 'no room';
   for (const freedom of freedomsOf(job, candidate)) {
     settled = settle(setting, freedom);
@@ -187,7 +202,8 @@ function designWith(job: Job, demand: Demand, candidate: Candidate, method: TapM
   const former = formerFor(around, coil, turns, hand);
   const holes = holesFor(around, coil, turns, method, hand);
   const taps = tapsOf(setting, coil, turns);
-  const breaches = [...sizeBreaches(job, former), ...wallBreaches(job, former), ...bandBreaches(demand, taps)];
+  const breaches = [...sizeBreaches(job, former), ...wallBreaches(job, former)];
+  if (correction.length === 0) breaches.push(...bandBreaches(demand, taps));
   const off = Math.abs(taps[taps.length - 1]!.deviation);
   if (former.kind === 'printed' && off > WHOLE_OFF) {
     const text = `taps keep the finish from its place: the whole coil would be ${(off * 100).toFixed(2)} % off, ${WHOLE_OFF * 100} % at most`;

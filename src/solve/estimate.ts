@@ -8,10 +8,10 @@ import { selfCapacitance } from '../physics/medhurst.ts';
 import { roundWireInductance } from '../physics/rosa.ts';
 import { wheelerTurns } from '../physics/wheeler.ts';
 import type { Candidate } from './candidates.ts';
-import type { Demand } from './demand.ts';
+import { type Demand, setCapacitance } from './demand.ts';
 import { inductanceSpread } from './spread.ts';
 import { wireHoleMm } from './tap-methods.ts';
-import { lossFactor, sectionLossOhm, workingKhz } from './working.ts';
+import { actingSelfPf, coverageEstimate, lossFactor, type Section, sectionLossOhm, workingKhz } from './working.ts';
 
 export interface Size {
   readonly candidate: Candidate;
@@ -82,16 +82,41 @@ export function sizeOf(job: Job, demand: Demand, candidate: Candidate): Size | n
   return { candidate, wholeUh, turns, formerLengthMm, volumeMm3, gapsMm, selfPf };
 }
 
+/** L of a section goes with about this power of its turns. */
+const TURNS_POWER = 1.6;
+
+/** A section of a coil that is known by its whole alone, for the estimate of its tuning. */
+export function roughSection(job: Job, size: Size, uh: number, taps: number): Section {
+  const share = Math.min(1, (uh / size.wholeUh) ** (1 / TURNS_POWER));
+  return {
+    share,
+    usedUh: uh,
+    wholeUh: size.wholeUh,
+    deadUh: size.wholeUh * (1 - share) ** TURNS_POWER,
+    wholePf: size.selfPf,
+    sectionPf: size.selfPf,
+    leads: (job.set?.leadPf ?? 0) > 0 ? Array.from({ length: taps }, (_, i) => (i + 1) / taps) : [],
+  };
+}
+
+/** Targets of a coil that is known by its whole alone. */
+export function roughTargets(job: Job, demand: Demand, size: Size): number[] {
+  const { turns, wholeUh } = size;
+  const tuning = job.set === null ? null : setCapacitance(job.set);
+  return demand.targetsUh({
+    selfPf: (uh) =>
+      tuning === null ? size.selfPf : actingSelfPf(job, roughSection(job, size, uh, demand.taps), tuning.outPf),
+    at: (turn) => wholeUh * (turn / turns) ** TURNS_POWER,
+    turnFor: (value) => turns * (value / wholeUh) ** (1 / TURNS_POWER),
+  });
+}
+
 /** The rest of a candidate's figures. */
 export function estimateOf(job: Job, demand: Demand, size: Size): Estimate {
-  const { candidate, turns, wholeUh, selfPf, gapsMm } = size;
+  const { candidate, turns, wholeUh, gapsMm } = size;
   const { wire, pitch } = candidate;
   const diameter = meanDiameterMm(candidate);
-  const targets = demand.targetsUh({
-    selfPf: () => selfPf,
-    at: (turn) => wholeUh * (turn / turns) ** 1.6,
-    turnFor: (value) => turns * (value / wholeUh) ** (1 / 1.6),
-  });
+  const targets = roughTargets(job, demand, size);
   const turnM = Math.sqrt((Math.PI * diameter) ** 2 + pitch.mm ** 2) / 1e3;
   const copperMm2 = (Math.PI / 4) * wire.strandMm ** 2 * wire.strands;
   let loss = 0;
@@ -103,7 +128,7 @@ export function estimateOf(job: Job, demand: Demand, size: Size): Estimate {
     const share = gapsMm * (value / wholeUh) ** 0.6;
     const n = last ? turns : turnsFor(value, diameter, pitch.mm, wire.bareMm, share);
     if (index === 0) firstTapTurns = n;
-    const kHz = workingKhz(job, value, selfPf);
+    const kHz = workingKhz(job, coverageEstimate(job, roughSection(job, size, value, demand.taps)));
     const shape = { wire, meanDiameterMm: diameter, turns: n, pitchMm: pitch.mm, wireM: n * turnM };
     loss += lossFactor(value, sectionLossOhm(shape, kHz), kHz);
   }

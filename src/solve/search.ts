@@ -11,8 +11,10 @@ import { selfCapacitance } from '../physics/medhurst.ts';
 import { type Candidate, candidatesOf, diametersFor } from './candidates.ts';
 import { type Demand, demandOf } from './demand.ts';
 import { type Breach, type Design, designOf, variantsOf } from './design.ts';
-import { type Estimate, estimateOf, type Size, sizeOf } from './estimate.ts';
+import { type Estimate, estimateOf, roughSection, roughTargets, type Size, sizeOf } from './estimate.ts';
 import { ALL_ASPECTS, ASPECTS, type Aspect, aspectOf } from './prefer.ts';
+import { type Ranked, rankedByField, refine } from './refine.ts';
+import { coverageEstimate } from './working.ts';
 
 /** How much worse than the best design an estimate may be and still be worked out. */
 const MARGIN = 0.08;
@@ -27,6 +29,8 @@ const OTHERS = 3;
 const TOO_LOSSY = 2.5;
 /** With fewer other designs than this, other ways to tap the chosen coil are worked out too. */
 const FEW = 12;
+/** Designs of a band that are worked out by the coupled circuit before it is given up. */
+const REFINED = 6;
 
 export interface Found {
   readonly demand: Demand;
@@ -36,6 +40,8 @@ export interface Found {
   /** Candidates looked at, and those of them that fit as far as the estimate tells. */
   readonly tried: number;
   readonly feasible: number;
+  /** The nearest to the least loss, ranked by the field of every turn; empty when something else is preferred. */
+  readonly ranked: readonly Ranked[];
 }
 
 export interface NotFound {
@@ -106,16 +112,50 @@ export function hasCoil(job: Job): boolean {
   );
 }
 
-/** The demands to try, the fewest switch positions first; none when a switch has not as many as the last would need. */
+/**
+ * The demands to try, the fewest switch positions first; none when a switch has not as many as the last would need. How
+ * many a band needs depends on the coil: dead turns narrow the lower positions. The estimate finds the first number that
+ * some coil manages, and that one and the next are worked out.
+ */
 function demandsFor(job: Job, candidates: readonly Candidate[]): Demand[] {
-  const { want, set } = job;
-  const usual = demandFor(job);
-  if (want.kind !== 'band' || want.taps !== null || set === null) return [usual];
-  if (usual.taps > MOST_TAPS + 1) return [];
-  const sizes = candidates.map((candidate) => sizeOf(job, usual, candidate)).filter((size) => size !== null);
-  const selfPf = Math.min(...sizes.filter((size) => mayFit(size, job, usual)).map((size) => size.selfPf));
-  const fewer = Number.isFinite(selfPf) ? demandOf(job, selfPf) : usual;
-  return (fewer.taps < usual.taps ? [fewer, usual] : [usual]).filter(({ taps }) => taps <= MOST_TAPS);
+  const { want } = job;
+  if (want.kind !== 'band' || want.taps !== null || job.set === null) return [demandFor(job)];
+  const least = demandOf(job, 0).taps;
+  if (least > MOST_TAPS) return [];
+  const demandWith = (taps: number) => demandOf({ ...job, want: { ...want, taps } }, 0);
+  const sizes = sampleOf(candidates, SAMPLE)
+    .map((candidate) => sizeOf(job, demandWith(least), candidate))
+    .filter((size) => size !== null && mayFit(size, job, demandWith(least))) as Size[];
+  for (let taps = least; taps <= Math.min(MOST_TAPS, least + MOST_MORE); taps++) {
+    const demand = demandWith(taps);
+    if (sizes.some((size) => coversRoughly(job, demand, size)))
+      return [demand, ...(taps < MOST_TAPS ? [demandWith(taps + 1)] : [])];
+  }
+  return [demandWith(least)];
+}
+
+/** Candidates looked at to tell how many positions a band needs, and how many more than the fewest are tried. */
+const SAMPLE = 400;
+const MOST_MORE = 12;
+/** The estimate may be this far out in an overlap. */
+const ROUGH_OVERLAP = 0.01;
+
+function sampleOf<T>(list: readonly T[], count: number): T[] {
+  const step = Math.max(1, list.length / count);
+  return Array.from({ length: Math.min(count, list.length) }, (_, i) => list[Math.floor(i * step)]!);
+}
+
+/** Whether positions at their targets overlap as asked, as far as the estimate tells. */
+function coversRoughly(job: Job, demand: Demand, size: Size): boolean {
+  const targets = roughTargets(job, demand, size);
+  const spans = targets.map((uh) => coverageEstimate(job, roughSection(job, size, uh, demand.taps))!);
+  const rising = targets.every((uh, i) => i === 0 || uh > targets[i - 1]!);
+  return (
+    rising &&
+    spans.every(
+      (span, i) => i === 0 || span.highKhz / spans[i - 1]!.lowKhz - 1 >= (demand.overlap ?? 0) - ROUGH_OVERLAP,
+    )
+  );
 }
 
 /** For a band that no switch can cover in positions as narrow as the set's capacitor makes them. */
@@ -140,17 +180,27 @@ function searchFor(job: Job, demand: Demand, candidates: readonly Candidate[]): 
     outcomes.set(candidate, design);
     return design;
   };
-  let chosen = bestOf(hopeful, aspect, work);
+  const chosen = bestOf(hopeful, aspect, work);
   if (chosen === null) return { demand, tried: candidates.length, breaches };
   const loss = chosen.metrics.lossFactor;
   const narrow = hopeful.length < 4 * DESIGNS;
   const sensible = narrow ? hopeful : hopeful.filter((one) => one.lossFactor <= TOO_LOSSY * loss);
   for (const other of ALL_ASPECTS) for (const one of bestByWire(sensible, other, OTHERS)) work(one.candidate);
   const designs = [...outcomes.values()].filter((design) => design !== null);
-  for (const design of designs) if (isBetter(design, chosen, aspect)) chosen = design;
-  const others = designs.filter((design) => design !== chosen);
-  if (others.length < FEW) others.push(...variantsOf(job, demand, chosen));
-  return { demand, chosen, others, tried: candidates.length, feasible: hopeful.length };
+  const ranked = aspect === ASPECTS.loss ? rankedByField(job, designs) : [];
+  const inTurn = [...ranked.map(({ design }) => design), ...designs.sort((a, b) => (isBetter(a, b, aspect) ? -1 : 1))];
+  for (const design of [...new Set(inTurn)].slice(0, REFINED)) {
+    const refined = refine(job, demand, design);
+    if (!refined.ok) {
+      breaches.push(refined.breaches);
+      continue;
+    }
+    const others = designs.filter((one) => one !== design);
+    if (others.length < FEW) others.push(...variantsOf(job, demand, design));
+    const counts = { tried: candidates.length, feasible: hopeful.length };
+    return { demand, chosen: refined.design, others, ranked, ...counts };
+  }
+  return { demand, tried: candidates.length, breaches };
 }
 
 /** Better in the aspect; equal within 1e-9 the one with less loss. */

@@ -10,10 +10,11 @@ import { Coil } from '../coil/coil.ts';
 import type { Gap } from '../coil/layout.ts';
 import type { Job } from '../job/job.ts';
 import type { Candidate } from './candidates.ts';
-import type { CoilView, Demand } from './demand.ts';
+import { type CoilView, type Demand, setCapacitance } from './demand.ts';
 import { meanDiameterMm, turnsFor } from './estimate.ts';
 import { type NoPlace, type Placing, placeTaps, STAGGER_STEPS, stillClear } from './place-taps.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
+import { actingSelfPf, type Section } from './working.ts';
 
 /** `more` and `fewer`: the diameter or pitch follows the whole turns above or below instead of the nearest. */
 export type Freedom = 'nearest' | 'more' | 'fewer' | 'finish angle' | 'none';
@@ -33,6 +34,8 @@ export interface Setting {
   readonly method: TapMethod;
   readonly layout: TapLayout;
   readonly startMm: number;
+  /** What the coupled circuit found over the estimate of a coil's own capacitance, pF, by turn; none before it was asked. */
+  readonly correction?: readonly { readonly turn: number; readonly pf: number }[];
 }
 
 /** Largest change of a groove's pitch, as a part of a layer, that still prints as whole layers. */
@@ -80,19 +83,52 @@ function within(setting: Setting, state: Settled): boolean {
   return true;
 }
 
-/** The view of a coil that the demand asks; sections beyond the whole coil count as the whole coil. */
-function viewOf(coil: Coil, wholeUh: number): CoilView {
+/** The section up to a turn of a coil of `turns` turns, for the estimate of its tuning. */
+export function sectionAt(coil: Coil, turn: number, turns: number, taps: readonly number[]): Section {
+  const used = Math.min(turn, turns);
   return {
-    selfPf: (uh) => coil.selfPf(Math.min(coil.turnFor(Math.min(uh, wholeUh)), coil.turns)),
+    share: used / turns,
+    usedUh: coil.inductanceUh(used),
+    wholeUh: coil.inductanceUh(turns),
+    // The dead turns by themselves: as many turns at the start, which lie alike but for the gaps.
+    deadUh: used < turns ? coil.inductanceUh(turns - used) : 0,
+    wholePf: coil.selfPf(turns),
+    sectionPf: coil.selfPf(used),
+    leads: [...taps, turns].map((tap) => tap / turns),
+  };
+}
+
+function correctionAt({ correction }: Setting, turn: number): number {
+  if (correction === undefined || correction.length === 0) return 0;
+  const next = correction.findIndex((one) => one.turn >= turn);
+  if (next < 0) return correction[correction.length - 1]!.pf;
+  const [a, b] = [correction[next - 1], correction[next]!];
+  if (a === undefined || b.turn - a.turn < 1e-9) return b.pf;
+  return a.pf + ((b.pf - a.pf) * (turn - a.turn)) / (b.turn - a.turn);
+}
+
+/** The view of a coil that the demand asks; sections beyond the whole coil count as the whole coil. */
+function viewOf(setting: Setting, coil: Coil, wholeUh: number, taps: readonly number[]): CoilView {
+  const { job } = setting;
+  const turns = Math.min(coil.turnFor(wholeUh), coil.turns);
+  return {
+    selfPf: (uh) => {
+      const turn = uh >= wholeUh ? turns : Math.min(coil.turnFor(uh), turns);
+      if (job.set === null) return coil.selfPf(turn);
+      const { outPf } = setCapacitance(job.set);
+      return actingSelfPf(job, sectionAt(coil, turn, turns, taps), outPf) + correctionAt(setting, turn);
+    },
     at: (turn) => coil.inductanceUh(turn),
     turnFor: (uh) => coil.turnFor(uh),
   };
 }
 
-function wholeTarget(demand: Demand, coil: Coil): number {
+/** Inductance of the whole coil: its own capacitance and that of the leads decide for a band. */
+function wholeTarget(setting: Setting, coil: Coil, taps: readonly number[]): number {
+  const { demand } = setting;
   let wholeUh = demand.wholeUh(coil.selfPf(coil.turns));
   if (demand.kind === 'band')
-    for (let k = 0; k < 2; k++) wholeUh = demand.wholeUh(coil.selfPf(Math.min(coil.turnFor(wholeUh), coil.turns)));
+    for (let k = 0; k < 3; k++) wholeUh = demand.wholeUh(viewOf(setting, coil, wholeUh, taps).selfPf(wholeUh));
   return wholeUh;
 }
 
@@ -121,7 +157,7 @@ export function settle(setting: Setting, freedom: Freedom): Settled | NoPlace | 
   let fixedTurns: number | null = null;
   for (let round = 0; round < ROUNDS; round++) {
     const coil = coilOf(setting, state, length);
-    const wholeUh = wholeTarget(demand, coil);
+    const wholeUh = wholeTarget(setting, coil, state.taps);
     const exact = coil.turnFor(wholeUh);
     if (exact > length - 2) {
       length = Math.ceil(exact * 1.05) + 5;
@@ -138,7 +174,7 @@ export function settle(setting: Setting, freedom: Freedom): Settled | NoPlace | 
       else next.pitchMm = roundTo(state.pitchMm * ratio ** (-1 / 0.6), 1e4);
       if (!within(setting, next)) return 'no room';
     }
-    const targets = demand.targetsUh(viewOf(coil, wholeUh)).slice(0, -1);
+    const targets = demand.targetsUh(viewOf(setting, coil, wholeUh, state.taps)).slice(0, -1);
     const placing = placingOf(setting, turns);
     if (round < TAPS_STAY_FROM || !stillClear(state.taps, placing)) {
       const placed = placeTaps(coil, targets, placing);
@@ -168,7 +204,7 @@ function trimmed(setting: Setting, settled: Settled): Settled {
   let least = Number.POSITIVE_INFINITY;
   for (let round = 0; round < TRIMS; round++) {
     const coil = coilOf(setting, state, state.turns);
-    const wholeUh = wholeTarget(setting.demand, coil);
+    const wholeUh = wholeTarget(setting, coil, state.taps);
     const ratio = wholeUh / coil.inductanceUh(state.turns);
     if (Math.abs(ratio - 1) < least) {
       best = state;
@@ -189,7 +225,7 @@ function trimmed(setting: Setting, settled: Settled): Settled {
 function tapsKept(setting: Setting, coil: Coil, taps: readonly number[], turns: number, wholeUh: number) {
   const placing = placingOf(setting, turns);
   if (stillClear(taps, placing)) return taps;
-  const placed = placeTaps(coil, setting.demand.targetsUh(viewOf(coil, wholeUh)).slice(0, -1), placing);
+  const placed = placeTaps(coil, setting.demand.targetsUh(viewOf(setting, coil, wholeUh, taps)).slice(0, -1), placing);
   return 'noPlaceFor' in placed ? null : placed.turns;
 }
 
@@ -197,7 +233,7 @@ function placingOf(setting: Setting, turns: number): Placing {
   return { layout: setting.layout, method: setting.method, turns, firstNotAbove: setting.demand.kind === 'band' };
 }
 
-/** Targets of the final coil, the whole coil's last. */
-export function targetsOf(setting: Setting, coil: Coil): number[] {
-  return setting.demand.targetsUh(viewOf(coil, coil.inductanceUh(coil.turns)));
+/** Targets of the final coil with these taps (the whole coil not among them), the whole coil's last. */
+export function targetsOf(setting: Setting, coil: Coil, taps: readonly number[]): number[] {
+  return setting.demand.targetsUh(viewOf(setting, coil, coil.inductanceUh(coil.turns), taps));
 }

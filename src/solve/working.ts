@@ -3,6 +3,7 @@
  * The loss is the labelled estimate of `physics/loss.ts`; it serves to rank candidates and is printed as an estimate.
  */
 import type { Job } from '../job/job.ts';
+import { deadEndCapacitance } from '../physics/coupled/two-nodes.ts';
 import { lossEstimate } from '../physics/loss.ts';
 import { resonance } from '../physics/tuning.ts';
 import type { Wire } from '../stock/wire.ts';
@@ -14,24 +15,69 @@ export const DEFAULT_AT_KHZ = 1000;
 export interface Coverage {
   readonly lowKhz: number;
   readonly highKhz: number;
-  /** All capacitance across the position with the capacitor out and in, self-capacitance counted. */
-  readonly outPf: number;
-  readonly inPf: number;
 }
 
-/** Frequencies of a section with the set's capacitor in and out; null when the job has no set. */
-export function coverageOf(job: Job, inductanceUh: number, selfPf: number): Coverage | null {
+/** A section of a coil as the estimate of its tuning needs it; uH and pF. */
+export interface Section {
+  /** Turns in use over all turns, above 0, up to 1. */
+  readonly share: number;
+  readonly usedUh: number;
+  readonly wholeUh: number;
+  /** Of the dead turns by themselves. */
+  readonly deadUh: number;
+  readonly wholePf: number;
+  /** Self-capacitance of the turns in use alone. */
+  readonly sectionPf: number;
+  /** Turns of all taps over all turns: each has a lead. */
+  readonly leads: readonly number[];
+}
+
+const WHOLE = 1 - 1e-9;
+
+/**
+ * Capacitance that the coil itself puts across the turns in use, dead turns counted, pF: an estimate, two nodes for all
+ * turns. It may come out below 0 where shorted turns take inductance away, which acts the same on the resonance.
+ */
+export function actingSelfPf(job: Job, section: Section, tuningPf: number): number {
+  const { share, usedUh, wholeUh, deadUh, wholePf, sectionPf } = section;
+  const lead = job.set?.leadPf ?? 0;
+  if (share >= WHOLE) return wholePf + lead * sum(section.leads, (at) => at ** 2);
+  const rest = job.set?.switch ?? 'open';
+  const mutual = Math.max(0, (wholeUh - usedUh - deadUh) / 2);
+  const own = lead * sum(section.leads, (at) => (at <= share + 1e-9 ? (at / share) ** 2 : 0));
+  if (rest === 'disconnected') return sectionPf + own;
+  if (rest !== 'open') {
+    const left = 1 - mutual ** 2 / (deadUh * usedUh);
+    return left * (tuningPf + sectionPf + own) - tuningPf;
+  }
+  // With the finish earthed the dead turns hang at the earthed end and act little more than the section does.
+  if (job.winding.earthed === 'finish') return sectionPf + own;
+  const far = (usedUh + mutual) / usedUh;
+  const beyond =
+    lead * sum(section.leads, (at) => (at > share + 1e-9 ? (1 + ((far - 1) * (at - share)) / (1 - share)) ** 2 : 0));
+  const wire = deadEndCapacitance({
+    share,
+    usedInductance: usedUh,
+    wholeInductance: wholeUh,
+    deadInductance: deadUh,
+    selfCapacitance: wholePf,
+    tuning: tuningPf + own,
+  });
+  return wire + own + beyond;
+}
+
+const sum = (list: readonly number[], of: (value: number) => number) => list.reduce((all, value) => all + of(value), 0);
+
+/** Frequencies of a section with the set's capacitor in and out, by the estimate; null when the job has no set. */
+export function coverageEstimate(job: Job, section: Section): Coverage | null {
   if (job.set === null) return null;
-  const fixed = setCapacitance(job.set);
-  const outPf = fixed.outPf + selfPf;
-  const inPf = fixed.inPf + selfPf;
-  const khz = (pf: number) => resonance(inductanceUh * 1e-6, pf * 1e-12) / 1e3;
-  return { lowKhz: khz(inPf), highKhz: khz(outPf), outPf, inPf };
+  const { outPf, inPf } = setCapacitance(job.set);
+  const khz = (pf: number) => resonance(section.usedUh * 1e-6, (pf + actingSelfPf(job, section, pf)) * 1e-12) / 1e3;
+  return { lowKhz: khz(inPf), highKhz: khz(outPf) };
 }
 
 /** The frequency at which a position is judged: the middle of its coverage in ratio, or the job's `at`. */
-export function workingKhz(job: Job, inductanceUh: number, selfPf: number): number {
-  const coverage = coverageOf(job, inductanceUh, selfPf);
+export function workingKhz(job: Job, coverage: Coverage | null): number {
   if (coverage === null || job.atKhz !== null) return job.atKhz ?? DEFAULT_AT_KHZ;
   return Math.sqrt(coverage.lowKhz * coverage.highKhz);
 }
