@@ -5,10 +5,10 @@
 import { cautionsFor } from '../../templates/wording/cautions.ts';
 import { HOW } from '../../templates/wording/steps.ts';
 import type { Job } from '../job/job.ts';
-import { alternativesTo } from '../solve/alternatives.ts';
+import { alternativesTo, WORTH } from '../solve/alternatives.ts';
 import { setCapacitance } from '../solve/demand.ts';
 import type { Design } from '../solve/design.ts';
-import { aspectOf } from '../solve/prefer.ts';
+import { ASPECTS, aspectOf } from '../solve/prefer.ts';
 import { fieldLoss, lossTangentOf, workingCoilOf } from '../solve/refine.ts';
 import type { Found } from '../solve/search.ts';
 import { spreadInWords, spreadOf } from '../solve/spread.ts';
@@ -76,6 +76,9 @@ function holeOf(hole: Hole): Hole {
   return { ...hole, turn, angleDeg: deg(hole.angleDeg), axialMm: mm(hole.axialMm) };
 }
 
+/** Alternatives in the record, at most. */
+const SHOWN = 6;
+
 function alternativeOf(design: Design, betterIn: readonly string[], lossFactor: number): Alternative {
   const { candidate, metrics, former, coil } = design;
   return {
@@ -92,6 +95,20 @@ function alternativeOf(design: Design, betterIn: readonly string[], lossFactor: 
     tapMethod: `${design.method.name}, ${design.layout}`,
     betterIn: [...betterIn],
   };
+}
+
+/** The alternatives, whose loss is judged by the field as the chosen coil's is; what is then better in nothing is left out. */
+function shownOf(job: Job, found: Found, lossFactor: number): Alternative[] {
+  const { better } = ASPECTS.loss;
+  return alternativesTo(found.chosen, found.others)
+    .map(({ design, betterIn }) => {
+      const loss = fieldLoss(job, design);
+      const others = betterIn.filter((claim) => claim !== better);
+      const claims = loss < lossFactor * (1 - WORTH) ? [better, ...others] : others;
+      return alternativeOf(design, claims, loss);
+    })
+    .filter((one) => one.betterIn.length > 0)
+    .slice(0, SHOWN);
 }
 
 function whyChosen(job: Job, found: Found, lossFactor: number): string {
@@ -146,11 +163,11 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     lossTangent: lossTangentOf(job),
   };
   const figures = figuresOf(chosen.working ?? workingCoilOf(job, chosen), conditions);
-  const lossFactor = figures.taps.reduce((sum, tap) => sum + 1 / tap.working.q, 0) / figures.taps.length;
+  const lossFactor = fieldLoss(job, chosen);
   const winding = windingOf(job, chosen, figures.taps);
   const spread = spreadOf(job, chosen);
   const { method, candidate } = chosen;
-  const alternatives = alternativesTo(chosen, found.others);
+  const alternatives = shownOf(job, found, lossFactor);
   const body: Omit<CoilRecord, 'hash' | 'files' | 'program'> = {
     record: 1,
     verb: 'plan',
@@ -191,10 +208,10 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
       tried: found.tried,
       feasible: found.feasible,
     },
-    warnings: warningsOf(job, found, alternatives.length),
+    warnings: warningsOf(job, found, alternatives.length, figures.coverage),
     given: { ...job.given },
     assumed: { ...job.assumed, ...derivedOf(job, chosen), ...spreadInWords(spread) },
-    alternatives: alternatives.map(({ design, betterIn }) => alternativeOf(design, betterIn, fieldLoss(job, design))),
+    alternatives,
   };
   return recordSchema.parse({ ...body, program: `coilwright ${version}`, hash: hashOf(body), files: [] });
 }

@@ -10,20 +10,29 @@ type Warning = CoilRecord['warnings'][number];
 /** A tap farther off than this is pointed out. */
 const FAR_OFF = 0.01;
 
-export function warningsOf(job: Job, found: Found, alternatives: number): Warning[] {
+/** Gaps that no position tunes, and second resonances that let strong signals through. */
+export function coverageWarnings(coverage: CoilRecord['coverage']): Warning[] {
+  if (coverage === null) return [];
+  const gaps = coverage.gaps.map(({ from, to, lowKhz, highKhz, tapsToClose }) => ({
+    code: 'gap',
+    text: `Nothing tunes ${lowKhz.toFixed(0)} to ${highKhz.toFixed(0)} kHz between positions ${from} and ${to}: ${tapsToClose} more ${tapsToClose === 1 ? 'tap closes' : 'taps close'} the gap.`,
+  }));
+  const near = coverage.deadEnds.map(({ tap, secondKhz }) => `${tap} (${secondKhz.toFixed(0)} kHz)`);
+  if (near.length === 0) return gaps;
+  const text = `Dead turns resonate on their own near what the switch tunes, at position ${near.join(', ')}: strong signals there come through. Shorting the dead turns in sections or cutting them off moves that away.`;
+  return [...gaps, { code: 'dead-end-resonance', text }];
+}
+
+export function warningsOf(job: Job, found: Found, alternatives: number, coverage: CoilRecord['coverage']): Warning[] {
   const { chosen } = found;
   const { coil, taps, candidate, former, layout } = chosen;
   const list: Warning[] = [];
   const add = (code: string, text: string) => list.push({ code, text });
   add(
-    'loss-is-an-estimate',
-    'Q and loss are estimates of the copper alone (skin effect, Medhurst’s ratio): use them to compare coils, not as a promise.',
+    'q-is-unloaded',
+    'Q is that of the coil alone, dead turns and an estimate of the former’s loss counted; aerial and detector load it further.',
   );
-  if (job.set !== null && taps.length > 1)
-    add(
-      'dead-turns-not-counted',
-      'Ranges are those of the turns in use. Turns left open beyond a tap lower its upper edge further, by a few percent near the whole coil and by up to a quarter at the lowest taps.',
-    );
+  list.push(...coverageWarnings(coverage));
   if (layout === 'staggered' && job.winding.tapLayout === 'auto')
     add(
       'taps-staggered',

@@ -8,8 +8,9 @@ export interface Other {
 }
 
 /** Better by less than this is no reason to show a coil. */
-const WORTH = 0.01;
-const SHOWN = 6;
+export const WORTH = 0.01;
+/** More than the record shows: some claims fall when the loss is judged by the field. */
+const SHOWN = 8;
 
 function betterIn(design: Design, chosen: Design): string[] {
   const value = (aspect: Aspect, one: Design) => aspect.of(one.metrics);

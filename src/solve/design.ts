@@ -81,7 +81,8 @@ const BAND_SLACK = 2e-3;
 
 export function sectionOf(coil: Coil, turn: number) {
   const { wire, meanDiameterMm } = coil.shape;
-  return { wire, meanDiameterMm, turns: turn, pitchMm: coil.meanPitchMm(turn), wireM: coil.wireM(turn) };
+  const deadTurns = Math.max(0, coil.turns - turn);
+  return { wire, meanDiameterMm, turns: turn, deadTurns, pitchMm: coil.meanPitchMm(turn), wireM: coil.wireM(turn) };
 }
 
 export function copperMm2(candidate: Candidate): number {

