@@ -15,14 +15,35 @@ export interface Tree {
   readonly lineOf: (path: Path) => number | undefined;
 }
 
+/** What a file is, for messages. */
+export interface FileKind {
+  /** `a job`. */
+  readonly noun: string;
+  /** What it must have. */
+  readonly least: string;
+  /** How to come by one. */
+  readonly begin: string;
+}
+
+export const JOB_FILE: FileKind = {
+  noun: 'a job',
+  least: 'at least the keys job and want',
+  begin: 'coilwright start',
+};
+export const COIL_FILE: FileKind = {
+  noun: 'a measured coil',
+  least: 'at least the key coil',
+  begin: 'coilwright start found-coil',
+};
+
 /** 1 MB: a job is a page. */
 export const LARGEST_BYTES = 1_000_000;
 /** A job nests three deep. */
 const DEEPEST = 32;
 
 /** Bytes to text: UTF-8, with or without its mark. Throws a {@link Fault} with exit code 3. */
-export function decode(bytes: Uint8Array, file: string): string {
-  if (bytes.length > LARGEST_BYTES) throw tooLarge(bytes.length, file);
+export function decode(bytes: Uint8Array, file: string, kind: FileKind = JOB_FILE): string {
+  if (bytes.length > LARGEST_BYTES) throw tooLarge(bytes.length, file, kind);
   try {
     return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
   } catch {
@@ -30,16 +51,16 @@ export function decode(bytes: Uint8Array, file: string): string {
       code: 'not-utf-8',
       place: { file },
       got: 'bytes that are not UTF-8 text',
-      expected: 'a job in YAML or JSON, in UTF-8',
+      expected: `${kind.noun} in YAML or JSON, in UTF-8`,
       todo: 'save the file as UTF-8 text; PDF, ZIP and word processor files cannot be read',
     });
   }
 }
 
 /** Text to data. Throws a {@link Fault} with exit code 3 that carries every fault found. */
-export function readTree(text: string, file: string): Tree {
+export function readTree(text: string, file: string, kind: FileKind = JOB_FILE): Tree {
   const bytes = Buffer.byteLength(text);
-  if (bytes > LARGEST_BYTES) throw tooLarge(bytes, file);
+  if (bytes > LARGEST_BYTES) throw tooLarge(bytes, file, kind);
   const source = text.replace(/^\ufeff/, '');
   const deep = firstTooDeep(source);
   if (deep !== null) {
@@ -63,7 +84,7 @@ export function readTree(text: string, file: string): Tree {
   const document = Array.isArray(documents) ? documents[0] : undefined;
   if (document?.contents == null || document.contents.range == null) {
     if (document !== undefined && document.errors.length > 0) throw broken(document.errors, lines, file);
-    throw empty(file);
+    throw empty(file, kind);
   }
   const faults = documents.flatMap((one) => [...one.errors, ...one.warnings]);
   if (faults.length > 0) throw broken(faults, lines, file);
@@ -80,27 +101,27 @@ export function readTree(text: string, file: string): Tree {
   const contents = document.contents as Node;
   refuseAliases(contents, lines, file);
   const data: unknown = document.toJS({ maxAliasCount: 0 });
-  if (data === null || data === '') throw empty(file);
+  if (data === null || data === '') throw empty(file, kind);
   return { data, lineOf: (path) => lineAt(contents, path, lines) };
 }
 
-function tooLarge(bytes: number, file: string): Fault {
+function tooLarge(bytes: number, file: string, kind: FileKind): Fault {
   return new Fault(3, {
     code: 'too-large',
     place: { file },
     got: `${bytes} bytes`,
-    expected: `a job of at most ${LARGEST_BYTES} bytes`,
-    todo: 'check that this is the job file',
+    expected: `${kind.noun} of at most ${LARGEST_BYTES} bytes`,
+    todo: kind === JOB_FILE ? 'check that this is the job file' : 'check that this is the right file',
   });
 }
 
-function empty(file: string): Fault {
+function empty(file: string, kind: FileKind): Fault {
   return new Fault(3, {
     code: 'empty',
     place: { file },
-    got: 'an empty job',
-    expected: 'at least the keys job and want',
-    todo: 'begin with: coilwright start',
+    got: kind === JOB_FILE ? 'an empty job' : 'an empty file',
+    expected: kind.least,
+    todo: `begin with: ${kind.begin}`,
   });
 }
 

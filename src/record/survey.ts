@@ -1,7 +1,7 @@
 /** Makes the record of a measured coil: figures rounded once, given and assumed apart, signed with its hash. */
 import type { Coil } from '../coil/coil.ts';
 import { angleOf } from '../coil/layout.ts';
-import { type Conditions, FORMER_SHARE } from '../coil/positions.ts';
+import type { Conditions } from '../coil/positions.ts';
 import { type Limits, limitsOf, type Spread } from '../coil/tolerance.ts';
 import type { WorkingCoil } from '../coil/working-coil.ts';
 import type { CoilFile } from '../job/coil/file.ts';
@@ -190,7 +190,7 @@ export function makeSurveyRecord(
     chosen: null,
     warnings: surveyWarnings(file, coil, working, figures),
     given: { ...file.given },
-    assumed: { ...file.assumed, 'spread.lead': `± ${LEAD_UH * 1000} nH`, 'former loss': FORMER_SHARE },
+    assumed: { ...file.assumed, 'spread.lead': `± ${LEAD_UH * 1000} nH` },
     alternatives: [],
   };
   const hash = hashOf(body as unknown as Parameters<typeof hashOf>[0]);

@@ -25,7 +25,10 @@ function jobName(job: string, widthMm: number, measure: Measure): Block {
   return paragraph(job, widthMm, measure, { sizeMm: BODY_MM, bold: true });
 }
 
-export function titleBlock(record: CoilRecord, name: SheetName, widthMm: number, measure: Measure): Block {
+/** What the head reads, of the record of any verb. */
+export type Headed = Pick<CoilRecord, 'job' | 'hash' | 'program' | 'date'>;
+
+export function titleBlock(record: Headed, name: SheetName, widthMm: number, measure: Measure): Block {
   const right = [TITLE.record(record.hash.slice(0, 12)), record.program];
   if (record.date !== null) right.push(TITLE.date(record.date));
   const middleWidth = Math.max(

@@ -1,0 +1,245 @@
+/** The blocks of the range sheet, from the record of any verb. */
+import { CHART, ENDS, KINDS, NOTES, POSITIONS, TAKEN } from '../../templates/wording/range-sheet.ts';
+import type { Measure } from '../drawing/boxes.ts';
+import { chartHeight, drawRangeChart, type RangeChart, ROW_MM } from '../drawing/range-chart.ts';
+import { moved, SMALL_MM } from '../drawing/shapes.ts';
+import type { FiguresRecord } from '../record/survey-schema.ts';
+import { type Block, heading, list, paragraph, stack } from './block.ts';
+import { type Column, shares, table } from './table.ts';
+import { figures, fixed, sentence, short } from './text.ts';
+
+const ROW = 4.7;
+const RIGHT = { align: 'right' } as const;
+const CENTRE = { align: 'centre' } as const;
+
+/** A table that may be parted between two groups of rows. */
+export interface Parted {
+  /** Rows that stay together. */
+  readonly groups: readonly (readonly (readonly string[])[])[];
+  block(groups: readonly (readonly (readonly string[])[])[], continued: boolean): Block;
+}
+
+type Head = readonly [head: string, share: number, rest: Partial<Column>];
+
+function parted(
+  words: { heading: string; more: string },
+  heads: readonly Head[],
+  groups: Parted['groups'],
+  widthMm: number,
+  measure: Measure,
+): Parted {
+  const widths = shares(
+    widthMm,
+    heads.map(([, share]) => share),
+  );
+  const columns = heads.map(([head, , rest], i): Column => ({ head, widthMm: widths[i]!, ...rest }));
+  return {
+    groups,
+    block: (some, continued) =>
+      stack(
+        [
+          heading(continued ? words.more : words.heading, widthMm, measure),
+          table(columns, some.flat(), measure, { rowMm: ROW, sizeMm: SMALL_MM }),
+        ],
+        0,
+      ),
+  };
+}
+
+const khz = (value: number) => fixed(value, value >= 1000 ? 0 : 1);
+const half = (value: number) => `${Number(value.toPrecision(2))}`;
+
+export function chartOf(record: FiguresRecord): RangeChart | null {
+  const positions = record.windings[0]!.taps.flatMap(({ tap, range }) => (range === null ? [] : [{ tap, ...range }]));
+  if (positions.length === 0) return null;
+  const { bandLowKhz, bandHighKhz } = record.demand;
+  const band = bandLowKhz === null || bandHighKhz === null ? null : { lowKhz: bandLowKhz, highKhz: bandHighKhz };
+  return { positions, band };
+}
+
+/** The chart with its heading and legend, no higher than `mostMm` where rows allow it. */
+export function chart(record: FiguresRecord, widthMm: number, mostMm: number, measure: Measure): Block {
+  const head = heading(CHART.heading, widthMm, measure);
+  const drawn = chartOf(record);
+  if (drawn === null) return stack([head, paragraph(CHART.none, widthMm, measure)], 0.5);
+  const legend = paragraph(`${CHART.legend} ${CHART.beyond}`, widthMm, measure, { sizeMm: SMALL_MM });
+  const room = mostMm - head.heightMm - legend.heightMm - 2 - chartHeight({ ...drawn, positions: [] }, 0);
+  const rowMm = Math.min(ROW_MM.most, Math.max(ROW_MM.least, room / drawn.positions.length));
+  const heightMm = chartHeight(drawn, rowMm);
+  const { shapes } = drawRangeChart(drawn, widthMm, rowMm, measure);
+  const picture = { widthMm, heightMm, shapes: shapes.map((shape) => moved(shape, 0, -heightMm)) };
+  return stack([head, picture, legend], 1);
+}
+
+/** Every position in one row. */
+export function positions(record: FiguresRecord, widthMm: number, measure: Measure): Parted {
+  const { taps } = record.windings[0]!;
+  const ranged = taps.some(({ range }) => range !== null);
+  const heads: Head[] = [
+    [POSITIONS.tap, 8, { ...CENTRE, bold: true }],
+    [POSITIONS.turn, 15, RIGHT],
+    [POSITIONS.inductance, 17, RIGHT],
+    [POSITIONS.limits, 28, CENTRE],
+    [POSITIONS.dominant, 24, {}],
+    [POSITIONS.dc, 14, RIGHT],
+    ...(ranged
+      ? ([
+          [POSITIONS.low, 24, RIGHT],
+          [POSITIONS.high, 24, RIGHT],
+          [POSITIONS.second, 17, RIGHT],
+        ] as const)
+      : []),
+    [POSITIONS.q, 10, RIGHT],
+    [POSITIONS.at, 14, RIGHT],
+  ];
+  const groups = taps.map((tap) => {
+    const { range } = tap;
+    const seconds = [range?.secondLowKhz ?? null, range?.secondHighKhz ?? null].filter((one) => one !== null);
+    return [
+      [
+        `${tap.tap}`,
+        short(tap.turn, 3),
+        figures(tap.inductanceUh),
+        POSITIONS.between(figures(tap.inductanceLowUh), figures(tap.inductanceHighUh)),
+        tap.dominant,
+        figures(tap.resistanceDcOhm),
+        ...(ranged
+          ? [
+              range === null ? '' : POSITIONS.plusMinus(khz(range.lowKhz), half(range.lowUncertaintyKhz)),
+              range === null ? '' : POSITIONS.plusMinus(khz(range.highKhz), half(range.highUncertaintyKhz)),
+              seconds.length === 0 ? '' : khz(Math.min(...seconds)),
+            ]
+          : []),
+        fixed(tap.working.q, 0),
+        khz(tap.working.frequencyKhz),
+      ],
+    ];
+  });
+  return parted(POSITIONS, heads, groups, widthMm, measure);
+}
+
+/** Three rows a position with a range, one without. */
+export function ends(record: FiguresRecord, widthMm: number, measure: Measure): Parted {
+  const { taps } = record.windings[0]!;
+  const ranged = taps.some((tap) => tap.ends.length > 0);
+  const heads: Head[] = [
+    [ENDS.tap, 10, { ...CENTRE, bold: true }],
+    [ENDS.at, 20, {}],
+    [ENDS.kHz, 24, RIGHT],
+    [ENDS.inductance, 24, RIGHT],
+    [ENDS.resistance, 24, RIGHT],
+    [ENDS.q, 18, RIGHT],
+    [ENDS.bandwidth, 28, RIGHT],
+    [ENDS.parallel, 28, RIGHT],
+  ];
+  const groups = taps.map((tap) => {
+    if (tap.ends.length > 0)
+      return tap.ends.map((end, i) => [
+        i === 0 ? `${tap.tap}` : '',
+        end.at,
+        khz(end.frequencyKhz),
+        figures(end.inductanceUh),
+        figures(end.resistanceOhm),
+        fixed(end.q, 0),
+        figures(end.bandwidthKhz),
+        figures(end.parallelKohm),
+      ]);
+    const { frequencyKhz, inductanceUh, resistanceOhm, q } = tap.working;
+    const parallel = (q * 2e-3 * Math.PI * frequencyKhz * inductanceUh) / 1e3;
+    const cells = [khz(frequencyKhz), figures(inductanceUh), figures(resistanceOhm), fixed(q, 0)];
+    return [[`${tap.tap}`, '', ...cells, figures(frequencyKhz / q), figures(parallel)]];
+  });
+  const words = ranged ? ENDS : { heading: ENDS.alone, more: ENDS.alone };
+  return parted(words, heads, groups, widthMm, measure);
+}
+
+export const endsHow = (widthMm: number, measure: Measure): Block =>
+  paragraph(ENDS.how, widthMm, measure, { sizeMm: SMALL_MM });
+
+export function kinds(record: FiguresRecord, widthMm: number, measure: Measure): Parted | null {
+  const { switchKinds } = record;
+  const first = switchKinds[0];
+  if (first === undefined) return null;
+  const ranged = switchKinds.some(({ positions }) => positions.some((one) => one.lowKhz !== null));
+  const heads: Head[] = [
+    [KINDS.tap, 8, { ...CENTRE, bold: true }],
+    ...switchKinds.flatMap(({ kind, inUse }): Head[] => [
+      [KINDS.inductance(kind), 17, { ...RIGHT, bold: inUse }],
+      [KINDS.q, 10, { ...RIGHT, bold: inUse }],
+      ...(ranged ? ([[KINDS.range, 21, { ...CENTRE, bold: inUse }]] as const) : []),
+    ]),
+  ];
+  const range = ({ lowKhz, highKhz }: { lowKhz: number | null; highKhz: number | null }) =>
+    lowKhz === null || highKhz === null ? '' : `${fixed(lowKhz, 0)}–${fixed(highKhz, 0)}`;
+  const groups = first.positions.map(({ tap }, i) => [
+    [
+      `${tap}`,
+      ...switchKinds.flatMap(({ positions }) => {
+        const at = positions[i]!;
+        return [figures(at.inductanceUh), fixed(at.q, 0), ...(ranged ? [range(at)] : [])];
+      }),
+    ],
+  ]);
+  return parted(KINDS, heads, groups, widthMm, measure);
+}
+
+export function kindNotes(record: FiguresRecord, widthMm: number, measure: Measure): Block[] {
+  return record.switchKinds.map(({ kind, inUse, note }) =>
+    paragraph(
+      `${sentence(inUse ? KINDS.inUse(kind) : KINDS.other(kind)).replace(/:\.$/, ':')} ${note}`,
+      widthMm,
+      measure,
+      {
+        sizeMm: SMALL_MM,
+      },
+    ),
+  );
+}
+
+/** Coil, set and surroundings, and every default that was taken. */
+export function taken(record: FiguresRecord, widthMm: number, measure: Measure): Block[] {
+  const winding = record.windings[0]!;
+  const { set } = record.demand;
+  const { surroundings } = record;
+  const lines = [
+    TAKEN.coil(short(winding.turns, 3), short(winding.meanDiameterMm, 3), short(winding.windingLengthMm, 2)),
+    TAKEN.wire(winding.wire.name, short(winding.wire.bareMm, 4), short(winding.wire.overallMm, 4)),
+    set === null
+      ? TAKEN.noSet
+      : TAKEN.set(
+          short(set.capacitorLowPf, 2),
+          short(set.capacitorHighPf, 2),
+          short(set.strayPf, 2),
+          short(set.aerialPf, 2),
+        ),
+    TAKEN.leads(short(surroundings.leadPf, 2)),
+    TAKEN.rest(surroundings.rest, record.frame.earthedEnd),
+    TAKEN.copper(short(surroundings.celsius, 1)),
+    TAKEN.self(short(winding.selfCapacitancePf, 2)),
+    TAKEN.loss(surroundings.formerLoss),
+  ];
+  const assumed = Object.entries(record.assumed).map(([key, value]) => `${key}: ${String(value)}`);
+  const bullets = (items: readonly string[]) =>
+    list(
+      items.map((text) => ({ mark: '•', text })),
+      widthMm,
+      measure,
+    );
+  return [
+    heading(TAKEN.heading, widthMm, measure),
+    ...bullets(lines),
+    ...(assumed.length === 0
+      ? []
+      : [paragraph(`${TAKEN.assumed}: ${assumed.join('; ')}.`, widthMm, measure, { sizeMm: SMALL_MM })]),
+  ];
+}
+
+export function notes(record: FiguresRecord, widthMm: number, measure: Measure): Block[] {
+  if (record.warnings.length === 0) return [];
+  const items = list(
+    record.warnings.map(({ text }) => ({ mark: '•', text })),
+    widthMm,
+    measure,
+  );
+  return [heading(NOTES.heading, widthMm, measure), ...items];
+}
