@@ -56,6 +56,7 @@ describe('a job', () => {
     expect(job.assumed).toEqual({
       paper: 'A4',
       prefer: 'least loss',
+      temperature: '20 °C',
       'winding.hand': 'right',
       'winding.earthed': 'start',
       'winding.pitch': 'any',
@@ -77,7 +78,14 @@ describe('a job', () => {
   it('reads a wish by its purpose', () => {
     const job = readJob(BAND, 'job.yaml');
     expect(job.want).toEqual({ kind: 'band', lowKhz: 530, highKhz: 1700, overlap: 0.05, taps: null });
-    expect(job.set).toEqual({ capacitorLowPf: 15, capacitorHighPf: 380, strayPf: 12, aerialPf: 60, switch: 'open' });
+    expect(job.set).toEqual({
+      capacitorLowPf: 15,
+      capacitorHighPf: 380,
+      strayPf: 12,
+      aerialPf: 60,
+      switch: 'open',
+      leadPf: 2,
+    });
     expect([job.wires, job.former.diametersMm, job.former.longestMm]).toEqual([
       'stock',
       { lowMm: 50, highMm: 90 },
