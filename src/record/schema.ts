@@ -71,7 +71,7 @@ export const tapSchema = z.strictObject({
   range: z
     .strictObject({
       lowKhz: num,
-      lowUncertaintyKhz: num,
+      lowUncertaintyKhz: num.describe('from where the self-capacitance lies; the limits of the inductance come on top'),
       highKhz: num,
       highUncertaintyKhz: num,
       secondLowKhz: num.nullable().describe('second resonance with the capacitor in; the dead-end effect'),

@@ -70,7 +70,20 @@ export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, me
     if (ranged) cells.push(tap.range ? CHECKS.between(fixed(tap.range.lowKhz, 0), fixed(tap.range.highKhz, 0)) : '');
     return cells;
   });
-  return stack([heading(CHECKS.taps, widthMm, measure), table(columns, rows, measure, { rowMm })], 0);
+  const parts = [heading(CHECKS.taps, widthMm, measure), table(columns, rows, measure, { rowMm })];
+  const wide = paragraph(CHECKS.limits(dominants(record)), widthMm, measure, { sizeMm: SMALL_MM });
+  return stack([...parts, { ...wide, heightMm: wide.heightMm + 0.5 }], 0.8);
+}
+
+/** What makes the limits wide, with the taps where it does: `pitch (taps 1 to 3), former diameter (tap 4)`. */
+function dominants(record: CoilRecord): string {
+  const runs: { input: string; first: number; last: number }[] = [];
+  for (const { tap, dominant } of record.windings[0]!.taps) {
+    const last = runs[runs.length - 1];
+    if (last?.input === dominant) last.last = tap;
+    else runs.push({ input: dominant, first: tap, last: tap });
+  }
+  return runs.map(({ input, first, last }) => CHECKS.dominant(input, first, last)).join(', ');
 }
 
 export function corrections(record: CoilRecord, widthMm: number, measure: Measure): Block {

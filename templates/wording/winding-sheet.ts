@@ -90,6 +90,9 @@ export const CHECKS = {
   inductance: 'inductance µH',
   resistance: 'DC resistance Ω at 20 °C',
   range: 'tunes kHz',
+  limits: (inputs: string) => `Limits hold for 95 of 100 coils. What widens them most: ${inputs}.`,
+  dominant: (input: string, first: number, last: number) =>
+    first === last ? `${input} (tap ${first})` : `${input} (taps ${first} to ${last})`,
   between: (low: string, high: string) => `${low} – ${high}`,
   corrections: 'When it reads high or low',
   correctionsHow:
