@@ -1,10 +1,11 @@
 /**
  * Works the accuracy ledger out afresh and prints it as a table in Markdown; with --write it also puts errors and numbers of cases into
- * ledger.json. Bounds are changed by hand, or with --bounds to what is needed now (never more than
+ * ledger.json and the table into README. Bounds are changed by hand, or with --bounds to what is needed now (never more than
  * was asked for).
  */
 import { readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { build } from 'esbuild';
+import { ledgerTable, withTable } from './table.mjs';
 
 const here = new URL('.', import.meta.url);
 const data = new URL('ledger.json', here);
@@ -27,14 +28,7 @@ try {
     const bound = process.argv.includes('--bounds') ? needed : row.bound;
     return { ...row, cases: now.cases, error, bound };
   });
-  const shown = (value) => (value < 1e-3 ? value.toExponential() : `${Number((100 * value).toPrecision(3))} %`);
-  console.log('| what | against | status | cases | error now | bound |');
-  console.log('| --- | --- | --- | --: | --: | --: |');
-  for (const { what, kind, reference, status, cases: count, error, bound } of cases) {
-    const unit = kind === 'absolute' ? ' (absolute)' : '';
-    const cell = (value) => (kind === 'absolute' ? value.toExponential() : shown(value));
-    console.log(`| ${what}${unit} | ${reference} | ${status} | ${count} | ${cell(error)} | ${cell(bound)} |`);
-  }
+  console.log(ledgerTable(cases));
   for (const { id, error, bound } of cases) {
     if (canTighten(bound, error)) console.error(`${id}: the bound ${bound} can be tightened, the error is ${error}`);
     if (error > bound) {
@@ -44,6 +38,8 @@ try {
   }
   if (process.argv.includes('--write') || process.argv.includes('--bounds')) {
     writeFileSync(data, `${JSON.stringify(cases, null, 2)}\n`);
+    const readme = new URL('../../README.md', here);
+    writeFileSync(readme, withTable(readFileSync(readme, 'utf8'), cases));
   }
 } finally {
   rmSync(bundle);
