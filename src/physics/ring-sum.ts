@@ -1,6 +1,7 @@
 import { arcOwnShare } from './arc.ts';
 import { allPositive, needPositive } from './domain.ts';
 import { ringMutual, ringSelf } from './maxwell.ts';
+import { countTurns, placeAt, TURN_SLACK } from './turn-places.ts';
 
 /**
  * Low-frequency inductance L (H) of a winding as coaxial rings at the axial `positions` of their wire centres, in any order.
@@ -53,34 +54,29 @@ export function cumulativeInductance(
   turns = positions.length,
 ): CumulativeInductance {
   if (!allPositive(turns)) needPositive({ turns });
-  const nearest = Math.round(turns);
-  const whole = Math.abs(turns - nearest) < TURN_SLACK ? nearest : Math.floor(turns);
-  const count = whole < nearest || turns - whole > TURN_SLACK ? whole + 1 : whole;
+  const { whole, count } = countTurns(turns);
   if (positions.length !== count) {
     throw new RangeError(`${turns} turns need ${count} positions, got ${positions.length}`);
   }
   const prefix = prefixes(positions, whole, radius, wireRadius);
-  const node = (i: number) => (i < whole ? i + 0.5 : (whole + turns) / 2);
-  const place = (u: number) => {
-    if (count === 1) return positions[0]!;
-    const i = Math.min(Math.max(Math.floor(u - 0.5), 0), count - 2);
-    const before = positions[i]!;
-    return before + ((positions[i + 1]! - before) * (u - node(i))) / (node(i + 1) - node(i));
-  };
   return {
     at(turn) {
       if (!(turn >= 0 && turn <= turns + TURN_SLACK)) throw new RangeError(`turn ${turn} is not in [0, ${turns}]`);
       const complete = Math.min(Math.floor(turn + TURN_SLACK), whole);
       const part = turn - complete;
       if (part <= TURN_SLACK) return prefix[complete]!;
-      const arc = arcAfter(positions, complete, place(complete + part / 2), part, radius, wireRadius);
+      const arc = arcAfter(
+        positions,
+        complete,
+        placeAt(positions, turns, complete + part / 2),
+        part,
+        radius,
+        wireRadius,
+      );
       return prefix[complete]! + arc;
     },
   };
 }
-
-/** Turns nearer than this are the same: below it the arc has no length to speak of. */
-const TURN_SLACK = 1e-9;
 
 /** What an arc of `fraction` of a turn at `place` adds to the first `count` rings. */
 function arcAfter(

@@ -5,7 +5,7 @@ const SOURCE = new URL('../../src/physics/', import.meta.url);
 const EXAMPLE = /\* Example: (\w+)\(([^)]*)\)((?:\.\w+(?:\(\d+\))?)?) = (\S+)$/gm;
 const LAW = /\/\*\*((?:(?!\*\/)[\s\S])*)\*\/\s*export function (\w+)/g;
 /** Helpers that state no law of their own. */
-const NO_LAW = ['needPositive', 'allPositive', 'maxwellFactor', 'gaussLegendre'];
+const NO_LAW = ['needPositive', 'allPositive', 'countTurns', 'placeAt', 'maxwellFactor', 'gaussLegendre'];
 
 /** Half a unit of the last digit that the example writes. */
 function tolerance(written: string): number {

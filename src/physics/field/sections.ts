@@ -1,7 +1,7 @@
 import { arcOwnShare } from '../arc.ts';
 import { MU0 } from '../constants.ts';
 import { ringMutual, ringSelf } from '../maxwell.ts';
-import { placeAt, TURN_SLACK } from './places.ts';
+import { placeAt, TURN_SLACK } from '../turn-places.ts';
 import type { FieldTables } from './tables.ts';
 
 /** A stretch of a winding with one current, in turns from its start; either end may lie within a turn. */

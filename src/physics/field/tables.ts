@@ -2,8 +2,8 @@ import { MU0 } from '../constants.ts';
 import { allPositive, needPositive } from '../domain.ts';
 import { ellipticKE } from '../elliptic.ts';
 import { ringMutual } from '../maxwell.ts';
+import { countTurns, placeAt, TURN_SLACK } from '../turn-places.ts';
 import { fieldOrder } from './order.ts';
-import { countTurns, placeAt, TURN_SLACK } from './places.ts';
 
 /**
  * A quantity for every pair of turns, as rows of a band: that of turn j upon turn i is values[i * (stride - 1) + half + j], for

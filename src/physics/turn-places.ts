@@ -1,4 +1,4 @@
-/** Turns nearer than this are the same, as in the ring sum. */
+/** Turns nearer than this are the same. */
 export const TURN_SLACK = 1e-9;
 
 /** Whole turns of a winding, and the entries of its list of positions: one a turn, and one for a last part turn. */
@@ -9,9 +9,9 @@ export function countTurns(turns: number): { whole: number; count: number } {
 
 /**
  * Axial place of the wire at `u` turns from the start: straight lines between the middles of the turns, u = k + 1/2, and of the
- * last part turn; beyond the outermost middles the nearest line runs on. The same rule as `cumulativeInductance`.
+ * last part turn; beyond the outermost middles the nearest line runs on.
  */
-export function placeAt(positions: Float64Array, turns: number, u: number): number {
+export function placeAt(positions: ArrayLike<number>, turns: number, u: number): number {
   const { whole, count } = countTurns(turns);
   if (count === 1) return positions[0]!;
   const middle = (i: number) => (i < whole ? i + 0.5 : (whole + turns) / 2);
