@@ -53,6 +53,12 @@ function parser(terminal: Terminal, version: string): Argv {
       async (found) => (await import('./plan.ts')).plan(found, terminal, version),
     )
     .command(
+      VERBS.survey.written,
+      VERBS.survey.does,
+      async (one) => (await import('./survey.ts')).describeSurvey(one),
+      async (found) => (await import('./survey.ts')).survey(found, terminal, version),
+    )
+    .command(
       VERBS.stock.written,
       VERBS.stock.does,
       async (one) => (await import('./stock.ts')).describeStock(one),

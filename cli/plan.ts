@@ -1,11 +1,11 @@
 /** `plan`: reads a job, plans it, writes the output folder, says what came of it. */
 import { join, relative, resolve } from 'node:path';
 import type { Argv } from 'yargs';
-import { Fault } from '../src/fault.ts';
 import { slug } from '../src/job/name.ts';
 import { readJob } from '../src/job/read.ts';
 import { checkFolder, writeFolder } from '../src/output/transaction.ts';
 import type { planJob } from '../src/plan.ts';
+import { checkOut } from './check-out.ts';
 import { readJobText } from './read-job.ts';
 import { showPlan } from './show-plan.ts';
 import type { Terminal } from './terminal.ts';
@@ -56,17 +56,6 @@ export async function runPlan(
   const below = relative(terminal.folder, folder);
   const shown = below === '' ? '.' : below.startsWith('..') ? folder : below;
   terminal.out(showPlan(record, shown, files, terminal.columns));
-}
-
-function checkOut(out: string | undefined): void {
-  if (out !== '' && out !== '-') return;
-  throw new Fault(2, {
-    code: 'no-folder',
-    place: { key: '--out' },
-    got: out === '' ? 'nothing' : '-, which is standard output',
-    expected: 'a folder',
-    todo: out === '' ? 'name a folder, or leave the option out' : 'name a folder; --json prints the record besides',
-  });
 }
 
 /** With the real planner. */

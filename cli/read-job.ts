@@ -2,19 +2,20 @@
 import { open, readdir } from 'node:fs/promises';
 import { basename, dirname, join, resolve } from 'node:path';
 import { Fault } from '../src/fault.ts';
+import { type FileKind, JOB_FILE } from '../src/job/file-kind.ts';
 import { nearest } from '../src/job/nearest.ts';
 import { decode, LARGEST_BYTES } from '../src/job/tree.ts';
 import type { Terminal } from './terminal.ts';
 
-/** Text of the job. Throws a Fault with exit code 3. */
-export async function readJobText(file: string, terminal: Terminal): Promise<string> {
+/** Text of the job, or of what else the file is. Throws a Fault with exit code 3. */
+export async function readJobText(file: string, terminal: Terminal, kind: FileKind = JOB_FILE): Promise<string> {
   const bytes =
-    file === '-' ? await terminal.input(LARGEST_BYTES) : await readBytes(resolve(terminal.folder, file), file);
-  return decode(bytes, file);
+    file === '-' ? await terminal.input(LARGEST_BYTES) : await readBytes(resolve(terminal.folder, file), file, kind);
+  return decode(bytes, file, kind);
 }
 
 /** No more is read than says that the file is too large; a pipe or a device is read as a file is. */
-async function readBytes(path: string, file: string): Promise<Uint8Array> {
+async function readBytes(path: string, file: string, kind: FileKind): Promise<Uint8Array> {
   try {
     const handle = await open(path, 'r');
     try {
@@ -29,14 +30,14 @@ async function readBytes(path: string, file: string): Promise<Uint8Array> {
       await handle.close();
     }
   } catch (error) {
-    throw await asFault(error, path, file);
+    throw await asFault(error, path, file, kind);
   }
 }
 
-async function asFault(error: unknown, path: string, file: string): Promise<unknown> {
+async function asFault(error: unknown, path: string, file: string, kind: FileKind): Promise<unknown> {
   if (!(error instanceof Error) || !('code' in error)) return error;
   const fault = (code: string, got: string, todo: string) =>
-    new Fault(3, { code, place: { file }, got, expected: 'a job file in YAML or JSON', todo });
+    new Fault(3, { code, place: { file }, got, expected: `${kind.file} in YAML or JSON`, todo });
   switch (error.code) {
     case 'ENOENT':
     case 'ENOTDIR': {
@@ -49,11 +50,11 @@ async function asFault(error: unknown, path: string, file: string): Promise<unkn
       return fault(
         'no-such-file',
         'no file of this name',
-        meant ?? 'check the path; "coilwright start" writes a job to begin with',
+        meant ?? `check the path; "${kind.begin}" writes ${kind.noun} to begin with`,
       );
     }
     case 'EISDIR':
-      return fault('is-a-folder', 'a folder', 'name the job file in it');
+      return fault('is-a-folder', 'a folder', kind === JOB_FILE ? 'name the job file in it' : 'name the file in it');
     case 'EACCES':
     case 'EPERM':
       return fault('not-readable', 'a file that may not be read', 'change its permissions');

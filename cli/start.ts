@@ -5,22 +5,26 @@ import type { Argv } from 'yargs';
 import { Fault } from '../src/fault.ts';
 import { nearest } from '../src/job/nearest.ts';
 import { outputFault } from '../src/output/faults.ts';
+import { COILS } from '../templates/coils/coils.ts';
 import { STARTERS, type Starter } from '../templates/jobs/starters.ts';
 import type { Terminal } from './terminal.ts';
 
+const ALL: readonly Starter[] = [...STARTERS, ...COILS];
+const isCoil = (starter: Starter): boolean => COILS.includes(starter);
+
 export function describeStart(yargs: Argv) {
   return yargs
-    .positional('name', { type: 'string', describe: `starter job; ${STARTERS[0].name} when left out` })
+    .positional('name', { type: 'string', describe: `starter job or coil file; ${STARTERS[0].name} when left out` })
     .option('out', {
       type: 'string',
       requiresArg: true,
       describe: 'file to write, - for standard output; <name>.yaml when left out',
     })
-    .option('list', { type: 'boolean', default: false, describe: 'list the starter jobs' })
+    .option('list', { type: 'boolean', default: false, describe: 'list the starters' })
     .option('schema', {
       type: 'boolean',
       default: false,
-      describe: 'write job.schema.json, for editors, instead of a job',
+      describe: 'write the schema of the file instead, for editors: job.schema.json, or coil.schema.json',
     })
     .example('$0 start', `writes ${STARTERS[0].name}.yaml`)
     .example('$0 start forty-coil-lot --out lot.yaml', 'writes that starter as lot.yaml');
@@ -37,8 +41,8 @@ export interface StartOptions {
 export async function runStart(options: StartOptions, terminal: Terminal): Promise<void> {
   if (options.list) {
     if (options.out !== undefined || options.schema || options.name !== undefined) throw listAlone();
-    const width = Math.max(...STARTERS.map(({ name }) => name.length)) + 2;
-    for (const { name, use } of STARTERS) terminal.out(`${name.padEnd(width)}${use}\n`);
+    const width = Math.max(...ALL.map(({ name }) => name.length)) + 2;
+    for (const { name, use } of ALL) terminal.out(`${name.padEnd(width)}${use}\n`);
     return;
   }
   const { name, text, next } = options.schema ? await schemaFile(options.name) : jobFile(options);
@@ -74,11 +78,19 @@ function jobFile({ name }: StartOptions): NewFile {
   return {
     name: `${starter.name}.yaml`,
     text: starter.text,
-    next: (shown) => `edit it, then: coilwright plan ${shown}`,
+    next: (shown) => `edit it, then: coilwright ${isCoil(starter) ? 'survey' : 'plan'} ${shown}`,
   };
 }
 
 async function schemaFile(starter: string | undefined): Promise<NewFile> {
+  if (starter !== undefined && isCoil(find(starter))) {
+    const { coilJsonSchema } = await import('../src/job/coil/json-schema.ts');
+    return {
+      name: 'coil.schema.json',
+      text: `${JSON.stringify(coilJsonSchema(), null, 2)}\n`,
+      next: (shown) => `name it in a coil file: $schema: ./${shown}`,
+    };
+  }
   if (starter !== undefined) {
     throw new Fault(2, {
       code: 'schema-of-starter',
@@ -98,8 +110,8 @@ async function schemaFile(starter: string | undefined): Promise<NewFile> {
 
 function find(name: string | undefined): Starter {
   if (name === undefined) return STARTERS[0];
-  const names = STARTERS.map((starter) => starter.name);
-  const found = STARTERS.find((starter) => starter.name === name.replace(/\.ya?ml$/, ''));
+  const names = ALL.map((starter) => starter.name);
+  const found = ALL.find((starter) => starter.name === name.replace(/\.ya?ml$/, ''));
   if (found !== undefined) return found;
   const near = nearest(name, names);
   throw new Fault(2, {

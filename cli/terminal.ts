@@ -5,6 +5,8 @@ export interface Terminal {
   readonly err: (text: string) => void;
   /** Width of the page in characters. */
   readonly columns: number;
+  /** It shows signs of ASCII alone. */
+  readonly plain?: boolean;
   /** Standard input, at most `most` bytes and one more. */
   readonly input: (most: number) => Promise<Uint8Array>;
   readonly folder: string;
@@ -19,9 +21,18 @@ export function systemTerminal(): Terminal {
     out: (text) => void process.stdout.write(text),
     err: (text) => void process.stderr.write(text),
     columns: Math.min(WIDTH.most, Math.max(WIDTH.least, columns)),
+    plain: isPlain(process.env, process.platform),
     input: readInput,
     folder: process.cwd(),
   };
+}
+
+/** A dumb terminal, or a locale that is not UTF-8; the standard locale of POSIX, taken when none is named, is not. */
+export function isPlain(env: Readonly<Record<string, string | undefined>>, platform: string): boolean {
+  if (env.TERM === 'dumb') return true;
+  const locale = [env.LC_ALL, env.LC_CTYPE, env.LANG].find((one) => one !== undefined && one !== '');
+  if (locale === undefined) return platform !== 'win32' && platform !== 'darwin';
+  return !/utf-?8/i.test(locale);
 }
 
 async function readInput(most: number): Promise<Uint8Array> {

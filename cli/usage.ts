@@ -1,5 +1,6 @@
 /** Wrong use of the command line: from what the parser says to a fault with exit code 2. */
 import { Fault, type FaultParts } from '../src/fault.ts';
+import { COIL_FILE, JOB_FILE } from '../src/job/file-kind.ts';
 import { nearest } from '../src/job/nearest.ts';
 import { WrongUse } from './command-line.ts';
 import { COMMON_OPTIONS, isVerb, VERB_NAMES, VERBS, type Verb } from './verbs.ts';
@@ -22,16 +23,20 @@ function parts(message: string, given: readonly string[]): readonly FaultParts[]
     ];
   }
   if (message.startsWith('Not enough non-option arguments')) {
-    return [
-      {
-        code: 'no-job',
-        got: 'plan without a job',
-        expected: 'coilwright plan JOB, a file in YAML or JSON, or - for standard input',
-        todo: 'name the job file; "coilwright start" writes one to begin with',
-      },
-    ];
+    return [noFile(verb)];
   }
   return [{ code: 'usage', got: message.toLowerCase(), expected: `options of ${verb} that go together`, todo: help }];
+}
+
+function noFile(verb: Verb): FaultParts {
+  const { noun, begin } = verb === 'survey' ? COIL_FILE : JOB_FILE;
+  const word = verb === 'survey' ? 'coil' : 'job';
+  return {
+    code: `no-${word}`,
+    got: `${verb} without ${noun}`,
+    expected: `coilwright ${verb} ${word.toUpperCase()}, a file in YAML or JSON, or - for standard input`,
+    todo: `name the ${word} file; "${begin}" writes one to begin with`,
+  };
 }
 
 function wrongVerb(word: string | undefined): FaultParts {

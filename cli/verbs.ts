@@ -1,10 +1,19 @@
 /** The verbs: how each is written, what it does, its options. Help, the parser and the hints all read this. */
 
 export const VERBS = {
-  start: { written: 'start [name]', does: 'write a commented job to begin with', options: ['out', 'list', 'schema'] },
+  start: {
+    written: 'start [name]',
+    does: 'write a commented job or coil file to begin with',
+    options: ['out', 'list', 'schema'],
+  },
   plan: {
     written: 'plan <job>',
     does: 'choose the coil for a job; write sheet, template, former and record',
+    options: ['out', 'json'],
+  },
+  survey: {
+    written: 'survey <coil>',
+    does: 'work out the figures of a coil from its measured dimensions: inductance, loss, range of every tap',
     options: ['out', 'json'],
   },
   stock: {

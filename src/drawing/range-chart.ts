@@ -39,14 +39,20 @@ export function chartHeight(chart: RangeChart, rowMm: number): number {
   return FOOT_MM + HEAD_MM + (chart.band === null ? 0 : BAND_MM) + chart.positions.length * rowMm + 2;
 }
 
+/** The second resonance from capacitor in to out, when there is one. */
+function secondsOf({ secondLowKhz, secondHighKhz }: ChartPosition): [number, number][] {
+  const both = [secondLowKhz, secondHighKhz].filter((kHz) => kHz !== null);
+  return both.length === 0 ? [] : [[Math.min(...both), Math.max(...both)]];
+}
+
 /** Ends of the axis: all ranges and the band, and second resonances up to an octave above them. */
 export function axisOf({ positions, band }: RangeChart, lengthMm: number): LogAxis {
   const lows = positions.map((one) => one.lowKhz - one.lowUncertaintyKhz);
   const highs = positions.map((one) => one.highKhz + one.highUncertaintyKhz);
   const low = Math.min(...lows, band?.lowKhz ?? Number.POSITIVE_INFINITY);
   const high = Math.max(...highs, band?.highKhz ?? 0);
-  const seconds = positions.map((one) => one.secondHighKhz ?? 0).filter((kHz) => kHz > high);
-  const reach = Math.min(2 * high, Math.max(high, ...seconds));
+  const seconds = positions.flatMap(secondsOf).filter(([from]) => from < 1.9 * high);
+  const reach = Math.min(2 * high, Math.max(high, ...seconds.map(([, to]) => to)));
   return { low: low / 1.08, high: reach * 1.08, lengthMm };
 }
 
@@ -81,14 +87,10 @@ function bar(axis: LogAxis, positions: readonly ChartPosition[], index: number, 
     shapes.push(line(from, y, to, y, 'thin'));
     for (const x of [from, to]) shapes.push(line(x, y - tall, x, y + tall, 'thin'));
   }
-  const seconds = [own.secondLowKhz, own.secondHighKhz].filter((kHz) => kHz !== null);
-  if (seconds.length > 0) {
-    const from = Math.min(...seconds);
-    const to = Math.min(Math.max(...seconds), axis.high);
-    if (from < axis.high) {
-      const width = Math.max(0.4, at(to) - at(from));
-      shapes.push(rectangle(at(from), y - barMm / 2, width, barMm, 'hair', undefined, 'dashed'));
-    }
+  for (const [from, upTo] of secondsOf(own)) {
+    if (from >= axis.high) continue;
+    const width = Math.max(0.4, at(Math.min(upTo, axis.high)) - at(from));
+    shapes.push(rectangle(at(from), y - barMm / 2, width, barMm, 'hair', undefined, 'dashed'));
   }
   return shapes;
 }
@@ -162,8 +164,8 @@ export function drawRangeChart(chart: RangeChart, widthMm: number, rowMm: number
       return;
     }
     const [from, to] = [at(next.highKhz), at(own.lowKhz)];
-    shapes.push(line(from, between - rowMm / 2, from, between + rowMm / 2, 'thin', 'dashed'));
-    shapes.push(line(to, between - rowMm / 2, to, between + rowMm / 2, 'thin', 'dashed'));
+    const tick = rowMm * 0.17;
+    for (const x of [from, to]) shapes.push(line(x, between - tick, x, between + tick, 'thin'));
     shapes.push(line(from, between, to, between, 'outline'));
     shapes.push(label(right + 3, between, CHART.gap((-reach).toFixed(1)), { anchor: 'middle', bold: true }));
   });

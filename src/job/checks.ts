@@ -17,7 +17,7 @@ export interface Finding {
 export type Readable = Partial<ReadJob>;
 
 export function crossCheck(job: Readable): readonly Finding[] {
-  return [...checkWant(job), ...checkFormer(job), ...checkWinding(job), ...checkPrinter(job)];
+  return [...checkWant(job), ...checkFormer(job), ...checkWinding(job), ...checkUnits(job), ...checkPrinter(job)];
 }
 
 type Want = ReadJob['want'];
@@ -280,6 +280,34 @@ function checkWinding({ winding }: Readable): Finding[] {
       'spacers for a winding with pitch: close',
       'spacers for a spaced winding only',
       'remove spacers, or take pitch: spaced',
+    ),
+  ];
+}
+
+/** Two switches set every whole number of turns, so the wish is a range, whose upper end is the whole coil. */
+function checkUnits({ want, winding }: Readable): Finding[] {
+  if (winding?.units === undefined || want === undefined) return [];
+  const switches = `two switches (winding.units: ${winding.units})`;
+  if (want.spacing !== undefined) {
+    return [
+      finding(
+        'spacing-with-units',
+        ['want', 'spacing'],
+        `a spacing for ${switches}`,
+        `a tens contact every ${winding.units} turns, which two switches have by themselves`,
+        'remove spacing, or remove winding.units',
+      ),
+    ];
+  }
+  const kind = want.band === undefined ? 'a list of inductances' : 'a band';
+  if (want.band === undefined && (want.inductance === undefined || !('list' in want.inductance))) return [];
+  return [
+    finding(
+      'units-without-range',
+      ['winding', 'units'],
+      `${switches} for ${kind}`,
+      'an inductance range, whose upper end is the whole coil',
+      'write want.inductance: 5 uH to 240 uH and want.taps, or remove units',
     ),
   ];
 }

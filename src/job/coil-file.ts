@@ -21,7 +21,8 @@ import { frequencyFault, tapsOf } from './coil/taps.ts';
 import { groupWire, namedWire } from './coil/wire.ts';
 import { type Assumed, isData } from './defaults.ts';
 import { faultsOf, keyText } from './faults.ts';
-import { COIL_FILE, readTree } from './tree.ts';
+import { COIL_FILE } from './file-kind.ts';
+import { readTree } from './tree.ts';
 
 /** Reads a measured coil, YAML or JSON. Throws a {@link Fault} with exit code 3. `file` is for messages and for a name. */
 export function readCoilFile(text: string, file: string): CoilFile {
@@ -84,7 +85,13 @@ function measure(coil: ReadCoil, bareSpread: number, bareSpreadAssumed: boolean)
   const diameters = diametersOf(coil, wire.overallMm);
   const winding = windingOf(coil, wire);
   const faults: Finding[] = 'code' in diameters ? [diameters] : [];
-  if (!('sections' in winding)) return { faults: [...faults, ...winding] };
+  if (!('sections' in winding)) {
+    // Taps counted in turns can be judged all the same.
+    const { turns, taps = [] } = coil;
+    const even = turns === undefined ? [] : [{ turns, pitchMm: wire.overallMm, gapAfterMm: 0 }];
+    const judged = even.length === 0 || taps.length === 0 ? [] : tapsOf(coil, even, wire.overallMm);
+    return { faults: [...faults, ...winding, ...judged.filter((tap) => typeof tap !== 'number')] };
+  }
   const taps = tapsOf(coil, winding.sections, wire.overallMm);
   const tapFaults = taps.filter((tap) => typeof tap !== 'number');
   if ('code' in diameters || tapFaults.length > 0) return { faults: [...faults, ...tapFaults] };

@@ -64,7 +64,7 @@ function dependent(data: Data): Record<string, string | boolean | undefined> {
   const range = isData(data.want) && data.want.inductance !== undefined && !Array.isArray(data.want.inductance);
   return {
     'want.overlap': band ? (at(data, 'want', 'taps') === undefined ? '5 %' : '0 %') : undefined,
-    'want.spacing': range && !band ? 'even ratio' : undefined,
+    'want.spacing': range && !band && at(data, 'winding', 'units') === undefined ? 'even ratio' : undefined,
     'former.outside-diameter': printed ? '50 mm to 90 mm' : undefined,
     'former.longest': printed ? String(at(data, 'printer', 'height') ?? DEFAULTS['printer.height']) : '200 mm',
     'former.wall': printed ? undefined : '1.5 mm',

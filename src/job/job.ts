@@ -63,6 +63,8 @@ export interface JobWinding {
   readonly spacers: readonly number[] | null;
   readonly tapMethod: TapMethod;
   readonly tapLayout: TapLayout;
+  /** Contacts of the units switch of a two-switch coil, the start among them; null: one switch. */
+  readonly units: number | null;
   readonly finishTrim: boolean;
 }
 

@@ -59,7 +59,7 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
     name: read.job,
     date: read.date ?? null,
     paper: read.paper,
-    want: toWant(read.want),
+    want: toWant(read.want, read.winding.units !== undefined),
     set:
       read.set === undefined
         ? null
@@ -88,6 +88,7 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
       spacers: winding.spacers === undefined ? null : ascending(winding.spacers),
       tapMethod: winding['tap-method'],
       tapLayout: winding['tap-layout'],
+      units: winding.units ?? null,
       finishTrim: winding['finish-trim'],
     },
     prefer: read.prefer,
@@ -108,7 +109,7 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
   };
 }
 
-function toWant(want: ReadJob['want']): Want {
+function toWant(want: ReadJob['want'], twoSwitches: boolean): Want {
   if (want.band !== undefined) {
     return {
       kind: 'band',
@@ -123,7 +124,8 @@ function toWant(want: ReadJob['want']): Want {
     return { kind: 'list', inductancesUh: want.inductance?.list ?? [] };
   }
   const { low, high } = want.inductance;
-  return { kind: 'range', lowUh: low, highUh: high, taps: want.taps ?? 2, spacing: want.spacing ?? 'even ratio' };
+  const spacing = want.spacing ?? (twoSwitches ? 'even turns' : 'even ratio');
+  return { kind: 'range', lowUh: low, highUh: high, taps: want.taps ?? 2, spacing };
 }
 
 function toDiameters(values: Values): Diameters {

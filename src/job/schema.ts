@@ -31,6 +31,8 @@ export const TAP_LAYOUTS = ['auto', 'in line', 'staggered'] as const;
 export const PREFERENCES = ['least loss', 'compact', 'least wire', 'closest taps'] as const;
 /** Most switch positions of one coil. */
 export const MOST_TAPS = 60;
+/** Most contacts of a units switch. */
+export const MOST_UNITS = 20;
 
 const wantSchema = z
   .strictObject({
@@ -124,6 +126,11 @@ const windingSchema = z
     ).optional(),
     'tap-method': choice(TAP_METHODS, 'How taps are made; auto goes by covering and pitch.'),
     'tap-layout': choice(TAP_LAYOUTS, 'Taps in one line are whole turns; staggered ones may be fractions of a turn.'),
+    units: count(
+      2,
+      MOST_UNITS,
+      'Two switches: contacts of the units switch, a turn apart from the start on; want.taps are then the tens, so many turns apart.',
+    ).optional(),
     'finish-trim': flag('Spare finish holes for a turn more or less.'),
   })
   .describe('How it is wound.');

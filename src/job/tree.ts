@@ -5,6 +5,7 @@
 import { isAlias, isMap, isPair, isSeq, LineCounter, type Node, parseAllDocuments, visit, type YAMLError } from 'yaml';
 import { Fault, type FaultParts } from '../fault.ts';
 import { quote } from '../quantity/parse.ts';
+import { type FileKind, JOB_FILE } from './file-kind.ts';
 
 export type Path = readonly (string | number)[];
 
@@ -14,27 +15,6 @@ export interface Tree {
   /** Line of the key or list entry at the path; of the nearest enclosing one when the path itself is not there. */
   readonly lineOf: (path: Path) => number | undefined;
 }
-
-/** What a file is, for messages. */
-export interface FileKind {
-  /** `a job`. */
-  readonly noun: string;
-  /** What it must have. */
-  readonly least: string;
-  /** How to come by one. */
-  readonly begin: string;
-}
-
-export const JOB_FILE: FileKind = {
-  noun: 'a job',
-  least: 'at least the keys job and want',
-  begin: 'coilwright start',
-};
-export const COIL_FILE: FileKind = {
-  noun: 'a measured coil',
-  least: 'at least the key coil',
-  begin: 'coilwright start found-coil',
-};
 
 /** 1 MB: a job is a page. */
 export const LARGEST_BYTES = 1_000_000;

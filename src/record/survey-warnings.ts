@@ -82,11 +82,14 @@ export function surveyWarnings(file: CoilFile, coil: Coil, working: WorkingCoil,
         `The positions tune ${frequencyText(reach.low)} to ${frequencyText(reach.high)}; the band is ${frequencyText(band.lowKhz)} to ${frequencyText(band.highKhz)}.`,
       );
   }
-  for (const gap of figures.coverage?.gaps ?? [])
-    add(
-      'gap-between-positions',
-      `Nothing tunes ${frequencyText(gap.lowKhz)} to ${frequencyText(gap.highKhz)}, between positions ${gap.from} and ${gap.to}; ${gap.tapsToClose} more ${gap.tapsToClose === 1 ? 'tap' : 'taps'} between them would close that.`,
+  const gaps = figures.coverage?.gaps ?? [];
+  if (gaps.length > 0) {
+    const each = gaps.map(
+      ({ from, to, lowKhz, highKhz, tapsToClose }) =>
+        `${frequencyText(lowKhz)} to ${frequencyText(highKhz)} between positions ${from} and ${to} (${tapsToClose} more ${tapsToClose === 1 ? 'tap closes' : 'taps close'} that)`,
     );
+    add('gap-between-positions', `Nothing tunes ${each.join(', ')}.`);
+  }
   const dead = figures.coverage?.deadEnds ?? [];
   if (dead.length > 0)
     add(

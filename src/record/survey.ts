@@ -169,7 +169,7 @@ export function makeSurveyRecord(
     demand: demandOf(file),
     surroundings: {
       ...figures.surroundings,
-      ...(conditions.lossTangent === 0 ? { formerLoss: 'none: the former is taken as without loss' } : {}),
+      ...(conditions.lossTangent === 0 ? { formerLoss: 'none, the former is taken as without loss' } : {}),
     },
     spread: spreadOfSurvey(file),
     coverage: figures.coverage,

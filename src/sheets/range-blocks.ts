@@ -3,6 +3,7 @@ import { CHART, ENDS, KINDS, NOTES, POSITIONS, TAKEN } from '../../templates/wor
 import type { Measure } from '../drawing/boxes.ts';
 import { chartHeight, drawRangeChart, type RangeChart, ROW_MM } from '../drawing/range-chart.ts';
 import { moved, SMALL_MM } from '../drawing/shapes.ts';
+import { significantText } from '../quantity/format.ts';
 import type { FiguresRecord } from '../record/survey-schema.ts';
 import { type Block, heading, list, paragraph, stack } from './block.ts';
 import { type Column, shares, table } from './table.ts';
@@ -47,6 +48,8 @@ function parted(
 }
 
 const khz = (value: number) => fixed(value, value >= 1000 ? 0 : 1);
+/** Three figures. */
+const three = (value: number) => (value >= 100 ? fixed(value, 0) : significantText(value, 3));
 const half = (value: number) => `${Number(value.toPrecision(2))}`;
 
 export function chartOf(record: FiguresRecord): RangeChart | null {
@@ -141,13 +144,13 @@ export function ends(record: FiguresRecord, widthMm: number, measure: Measure): 
         figures(end.inductanceUh),
         figures(end.resistanceOhm),
         fixed(end.q, 0),
-        figures(end.bandwidthKhz),
-        figures(end.parallelKohm),
+        three(end.bandwidthKhz),
+        three(end.parallelKohm),
       ]);
     const { frequencyKhz, inductanceUh, resistanceOhm, q } = tap.working;
     const parallel = (q * 2e-3 * Math.PI * frequencyKhz * inductanceUh) / 1e3;
     const cells = [khz(frequencyKhz), figures(inductanceUh), figures(resistanceOhm), fixed(q, 0)];
-    return [[`${tap.tap}`, '', ...cells, figures(frequencyKhz / q), figures(parallel)]];
+    return [[`${tap.tap}`, '', ...cells, three(frequencyKhz / q), three(parallel)]];
   });
   const words = ranged ? ENDS : { heading: ENDS.alone, more: ENDS.alone };
   return parted(words, heads, groups, widthMm, measure);

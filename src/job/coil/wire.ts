@@ -123,13 +123,13 @@ export function groupWire(group: WireGroup, bareSpread: number): MeasuredWire {
   const name = like?.covering ?? supposed;
   if (covering === undefined)
     inferred['coil.wire.covering'] =
-      bare === undefined || overall === undefined || !like ? name : `${name}, the nearest in stock by its thickness`;
+      bare === undefined || overall === undefined || !like ? name : `${name}, by its thickness`;
   const half = (overallMm - bareMm) * 0.1 + 0.005;
   return {
     ok: true,
     inferred,
     wire: {
-      name: `${lengthText(bareMm, 3)} bare, ${lengthText(overallMm, 3)} overall`,
+      name: `${lengthText(bareMm, 3)} ${name}, as measured`,
       covering: name,
       bareMm,
       bareLowMm: bareMm * (1 - bareSpread),
