@@ -67,12 +67,15 @@ export function atFrequency(
   return { ...copper, resistanceOhm, q, bandwidthKhz: kHz / q, parallelKohm: (q * reactance) / 1e3 };
 }
 
-/** Range of a position; current crowding is taken at each end once. */
+/** One end of a range, with this much of the set's capacitance across the turns from..turn; crowding is taken once. */
+export function endOf(coil: WorkingCoil, turn: number, pf: number, rest: Rest, from = 0): Tuned {
+  const first = coil.tuned(turn, pf, rest, 1, from);
+  return coil.tuned(turn, pf, rest, coil.crowding(turn, first.kHz, from), from);
+}
+
+/** Range of a position. */
 export function spanOf(coil: WorkingCoil, turn: number, tuning: Tuning, rest: Rest): Span {
-  const end = (pf: number): Tuned => {
-    const first = coil.tuned(turn, pf, rest);
-    return coil.tuned(turn, pf, rest, coil.crowding(turn, first.kHz));
-  };
+  const end = (pf: number) => endOf(coil, turn, pf, rest);
   return { low: end(tuning.inPf), high: end(tuning.outPf) };
 }
 

@@ -56,14 +56,17 @@ export class WorkingCoil {
   /** Turns of the switch positions, the whole coil last. */
   readonly taps: readonly number[];
   readonly around: Surroundings;
+  /** Turns of the taps of a units switch, which picks one of them or the start as the beginning; empty for one switch. */
+  readonly unitTaps: readonly number[];
   #tables: FieldTables | null = null;
   #winding: CoupledWinding | null = null;
   readonly #solved = new Map<string, SectionImpedance>();
 
-  constructor(coil: Coil, taps: readonly number[], around: Surroundings) {
+  constructor(coil: Coil, taps: readonly number[], around: Surroundings, unitTaps: readonly number[] = []) {
     this.coil = coil;
     this.taps = taps;
     this.around = around;
+    this.unitTaps = unitTaps;
   }
 
   get #geometry(): FieldTables {
@@ -75,7 +78,7 @@ export class WorkingCoil {
 
   get #circuit(): CoupledWinding {
     if (this.#winding === null) {
-      const nodes = nodesFor(this.coil.turns, this.taps.slice(0, -1));
+      const nodes = nodesFor(this.coil.turns, [...this.unitTaps, ...this.taps.slice(0, -1)]);
       const sections = nodes.slice(1).map((to, i) => ({ from: nodes[i]!, to }));
       this.#winding = coupledWinding(nodes, sectionInductances(this.#geometry, sections));
     }
@@ -111,45 +114,63 @@ export class WorkingCoil {
     return solved;
   }
 
-  /** Resistance and inductance at the ends of the turns 0..turn in use, the rest as the switch leaves it. */
-  terminal(turn: number, kHz: number, rest: Rest): Terminal {
+  /** Low-frequency inductance of the turns from..to, uH. */
+  inductanceUh(from: number, to: number): number {
+    return from === 0 ? this.coil.inductanceUh(to) : sectionInductances(this.#geometry, [{ from, to }])[0]! * 1e6;
+  }
+
+  /** Resistance and inductance at the ends of the turns from..turn in use, the rest as the switch leaves it. */
+  terminal(turn: number, kHz: number, rest: Rest, from = 0): Terminal {
+    const before = this.unitTaps.filter((tap) => tap <= from - 1e-6);
     const later = this.taps.filter((tap) => tap >= turn - 1e-6 && tap < this.coil.turns - 1e-6);
-    const solved = this.sections(kHz, rest === 'shorted in sections' ? later : [turn]);
-    const { resistance, inductance, q } = terminalImpedance(solved, { from: 0, to: 1 }, rest);
+    const begin = from > 0 ? [from] : [];
+    const solved = this.sections(
+      kHz,
+      rest === 'shorted in sections' ? [...before, ...begin, ...later] : [...begin, turn],
+    );
+    const used = solved.sections.findIndex((section) => Math.abs(section.from - from) < 1e-6);
+    const { resistance, inductance, q } = terminalImpedance(solved, { from: used, to: used + 1 }, rest);
     return { kHz, inductanceUh: inductance * 1e6, resistanceOhm: resistance, q };
   }
 
   /** What crowding of the current takes off the inductance at this frequency: low-frequency over working inductance, 1 or more. */
-  crowding(turn: number, kHz: number): number {
-    return this.coil.inductanceUh(turn) / this.terminal(turn, kHz, 'open').inductanceUh;
+  crowding(turn: number, kHz: number, from = 0): number {
+    return this.inductanceUh(from, turn) / this.terminal(turn, kHz, 'open', from).inductanceUh;
   }
 
   /**
-   * The winding between nodes, low-frequency inductances, and what hangs on it with the turns 0..turn in use and this much
-   * capacitance across them.
+   * The winding between nodes, low-frequency inductances, and what hangs on it with the turns from..turn in use and this much
+   * capacitance across them. Every contact has its lead; at the start there is one only when a second switch goes there.
    */
-  circuit(turn: number, pf: number, rest: Rest): { winding: CoupledWinding; on: Omit<TunedCircuit, 'distribution'> } {
+  circuit(
+    turn: number,
+    pf: number,
+    rest: Rest,
+    from = 0,
+  ): { winding: CoupledWinding; on: Omit<TunedCircuit, 'distribution'> } {
     const { leadPf, earthed } = this.around;
+    const units = this.unitTaps.length > 0 ? [0, ...this.unitTaps] : [];
+    const contacts = [...units, ...this.taps];
     const on = {
-      from: 0,
+      from,
       to: turn,
       earthed: earthed === 'start' ? ('from' as const) : ('to' as const),
       rest,
-      taps: this.taps,
+      taps: contacts,
       selfCapacitance: this.coil.selfPf(this.coil.turns) * 1e-12,
       tuning: pf * 1e-12,
-      strays: leadPf > 0 ? this.taps.map((tap) => ({ turn: tap, capacitance: leadPf * 1e-12 })) : [],
+      strays: leadPf > 0 ? contacts.map((tap) => ({ turn: tap, capacitance: leadPf * 1e-12 })) : [],
     };
     return { winding: this.#circuit, on };
   }
 
   /**
-   * First and second resonance of the turns 0..turn with this much capacitance across them, besides the coil's own and the
+   * First and second resonance of the turns from..turn with this much capacitance across them, besides the coil's own and the
    * leads'. The circuit has low-frequency inductances; `crowding` (1 = none) raises what comes out by its square root, which
    * holds as long as all inductances shrink by the same share.
    */
-  tuned(turn: number, pf: number, rest: Rest, crowding = 1): Tuned {
-    const { winding, on } = this.circuit(turn, pf, rest);
+  tuned(turn: number, pf: number, rest: Rest, crowding = 1, from = 0): Tuned {
+    const { winding, on } = this.circuit(turn, pf, rest, from);
     const found = resonanceBracket(winding, on);
     const scale = Math.sqrt(crowding) / 1e3;
     return {

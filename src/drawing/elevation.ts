@@ -49,17 +49,24 @@ function halfWidth(record: CoilRecord): number {
   return Math.max(...reach);
 }
 
+/** Taps named beside the drawing, at most: more would make the column higher than a page. */
+const MOST_NAMED = 40;
+
 /** The column of distances: what is named and where it lies. */
 function ordinateItems(record: CoilRecord, words: ElevationWords): { name: string; z: number; value: string }[] {
   const winding = record.windings[0]!;
   const last = winding.taps.length;
+  // Of very many taps every second or third is named beside the drawing; the tap table has them all.
+  const keep = Math.ceil(last / MOST_NAMED);
   const items = [
     { name: words.datum, z: 0 },
     { name: words.start, z: winding.startMm },
-    ...winding.taps.map(({ tap, positionMm }) => ({
-      name: tap === last ? `${words.finish}, ${words.tap} ${tap}` : `${words.tap} ${tap}`,
-      z: positionMm,
-    })),
+    ...winding.taps
+      .filter(({ tap }) => (last - tap) % keep === 0)
+      .map(({ tap, positionMm }) => ({
+        name: tap === last ? `${words.finish}, ${words.tap} ${tap}` : `${words.tap} ${tap}`,
+        z: positionMm,
+      })),
     { name: words.top, z: record.former.lengthMm },
   ];
   return items.map((item) => ({ ...item, value: item.z.toFixed(2) }));
@@ -149,6 +156,8 @@ function dot(record: CoilRecord, s: number, angleDeg: number, axialMm: number, n
 function dots(record: CoilRecord, s: number): Shape[] {
   const winding = record.windings[0]!;
   const shapes = winding.taps.slice(0, -1).map((tap) => dot(record, s, tap.angleDeg, tap.positionMm, `tap ${tap.tap}`));
+  for (const { unit, angleDeg, positionMm } of winding.unitTaps ?? [])
+    shapes.push(dot(record, s, angleDeg, positionMm, `unit tap ${unit}`));
   const whole = winding.taps[winding.taps.length - 1]!;
   shapes.push(dot(record, s, 0, winding.startMm, 'start'));
   shapes.push(dot(record, s, whole.angleDeg, winding.finishMm, 'finish'));

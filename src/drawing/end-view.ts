@@ -15,7 +15,8 @@ export interface EndView extends Drawing {
 
 /** True when the taps do not all stand over the start hole, give or take a degree. */
 export function isStaggered(record: CoilRecord): boolean {
-  return record.windings[0]!.taps.some((tap) => Math.min(tap.angleDeg, 360 - tap.angleDeg) > 1);
+  const { taps, unitTaps = [] } = record.windings[0]!;
+  return [...unitTaps, ...taps].some((tap) => Math.min(tap.angleDeg, 360 - tap.angleDeg) > 1);
 }
 
 interface Group {
@@ -24,9 +25,10 @@ interface Group {
 }
 
 function groups(record: CoilRecord): Group[] {
-  const { taps } = record.windings[0]!;
+  const { taps, unitTaps = [] } = record.windings[0]!;
   const marks = [
     { angle: 0, name: 'S' },
+    ...unitTaps.map((tap) => ({ angle: tap.angleDeg, name: `u${tap.unit}` })),
     ...taps.map((tap) => ({ angle: tap.angleDeg, name: tap.tap === taps.length ? `F${tap.tap}` : `${tap.tap}` })),
   ].sort((a, b) => a.angle - b.angle);
   const found: Group[] = [];
@@ -34,6 +36,19 @@ function groups(record: CoilRecord): Group[] {
     const last = found[found.length - 1];
     if (last && mark.angle - last.angle < 1) last.names.push(mark.name);
     else found.push({ angle: mark.angle, names: [mark.name] });
+  }
+  return found;
+}
+
+/** Three whole numbers or more that follow one another become a span: `1-11`. */
+function spans(names: readonly string[]): string[] {
+  const found: string[] = [];
+  for (let i = 0; i < names.length; ) {
+    let end = i + 1;
+    while (Number(names[end]) === Number(names[i]) + end - i) end++;
+    if (end - i > 2) found.push(`${names[i]}-${names[end - 1]}`);
+    else found.push(...names.slice(i, end));
+    i = end;
   }
   return found;
 }
@@ -53,7 +68,9 @@ export function endView(record: CoilRecord, rimMm: number, measure: Measure): En
   const order = [...found.slice(widest + 1), ...found.slice(0, widest + 1)];
   const first = order[0]!.angle;
   const wanted = order.map((group) => (group.angle - first + 360) % 360);
-  const step = Math.min(22, 360 / order.length);
+  // The unit taps of two switches share a few neighbouring angles: one name a line there, and more room beside it.
+  const crowded = (record.windings[0]!.unitTaps ?? []).length > 0;
+  const step = Math.min(crowded ? 30 : 22, 360 / order.length);
   const centre = gaps[widest]! / 2;
   const places = spread(wanted, step, -centre + step / 2, 360 - centre - step / 2);
   const outer = Math.max(rimMm + 7, 3.6 / (2 * Math.sin((step * Math.PI) / 360)));
@@ -69,7 +86,7 @@ export function endView(record: CoilRecord, rimMm: number, measure: Measure): En
     const [x2, y2] = at(place, outer - 3);
     shapes.push(circle(x1, y1, 0.75, 'thin', 0), line(x1, y1, x2, y2, 'hair'));
     const [x, y] = at(place, outer);
-    const lines = rows(group.names, 4);
+    const lines = rows(spans(group.names), crowded ? 1 : 4);
     const sideways = Math.sin((place * Math.PI) / 180);
     const align = lines[0]!.length <= 3 ? 'centre' : sideways > 0.3 ? 'left' : sideways < -0.3 ? 'right' : 'centre';
     const drop = y < 0 ? 0 : (lines.length - 1) * 3.3;

@@ -57,12 +57,16 @@ export function places(record: CoilRecord): Place[] {
     axialMm: hole.axialMm,
     diameterMm: hole.diameterMm,
   }));
-  const { taps } = record.windings[0]!;
-  for (const tap of taps.slice(0, -1)) {
-    if (record.holes.some((hole) => hole.purpose === 'tap' && hole.tap === tap.tap)) continue;
+  const { taps, unitTaps = [] } = record.windings[0]!;
+  if (record.holes.some((hole) => hole.purpose === 'tap')) return found;
+  const marked = [
+    ...unitTaps.map((tap) => ({ ...tap, label: `u${tap.unit}` })),
+    ...taps.slice(0, -1).map((tap) => ({ ...tap, label: `${tap.tap}` })),
+  ];
+  for (const tap of marked) {
     found.push({
-      name: `tap ${tap.tap}`,
-      label: `${tap.tap}`,
+      name: `tap ${tap.label}`,
+      label: tap.label,
       angleDeg: tap.angleDeg,
       axialMm: tap.positionMm,
       diameterMm: 0,

@@ -37,7 +37,10 @@ export function checksOf(design: Design, winding: Winding, spread: Spread): Chec
   );
   const lengthSpread = (turns: number) => {
     const pitchPart = spread.pitch * coil.shape.pitchMm * turns;
-    const gapPart = spread.gap * design.method.gapMm * Math.sqrt(winding.taps.filter((tap) => tap.turn < turns).length);
+    const gapPart =
+      spread.gap *
+      design.method.gapMm *
+      Math.sqrt([...design.unitTaps, ...design.taps.map(({ turn }) => turn)].filter((turn) => turn < turns).length);
     return Math.hypot(pitchPart, gapPart, 0.05 * winding.wire.overallMm);
   };
   if (coil.places.length >= 21) {

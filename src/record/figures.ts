@@ -7,11 +7,13 @@ import {
   neighboursOf,
   type Position,
   positionOf,
+  type Span,
   tapsToClose,
 } from '../coil/positions.ts';
 import type { Rest, WorkingCoil } from '../coil/working-coil.ts';
 import { decimals, significant } from './rounding.ts';
-import type { CoilRecord, Tap } from './schema.ts';
+import type { CoilRecord, Setting, Tap } from './schema.ts';
+import { settingsOf } from './settings.ts';
 
 export type WorkingFigures = Pick<Tap, 'working' | 'range' | 'ends'>;
 
@@ -22,6 +24,8 @@ export interface Figures {
   readonly surroundings: CoilRecord['surroundings'];
   readonly coverage: CoilRecord['coverage'];
   readonly switchKinds: CoilRecord['switchKinds'];
+  /** One a tens contact; none for one switch. */
+  readonly settings: Setting[];
 }
 
 /** A second resonance up to a third above the range is in the way: strong signals come through on it. */
@@ -59,8 +63,8 @@ function rangeOf({ span }: Position, conditions: Conditions): Tap['range'] {
   };
 }
 
-function coverageOf(positions: readonly Position[]): CoilRecord['coverage'] {
-  const spans = positions.map(({ span }) => span);
+/** `spans` are what each position tunes; on two switches what each tens contact does with all units. */
+function coverageOf(spans: readonly (Span | null)[]): CoilRecord['coverage'] {
   if (!spans.every((span) => span !== null)) return null;
   const neighbours = neighboursOf(spans);
   const gaps = neighbours
@@ -87,6 +91,7 @@ function coverageOf(positions: readonly Position[]): CoilRecord['coverage'] {
 /** All figures at work of a coil. */
 export function figuresOf(coil: WorkingCoil, conditions: Conditions): Figures {
   const positions = coil.taps.map((turn) => positionOf(coil, turn, conditions));
+  const rows = settingsOf(coil, positions, conditions);
   const litz = coil.coil.shape.wire.strands > 1;
   const names = ['low', 'middle', 'high'] as const;
   return {
@@ -110,7 +115,8 @@ export function figuresOf(coil: WorkingCoil, conditions: Conditions): Figures {
       formerLossTangent: conditions.lossTangent,
       formerLoss: `estimate: ${FORMER_SHARE * 100} % of the self-capacitance lies in the former and has its loss tangent`,
     },
-    coverage: coverageOf(positions),
+    coverage: coverageOf(rows.length > 0 ? rows.map(({ span }) => span) : positions.map(({ span }) => span)),
+    settings: rows.map(({ setting }) => setting),
     switchKinds:
       positions.length === 1
         ? []

@@ -180,10 +180,12 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     surroundings: figures.surroundings,
     coverage: figures.coverage,
     switchKinds: figures.switchKinds,
+    settings: figures.settings,
     former: formerOf(chosen.former),
     tapMethod: {
       name: method.name,
-      layout: chosen.layout,
+      // Unit taps are a turn apart and never in one line.
+      layout: chosen.unitTaps.length > 0 ? 'staggered' : chosen.layout,
       gapMm: mm(method.gapMm),
       loopM: method.loopM,
       why: method.why,

@@ -7,12 +7,13 @@ import type { CoilRecord } from './schema.ts';
 export function workingCoilOf(record: Pick<CoilRecord, 'windings' | 'surroundings' | 'frame'>): WorkingCoil {
   const winding = record.windings[0];
   if (winding === undefined) throw new RangeError('a record has a winding');
-  const { wire, meanDiameterMm, pitchMm, turns, startMm, taps, turnPositionsMm } = winding;
-  const gaps = taps.filter(({ gapMm }) => gapMm > 0).map(({ turn, gapMm }) => ({ turn, gapMm }));
+  const { wire, meanDiameterMm, pitchMm, turns, startMm, taps, unitTaps = [], turnPositionsMm } = winding;
+  const gaps = [...unitTaps, ...taps].filter(({ gapMm }) => gapMm > 0).map(({ turn, gapMm }) => ({ turn, gapMm }));
   const { leadPf, celsius } = record.surroundings;
   return new WorkingCoil(
     new Coil({ wire, meanDiameterMm, pitchMm, turns, gaps, startMm }, turnPositionsMm),
     taps.map(({ turn }) => turn),
     { leadPf, celsius, earthed: record.frame.earthedEnd },
+    unitTaps.map(({ turn }) => turn),
   );
 }

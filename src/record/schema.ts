@@ -96,6 +96,16 @@ export const tapSchema = z.strictObject({
     .describe('the position at both ends and the middle of its range; empty without a set'),
 });
 
+export const unitTapSchema = z.strictObject({
+  unit: num.int().describe('contact of the units switch; 0 is the start itself and has no tap'),
+  turn: num.describe('turns from the start'),
+  positionMm: num.describe('Z of the wire centre at the tap'),
+  angleDeg: num.describe('in the frame, 0 <= angle < 360'),
+  gapMm: num.describe('how far the next turn is pushed aside by this tap'),
+  inductanceUh: num.describe('low-frequency inductance from the start to here, to measure by'),
+  wireFromStartM: num.describe('wire used from the start hole to here, loops of earlier taps included'),
+});
+
 export const windingSchema = z.strictObject({
   name: text,
   turns: num.describe('may be fractional: the finish hole then lies at an angle'),
@@ -120,6 +130,22 @@ export const windingSchema = z.strictObject({
   tensionLowN: num,
   tensionHighN: num,
   taps: z.array(tapSchema).min(1),
+  unitTaps: z
+    .array(unitTapSchema)
+    .optional()
+    .describe('taps of the units switch of a two-switch coil, in order; the taps are then those of its tens switch'),
+});
+
+export const settingSchema = z.strictObject({
+  tens: num.int().describe('contact of the tens switch, counted from 1: where the turns in use end'),
+  turnsLeast: num.int().describe('turns in use with the last unit'),
+  turnsMost: num.int().describe('turns in use with unit 0'),
+  inductancesUh: z.array(num).min(2).describe('low frequency, of every unit from 0 on, tapped where the taps lie'),
+  stepPercent: num.describe('greatest step of inductance from a setting to that of a turn less'),
+  frequencyKhz: num.describe('at which Q is judged'),
+  q: num.describe('with unit 0'),
+  lowKhz: num.nullable().describe('lower edge of what unit 0 tunes; null without a set'),
+  highKhz: num.nullable().describe('upper edge of what the last unit tunes, dead turns at both ends counted'),
 });
 
 export const formerSchema = z.strictObject({
@@ -177,6 +203,7 @@ export const stepSchema = z.strictObject({
   step: num.int(),
   kind: z.enum(['prepare', 'start', 'wind', 'tap', 'finish', 'after']),
   tap: num.int().nullable(),
+  unit: num.int().optional().describe('the unit tap that is made'),
   turn: num.nullable(),
   wireM: num.nullable(),
   text,
@@ -279,6 +306,12 @@ export const recordSchema = z.strictObject({
       ),
     }),
   ),
+  settings: z
+    .array(settingSchema)
+    .optional()
+    .describe(
+      'what the two switches of a two-switch coil set, one row a tens contact; empty or left out for one switch',
+    ),
   windings: z.array(windingSchema).min(1),
   former: formerSchema,
   tapMethod: z.strictObject({
@@ -313,6 +346,8 @@ export const recordSchema = z.strictObject({
 export type CoilRecord = z.infer<typeof recordSchema>;
 export type Winding = z.infer<typeof windingSchema>;
 export type Tap = z.infer<typeof tapSchema>;
+export type UnitTap = z.infer<typeof unitTapSchema>;
+export type Setting = z.infer<typeof settingSchema>;
 export type Former = z.infer<typeof formerSchema>;
 export type Hole = z.infer<typeof holeSchema>;
 export type Step = z.infer<typeof stepSchema>;

@@ -27,11 +27,16 @@ function percentPerTenth(design: Design): string {
 export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
   const { former, method, holes } = design;
   const steps: Step[] = [];
-  const add = (kind: Step['kind'], text: string, place?: { tap?: number; turn: number; wireM: number }) =>
+  const add = (
+    kind: Step['kind'],
+    text: string,
+    place?: { tap?: number; unit?: number; turn: number; wireM: number },
+  ) =>
     steps.push({
       step: steps.length + 1,
       kind,
       tap: place?.tap ?? null,
+      ...(place?.unit === undefined ? {} : { unit: place.unit }),
       turn: place?.turn ?? null,
       wireM: place?.wireM ?? null,
       text,
@@ -49,13 +54,18 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
   add('start', STEP.direction[job.winding.hand]);
   let last = 0;
   let checked = false;
+  for (const { unit, turn, angleDeg, wireFromStartM } of winding.unitTaps ?? []) {
+    const wind = STEP.wind(turnText(turn - last), placeText(turn, angleDeg));
+    add('tap', `${wind}: ${STEP.unitTap(unit)}`, { unit, turn, wireM: decimals(wireFromStartM, 2) });
+    last = turn;
+  }
   for (const tap of winding.taps) {
     const whole = tap.tap === winding.taps.length;
     if (!checked && last < 20 && tap.turn > 20 && winding.pitchKind !== 'groove') {
       checked = true;
       add('wind', STEP.check(overTwenty(design).toFixed(1)), {
         turn: 20,
-        wireM: decimals(design.coil.wireM(20) + method.loopM * (tap.tap - 1), 2),
+        wireM: decimals(design.coil.wireM(20) + method.loopM * (tap.tap - 1 + design.unitTaps.length), 2),
       });
     }
     const wind = STEP.wind(turnText(tap.turn - last), placeText(tap.turn, tap.angleDeg));

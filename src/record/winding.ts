@@ -7,7 +7,7 @@ import type { Design, DesignTap } from '../solve/design.ts';
 import { spreadOf } from '../solve/spread.ts';
 import type { WorkingFigures } from './figures.ts';
 import { decimals, mm, significant } from './rounding.ts';
-import type { PartsRecord, Tap, Winding } from './schema.ts';
+import type { PartsRecord, Tap, UnitTap, Winding } from './schema.ts';
 import { LEAD_MM } from './steps.ts';
 
 /** Length of wire on the coil as wound by hand, against the helix: a percent either way (common practice). */
@@ -24,13 +24,14 @@ export const INPUT: Record<SpreadInput, string> = {
 };
 
 function tapOf(job: Job, design: Design, tap: DesignTap, index: number, limits: Limits, at: WorkingFigures): Tap {
-  const { coil, method, taps } = design;
+  const { coil, method, taps, unitTaps } = design;
   const { wire } = coil.shape;
   const { turn } = tap;
   const inductanceUh = significant(tap.inductanceUh);
   const targetUh = significant(tap.targetUh);
   // A tap is measured at the end of its own loop, half of which leads there.
-  const loops = index < taps.length - 1 ? index + 0.5 : index;
+  const before = index + unitTaps.length;
+  const loops = index < taps.length - 1 ? before + 0.5 : before;
   const loopsM = method.loopInCircuit ? method.loopM * loops : 0;
   const ohm = (bareMm: number) => coil.resistanceOhm(turn, bareMm, loopsM);
   return {
@@ -44,13 +45,26 @@ function tapOf(job: Job, design: Design, tap: DesignTap, index: number, limits: 
     deviationPercent: decimals(100 * (inductanceUh / targetUh - 1), 3),
     inductanceLowUh: significant(limits.lowUh),
     inductanceHighUh: significant(limits.highUh),
-    wireFromStartM: decimals(coil.wireM(turn) + method.loopM * index, 4),
+    wireFromStartM: decimals(coil.wireM(turn) + method.loopM * before, 4),
     resistanceDcOhm: significant(ohm(wire.bareMm)),
     resistanceLowOhm: significant(ohm(wire.bareHighMm) * (1 - WIRE_SPREAD)),
     resistanceHighOhm: significant(ohm(wire.bareLowMm) * (1 + WIRE_SPREAD)),
     woundLengthMm: mm(coil.woundMm(turn)),
     dominant: INPUT[limits.dominant],
     ...at,
+  };
+}
+
+/** All unit taps come before the first of the tens. */
+function unitTapOf(job: Job, { coil, method }: Design, turn: number, index: number): UnitTap {
+  return {
+    unit: index + 1,
+    turn: decimals(turn, 6),
+    positionMm: mm(coil.positionMm(turn)),
+    angleDeg: angleOf(turn, job.winding.hand),
+    gapMm: mm(method.gapMm),
+    inductanceUh: significant(coil.inductanceUh(turn)),
+    wireFromStartM: decimals(coil.wireM(turn) + method.loopM * index, 4),
   };
 }
 
@@ -92,5 +106,6 @@ export function windingOf(job: Job, design: Design, figures: readonly WorkingFig
     tensionLowN: significant(tension.low, 2),
     tensionHighN: significant(tension.high, 2),
     taps: list,
+    unitTaps: design.unitTaps.map((turn, index) => unitTapOf(job, design, turn, index)),
   };
 }

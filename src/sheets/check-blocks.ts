@@ -3,7 +3,7 @@ import { CHECKS } from '../../templates/wording/winding-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { label, line, SMALL_MM } from '../drawing/shapes.ts';
-import type { CoilRecord } from '../record/schema.ts';
+import type { CoilRecord, Setting, Tap } from '../record/schema.ts';
 import { type Block, heading, list, paragraph, stack } from './block.ts';
 import { type Column, shares, table } from './table.ts';
 import { figures, fixed, sentence, short, signed } from './text.ts';
@@ -41,8 +41,23 @@ export function checks(record: CoilRecord, widthMm: number, rowMm: number, measu
   return stack([heading(CHECKS.heading, widthMm, measure), table(columns, rows, measure, { rowMm })], 0);
 }
 
-export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block {
+/** Rows of a table of taps that go on one page at most. */
+const ROWS = 30;
+
+/** Every tap with its limits, in as many tables as go on one page each. */
+export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block[] {
   const { taps } = record.windings[0]!;
+  const parts = Math.ceil(taps.length / ROWS);
+  const each = Math.ceil(taps.length / parts);
+  const words = paragraph(CHECKS.limits(dominants(record)), widthMm, measure, { sizeMm: SMALL_MM });
+  return Array.from({ length: parts }, (_, i) => {
+    const head = heading(i === 0 ? CHECKS.taps : CHECKS.tapsMore, widthMm, measure);
+    const body = [head, tapCheckTable(taps.slice(i * each, (i + 1) * each), widthMm, rowMm, measure)];
+    return stack(i === parts - 1 ? [...body, { ...words, heightMm: words.heightMm + 0.5 }] : body, 0.8);
+  });
+}
+
+function tapCheckTable(taps: readonly Tap[], widthMm: number, rowMm: number, measure: Measure): Block {
   const ranged = taps.some((tap) => tap.range !== null);
   const columns = columnsOf(widthMm, [
     ['tap', 10, { ...CENTRE, bold: true }],
@@ -70,9 +85,7 @@ export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, me
     if (ranged) cells.push(tap.range ? CHECKS.between(fixed(tap.range.lowKhz, 0), fixed(tap.range.highKhz, 0)) : '');
     return cells;
   });
-  const parts = [heading(CHECKS.taps, widthMm, measure), table(columns, rows, measure, { rowMm })];
-  const wide = paragraph(CHECKS.limits(dominants(record)), widthMm, measure, { sizeMm: SMALL_MM });
-  return stack([...parts, { ...wide, heightMm: wide.heightMm + 0.5 }], 0.8);
+  return table(columns, rows, measure, { rowMm });
 }
 
 /** What makes the limits wide, with the taps where it does: `pitch (taps 1 to 3), former diameter (tap 4)`. */
@@ -84,6 +97,54 @@ function dominants(record: CoilRecord): string {
     else runs.push({ input: dominant, first: tap, last: tap });
   }
   return runs.map(({ input, first, last }) => CHECKS.dominant(input, first, last)).join(', ');
+}
+
+/** What the two switches set, in as many tables as go on one page each; nothing for one switch. */
+export function settings(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block[] {
+  const rows = record.settings ?? [];
+  const parts = Math.ceil(rows.length / ROWS);
+  const each = Math.ceil(rows.length / parts);
+  return Array.from({ length: parts }, (_, i) =>
+    settingsOf(rows.slice(i * each, (i + 1) * each), i === parts - 1, widthMm, rowMm, measure),
+  );
+}
+
+function settingsOf(
+  rows: readonly Setting[],
+  isLast: boolean,
+  widthMm: number,
+  rowMm: number,
+  measure: Measure,
+): Block {
+  const last = rows[rows.length - 1]!;
+  const ranged = rows.some((row) => row.lowKhz !== null);
+  const columns = columnsOf(widthMm, [
+    [CHECKS.tens, 12, { ...CENTRE, bold: true }],
+    [CHECKS.turnsUsed, 26, CENTRE],
+    [CHECKS.unitLast(last.inductancesUh.length - 1), 22, RIGHT],
+    [CHECKS.unitZero, 22, { ...RIGHT, bold: true }],
+    [CHECKS.step, 18, RIGHT],
+    [CHECKS.q, 18, RIGHT],
+    [CHECKS.atKhz, 18, RIGHT],
+    ...(ranged ? ([[CHECKS.range, 34, CENTRE]] as const) : []),
+  ]);
+  const lines = rows.map((row) => {
+    const cells = [
+      `${row.tens}`,
+      CHECKS.between(`${row.turnsLeast}`, `${row.turnsMost}`),
+      figures(row.inductancesUh[row.inductancesUh.length - 1]!),
+      figures(row.inductancesUh[0]!),
+      fixed(row.stepPercent, 1),
+      fixed(row.q, 0),
+      fixed(row.frequencyKhz, 0),
+    ];
+    if (row.lowKhz !== null && row.highKhz !== null)
+      cells.push(CHECKS.between(fixed(row.lowKhz, 0), fixed(row.highKhz, 0)));
+    return cells;
+  });
+  const how = paragraph(CHECKS.settingsHow('1', `${last.turnsMost}`), widthMm, measure, { sizeMm: SMALL_MM });
+  const body = [heading(CHECKS.settings, widthMm, measure), table(columns, lines, measure, { rowMm })];
+  return stack(isLast ? [...body, how] : body, 0.5);
 }
 
 export function corrections(record: CoilRecord, widthMm: number, measure: Measure): Block {

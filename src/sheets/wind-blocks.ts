@@ -76,10 +76,26 @@ export function coilDrawing(record: CoilRecord, widthMm: number, highMm: number,
   return stack([head, drawn, ...notes], 1);
 }
 
-/** The taps in the order of winding; each row is a step and has its box. The finish is ticked among the other steps. */
-export function tapTable(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block {
-  const { taps } = record.windings[0]!;
-  const stepOf = new Map(record.steps.map((step) => [step.tap, step]));
+/** Rows of the tap table of a record. */
+export function tapRows(record: CoilRecord): number {
+  const { taps, unitTaps = [] } = record.windings[0]!;
+  return unitTaps.length + taps.length;
+}
+
+/**
+ * The taps in the order of winding, or the rows `from` up to `to` of them; each row is a step and has its box. The finish is
+ * ticked among the other steps.
+ */
+export function tapTable(
+  record: CoilRecord,
+  widthMm: number,
+  rowMm: number,
+  measure: Measure,
+  from = 0,
+  to = tapRows(record),
+): Block {
+  const { taps, unitTaps = [] } = record.windings[0]!;
+  const stepOf = new Map(record.steps.map((step) => [step.unit === undefined ? step.tap : `u${step.unit}`, step]));
   const parts: readonly (readonly [string, number, Partial<Column>])[] = [
     [TAPS.step, 8, {}],
     [TAPS.done, 7, { kind: 'tick' }],
@@ -94,12 +110,17 @@ export function tapTable(record: CoilRecord, widthMm: number, rowMm: number, mea
     widthMm,
     parts.map(([, width]) => width),
   );
-  const rows = taps.map((tap) => {
-    const step = stepOf.get(tap.tap);
+  // In the order of winding: all unit taps come before the first of the tens.
+  const made = [
+    ...unitTaps.map((tap) => ({ ...tap, key: `u${tap.unit}` })),
+    ...taps.map((tap) => ({ ...tap, key: tap.tap })),
+  ];
+  const rows = made.slice(from, to).map((tap) => {
+    const step = stepOf.get(tap.key);
     return [
       step ? `${step.step}` : '',
       step?.kind === 'tap' ? '' : NO_BOX,
-      `${tap.tap}`,
+      `${tap.key}`,
       short(tap.turn, 3),
       fixed(tap.angleDeg, 1),
       fixed(tap.positionMm, 2),
@@ -108,7 +129,10 @@ export function tapTable(record: CoilRecord, widthMm: number, rowMm: number, mea
     ];
   });
   const columnsOf = parts.map(([head, , more], i) => ({ head, widthMm: widths[i]!, align: 'right' as const, ...more }));
-  return stack([heading(TAPS.heading, widthMm, measure), table(columnsOf, rows, measure, { rowMm })], 0);
+  const head = heading(from === 0 ? TAPS.heading : TAPS.more, widthMm, measure);
+  const whole = stack([head, table(columnsOf, rows, measure, { rowMm })], 0);
+  if (unitTaps.length === 0 || to < made.length) return whole;
+  return stack([whole, paragraph(TAPS.switches, widthMm, measure, { sizeMm: SMALL_MM })], 0.8);
 }
 
 /** Where round the former the taps stand; nothing when they stand in one line. */
@@ -164,7 +188,7 @@ export function stepItems(record: CoilRecord, widthMm: number, measure: Measure)
   const base = -(CAP_SHARE + 0.1) * BODY_MM;
   for (let i = 0; i < steps.length; i++) {
     const step = steps[i]!;
-    if (step.kind !== 'tap' || step.tap === null) {
+    if (step.kind !== 'tap' || (step.tap === null && step.unit === undefined)) {
       const number = label(9.6, base, `${step.step}`, { sizeMm: BODY_MM, align: 'right', bold: true });
       add([tickBox(0, -3.3), number], step.text);
       continue;

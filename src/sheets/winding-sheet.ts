@@ -86,6 +86,27 @@ function moreSteps(rest: readonly Block[], first: boolean, heightMm: number, mea
   return bodies;
 }
 
+/** Least height of a row of the tap table where it is long. */
+const TAP_ROW_MM = 4.7;
+
+/** The tap table in parts that are no higher than a page. */
+function tapTables(record: CoilRecord, widthMm: number, heightMm: number, measure: Measure): [Block, ...Block[]] {
+  const rows = wind.tapRows(record);
+  const part = (from: number, count: number) =>
+    wind.tapTable(record, widthMm, TAP_ROW_MM, measure, from, Math.min(from + count, rows));
+  const whole = part(0, rows);
+  if (whole.heightMm <= heightMm) return [whole];
+  const least = part(rows - 1, 1).heightMm;
+  const most = 1 + Math.floor((heightMm - least) / ((whole.heightMm - least) / (rows - 1)));
+  const more: Block[] = [];
+  for (let from = most; from < rows; from += most) more.push(part(from, most));
+  return [part(0, most), ...more];
+}
+
+function pairs(blocks: readonly Block[]): Block[][] {
+  return Array.from({ length: Math.ceil(blocks.length / 2) }, (_, i) => blocks.slice(2 * i, 2 * i + 2));
+}
+
 /** Page 1: of the arrangements that hold everything the first, set as widely as it allows; else the steps run on. */
 function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
   const column = (room.widthMm - COLUMN_GAP) / 2;
@@ -126,7 +147,7 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
   }
 
   // Not all of it fits: the steps run on over the next pages, and what is left finds its place there too.
-  const taps = wind.tapTable(record, column, 4.7, measure);
+  const [taps, ...moreTaps] = tapTables(record, column, free, measure);
   const some: ((drawing: Block) => Arrangement)[] = [
     (drawing) => ({ left: [drawing, method, ...angles], right: [taps], foot: wide }),
     (drawing) => ({ left: [drawing, method], right: [taps, ...angles], foot: wide }),
@@ -145,8 +166,9 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
   // A few steps torn off from the rest are worse than all of them on the next page.
   const count = most >= 4 ? most : 0;
   const placed = new Set([...first.left, ...first.right, first.foot, ...(first.left.includes(narrow) ? [wide] : [])]);
-  const bodies = [
+  const bodies: Body[] = [
     page(count > 0 ? under(items.slice(0, count)) : first),
+    ...pairs(moreTaps).map((pair) => ({ part: TITLE.more, blocks: [beside(pair, COLUMN_GAP)] })),
     ...moreSteps(items.slice(count), count === 0, room.heightMm, measure),
   ];
   for (const block of [method, ...angles, wide]) {
@@ -167,7 +189,8 @@ function checkBlocks(record: CoilRecord, room: Room, rowMm: number, measure: Mea
   return [
     [
       check.checks(record, widthMm, rowMm, measure),
-      check.tapChecks(record, widthMm, rowMm, measure),
+      ...check.tapChecks(record, widthMm, rowMm, measure),
+      ...check.settings(record, widthMm, Math.min(rowMm, 5.2), measure),
       beside([doing, former], COLUMN_GAP),
       check.signature(widthMm, measure),
     ],

@@ -11,6 +11,7 @@ import { spacers } from '../stock/spacers.ts';
 import { tubes } from '../stock/tubes.ts';
 import type { Wire } from '../stock/wire.ts';
 import { allWires } from '../stock/wires.ts';
+import { meanDiameterMm, turnsFor } from './estimate.ts';
 import { grooveFor } from './former.ts';
 import { type TapMethod, tapMethodsFor } from './tap-methods.ts';
 
@@ -137,6 +138,36 @@ function methodsFor(job: Job, wire: Wire, pitch: Pitch): readonly TapMethod[] {
   return asked === 'auto' ? methods : methods.filter((method) => method.name === asked);
 }
 
+/** Halvings of a range of diameters, down to a hundredth of a millimetre. */
+const HALVINGS = 14;
+
+/** The diameter of a range at which the fixed turns of two switches have the inductance asked for, or the end that is nearest. */
+function diameterForTurns(
+  turns: number,
+  uh: number,
+  range: { lowMm: number; highMm: number },
+  of: Omit<Candidate, 'formerMm'>,
+  gapsMm: number,
+): number {
+  let [low, high] = [range.lowMm, range.highMm];
+  for (let k = 0; k < HALVINGS; k++) {
+    const middle = (low + high) / 2;
+    const mean = meanDiameterMm({ ...of, formerMm: middle });
+    if (turnsFor(uh, mean, of.pitch.mm, of.wire.bareMm, gapsMm) > turns) low = middle;
+    else high = middle;
+  }
+  return Math.round(50 * (low + high)) / 100;
+}
+
+/** Diameters to try for a wire and a pitch: all there are, or the one that two switches need of a printed range. */
+function diametersOf(job: Job, all: readonly number[], of: Omit<Candidate, 'formerMm'>): readonly number[] {
+  const { want, winding, former } = job;
+  const range = former.diametersMm;
+  if (winding.units === null || want.kind !== 'range' || former.kind !== 'printed' || 'listMm' in range) return all;
+  const gapsMm = (of.methods[0]?.gapMm ?? 0) * (want.taps + winding.units - 2);
+  return [diameterForTurns(winding.units * want.taps, want.highUh, range, of, gapsMm)];
+}
+
 /** The whole space, wire by wire. */
 export function candidatesOf(job: Job): Candidate[] {
   const diameters = diametersFor(job);
@@ -145,7 +176,7 @@ export function candidatesOf(job: Job): Candidate[] {
     for (const pitch of pitchesFor(job, wire)) {
       const methods = methodsFor(job, wire, pitch);
       const family = `${wire.name}, ${pitch.kind}`;
-      for (const formerMm of diameters)
+      for (const formerMm of diametersOf(job, diameters, { wire, pitch, methods, family }))
         if (wire.overallMm <= formerMm * THICKEST_SHARE) list.push({ wire, formerMm, pitch, methods, family });
     }
   }

@@ -24,7 +24,10 @@ export interface CoilView {
 
 export interface Demand {
   readonly kind: Wish['kind'];
+  /** Switch positions; of a two-switch coil the contacts of the tens switch. */
   readonly taps: number;
+  /** Contacts of the units switch, the start among them; null: one switch. */
+  readonly units: number | null;
   readonly spacing: string;
   readonly text: string;
   /** Least overlap of neighbouring positions, a fraction; null when not asked. */
@@ -63,6 +66,7 @@ function range(want: Extract<Wish, { kind: 'range' }>): Demand {
   return {
     kind: 'range',
     taps,
+    units: null,
     spacing,
     text: `${lowUh} µH to ${highUh} µH on ${taps} switch positions, ${spacing}`,
     overlap: null,
@@ -72,11 +76,38 @@ function range(want: Extract<Wish, { kind: 'range' }>): Demand {
   };
 }
 
+/** The tens contacts stand every `units` turns, wherever the inductance falls; the last is the whole coil. */
+function twoSwitches(want: Extract<Wish, { kind: 'range' }>, units: number): Demand {
+  const { lowUh, highUh, taps } = want;
+  return {
+    kind: 'range',
+    taps,
+    units,
+    spacing: `every ${units} turns`,
+    text: `${lowUh} µH to ${highUh} µH on two switches, ${units} units and ${taps} tens: every whole number of turns from 1 to ${units * taps}`,
+    overlap: null,
+    band: null,
+    wholeUh: () => highUh,
+    targetsUh: (view) => Array.from({ length: taps }, (_, i) => (i === taps - 1 ? highUh : view.at((i + 1) * units))),
+  };
+}
+
+/** Turns of the whole coil where the demand fixes them: two switches leave no choice. Null: the inductance decides. */
+export function fixedTurnsOf({ units, taps }: Demand): number | null {
+  return units === null ? null : units * taps;
+}
+
+/** Taps brought out between start and finish. */
+export function tapsBetween({ units, taps }: Demand): number {
+  return taps - 1 + (units === null ? 0 : units - 1);
+}
+
 function list(inductancesUh: readonly number[]): Demand {
   const last = inductancesUh[inductancesUh.length - 1]!;
   return {
     kind: 'list',
     taps: inductancesUh.length,
+    units: null,
     spacing: 'as listed',
     text: `${inductancesUh.map((value) => `${value}`).join(', ')} µH`,
     overlap: null,
@@ -116,6 +147,7 @@ function band(want: Extract<Wish, { kind: 'band' }>, set: SetCircuit, taps: numb
   return {
     kind: 'band',
     taps,
+    units: null,
     spacing: 'even ratio of upper edges',
     text: `${want.lowKhz} kHz to ${want.highKhz} kHz with ${set.capacitorLowPf} to ${set.capacitorHighPf} pF, overlap ${(want.overlap * 100).toFixed(0)} % at least`,
     overlap: want.overlap,
@@ -130,7 +162,8 @@ function band(want: Extract<Wish, { kind: 'band' }>, set: SetCircuit, taps: numb
  * number may be more than a switch has, or Infinity. A band without a set has been refused when the job was read.
  */
 export function demandOf(job: Job, selfPf: number): Demand {
-  if (job.want.kind === 'range') return range(job.want);
+  const { units } = job.winding;
+  if (job.want.kind === 'range') return units === null ? range(job.want) : twoSwitches(job.want, units);
   if (job.want.kind === 'list') return list(job.want.inductancesUh);
   if (job.set === null) throw new Error('a band without a set passed the reading of the job');
   return band(job.want, job.set, job.want.taps ?? positionsFor(job.want, job.set, selfPf));

@@ -1,12 +1,12 @@
 /** A candidate worked out in full by the ring sum, judged against every limit of the job. */
-import type { Coil } from '../coil/coil.ts';
+import { Coil } from '../coil/coil.ts';
 import type { WorkingCoil } from '../coil/working-coil.ts';
 import type { Job } from '../job/job.ts';
 import type { Former, Hole } from '../record/schema.ts';
 import type { Candidate } from './candidates.ts';
-import type { Demand } from './demand.ts';
+import { type Demand, fixedTurnsOf } from './demand.ts';
 import { type Around, formerFor, holesFor, LEAST_WEB_MM, startMm, tensionN, tightestPair } from './former.ts';
-import { coilOf, freedomsOf, type Setting, sectionAt, settle, targetsOf } from './settle.ts';
+import { coilOf, freedomsOf, hasDiameterRange, type Setting, sectionAt, settle, targetsOf } from './settle.ts';
 import { inductanceSpread } from './spread.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
 import { type Coverage, coverageEstimate, lossFactor, sectionLossOhm, workingKhz } from './working.ts';
@@ -41,6 +41,8 @@ export interface Design {
   readonly method: TapMethod;
   readonly layout: TapLayout;
   readonly taps: readonly DesignTap[];
+  /** Turns of the taps of the units switch; empty for one switch. */
+  readonly unitTaps: readonly number[];
   readonly former: Former;
   readonly holes: readonly Hole[];
   readonly tension: { readonly low: number; readonly high: number };
@@ -55,6 +57,8 @@ export type Limit =
   | 'printer.bed'
   | 'former.wall'
   | 'want.taps'
+  | 'want.inductance'
+  | 'winding.units'
   | 'want.overlap'
   | 'want.band'
   | 'winding.tap-method'
@@ -76,6 +80,8 @@ export type Outcome =
 
 /** A whole coil on a printed former that is farther off than this is not taken. */
 const WHOLE_OFF = 1e-3;
+/** The same where two switches fix the turns and the diameter is given: it is told. */
+const FIXED_WHOLE_OFF = 0.03;
 /** A printed former grows 0.1 % at most by its angle step; what is finer than this is not a miss of the band. */
 const BAND_SLACK = 2e-3;
 
@@ -162,6 +168,28 @@ function wallBreaches(job: Job, former: Former): Breach[] {
   return [{ limit: 'former.wall', got: left, allowed: least, text }];
 }
 
+/** What two switches ask besides: the fixed turns come to the upper end of the range, and one turn to no more than the lower. */
+function switchBreaches(setting: Setting, coil: Coil, unitTaps: readonly number[], firstTen: number): Breach[] {
+  const { job, demand } = setting;
+  if (job.want.kind !== 'range') return [];
+  const { lowUh, highUh } = job.want;
+  const breaches: Breach[] = [];
+  const off = coil.inductanceUh(coil.turns) / highUh - 1;
+  const allowed = job.former.kind === 'printed' && hasDiameterRange(job) ? WHOLE_OFF : FIXED_WHOLE_OFF;
+  if (Math.abs(off) > allowed) {
+    const text = `the ${fixedTurnsOf(demand)} turns of ${demand.units} units and ${demand.taps} tens come to ${coil.inductanceUh(coil.turns).toPrecision(4)} µH, ${(off * 100).toFixed(2)} % off the upper end ${highUh} µH, ${allowed * 100} % at most`;
+    breaches.push({ limit: 'winding.units', got: Math.abs(off), allowed, text, anyMethod: true });
+  }
+  // By themselves: the turns between are a coil like any other.
+  const alone = firstTen - unitTaps[unitTaps.length - 1]!;
+  const least = new Coil({ ...coil.shape, turns: alone, gaps: [] }).inductanceUh(alone);
+  if (least > lowUh) {
+    const text = `the least that the switches set, one turn from unit ${demand.units! - 1} to the first tens contact, is ${least.toPrecision(3)} µH, more than the lower end ${lowUh} µH`;
+    breaches.push({ limit: 'want.inductance', got: least, allowed: lowUh, text, anyMethod: true });
+  }
+  return breaches;
+}
+
 /**
  * A candidate with its taps brought out in one way. `correction` is what the coupled circuit found over the estimate; with
  * it the taps are placed, and whether they cover a band is left to the circuit.
@@ -193,7 +221,7 @@ export function designWith(
   if ('noPlaceFor' in settled) {
     const breach = { limit: 'want.taps', got: demand.taps, allowed: settled.noPlaceFor - 1 } as const;
     const beyond = `tap ${settled.noPlaceFor} of ${demand.taps} would lie beyond the whole coil: fewer switch positions are enough`;
-    const near = `tap ${settled.noPlaceFor} finds no place: its neighbours are nearer than a ${method.name} allows`;
+    const near = `${settled.unit ? 'unit tap' : 'tap'} ${settled.noPlaceFor} finds no place: its neighbours are nearer than a ${method.name} allows`;
     if (settled.beyond) return { ok: false, breaches: [{ ...breach, text: beyond, anyMethod: true }] };
     return { ok: false, breaches: [{ ...breach, text: near }] };
   }
@@ -201,12 +229,13 @@ export function designWith(
   const turns = [...settled.taps, settled.turns];
   const around: Around = { ...base, outsideMm: settled.outsideMm, pitchMm: settled.pitchMm };
   const former = formerFor(around, coil, turns, hand);
-  const holes = holesFor(around, coil, turns, method, hand);
+  const holes = holesFor(around, coil, turns, method, hand, settled.unitTaps);
   const taps = tapsOf(setting, coil, turns);
   const breaches = [...sizeBreaches(job, former), ...wallBreaches(job, former)];
   if (correction.length === 0) breaches.push(...bandBreaches(demand, taps));
   const off = Math.abs(taps[taps.length - 1]!.deviation);
-  if (former.kind === 'printed' && off > WHOLE_OFF) {
+  if (demand.units !== null) breaches.push(...switchBreaches(setting, coil, settled.unitTaps, turns[0]!));
+  else if (former.kind === 'printed' && off > WHOLE_OFF) {
     const text = `taps keep the finish from its place: the whole coil would be ${(off * 100).toFixed(2)} % off, ${WHOLE_OFF * 100} % at most`;
     breaches.push({ limit: 'want.taps', got: off, allowed: WHOLE_OFF, text });
   }
@@ -219,7 +248,7 @@ export function designWith(
       text: `holes ${tight.a.label} and ${tight.b.label} leave ${tight.leftMm.toFixed(2)} mm between them`,
     });
   if (breaches.length > 0) return { ok: false, breaches };
-  const wireM = coil.wireM(coil.turns) + method.loopM * settled.taps.length;
+  const wireM = coil.wireM(coil.turns) + method.loopM * (settled.taps.length + settled.unitTaps.length);
   const metrics: Metrics = {
     lossFactor: taps.reduce((sum, tap) => sum + tap.lossFactor, 0) / taps.length,
     volumeMm3: (Math.PI / 4) * former.outsideDiameterMm ** 2 * former.lengthMm,
@@ -231,7 +260,10 @@ export function designWith(
     turns: coil.turns,
     spread: inductanceSpread(job, candidate),
   };
-  return { ok: true, design: { candidate, coil, method, layout, taps, former, holes, tension, metrics } };
+  return {
+    ok: true,
+    design: { candidate, coil, method, layout, taps, unitTaps: settled.unitTaps, former, holes, tension, metrics },
+  };
 }
 
 /**

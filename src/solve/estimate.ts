@@ -8,7 +8,7 @@ import { selfCapacitance } from '../physics/medhurst.ts';
 import { roundWireInductance } from '../physics/rosa.ts';
 import { wheelerTurns } from '../physics/wheeler.ts';
 import type { Candidate } from './candidates.ts';
-import { type Demand, setCapacitance } from './demand.ts';
+import { type Demand, setCapacitance, tapsBetween } from './demand.ts';
 import { inductanceSpread } from './spread.ts';
 import { wireHoleMm } from './tap-methods.ts';
 import { actingSelfPf, coverageEstimate, lossFactor, type Section, sectionLossOhm, workingKhz } from './working.ts';
@@ -68,7 +68,7 @@ export function sizeOf(job: Job, demand: Demand, candidate: Candidate): Size | n
   if (method === undefined) return null;
   const { wire, pitch } = candidate;
   const diameter = meanDiameterMm(candidate);
-  const gapsMm = method.gapMm * (demand.taps - 1);
+  const gapsMm = method.gapMm * tapsBetween(demand);
   let selfPf = diameter * 0.05;
   let turns = 0;
   let wholeUh = 0;

@@ -4,7 +4,7 @@ import { MOST_TAPS } from '../job/schema.ts';
 import { type Candidate, candidatesOf } from './candidates.ts';
 import { type Design, designOf } from './design.ts';
 import { estimateOf, type Size, sizeOf } from './estimate.ts';
-import { demandFor, longestMm } from './search.ts';
+import { demandFor, mayFit } from './search.ts';
 
 export type Order = (candidate: Candidate, lengthMm: number) => number;
 
@@ -18,7 +18,7 @@ export function* fitsOf(job: Job, order: Order, tries: number): Generator<Design
   const sized = candidatesOf(job)
     .map((candidate) => sizeOf(job, demand, candidate))
     .filter((size) => size !== null)
-    .filter((size) => size.formerLengthMm <= longestMm(job) * 1.03 + 2 && size.turns >= demand.taps * 0.5)
+    .filter((size) => mayFit(size, job, demand))
     .sort((a, b) => rank(a) - rank(b));
   let tried = 0;
   for (const size of sized) {

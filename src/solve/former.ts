@@ -156,8 +156,18 @@ export function formerFor(around: Around, coil: Coil, taps: readonly number[], h
   };
 }
 
-/** All radial holes: anchor, start, taps by their method, the row of finish holes. */
-export function holesFor(around: Around, coil: Coil, taps: readonly number[], method: TapMethod, hand: Hand): Hole[] {
+/**
+ * All radial holes: anchor, start, taps by their method, the row of finish holes. `taps` ends with the whole coil;
+ * `unitTaps` are those of a units switch, labelled u1, u2, ...
+ */
+export function holesFor(
+  around: Around,
+  coil: Coil,
+  taps: readonly number[],
+  method: TapMethod,
+  hand: Hand,
+  unitTaps: readonly number[] = [],
+): Hole[] {
   const wireHole = wireHoleMm(around.overallMm, 1);
   const circumference = Math.PI * coil.shape.meanDiameterMm;
   const at = (turn: number) => ({ angleDeg: angleOf(turn, hand), axialMm: coil.positionMm(turn) });
@@ -173,26 +183,29 @@ export function holesFor(around: Around, coil: Coil, taps: readonly number[], me
     },
     { purpose: 'start', tap: null, turn: 0, label: 'S', ...at(0), diameterMm: wireHole },
   ];
-  for (const [index, turn] of taps.slice(0, -1).entries()) {
-    const tap = index + 1;
-    if (method.holes === 1)
-      holes.push({ purpose: 'tap', tap, turn, label: `${tap}`, ...at(turn), diameterMm: method.holeMm });
-    if (method.holes === 2) {
-      const half = (method.holeMm + 1.2) / 2 / circumference;
-      for (const [side, name] of [
-        [-half, 'a'],
-        [half, 'b'],
-      ] as const)
-        holes.push({
-          purpose: 'tap',
-          tap,
-          turn: turn + side,
-          label: `${tap}${name}`,
-          ...at(turn + side),
-          diameterMm: method.holeMm,
-        });
-    }
-  }
+  const bored = [
+    ...unitTaps.map((turn, index) => ({ turn, tap: null, name: `u${index + 1}` })),
+    ...taps.slice(0, -1).map((turn, index) => ({ turn, tap: index + 1, name: `${index + 1}` })),
+  ];
+  const half = (method.holeMm + 1.2) / 2 / circumference;
+  const sides = [
+    [],
+    [[0, '']],
+    [
+      [-half, 'a'],
+      [half, 'b'],
+    ],
+  ] as const;
+  for (const { turn, tap, name } of bored)
+    for (const [side, letter] of sides[method.holes])
+      holes.push({
+        purpose: 'tap',
+        tap,
+        turn: turn + side,
+        label: `${name}${letter}`,
+        ...at(turn + side),
+        diameterMm: method.holeMm,
+      });
   for (const { turn, offset } of finishHoles(around, coil)) {
     const label = offset === 0 ? 'F' : offset > 0 ? `F+${offset}` : `F${offset}`;
     const tap = offset === 0 ? taps.length : null;

@@ -19,7 +19,8 @@ export function degreesBetween(a: number, b: number): number {
   return 360 * Math.min(fraction, 1 - fraction);
 }
 
-function clears(turn: number, others: readonly number[], wholeTurns: number, method: TapMethod): boolean {
+/** Whether a tap at `turn` clears the start, the `others` and the finish. */
+export function clears(turn: number, others: readonly number[], wholeTurns: number, method: TapMethod): boolean {
   for (const other of others) {
     if (Math.abs(turn - other) < method.turnsApart - 1e-9 && degreesBetween(turn, other) < method.degreesApart - 1e-9)
       return false;
@@ -43,6 +44,8 @@ export interface Placing {
 /** Why a tap (numbered from 1) finds no place: its neighbours are too near, or it asks for more than the whole coil has. */
 export interface NoPlace {
   readonly noPlaceFor: number;
+  /** It is a tap of the units switch. */
+  readonly unit?: true;
   readonly beyond: boolean;
 }
 

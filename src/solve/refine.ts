@@ -39,6 +39,7 @@ export function workingCoilOf(job: Job, design: Design): WorkingCoil {
     design.coil,
     design.taps.map((tap) => tap.turn),
     around,
+    design.unitTaps,
   );
 }
 

@@ -3,6 +3,7 @@ import { Fault, type Place } from '../fault.ts';
 import type { Job } from '../job/job.ts';
 import { candidatesOf, diametersFor, wiresFor } from './candidates.ts';
 import { changesFor, lengthKey } from './changes.ts';
+import { fixedTurnsOf } from './demand.ts';
 import type { Breach, Limit } from './design.ts';
 import { sizeOf } from './estimate.ts';
 import { demandFor, longestMm, type NotFound } from './search.ts';
@@ -47,6 +48,13 @@ function worst(job: Job, notFound: NotFound): { key: string; got: string } {
     const over = short.formerLengthMm - longestMm(job);
     const got = `the shortest former, ${short.candidate.wire.name} on ${short.candidate.formerMm} mm, is about ${short.formerLengthMm.toFixed(0)} mm long, ${over.toFixed(0)} mm over the limit of ${longestMm(job)} mm`;
     return { key: lengthKey(job), got };
+  }
+  const fixed = fixedTurnsOf(demand);
+  if (fixed !== null) {
+    const off = (turns: number) => Math.abs(turns / fixed - 1);
+    const near = sizes.reduce((a, b) => (off(b.turns) < off(a.turns) ? b : a));
+    const got = `${demand.units} units and ${demand.taps} tens make ${fixed} turns; the coil nearest to that, ${near.candidate.wire.name} on ${near.candidate.formerMm} mm, has ${near.wholeUh} µH at about ${near.turns.toFixed(1)} turns`;
+    return { key: 'winding.units', got };
   }
   const most = sizes.reduce((a, b) => (b.turns > a.turns ? b : a));
   if (most.turns < demand.taps * 0.5) {

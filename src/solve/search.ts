@@ -9,7 +9,7 @@ import type { Job } from '../job/job.ts';
 import { MOST_TAPS } from '../job/schema.ts';
 import { selfCapacitance } from '../physics/medhurst.ts';
 import { type Candidate, candidatesOf, diametersFor } from './candidates.ts';
-import { type Demand, demandOf } from './demand.ts';
+import { type Demand, demandOf, fixedTurnsOf } from './demand.ts';
 import { type Breach, type Design, designOf, variantsOf } from './design.ts';
 import { type Estimate, estimateOf, roughSection, roughTargets, type Size, sizeOf } from './estimate.ts';
 import { ALL_ASPECTS, ASPECTS, type Aspect, aspectOf } from './prefer.ts';
@@ -68,9 +68,14 @@ export function longestMm(job: Job): number {
 }
 
 /** As far as the estimate tells; a margin of 3 % and 2 mm keeps what the design may still bring in. */
-function mayFit(size: Size, job: Job, demand: Demand): boolean {
+export function mayFit(size: Size, job: Job, demand: Demand): boolean {
+  const fixed = fixedTurnsOf(demand);
+  if (fixed !== null && Math.abs(size.turns / fixed - 1) > FIXED_OFF) return false;
   return size.formerLengthMm <= longestMm(job) * 1.03 + 2 && size.turns >= demand.taps * 0.5;
 }
+
+/** Turns by the estimate may differ by this much from those that two switches fix; the design then looks more closely. */
+const FIXED_OFF = 0.03;
 
 /** Estimates of all candidates that may fit the job's length. */
 export function hopefulOf(job: Job, demand: Demand, candidates: readonly Candidate[]): Estimate[] {

@@ -10,10 +10,11 @@ import { Coil } from '../coil/coil.ts';
 import type { Gap } from '../coil/layout.ts';
 import type { Job } from '../job/job.ts';
 import type { Candidate } from './candidates.ts';
-import { type CoilView, type Demand, setCapacitance } from './demand.ts';
+import { type CoilView, type Demand, fixedTurnsOf, setCapacitance, tapsBetween } from './demand.ts';
 import { meanDiameterMm, turnsFor } from './estimate.ts';
 import { type NoPlace, type Placing, placeTaps, STAGGER_STEPS, stillClear } from './place-taps.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
+import { placeBothSwitches } from './two-switches.ts';
 import { actingSelfPf, type Section } from './working.ts';
 
 /** `more` and `fewer`: the diameter or pitch follows the whole turns above or below instead of the nearest. */
@@ -25,6 +26,8 @@ export interface Settled {
   readonly turns: number;
   /** Turns of the taps below the whole coil. */
   readonly taps: readonly number[];
+  /** Turns of the taps of the units switch; empty for one switch. */
+  readonly unitTaps: readonly number[];
 }
 
 export interface Setting {
@@ -53,17 +56,21 @@ const roundTo = (value: number, steps: number) => Math.round(value * steps) / st
 export function freedomsOf(job: Job, candidate: Candidate): readonly Freedom[] {
   if (job.former.kind !== 'printed') return ['none'];
   const groove = candidate.pitch.kind === 'groove' && typeof job.winding.pitch !== 'number';
+  // The turns of two switches are fixed: what the diameter or the pitch cannot take up is told.
+  if (job.winding.units !== null) return hasDiameterRange(job) || groove ? ['nearest', 'none'] : ['none'];
   return hasDiameterRange(job) || groove ? ['nearest', 'more', 'fewer', 'finish angle'] : ['finish angle'];
 }
 
-function hasDiameterRange(job: Job): boolean {
+/** The diameter may be chosen freely inside a range. */
+export function hasDiameterRange(job: Job): boolean {
   const wanted = job.former.diametersMm;
   return 'lowMm' in wanted && wanted.highMm > wanted.lowMm;
 }
 
 export function coilOf(setting: Setting, state: Settled, turns: number): Coil {
   const { candidate, method } = setting;
-  const gaps: Gap[] = method.gapMm > 0 ? state.taps.map((turn) => ({ turn, gapMm: method.gapMm })) : [];
+  const gaps: Gap[] =
+    method.gapMm > 0 ? [...state.unitTaps, ...state.taps].map((turn) => ({ turn, gapMm: method.gapMm })) : [];
   return new Coil({
     wire: candidate.wire,
     meanDiameterMm: meanDiameterMm({ ...candidate, formerMm: state.outsideMm }),
@@ -133,6 +140,8 @@ function wholeTarget(setting: Setting, coil: Coil, taps: readonly number[]): num
 }
 
 function wholeTurns(setting: Setting, freedom: Freedom, exact: number): number {
+  const fixed = fixedTurnsOf(setting.demand);
+  if (fixed !== null) return fixed;
   if (freedom === 'finish angle') return Math.max(1 / finishSteps(exact), roundTo(exact, finishSteps(exact)));
   if (freedom === 'nearest') return Math.max(1, Math.round(exact));
   if (freedom === 'more') return Math.ceil(exact);
@@ -150,10 +159,10 @@ function wholeTurns(setting: Setting, freedom: Freedom, exact: number): number {
 export function settle(setting: Setting, freedom: Freedom): Settled | NoPlace | 'no room' {
   const { demand, candidate, method } = setting;
   const mean = meanDiameterMm(candidate);
-  const gapsMm = method.gapMm * (demand.taps - 1);
+  const gapsMm = method.gapMm * tapsBetween(demand);
   const guess = turnsFor(demand.wholeUh(mean * 0.05), mean, candidate.pitch.mm, candidate.wire.bareMm, gapsMm);
-  let length = Math.ceil(guess * 1.05) + 5;
-  let state: Settled = { outsideMm: candidate.formerMm, pitchMm: candidate.pitch.mm, turns: 0, taps: [] };
+  let length = Math.ceil(Math.max(guess, fixedTurnsOf(demand) ?? 0) * 1.05) + 5;
+  let state: Settled = { outsideMm: candidate.formerMm, pitchMm: candidate.pitch.mm, turns: 0, taps: [], unitTaps: [] };
   let fixedTurns: number | null = null;
   for (let round = 0; round < ROUNDS; round++) {
     const coil = coilOf(setting, state, length);
@@ -174,9 +183,14 @@ export function settle(setting: Setting, freedom: Freedom): Settled | NoPlace | 
       else next.pitchMm = roundTo(state.pitchMm * ratio ** (-1 / 0.6), 1e4);
       if (!within(setting, next)) return 'no room';
     }
-    const targets = demand.targetsUh(viewOf(setting, coil, wholeUh, state.taps)).slice(0, -1);
     const placing = placingOf(setting, turns);
-    if (round < TAPS_STAY_FROM || !stillClear(state.taps, placing)) {
+    if (demand.units !== null) {
+      const placed = placeBothSwitches(demand.units, demand.taps, placing);
+      if ('noPlaceFor' in placed) return placed;
+      next.taps = placed.taps;
+      next.unitTaps = placed.unitTaps;
+    } else if (round < TAPS_STAY_FROM || !stillClear(state.taps, placing)) {
+      const targets = demand.targetsUh(viewOf(setting, coil, wholeUh, state.taps)).slice(0, -1);
       const placed = placeTaps(coil, targets, placing);
       if ('noPlaceFor' in placed) return placed;
       next.taps = placed.turns;

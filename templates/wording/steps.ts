@@ -51,6 +51,7 @@ export const STEP = {
   turn: (turn: number) => `turn ${turn}`,
   turnAndAngle: (turn: number, angle: string) => `turn ${turn} and on to ${angle}°`,
   tap: (tap: number) => `make tap ${tap}.`,
+  unitTap: (unit: number) => `make unit tap u${unit}.`,
   check: (mm: string) => `At turn 20 stop: 20 turns measure ${mm} mm edge to edge; press or ease them until they do.`,
   finish: (mm: number) => `Keep the tension; lead the end in at F and out at F+1, tight; leave ${mm} mm.`,
   afterMeasure: 'Measure by the sheet “to check by” before the wire is cut short; trim at the finish row.',

@@ -55,6 +55,7 @@ export const DRAWING = {
 
 export const TAPS = {
   heading: 'Taps: tick each row when it is wound',
+  more: 'Taps, continued',
   step: 'step',
   done: '',
   tap: 'tap',
@@ -64,6 +65,7 @@ export const TAPS = {
   inductance: 'µH',
   deviation: 'off %',
   wire: 'wire m',
+  switches: 'u1, u2, ...: units switch, with S as its 0. Numbers: tens switch. µH: from the start S.',
 } as const;
 
 export const STEPS = {
@@ -85,6 +87,7 @@ export const CHECKS = {
   reading: 'reading',
   good: 'in limits',
   taps: 'Every tap, measured from the start S',
+  tapsMore: 'Every tap, continued',
   deviation: 'off target %',
   length: 'wound length mm',
   inductance: 'inductance µH',
@@ -94,6 +97,16 @@ export const CHECKS = {
   dominant: (input: string, first: number, last: number) =>
     first === last ? `${input} (tap ${first})` : `${input} (taps ${first} to ${last})`,
   between: (low: string, high: string) => `${low} – ${high}`,
+  settings: 'What the two switches set: low-frequency inductance in µH',
+  settingsHow: (least: string, most: string) =>
+    `Turns in use: from the unit tap to the tens tap, ${least} to ${most} in steps of one. Turns beyond either are dead. Step: the greatest change of inductance from one turn to the next.`,
+  tens: 'tens',
+  unitZero: 'unit 0',
+  unitLast: (unit: number) => `unit ${unit}`,
+  turnsUsed: 'turns',
+  step: 'step %',
+  q: 'Q, unit 0',
+  atKhz: 'at kHz',
   corrections: 'When it reads high or low',
   correctionsHow:
     'A reading that is too high wants a line with a minus, one too low a line with a plus. Measure again after each.',
