@@ -92,6 +92,10 @@ describe('a coil file', () => {
     expect(pitchMm).toBeLessThanOrEqual(0.534);
   });
 
+  it('takes an empty list of taps for none', () => {
+    expect(coil('turns: 100, pitch: 0.6 mm, taps: []').taps).toEqual([100]);
+  });
+
   it('takes taps by places for taps by turns', () => {
     const byTurns = coil('turns: 100, pitch: 0.6 mm, taps: [20, 40.5, 60]').taps;
     const byPlace = coil('turns: 100, pitch: 0.6 mm, tap-positions: [12 mm, 24.3 mm, 36 mm, 60 mm]').taps;

@@ -1,4 +1,5 @@
 /** Figures of measured coils against a table of the method, and against one another. */
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { readCoilFile } from '../../src/job/coil-file.ts';
 import { hashOf } from '../../src/record/hash.ts';
@@ -155,6 +156,67 @@ describe('the record of a survey', () => {
     }
     console.log(`starter coils surveyed: ${made}`);
     expect(made).toBe(COILS.length);
+  });
+});
+
+describe('coils at random', () => {
+  it('have figures that make sense, whatever their wire, pitch, turns, taps and set', () => {
+    const upTo = (low: number, high: number) => fc.double({ min: low, max: high, noNaN: true });
+    const shape = fc.record({
+      bare: upTo(0.05, 2),
+      covering: upTo(1.002, 1.3),
+      spacing: fc.oneof(fc.constant(1), upTo(1, 3)),
+      slimness: upTo(3, 80),
+      turns: fc.oneof(fc.integer({ min: 1, max: 30 }), upTo(0.3, 30)),
+      taps: fc.array(upTo(0.05, 0.98), { maxLength: 3 }),
+      rest: fc.constantFrom('open', 'shorted', 'shorted in sections', 'disconnected'),
+      earthed: fc.constantFrom('start', 'finish'),
+      lead: fc.constantFrom(0, 3),
+    });
+    let ran = 0;
+    let positions = 0;
+    fc.assert(
+      fc.property(shape, (one) => {
+        const mm = (value: number) => `${value.toFixed(4)} mm`;
+        const overall = one.bare * one.covering;
+        const turns = Number(one.turns.toFixed(3));
+        const taps = [...new Set(one.taps.map((share) => Number((share * turns).toFixed(2))))]
+          .filter((turn) => turn >= 0.25)
+          .sort((a, b) => a - b);
+        const record = survey(
+          JSON.stringify({
+            coil: {
+              'former-diameter': mm(overall * one.slimness),
+              wire: { bare: mm(one.bare), overall: mm(overall) },
+              turns,
+              pitch: mm(overall * one.spacing + 1e-4),
+              taps,
+              earthed: one.earthed,
+            },
+            set: { capacitor: '10 pF to 200 pF', lead: `${one.lead} pF`, switch: one.rest },
+          }),
+        );
+        ran++;
+        let last = 0;
+        for (const tap of record.windings[0]!.taps) {
+          positions++;
+          expect(tap.inductanceUh).toBeGreaterThan(last);
+          expect(tap.inductanceLowUh).toBeLessThan(tap.inductanceUh);
+          expect(tap.inductanceHighUh).toBeGreaterThan(tap.inductanceUh);
+          expect(tap.range!.lowKhz).toBeLessThan(tap.range!.highKhz);
+          for (const end of tap.ends) {
+            expect(end.q).toBeGreaterThan(0);
+            // Less of the inductance is left at work, and more of the resistance.
+            expect(end.inductanceUh).toBeLessThan(tap.inductanceUh * 1.0001);
+            expect(end.resistanceOhm).toBeGreaterThan(tap.resistanceDcOhm * 0.99);
+          }
+          last = tap.inductanceUh;
+        }
+      }),
+      { seed: 11, numRuns: 40 },
+    );
+    console.log(`coils surveyed at random: ${ran}, positions ${positions}`);
+    expect(ran).toBe(40);
   });
 });
 

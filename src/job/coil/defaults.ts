@@ -30,6 +30,12 @@ export function completeCoil(written: unknown, fallback: string): { data: unknow
     else if (held === null) delete data[section];
   }
   data.spread ??= {};
+  // A coil without taps may say so.
+  if (isData(data.coil))
+    for (const key of ['taps', 'tap-positions']) {
+      const list = data.coil[key];
+      if (Array.isArray(list) && list.length === 0) delete data.coil[key];
+    }
   const assumed: Assumed = {};
   const take = (key: string, value: string) => {
     const [first = '', second] = key.split('.');
