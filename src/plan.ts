@@ -2,7 +2,7 @@
  * The pipeline of `plan`, without I/O:
  *
  *     job ──> demand ──> candidates ──> designs ──> chosen coil ──> record ──┬──> winding sheet (PDF)
- *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template (PDF)
+ *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template, range sheet (PDF)
  *      │     demand)     candidates)    design)     search)        make)     ├──> former (STL, in a worker)
  *      └────────────────────── nothing fits: solve/refusal ──> fault 4       └──> plan.json
  *
@@ -56,11 +56,14 @@ export async function planJob(job: Job, options: { version: string }): Promise<P
     const record = makeRecord(job, found, options.version);
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
     const { wrapTemplate } = await import('./sheets/wrap-template.ts');
+    const { rangeSheet } = await import('./sheets/range-sheet.ts');
     const sheet = await windingSheet(record);
     const template = await wrapTemplate(record);
+    const ranges = await rangeSheet(record);
     const files: PlanFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
       { path: 'wrap-template.pdf', kind: 'pdf', bytes: template, note: 'true scale, print at 100 %' },
+      { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
     ];
     for (const part of await parts) {
       const { boxMm, massG, printNote } = part.report;
