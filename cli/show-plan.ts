@@ -9,6 +9,7 @@ import {
   wireText,
 } from '../src/quantity/format.ts';
 import type { CoilRecord, Tap } from '../src/record/schema.ts';
+import { settingsTable } from './show-settings.ts';
 import { lay, wrap } from './table.ts';
 
 export interface Written {
@@ -23,6 +24,7 @@ export function showPlan(record: CoilRecord, folder: string, files: readonly Wri
     [...wrap(record.job, columns), ...wrap(record.demand.text, columns)],
     chosen(record, columns),
     tapTable(record, columns),
+    settingsTable(record, columns),
     others(record, columns),
     record.warnings.length === 0 ? [] : ['Warnings', ...record.warnings.flatMap(({ text }) => item(text, columns))],
     written(record, folder, files, columns),

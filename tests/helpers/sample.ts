@@ -8,6 +8,8 @@ export interface SampleOptions {
   readonly kind?: 'printed' | 'tube';
   /** Turn of each tap, the last one the whole coil. */
   readonly turns?: readonly number[];
+  /** Turns of the unit taps of a two-switch coil; none for one switch. */
+  readonly unitTurns?: readonly number[];
   readonly diameterMm?: number;
   readonly bareMm?: number;
   readonly overallMm?: number;
@@ -24,6 +26,7 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
   const hand = options.hand ?? 'right';
   const surface = options.surface ?? 'grooved';
   const kind = options.kind ?? 'printed';
+  const unitsAt = options.unitTurns ?? [];
   const turnsAt = options.turns ?? [12.25, 20.5, 31.125, 47, 60.75];
   const turns = turnsAt[turnsAt.length - 1]!;
   const outside = options.diameterMm ?? 60;
@@ -37,7 +40,7 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
   const depth = surface === 'grooved' ? overall / 2 : 0;
   const mean = outside - 2 * depth + overall;
   const start = 12;
-  const gaps = turnsAt.slice(0, -1).map((turn) => ({ turn, gapMm: gap }));
+  const gaps = [...unitsAt, ...turnsAt.slice(0, -1)].map((turn) => ({ turn, gapMm: gap }));
   const round = (x: number, digits = 4) => Number(x.toFixed(digits));
   const places = Array.from(layTurns(turns, pitch, gaps, start), (z) => round(z));
   const at = (u: number) => round(axialAt(places, turns, pitch, u));
@@ -60,6 +63,11 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
     },
     { purpose: 'start', tap: null, turn: 0, label: 'S', angleDeg: 0, axialMm: at(0), diameterMm: 1.2 },
   ];
+  if (drawn)
+    unitsAt.forEach((turn, i) => {
+      const angleDeg = angleOf(turn, hand);
+      holes.push({ purpose: 'tap', tap: null, turn, label: `u${i + 1}`, angleDeg, axialMm: at(turn), diameterMm: 1.6 });
+    });
   if (drawn)
     for (let i = 0; i < turnsAt.length - 1; i++)
       holes.push({
@@ -130,6 +138,20 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
         highKhz: 1200 + i,
       })),
     })),
+    settings:
+      unitsAt.length === 0
+        ? []
+        : turnsAt.map((turn, i) => ({
+            tens: i + 1,
+            turnsLeast: Math.round(turn) - unitsAt.length,
+            turnsMost: Math.round(turn),
+            inductancesUh: [0, ...unitsAt].map((from) => round(uh(turn - from), 3)),
+            stepPercent: 12.34,
+            frequencyKhz: 1000,
+            q: 180,
+            lowKhz: 530 + i,
+            highKhz: 1300 + i,
+          })),
     windings: [
       {
         name: 'main',
@@ -166,6 +188,15 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
         selfCapacitancePf: 3.1,
         tensionLowN: 6,
         tensionHighN: 10,
+        unitTaps: unitsAt.map((turn, i) => ({
+          unit: i + 1,
+          turn,
+          positionMm: at(turn),
+          angleDeg: angleOf(turn, hand),
+          gapMm: gap,
+          inductanceUh: round(uh(turn), 3),
+          wireFromStartM: round(metre(turn), 3),
+        })),
         taps: turnsAt.map((turn, i) => ({
           tap: i + 1,
           turn,
@@ -267,8 +298,17 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
         wireM: 0,
         text: 'Anchor the wire in hole A and lead it through S.',
       },
-      ...turnsAt.map((turn, i) => ({
+      ...unitsAt.map((turn, i) => ({
         step: 3 + i,
+        kind: 'tap' as const,
+        tap: null,
+        unit: i + 1,
+        turn,
+        wireM: round(metre(turn), 2),
+        text: `Wind to turn ${turn}, make unit tap u${i + 1}.`,
+      })),
+      ...turnsAt.map((turn, i) => ({
+        step: 3 + unitsAt.length + i,
         kind: i < turnsAt.length - 1 ? ('tap' as const) : ('finish' as const),
         tap: i + 1,
         turn,
@@ -276,7 +316,7 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
         text: `Wind to turn ${turn}, make tap ${i + 1}.`,
       })),
       {
-        step: 3 + turnsAt.length,
+        step: 3 + unitsAt.length + turnsAt.length,
         kind: 'after',
         tap: null,
         turn: null,

@@ -86,6 +86,20 @@ const CASES: readonly (readonly [string, readonly string[]])[] = [
     ['2 want.spacing: 21 µH as the first of the list', '2 want.spacing: 80 µH as the last of the list'],
   ],
   [
+    'job: x\nwant: { inductance: [20 uH, 80 uH] }\nwinding: { units: 10 }',
+    ['3 winding.units: two switches (winding.units: 10) for a list of inductances'],
+  ],
+  [
+    'job: x\nset: { capacitor: 15 pF to 380 pF }\nwant: { band: 530 kHz to 1700 kHz }\nwinding: { units: 8 }',
+    ['4 winding.units: two switches (winding.units: 8) for a band'],
+  ],
+  [
+    'job: x\nwant: { inductance: 5 uH to 240 uH, taps: 12, spacing: even turns }\nwinding: { units: 10 }',
+    ['2 want.spacing: a spacing for two switches (winding.units: 10)'],
+  ],
+  ['job: x\nwant: { inductance: 5 uH to 240 uH, taps: 12 }\nwinding: { units: 1 }', ['3 winding.units: 1']],
+  ['job: x\nwant: { inductance: 5 uH to 240 uH, taps: 12 }\nwinding: { units: 21 }', ['3 winding.units: 21']],
+  [
     'job: x\nwant: { band: 530 kHz to 1700 kHz }',
     ['- set: the band 530 kHz to 1700 kHz without the set that tunes it'],
   ],

@@ -1,0 +1,43 @@
+/** What the two switches of a two-switch coil set, for the terminal: nothing for one switch. */
+import { significantText } from '../src/quantity/format.ts';
+import type { CoilRecord, Setting } from '../src/record/schema.ts';
+import { lay, wrap } from './table.ts';
+
+/** The most needed first; what does not fit the page is in plan.json and on the sheet. */
+const COLUMNS: readonly (readonly [title: string, cell: (row: Setting) => string])[] = [
+  ['tens', (row) => String(row.tens)],
+  ['turns', (row) => `${row.turnsLeast}..${row.turnsMost}`],
+  [
+    'µH',
+    (row) => `${significantText(row.inductancesUh.at(-1) ?? 0, 4)}..${significantText(row.inductancesUh[0] ?? 0, 4)}`,
+  ],
+  ['step %', (row) => row.stepPercent.toFixed(1)],
+  [
+    'kHz',
+    (row) => (row.lowKhz === null || row.highKhz === null ? '' : `${row.lowKhz.toFixed(0)}..${row.highKhz.toFixed(0)}`),
+  ],
+  ['Q', (row) => row.q.toFixed(0)],
+];
+
+/** Lines no wider than `columns`: the unit taps, then a row for each tens contact, from its last unit to unit 0. */
+export function settingsTable(record: CoilRecord, columns: number): string[] {
+  const rows = record.settings ?? [];
+  if (rows.length === 0) return [];
+  const places = (record.windings[0]?.unitTaps ?? []).map((tap) => `u${tap.unit} ${tap.turn.toFixed(3)}`).join(', ');
+  const used = COLUMNS.filter(([title]) => title !== 'kHz' || rows.some((row) => row.lowKhz !== null));
+  for (let count = used.length; ; count -= 1) {
+    const shown = used.slice(0, count);
+    const lines = lay(
+      shown.map(([title]) => title),
+      rows.map((row) => shown.map(([, cell]) => cell(row))),
+      shown.map(() => true),
+    );
+    if (count > 1 && lines.some((line) => line.length + 2 > columns)) continue;
+    const units = wrap(`units switch: S as 0, then at turn ${places}`, columns - 2);
+    return [
+      'Both switches, last unit to unit 0',
+      ...units.map((line) => `  ${line}`),
+      ...lines.map((line) => `  ${line}`),
+    ];
+  }
+}
