@@ -128,7 +128,14 @@ export function kindsOf(
       span:
         kind === conditions.rest || conditions.tuning === null
           ? position.span
-          : spanOf(coil, position.turn, conditions.tuning, kind),
+          : spanAt(coil, position, conditions.tuning, kind),
     })),
   }));
+}
+
+/** Range with another kind of switch; crowding is taken as it is at the frequency the position works at. */
+function spanAt(coil: WorkingCoil, { turn, working }: Position, tuning: Tuning, kind: Rest): Span {
+  const crowding = coil.crowding(turn, working.kHz);
+  const end = (pf: number) => coil.tuned(turn, pf, kind, crowding);
+  return { low: end(tuning.inPf), high: end(tuning.outPf) };
 }
