@@ -38,6 +38,13 @@ export function warningsOf(job: Job, found: Found, alternatives: number, coverag
       'taps-staggered',
       'Taps do not clear one another in one line: they stand at angles, and the fractions of a turn are counted in.',
     );
+  const { unitTaps } = chosen;
+  const beside = Math.max(0, ...unitTaps.map((turn) => Math.abs(turn - Math.round(turn))));
+  if (beside > 0)
+    add(
+      'units-beside-their-turns',
+      `Unit taps stand up to ${beside.toFixed(3)} of a turn beside their whole turns, as they would touch in one line: the inductances of the settings are those of the taps where they stand.`,
+    );
   const off = taps
     .map((tap, index) => ({ tap: index + 1, deviation: tap.deviation }))
     .filter(({ deviation }) => Math.abs(deviation) > FAR_OFF);

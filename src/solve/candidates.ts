@@ -138,25 +138,24 @@ function methodsFor(job: Job, wire: Wire, pitch: Pitch): readonly TapMethod[] {
   return asked === 'auto' ? methods : methods.filter((method) => method.name === asked);
 }
 
-/** Halvings of a range of diameters, down to a hundredth of a millimetre. */
-const HALVINGS = 14;
+/** Turns for an inductance go with about the inverse of the diameter: so many steps meet them to a few hundredths of a percent. */
+const STEPS = 4;
 
 /** The diameter of a range at which the fixed turns of two switches have the inductance asked for, or the end that is nearest. */
 function diameterForTurns(
   turns: number,
   uh: number,
-  range: { lowMm: number; highMm: number },
+  { lowMm, highMm }: { lowMm: number; highMm: number },
   of: Omit<Candidate, 'formerMm'>,
   gapsMm: number,
 ): number {
-  let [low, high] = [range.lowMm, range.highMm];
-  for (let k = 0; k < HALVINGS; k++) {
-    const middle = (low + high) / 2;
-    const mean = meanDiameterMm({ ...of, formerMm: middle });
-    if (turnsFor(uh, mean, of.pitch.mm, of.wire.bareMm, gapsMm) > turns) low = middle;
-    else high = middle;
+  let formerMm = Math.sqrt(lowMm * highMm);
+  for (let k = 0; k < STEPS; k++) {
+    const mean = meanDiameterMm({ ...of, formerMm });
+    const ratio = turnsFor(uh, mean, of.pitch.mm, of.wire.bareMm, gapsMm) / turns;
+    formerMm = Math.min(highMm, Math.max(lowMm, formerMm * ratio));
   }
-  return Math.round(50 * (low + high)) / 100;
+  return Math.round(100 * formerMm) / 100;
 }
 
 /** Diameters to try for a wire and a pitch: all there are, or the one that two switches need of a printed range. */

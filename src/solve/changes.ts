@@ -108,11 +108,28 @@ function otherWire(job: Job): Change[] {
   return [];
 }
 
+/** So many tens more or fewer are tried. */
+const TENS_TRIED = 6;
+
+type WithTaps = (changed: { taps: number }) => Job;
+
+const fewerTaps = (taps: number, wish: WithTaps) =>
+  nearestCount(taps, 2, (count) => fits(wish({ taps: count }), TO_COMPARE));
+
+/** The number of tens contacts nearest to `taps`, more or fewer, that makes the turns which the inductance needs. */
+function otherTens(taps: number, wish: WithTaps): number | null {
+  for (let step = 1; step <= TENS_TRIED; step++)
+    for (const count of [taps - step, taps + step])
+      if (count >= 2 && count <= MOST_TAPS && fits(wish({ taps: count }))) return count;
+  return null;
+}
+
 function otherRange(job: Job, want: Extract<Want, { kind: 'range' }>): Change[] {
   const changes: Change[] = [];
   const wish = (changed: Partial<typeof want>): Job => ({ ...job, want: { ...want, ...changed } });
-  const taps = nearestCount(want.taps, 2, (count) => fits(wish({ taps: count }), TO_COMPARE));
-  if (taps !== null) changes.push({ text: `lower want.taps to ${taps}`, job: wish({ taps }) });
+  const taps = job.winding.units === null ? fewerTaps(want.taps, wish) : otherTens(want.taps, wish);
+  if (taps !== null)
+    changes.push({ text: `${taps < want.taps ? 'lower' : 'raise'} want.taps to ${taps}`, job: wish({ taps }) });
   const top = nearestFit(want.highUh, want.lowUh * 1.1, 0.9, (highUh) => fits(wish({ highUh })));
   if (top !== null) {
     const highUh = threeDigits(top, 'down');

@@ -4,7 +4,7 @@ import { Fault } from '../../src/fault.ts';
 import { recordOf } from '../../src/plan.ts';
 import { workingCoilOf } from '../../src/record/rebuild.ts';
 import { type CoilRecord, recordSchema } from '../../src/record/schema.ts';
-import type { Winding } from '../coil/brute.ts';
+import { type Winding, wireM } from '../coil/brute.ts';
 import { change, FOUR_WIRES, jobOf, type Parts } from '../helpers/jobs.ts';
 import { stretchUh } from './stretch.ts';
 
@@ -161,6 +161,18 @@ describe.each(RECORDS)('%s', (_name, record, parts) => {
     expect(worst).toBeLessThan(1e-4);
   });
 
+  it('is as long as its turns and what every tap pushes aside, and its wire as long as its turns and loops', () => {
+    const between = unitTaps.length + taps.length - 1;
+    const long = winding.finishMm - winding.startMm;
+    // Places are written to 0.1 um, pitch and gap too: 120 turns add their roundings up.
+    expect(Math.abs(long - winding.pitchMm * winding.turns - record.tapMethod.gapMm * between)).toBeLessThan(0.01);
+    for (const tap of taps) {
+      const loops = record.tapMethod.loopM * (unitTaps.length + tap.tap - 1);
+      const length = wireM(windingOf(record), tap.turn);
+      expect(Math.abs(tap.wireFromStartM - length - loops)).toBeLessThan(1e-4 * length + 6e-5);
+    }
+  });
+
   it('sets more with every turn more', () => {
     const rising = settings.flatMap((row) => row.inductancesUh.toReversed());
     for (let i = 1; i < rising.length; i++) expect(rising[i]!).toBeGreaterThan(rising[i - 1]!);
@@ -248,6 +260,6 @@ describe('is refused', () => {
     expect(fault.got).toMatch(
       /^10 units and 12 tens make 120 turns; the coil nearest to that, .+ on 76 mm, has 900 µH at about \d+\.\d turns$/,
     );
-    expect(fault.todo).toMatch(/any one of these alone would do: .*former\.outside-diameter/);
+    expect(fault.todo).toMatch(/any one of these alone would do: .*raise want\.taps to 13/);
   });
 });
