@@ -1,13 +1,14 @@
 /** A candidate worked out in full by the ring sum, judged against every limit of the job. */
-import { Coil } from '../coil/coil.ts';
+import type { Coil } from '../coil/coil.ts';
 import type { WorkingCoil } from '../coil/working-coil.ts';
 import type { Job } from '../job/job.ts';
 import type { Former, Hole } from '../record/schema.ts';
 import type { Candidate } from './candidates.ts';
-import { type Demand, fixedTurnsOf } from './demand.ts';
+import type { Demand } from './demand.ts';
 import { type Around, formerFor, holesFor, LEAST_WEB_MM, startMm, tensionN, tightestPair } from './former.ts';
-import { coilOf, freedomsOf, hasDiameterRange, type Setting, sectionAt, settle, targetsOf } from './settle.ts';
+import { coilOf, freedomsOf, type Setting, sectionAt, settle, targetsOf } from './settle.ts';
 import { inductanceSpread } from './spread.ts';
+import { switchBreaches } from './switch-breaches.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
 import { type Coverage, coverageEstimate, lossFactor, sectionLossOhm, workingKhz } from './working.ts';
 
@@ -80,8 +81,6 @@ export type Outcome =
 
 /** A whole coil on a printed former that is farther off than this is not taken. */
 const WHOLE_OFF = 1e-3;
-/** The same where two switches fix the turns and the diameter is given: it is told. */
-const FIXED_WHOLE_OFF = 0.03;
 /** A printed former grows 0.1 % at most by its angle step; what is finer than this is not a miss of the band. */
 const BAND_SLACK = 2e-3;
 
@@ -166,28 +165,6 @@ function wallBreaches(job: Job, former: Former): Breach[] {
   if (left >= least - 1e-9 && former.boreDiameterMm > 0) return [];
   const text = `wall ${former.wallMm} mm leaves ${left.toFixed(2)} mm under the winding, two lines are ${least.toFixed(2)} mm`;
   return [{ limit: 'former.wall', got: left, allowed: least, text }];
-}
-
-/** What two switches ask besides: the fixed turns come to the upper end of the range, and one turn to no more than the lower. */
-function switchBreaches(setting: Setting, coil: Coil, unitTaps: readonly number[], firstTen: number): Breach[] {
-  const { job, demand } = setting;
-  if (job.want.kind !== 'range') return [];
-  const { lowUh, highUh } = job.want;
-  const breaches: Breach[] = [];
-  const off = coil.inductanceUh(coil.turns) / highUh - 1;
-  const allowed = job.former.kind === 'printed' && hasDiameterRange(job) ? WHOLE_OFF : FIXED_WHOLE_OFF;
-  if (Math.abs(off) > allowed) {
-    const text = `the ${fixedTurnsOf(demand)} turns of ${demand.units} units and ${demand.taps} tens come to ${coil.inductanceUh(coil.turns).toPrecision(4)} µH, ${(off * 100).toFixed(2)} % off the upper end ${highUh} µH, ${allowed * 100} % at most`;
-    breaches.push({ limit: 'winding.units', got: Math.abs(off), allowed, text, anyMethod: true });
-  }
-  // By themselves: the turns between are a coil like any other.
-  const alone = firstTen - unitTaps[unitTaps.length - 1]!;
-  const least = new Coil({ ...coil.shape, turns: alone, gaps: [] }).inductanceUh(alone);
-  if (least > lowUh) {
-    const text = `the least that the switches set, one turn from unit ${demand.units! - 1} to the first tens contact, is ${least.toPrecision(3)} µH, more than the lower end ${lowUh} µH`;
-    breaches.push({ limit: 'want.inductance', got: least, allowed: lowUh, text, anyMethod: true });
-  }
-  return breaches;
 }
 
 /**
