@@ -1,10 +1,10 @@
 /** A record's coil as a value again, its turns at the places that the record states: what is reckoned anew comes from here. */
 import { Coil } from '../coil/coil.ts';
 import { WorkingCoil } from '../coil/working-coil.ts';
-import type { CoilRecord } from './schema.ts';
+import type { FiguresRecord } from './survey-schema.ts';
 
 /** The first winding of a record, at work. Agrees with the coil that the record was made of to the record's own rounding. */
-export function workingCoilOf(record: Pick<CoilRecord, 'windings' | 'surroundings' | 'frame'>): WorkingCoil {
+export function workingCoilOf(record: Pick<FiguresRecord, 'windings' | 'surroundings' | 'frame'>): WorkingCoil {
   const winding = record.windings[0];
   if (winding === undefined) throw new RangeError('a record has a winding');
   const { wire, meanDiameterMm, pitchMm, turns, startMm, taps, unitTaps = [], turnPositionsMm } = winding;
