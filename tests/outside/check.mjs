@@ -1,9 +1,10 @@
 // npm run check:outside: what other people's programs say of our files. A program that is not there is skipped and named.
 import { spawnSync } from 'node:child_process';
-import { mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
+import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { basename, dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { checkNetlist } from './ngspice.mjs';
 
 const root = join(dirname(fileURLToPath(import.meta.url)), '..', '..');
 const program = join(root, 'dist', 'coilwright.js');
@@ -80,17 +81,43 @@ function stl(path) {
   }
 }
 
+let resonances = 0;
+let worstResonance = 0;
+function netlist(path, record) {
+  if (!has('ngspice')) return;
+  const simulate = (file) => {
+    const { stdout, stderr } = run('ngspice', ['-b', file]);
+    return stdout + stderr;
+  };
+  const count = (...one) => {
+    resonances++;
+    check(...one);
+  };
+  worstResonance = Math.max(worstResonance, checkNetlist(path, record, simulate, count));
+}
+
 try {
   const starters = readdirSync(jobs).filter((name) => name.endsWith('.yaml'));
   for (const name of starters) {
+    // Ranges need a set: a starter without one is planned a second time with it, for its netlist.
+    const text = readFileSync(join(jobs, name), 'utf8');
+    if (!/^set:/m.test(text) && has('ngspice')) {
+      const [job, out] = [join(work, name), join(work, `${basename(name, '.yaml')}-with-set`)];
+      writeFileSync(job, `${text}\nset: { capacitor: 15 pF to 380 pF, stray: 12 pF, aerial: 60 pF, switch: open }\n`);
+      const { status, stderr } = run(process.execPath, [program, 'plan', job, '--out', out]);
+      check(`plan ${name} with a set`, status === 0, stderr);
+      if (status === 0) netlist(join(out, 'coil.cir'), JSON.parse(readFileSync(join(out, 'plan.json'), 'utf8')));
+    }
     const out = join(work, basename(name, '.yaml'));
     const { status, stderr } = run(process.execPath, [program, 'plan', join(jobs, name), '--out', out]);
     check(`plan ${name}`, status === 0, stderr);
     if (status !== 0) continue;
     const record = JSON.parse(readFileSync(join(out, 'plan.json'), 'utf8'));
+    check(`plan ${name}: a netlist`, record.files.filter(({ kind }) => kind === 'netlist').length === 1, out);
     for (const file of record.files) {
       if (file.kind === 'pdf') pdf(join(out, file.path), record);
       if (file.kind === 'stl') stl(join(out, file.path));
+      if (file.kind === 'netlist') netlist(join(out, file.path), record);
     }
   }
   check('there are starter jobs', starters.length > 0, jobs);
@@ -98,5 +125,6 @@ try {
   rmSync(work, { recursive: true, force: true });
 }
 if (skipped.size > 0) console.log(`skipped, not installed: ${[...skipped].join(', ')}`);
+if (resonances > 0) console.log(`ngspice: ${resonances} runs, worst ${(worstResonance * 100).toFixed(4)} % off`);
 console.log(`outside checks: ${passed} good, ${failed} bad`);
 if (failed > 0 || passed === 0) process.exit(1);
