@@ -95,10 +95,10 @@ export function sectionAt(coil: Coil, turn: number, turns: number, taps: readonl
   const used = Math.min(turn, turns);
   return {
     share: used / turns,
-    usedUh: coil.inductanceUh(used),
-    wholeUh: coil.inductanceUh(turns),
+    usedUh: coil.nearUh(used),
+    wholeUh: coil.nearUh(turns),
     // The dead turns by themselves: as many turns at the start, which lie alike but for the gaps.
-    deadUh: used < turns ? coil.inductanceUh(turns - used) : 0,
+    deadUh: used < turns ? coil.nearUh(turns - used) : 0,
     wholePf: coil.selfPf(turns),
     sectionPf: coil.selfPf(used),
     leads: [...taps, turns].map((tap) => tap / turns),
@@ -117,10 +117,10 @@ function correctionAt({ correction }: Setting, turn: number): number {
 /** The view of a coil that the demand asks; sections beyond the whole coil count as the whole coil. */
 function viewOf(setting: Setting, coil: Coil, wholeUh: number, taps: readonly number[]): CoilView {
   const { job } = setting;
-  const turns = Math.min(coil.turnFor(wholeUh), coil.turns);
+  const turns = Math.min(coil.nearTurn(wholeUh), coil.turns);
   return {
     selfPf: (uh) => {
-      const turn = uh >= wholeUh ? turns : Math.min(coil.turnFor(uh), turns);
+      const turn = uh >= wholeUh ? turns : Math.min(coil.nearTurn(uh), turns);
       if (job.set === null) return coil.selfPf(turn);
       const { outPf } = setCapacitance(job.set);
       return actingSelfPf(job, sectionAt(coil, turn, turns, taps), outPf) + correctionAt(setting, turn);

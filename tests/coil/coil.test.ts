@@ -132,6 +132,23 @@ describe('a coil', () => {
     expect(coil.meanPitchMm(7)).toBeCloseTo(1, 9);
   });
 
+  it('is near its inductance between whole turns without working out the part turn, and finds the turn back', () => {
+    let worst = 0;
+    let cases = 0;
+    for (const coil of COILS)
+      for (const share of [0.3, 0.5, 0.61, 0.73, 0.97]) {
+        const turn = share * coil.turns;
+        worst = Math.max(worst, Math.abs(coil.nearUh(turn) / coil.inductanceUh(turn) - 1));
+        const back = coil.nearTurn(coil.nearUh(turn));
+        expect(Math.abs(coil.nearUh(back) / coil.nearUh(turn) - 1)).toBeLessThan(1e-6);
+        cases++;
+      }
+    console.log(`near inductance: ${cases} turns, worst ${worst.toExponential(1)}`);
+    expect(cases).toBeGreaterThan(50);
+    // Gaps of taps make the steps between whole turns uneven; half a percent is what an estimate of tuning may lose to it.
+    expect(worst).toBeLessThan(0.005);
+  });
+
   it('tunes lower with every turn more (common practice)', () => {
     for (const coil of COILS.filter(({ turns }) => turns > 2)) {
       const longer = new Coil({ ...coil.shape, turns: coil.turns + 1 });
