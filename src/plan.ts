@@ -2,34 +2,21 @@
  * The pipeline of `plan`, without I/O:
  *
  *     job ──> demand ──> candidates ──> designs ──> chosen coil ──> record ──┬──> winding sheet (PDF)
- *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template, range sheet (PDF)
+ *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template, range sheet (PDF), netlist
  *      │     demand)     candidates)    design)     search)        make)     ├──> former (STL, in a worker)
  *      └────────────────────── nothing fits: solve/refusal ──> fault 4       └──> plan.json
  *
  * Everything right of the record reads the record and nothing else. The worker that builds the former warms up while the
  * search runs, and works while the pages are written.
  */
-import { createHash } from 'node:crypto';
 import type { Job } from './job/job.ts';
 import { startKernel } from './kernel/client.ts';
+import { netlistFile } from './netlist/file.ts';
+import { listed, type Output, type OutputFile } from './record/listing.ts';
 import { makeRecord, partsRecordOf } from './record/make.ts';
 import type { CoilRecord } from './record/schema.ts';
 import { refusal } from './solve/refusal.ts';
 import { type Found, search } from './solve/search.ts';
-
-export interface PlanFile {
-  readonly path: string;
-  readonly kind: string;
-  readonly bytes: Uint8Array;
-  /** For people: size and use, printed after the run. */
-  readonly note: string;
-}
-
-export interface Plan {
-  readonly record: CoilRecord;
-  /** plan.json first. */
-  readonly files: readonly PlanFile[];
-}
 
 /** The record alone; throws the fault of exit 4 when nothing fits. */
 export function recordOf(job: Job, version: string): CoilRecord {
@@ -42,10 +29,8 @@ function foundFor(job: Job): Found {
   return found;
 }
 
-const sha256 = (bytes: Uint8Array) => createHash('sha256').update(bytes).digest('hex');
-
 /** The record and every file of the output folder. */
-export async function planJob(job: Job, options: { version: string }): Promise<Plan> {
+export async function planJob(job: Job, options: { version: string }): Promise<Output<CoilRecord>> {
   const kernel = job.former.kind === 'printed' ? startKernel() : null;
   try {
     const found = foundFor(job);
@@ -60,19 +45,18 @@ export async function planJob(job: Job, options: { version: string }): Promise<P
     const sheet = await windingSheet(record);
     const template = await wrapTemplate(record);
     const ranges = await rangeSheet(record);
-    const files: PlanFile[] = [
+    const files: OutputFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
       { path: 'wrap-template.pdf', kind: 'pdf', bytes: template, note: 'true scale, print at 100 %' },
       { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
+      netlistFile(record),
     ];
     for (const part of await parts) {
       const { boxMm, massG, printNote } = part.report;
       const note = `${boxMm.map((mm) => mm.toFixed(1)).join(' x ')} mm, ${massG.toFixed(0)} g of ${record.former.material}; ${printNote}`;
       files.push({ path: part.path, kind: part.kind, bytes: part.bytes, note });
     }
-    const listed = { ...record, files: files.map(({ path, kind, bytes }) => ({ path, kind, sha256: sha256(bytes) })) };
-    const json = new TextEncoder().encode(`${JSON.stringify(listed, null, 2)}\n`);
-    return { record: listed, files: [{ path: 'plan.json', kind: 'json', bytes: json, note: 'the record' }, ...files] };
+    return listed(record, files);
   } finally {
     await kernel?.close();
   }

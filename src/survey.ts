@@ -1,35 +1,22 @@
 /**
  * The pipeline of `survey`, without I/O:
  *
- *     coil file ──> measured coil ──> turns where they lie ──> figures at work ──> record ──┬──> range sheet (PDF)
+ *     coil file ──> measured coil ──> turns where they lie ──> figures at work ──> record ──┬──> range sheet, netlist
  *     (job/          (job/coil)        (coil/coil)              (record/figures)  (record/  └──> plan.json
  *      coil-file)                                                                  survey)
  *
  * The record is that of `plan`, without what concerns the making of a coil.
  */
-import { createHash } from 'node:crypto';
 import { Coil } from './coil/coil.ts';
 import type { Conditions } from './coil/positions.ts';
 import { WorkingCoil } from './coil/working-coil.ts';
 import type { CoilFile, MeasuredCoil } from './job/coil/file.ts';
 import { laySections } from './job/coil/lay.ts';
+import { netlistFile } from './netlist/file.ts';
+import { listed, type Output } from './record/listing.ts';
 import { makeSurveyRecord } from './record/survey.ts';
 import type { SurveyRecord } from './record/survey-schema.ts';
 import { findMaterial } from './stock/materials.ts';
-
-export interface SurveyFile {
-  readonly path: string;
-  readonly kind: string;
-  readonly bytes: Uint8Array;
-  /** For people, printed after the run. */
-  readonly note: string;
-}
-
-export interface Survey {
-  readonly record: SurveyRecord;
-  /** plan.json first. */
-  readonly files: readonly SurveyFile[];
-}
 
 /** Turns of a measured coil where they lie, Z = 0 at the start. */
 export function coilOf({ wire, meanDiameterMm, turns, sections }: MeasuredCoil): Coil {
@@ -64,21 +51,13 @@ export function surveyRecordOf(file: CoilFile, version: string): SurveyRecord {
   return makeSurveyRecord(file, working.coil, working, conditions, version);
 }
 
-const sha256 = (bytes: Uint8Array) => createHash('sha256').update(bytes).digest('hex');
-
 /** The record and every file of the output folder. */
-export async function surveyFiles(file: CoilFile, options: { version: string }): Promise<Survey> {
+export async function surveyFiles(file: CoilFile, options: { version: string }): Promise<Output<SurveyRecord>> {
   const record = surveyRecordOf(file, options.version);
   const { rangeSheet } = await import('./sheets/range-sheet.ts');
-  const files: SurveyFile[] = [
-    {
-      path: 'range-sheet.pdf',
-      kind: 'pdf',
-      bytes: await rangeSheet(record),
-      note: 'what every position tunes, and its figures',
-    },
-  ];
-  const listed = { ...record, files: files.map(({ path, kind, bytes }) => ({ path, kind, sha256: sha256(bytes) })) };
-  const json = new TextEncoder().encode(`${JSON.stringify(listed, null, 2)}\n`);
-  return { record: listed, files: [{ path: 'plan.json', kind: 'json', bytes: json, note: 'the record' }, ...files] };
+  const ranges = await rangeSheet(record);
+  return listed(record, [
+    { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
+    netlistFile(record),
+  ]);
 }

@@ -5,14 +5,15 @@ import { runPlan } from '../../cli/plan.ts';
 import { showPlan } from '../../cli/show-plan.ts';
 import { Fault } from '../../src/fault.ts';
 import { LARGEST_BYTES } from '../../src/job/tree.ts';
-import type { Plan } from '../../src/plan.ts';
+import type { Output } from '../../src/record/listing.ts';
+import type { CoilRecord } from '../../src/record/schema.ts';
 import { sampleRecord } from '../helpers/sample.ts';
 import { command, testTerminal } from './terminal.ts';
 
 const JOB = 'job: Bench coil 5\nwant: { inductance: 20 uH to 240 uH, taps: 5 }\n';
 
 /** A planner that plans nothing: what is tested here is what comes before and after it. */
-async function planned(): Promise<Plan> {
+async function planned(): Promise<Output<CoilRecord>> {
   const record = { ...sampleRecord(), files: [{ path: 'winding-sheet.pdf', kind: 'pdf', sha256: '0' }] };
   return {
     record,
