@@ -60,7 +60,7 @@ describe('survey', () => {
     const { exit, out } = await command(['survey', '-', '--out', 'found'], terminal);
     expect(exit).toBe(0);
     expect(out).toContain('Written to found\n');
-    expect(readdirSync(join(terminal.folder, 'found')).sort()).toEqual(['plan.json', 'range-sheet.pdf']);
+    expect(readdirSync(join(terminal.folder, 'found')).sort()).toEqual(['coil.cir', 'plan.json', 'range-sheet.pdf']);
     const record = surveyRecordSchema.parse(
       JSON.parse(readFileSync(join(terminal.folder, 'found', 'plan.json'), 'utf8')),
     );

@@ -146,7 +146,7 @@ describe('the record of a survey', () => {
     let made = 0;
     for (const { name, text } of COILS) {
       const { record, files } = await surveyFiles(readCoilFile(text, `${name}.yaml`), { version: '9.9.9' });
-      expect(files.map(({ path }) => path)).toEqual(['plan.json', 'range-sheet.pdf']);
+      expect(files.map(({ path }) => path)).toEqual(['plan.json', 'range-sheet.pdf', 'coil.cir']);
       expect(JSON.parse(new TextDecoder().decode(files[0]!.bytes))).toEqual(record);
       expect(record.job.toLowerCase().replaceAll(' ', '-')).toBe(name);
       expect(record.files).toEqual([
