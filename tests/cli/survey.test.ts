@@ -64,10 +64,15 @@ describe('survey', () => {
     const record = surveyRecordSchema.parse(
       JSON.parse(readFileSync(join(terminal.folder, 'found', 'plan.json'), 'utf8')),
     );
-    expect(record.files.map(({ path }) => path)).toEqual(['range-sheet.pdf']);
+    expect(record.files.map(({ path }) => path)).toEqual(['range-sheet.pdf', 'coil.cir']);
     writeFileSync(join(terminal.folder, 'found', 'notes.txt'), 'mine');
     expect(await command(['survey', '-', '--out', 'found'], terminal)).toMatchObject({ exit: 0 });
-    expect(readdirSync(join(terminal.folder, 'found')).sort()).toEqual(['notes.txt', 'plan.json', 'range-sheet.pdf']);
+    expect(readdirSync(join(terminal.folder, 'found')).sort()).toEqual([
+      'coil.cir',
+      'notes.txt',
+      'plan.json',
+      'range-sheet.pdf',
+    ]);
     mkdirSync(join(terminal.folder, 'mine'));
     writeFileSync(join(terminal.folder, 'mine', 'thesis.txt'), 'mine');
     expect(await command(['survey', '-', '--out', 'mine'], terminal)).toMatchObject({ exit: 5, out: '' });

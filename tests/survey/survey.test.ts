@@ -151,6 +151,7 @@ describe('the record of a survey', () => {
       expect(record.job.toLowerCase().replaceAll(' ', '-')).toBe(name);
       expect(record.files).toEqual([
         { path: 'range-sheet.pdf', kind: 'pdf', sha256: expect.stringMatching(/^[0-9a-f]{64}$/) },
+        { path: 'coil.cir', kind: 'netlist', sha256: expect.stringMatching(/^[0-9a-f]{64}$/) },
       ]);
       made++;
     }
