@@ -9,6 +9,7 @@ import {
   wireText,
 } from '../src/quantity/format.ts';
 import type { CoilRecord, Tap } from '../src/record/schema.ts';
+import { showRanges } from './show-ranges.ts';
 import { settingsTable } from './show-settings.ts';
 import { lay, wrap } from './table.ts';
 
@@ -19,12 +20,22 @@ export interface Written {
 }
 
 /** Plain text, no wider than `columns`, no colours. `folder` is where the files went. */
-export function showPlan(record: CoilRecord, folder: string, files: readonly Written[], columns: number): string {
+export function showPlan(
+  record: CoilRecord,
+  folder: string,
+  files: readonly Written[],
+  columns: number,
+  plain = false,
+): string {
+  const chart = showRanges(record, columns - 2, plain);
   const sections = [
     [...wrap(record.job, columns), ...wrap(record.demand.text, columns)],
     chosen(record, columns),
     tapTable(record, columns),
     settingsTable(record, columns),
+    chart.length === 0
+      ? []
+      : ['What they tune; on the right how far the next reaches into it', ...chart.map((row) => `  ${row}`)],
     others(record, columns),
     record.warnings.length === 0 ? [] : ['Warnings', ...record.warnings.flatMap(({ text }) => item(text, columns))],
     written(record, folder, files, columns),
