@@ -6,7 +6,9 @@ import { readJob } from '../src/job/read.ts';
 import { checkFolder, writeFolder } from '../src/output/transaction.ts';
 import type { planJob } from '../src/plan.ts';
 import { checkOut } from './check-out.ts';
+import { explainedTap } from './explained-tap.ts';
 import { readJobText } from './read-job.ts';
+import { showExplain } from './show-explain.ts';
 import { showPlan } from './show-plan.ts';
 import type { Terminal } from './terminal.ts';
 
@@ -19,6 +21,11 @@ export function describePlan(yargs: Argv) {
       describe: 'folder to write; out/<name of the job> when left out',
     })
     .option('json', { type: 'boolean', default: false, describe: 'print the record, and nothing else' })
+    .option('explain', {
+      type: 'string',
+      requiresArg: true,
+      describe: 'number of a tap: how each of its figures comes about; with --json that instead of the record',
+    })
     .example('$0 plan low-bench-receiver.yaml', 'writes out/low-bench-receiver')
     .example(
       '$0 plan - --out coil --json < job.yaml',
@@ -30,6 +37,7 @@ export interface PlanOptions {
   readonly job: string;
   readonly out?: string | undefined;
   readonly json: boolean;
+  readonly explain?: string | undefined;
 }
 
 /** The planner, loaded only once there is a job to plan. */
@@ -48,14 +56,16 @@ export async function runPlan(
   await checkFolder(target);
   const planner = await load();
   const { record, files } = await planner(job, { version });
+  const explained = await explainedTap(record, options.explain);
   const folder = await writeFolder(target, files);
   if (options.json) {
-    terminal.out(`${JSON.stringify(record, null, 2)}\n`);
+    terminal.out(`${JSON.stringify(explained ?? record, null, 2)}\n`);
     return;
   }
   const below = relative(terminal.folder, folder);
   const shown = below === '' ? '.' : below.startsWith('..') ? folder : below;
-  terminal.out(showPlan(record, shown, files, terminal.columns));
+  terminal.out(showPlan(record, shown, files, terminal.columns, terminal.plain ?? false));
+  if (explained !== null) terminal.out(`\n${showExplain(explained, terminal.columns)}`);
 }
 
 /** With the real planner. */

@@ -5,7 +5,9 @@ import { readCoilFile } from '../src/job/coil-file.ts';
 import { COIL_FILE } from '../src/job/file-kind.ts';
 import { checkFolder, writeFolder } from '../src/output/transaction.ts';
 import { checkOut } from './check-out.ts';
+import { explainedTap } from './explained-tap.ts';
 import { readJobText } from './read-job.ts';
+import { showExplain } from './show-explain.ts';
 import { showSurvey } from './show-survey.ts';
 import type { Terminal } from './terminal.ts';
 
@@ -22,6 +24,11 @@ export function describeSurvey(yargs: Argv) {
       describe: 'folder to write the record and the range sheet to; nothing is written when left out',
     })
     .option('json', { type: 'boolean', default: false, describe: 'print the record, and nothing else' })
+    .option('explain', {
+      type: 'string',
+      requiresArg: true,
+      describe: 'number of a tap: how each of its figures comes about; with --json that instead of the record',
+    })
     .example('$0 survey found-coil.yaml', 'shows its figures')
     .example('$0 survey found-coil.yaml --out found', 'writes the folder found besides');
 }
@@ -30,6 +37,7 @@ export interface SurveyOptions {
   readonly coil: string;
   readonly out?: string | undefined;
   readonly json: boolean;
+  readonly explain?: string | undefined;
 }
 
 /** Throws a Fault with exit code 2, 3 or 5. */
@@ -42,12 +50,14 @@ export async function survey(options: SurveyOptions, terminal: Terminal, version
   const page = { columns: terminal.columns, plain: terminal.plain ?? false };
   const { record, files } =
     target === null ? { record: surveyRecordOf(file, version), files: [] } : await surveyFiles(file, { version });
+  const explained = await explainedTap(record, options.explain);
   const folder = target === null ? null : await writeFolder(target, files);
   if (options.json) {
-    terminal.out(`${JSON.stringify(record, null, 2)}\n`);
+    terminal.out(`${JSON.stringify(explained ?? record, null, 2)}\n`);
     return;
   }
   const below = folder === null ? '' : relative(terminal.folder, folder);
   const shown = below === '' ? '.' : below.startsWith('..') ? (folder ?? '.') : below;
   terminal.out(showSurvey(record, page, folder === null ? null : { folder: shown, files }));
+  if (explained !== null) terminal.out(`\n${showExplain(explained, terminal.columns)}`);
 }

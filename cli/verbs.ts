@@ -9,12 +9,12 @@ export const VERBS = {
   plan: {
     written: 'plan <job>',
     does: 'choose the coil for a job; write sheet, template, former and record',
-    options: ['out', 'json'],
+    options: ['out', 'json', 'explain'],
   },
   survey: {
     written: 'survey <coil>',
     does: 'work out the figures of a coil from its measured dimensions: inductance, loss, range of every tap',
-    options: ['out', 'json'],
+    options: ['out', 'json', 'explain'],
   },
   stock: {
     written: 'stock [what] [words..]',
