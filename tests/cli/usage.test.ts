@@ -61,7 +61,7 @@ const WRONG: readonly (readonly [readonly string[], string])[] = [
     ['plan', 'job.yaml', '--ot', 'x'],
     `coilwright: --ot
   got       an option that is not known
-  expected  one of: --out, --json, --help, --version
+  expected  one of: --out, --json, --explain, --help, --version
   to do     did you mean --out?
 `,
   ],
@@ -69,7 +69,7 @@ const WRONG: readonly (readonly [readonly string[], string])[] = [
     ['plan', 'job.yaml', 'low', 'bench', '-q'],
     `coilwright: -q
   got       an option that is not known
-  expected  one of: --out, --json, --help, --version
+  expected  one of: --out, --json, --explain, --help, --version
   to do     see: coilwright plan --help
 
 coilwright: not a command
