@@ -3,9 +3,11 @@ import { readCoilFile } from '../../src/job/coil-file.ts';
 import { netlistOf } from '../../src/netlist/netlist.ts';
 import { coupledResonances } from '../../src/physics/coupled/coupled.ts';
 import { symmetricEigen } from '../../src/physics/coupled/eigen.ts';
+import { recordOf } from '../../src/plan.ts';
 import { workingCoilOf } from '../../src/record/rebuild.ts';
 import type { FiguresRecord } from '../../src/record/survey-schema.ts';
 import { surveyRecordOf } from '../../src/survey.ts';
+import { jobOf } from '../helpers/jobs.ts';
 import { parse, resonancesOf } from './solve.ts';
 
 const SWITCHES = ['open', 'shorted', 'shorted in sections', 'disconnected'] as const;
@@ -130,6 +132,32 @@ describe('the netlist of a coil', () => {
     const copper = series.reduce((sum, { value }) => sum + value, 0);
     // No material is named, so that the former loses nothing; four digits in the record.
     expect(Math.abs(copper / tap.working.resistanceOhm - 1)).toBeLessThan(1e-3);
+  });
+
+  test.each(['start', 'finish'])('two switches, %s earthed: every contact of the units switch', (earthed) => {
+    const job = jobOf({
+      want: { inductance: '2 uH to 100 uH', taps: 6 },
+      set: { capacitor: '15 pF to 380 pF', stray: '12 pF', lead: '2 pF' },
+      former: { 'outside-diameter': '50 mm to 90 mm' },
+      wire: ['24 AWG enamel'],
+      winding: { units: 5, pitch: 'spaced', earthed },
+    });
+    const one = recordOf(job, '0');
+    const coil = workingCoilOf(one);
+    const text = netlistOf(one);
+    const from = [0, ...coil.unitTaps];
+    expect(from.length).toBe(5);
+    from.forEach((start, unit) => {
+      for (const tap of one.windings[0]!.taps) {
+        const { winding, on } = coil.circuit(tap.turn, 72, 'open', start);
+        const expected = coupledResonances(winding, { ...on, distribution: 'spread' });
+        const units = moved(text, tap.tap).replace(/^\*?(Vunit(\d+) .*)$/gm, (_, card, of) =>
+          Number(of) === unit ? card : `*${card}`,
+        );
+        const params = { shrink: 1, ccap: 0, cstray: 72e-12, caerial: 0 };
+        expect(Math.abs(resonancesOf(parse(units, params))[0]! / expected.first - 1)).toBeLessThan(AGREES);
+      }
+    });
   });
 
   test('a position that is not there is refused', () => {
