@@ -138,7 +138,11 @@ function others(record: CoilRecord, columns: number): string[] {
     ['', ...FIGURES].map((_, index) => index > 0),
   );
   const legend = record.alternatives.flatMap((one, index) =>
-    hung(`  ${letter(index)}  `, `${one.wire}, ${one.pitchKind}: better in ${one.betterIn.join(', ')}`, columns),
+    hung(
+      `  ${letter(index)}  `,
+      `${one.wire}, ${one.pitchKind}, ${one.tapMethod}: better in ${one.betterIn.join(', ')}`,
+      columns,
+    ),
   );
   return [
     ...wrap(`What else was possible (${record.chosen.feasible} of ${record.chosen.tried} tried fit)`, columns),

@@ -22,6 +22,9 @@ export interface Spread {
   readonly leadUh: number;
 }
 
+/** Length of wire on a coil wound by hand, against its helix: a percent either way (common practice). */
+export const WIRE_SPREAD = 0.01;
+
 export type SpreadInput = keyof Spread;
 
 export interface Limits {

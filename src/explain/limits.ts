@@ -20,7 +20,6 @@ const INPUTS: Spreads = [
 /** Both limits; none when the record does not say what its limits come from. */
 export function limitFigures({ record, tap, coil }: Subject): Figure[] {
   const { spread } = record;
-  if (spread === undefined) return [];
   const { lowUh, highUh, changes } = limitsOf(coil.coil, [tap.turn], spread)[0]!;
   const half = (highUh - lowUh) / 2;
   const nominal = coil.coil.inductanceUh(tap.turn);

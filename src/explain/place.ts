@@ -2,11 +2,9 @@
 
 import { LITZ_TAKE_UP } from '../coil/coil.ts';
 import { angleOf, turnMiddles } from '../coil/layout.ts';
+import { WIRE_SPREAD } from '../coil/tolerance.ts';
 import { dcResistance, RESISTIVITY_20C } from '../physics/copper.ts';
 import { type Figure, input, type Step, type Subject, step } from './explanation.ts';
-
-/** Length of wire on a coil wound by hand, against the helix: a percent either way (common practice). */
-const WIRE_SPREAD = 0.01;
 
 export function positionFigure({ winding, tap, coil }: Subject): Figure {
   const { places, turns } = coil.coil;

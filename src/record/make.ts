@@ -178,6 +178,7 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     demand: demandOf(job, found),
     windings: [winding],
     surroundings: figures.surroundings,
+    spread,
     coverage: figures.coverage,
     switchKinds: figures.switchKinds,
     settings: figures.settings,

@@ -274,7 +274,6 @@ export const recordSchema = z.strictObject({
       turn: num.describe('place of a tap along the wire, turns'),
       leadUh: num.describe('lead of a tap'),
     })
-    .optional()
     .describe('half widths at 95 % of what the limits of every tap come from'),
   coverage: z
     .strictObject({

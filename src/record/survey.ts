@@ -2,7 +2,7 @@
 import type { Coil } from '../coil/coil.ts';
 import { angleOf } from '../coil/layout.ts';
 import type { Conditions } from '../coil/positions.ts';
-import { type Limits, limitsOf, type Spread } from '../coil/tolerance.ts';
+import { type Limits, limitsOf, type Spread, WIRE_SPREAD } from '../coil/tolerance.ts';
 import type { WorkingCoil } from '../coil/working-coil.ts';
 import type { CoilFile } from '../job/coil/file.ts';
 import { DENSITY } from '../physics/copper.ts';
@@ -13,8 +13,6 @@ import type { CoilRecord, Tap, Winding } from './schema.ts';
 import { type SurveyRecord, surveyRecordSchema } from './survey-schema.ts';
 import { surveyWarnings } from './survey-warnings.ts';
 
-/** Length of wire on a coil as wound by hand, against the helix: a percent either way (common practice). */
-const WIRE_SPREAD = 0.01;
 /** Straight leads of a coil as found: 25 mm at 1 nH/mm (common practice). */
 const LEAD_UH = 0.025;
 

@@ -1,7 +1,7 @@
 /** The winding and its taps as the record holds them, from a design. */
 
 import { angleOf } from '../coil/layout.ts';
-import { type Limits, limitsOf, type SpreadInput } from '../coil/tolerance.ts';
+import { type Limits, limitsOf, type SpreadInput, WIRE_SPREAD } from '../coil/tolerance.ts';
 import type { Job } from '../job/job.ts';
 import type { Design, DesignTap } from '../solve/design.ts';
 import { spreadOf } from '../solve/spread.ts';
@@ -9,9 +9,6 @@ import type { WorkingFigures } from './figures.ts';
 import { decimals, mm, significant } from './rounding.ts';
 import type { PartsRecord, Tap, UnitTap, Winding } from './schema.ts';
 import { LEAD_MM } from './steps.ts';
-
-/** Length of wire on the coil as wound by hand, against the helix: a percent either way (common practice). */
-const WIRE_SPREAD = 0.01;
 
 /** What makes the limits of a tap wide, in words. */
 export const INPUT: Record<SpreadInput, string> = {

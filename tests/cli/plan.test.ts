@@ -295,7 +295,7 @@ describe('what plan says', () => {
     }
     for (const [index, one] of record.alternatives.entries()) {
       expect(text).toContain(
-        `\n  ${'abcdefgh'[index]}  ${one.wire}, ${one.pitchKind}: better in ${one.betterIn.join(', ')}\n`,
+        `\n  ${'abcdefgh'[index]}  ${one.wire}, ${one.pitchKind}, ${one.tapMethod}: better in ${one.betterIn.join(', ')}\n`,
       );
     }
     for (const { text: warning } of record.warnings) expect(text).toContain(`- ${warning}`);

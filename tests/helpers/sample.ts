@@ -120,6 +120,7 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
       set: { capacitorLowPf: 15, capacitorHighPf: 380, strayPf: 12, aerialPf: 60, switch: 'open' },
     },
     surroundings: { leadPf: 2, celsius: 20, rest: 'open', formerLossTangent: 0.012, formerLoss: 'estimate: half' },
+    spread: { diameterMm: 0.15, pitch: 0.002, bareMm: 0.005, gap: 0.5, turn: 0.008, leadUh: 0.025 },
     coverage: {
       neighbours: turnsAt.slice(1).map((_, i) => ({ from: i + 1, to: i + 2, overlapPercent: 5.2 })),
       gaps: [],
