@@ -204,11 +204,3 @@ export async function stock(given: ArgumentsCamelCase<StockArguments>): Promise<
     columns: process.stdout.columns ?? 80,
   });
 }
-
-/** For `yargs.command(...)`. */
-export const stockModule = {
-  command: 'stock [what] [words..]',
-  describe: 'list the wires, tubes, materials and spacers that are known, with their standards',
-  builder: describeStock,
-  handler: stock,
-};

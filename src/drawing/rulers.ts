@@ -3,7 +3,7 @@ import type { Measure } from './boxes.ts';
 import type { Drawing, Shape } from './drawing.ts';
 import { arrow, label, line, rectangle, SMALL_MM } from './shapes.ts';
 
-export const RULER_MM = 100;
+const RULER_MM = 100;
 /** How far a ruler reaches beside its line, figures included. */
 export const RULER_BREADTH_MM = 8.5;
 
@@ -32,7 +32,7 @@ export function rulerUp(unit: string): Drawing {
   return { shapes };
 }
 
-export const SQUARE_MM = 50;
+const SQUARE_MM = 50;
 /** Room for the square. */
 export const SQUARE_ROOM_MM = SQUARE_MM + 2;
 

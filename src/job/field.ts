@@ -139,7 +139,7 @@ export function choice<const W extends string>(words: readonly W[], doc: Doc) {
   return field((raw) => readChoice(raw, words), doc, { enum: [...words] });
 }
 
-export function readChoice<W extends string>(raw: unknown, words: readonly W[]): Parsed<W> {
+function readChoice<W extends string>(raw: unknown, words: readonly W[]): Parsed<W> {
   const found = words.find((word) => word === raw);
   if (found !== undefined) return { ok: true, value: found };
   const near = typeof raw === 'string' ? nearest(raw, words) : null;

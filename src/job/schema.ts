@@ -32,7 +32,7 @@ export const PREFERENCES = ['least loss', 'compact', 'least wire', 'closest taps
 /** Most switch positions of one coil. */
 export const MOST_TAPS = 60;
 /** Most contacts of a units switch. */
-export const MOST_UNITS = 20;
+const MOST_UNITS = 20;
 
 const wantSchema = z
   .strictObject({

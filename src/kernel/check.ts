@@ -8,9 +8,9 @@ import { readStl } from './stl.ts';
 import { weld } from './weld.ts';
 
 /** Outer size against the dimensions. */
-export const BOX_TOLERANCE_MM = 0.01;
+const BOX_TOLERANCE_MM = 0.01;
 /** Volume against the formula, which leaves out where strokes and holes cross; a lost ear or flange is several percent. */
-export const VOLUME_TOLERANCE = 0.005;
+const VOLUME_TOLERANCE = 0.005;
 
 export interface Measured {
   readonly triangles: number;

@@ -3,7 +3,7 @@ import { lstat, readFile } from 'node:fs/promises';
 import { join } from 'node:path';
 
 /** The file that marks a folder as ours. */
-export const RECORD_NAME = 'plan.json';
+const RECORD_NAME = 'plan.json';
 /** No record is larger; what is, is not ours. */
 const LARGEST_BYTES = 64_000_000;
 

@@ -351,7 +351,6 @@ export type Former = z.infer<typeof formerSchema>;
 export type Hole = z.infer<typeof holeSchema>;
 export type Step = z.infer<typeof stepSchema>;
 export type Check = z.infer<typeof checkSchema>;
-export type RecordWire = z.infer<typeof wireSchema>;
 export type Alternative = z.infer<typeof alternativeSchema>;
 export type Coverage = CoilRecord['coverage'];
 

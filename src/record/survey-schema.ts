@@ -6,13 +6,13 @@
 import * as z from 'zod';
 import { recordSchema } from './schema.ts';
 
-export const foundFormerSchema = z.strictObject({
+const foundFormerSchema = z.strictObject({
   kind: z.literal('as found'),
   outsideDiameterMm: z.number(),
   material: z.string().nullable(),
 });
 
-export const surveySectionSchema = z.strictObject({
+const surveySectionSchema = z.strictObject({
   fromTurn: z.number(),
   toTurn: z.number(),
   pitchMm: z.number(),

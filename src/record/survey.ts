@@ -25,7 +25,7 @@ const INPUT: Record<keyof Spread, string> = {
   leadUh: 'leads',
 };
 
-export function spreadOfSurvey(file: CoilFile): Spread {
+function spreadOfSurvey(file: CoilFile): Spread {
   const { wire } = file.coil;
   return {
     diameterMm: file.spread.diameterMm,

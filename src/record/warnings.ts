@@ -11,7 +11,7 @@ type Warning = CoilRecord['warnings'][number];
 const FAR_OFF = 0.01;
 
 /** Gaps that no position tunes, and second resonances that let strong signals through. */
-export function coverageWarnings(coverage: CoilRecord['coverage']): Warning[] {
+function coverageWarnings(coverage: CoilRecord['coverage']): Warning[] {
   if (coverage === null) return [];
   const gaps = coverage.gaps.map(({ from, to, lowKhz, highKhz, tapsToClose }) => ({
     code: 'gap',

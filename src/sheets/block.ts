@@ -33,7 +33,7 @@ export function heading(text: string, widthMm: number, measure: Measure): Block 
 }
 
 /** Type of headings, 10.5 pt. */
-export const HEADING_MM = (10.5 * 25.4) / 72;
+const HEADING_MM = (10.5 * 25.4) / 72;
 
 /** An empty box to tick, its lower left corner given. */
 export const tickBox = (x: number, y: number): Shape => rectangle(x, y, 3.4, 3.4, 'thin');

@@ -9,8 +9,6 @@ import { CAP_SHARE } from '../drawing/shapes.ts';
 import { fontFiles } from './fonts.ts';
 
 export const PAPER_MM = { A4: [210, 297], Letter: [215.9, 279.4] } as const;
-export type PaperName = keyof typeof PAPER_MM;
-
 export interface Page extends Drawing {
   readonly widthMm: number;
   readonly heightMm: number;

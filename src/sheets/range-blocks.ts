@@ -52,7 +52,7 @@ const khz = (value: number) => fixed(value, value >= 1000 ? 0 : 1);
 const three = (value: number) => (value >= 100 ? fixed(value, 0) : significantText(value, 3));
 const half = (value: number) => `${Number(value.toPrecision(2))}`;
 
-export function chartOf(record: FiguresRecord): RangeChart | null {
+function chartOf(record: FiguresRecord): RangeChart | null {
   const positions = record.windings[0]!.taps.flatMap(({ tap, range }) => (range === null ? [] : [{ tap, ...range }]));
   if (positions.length === 0) return null;
   const { bandLowKhz, bandHighKhz } = record.demand;

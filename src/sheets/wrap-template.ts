@@ -18,7 +18,7 @@ import { fixed } from './text.ts';
 import { type Joint, joints, SHARED_MM, type Tile, type Tiling, tile } from './tiles.ts';
 
 /** Left free round every page, mm: what most printers cannot print on. */
-export const TEMPLATE_MARGIN_MM = 7;
+const TEMPLATE_MARGIN_MM = 7;
 const RULER_BAND = RULER_BREADTH_MM + 3;
 const HEAD_GAP = 3;
 const INFO = { width: 47, height: 14 };

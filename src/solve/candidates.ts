@@ -37,7 +37,7 @@ export interface Candidate {
 /** Steps of the diameter grid on a printed former, mm. */
 const DIAMETER_STEP_MM = 1;
 /** A groove of fewer layers does not print (common practice). */
-export const LEAST_LAYERS = 4;
+const LEAST_LAYERS = 4;
 /** Wider than this many wires a pitch only costs length. */
 const WIDEST_IN_WIRES = 3;
 /** Thinner wire breaks under a hand that winds it on a form (common practice); who names it gets it. */
@@ -46,7 +46,7 @@ const THINNEST_FROM_STOCK_MM = 0.15;
 const THICKEST_SHARE = 1 / 15;
 
 /** Closeness of a close winding: pitch over covered diameter. */
-export function looseness(wire: Wire): number {
+function looseness(wire: Wire): number {
   return wire.covering === 'enamel' || wire.covering === 'enamel heavy' ? 1.02 : 1;
 }
 
@@ -69,13 +69,13 @@ function spacedBy(wire: Wire, spacer: { name: string; thicknessMm: number }): Pi
 }
 
 /** Narrowest groove pitch that a wire and a layer height allow, mm. */
-export function leastGroovePitchMm(overallMm: number, layerMm: number): number {
+function leastGroovePitchMm(overallMm: number, layerMm: number): number {
   const needed = grooveFor(overallMm).widthMm + overallMm / 4;
   return layerMm * Math.max(LEAST_LAYERS, Math.ceil(needed / layerMm - 1e-9));
 }
 
 /** All pitches of a wire that the job permits. */
-export function pitchesFor(job: Job, wire: Wire): Pitch[] {
+function pitchesFor(job: Job, wire: Wire): Pitch[] {
   const asked = job.winding.pitch;
   const bare = wire.covering === 'bare';
   const printed = job.former.kind === 'printed';

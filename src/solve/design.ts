@@ -84,7 +84,7 @@ const WHOLE_OFF = 1e-3;
 /** A printed former grows 0.1 % at most by its angle step; what is finer than this is not a miss of the band. */
 const BAND_SLACK = 2e-3;
 
-export function sectionOf(coil: Coil, turn: number) {
+function sectionOf(coil: Coil, turn: number) {
   const { wire, meanDiameterMm } = coil.shape;
   const deadTurns = Math.max(0, coil.turns - turn);
   return { wire, meanDiameterMm, turns: turn, deadTurns, pitchMm: coil.meanPitchMm(turn), wireM: coil.wireM(turn) };

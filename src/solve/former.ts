@@ -35,7 +35,7 @@ export function tensionN(copperMm2: number): { low: number; high: number } {
 }
 
 /** What the hoop pressure of the winding takes off the diameter, a fraction: T / (p t E). */
-export function hoopStrain(tension: number, pitchMm: number, wallMm: number, modulusGPa: number): number {
+function hoopStrain(tension: number, pitchMm: number, wallMm: number, modulusGPa: number): number {
   return tension / (pitchMm * wallMm * modulusGPa * 1e3);
 }
 
@@ -65,7 +65,7 @@ function finishStep(around: Around): number {
   return 1 + arc / (Math.PI * insideMm(around));
 }
 
-export function finishHoles(around: Around, coil: Coil): { turn: number; offset: number }[] {
+function finishHoles(around: Around, coil: Coil): { turn: number; offset: number }[] {
   const step = finishStep(around);
   const trim = around.job.winding.finishTrim;
   const back = trim ? Math.min(FINISH_BACK, Math.floor(coil.turns - 1)) : 0;

@@ -215,7 +215,7 @@ function searchFor(job: Job, demand: Demand, candidates: readonly Candidate[]): 
 }
 
 /** Better in the aspect; equal within 1e-9 the one with less loss. */
-export function isBetter(a: Design, b: Design, aspect: Aspect): boolean {
+function isBetter(a: Design, b: Design, aspect: Aspect): boolean {
   const [x, y] = [aspect.of(a.metrics), aspect.of(b.metrics)];
   if (Math.abs(x - y) > 1e-9 * Math.abs(y)) return x < y;
   return a.metrics.lossFactor < b.metrics.lossFactor;

@@ -44,7 +44,7 @@ function turnsBetweenHoles(holeMm: number, pitchMm: number): number {
 }
 
 /** A hole of two wires clears the turns beside it. */
-export function hasLand(pitchMm: number, overallMm: number): boolean {
+function hasLand(pitchMm: number, overallMm: number): boolean {
   return wireHoleMm(overallMm, 2) <= 2 * pitchMm - overallMm + 1e-9;
 }
 
