@@ -4,7 +4,6 @@
  */
 import { Fault, type FaultParts } from '../fault.ts';
 import { helixLength } from '../physics/helix.ts';
-import type { Finding } from './checks.ts';
 import { completeCoil } from './coil/defaults.ts';
 import type { CoilFile, MeasuredCoil } from './coil/file.ts';
 import { laySections, placeOf } from './coil/lay.ts';
@@ -22,6 +21,7 @@ import { groupWire, namedWire } from './coil/wire.ts';
 import { type Assumed, isData } from './defaults.ts';
 import { faultsOf, keyText } from './faults.ts';
 import { COIL_FILE } from './file-kind.ts';
+import type { Finding } from './finding.ts';
 import { readTree } from './tree.ts';
 
 /** Reads a measured coil, YAML or JSON. Throws a {@link Fault} with exit code 3. `file` is for messages and for a name. */

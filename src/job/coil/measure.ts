@@ -1,7 +1,7 @@
 /** What a coil file measured, turned into the winding it means; and what cannot be, each fault naming both numbers. */
 import { lengthText, tidy } from '../../quantity/format.ts';
 import type { Wire } from '../../stock/wire.ts';
-import type { Finding } from '../checks.ts';
+import type { Finding } from '../finding.ts';
 import type { Path } from '../tree.ts';
 import type { MeasuredSection } from './file.ts';
 import { at, finding } from './finding.ts';

@@ -1,6 +1,6 @@
 /** Taps of a measured coil by turns or by places, and the frequencies at which its figures hold. */
 import { frequencyText, lengthText, percentText, tidy } from '../../quantity/format.ts';
-import type { Finding } from '../checks.ts';
+import type { Finding } from '../finding.ts';
 import type { MeasuredSection } from './file.ts';
 import { at, finding } from './finding.ts';
 import { laySections, placeOf, turnAt } from './lay.ts';

@@ -3,7 +3,7 @@ import { lengthText } from '../../quantity/format.ts';
 import type { FoundWire } from '../../stock/find.ts';
 import type { Covering, Wire } from '../../stock/wire.ts';
 import { allWires } from '../../stock/wires.ts';
-import type { Finding } from '../checks.ts';
+import type { Finding } from '../finding.ts';
 
 export interface WireGroup {
   readonly bare?: number | undefined;
