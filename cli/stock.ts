@@ -1,6 +1,7 @@
 /** `stock`: lists the wires, tubes, materials and spacers that are known, with where their figures come from. */
 import type { ArgumentsCamelCase, Argv } from 'yargs';
 import { Fault, type FaultExit, type FaultParts } from '../src/fault.ts';
+import { nearest } from '../src/job/nearest.ts';
 import { findWire } from '../src/stock/find.ts';
 import { type Material, materials } from '../src/stock/materials.ts';
 import { byDiameter, byWords } from '../src/stock/search.ts';
@@ -81,11 +82,19 @@ function nothing(what: StockKind, options: StockOptions): never {
     toMm === undefined ? [] : [`to ${toMm} mm`],
   ].flat();
   const found = what === 'wires' && filter !== undefined ? findWire(filter) : undefined;
+  const [first = ''] = (filter ?? '').split(' ');
+  const kind = what === 'wires' ? nearest(first, STOCK_KINDS) : null;
   return refuse(3, {
     code: 'nothing-in-stock',
+    place: { key: 'stock' },
     got: asked.join(' '),
     expected: `words and diameters that some of the ${what} in stock have`,
-    todo: found?.ok === false ? found.todo : `\`coilwright stock ${what}\` lists them all`,
+    todo:
+      kind !== null
+        ? `did you mean ${kind}?`
+        : found?.ok === false
+          ? found.todo
+          : `\`coilwright stock ${what}\` lists them all`,
   });
 }
 

@@ -103,5 +103,6 @@ describe('stock', () => {
     expect(empty.faults[0]!.todo).toBe('take `0.5 mm enamel` or `0.56 mm enamel`');
     expect(fault({ what: 'tubes', fromMm: 500 }).faults[0]).toMatchObject({ got: 'from 500 mm' });
     expect(fault({ what: 'materials', fromMm: 1 }).exit).toBe(2);
+    expect(fault({ filter: 'tubs card' }).faults[0]).toMatchObject({ got: '"tubs card"', todo: 'did you mean tubes?' });
   });
 });
