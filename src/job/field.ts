@@ -188,7 +188,8 @@ export function count(low: number, high: number, doc: Doc) {
       ok: false,
       got: shown(raw),
       expected: `a whole number from ${low} to ${high}`,
-      todo: 'write the number alone, without a unit',
+      todo:
+        typeof raw === 'number' ? 'write a whole number within these limits' : 'write the number alone, without a unit',
     };
   };
   return field(read, doc, { type: 'integer', minimum: low, maximum: high });

@@ -193,7 +193,7 @@ coilwright: job.yaml, line 3, former.longest
     `coilwright: job.yaml, line 2, want.taps
   got       400
   expected  a whole number from 1 to 60
-  to do     write the number alone, without a unit
+  to do     write a whole number within these limits
 `,
   ],
   [
