@@ -3,6 +3,7 @@ import { CORRECTION, STEP } from '../../templates/wording/steps.ts';
 import { Coil } from '../coil/coil.ts';
 import type { Job } from '../job/job.ts';
 import type { Design } from '../solve/design.ts';
+import { findMaterial } from '../stock/materials.ts';
 import { decimals } from './rounding.ts';
 import type { CoilRecord, Step, Winding } from './schema.ts';
 
@@ -24,6 +25,25 @@ function percentPerTenth(design: Design): string {
   return (100 * (wider.inductanceUh(coil.turns) / coil.inductanceUh(coil.turns) - 1)).toFixed(2);
 }
 
+/** What softens below this does not stand a soldering iron beside it; phenolic paper and card do. */
+const SOFT_BELOW_C = 120;
+
+/** Whether a soldering iron harms a former of this material. */
+function softens(material: string): boolean {
+  const found = findMaterial(material);
+  return found.ok && (found.material.softensC ?? SOFT_BELOW_C) < SOFT_BELOW_C;
+}
+
+/** Which holes are drilled how wide; all alike: one size. */
+function drillText(holes: Design['holes']): string {
+  const sizeOf = (some: Design['holes']) =>
+    [...new Set(some.map((hole) => hole.diameterMm))].map((size) => `${size} mm`).join(', ');
+  const wide = holes.filter((hole) => hole.purpose === 'tap');
+  const rest = holes.filter((hole) => hole.purpose !== 'tap');
+  const alike = wide.length === 0 || sizeOf(wide) === sizeOf(rest);
+  return STEP.holes(holes.length, alike ? sizeOf(rest) : null, sizeOf(wide), sizeOf(rest));
+}
+
 export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
   const { former, method, holes } = design;
   const steps: Step[] = [];
@@ -42,10 +62,7 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
       text,
     });
   add('prepare', STEP.measure(former.outsideDiameterMm.toFixed(2), percentPerTenth(design)));
-  if (former.kind === 'tube') {
-    const sizes = [...new Set(holes.map((hole) => hole.diameterMm))].sort((a, b) => a - b);
-    add('prepare', STEP.drill(`the ${holes.length} holes (${sizes.map((size) => `${size} mm`).join(', ')})`));
-  }
+  if (former.kind === 'tube') add('prepare', STEP.drill(drillText(holes)));
   if (method.holes === 0 && winding.taps.length > 1) add('prepare', STEP.mark);
   const metres = (winding.wireLengthM + winding.leadsM).toFixed(1);
   add('prepare', STEP.set(metres, winding.tensionLowN.toFixed(1), winding.tensionHighN.toFixed(1)));
@@ -78,7 +95,7 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
     last = tap.turn;
   }
   if (winding.pitchKind === 'spacer') add('after', STEP.takeSpacer);
-  if (winding.taps.length > 1) add('after', STEP.taps);
+  if (winding.taps.length > 1) add('after', STEP.taps[softens(former.material) ? 'soft' : 'firm']);
   add('after', STEP.afterMeasure);
   const textile = /cotton|silk/.test(winding.wire.covering);
   add('after', textile ? STEP.seal.textile : STEP.seal.other);

@@ -23,7 +23,7 @@ export function facts(record: CoilRecord, widthMm: number, measure: Measure): Bl
         ? FACTS.groove
         : FACTS.spacer(winding.spacerName, short(winding.spacerMm, 3));
   const cells: [string, string, string][] = [
-    [FACTS.wire, wire.name, FACTS.overall(short(wire.overallMm, 3))],
+    [FACTS.wire, wire.name, FACTS[wire.covering === 'bare' ? 'uncovered' : 'overall'](short(wire.overallMm, 3))],
     [FACTS.winding, FACTS.turns(short(winding.turns, 3)), FACTS.hand[record.frame.hand]],
     [FACTS.pitch, `${short(winding.pitchMm, 4)} mm`, pitchWords],
     [FACTS.tension, FACTS.newton(short(winding.tensionLowN, 1), short(winding.tensionHighN, 1)), FACTS.steady],

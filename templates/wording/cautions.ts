@@ -9,6 +9,12 @@ export interface CautionNeeds {
   readonly tube: boolean;
 }
 
+/** What a tube of this material asks for besides. */
+const TUBE: Readonly<Record<string, readonly string[]>> = {
+  card: ['Card is baked dry only under watch and away from any flame.'],
+  'phenolic paper': ['Its dust is harmful: wear a dust mask, wipe it up damp.'],
+};
+
 export function cautionsFor(needs: CautionNeeds): string[] {
   const list = [
     'Keep hair, sleeves and gloves away from a turning mandrel; with a drill, only at its slowest speed.',
@@ -21,7 +27,7 @@ export function cautionsFor(needs: CautionNeeds): string[] {
     list.push(
       `The print nozzle and bed are hot. A former of ${needs.material} softens in heat${needs.material === 'PLA' ? ' (near 60 °C)' : ''}: no lamp, sun or iron on it.`,
     );
-  if (needs.tube) list.push('Clamp the tube to drill it. Card is baked dry only under watch and away from any flame.');
+  if (needs.tube) list.push(['Clamp the tube to drill it.', ...(TUBE[needs.material] ?? [])].join(' '));
   list.push(
     'An outdoor aerial near a power line kills. Aerial, earth and lightning protection follow the local electrical code and are for a licensed installer.',
     'A set run from the mains may have a live chassis: service by licensed people only. This coil is for receiving, not for a transmitter.',

@@ -37,6 +37,9 @@ export const STEP = {
   measure: (mm: string, effect: string) =>
     `Measure the former: ${mm} mm outside. 0.1 mm more is ${effect} % more inductance.`,
   drill: (what: string) => `Wrap the template round the tube, printed side out, and drill ${what}. Take the burrs off.`,
+  /** `size` when all holes are alike. */
+  holes: (count: number, size: string | null, taps: string, rest: string) =>
+    size === null ? `the ${count} holes (taps ${taps}, all others ${rest})` : `the ${count} holes (${size})`,
   mark: 'Wrap the template and mark the angle and place of every tap on the former.',
   set: (metres: string, low: string, high: string) =>
     `Have ${metres} m of wire on the spool. Set the drag to ${low} to ${high} N.`,
@@ -56,7 +59,10 @@ export const STEP = {
   finish: (mm: number) => `Keep the tension; lead the end in at F and out at F+1, tight; leave ${mm} mm.`,
   afterMeasure: 'Measure by the sheet “to check by” before the wire is cut short; trim at the finish row.',
   takeSpacer: 'Unwind the spacer, or leave it in; nothing here changes if it stays.',
-  taps: 'Bare, tin and solder the taps.',
+  taps: {
+    firm: 'Bare, tin and solder the taps.',
+    soft: 'Bare, tin and solder the taps, with card between joint and former and the iron on for seconds only: the former softens.',
+  },
   seal: {
     textile: 'Dry the coil in a warm place for a day; dope it sparingly, let it cure a day, measure again.',
     other: 'Fix the end turns with a touch of varnish at three places; let it cure a day, measure again.',

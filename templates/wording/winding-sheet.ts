@@ -16,13 +16,15 @@ export const TITLE = {
 export const FACTS = {
   wire: 'Wire',
   overall: (mm: string) => `${mm} mm over the covering`,
+  uncovered: (mm: string) => `${mm} mm thick`,
   winding: 'Winding',
   turns: (turns: string) => `${turns} turns`,
   hand: { right: 'right-hand', left: 'left-hand' },
   pitch: 'Pitch',
   close: 'close wound, turn against turn',
   groove: 'in the groove of the former',
-  spacer: (name: string, mm: string) => `spacer: ${name}, ${mm} mm`,
+  /** Lines are named by their size, threads are not. */
+  spacer: (name: string, mm: string) => `spacer: ${name}${name.endsWith(' mm') ? '' : `, ${mm} mm`}`,
   tension: 'Tension',
   newton: (low: string, high: string) => `${low} to ${high} N`,
   steady: 'steady, from start to finish',

@@ -242,3 +242,29 @@ describe('the other hand', () => {
       expect(LEFT[key]).toEqual(rest[key]);
   });
 });
+
+describe('what the bench is told', () => {
+  const steps = (record: CoilRecord) => record.steps.map(({ text }) => text).join('\n');
+  const tube = recordOf(starterJob('cracked-form-replacement'), '1.2.3');
+
+  it('says of every hole in a tube how wide it is drilled', () => {
+    const said = /the (\d+) holes \(taps ([\d.]+) mm, all others ([\d.]+) mm\)/.exec(steps(tube))!;
+    expect(Number(said[1])).toBe(tube.holes.length);
+    expect(tube.holes.length).toBeGreaterThan(5);
+    for (const { purpose, diameterMm } of tube.holes) expect(diameterMm).toBe(Number(said[purpose === 'tap' ? 2 : 3]));
+  });
+
+  it('shields a former that softens from the iron, and only such a one', () => {
+    expect([tube.former.material, RIGHT.former.material]).toEqual(['phenolic paper', 'PLA']);
+    expect(steps(RIGHT)).toContain('the former softens');
+    expect(steps(tube)).not.toContain('softens');
+  });
+
+  it('warns of the dust of phenolic paper, and of baking only with card', () => {
+    expect(tube.cautions.join(' ')).toContain('dust');
+    expect(tube.cautions.join(' ')).not.toContain('baked');
+    const card = recordOf(jobOf(change(TUBE, 'former', { material: 'card' })), '1.2.3').cautions.join(' ');
+    expect(card).toContain('baked');
+    expect(card).not.toContain('dust');
+  });
+});
