@@ -61,7 +61,6 @@ function twistedLoop(stage: number): Shape[] {
   shapes.push(circle(15, 19.2, 1.3, WIRE));
   if (stage === 2) {
     shapes.push(end(13.6, 14.4, 2.8, 7), circle(15, 8.4, 1.2, 'thin', 0));
-    shapes.push(line(17.5, 8.4, 21, 11, 'hair'), line(17, 18, 21, 18, 'hair'));
   }
   return shapes;
 }
@@ -78,7 +77,6 @@ function liftedTurn(stage: number): Shape[] {
   shapes.push(rectangle(13.6, 6, 2.8, 4.2, 'thin', 0.8), circle(15, 11.8, 1.6, 'thin', 1));
   if (stage === 0) shapes.push(...arrow(15, 19, 15, 14.2));
   if (stage >= 1) shapes.push(end(13.7, 12.6, 2.6, 0.9));
-  if (stage === 1) shapes.push(line(17, 13.4, 21, 16, 'hair'));
   if (stage === 2) shapes.push(circle(15, 14, 1.1, 'thin', 0), line(15, 14, 15, 22, WIRE));
   return shapes;
 }
@@ -150,7 +148,7 @@ function lug(stage: number): Shape[] {
   shapes.push(rectangle(13.2, 6.6, 3.6, 13.4, 'thin', 0.85), circle(15, 17.6, 1, 'thin', 1));
   shapes.push(line(1, 8, 29, 8, WIRE));
   if (stage === 0) shapes.push(...arrow(22, 19, 22, 10.5));
-  if (stage === 1) shapes.push(end(13.2, 7.4, 3.6, 1.2), line(17.2, 8.8, 21, 12, 'hair'));
+  if (stage === 1) shapes.push(end(13.2, 7.4, 3.6, 1.2));
   if (stage === 2)
     shapes.push(
       circle(15, 8, 1.5, 'thin', 0),
@@ -211,7 +209,7 @@ function drawnIn(stage: number): Shape[] {
     return shapes;
   }
   shapes.push(...twist(15, 11, 7.5, true), circle(15, 2.4, 1.2, WIRE));
-  if (stage === 2) shapes.push(end(13.6, 0.8, 2.8, 5.4), line(17, 3.5, 21, 6, 'hair'));
+  if (stage === 2) shapes.push(end(13.6, 0.8, 2.8, 5.4));
   return shapes;
 }
 
