@@ -4,8 +4,9 @@
  */
 import PDFDocument from 'pdfkit';
 import type { Measure } from '../drawing/boxes.ts';
-import type { Drawing, Shape, Stroke, Text, Weight } from '../drawing/drawing.ts';
+import type { Drawing, Shape, Stroke, Text } from '../drawing/drawing.ts';
 import { CAP_SHARE } from '../drawing/shapes.ts';
+import { DASH_MM, WEIGHT_MM } from '../drawing/stroke.ts';
 import { fontFiles } from './fonts.ts';
 
 export const PAPER_MM = { A4: [210, 297], Letter: [215.9, 279.4] } as const;
@@ -20,8 +21,6 @@ export interface DocumentInfo {
 }
 
 const POINTS = 72 / 25.4;
-const WEIGHT_MM: Record<Weight, number> = { outline: 0.5, thin: 0.25, hair: 0.12 };
-const DASH_MM = { dashed: [1.6, 1], centre: [5, 1, 1, 1] };
 
 /** What is used of a glyph and of a face of pdfkit; its type declarations leave them out. */
 interface Glyph {
