@@ -91,7 +91,8 @@ function crossAt(x: number, y: number, reach: number): Shape[] {
   return [line(x - reach, y, x + reach, y, 'hair'), line(x, y - reach, x, y + reach, 'hair')];
 }
 
-function markOf(place: Place, x: number): Shape[] {
+/** A hole with its centre cross; an oblique cross where there is none. */
+export function markOf(place: Place, x: number): Shape[] {
   const y = place.axialMm;
   const r = place.diameterMm / 2;
   if (r > 0) return [circle(x, y, r, 'hair', undefined, place.name), ...crossAt(x, y, r + 0.7)];
