@@ -3,7 +3,7 @@
  *
  *     job ──> demand ──> candidates ──> designs ──> chosen coil ──> record ──┬──> winding sheet (PDF)
  *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template, range sheet (PDF), netlist
- *      │     demand)     candidates)    design)     search)        make)     ├──> former (STL, in a worker)
+ *      │     demand)     candidates)    design)     search)        make)     ├──> hole pattern (SVG, DXF), former (STL, in a worker)
  *      └────────────────────── nothing fits: solve/refusal ──> fault 4       └──> plan.json
  *
  * Everything right of the record reads the record and nothing else. The worker that builds the former warms up while the
@@ -42,12 +42,14 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
     const { wrapTemplate } = await import('./sheets/wrap-template.ts');
     const { rangeSheet } = await import('./sheets/range-sheet.ts');
+    const { holePatternFiles } = await import('./sheets/hole-pattern.ts');
     const sheet = await windingSheet(record);
     const template = await wrapTemplate(record);
     const ranges = await rangeSheet(record);
     const files: OutputFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
       { path: 'wrap-template.pdf', kind: 'pdf', bytes: template, note: 'true scale, print at 100 %' },
+      ...holePatternFiles(record),
       { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
       netlistFile(record),
     ];

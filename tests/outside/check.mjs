@@ -81,6 +81,21 @@ function stl(path) {
   }
 }
 
+function svg(path) {
+  if (has('rsvg-convert')) {
+    const { status, stderr } = run('rsvg-convert', ['--output', join(work, 'pattern.png'), path]);
+    check(`rsvg-convert ${path}`, status === 0 && stderr === '', stderr);
+  }
+  if (has('inkscape')) {
+    const { status, stderr } = run('inkscape', [`--export-filename=${join(work, 'pattern.pdf')}`, path]);
+    check(`inkscape ${path}`, status === 0, stderr);
+  }
+  if (has('xmllint')) {
+    const { status, stderr } = run('xmllint', ['--noout', '--nonet', path]);
+    check(`xmllint ${path}`, status === 0, stderr);
+  }
+}
+
 let resonances = 0;
 let worstResonance = 0;
 function netlist(path, record) {
@@ -113,10 +128,12 @@ try {
     check(`plan ${name}`, status === 0, stderr);
     if (status !== 0) continue;
     const record = JSON.parse(readFileSync(join(out, 'plan.json'), 'utf8'));
+    check(`plan ${name}: a hole pattern`, record.files.filter(({ kind }) => kind === 'svg').length === 1, out);
     check(`plan ${name}: a netlist`, record.files.filter(({ kind }) => kind === 'netlist').length === 1, out);
     for (const file of record.files) {
       if (file.kind === 'pdf') pdf(join(out, file.path), record);
       if (file.kind === 'stl') stl(join(out, file.path));
+      if (file.kind === 'svg') svg(join(out, file.path));
       if (file.kind === 'netlist') netlist(join(out, file.path), record);
     }
   }
