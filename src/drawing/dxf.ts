@@ -16,10 +16,10 @@ const COLOUR: Record<Layer, number> = { HOLES: 7, CUT: 7, MARKS: 8, TEXT: 8 };
 const LINE_TYPE = { solid: 'CONTINUOUS', dashed: 'DASHED', centre: 'CENTER' } as const;
 const LONGEST = 200;
 const SPELT: readonly (readonly [RegExp, string])[] = [
-  [/[µμ]/g, 'u'],
-  [/[ΩΩ]/g, ' ohm'],
+  [/[\u00b5\u03bc]/g, 'u'],
+  [/[\u03a9\u2126]/g, ' ohm'],
   [/°/g, ' deg'],
-  [/[×]/g, 'x'],
+  [/×/g, 'x'],
   [/[−–—]/g, '-'],
 ];
 
