@@ -28,6 +28,18 @@ export function ringSumMatrixFree(
   return whole + arcAfter(positions, count - 1, positions[count - 1]!, lastFraction, radius, wireRadius);
 }
 
+/** Steepest pitch over diameter at which rings were held against the true helix. */
+const STEEPEST = 0.1;
+
+/**
+ * Whether turns of this pitch (m) on this diameter (m) are flat enough to count as rings to 0.2 %.
+ *
+ * Example: ringsValid(0.006, 0.05) = false
+ */
+export function ringsValid(pitch: number, diameter: number): boolean {
+  return pitch <= STEEPEST * diameter;
+}
+
 export interface CumulativeInductance {
   /** Inductance (H) of turns 0 to `turn`, for any real turn from 0 (where it is 0) to the number of turns; RangeError beyond. */
   at(turn: number): number;

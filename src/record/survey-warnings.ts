@@ -4,9 +4,11 @@ import type { WorkingCoil } from '../coil/working-coil.ts';
 import type { CoilFile } from '../job/coil/file.ts';
 import { HIGHEST_KHZ, LOWEST_KHZ } from '../job/coil/schema.ts';
 import { selfCapacitanceValid } from '../physics/medhurst.ts';
+import { ringsValid } from '../physics/ring-sum.ts';
 import { frequencyText, lengthText, percentText, tidy } from '../quantity/format.ts';
 import type { Figures } from './figures.ts';
 import type { CoilRecord } from './schema.ts';
+import { steepText } from './warnings.ts';
 
 type Warning = CoilRecord['warnings'][number];
 
@@ -53,6 +55,9 @@ export function surveyWarnings(file: CoilFile, coil: Coil, working: WorkingCoil,
       'wire-thick-for-former',
       `Wire of ${lengthText(wire.bareMm, 3)} on a diameter of ${lengthText(file.coil.meanDiameterMm)}: thicker than a tenth of it, inductance may be off by a percent.`,
     );
+  const widest = Math.max(...sections.map(({ pitchMm }) => pitchMm));
+  if (!ringsValid(widest / 1e3, file.coil.meanDiameterMm / 1e3))
+    add('turns-steep', steepText(lengthText(widest, 4), lengthText(file.coil.meanDiameterMm)));
   const narrowest = Math.min(...sections.map(({ pitchMm }) => pitchMm));
   if (wire.strands === 1 && wire.bareMm / narrowest > TIGHT)
     add(

@@ -2,6 +2,7 @@
 import type { Job } from '../job/job.ts';
 import { strandLossValid } from '../physics/loss.ts';
 import { selfCapacitanceValid } from '../physics/medhurst.ts';
+import { ringsValid } from '../physics/ring-sum.ts';
 import type { Found } from '../solve/search.ts';
 import type { CoilRecord } from './schema.ts';
 
@@ -9,6 +10,10 @@ type Warning = CoilRecord['warnings'][number];
 
 /** A tap farther off than this is pointed out. */
 const FAR_OFF = 0.01;
+
+/** Said where the turns climb too steeply to be counted as rings. */
+export const steepText = (pitch: string, diameter: string): string =>
+  `The pitch of ${pitch} is more than a tenth of the diameter, ${diameter}: turns count as flat rings, which was tried up to a tenth (0.2 % off there); inductance and what follows from it may be off by more.`;
 
 /** Gaps that no position tunes, and second resonances that let strong signals through. */
 function coverageWarnings(coverage: CoilRecord['coverage']): Warning[] {
@@ -61,6 +66,9 @@ export function warningsOf(job: Job, found: Found, alternatives: number, coverag
       'self-capacitance-outside-table',
       `Length over diameter is ${ratio.toFixed(2)}; Medhurst’s table of self-capacitance runs from 0.1 to 50, its end value is used.`,
     );
+  const { pitchMm, meanDiameterMm } = coil.shape;
+  if (!ringsValid(pitchMm / 1e3, meanDiameterMm / 1e3))
+    add('turns-steep', steepText(`${+pitchMm.toFixed(3)} mm`, `${+meanDiameterMm.toFixed(2)} mm`));
   const fastest = Math.max(...taps.map((tap) => tap.workingKhz));
   if (candidate.wire.strands > 1 && !strandLossValid(candidate.wire.strandMm / 1e3, fastest * 1e3))
     add(

@@ -224,6 +224,7 @@ describe('coils at random', () => {
 const WARNED: readonly (readonly [code: string, text: string])[] = [
   ['self-capacitance-outside-table', coil('turns: 3, pitch: 0.6 mm')],
   ['wire-thick-for-former', 'coil: { mean-diameter: 6 mm, wire: 1 mm enamel, turns: 5, pitch: 2 mm }'],
+  ['turns-steep', 'coil: { mean-diameter: 50 mm, wire: 1 mm enamel, turns: 9, pitch: 5.1 mm }'],
   ['pitch-below-covering', coil('turns: 50, pitch: 0.55 mm')],
   [
     'turns-nearly-touch',
