@@ -86,8 +86,10 @@ export function endView(record: CoilRecord, rimMm: number, measure: Measure): En
     const [x2, y2] = at(place, outer - 3);
     shapes.push(circle(x1, y1, 0.75, 'thin', 0), line(x1, y1, x2, y2, 'hair'));
     const [x, y] = at(place, outer);
-    const lines = rows(spans(group.names), crowded ? 1 : 4);
     const sideways = Math.sin((place * Math.PI) / 180);
+    // Above and below the former neighbours stand side by side: there a wide line would run into the next.
+    const narrow = crowded || (order.length > 12 && Math.abs(sideways) < 0.5);
+    const lines = rows(spans(group.names), narrow ? 1 : 4);
     const align = lines[0]!.length <= 3 ? 'centre' : sideways > 0.3 ? 'left' : sideways < -0.3 ? 'right' : 'centre';
     const drop = y < 0 ? 0 : (lines.length - 1) * 3.3;
     lines.forEach((text, k) => {
