@@ -115,7 +115,10 @@ const readWire = (raw: unknown): Parsed<FoundWire> => {
 const windingSchema = z
   .strictObject({
     hand: choice(['right', 'left'], 'Hand of the helix; a right-hand one climbs counterclockwise seen from above.'),
-    earthed: choice(['start', 'finish'], 'Which end is earthed; taps are counted from the start.'),
+    earthed: choice(
+      ['start', 'finish'],
+      'Which end is earthed; taps are counted from the start. finish: the start is hot, the switch earths the tap in use.',
+    ),
     pitch: choiceOrLength(
       ['any', 'close', 'spaced'],
       'Close wound, spaced, whichever is better, or a pitch centre to centre such as 0.6 mm.',

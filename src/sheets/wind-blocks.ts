@@ -138,7 +138,7 @@ export function tapTable(
 /** Where round the former the taps stand; nothing when they stand in one line. */
 export function tapAngles(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
   if (!isStaggered(record)) return null;
-  const { shapes, box } = endView(record, 13, measure);
+  const { shapes, box } = endView(record, 11, measure);
   const size = box.right - box.left;
   const words = paragraph(DRAWING.aboveWords, widthMm - size - 4, measure, { sizeMm: SMALL_MM });
   const drawn: Block = {

@@ -270,11 +270,13 @@ export function designOf(job: Job, demand: Demand, candidate: Candidate): Outcom
   return best === undefined ? { ok: false, breaches } : { ok: true, design: best };
 }
 
+const LAYOUTS: readonly TapLayout[] = ['in line', 'staggered'];
+
 /** The same candidate with its taps brought out in every other way that fits. */
 export function variantsOf(job: Job, demand: Demand, design: Design): Design[] {
   const list: Design[] = [];
   for (const method of design.candidate.methods)
-    for (const layout of ['in line', 'staggered'] as const) {
+    for (const layout of demand.units === null ? LAYOUTS : [design.layout]) {
       if (method.name === design.method.name && layout === design.layout) continue;
       const outcome = designWith(job, demand, design.candidate, method, layout);
       if (outcome.ok) list.push(outcome.design);

@@ -29,9 +29,12 @@ export function grooveFor(overallMm: number): { depthMm: number; floorMm: number
   return { depthMm, floorMm, widthMm: floorMm + 2 * depthMm };
 }
 
-/** Tension for winding, N: 30 to 50 N per square millimetre of copper (common practice, from memory). */
+/** More than a hand holds steadily; thick wire is straightened and laid rather than stretched (common practice). */
+const MOST_N = { low: 12, high: 20 };
+
+/** Tension for winding, N: 30 to 50 N per square millimetre of copper, capped (common practice, from memory). */
 export function tensionN(copperMm2: number): { low: number; high: number } {
-  return { low: 30 * copperMm2, high: 50 * copperMm2 };
+  return { low: Math.min(30 * copperMm2, MOST_N.low), high: Math.min(50 * copperMm2, MOST_N.high) };
 }
 
 /** What the hoop pressure of the winding takes off the diameter, a fraction: T / (p t E). */

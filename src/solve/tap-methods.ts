@@ -48,6 +48,9 @@ function hasLand(pitchMm: number, overallMm: number): boolean {
   return wireHoleMm(overallMm, 2) <= 2 * pitchMm - overallMm + 1e-9;
 }
 
+/** Solid wire up to this twists tight by hand (common practice). */
+const TWISTS_TO_MM = 0.85;
+
 const isLitz = (wire: Wire) => wire.strands > 1;
 
 /** The methods that a covering and a pitch allow, the usual one first. `pitchMm` is centre to centre. */
@@ -109,9 +112,10 @@ export function tapMethodsFor(wire: Wire, pitchMm: number, close: boolean): read
     why: 'a lug of 0.5 mm sheet under the turn, soldered',
   };
   const order: TapMethod[] = [];
-  if (hasLand(pitchMm, w) && !close) order.push(drawn);
+  // Wire that thick cannot be twisted up inside a former.
+  if (hasLand(pitchMm, w) && !close && (isLitz(wire) || wire.bareMm <= TWISTS_TO_MM)) order.push(drawn);
   if (isLitz(wire)) order.push(pair);
-  else if (wire.bareMm <= 0.85) order.push(loop, lifted);
+  else if (wire.bareMm <= TWISTS_TO_MM) order.push(loop, lifted);
   else order.push(lifted, lug);
   for (const method of isLitz(wire) ? [lug] : [loop, lifted, pair, lug])
     if (!order.includes(method)) order.push(method);

@@ -58,13 +58,14 @@ export const STEP = {
   check: (mm: string) => `At turn 20 stop: 20 turns measure ${mm} mm edge to edge; press or ease them until they do.`,
   finish: (mm: number) => `Keep the tension; lead the end in at F and out at F+1, tight; leave ${mm} mm.`,
   afterMeasure: 'Measure by the sheet “to check by” before the wire is cut short; trim at the finish row.',
-  takeSpacer: 'Unwind the spacer, or leave it in; nothing here changes if it stays.',
+  takeSpacer: 'Unwind the spacer, or leave it in; little changes if it stays.',
   taps: {
     firm: 'Bare, tin and solder the taps.',
     soft: 'Bare, tin and solder the taps, with card between joint and former and the iron on for seconds only: the former softens.',
   },
   seal: {
-    textile: 'Dry the coil in a warm place for a day; dope it sparingly, let it cure a day, measure again.',
+    textile:
+      'Dry the coil in a warm place for a day; dope it sparingly (try the dope on a scrap of the former first), let it cure a day, measure again.',
     other: 'Fix the end turns with a touch of varnish at three places; let it cure a day, measure again.',
   },
 } as const;

@@ -49,7 +49,10 @@ export const DRAWING = {
     right: 'Climbs to the right on this side.',
     left: 'Climbs to the left on this side.',
   },
-  earthed: { start: 'Earthed end: start S.', finish: 'Earthed end: finish F.' },
+  earthed: {
+    start: 'Earthed end: start S.',
+    finish: 'Hot end: start S. The switch earths the tap in use, F for the whole coil.',
+  },
   datumIs: (words: string) => `Datum: ${words}.`,
   above: 'Seen from above',
   aboveWords: 'Angles from the start hole S, counterclockwise; F is the finish.',

@@ -98,7 +98,10 @@ const coilKeys = {
     'Instead of taps: along the axis, from the middle of the wire at the start to the middle of the wire at the tap.',
   ).optional(),
   hand: choice(['right', 'left'], 'Hand of the helix; a right-hand one climbs counterclockwise seen from above.'),
-  earthed: choice(['start', 'finish'], 'Which end is earthed; taps are counted from the start.'),
+  earthed: choice(
+    ['start', 'finish'],
+    'Which end is earthed; taps are counted from the start. finish: the start is hot, the switch earths the tap in use.',
+  ),
   'former-material': field(readMaterial, 'What the former is made of, for its loss; none leaves that out.', {
     type: 'string',
   }),
