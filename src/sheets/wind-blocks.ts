@@ -176,20 +176,20 @@ export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure)
 }
 
 /** The other steps, each with its box and number; steps that are rows of the tap table are named in their place. */
-export function stepItems(record: CoilRecord, widthMm: number, measure: Measure): Block[] {
+export function stepItems(record: CoilRecord, widthMm: number, measure: Measure, sizeMm = BODY_MM): Block[] {
   const items: Block[] = [];
   const { steps } = record;
   const indent = 11;
   const add = (mark: Shape[], words: string) => {
-    const text = paragraph(words, widthMm - indent, measure);
+    const text = paragraph(words, widthMm - indent, measure, { sizeMm });
     const shapes: Shape[] = [...mark, ...movedAll(text, indent, 0)];
     items.push({ widthMm, heightMm: Math.max(4.2, text.heightMm), shapes });
   };
-  const base = -(CAP_SHARE + 0.1) * BODY_MM;
+  const base = -(CAP_SHARE + 0.1) * sizeMm;
   for (let i = 0; i < steps.length; i++) {
     const step = steps[i]!;
     if (step.kind !== 'tap' || (step.tap === null && step.unit === undefined)) {
-      const number = label(9.6, base, `${step.step}`, { sizeMm: BODY_MM, align: 'right', bold: true });
+      const number = label(9.6, base, `${step.step}`, { sizeMm, align: 'right', bold: true });
       add([tickBox(0, -3.3), number], step.text);
       continue;
     }

@@ -5,7 +5,7 @@
 import { STEPS, TITLE } from '../../templates/wording/winding-sheet.ts';
 import type { Box, Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
-import { moved } from '../drawing/shapes.ts';
+import { BODY_MM, moved, SMALL_MM } from '../drawing/shapes.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Block, beside, columns, heading, stack } from './block.ts';
 import * as check from './check-blocks.ts';
@@ -54,13 +54,14 @@ function stepsBlock(items: readonly Block[], words: string, count: 1 | 2, gapMm:
 }
 
 /** Height of the drawing of the coil on page 1, the largest first. */
-const DRAWING_MM = [90, 84, 72, 60, 48, 42];
-/** How closely the rest is set: a row of the tap table, and the space between steps. */
+const DRAWING_MM = [90, 84, 72, 60, 48, 42, 30];
+/** How closely the rest is set: a row of the tap table, the space between steps, and their type. */
 const CLOSENESS = [
-  { rowMm: 5.4, gapMm: 1.4 },
-  { rowMm: 5, gapMm: 1 },
-  { rowMm: 4.7, gapMm: 0.6 },
-  { rowMm: 4.5, gapMm: 0.4 },
+  { rowMm: 5.4, gapMm: 1.4, sizeMm: BODY_MM },
+  { rowMm: 5, gapMm: 1, sizeMm: BODY_MM },
+  { rowMm: 4.7, gapMm: 0.6, sizeMm: BODY_MM },
+  { rowMm: 4.5, gapMm: 0.4, sizeMm: BODY_MM },
+  { rowMm: 4.5, gapMm: 0.4, sizeMm: SMALL_MM },
 ] as const;
 
 /** The most leading steps that `holds` lets pass; 0 when not one. */
@@ -128,7 +129,8 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
     drawn[size] ??= wind.coilDrawing(record, column, DRAWING_MM[size]!, measure);
     return drawn[size];
   };
-  for (const { rowMm, gapMm } of CLOSENESS) {
+  for (const { rowMm, gapMm, sizeMm } of CLOSENESS) {
+    const items = wind.stepItems(record, column, measure, sizeMm);
     const taps = wind.tapTable(record, column, rowMm, measure);
     const steps = stepsBlock(items, STEPS.heading, 1, gapMm, measure);
     for (const size of DRAWING_MM.keys()) {
@@ -156,7 +158,7 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
     (drawing) => ({ left: [drawing, narrow], right: [taps, ...angles] }),
     (drawing) => ({ left: [drawing], right: [taps], foot: wide }),
   ];
-  const tries = some.flatMap((arranged) => [1, 2, 3, 4].map((size) => arranged(drawingOf(size))));
+  const tries = some.flatMap((arranged) => [1, 2, 3, 4, 6].map((size) => arranged(drawingOf(size))));
   const first = tries.find((each) => fits(each, free)) ?? { left: [drawingOf(3)], right: [taps] };
   const under = (begun: readonly Block[]) => ({
     ...first,
