@@ -1,6 +1,7 @@
 import ledger from './ledger.json' with { type: 'json' };
 import { LOW_FREQUENCY } from './low-frequency.ts';
 import type { Measures } from './measures.ts';
+import { present, SIMULATOR } from './simulator.ts';
 import { WORKING_FREQUENCY } from './working-frequency.ts';
 
 /** One line of the ledger. */
@@ -21,10 +22,15 @@ export interface Case {
   readonly bound: number;
   /** The error that was asked for at the start, where one was. */
   readonly demand?: number;
+  /** A program that has to be installed; the case is skipped without it. */
+  readonly needs?: string;
 }
 
 export const LEDGER: readonly Case[] = ledger;
-export const MEASURES: Measures = { ...LOW_FREQUENCY, ...WORKING_FREQUENCY };
+export const MEASURES: Measures = { ...LOW_FREQUENCY, ...WORKING_FREQUENCY, ...SIMULATOR };
+
+/** Whether a case can be worked out on this machine. */
+export const canMeasure = ({ needs }: Pick<Case, 'needs'>): boolean => needs === undefined || present(needs);
 
 /** Below this an error is rounding, of which less is no news. */
 export const ROUNDING = 1e-12;
