@@ -1,22 +1,13 @@
 /** The winding in the record: wire, taps with their figures, turns where they lie. Keys end in their unit. */
 import * as z from 'zod';
+import { COVERINGS } from '../stock/wire.ts';
 
 const text = z.string();
 const num = z.number();
 
 const wireSchema = z.strictObject({
   name: text.describe('size and covering, as a person would ask for it'),
-  covering: z.enum([
-    'bare',
-    'enamel',
-    'enamel heavy',
-    'single cotton',
-    'double cotton',
-    'single silk',
-    'double silk',
-    'litz single silk',
-    'litz double silk',
-  ]),
+  covering: z.enum(COVERINGS),
   bareMm: num.describe('bare conductor diameter; for litz that of the copper bundle without serving'),
   bareLowMm: num,
   bareHighMm: num,

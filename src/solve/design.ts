@@ -10,7 +10,15 @@ import { coilOf, freedomsOf, type Setting, sectionAt, settle, targetsOf } from '
 import { inductanceSpread } from './spread.ts';
 import { switchBreaches } from './switch-breaches.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
-import { type Coverage, coverageEstimate, lossFactor, sectionLossOhm, workingKhz } from './working.ts';
+import {
+  type Coverage,
+  copperG,
+  copperMm2,
+  coverageEstimate,
+  lossFactor,
+  sectionLossOhm,
+  workingKhz,
+} from './working.ts';
 
 export interface DesignTap {
   readonly turn: number;
@@ -88,10 +96,6 @@ function sectionOf(coil: Coil, turn: number) {
   const { wire, meanDiameterMm } = coil.shape;
   const deadTurns = Math.max(0, coil.turns - turn);
   return { wire, meanDiameterMm, turns: turn, deadTurns, pitchMm: coil.meanPitchMm(turn), wireM: coil.wireM(turn) };
-}
-
-export function copperMm2(candidate: Candidate): number {
-  return (Math.PI / 4) * candidate.wire.strandMm ** 2 * candidate.wire.strands;
 }
 
 function tapsOf(setting: Setting, coil: Coil, turns: readonly number[]): DesignTap[] {
@@ -179,7 +183,7 @@ export function designWith(
   layout: TapLayout,
   correction: NonNullable<Setting['correction']> = [],
 ): Outcome {
-  const tension = tensionN(copperMm2(candidate));
+  const tension = tensionN(copperMm2(candidate.wire));
   const hand = job.winding.hand;
   const base = {
     job,
@@ -232,7 +236,7 @@ export function designWith(
     lengthMm: former.lengthMm,
     diameterMm: former.outsideDiameterMm,
     wireM,
-    massG: wireM * copperMm2(candidate) * 8.89,
+    massG: copperG(candidate.wire, wireM),
     worstTap: Math.max(...taps.map((tap) => Math.abs(tap.deviation))),
     turns: coil.turns,
     spread: inductanceSpread(job, candidate),

@@ -11,7 +11,15 @@ import type { Candidate } from './candidates.ts';
 import { type Demand, setCapacitance, tapsBetween } from './demand.ts';
 import { inductanceSpread } from './spread.ts';
 import { wireHoleMm } from './tap-methods.ts';
-import { actingSelfPf, coverageEstimate, lossFactor, type Section, sectionLossOhm, workingKhz } from './working.ts';
+import {
+  actingSelfPf,
+  copperG,
+  coverageEstimate,
+  lossFactor,
+  type Section,
+  sectionLossOhm,
+  workingKhz,
+} from './working.ts';
 
 export interface Size {
   readonly candidate: Candidate;
@@ -118,7 +126,6 @@ export function estimateOf(job: Job, demand: Demand, size: Size): Estimate {
   const diameter = meanDiameterMm(candidate);
   const targets = roughTargets(job, demand, size);
   const turnM = Math.sqrt((Math.PI * diameter) ** 2 + pitch.mm ** 2) / 1e3;
-  const copperMm2 = (Math.PI / 4) * wire.strandMm ** 2 * wire.strands;
   let loss = 0;
   let firstTapTurns = turns;
   const looked = new Set([0, targets.length >> 1, targets.length - 1]);
@@ -134,7 +141,7 @@ export function estimateOf(job: Job, demand: Demand, size: Size): Estimate {
     loss += lossFactor(value, sectionLossOhm(shape, kHz), kHz);
   }
   const wireM = turns * turnM;
-  const massG = wireM * copperMm2 * 8.89;
+  const massG = copperG(wire, wireM);
   const spread = inductanceSpread(job, candidate);
   return { ...size, firstTapTurns, wireM, massG, lossFactor: loss / looked.size, spread };
 }

@@ -4,7 +4,7 @@
  * those figures are reported.
  */
 import type { Job } from '../job/job.ts';
-import { dcResistance } from '../physics/copper.ts';
+import { DENSITY, dcResistance } from '../physics/copper.ts';
 import { deadEndCapacitance } from '../physics/coupled/two-nodes.ts';
 import { lossEstimate } from '../physics/loss.ts';
 import { skinRatio } from '../physics/skin.ts';
@@ -129,6 +129,16 @@ export function sectionLossOhm(shape: SectionShape, kHz: number): number {
   const beyond = deadTurns / (turns / 2 + deadTurns);
   const all = resistance + DEAD_LOSS * beyond * Math.max(0, resistance - alone);
   return litz ? all : all * closeLoss(wire.bareMm / shape.pitchMm);
+}
+
+/** Section of the copper, all strands. */
+export function copperMm2({ strandMm, strands }: Wire): number {
+  return (Math.PI / 4) * strandMm ** 2 * strands;
+}
+
+/** Mass of the copper in so much wire, g. */
+export function copperG(wire: Wire, metres: number): number {
+  return metres * copperMm2(wire) * (DENSITY / 1e3);
 }
 
 /** 1/Q of a section. */
