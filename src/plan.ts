@@ -31,11 +31,11 @@ function foundFor(job: Job): Found {
 
 /** The record and every file of the output folder. */
 export async function planJob(job: Job, options: { version: string }): Promise<Output<CoilRecord>> {
-  const kernel = job.former.kind === 'printed' ? startKernel() : null;
+  const kernel = startKernel();
   try {
     const found = foundFor(job);
     // The parts need no figures at work: they are made while those are worked out.
-    const parts = kernel?.make(partsRecordOf(job, found)) ?? Promise.resolve([]);
+    const parts = kernel.make(partsRecordOf(job, found));
     // A fault of the worker is reported when it is awaited below, not as an unhandled rejection meanwhile.
     parts.catch(() => undefined);
     const record = makeRecord(job, found, options.version);
@@ -53,13 +53,13 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
       { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
       netlistFile(record),
     ];
-    for (const part of await parts) {
-      const { boxMm, massG, printNote } = part.report;
-      const note = `${boxMm.map((mm) => mm.toFixed(1)).join(' x ')} mm, ${massG.toFixed(0)} g of ${record.former.material}; ${printNote}`;
-      files.push({ path: part.path, kind: part.kind, bytes: part.bytes, note });
+    for (const { part, path, kind, bytes } of await parts) {
+      const { sizeMm, massG, material, quantity, printNote } = record.parts.find((one) => one.part === part)!;
+      const note = `${quantity > 1 ? `${quantity} of ` : ''}${sizeMm.map((mm) => mm.toFixed(1)).join(' x ')} mm, ${massG.toFixed(0)} g of ${material}; ${printNote}`;
+      files.push({ path, kind, bytes, note });
     }
     return listed(record, files);
   } finally {
-    await kernel?.close();
+    await kernel.close();
   }
 }

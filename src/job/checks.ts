@@ -45,22 +45,20 @@ function checkFormer({ former, printer }: Readable): Finding[] {
     );
   }
   if (former.kind === 'tube') {
-    if (former.mounting === 'ears') found.push(onTube('mounting', 'ears'));
+    if (former.mounting !== 'none') found.push(onTube('mounting', former.mounting === 'base' ? 'a base' : 'ears'));
+    if (former.body === 'ribbed') found.push(onTube('body', 'ribs'));
     if (former.flanges) found.push(onTube('flanges', 'flanges'));
+    for (const key of ['ribs', 'screw', 'screw-circle'] as const)
+      if (former[key] !== undefined) found.push(onTube(key, key === 'ribs' ? 'ribs' : 'mounting screws'));
     return found;
   }
+  if (former.ribs !== undefined && former.body !== 'ribbed')
+    found.push(notUsed('ribs', 'ribs', 'a former with body: full', 'take body: ribbed'));
+  if (former.mounting === 'none')
+    for (const key of ['screw', 'screw-circle'] as const)
+      if (former[key] !== undefined)
+        found.push(notUsed(key, 'mounting screws', 'a former with mounting: none', 'take mounting: ears or base'));
   if (printer === undefined) return found;
-  if (former.longest > printer.height) {
-    found.push(
-      finding(
-        'taller-than-printer',
-        ['former', 'longest'],
-        `a printed former up to ${lengthText(former.longest)} long on a printer ${lengthText(printer.height)} high`,
-        'no more than printer.height',
-        'shorten former.longest, or state printer.height',
-      ),
-    );
-  }
   const bed = Math.min(printer.bed.x, printer.bed.y);
   if (most >= bed) {
     found.push(
@@ -74,6 +72,16 @@ function checkFormer({ former, printer }: Readable): Finding[] {
     );
   }
   return found;
+}
+
+function notUsed(key: string, what: string, where: string, instead: string): Finding {
+  return finding(
+    'not-used',
+    ['former', key],
+    `${what} for ${where}`,
+    'keys that belong to it',
+    `remove former.${key}, or ${instead}`,
+  );
 }
 
 function onTube(key: string, what: string): Finding {
@@ -102,6 +110,17 @@ function checkWinding({ winding }: Readable): Finding[] {
 function checkPrinter({ printer }: Readable): Finding[] {
   if (printer === undefined) return [];
   const found: Finding[] = [];
+  const material = findMaterial(printer.material);
+  if (material.ok && material.material.use !== 'print')
+    found.push(
+      finding(
+        'material',
+        ['printer', 'material'],
+        `${printer.material} for a printer`,
+        'a material for printing',
+        'see: coilwright stock',
+      ),
+    );
   const { layer, line, nozzle } = printer;
   if (layer > nozzle) {
     found.push(

@@ -4,6 +4,7 @@
  */
 
 import { parseQuantity } from '../quantity/parse.ts';
+import { findMaterial } from '../stock/materials.ts';
 
 export const DEFAULTS = {
   paper: 'A4',
@@ -24,6 +25,13 @@ export const DEFAULTS = {
   'printer.height': '250 mm',
   'printer.nozzle': '0.4 mm',
   'printer.hole-compensation': '0 mm',
+  'printer.clearance': '0.3 mm',
+  'printer.scale': '100 %',
+  'printer.material': 'PLA',
+  'shop.shaft': '8 mm',
+  'shop.shaft-form': 'round',
+  'shop.spool': '80 x 70 mm',
+  'shop.spool-bore': '16 mm',
 } as const;
 
 export type Data = Record<string, unknown>;
@@ -37,7 +45,7 @@ export interface Completed {
 }
 
 /** Sections that may be left out whole, or left with nothing under them. */
-const SECTIONS = ['former', 'winding', 'printer'] as const;
+const SECTIONS = ['former', 'winding', 'printer', 'shop'] as const;
 
 /** Fills in what was left out. Does not judge what is there. */
 export function complete(written: unknown): Completed {
@@ -57,7 +65,7 @@ export function complete(written: unknown): Completed {
 }
 
 /** Defaults that depend on another key. */
-function dependent(data: Data): Record<string, string | boolean | undefined> {
+function dependent(data: Data): Record<string, string | number | boolean | undefined> {
   const printed = at(data, 'former', 'kind') !== 'tube';
   const band = at(data, 'want', 'band') !== undefined;
   const nozzle = millimetres(at(data, 'printer', 'nozzle') ?? DEFAULTS['printer.nozzle']);
@@ -68,12 +76,21 @@ function dependent(data: Data): Record<string, string | boolean | undefined> {
     'former.outside-diameter': printed ? '50 mm to 90 mm' : undefined,
     'former.longest': printed ? String(at(data, 'printer', 'height') ?? DEFAULTS['printer.height']) : '200 mm',
     'former.wall': printed ? undefined : '1.5 mm',
-    'former.material': printed ? 'PLA' : 'card',
+    'former.material': printed ? printMaterial(at(data, 'printer', 'material')) : 'card',
     'former.mounting': printed ? 'ears' : 'none',
     'former.flanges': printed,
+    'former.body': printed ? 'full' : undefined,
+    'former.ribs': printed && at(data, 'former', 'body') === 'ribbed' ? 12 : undefined,
+    'former.screw': printed && at(data, 'former', 'mounting') !== 'none' ? '4.4 mm' : undefined,
     'printer.line': nozzle === null ? '0.45 mm' : `${Number((nozzle * 1.125).toFixed(3))} mm`,
     'printer.layer': nozzle === null ? '0.2 mm' : `${Number((nozzle / 2).toFixed(3))} mm`,
   };
+}
+
+/** The material of jigs serves for the former too; one that cannot be printed is reported where it was written. */
+function printMaterial(written: unknown): string {
+  const found = findMaterial(typeof written === 'string' ? written : '');
+  return found.ok && found.material.use === 'print' ? found.material.name : DEFAULTS['printer.material'];
 }
 
 /** Whether the value was put in: not when the key is there, nor when its section is missing or not a section. */

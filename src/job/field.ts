@@ -64,7 +64,7 @@ const capital = (text: string): string => text.charAt(0).toUpperCase() + text.sl
 
 /** One quantity, in the unit of its kind. */
 export function quantity(kind: KindName, doc: Doc, allowed: Allowed = {}) {
-  const type = kind === 'ratio' ? ['string', 'number'] : 'string';
+  const type = KINDS[kind].unit === '1' ? ['string', 'number'] : 'string';
   return field((raw) => readQuantity(raw, kind, allowed), described(doc, kind), { type });
 }
 
@@ -139,7 +139,7 @@ export function choice<const W extends string>(words: readonly W[], doc: Doc) {
   return field((raw) => readChoice(raw, words), doc, { enum: [...words] });
 }
 
-function readChoice<W extends string>(raw: unknown, words: readonly W[]): Parsed<W> {
+export function readChoice<W extends string>(raw: unknown, words: readonly W[]): Parsed<W> {
   const found = words.find((word) => word === raw);
   if (found !== undefined) return { ok: true, value: found };
   const near = typeof raw === 'string' ? nearest(raw, words) : null;
@@ -149,6 +149,27 @@ function readChoice<W extends string>(raw: unknown, words: readonly W[]): Parsed
     expected: `one of: ${words.join(', ')}`,
     todo: near === null ? 'choose one of these words' : `did you mean ${near}?`,
   };
+}
+
+/** One scale for all axes, or a list of one each for x, y and z. */
+export function scales(doc: Doc) {
+  return z
+    .unknown()
+    .transform((raw, context): readonly [x: number, y: number, z: number] => {
+      const list = readList(raw, context, (one) => readQuantity(one, 'scale', {}), KINDS.scale.noun);
+      if (list.length === 3) return [list[0]!, list[1]!, list[2]!];
+      if (list.length === 1) return [list[0]!, list[0]!, list[0]!];
+      const count = Array.isArray(raw) ? raw.length : 0;
+      if (count === 2 || count > 3)
+        refuse(context, {
+          ok: false,
+          got: `a list of ${count}`,
+          expected: 'one scale, or three: for x, y and z',
+          todo: 'write 100.3 % or [100.3 %, 100.3 %, 100 %]',
+        });
+      return z.NEVER;
+    })
+    .meta({ description: doc, anyOf: [{ type: ['string', 'number'] }, jsonList({ type: ['string', 'number'] })] });
 }
 
 /** Words, or else a length: the pitch. */

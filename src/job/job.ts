@@ -1,11 +1,22 @@
 /** A job as the planner takes it: plain data, complete, checked, in the units that the names end in. */
 import type { Wire } from '../stock/wire.ts';
-import type { PREFERENCES, SPACINGS, SWITCHES, TAP_LAYOUTS, TAP_METHODS } from './schema.ts';
+import type {
+  BODIES,
+  MOUNTINGS,
+  PARTS,
+  PREFERENCES,
+  SHAFTS,
+  SPACINGS,
+  SWITCHES,
+  TAP_LAYOUTS,
+  TAP_METHODS,
+} from './schema.ts';
 
 export type Spacing = (typeof SPACINGS)[number];
 export type SwitchRest = (typeof SWITCHES)[number];
 export type TapMethod = (typeof TAP_METHODS)[number];
 export type TapLayout = (typeof TAP_LAYOUTS)[number];
+export type PartKind = (typeof PARTS)[number];
 export type Preference = (typeof PREFERENCES)[number];
 
 export type Want =
@@ -50,7 +61,14 @@ export interface JobFormer {
   /** Null: to be derived from the line width (printed only). */
   readonly wallMm: number | null;
   readonly material: string;
-  readonly mounting: 'ears' | 'none';
+  readonly body: (typeof BODIES)[number];
+  /** Null for a body that is not ribbed. */
+  readonly ribs: number | null;
+  readonly mounting: (typeof MOUNTINGS)[number];
+  /** Holes for mounting screws; null without a mounting. */
+  readonly screwMm: number | null;
+  /** Diameter of their circle; null: as near as they can stand. */
+  readonly screwCircleMm: number | null;
   readonly flanges: boolean;
 }
 
@@ -76,6 +94,18 @@ export interface Printer {
   readonly lineMm: number;
   readonly layerMm: number;
   readonly holeCompensationMm: number;
+  /** On diameter. */
+  readonly clearanceMm: number;
+  readonly scale: readonly [x: number, y: number, z: number];
+  readonly material: string;
+}
+
+export interface Shop {
+  readonly shaftMm: number;
+  readonly shaftForm: (typeof SHAFTS)[number];
+  readonly spoolDiameterMm: number;
+  readonly spoolWidthMm: number;
+  readonly spoolBoreMm: number;
 }
 
 export interface Job {
@@ -94,6 +124,9 @@ export interface Job {
   /** Of the copper at work. */
   readonly celsius: number;
   readonly printer: Printer;
+  readonly shop: Shop;
+  /** Null: what suits the former. */
+  readonly parts: readonly (PartKind | 'all')[] | null;
   /** Where it was written: the file, and the line of every key that is in it, by dotted key. */
   readonly source: { readonly file: string; readonly lines: Readonly<Record<string, number>> };
   /** What the person wrote, as written, by dotted key. */

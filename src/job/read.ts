@@ -52,7 +52,7 @@ function readable(data: unknown): Readable {
 }
 
 function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
-  const { former, winding, printer } = read;
+  const { former, winding, printer, shop } = read;
   const written = given(tree.data);
   const lines = Object.keys(written).map((key) => [key, tree.lineOf(key.split('.'))]);
   return {
@@ -77,7 +77,11 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
       longestMm: former.longest,
       wallMm: former.wall ?? null,
       material: former.material,
+      body: former.body ?? 'full',
+      ribs: former.ribs ?? null,
       mounting: former.mounting,
+      screwMm: former.screw ?? null,
+      screwCircleMm: former['screw-circle'] ?? null,
       flanges: former.flanges,
     },
     wires: read.wire === undefined ? 'stock' : toWires(read.wire),
@@ -102,7 +106,18 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
       lineMm: printer.line,
       layerMm: printer.layer,
       holeCompensationMm: printer['hole-compensation'],
+      clearanceMm: printer.clearance,
+      scale: printer.scale,
+      material: printer.material,
     },
+    shop: {
+      shaftMm: shop.shaft,
+      shaftForm: shop['shaft-form'],
+      spoolDiameterMm: shop.spool.x,
+      spoolWidthMm: shop.spool.y,
+      spoolBoreMm: shop['spool-bore'],
+    },
+    parts: read.parts ?? null,
     source: { file, lines: Object.fromEntries(lines) },
     given: written,
     assumed: { ...assumed, ...assumedCoverings(read.wire ?? []) },

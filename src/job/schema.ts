@@ -18,6 +18,8 @@ import {
   quantities,
   quantity,
   range,
+  readChoice,
+  scales,
   shown,
   size,
   values,
@@ -28,6 +30,11 @@ export const SPACINGS = ['even ratio', 'even turns', 'even frequency'] as const;
 export const SWITCHES = ['open', 'shorted', 'shorted in sections', 'disconnected'] as const;
 export const TAP_METHODS = ['auto', 'twisted loop', 'lifted turn', 'cut pair', 'lug', 'drawn in'] as const;
 export const TAP_LAYOUTS = ['auto', 'in line', 'staggered'] as const;
+export const BODIES = ['full', 'ribbed'] as const;
+export const MOUNTINGS = ['ears', 'base', 'none'] as const;
+/** What can be printed; `all` in a job stands for every one that suits its former. */
+export const PARTS = ['former', 'arbor', 'stand', 'saddle', 'comb', 'loop gauge', 'coupon'] as const;
+export const SHAFTS = ['round', 'hexagon'] as const;
 export const PREFERENCES = ['least loss', 'compact', 'least wire', 'closest taps'] as const;
 /** Most switch positions of one coil. */
 export const MOST_TAPS = 60;
@@ -94,7 +101,23 @@ const formerSchema = z
       'Wall thickness. Derived from the line width when printed and left out; 1.5 mm for a tube.',
     ).optional(),
     material: field(readMaterial, 'What the former is made of. PLA when printed, card for a tube.', { type: 'string' }),
-    mounting: choice(['ears', 'none'], 'Ears with a hole for a screw, or none. Ears when printed, none on a tube.'),
+    body: choice(
+      BODIES,
+      'Of a printed former. full: a wall all round. ribbed: end rings and ribs with a notch a turn, so that little plastic stands in the field.',
+    ).optional(),
+    ribs: count(6, 24, 'How many ribs a ribbed former has; 12 when left out.').optional(),
+    mounting: choice(
+      MOUNTINGS,
+      'Ears with a hole for a screw, a round base with a ring of holes, or none. Ears when printed, none on a tube.',
+    ),
+    screw: quantity(
+      'length',
+      'Holes for the mounting screws, as they should come out; 4.4 mm when left out.',
+    ).optional(),
+    'screw-circle': quantity(
+      'length',
+      'Diameter of the circle on which the mounting screws stand; as near to the former as they can when left out.',
+    ).optional(),
     flanges: flag('Rims at both ends. True when printed, false on a tube.'),
   })
   .describe('What the wire is wound on.');
@@ -149,8 +172,29 @@ const printerSchema = z
       zero: true,
       negative: true,
     }),
+    clearance: quantity('length', 'Gap, on diameter, between printed parts that go into one another.'),
+    scale: scales('What a part is enlarged by against its shrinking: one scale, or one each for x, y and z.'),
+    material: field(readMaterial, 'What jigs are printed of, and the former unless former.material says else.', {
+      type: 'string',
+    }),
   })
-  .describe('The printer, for a printed former.');
+  .describe('The printer, for a printed former and for jigs.');
+
+const partsField = listOf(
+  (raw) => readChoice(raw, [...PARTS, 'all'] as const),
+  'a part',
+  `What is printed: ${PARTS.join(', ')}; or all. What suits the former when left out.`,
+  { enum: [...PARTS, 'all'] },
+).optional();
+
+const shopSchema = z
+  .strictObject({
+    shaft: quantity('length', 'Shaft of the arbor: diameter, or across the flats.'),
+    'shaft-form': choice(SHAFTS, 'A round shaft or a hexagon.'),
+    spool: size('Largest wire spool: diameter x width.'),
+    'spool-bore': quantity('length', 'Hole of the wire spool.'),
+  })
+  .describe('What is on the bench, for arbor and winding stand.');
 
 export const jobSchema = z
   .strictObject({
@@ -176,6 +220,8 @@ export const jobSchema = z
     at: quantity('frequency', 'Frequency at which losses are compared when there is no set.').optional(),
     temperature: quantity('temperature', 'Temperature of the copper at work.'),
     printer: printerSchema,
+    shop: shopSchema,
+    parts: partsField,
   })
   .meta({
     title: 'Coil job',

@@ -1,6 +1,6 @@
 /** Solid description to mesh: own meshes for every shape, one batch of booleans. */
-import type { Manifold, ManifoldToplevel } from 'manifold-3d';
-import type { Engraving, Point2, Solid } from '../parts/solid.ts';
+import type { Manifold, ManifoldToplevel, Mat4 } from 'manifold-3d';
+import type { Cutter, Engraving, Frame, Point2, Shape, Solid } from '../parts/solid.ts';
 import { loftMesh } from './loft.ts';
 import type { TriangleMesh } from './mesh.ts';
 import { MeshError } from './mesh-error.ts';
@@ -14,13 +14,12 @@ export function buildSolid(kernel: ManifoldToplevel, solid: Solid): TriangleMesh
     made.push(manifold);
     return manifold;
   };
+  const shape = (one: Shape | Cutter) =>
+    keep(one.kind === 'skin' ? 'turned body' : one.name, () => shapeOf(kernel, one));
   try {
-    const body = keep('turned body', () => fromMesh(kernel, skinMesh(solid.body)));
-    const adders = solid.adders.map((adder) => keep(adder.name, () => fromMesh(kernel, loftMesh(adder))));
-    const cutters = solid.cutters.map((cutter) =>
-      keep(cutter.name, () => (cutter.kind === 'loft' ? fromMesh(kernel, loftMesh(cutter)) : engrave(kernel, cutter))),
-    );
-    const whole = adders.length > 0 ? keep('joining', () => kernel.Manifold.union([body, ...adders])) : body;
+    const shapes = solid.shapes.map(shape);
+    const cutters = solid.cutters.map(shape);
+    const whole = shapes.length > 1 ? keep('joining', () => kernel.Manifold.union(shapes)) : shapes[0]!;
     const cut = cutters.length > 0 ? keep('cutting', () => kernel.Manifold.difference([whole, ...cutters])) : whole;
     const mesh = cut.getMesh();
     if (mesh.numProp !== 3) throw new MeshError(solid.part, 'reading back', `${mesh.numProp} numbers a vertex, not 3`);
@@ -28,6 +27,43 @@ export function buildSolid(kernel: ManifoldToplevel, solid: Solid): TriangleMesh
   } finally {
     for (const manifold of made) manifold.delete();
   }
+}
+
+function shapeOf(kernel: ManifoldToplevel, shape: Shape | Cutter): Manifold {
+  switch (shape.kind) {
+    case 'skin':
+      return fromMesh(kernel, skinMesh(shape));
+    case 'loft':
+      return fromMesh(kernel, loftMesh(shape));
+    case 'engraving':
+      return engrave(kernel, shape);
+    case 'prism': {
+      const { outlines, fromMm, toMm, frame } = shape;
+      const flat = new kernel.CrossSection(mutable(outlines), 'NonZero');
+      const placed = drawnOut(flat, fromMm, toMm, frame);
+      flat.delete();
+      return placed;
+    }
+  }
+}
+
+type CrossSection = InstanceType<ManifoldToplevel['CrossSection']>;
+
+const mutable = (outlines: readonly (readonly Point2[])[]): [number, number][][] =>
+  outlines.map((line) => line.map(([x, y]): [number, number] => [x, y]));
+
+function drawnOut(flat: CrossSection, fromMm: number, toMm: number, frame: Frame): Manifold {
+  const tall = flat.extrude(toMm - fromMm);
+  const placed = tall.transform(placing(frame, fromMm));
+  tall.delete();
+  return placed;
+}
+
+/** Columns of the frame's axes and origin, the origin moved up its z. */
+function placing({ origin, x, y }: Frame, upMm: number): Mat4 {
+  const z = [x[1] * y[2] - x[2] * y[1], x[2] * y[0] - x[0] * y[2], x[0] * y[1] - x[1] * y[0]] as const;
+  const at = origin.map((o, i) => o + z[i]! * upMm) as [number, number, number];
+  return [...x, 0, ...y, 0, ...z, 0, ...at, 1];
 }
 
 export function fromMesh(kernel: ManifoldToplevel, mesh: TriangleMesh): Manifold {
@@ -49,14 +85,13 @@ export function good(part: string, operation: string, make: () => Manifold): Man
   throw new MeshError(part, operation, `status ${status}, ${triangles} triangles, expected a closed solid`);
 }
 
-/** Strokes widened and joined flat, then extruded to stand proud of the face. */
-function engrave(kernel: ManifoldToplevel, engraving: Engraving): Manifold {
-  const outlines = engraving.strokes.flatMap((line) => capsules(line, engraving.widthMm / 2));
+/** Strokes widened and joined flat, then drawn out to stand proud of the face. */
+function engrave(kernel: ManifoldToplevel, { strokes, widthMm, zMm, depthMm, frame }: Engraving): Manifold {
+  const outlines = strokes.flatMap((line) => capsules(line, widthMm / 2));
   const flat = new kernel.CrossSection(outlines, 'NonZero');
   const neat = flat.simplify(0.01);
-  const tall = neat.extrude(engraving.depthMm + 1);
-  const placed = tall.translate(0, 0, engraving.zMm - engraving.depthMm);
-  for (const done of [flat, neat, tall]) done.delete();
+  const placed = drawnOut(neat, zMm - depthMm, zMm + 1, frame);
+  for (const done of [flat, neat]) done.delete();
   return placed;
 }
 

@@ -12,7 +12,7 @@ export interface Kernel {
    * @throws Fault for dimensions that cannot be (exit 4)
    * @throws Error with one line when a part did not come out as described or the thread died
    */
-  make(record: PartsRecord): Promise<PartFile[]>;
+  make(record: PartsRecord, named?: readonly string[]): Promise<PartFile[]>;
   close(): Promise<void>;
 }
 
@@ -47,13 +47,13 @@ export function startKernel(script: URL = new URL('./worker.js', import.meta.url
   worker.on('error', (error: Error) => die(new Error(`the part kernel stopped: ${error.message}`)));
   worker.on('exit', (code) => die(new Error(`the part kernel ended with code ${code} before it answered`)));
   return {
-    make(record) {
+    make(record, named) {
       if (dead) return Promise.reject(dead);
       return new Promise((resolve, reject) => {
         const id = ++asked;
         waiting.set(id, { resolve, reject });
         worker.ref();
-        worker.postMessage({ id, record } satisfies MakeRequest);
+        worker.postMessage({ id, record, named } satisfies MakeRequest);
       });
     },
     async close() {

@@ -1,61 +1,73 @@
 /**
  * Record to printable files:
  *
- *     record -> solid description -> mesh -> weld, canonical order -> STL bytes -> checked -> file
+ *     record -> solid description -> mesh -> scaled, welded, canonical order -> STL bytes -> checked -> file
  *
  * The same record gives the same bytes.
  */
-import { formerSolid } from '../parts/former.ts';
-import type { Solid } from '../parts/solid.ts';
+
+import { partsOf } from '../parts/parts.ts';
+import type { Expected, Point3, Solid } from '../parts/solid.ts';
 import type { PartsRecord } from '../record/schema.ts';
 import { buildSolid } from './build.ts';
 import { checkBytes } from './check.ts';
 import { loadKernel } from './load.ts';
+import type { TriangleMesh } from './mesh.ts';
 import { stlBytes } from './stl.ts';
 import { canonical, weld } from './weld.ts';
 
 export interface PartFile {
+  readonly part: string;
   readonly path: string;
   readonly kind: 'stl';
   readonly bytes: Uint8Array<ArrayBuffer>;
   readonly report: PartReport;
 }
 
+/** Measured on the bytes. */
 export interface PartReport {
   readonly triangles: number;
   readonly volumeMm3: number;
-  /** Of solid plastic; infill and walls of the job make it less. */
-  readonly massG: number;
-  /** Outer size in x, y and z. */
-  readonly boxMm: readonly [number, number, number];
-  readonly printNote: string;
+  readonly minMm: Point3;
+  readonly maxMm: Point3;
 }
 
+/** The file of a part. */
+export const stlPath = (part: string): string => `${part}.stl`;
+
 /**
- * No files for a bought tube.
+ * The parts that the record wants, or of these the ones that are named.
  * @throws Fault for dimensions that cannot be (exit 4)
  * @throws MeshError when a part did not come out as described
  */
-export async function makeParts(record: PartsRecord): Promise<PartFile[]> {
-  const solid = formerSolid(record);
-  return solid ? [await makeFile(solid)] : [];
+export async function makeParts(record: PartsRecord, named?: readonly string[]): Promise<PartFile[]> {
+  const files: PartFile[] = [];
+  for (const solid of partsOf(record))
+    if (named === undefined || named.includes(solid.part)) files.push(await makePart(solid, record.printer.scale));
+  return files;
 }
 
-async function makeFile(solid: Solid): Promise<PartFile> {
+/** One part as the bytes of its file, enlarged by `scale` along x, y and z. */
+export async function makePart(solid: Solid, scale: readonly number[] = [1, 1, 1]): Promise<PartFile> {
   const kernel = await loadKernel();
-  const bytes = stlBytes(canonical(weld(buildSolid(kernel, solid))));
-  const { triangles, volumeMm3, minMm, maxMm } = checkBytes(kernel, solid.part, bytes, solid.expected);
-  const size = (i: 0 | 1 | 2) => Math.round((maxMm[i] - minMm[i]) * 1000) / 1000;
+  const bytes = stlBytes(canonical(weld(scaled(buildSolid(kernel, solid), scale))));
+  const { part } = solid;
+  const report = checkBytes(kernel, part, bytes, scaledExpectation(solid.expected, scale));
+  return { part, path: stlPath(part), kind: 'stl', bytes, report };
+}
+
+function scaled(mesh: TriangleMesh, scale: readonly number[]): TriangleMesh {
+  if (scale.every((s) => s === 1)) return mesh;
+  return { ...mesh, vertices: mesh.vertices.map((x, i) => x * scale[i % 3]!) };
+}
+
+function scaledExpectation(expected: Expected, scale: readonly number[]): Expected {
+  const [x, y, z] = scale as readonly [number, number, number];
+  const by = (p: Point3): Point3 => [p[0] * x, p[1] * y, p[2] * z];
   return {
-    path: solid.path,
-    kind: 'stl',
-    bytes,
-    report: {
-      triangles,
-      volumeMm3: Math.round(volumeMm3),
-      massG: Math.round(volumeMm3 * solid.densityGCm3) / 1000,
-      boxMm: [size(0), size(1), size(2)],
-      printNote: solid.printNote,
-    },
+    ...expected,
+    minMm: by(expected.minMm),
+    maxMm: by(expected.maxMm),
+    volumeMm3: expected.volumeMm3 * x * y * z,
   };
 }

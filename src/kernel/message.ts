@@ -6,6 +6,8 @@ import type { PartFile } from './make.ts';
 export interface MakeRequest {
   readonly id: number;
   readonly record: PartsRecord;
+  /** Of its parts these; all when left out. */
+  readonly named: readonly string[] | undefined;
 }
 
 export type MakeReply =

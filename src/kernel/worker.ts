@@ -17,9 +17,9 @@ port.on('message', async (request: MakeRequest) => {
   port.postMessage(reply, bytes);
 });
 
-async function answer({ id, record }: MakeRequest): Promise<MakeReply> {
+async function answer({ id, record, named }: MakeRequest): Promise<MakeReply> {
   try {
-    return { id, kind: 'made', parts: await makeParts(record) };
+    return { id, kind: 'made', parts: await makeParts(record, named) };
   } catch (error) {
     if (error instanceof Fault) return { id, kind: 'fault', exit: error.exit, faults: error.faults };
     return { id, kind: 'error', text: error instanceof Error ? error.message : String(error) };

@@ -41,7 +41,7 @@ export function roofMm(diameterMm: number): number {
 }
 
 export function formerDimensions(record: PartsRecord): FormerDimensions {
-  const former = asCut(record.former);
+  const former = asCut(record);
   const winding = record.windings[0]!;
   const outsideR = former.outsideDiameterMm / 2;
   const flangeR = former.flange ? former.flange.diameterMm / 2 : outsideR;
@@ -60,7 +60,7 @@ export function formerDimensions(record: PartsRecord): FormerDimensions {
     topR: flangeR,
     lengthMm: former.lengthMm,
     chamferMm: former.chamferMm,
-    lineMm: former.print?.lineMm ?? 0,
+    lineMm: record.printer.lineMm,
     surfaceFromMm: former.flange ? former.flange.lowerMm : former.footMm,
     surfaceToMm,
     holes,
@@ -70,8 +70,8 @@ export function formerDimensions(record: PartsRecord): FormerDimensions {
 }
 
 /** The former with its ears' holes as they are modelled: wider by the printer's compensation. */
-function asCut(former: Former): Former {
-  const more = former.print?.holeCompensationMm ?? 0;
+function asCut({ former, printer }: PartsRecord): Former {
+  const more = printer.holeCompensationMm;
   return { ...former, ears: former.ears.map((ear) => ({ ...ear, holeDiameterMm: ear.holeDiameterMm + more })) };
 }
 
@@ -79,7 +79,7 @@ function asCut(former: Former): Former {
 function wallHoles(record: PartsRecord): Hole[] {
   const inEar = (hole: Hole) =>
     hole.purpose === 'mount' && record.former.ears.some((ear) => angleBetween(ear.angleDeg, hole.angleDeg) < 0.01);
-  const more = record.former.print?.holeCompensationMm ?? 0;
+  const more = record.printer.holeCompensationMm;
   return record.holes.filter((hole) => !inEar(hole)).map((hole) => ({ ...hole, diameterMm: hole.diameterMm + more }));
 }
 

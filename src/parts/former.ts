@@ -16,9 +16,8 @@ import { formerSkin } from './skin.ts';
 import type { Expected, Loft, Point3, Skin, Solid } from './solid.ts';
 import { formerVolume } from './volume.ts';
 
-/** Null for a bought tube. @throws Fault (exit 4) that names every dimension that cannot be. */
-export function formerSolid(record: PartsRecord): Solid | null {
-  if (record.former.kind !== 'printed') return null;
+/** @throws Fault (exit 4) that names every dimension that cannot be */
+export function formerParts(record: PartsRecord): Solid[] {
   const d = formerDimensions(record);
   requireRoom(d);
   const body = formerSkin(d);
@@ -26,22 +25,27 @@ export function formerSolid(record: PartsRecord): Solid | null {
   const numbers = numberCutters(d);
   const holes = wallCutters(d);
   const earHoles = earCutters(d);
-  return {
-    part: 'former',
-    path: 'former.stl',
-    body,
-    adders,
-    cutters: [...holes, ...earHoles, ...datumCutters(d), ...numbers],
-    expected: {
-      bodies: 1,
-      genus: 1 + holes.length + earHoles.length,
-      genusIs: `1 bore, ${holes.length} holes in the wall, ${earHoles.length} in ears`,
-      ...box(body, adders),
-      volumeMm3: formerVolume(d, body, numbers),
+  return [
+    {
+      part: 'former',
+      name: 'Former',
+      kind: 'former',
+      quantity: 1,
+      material: record.former.material,
+      densityGCm3: record.former.densityGCm3,
+      shapes: [body, ...adders],
+      cutters: [...holes, ...earHoles, ...datumCutters(d), ...numbers],
+      expected: {
+        bodies: 1,
+        genus: 1 + holes.length + earHoles.length,
+        genusIs: `1 bore, ${holes.length} holes in the wall, ${earHoles.length} in ears`,
+        ...box(body, adders),
+        volumeMm3: formerVolume(d, body, numbers),
+      },
+      use: 'the coil is wound on it',
+      printNote: printNote(d),
     },
-    densityGCm3: record.former.densityGCm3,
-    printNote: printNote(record, d),
-  };
+  ];
 }
 
 /** Extremes of the dimensioned solid; cutters cannot enlarge it. */
@@ -59,10 +63,9 @@ function box(skin: Skin, adders: readonly Loft[]): Pick<Expected, 'minMm' | 'max
   return { minMm: min, maxMm: max };
 }
 
-function printNote(record: PartsRecord, d: FormerDimensions): string {
+function printNote(d: FormerDimensions): string {
   return [
-    `print standing on the foot, no supports, axis at x = y = 0`,
-    `${record.former.material}`,
+    'print standing on the foot, no supports',
     `seam aligned at ${seamDeg(d)} degrees, away from the holes`,
     'no carbon- or metal-filled filament',
   ].join('; ');

@@ -1,13 +1,12 @@
 /** Holes, ears and the datum mark of the former: what is cut out of the turned body and what is set on it. */
 import type { Former } from '../record/schema.ts';
 import type { FormerDimensions } from './dimensions.ts';
+import { chordsFor } from './shapes.ts';
 import type { Loft, Point2, Point3 } from './solid.ts';
 
 const RAD = Math.PI / 180;
 /** Cutters stand this far out of what they cut, so that no two faces coincide. */
 const PROUD_MM = 1;
-/** Greatest distance between a chord and its circle. */
-const SAG_MM = 0.01;
 
 /** A place in the frame: `x` along the radius at the angle, `y` across it, counterclockwise positive. */
 function at(angleDeg: number, x: number, y: number, z: number): Point3 {
@@ -16,17 +15,13 @@ function at(angleDeg: number, x: number, y: number, z: number): Point3 {
   return [c * x - s * y, s * x + c * y, z];
 }
 
-function chords(radiusMm: number, sweepRad: number, least: number): number {
-  return Math.max(least, Math.ceil(sweepRad / (2 * Math.acos(1 - SAG_MM / Math.max(radiusMm, 2 * SAG_MM)))));
-}
-
 /**
  * A hole that is printed lying: a circle whose upper quarter is a roof at 45 degrees. All sides are tangents, so that
  * the full diameter stays clear. Points are (across, up) from the centre, counterclockwise from the roof's point.
  */
 export function teardrop(diameterMm: number): Point2[] {
   const r = diameterMm / 2;
-  const n = chords(r, 1.5 * Math.PI, 9);
+  const n = chordsFor(r, 1.5 * Math.PI, 9);
   const step = (1.5 * Math.PI) / n;
   const corner = r / Math.cos(step / 2);
   const points: Point2[] = [[0, r * Math.SQRT2]];
@@ -79,7 +74,7 @@ export function earOutline(ear: Ear, rootR: number, insetMm: number): Point2[] {
     const a = rootAngle * (1 - (2 * i) / rootChords);
     points.push([rootR * Math.cos(a), rootR * Math.sin(a)]);
   }
-  const n = chords(end, 2 * tangentAngle, 12);
+  const n = chordsFor(end, 2 * tangentAngle, 12);
   for (let i = 0; i <= n; i++) {
     const a = tangentAngle * ((2 * i) / n - 1);
     points.push([ear.centreRadiusMm + (end - insetMm) * Math.cos(a), (end - insetMm) * Math.sin(a)]);
@@ -107,7 +102,7 @@ export function earAdders(d: FormerDimensions): Loft[] {
 export function earCutters(d: FormerDimensions): Loft[] {
   return d.former.ears.map((ear, i) => {
     const r = ear.holeDiameterMm / 2;
-    const n = chords(r, 2 * Math.PI, 16);
+    const n = chordsFor(r, 2 * Math.PI, 16);
     const ring = (radius: number, z: number): Point3[] =>
       Array.from({ length: n }, (_, k) => {
         const a = (2 * Math.PI * (k + 0.5)) / n;

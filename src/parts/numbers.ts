@@ -2,11 +2,11 @@
  * Tap numbers on the upper rim, cut into its face. They read from outside: the foot of a figure is towards the edge, and
  * figures run counterclockwise, as the angle does. A tick through the edge marks each true angle.
  */
-import vectorText from '@jscad/modeling/src/text/vectorText.js';
 import { Fault } from '../fault.ts';
 import type { FormerDimensions } from './dimensions.ts';
 import { type Placement, placeLabels } from './labels.ts';
-import type { Engraving, Point2 } from './solid.ts';
+import { glyph } from './lettering.ts';
+import { BED, type Engraving, type Point2 } from './solid.ts';
 
 const RAD = Math.PI / 180;
 const STROKE_MM = 0.6;
@@ -16,8 +16,6 @@ const CLEAR_MM = 0.5;
 const TICK_MM = 1.2;
 /** Figures lower than this close up in the print (two strokes and a space between). */
 const LEAST_HEIGHT_MM = 2;
-/** Points of a figure closer than this part of its height do not show in the print. */
-const FINEST = 0.06;
 
 interface Face {
   readonly innerR: number;
@@ -48,6 +46,7 @@ export function numberCutters(d: FormerDimensions): Engraving[] {
       depthMm: Math.min(DEPTH_MM, former.flange.upperMm / 3),
       widthMm: face.strokeMm,
       strokes,
+      frame: BED,
     },
   ];
 }
@@ -82,56 +81,6 @@ function faceFor(d: FormerDimensions, heightMm: number): Face {
   const strokeMm = Math.min(STROKE_MM, heightMm / 4);
   const footR = d.topR - TICK_MM - CLEAR_MM - strokeMm;
   return { innerR: d.boreR, outerR: d.topR, strokeMm, heightMm, footR, middleR: footR - heightMm / 2 };
-}
-
-interface Glyph {
-  readonly strokes: readonly Point2[][];
-  readonly width: number;
-}
-
-const drawn = new Map<string, Glyph>();
-
-/** The font's own comma hangs below the foot line, into the ticks, and its dash is wider than a figure. */
-const OWN_GLYPHS: Readonly<Record<string, Point2[][]>> = {
-  ',': [
-    [
-      [0.1, 0.15],
-      [0, -0.02],
-    ],
-  ],
-  '-': [
-    [
-      [0, 0.5],
-      [0.4, 0.5],
-    ],
-  ],
-};
-
-/** A figure one unit high, its left edge and its foot line at 0. */
-function glyph(char: string): Glyph {
-  const known = drawn.get(char);
-  if (known) return known;
-  // The font's nominal height is two thirds of its capitals'.
-  const raw: readonly Point2[][] = OWN_GLYPHS[char] ?? vectorText({ height: 1 / 1.5 }, char);
-  const xs = raw.flat().map((p) => p[0]);
-  const left = Math.min(...xs);
-  const made = {
-    strokes: raw.map((line) => thin(line.map((p): Point2 => [p[0] - left, p[1]]))),
-    width: Math.max(...xs) - left,
-  };
-  drawn.set(char, made);
-  return made;
-}
-
-/** Leaves out points that stand closer to the last kept one than shows in the print. */
-function thin(line: readonly Point2[]): Point2[] {
-  const kept: Point2[] = [];
-  for (const [i, p] of line.entries()) {
-    const last = kept[kept.length - 1];
-    if (last && i < line.length - 1 && Math.hypot(p[0] - last[0], p[1] - last[1]) < FINEST) continue;
-    kept.push(p);
-  }
-  return kept;
 }
 
 const spaceMm = (face: Face) => face.strokeMm + 0.45;

@@ -23,6 +23,7 @@ export function formerSkin(d: FormerDimensions): Skin {
   ];
   if (c > 0) bore.push({ rMm: d.boreR + c, zMm: 0 });
   return {
+    kind: 'skin',
     segments: d.segments,
     hand: d.hand,
     outer: [...foot, ...top],

@@ -3,6 +3,8 @@
  * at x = y = 0. Parts write these descriptions and the kernel turns them into meshes; neither knows how the other works.
  */
 
+import type { PartKind } from '../job/job.ts';
+
 export type Point2 = readonly [number, number];
 export type Point3 = readonly [number, number, number];
 
@@ -31,6 +33,7 @@ export interface Groove {
 
 /** A tube turned from a closed profile: `outer` from foot to top, then `inner` from top to foot. */
 export interface Skin {
+  readonly kind: 'skin';
   readonly segments: number;
   readonly hand: 'right' | 'left';
   readonly outer: readonly ProfileRow[];
@@ -46,7 +49,27 @@ export interface Loft {
   readonly hubs: readonly [Point3, Point3] | null;
 }
 
-/** Strokes with round ends, cut down into an upward face at `zMm`. */
+/** Where a flat shape lies: its own x and y as unit vectors at right angles, its z along x cross y. */
+export interface Frame {
+  readonly origin: Point3;
+  readonly x: Point3;
+  readonly y: Point3;
+}
+
+/** The frame of the print bed. */
+export const BED: Frame = { origin: [0, 0, 0], x: [1, 0, 0], y: [0, 1, 0] };
+
+/** A flat outline drawn out along the z of its frame. Outlines are counterclockwise, openings in them clockwise. */
+export interface Prism {
+  readonly kind: 'prism';
+  readonly name: string;
+  readonly outlines: readonly (readonly Point2[])[];
+  readonly fromMm: number;
+  readonly toMm: number;
+  readonly frame: Frame;
+}
+
+/** Strokes with round ends, cut down into the face at `zMm` of the frame, which looks along its z. */
 export interface Engraving {
   readonly kind: 'engraving';
   readonly name: string;
@@ -54,7 +77,11 @@ export interface Engraving {
   readonly depthMm: number;
   readonly widthMm: number;
   readonly strokes: readonly (readonly Point2[])[];
+  readonly frame: Frame;
 }
+
+export type Shape = Skin | Loft | Prism;
+export type Cutter = Loft | Prism | Engraving;
 
 /** What the mesh must turn out to be; computed from the dimensions, not from a mesh. */
 export interface Expected {
@@ -67,14 +94,20 @@ export interface Expected {
   readonly volumeMm3: number;
 }
 
-/** (body + adders) - cutters. */
+/** A part to print: all shapes joined, then all cutters taken away. In print orientation, on Z = 0. */
 export interface Solid {
+  /** Stands in the file name, in messages and on beds: lower-case, words joined by `-`. */
   readonly part: string;
-  readonly path: string;
-  readonly body: Skin;
-  readonly adders: readonly Loft[];
-  readonly cutters: readonly (Loft | Engraving)[];
-  readonly expected: Expected;
+  /** For people. */
+  readonly name: string;
+  readonly kind: PartKind;
+  readonly quantity: number;
+  readonly material: string;
   readonly densityGCm3: number;
+  readonly shapes: readonly Shape[];
+  readonly cutters: readonly Cutter[];
+  readonly expected: Expected;
+  /** What it is for, in a sentence without a full stop. */
+  readonly use: string;
   readonly printNote: string;
 }

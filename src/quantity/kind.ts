@@ -6,6 +6,7 @@ export type KindName =
   | 'capacitance'
   | 'frequency'
   | 'ratio'
+  | 'scale'
   | 'resistance'
   | 'angle'
   | 'temperature';
@@ -30,6 +31,7 @@ export const KINDS: Readonly<Record<KindName, Kind>> = {
   capacitance: { noun: 'a capacitance', unit: 'pF', low: 1e-2, high: 1e6, offered: ['pF', 'nF'], example: '380 pF' },
   frequency: { noun: 'a frequency', unit: 'kHz', low: 1, high: 1e6, offered: ['kHz', 'MHz'], example: '530 kHz' },
   ratio: { noun: 'a proportion', unit: '1', low: 1e-6, high: 1, offered: ['%'], example: '5 % or 0.05' },
+  scale: { noun: 'a scale', unit: '1', low: 0.9, high: 1.1, offered: ['%'], example: '100.3 %' },
   resistance: { noun: 'a resistance', unit: 'ohm', low: 1e-6, high: 1e9, offered: ['ohm', 'kohm'], example: '2.5 ohm' },
   angle: { noun: 'an angle', unit: 'deg', low: 1e-3, high: 3.6e5, offered: ['deg'], example: '30 deg' },
   temperature: { noun: 'a temperature', unit: 'degC', low: -80, high: 300, offered: ['degC'], example: '20 degC' },

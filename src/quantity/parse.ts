@@ -61,7 +61,8 @@ export function parseQuantity(written: string, kind: KindName, allowed: Allowed 
   if (reading.found === 'nothing')
     return refuse(`${shown}, which has no number in front`, `write a number and then its unit, such as ${example}`);
   if (!Number.isFinite(reading.value)) return refuse(`${shown}, more than a number can hold`, 'check the exponent');
-  if (kind === 'ratio') return bounded(ratio(reading.value, reading.unit, refuse, shown), kind, allowed, refuse, shown);
+  if (KINDS[kind].unit === '1')
+    return bounded(ratio(reading.value, reading.unit, refuse, shown), kind, allowed, refuse, shown);
   if (reading.unit === '') {
     return refuse(
       `${shown}, a number without a unit`,

@@ -84,6 +84,7 @@ function sample(kind: KindName): string {
     capacitance: '15 pF to 380 pF',
     frequency: '530 kHz to 1700 kHz',
     ratio: '5 % to 10 %',
+    scale: '100 % to 100.5 %',
     resistance: '1 ohm to 5 ohm',
     angle: '0 deg to 90 deg',
     temperature: '0 degC to 40 degC',

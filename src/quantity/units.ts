@@ -68,7 +68,7 @@ export function convert(number: number, unit: string, kind: KindName): Converted
   const target = KINDS[kind].unit;
   try {
     const quantity = new Unit(number, name);
-    if (kind === 'ratio' || !quantity.equalBase(new Unit(1, target))) {
+    if (target === '1' || !quantity.equalBase(new Unit(1, target))) {
       return { found: 'other', what: measuredBy(quantity) };
     }
     return { found: 'value', value: Number(quantity.toNumber(target).toPrecision(12)) };

@@ -5,6 +5,7 @@
 import { cautionsFor } from '../../templates/wording/cautions.ts';
 import { HOW } from '../../templates/wording/steps.ts';
 import type { Job } from '../job/job.ts';
+import { partsOf } from '../parts/parts.ts';
 import { alternativesTo, WORTH } from '../solve/alternatives.ts';
 import { setCapacitance } from '../solve/demand.ts';
 import type { Design } from '../solve/design.ts';
@@ -16,6 +17,7 @@ import { DEFAULT_AT_KHZ } from '../solve/working.ts';
 import { checksOf } from './checks.ts';
 import { figuresOf } from './figures.ts';
 import { hashOf } from './hash.ts';
+import { entriesOf, printerOf, wantedOf } from './printed.ts';
 import { decimals, deg, mm, significant } from './rounding.ts';
 import { type Alternative, type CoilRecord, type Former, type Hole, type PartsRecord, recordSchema } from './schema.ts';
 import { correctionsOf, stepsOf } from './steps.ts';
@@ -146,10 +148,27 @@ function derivedOf(job: Job, design: Design): Record<string, string> {
 export function partsRecordOf(job: Job, found: Found): PartsRecord {
   const { chosen } = found;
   return {
+    job: job.name,
     frame: frameOf(job),
     former: formerOf(chosen.former),
     holes: chosen.holes.map(holeOf),
+    printer: printerOf(job),
+    shop: { ...job.shop },
+    wanted: wantedOf(job, chosen),
+    tapMethod: tapMethodOf(chosen),
     windings: [placesOf(chosen)],
+  };
+}
+
+function tapMethodOf({ method, unitTaps, layout }: Design): CoilRecord['tapMethod'] {
+  return {
+    name: method.name,
+    // Unit taps are a turn apart and never in one line.
+    layout: unitTaps.length > 0 ? 'staggered' : layout,
+    gapMm: mm(method.gapMm),
+    loopM: method.loopM,
+    why: method.why,
+    how: HOW[method.name](Math.round(method.loopM * 1000)),
   };
 }
 
@@ -166,15 +185,16 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
   const lossFactor = fieldLoss(job, chosen);
   const winding = windingOf(job, chosen, figures.taps);
   const spread = spreadOf(job, chosen);
-  const { method, candidate } = chosen;
+  const { candidate } = chosen;
+  const printed = partsRecordOf(job, found);
+  const solids = partsOf(printed);
   const alternatives = shownOf(job, found, lossFactor);
   const body: Omit<CoilRecord, 'hash' | 'files' | 'program'> = {
     record: 1,
     verb: 'plan',
-    job: job.name,
+    ...printed,
     date: job.date,
     paper: job.paper,
-    frame: frameOf(job),
     demand: demandOf(job, found),
     windings: [winding],
     surroundings: figures.surroundings,
@@ -182,17 +202,8 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     coverage: figures.coverage,
     switchKinds: figures.switchKinds,
     settings: figures.settings,
-    former: formerOf(chosen.former),
-    tapMethod: {
-      name: method.name,
-      // Unit taps are a turn apart and never in one line.
-      layout: chosen.unitTaps.length > 0 ? 'staggered' : chosen.layout,
-      gapMm: mm(method.gapMm),
-      loopM: method.loopM,
-      why: method.why,
-      how: HOW[method.name](Math.round(method.loopM * 1000)),
-    },
-    holes: chosen.holes.map(holeOf),
+    parts: entriesOf(solids),
+    beds: [],
     steps: stepsOf(job, chosen, winding),
     checks: checksOf(chosen, winding, spread),
     corrections: correctionsOf(chosen),

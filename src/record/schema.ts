@@ -7,6 +7,7 @@
  * so a hole at turn t lies at angle +360 frac(t) for a right-hand and at -360 frac(t) (mod 360) for a left-hand coil.
  */
 import * as z from 'zod';
+import { PARTS } from '../job/schema.ts';
 import { type Winding, windingSchema } from './winding-schema.ts';
 
 export type { Tap, UnitTap, Winding } from './winding-schema.ts';
@@ -70,12 +71,102 @@ export const formerSchema = z.strictObject({
     .describe('tap numbers and the letter S, cut into the face of the upper flange at the angle of their hole'),
   numberHeightMm: num,
   datumMark: z.strictObject({ angleDeg: num, widthMm: num, depthMm: num }).nullable(),
-  print: z
-    .strictObject({ lineMm: num, holeCompensationMm: num.describe('added to every hole as modelled') })
+  body: z.enum(['full', 'ribbed']).describe('of a printed former: a wall all round, or end rings and ribs'),
+  ribs: z
+    .strictObject({
+      count: num.int(),
+      widthMm: num.describe('along the circumference'),
+      depthMm: num.describe('along the radius, from the outside in'),
+      ringMm: num.describe('height of each end ring'),
+    })
     .nullable()
-    .describe('what the printer needs; null for a tube'),
+    .describe('of a ribbed body'),
+  ridges: z
+    .strictObject({ heightMm: num, widthMm: num })
+    .nullable()
+    .describe('helical ridges that a close winding leans on, before its start and behind its finish'),
+  base: z
+    .strictObject({
+      diameterMm: num,
+      thicknessMm: num,
+      holes: num.int(),
+      circleDiameterMm: num,
+      holeDiameterMm: num,
+      firstDeg: num.describe('angle of the first hole; the others stand evenly round'),
+    })
+    .nullable()
+    .describe('a round foot with a ring of screw holes'),
+  posts: z
+    .array(z.strictObject({ tap: num.int(), angleDeg: num, axialMm: num }))
+    .describe('terminal posts beside taps that are made with a lug'),
+  joints: z
+    .array(
+      z.strictObject({
+        seamMm: num.describe('Z of the seam on the outside, at the angle of the key'),
+        climbMm: num.describe(
+          'the seam rises by this over one turn with the winding, so that it runs between turns; 0 where none lie',
+        ),
+        keyDeg: num.describe('angle of the step of the seam, which keeps the sections from turning'),
+        spigotMm: num.describe('length of the spigot in the bore below'),
+        glueGapMm: num.describe('between spigot and bore, on the radius'),
+      }),
+    )
+    .describe('where a former taller than the printer is put together, from below'),
+  tenthMmPercent: num.describe('what a tenth of a millimetre more of outside diameter does to the inductance'),
   segments: num.int().describe('chords round the former'),
   stiffness: text.describe('what the winding tension does to this wall'),
+});
+
+export const printerSchema = z.strictObject({
+  bedXMm: num,
+  bedYMm: num,
+  heightMm: num,
+  nozzleMm: num,
+  lineMm: num,
+  layerMm: num,
+  holeCompensationMm: num.describe('added to the diameter of every hole as modelled'),
+  clearanceMm: num.describe('gap on diameter between printed parts that go into one another'),
+  scale: z
+    .array(num)
+    .length(3)
+    .describe('what files are enlarged by along x, y and z; every other figure is as it should come out'),
+  material: text.describe('of jigs'),
+  densityGCm3: num.describe('of that material'),
+});
+
+export const shopSchema = z.strictObject({
+  shaftMm: num.describe('diameter, or across the flats'),
+  shaftForm: z.enum(['round', 'hexagon']),
+  spoolDiameterMm: num,
+  spoolWidthMm: num,
+  spoolBoreMm: num,
+});
+
+export const partSchema = z.strictObject({
+  part: text.describe('stands in file names and on beds'),
+  name: text,
+  kind: z.enum(PARTS),
+  path: text,
+  quantity: num.int(),
+  material: text,
+  sizeMm: z.array(num).length(3).describe('outer size as it should come out, in print orientation'),
+  volumeMm3: num.describe('of the solid'),
+  massG: num.describe('of solid plastic, one piece'),
+  use: text,
+  printNote: text,
+});
+
+export const bedSchema = z.strictObject({
+  path: text,
+  items: z.array(
+    z.strictObject({
+      part: text,
+      copy: num.int(),
+      xMm: num.describe('left edge of its box on the bed'),
+      yMm: num.describe('front edge'),
+      turned: z.boolean().describe('by a quarter turn'),
+    }),
+  ),
 });
 
 export const holeSchema = z.strictObject({
@@ -211,6 +302,11 @@ export const recordSchema = z.strictObject({
     how: z.array(text).describe('how to make it, in order'),
   }),
   holes: z.array(holeSchema),
+  printer: printerSchema,
+  shop: shopSchema,
+  wanted: z.array(z.enum(PARTS)).describe('what is printed'),
+  parts: z.array(partSchema),
+  beds: z.array(bedSchema),
   steps: z.array(stepSchema),
   checks: z.array(checkSchema),
   corrections: z.array(correctionSchema),
@@ -234,6 +330,9 @@ export const recordSchema = z.strictObject({
 export type CoilRecord = z.infer<typeof recordSchema>;
 export type Setting = z.infer<typeof settingSchema>;
 export type Former = z.infer<typeof formerSchema>;
+export type PrinterFigures = z.infer<typeof printerSchema>;
+export type PartEntry = z.infer<typeof partSchema>;
+export type BedEntry = z.infer<typeof bedSchema>;
 export type Hole = z.infer<typeof holeSchema>;
 export type Step = z.infer<typeof stepSchema>;
 export type Check = z.infer<typeof checkSchema>;
@@ -241,6 +340,21 @@ export type Alternative = z.infer<typeof alternativeSchema>;
 export type Coverage = CoilRecord['coverage'];
 
 /** What the printed parts read of a record: known before the figures at work are. */
-export type PartsRecord = Pick<CoilRecord, 'frame' | 'former' | 'holes'> & {
-  readonly windings: readonly Pick<Winding, 'turns' | 'pitchMm' | 'turnPositionsMm'>[];
+export type PartsRecord = Pick<
+  CoilRecord,
+  'job' | 'frame' | 'former' | 'holes' | 'printer' | 'shop' | 'wanted' | 'tapMethod'
+> & {
+  readonly windings: readonly Pick<
+    Winding,
+    | 'turns'
+    | 'pitchMm'
+    | 'pitchKind'
+    | 'spacerMm'
+    | 'turnPositionsMm'
+    | 'meanDiameterMm'
+    | 'startMm'
+    | 'finishMm'
+    | 'wire'
+    | 'tensionHighN'
+  >[];
 };

@@ -19,7 +19,10 @@ const surveySectionSchema = z.strictObject({
   gapAfterMm: z.number().describe('clear distance to the next section, edge to edge; 0 behind the last'),
 });
 
-export const surveyRecordSchema = recordSchema.extend({
+/** What is made for a coil, which one that was found has no part in. */
+const PRINTED = { printer: true, shop: true, wanted: true, parts: true, beds: true } as const;
+
+export const surveyRecordSchema = recordSchema.omit(PRINTED).extend({
   verb: z.literal('survey'),
   former: foundFormerSchema,
   tapMethod: z.null(),
@@ -29,4 +32,7 @@ export const surveyRecordSchema = recordSchema.extend({
 
 export type SurveyRecord = z.infer<typeof surveyRecordSchema>;
 /** What the record of every verb has: all that figures, tables and charts need. */
-export type FiguresRecord = Omit<z.infer<typeof recordSchema>, 'former' | 'tapMethod' | 'chosen'>;
+export type FiguresRecord = Omit<
+  z.infer<typeof recordSchema>,
+  'former' | 'tapMethod' | 'chosen' | keyof typeof PRINTED
+>;

@@ -65,12 +65,19 @@ function unitTapOf(job: Job, { coil, method }: Design, turn: number, index: numb
   };
 }
 
-/** Where the turns lie: all that the parts need of a winding. */
-export function placesOf({ coil }: Design): PartsRecord['windings'][number] {
+/** Where the turns lie and of what they are: all that the parts need of a winding. */
+export function placesOf({ coil, candidate, tension }: Design): PartsRecord['windings'][number] {
   return {
     turns: decimals(coil.turns, 6),
     pitchMm: mm(coil.shape.pitchMm),
+    pitchKind: candidate.pitch.kind,
+    spacerMm: mm(candidate.pitch.spacerMm),
     turnPositionsMm: Array.from(coil.places, mm),
+    startMm: mm(coil.positionMm(0)),
+    finishMm: mm(coil.positionMm(coil.turns)),
+    meanDiameterMm: mm(coil.shape.meanDiameterMm),
+    wire: { ...candidate.wire },
+    tensionHighN: significant(tension.high, 2),
   };
 }
 
@@ -86,14 +93,8 @@ export function windingOf(job: Job, design: Design, figures: readonly WorkingFig
   return {
     name: 'main',
     ...placesOf(design),
-    pitchKind: candidate.pitch.kind,
-    spacerMm: mm(candidate.pitch.spacerMm),
     spacerName: candidate.pitch.spacerName,
-    startMm: mm(coil.positionMm(0)),
-    finishMm: mm(coil.positionMm(coil.turns)),
-    meanDiameterMm: mm(coil.shape.meanDiameterMm),
     windingLengthMm: mm(coil.woundMm(coil.turns)),
-    wire: { ...candidate.wire },
     wireLengthM: decimals(metrics.wireM, 4),
     leadsM: (2 * LEAD_MM) / 1000,
     wireMassG: significant(metrics.massG, 4),
@@ -101,7 +102,6 @@ export function windingOf(job: Job, design: Design, figures: readonly WorkingFig
     inductanceUh: list[list.length - 1]!.inductanceUh,
     selfCapacitancePf: significant(coil.selfPf(coil.turns), 4),
     tensionLowN: significant(tension.low, 2),
-    tensionHighN: significant(tension.high, 2),
     taps: list,
     unitTaps: design.unitTaps.map((turn, index) => unitTapOf(job, design, turn, index)),
   };

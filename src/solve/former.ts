@@ -152,7 +152,19 @@ export function formerFor(around: Around, coil: Coil, taps: readonly number[], h
     numbers: flanges ? numbers : [],
     numberHeightMm: 3.2,
     datumMark: printed ? { angleDeg: 0, widthMm: 1.2, depthMm: 0.6 } : null,
-    print: printed ? { lineMm: job.printer.lineMm, holeCompensationMm: job.printer.holeCompensationMm } : null,
+    body: 'full',
+    ribs: null,
+    ridges: null,
+    base: null,
+    posts: [],
+    joints: [],
+    tenthMmPercent:
+      Math.round(
+        1e4 *
+          (coil.changed({ meanDiameterMm: coil.shape.meanDiameterMm + 0.1 }).inductanceUh(coil.turns) /
+            coil.inductanceUh(coil.turns) -
+            1),
+      ) / 100,
     // Chords within 0.01 mm of the widest circle, in steps of 12 so that marks fall on them.
     segments: Math.max(48, Math.ceil(Math.PI / Math.acos(1 - 0.01 / (widest / 2)) / 12) * 12),
     stiffness: `${around.tensionN.toFixed(1)} N at this pitch takes ${percent} % off the diameter of a ${wallMm.toFixed(2)} mm wall of ${material.name} (modulus ${material.modulusGPa} GPa), ${(strain * 160).toFixed(2)} % off the inductance; wind no tighter`,

@@ -130,9 +130,25 @@ const CASES: readonly (readonly [string, readonly string[]])[] = [
     ['3 former.wall: a wall of 40 mm at a diameter of 76 mm'],
   ],
   [
-    `${WISH}former: { longest: 300 mm }`,
-    ['3 former.longest: a printed former up to 300 mm long on a printer 250 mm high'],
+    `${WISH}former: { kind: tube, outside-diameter: 76 mm, mounting: base, body: ribbed, ribs: 8, screw: 4 mm }`,
+    [
+      '3 former.mounting: a base on a tube that is bought',
+      '3 former.body: ribs on a tube that is bought',
+      '3 former.ribs: ribs on a tube that is bought',
+      '3 former.screw: mounting screws on a tube that is bought',
+    ],
   ],
+  [
+    `${WISH}former: { ribs: 8, mounting: none, screw-circle: 90 mm }`,
+    [
+      '3 former.ribs: ribs for a former with body: full',
+      '3 former.screw-circle: mounting screws for a former with mounting: none',
+    ],
+  ],
+  [`${WISH}printer: { material: card }`, ['3 printer.material: card for a printer']],
+  [`${WISH}printer: { scale: [100 %, 100.2 %] }`, ['3 printer.scale: a list of 2']],
+  [`${WISH}printer: { scale: 120 % }`, ['3 printer.scale: "120 %", which is above the 1.1 that make sense here']],
+  [`${WISH}parts: [former, cone]`, ['3 parts[2]: "cone"']],
   [
     `${WISH}former: { outside-diameter: 60 mm to 230 mm }`,
     ['3 former.outside-diameter: a printed former 230 mm wide on a bed of 220 mm x 220 mm'],

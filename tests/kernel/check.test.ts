@@ -7,7 +7,7 @@ import { loadKernel } from '../../src/kernel/load.ts';
 import { loftMesh } from '../../src/kernel/loft.ts';
 import { makeParts } from '../../src/kernel/make.ts';
 import { readStl, stlBytes } from '../../src/kernel/stl.ts';
-import { formerSolid } from '../../src/parts/former.ts';
+import { formerParts } from '../../src/parts/former.ts';
 import type { Expected, Loft, Solid } from '../../src/parts/solid.ts';
 import { sampleRecord } from '../helpers/sample.ts';
 
@@ -19,7 +19,7 @@ let count: number;
 beforeAll(async () => {
   kernel = await loadKernel();
   const record = sampleRecord({ surface: 'smooth', turns: [6.25, 11.5] });
-  solid = formerSolid(record)!;
+  solid = formerParts(record)[0]!;
   bytes = (await makeParts(record))[0]!.bytes;
   count = (bytes.length - 84) / 50;
 });

@@ -21,6 +21,7 @@ const skins: fc.Arbitrary<Skin> = fc
   .map(({ segments, hand, turns, firstColumn, depthMm, ramp }) => {
     const count = Math.ceil(turns * segments) + 2;
     return {
+      kind: 'skin' as const,
       segments,
       hand,
       outer: [

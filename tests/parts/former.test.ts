@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { Fault } from '../../src/fault.ts';
 import { formerDimensions } from '../../src/parts/dimensions.ts';
-import { formerSolid } from '../../src/parts/former.ts';
+import { formerParts } from '../../src/parts/former.ts';
 import { teardrop } from '../../src/parts/holes.ts';
 import type { Engraving } from '../../src/parts/solid.ts';
 import type { CoilRecord } from '../../src/record/schema.ts';
@@ -9,7 +9,7 @@ import { sampleRecord } from '../helpers/sample.ts';
 
 function codes(record: CoilRecord): string[] {
   try {
-    formerSolid(record);
+    formerParts(record);
   } catch (error) {
     if (!(error instanceof Fault)) throw error;
     expect(error.exit).toBe(4);
@@ -75,7 +75,7 @@ test('a teardrop clears its whole diameter and has a roof at 45 degrees', () => 
 test('numbers read from outside: up is inwards, on runs counterclockwise', () => {
   // One figure 1 at angle 0: the font draws it from the flag over the top down to the foot.
   const record = former({ numbers: [{ text: '7', angleDeg: 0, tap: 7 }] });
-  const numbers = formerSolid(record)!.cutters.find((c): c is Engraving => c.kind === 'engraving')!;
+  const numbers = formerParts(record)[0]!.cutters.find((c): c is Engraving => c.kind === 'engraving')!;
   const figure = numbers.strokes.filter((line) => line.every(([x]) => x < base.former.flange!.diameterMm / 2 - 1.5));
   const points = figure.flat();
   // The bar of a 7 is its top: it lies inwards; its foot lies outwards, left of the bar's right end.
@@ -89,7 +89,7 @@ test('numbers read from outside: up is inwards, on runs counterclockwise', () =>
 });
 
 test('no numbers without a flange, no datum notch when there is none', () => {
-  const names = (record: CoilRecord) => formerSolid(record)!.cutters.map((c) => c.name);
+  const names = (record: CoilRecord) => formerParts(record)[0]!.cutters.map((c) => c.name);
   expect(names(base)).toContain('numbers');
   expect(names(base)).toContain('datum mark');
   const plain = former({ flange: null, datumMark: null, ears: [] });
@@ -99,7 +99,7 @@ test('no numbers without a flange, no datum notch when there is none', () => {
 
 test('the groove goes on to the last hole of the finish row when there is room, else it ends at the finish', () => {
   const last = (record: CoilRecord) => {
-    const groove = formerSolid(record)!.body.groove!;
+    const groove = formerParts(record)[0]!.shapes.find((shape) => shape.kind === 'skin')!.groove!;
     return (groove.firstColumn + groove.samples.length - 0.5) / record.former.segments;
   };
   const turns = base.windings[0]!.turns;
@@ -113,15 +113,15 @@ test('the groove goes on to the last hole of the finish row when there is room, 
 test('a mounting hole that stands in an ear is not cut through the wall too', () => {
   const mount = { purpose: 'mount' as const, tap: null, turn: null, label: 'M', axialMm: 20, diameterMm: 4 };
   const genus = (angleDeg: number) =>
-    formerSolid({ ...base, holes: [...base.holes, { ...mount, angleDeg }] })!.expected.genus;
-  expect(genus(ear.angleDeg)).toBe(formerSolid(base)!.expected.genus);
-  expect(genus(ear.angleDeg + 90)).toBe(formerSolid(base)!.expected.genus + 1);
+    formerParts({ ...base, holes: [...base.holes, { ...mount, angleDeg }] })[0]!.expected.genus;
+  expect(genus(ear.angleDeg)).toBe(formerParts(base)[0]!.expected.genus);
+  expect(genus(ear.angleDeg + 90)).toBe(formerParts(base)[0]!.expected.genus + 1);
 });
 
 describe('hole compensation of the printer', () => {
   test('widens every modelled hole, in wall and ears, and leaves the record alone', () => {
     const record = sampleRecord({ surface: 'grooved' });
-    const wider = { ...record, former: { ...record.former, print: { lineMm: 0.45, holeCompensationMm: 0.2 } } };
+    const wider = { ...record, printer: { ...record.printer, holeCompensationMm: 0.2 } };
     const plain = formerDimensions(record);
     const cut = formerDimensions(wider);
     expect(cut.holes.length).toBeGreaterThan(5);

@@ -1,0 +1,50 @@
+/** What of the record concerns printing: the printer, which parts are wanted, and the list of the parts themselves. */
+import type { Job, PartKind } from '../job/job.ts';
+import { PARTS } from '../job/schema.ts';
+import type { Solid } from '../parts/solid.ts';
+import type { Design } from '../solve/design.ts';
+import { findMaterial } from '../stock/materials.ts';
+import { decimals, significant } from './rounding.ts';
+import type { PartEntry, PrinterFigures } from './schema.ts';
+
+export function printerOf({ printer }: Job): PrinterFigures {
+  const found = findMaterial(printer.material);
+  if (!found.ok) throw new Error(`material ${printer.material} passed the reading of the job`);
+  const { material, scale, ...rest } = printer;
+  return { ...rest, scale: [...scale], material: found.material.name, densityGCm3: found.material.densityGPerCm3 };
+}
+
+/** The parts that suit a coil: what its former and its way of winding have no use for is left out. */
+function suitable({ former, method, candidate }: Pick<Design, 'former' | 'method' | 'candidate'>): PartKind[] {
+  const not: Partial<Record<PartKind, boolean>> = {
+    former: former.kind !== 'printed',
+    saddle: former.kind === 'printed',
+    comb: candidate.pitch.kind !== 'spacer',
+    'loop gauge': method.name !== 'twisted loop',
+  };
+  return PARTS.filter((part) => not[part] !== true);
+}
+
+/** Left out, all but the winding stand, which is hours of printing and serves every later coil too. */
+export function wantedOf(job: Job, design: Pick<Design, 'former' | 'method' | 'candidate'>): PartKind[] {
+  if (job.parts === null) return suitable(design).filter((part) => part !== 'stand');
+  if (job.parts.includes('all')) return suitable(design);
+  return PARTS.filter((part) => job.parts?.includes(part));
+}
+
+/** The list of parts, as they should come out. */
+export function entriesOf(solids: readonly Solid[]): PartEntry[] {
+  return solids.map(({ part, name, kind, quantity, material, densityGCm3, expected, use, printNote }) => ({
+    part,
+    name,
+    kind,
+    path: `${part}.stl`,
+    quantity,
+    material,
+    sizeMm: expected.maxMm.map((most, i) => decimals(most - expected.minMm[i]!, 3)),
+    volumeMm3: decimals(expected.volumeMm3, 0),
+    massG: significant((expected.volumeMm3 * densityGCm3) / 1000, 3),
+    use,
+    printNote,
+  }));
+}
