@@ -11,7 +11,9 @@
  */
 import type { Job } from './job/job.ts';
 import { startKernel } from './kernel/client.ts';
+import { bedFiles, partFiles } from './kernel/files.ts';
 import { netlistFile } from './netlist/file.ts';
+import { partsOf } from './parts/parts.ts';
 import { listed, type Output, type OutputFile } from './record/listing.ts';
 import { makeRecord, partsRecordOf } from './record/make.ts';
 import type { CoilRecord } from './record/schema.ts';
@@ -35,10 +37,14 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
   try {
     const found = foundFor(job);
     // The parts need no figures at work: they are made while those are worked out.
-    const parts = kernel.make(partsRecordOf(job, found));
-    // A fault of the worker is reported when it is awaited below, not as an unhandled rejection meanwhile.
-    parts.catch(() => undefined);
-    const record = makeRecord(job, found, options.version);
+    const printed = partsRecordOf(job, found);
+    const solids = partsOf(printed);
+    const making = Promise.all(solids.map((solid) => kernel.part(solid, printed.printer.scale)));
+    // A failure of a thread is reported when it is awaited below, not as an unhandled rejection meanwhile.
+    making.catch(() => undefined);
+    const record = makeRecord(job, found, options.version, solids);
+    const beds = making.then((parts) => bedFiles(kernel, record, parts));
+    beds.catch(() => undefined);
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
     const { wrapTemplate } = await import('./sheets/wrap-template.ts');
     const { rangeSheet } = await import('./sheets/range-sheet.ts');
@@ -52,12 +58,9 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
       ...holePatternFiles(record),
       { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
       netlistFile(record),
+      ...partFiles(record, await making),
+      ...(await beds),
     ];
-    for (const { part, path, kind, bytes } of await parts) {
-      const { sizeMm, massG, material, quantity, printNote } = record.parts.find((one) => one.part === part)!;
-      const note = `${quantity > 1 ? `${quantity} of ` : ''}${sizeMm.map((mm) => mm.toFixed(1)).join(' x ')} mm, ${massG.toFixed(0)} g of ${material}; ${printNote}`;
-      files.push({ path, kind, bytes, note });
-    }
     return listed(record, files);
   } finally {
     await kernel.close();

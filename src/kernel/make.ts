@@ -14,13 +14,23 @@ import { checkBytes } from './check.ts';
 import { loadKernel } from './load.ts';
 import type { TriangleMesh } from './mesh.ts';
 import { stlBytes } from './stl.ts';
+import { type PrintBed, threemfBytes } from './threemf.ts';
 import { canonical, weld } from './weld.ts';
+
+export interface Picture {
+  readonly png: Uint8Array<ArrayBuffer>;
+  readonly widthPx: number;
+  readonly heightPx: number;
+}
 
 export interface PartFile {
   readonly part: string;
   readonly path: string;
   readonly kind: 'stl';
   readonly bytes: Uint8Array<ArrayBuffer>;
+  /** The same triangles by index, for a bed. */
+  readonly mesh: TriangleMesh;
+  readonly pictures: readonly Picture[];
   readonly report: PartReport;
 }
 
@@ -32,28 +42,39 @@ export interface PartReport {
   readonly maxMm: Point3;
 }
 
-/** The file of a part. */
-export const stlPath = (part: string): string => `${part}.stl`;
+export interface BedOrder extends PrintBed {
+  readonly path: string;
+}
+
+export interface BedFile {
+  readonly path: string;
+  readonly kind: '3mf';
+  readonly bytes: Uint8Array<ArrayBuffer>;
+}
 
 /**
- * The parts that the record wants, or of these the ones that are named.
+ * The parts that the record wants, in this thread, one after the other.
  * @throws Fault for dimensions that cannot be (exit 4)
  * @throws MeshError when a part did not come out as described
  */
-export async function makeParts(record: PartsRecord, named?: readonly string[]): Promise<PartFile[]> {
+export async function makeParts(record: PartsRecord): Promise<PartFile[]> {
   const files: PartFile[] = [];
-  for (const solid of partsOf(record))
-    if (named === undefined || named.includes(solid.part)) files.push(await makePart(solid, record.printer.scale));
+  for (const solid of partsOf(record)) files.push(await makePart(solid, record.printer.scale));
   return files;
 }
 
 /** One part as the bytes of its file, enlarged by `scale` along x, y and z. */
 export async function makePart(solid: Solid, scale: readonly number[] = [1, 1, 1]): Promise<PartFile> {
   const kernel = await loadKernel();
-  const bytes = stlBytes(canonical(weld(scaled(buildSolid(kernel, solid), scale))));
+  const mesh = canonical(weld(scaled(buildSolid(kernel, solid), scale)));
+  const bytes = stlBytes(mesh);
   const { part } = solid;
   const report = checkBytes(kernel, part, bytes, scaledExpectation(solid.expected, scale));
-  return { part, path: stlPath(part), kind: 'stl', bytes, report };
+  return { part, path: `${part}.stl`, kind: 'stl', bytes, mesh, pictures: [], report };
+}
+
+export function makeBed({ path, ...bed }: BedOrder): BedFile {
+  return { path, kind: '3mf', bytes: threemfBytes(bed) };
 }
 
 function scaled(mesh: TriangleMesh, scale: readonly number[]): TriangleMesh {

@@ -1,16 +1,17 @@
 /** What client and worker say to one another. */
-import type { FaultExit, FaultParts } from '../fault.ts';
-import type { PartsRecord } from '../record/schema.ts';
-import type { PartFile } from './make.ts';
+import type { Solid } from '../parts/solid.ts';
+import type { BedFile, BedOrder, PartFile } from './make.ts';
 
-export interface MakeRequest {
+export type Order =
+  | { readonly kind: 'part'; readonly solid: Solid; readonly scale: readonly number[] }
+  | { readonly kind: 'bed'; readonly bed: BedOrder };
+
+export interface Request {
   readonly id: number;
-  readonly record: PartsRecord;
-  /** Of its parts these; all when left out. */
-  readonly named: readonly string[] | undefined;
+  readonly order: Order;
 }
 
-export type MakeReply =
-  | { readonly id: number; readonly kind: 'made'; readonly parts: PartFile[] }
-  | { readonly id: number; readonly kind: 'fault'; readonly exit: FaultExit; readonly faults: readonly FaultParts[] }
+export type Reply =
+  | { readonly id: number; readonly kind: 'part'; readonly part: PartFile }
+  | { readonly id: number; readonly kind: 'bed'; readonly bed: BedFile }
   | { readonly id: number; readonly kind: 'error'; readonly text: string };

@@ -1,27 +1,34 @@
-/** Thread that makes parts. It loads the kernel at once, so that it is warm when the first record comes. */
+/** Thread that makes parts and beds. It loads the kernel at once, so that it is warm when the first order comes. */
 import { parentPort } from 'node:worker_threads';
-import { Fault } from '../fault.ts';
 import { loadKernel } from './load.ts';
-import { makeParts } from './make.ts';
-import type { MakeReply, MakeRequest } from './message.ts';
+import { makeBed, makePart } from './make.ts';
+import type { Reply, Request } from './message.ts';
 
 const port = parentPort;
 if (!port) throw new Error('worker.js runs only as a worker thread');
 
-// A failure to load is reported with the first request.
+// A failure to load is reported with the first order.
 loadKernel().catch(() => undefined);
 
-port.on('message', async (request: MakeRequest) => {
+port.on('message', async (request: Request) => {
   const reply = await answer(request);
-  const bytes = reply.kind === 'made' ? reply.parts.map((part) => part.bytes.buffer) : [];
-  port.postMessage(reply, bytes);
+  port.postMessage(reply, buffersOf(reply));
 });
 
-async function answer({ id, record, named }: MakeRequest): Promise<MakeReply> {
+async function answer({ id, order }: Request): Promise<Reply> {
   try {
-    return { id, kind: 'made', parts: await makeParts(record, named) };
+    if (order.kind === 'bed') return { id, kind: 'bed', bed: makeBed(order.bed) };
+    return { id, kind: 'part', part: await makePart(order.solid, order.scale) };
   } catch (error) {
-    if (error instanceof Fault) return { id, kind: 'fault', exit: error.exit, faults: error.faults };
     return { id, kind: 'error', text: error instanceof Error ? error.message : String(error) };
   }
+}
+
+/** What changes hands rather than being copied. */
+function buffersOf(reply: Reply): ArrayBuffer[] {
+  if (reply.kind === 'bed') return [reply.bed.bytes.buffer];
+  if (reply.kind === 'error') return [];
+  const { bytes, mesh, pictures } = reply.part;
+  const buffers = [bytes, mesh.vertices, mesh.triangles, ...pictures.map(({ png }) => png)].map(({ buffer }) => buffer);
+  return [...new Set(buffers)] as ArrayBuffer[];
 }

@@ -6,6 +6,7 @@ import { cautionsFor } from '../../templates/wording/cautions.ts';
 import { HOW } from '../../templates/wording/steps.ts';
 import type { Job } from '../job/job.ts';
 import { partsOf } from '../parts/parts.ts';
+import type { Solid } from '../parts/solid.ts';
 import { alternativesTo, WORTH } from '../solve/alternatives.ts';
 import { setCapacitance } from '../solve/demand.ts';
 import type { Design } from '../solve/design.ts';
@@ -17,7 +18,7 @@ import { DEFAULT_AT_KHZ } from '../solve/working.ts';
 import { checksOf } from './checks.ts';
 import { figuresOf } from './figures.ts';
 import { hashOf } from './hash.ts';
-import { entriesOf, printerOf, wantedOf } from './printed.ts';
+import { bedsOf, entriesOf, printerOf, wantedOf } from './printed.ts';
 import { decimals, deg, mm, significant } from './rounding.ts';
 import { type Alternative, type CoilRecord, type Former, type Hole, type PartsRecord, recordSchema } from './schema.ts';
 import { correctionsOf, stepsOf } from './steps.ts';
@@ -172,8 +173,8 @@ function tapMethodOf({ method, unitTaps, layout }: Design): CoilRecord['tapMetho
   };
 }
 
-/** The record of a found design, files still to come. The schema is checked, so that nothing leaves in another shape. */
-export function makeRecord(job: Job, found: Found, version: string): CoilRecord {
+/** The record of a found design, files still to come; `solids` are its parts where they are already described. The schema is checked, so that nothing leaves in another shape. */
+export function makeRecord(job: Job, found: Found, version: string, solids?: readonly Solid[]): CoilRecord {
   const { chosen } = found;
   const conditions = {
     tuning: job.set === null ? null : setCapacitance(job.set),
@@ -187,7 +188,7 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
   const spread = spreadOf(job, chosen);
   const { candidate } = chosen;
   const printed = partsRecordOf(job, found);
-  const solids = partsOf(printed);
+  const parts = entriesOf(solids ?? partsOf(printed));
   const alternatives = shownOf(job, found, lossFactor);
   const body: Omit<CoilRecord, 'hash' | 'files' | 'program'> = {
     record: 1,
@@ -202,8 +203,8 @@ export function makeRecord(job: Job, found: Found, version: string): CoilRecord 
     coverage: figures.coverage,
     switchKinds: figures.switchKinds,
     settings: figures.settings,
-    parts: entriesOf(solids),
-    beds: [],
+    parts,
+    beds: bedsOf(parts, printed.printer),
     steps: stepsOf(job, chosen, winding),
     checks: checksOf(chosen, winding, spread),
     corrections: correctionsOf(chosen),

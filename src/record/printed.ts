@@ -1,11 +1,12 @@
 /** What of the record concerns printing: the printer, which parts are wanted, and the list of the parts themselves. */
 import type { Job, PartKind } from '../job/job.ts';
 import { PARTS } from '../job/schema.ts';
+import { layOutBeds } from '../parts/bed-layout.ts';
 import type { Solid } from '../parts/solid.ts';
 import type { Design } from '../solve/design.ts';
 import { findMaterial } from '../stock/materials.ts';
 import { decimals, significant } from './rounding.ts';
-import type { PartEntry, PrinterFigures } from './schema.ts';
+import type { BedEntry, PartEntry, PrinterFigures } from './schema.ts';
 
 export function printerOf({ printer }: Job): PrinterFigures {
   const found = findMaterial(printer.material);
@@ -47,4 +48,24 @@ export function entriesOf(solids: readonly Solid[]): PartEntry[] {
     use,
     printNote,
   }));
+}
+
+/**
+ * The parts laid out on beds, as large as they are in their files; a bed holds one material.
+ * @throws Fault (exit 4) for a part that the printer cannot take
+ */
+export function bedsOf(parts: readonly PartEntry[], printer: PrinterFigures): BedEntry[] {
+  const [x, y, z] = printer.scale as [number, number, number];
+  const beds = [...new Set(parts.map(({ material }) => material))].flatMap((material) =>
+    layOutBeds(
+      parts
+        .filter((part) => part.material === material)
+        .map(({ part, quantity, sizeMm }) => {
+          const [width, depth, height] = sizeMm as [number, number, number];
+          return { id: part, quantity, widthMm: width * x, depthMm: depth * y, heightMm: height * z };
+        }),
+      printer,
+    ).map(({ items }) => ({ material, items: items.map((item) => ({ ...item })) })),
+  );
+  return beds.map((bed, index) => ({ path: `bed-${index + 1}.3mf`, ...bed }));
 }

@@ -158,6 +158,7 @@ export const partSchema = z.strictObject({
 
 export const bedSchema = z.strictObject({
   path: text,
+  material: text,
   items: z.array(
     z.strictObject({
       part: text,
