@@ -6,14 +6,19 @@
 import { dcResistance } from '../physics/copper.ts';
 import { helixLength } from '../physics/helix.ts';
 import { selfCapacitance } from '../physics/medhurst.ts';
-import { cumulativeInductance } from '../physics/rings.ts';
+import { equivalentDiameterMm, polygonTurn } from '../physics/polygon.ts';
+import { cumulativeInductance, roundTurn, type TurnShape } from '../physics/rings.ts';
 import type { Wire } from '../stock/wire.ts';
 import { axialAt, type Gap, layTurns } from './layout.ts';
 
 export interface CoilShape {
   readonly wire: Wire;
-  /** Twice the radius of the wire centre. */
+  /** Twice the radius of the wire centre; where there are corners, over a rib. */
   readonly meanDiameterMm: number;
+  /** Ribs from which to which the wire runs straight, the same in every turn; absent: the turns are round. */
+  readonly corners?: number | undefined;
+  /** Radius at which the wire centre bends over a rib; absent: 0, sharp corners. Nothing without corners. See `physics/polygon.ts`. */
+  readonly bendMm?: number | undefined;
   /** Centre to centre where no tap pushes. */
   readonly pitchMm: number;
   readonly turns: number;
@@ -32,6 +37,8 @@ export class Coil {
   readonly shape: CoilShape;
   /** Z of the turn middles; see `layout.ts`. */
   readonly places: Float64Array;
+  /** One turn as the sums see it, m. */
+  readonly turnShape: TurnShape;
   readonly #curve: { at(turn: number): number };
 
   /** `places` where they are known better than the shape tells them, as in a record; else as `layTurns` lays them. */
@@ -41,9 +48,14 @@ export class Coil {
       places === undefined
         ? layTurns(shape.turns, shape.pitchMm, shape.gaps, shape.startMm)
         : Float64Array.from(places);
+    const { meanDiameterMm, corners, bendMm = 0 } = shape;
+    this.turnShape =
+      corners === undefined
+        ? roundTurn(meanDiameterMm / 2e3)
+        : polygonTurn(meanDiameterMm / 2e3, corners, bendMm / 1e3);
     this.#curve = cumulativeInductance(
       Float64Array.from(this.places, (z) => z / 1e3),
-      shape.meanDiameterMm / 2e3,
+      this.turnShape,
       shape.wire.bareMm / 2e3,
       shape.turns,
     );
@@ -151,9 +163,13 @@ export class Coil {
     return this.positionMm(turn) - this.positionMm(0) + this.shape.wire.overallMm;
   }
 
-  /** Wire along the helix from the start hole to this turn, m; loops of taps are not in it. */
+  /**
+   * Wire along the helix from the start hole to this turn, m; loops of taps are not in it. Straight sides climb as they go, so a
+   * polygon's is a helix of its own length. Between two ribs the wire is taken in proportion to the angle: 0.02 R off at most.
+   */
   wireM(turn: number): number {
-    return helixLength(this.shape.meanDiameterMm / 1e3, turn, (this.positionMm(turn) - this.positionMm(0)) / 1e3);
+    const climb = (this.positionMm(turn) - this.positionMm(0)) / 1e3;
+    return helixLength(this.turnShape.length / Math.PI, turn, climb);
   }
 
   /** DC resistance at 20 C of the turns up to here and of `loopsM` of the same wire, ohm. */
@@ -164,9 +180,15 @@ export class Coil {
     return dcResistance((this.wireM(turn) + loopsM) * (litz ? LITZ_TAKE_UP : 1), diameter / 1e3, strands);
   }
 
-  /** Medhurst's self-capacitance of the section up to this turn, pF. */
+  /** Diameter of the circle of a turn's area, for laws of round coils; the mean diameter of round turns. */
+  get equivalentDiameterMm(): number {
+    const { meanDiameterMm, corners, bendMm } = this.shape;
+    return equivalentDiameterMm(meanDiameterMm, corners, bendMm);
+  }
+
+  /** Medhurst's self-capacitance of the section up to this turn, pF; of a polygon that of the circle of its area. */
   selfPf(turn: number): number {
-    return selfCapacitance(this.woundMm(turn) / 1e3, this.shape.meanDiameterMm / 1e3) * 1e12;
+    return selfCapacitance(this.woundMm(turn) / 1e3, this.equivalentDiameterMm / 1e3) * 1e12;
   }
 
   /** Mean centre-to-centre distance over the turns up to here, gaps of taps included. */

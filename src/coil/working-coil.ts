@@ -3,7 +3,8 @@
  * position tunes with its dead turns as a coupled circuit.
  *
  * Microhenry, picofarad, kilohertz, ohm and turns outside; SI only towards `physics/`. Geometry tables and the circuit are
- * made once, when first asked for.
+ * made once, when first asked for. Turns with corners have their own inductances and length, so at low frequency L is the coil's own
+ * to rounding; only the fields that crowd the current are those of circles of equal area.
  */
 import {
   type CoupledWinding,
@@ -70,9 +71,9 @@ export class WorkingCoil {
   }
 
   get #geometry(): FieldTables {
-    const { places, shape, turns } = this.coil;
+    const { places, shape, turnShape, turns } = this.coil;
     const metres = Float64Array.from(places, (z) => z / 1e3);
-    this.#tables ??= fieldTables(metres, shape.meanDiameterMm / 2e3, shape.wire.bareMm / 2e3, { turns });
+    this.#tables ??= fieldTables(metres, turnShape, shape.wire.bareMm / 2e3, { turns });
     return this.#tables;
   }
 

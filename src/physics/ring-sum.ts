@@ -1,13 +1,13 @@
 import { arcOwnShare } from './arc.ts';
 import { allPositive, needPositive } from './domain.ts';
-import { ringMutual, ringSelf } from './maxwell.ts';
 import { countTurns, placeAt, TURN_SLACK } from './turn-places.ts';
+import { shapeOf, type TurnShape } from './turn-shape.ts';
 
 /**
  * Low-frequency inductance L (H) of a winding as coaxial rings at the axial `positions` of their wire centres, in any order.
  *
- * Units: m; `wireRadius` is the bare radius. The last ring may be only `lastFraction` of a turn (0 to 1): its mutual terms are
- * taken times that fraction, which is exact by symmetry, and its own term is that of an arc (`arcOwnShare`).
+ * Units: m; `turn` is the radius of round turns, or another shape of turn (`polygonTurn`); `wireRadius` is the bare radius. The last
+ * ring may be only `lastFraction` of a turn (0 to 1): its mutual terms are taken times that fraction, which is exact by symmetry, and its own term is that of an arc (`arcOwnShare`).
  * Domain: at least one position, no two alike (Infinity), 0 < wireRadius < radius.
  * Source: Maxwell 1873, art. 701 and 706; Grover 1946, ch. 16. Evenly spaced rings cost N evaluations of M, others N^2/2.
  * Accuracy: 2e-9 relative against the 5 largest of 11 independently computed ring sums, 1e-6 (rounding of the table) against
@@ -17,15 +17,16 @@ import { countTurns, placeAt, TURN_SLACK } from './turn-places.ts';
  */
 export function ringSumMatrixFree(
   positions: ArrayLike<number>,
-  radius: number,
+  turn: number | TurnShape,
   wireRadius: number,
   lastFraction = 1,
 ): number {
+  const shape = shapeOf(turn);
   const count = positions.length;
   if (count === 0) throw new RangeError('a winding needs at least one ring');
-  if (lastFraction === 1) return prefixes(positions, count, radius, wireRadius)[count]!;
-  const whole = prefixes(positions, count - 1, radius, wireRadius)[count - 1]!;
-  return whole + arcAfter(positions, count - 1, positions[count - 1]!, lastFraction, radius, wireRadius);
+  if (lastFraction === 1) return prefixes(positions, count, shape, wireRadius)[count]!;
+  const whole = prefixes(positions, count - 1, shape, wireRadius)[count - 1]!;
+  return whole + arcAfter(positions, count - 1, positions[count - 1]!, lastFraction, shape, wireRadius);
 }
 
 /** Steepest pitch over diameter at which rings were held against the true helix. */
@@ -61,16 +62,17 @@ export interface CumulativeInductance {
  */
 export function cumulativeInductance(
   positions: ArrayLike<number>,
-  radius: number,
+  turn: number | TurnShape,
   wireRadius: number,
   turns = positions.length,
 ): CumulativeInductance {
+  const shape = shapeOf(turn);
   if (!allPositive(turns)) needPositive({ turns });
   const { whole, count } = countTurns(turns);
   if (positions.length !== count) {
     throw new RangeError(`${turns} turns need ${count} positions, got ${positions.length}`);
   }
-  const prefix = prefixes(positions, whole, radius, wireRadius);
+  const prefix = prefixes(positions, whole, shape, wireRadius);
   return {
     at(turn) {
       if (!(turn >= 0 && turn <= turns + TURN_SLACK)) throw new RangeError(`turn ${turn} is not in [0, ${turns}]`);
@@ -82,7 +84,7 @@ export function cumulativeInductance(
         complete,
         placeAt(positions, turns, complete + part / 2),
         part,
-        radius,
+        shape,
         wireRadius,
       );
       return prefix[complete]! + arc;
@@ -96,26 +98,26 @@ function arcAfter(
   count: number,
   place: number,
   fraction: number,
-  radius: number,
+  shape: TurnShape,
   wireRadius: number,
 ): number {
   let mutual = 0;
-  for (let i = 0; i < count; i++) mutual += ringMutual(radius, place - positions[i]!);
-  return 2 * fraction * mutual + ringSelf(radius, wireRadius) * arcOwnShare(fraction, radius, wireRadius);
+  for (let i = 0; i < count; i++) mutual += shape.mutual(place - positions[i]!);
+  return 2 * fraction * mutual + shape.own(wireRadius) * arcOwnShare(fraction, shape.radius, wireRadius);
 }
 
 /** Inductance of the first 0, 1, ... `count` rings, all whole. */
-function prefixes(positions: ArrayLike<number>, count: number, radius: number, wireRadius: number): Float64Array {
-  const own = ringSelf(radius, wireRadius);
+function prefixes(positions: ArrayLike<number>, count: number, shape: TurnShape, wireRadius: number): Float64Array {
+  const own = shape.own(wireRadius);
   const sums = new Float64Array(count + 1);
   const pitch = evenPitch(positions, count);
   let mutual = 0;
   for (let k = 0; k < count; k++) {
     if (pitch === undefined) {
       mutual = 0;
-      for (let i = 0; i < k; i++) mutual += ringMutual(radius, positions[k]! - positions[i]!);
+      for (let i = 0; i < k; i++) mutual += shape.mutual(positions[k]! - positions[i]!);
     } else if (k > 0) {
-      mutual += ringMutual(radius, k * pitch);
+      mutual += shape.mutual(k * pitch);
     }
     sums[k + 1] = sums[k]! + own + 2 * mutual;
   }

@@ -2,3 +2,4 @@
 export { arcOwnShare } from './arc.ts';
 export { coaxialMutual, ringMutual, ringSelf } from './maxwell.ts';
 export { type CumulativeInductance, cumulativeInductance, ringSumMatrixFree } from './ring-sum.ts';
+export { roundTurn, type TurnShape } from './turn-shape.ts';

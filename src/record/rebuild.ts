@@ -7,11 +7,22 @@ import type { FiguresRecord } from './survey-schema.ts';
 export function workingCoilOf(record: Pick<FiguresRecord, 'windings' | 'surroundings' | 'frame'>): WorkingCoil {
   const winding = record.windings[0];
   if (winding === undefined) throw new RangeError('a record has a winding');
-  const { wire, meanDiameterMm, pitchMm, turns, startMm, taps, unitTaps = [], turnPositionsMm } = winding;
+  const {
+    wire,
+    meanDiameterMm,
+    corners,
+    bendMm,
+    pitchMm,
+    turns,
+    startMm,
+    taps,
+    unitTaps = [],
+    turnPositionsMm,
+  } = winding;
   const gaps = [...unitTaps, ...taps].filter(({ gapMm }) => gapMm > 0).map(({ turn, gapMm }) => ({ turn, gapMm }));
   const { leadPf, celsius } = record.surroundings;
   return new WorkingCoil(
-    new Coil({ wire, meanDiameterMm, pitchMm, turns, gaps, startMm }, turnPositionsMm),
+    new Coil({ wire, meanDiameterMm, corners, bendMm, pitchMm, turns, gaps, startMm }, turnPositionsMm),
     taps.map(({ turn }) => turn),
     { leadPf, celsius, earthed: record.frame.earthedEnd },
     unitTaps.map(({ turn }) => turn),

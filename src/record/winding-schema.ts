@@ -91,7 +91,12 @@ export const windingSchema = z.strictObject({
     .describe('Z of the wire centre at the middle of each turn; the last may be a part turn'),
   startMm: num.describe('Z of the wire centre at the start hole (turn 0)'),
   finishMm: num.describe('Z of the wire centre at the finish hole'),
-  meanDiameterMm: num.describe('twice the radius of the wire centre'),
+  meanDiameterMm: num.describe('twice the radius of the wire centre, on a ribbed former over a rib'),
+  corners: num
+    .int()
+    .optional()
+    .describe('ribs from which to which the wire runs straight; absent: the turns are round'),
+  bendMm: num.optional().describe('radius at which the wire centre bends over a rib; absent: sharp corners'),
   windingLengthMm: num.describe('edge to edge over the wires'),
   wire: wireSchema,
   wireLengthM: num.describe('with loops of taps, without the ends that are left long'),

@@ -1,5 +1,6 @@
 /** The winding and its taps as the record holds them, from a design. */
 
+import type { CoilShape } from '../coil/coil.ts';
 import { angleOf } from '../coil/layout.ts';
 import { type Limits, limitsOf, type SpreadInput, WIRE_SPREAD } from '../coil/tolerance.ts';
 import type { Job } from '../job/job.ts';
@@ -76,9 +77,16 @@ export function placesOf({ coil, candidate, tension }: Design): PartsRecord['win
     startMm: mm(coil.positionMm(0)),
     finishMm: mm(coil.positionMm(coil.turns)),
     meanDiameterMm: mm(coil.shape.meanDiameterMm),
+    ...cornersOf(coil.shape),
     wire: { ...candidate.wire },
     tensionHighN: significant(tension.high, 2),
   };
+}
+
+/** Keys of a winding from rib to rib; none of a round one. */
+function cornersOf({ corners, bendMm = 0 }: CoilShape): Pick<Winding, 'corners' | 'bendMm'> {
+  if (corners === undefined) return {};
+  return bendMm > 0 ? { corners, bendMm: mm(bendMm) } : { corners };
 }
 
 /** The winding of a design; `figures` are those of its taps at work, in order. */

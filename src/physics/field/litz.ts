@@ -41,7 +41,7 @@ export function solveLitz(
   }
   const inductance = sectionInductances(tables, sections);
   const count = sections.length;
-  const turn = 2 * Math.PI * tables.radius * takeUp;
+  const turn = tables.shape.length * takeUp;
   const direct = (4 * resistivity * turn) / (Math.PI * strandDiameter ** 2 * strands);
   const omega = 2 * Math.PI * frequency;
   // Of a turn, per (T peak)^2; one ampere peak loses R/2.

@@ -21,7 +21,7 @@ export function turnLosses(
 ): Float64Array {
   const wire = wireResponse(tables.wireRadius, frequency, resistivity, tables.order);
   const { solved } = solveMultipoles(tables, wire, [section]);
-  const circumference = 2 * Math.PI * tables.radius;
+  const circumference = tables.shape.length;
   const losses = weightsOf(tables, section).map((weight) => weight * circumference * wire.resistance);
   const perWeber = (4 * Math.PI ** 2 * frequency * circumference) / MU0;
   if (frequency === 0) return losses;

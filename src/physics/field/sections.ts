@@ -1,6 +1,5 @@
 import { arcOwnShare } from '../arc.ts';
 import { MU0 } from '../constants.ts';
-import { ringMutual, ringSelf } from '../maxwell.ts';
 import { placeAt, TURN_SLACK } from '../turn-places.ts';
 import type { FieldTables } from './tables.ts';
 
@@ -86,13 +85,13 @@ export function sectionInductances(tables: FieldTables, sections: readonly Secti
 export function outerInductances(tables: FieldTables, sections: readonly Section[]): Float64Array {
   const matrix = sectionInductances(tables, sections);
   sections.forEach(({ from, to }, s) => {
-    matrix[s * sections.length + s]! -= ((to - from) * MU0 * tables.radius) / 4;
+    matrix[s * sections.length + s]! -= ((to - from) * MU0 * tables.shape.length) / (8 * Math.PI);
   });
   return matrix;
 }
 
 function ownOf(tables: FieldTables, pieces: readonly Piece[]): number {
-  const self = ringSelf(tables.radius, tables.wireRadius);
+  const self = tables.shape.own(tables.wireRadius);
   let own = 0;
   let mutual = 0;
   for (let i = 0; i < pieces.length; i++) {
@@ -111,7 +110,7 @@ function betweenOf(tables: FieldTables, some: readonly Piece[], others: readonly
 
 /** Mutual terms of a piece with the first `count` of `others`. */
 function withRings(tables: FieldTables, piece: Piece, others: readonly Piece[], count: number): number {
-  const { mutual, radius, positions } = tables;
+  const { mutual, shape, positions } = tables;
   const row = piece.ring * (mutual.stride - 1) + mutual.half;
   let sum = 0;
   for (let j = 0; j < count; j++) {
@@ -121,7 +120,7 @@ function withRings(tables: FieldTables, piece: Piece, others: readonly Piece[], 
       sum += other.fraction * mutual.values[row + other.ring]!;
     else {
       const distance = (other.place ?? positions[other.ring]!) - (piece.place ?? positions[piece.ring]!);
-      sum += other.fraction * ringMutual(radius, distance);
+      sum += other.fraction * shape.mutual(distance);
     }
   }
   return piece.fraction * sum;
@@ -129,8 +128,8 @@ function withRings(tables: FieldTables, piece: Piece, others: readonly Piece[], 
 
 function arcsOfOneTurn(tables: FieldTables, one: Piece, other: Piece): number {
   const [low, high] = one.begin <= other.begin ? [one, other] : [other, one];
-  const { radius, wireRadius } = tables;
+  const { shape, radius, wireRadius } = tables;
   const share = (fraction: number) => arcOwnShare(Math.min(Math.max(fraction, 0), 1), radius, wireRadius);
   const [a, b, c, d] = [low.begin, low.begin + low.fraction, high.begin, high.begin + high.fraction];
-  return (ringSelf(radius, wireRadius) * (share(d - a) - share(c - a) - share(d - b) + share(c - b))) / 2;
+  return (shape.own(wireRadius) * (share(d - a) - share(c - a) - share(d - b) + share(c - b))) / 2;
 }

@@ -48,7 +48,7 @@ export function solveField(
   const wire = wireResponse(tables.wireRadius, frequency, resistivity, tables.order);
   const count = sections.length;
   const resistance = new Float64Array(count * count);
-  const circumference = 2 * Math.PI * tables.radius;
+  const circumference = tables.shape.length;
   sections.forEach(({ from, to }, s) => {
     resistance[s * count + s] = (to - from) * circumference * wire.resistance;
     inductance[s * count + s]! += (to - from) * circumference * wire.inductance;

@@ -1,8 +1,8 @@
 import { MU0 } from '../constants.ts';
 import { allPositive, needPositive } from '../domain.ts';
 import { ellipticKE } from '../elliptic.ts';
-import { ringMutual } from '../maxwell.ts';
 import { countTurns, placeAt, TURN_SLACK } from '../turn-places.ts';
+import { shapeOf, type TurnShape } from '../turn-shape.ts';
 import { fieldOrder } from './order.ts';
 
 /**
@@ -19,6 +19,9 @@ export interface PairTable {
 export interface FieldTables {
   /** As given: the middle of each turn, and of a last part turn. */
   readonly positions: Float64Array;
+  /** What the inductances are reckoned with. */
+  readonly shape: TurnShape;
+  /** Of the circle that stands for the turn in every field, `shape.radius`. */
   readonly radius: number;
   readonly wireRadius: number;
   readonly turns: number;
@@ -47,8 +50,10 @@ export interface FieldOptions {
 /**
  * Geometry of a winding for the field solution: distances, elliptic fields and powers of every pair of turns.
  *
- * Units: m. `positions[k]` is the wire centre at the middle of turn k, as in `cumulativeInductance`, strictly rising; `radius` is that
- * of the wire centres, `wireRadius` the bare one. Domain: 0 < wireRadius < radius, no two turns nearer than a wire (RangeError).
+ * Units: m. `positions[k]` is the wire centre at the middle of turn k, as in `cumulativeInductance`, strictly rising; `turn` is the
+ * radius of the wire centres, or another shape of turn: its inductances and length count, fields are those of the circle of its area
+ * (mean square of the field across the wire 3 % too much at most, 10 and 30 turns of 6 to 24 sharp corners).
+ * `wireRadius` is the bare one. Domain: 0 < wireRadius < radius, no two turns nearer than a wire (RangeError).
  * Fields of a ring at an equal ring a distance h away: B_z = mu0/(2 pi s) (K - E), B_r = mu0 h/(2 pi R s) [(2 R^2 + h^2)/h^2 E - K] with
  * s^2 = 4 R^2 + h^2 (Smythe 1950, 7.10).
  * Cost: N evaluations at an even pitch, N^2/2 otherwise; 500 uneven turns take about 50 ms and 30 MB.
@@ -57,10 +62,12 @@ export interface FieldOptions {
  */
 export function fieldTables(
   positions: ArrayLike<number>,
-  radius: number,
+  turn: number | TurnShape,
   wireRadius: number,
   options: FieldOptions = {},
 ): FieldTables {
+  const shape = shapeOf(turn);
+  const { radius } = shape;
   if (!allPositive(radius, wireRadius)) needPositive({ radius, wireRadius });
   if (!(wireRadius < radius))
     throw new RangeError(`a wire of radius ${wireRadius} does not bend to a ring of ${radius}`);
@@ -86,12 +93,13 @@ export function fieldTables(
   if (count > whole) presence[whole] = turns - whole;
   return {
     positions: given,
+    shape,
     radius,
     wireRadius,
     turns,
     order,
     presence,
-    mutual: pairs(count, (h) => ringMutual(radius, h)),
+    mutual: pairs(count, (h) => shape.mutual(h)),
     axial: pairs(count, (h) => axialField(radius, h)),
     radial: pairs(count, (h) => radialField(radius, h), true),
     ownAxial: (MU0 / (4 * Math.PI * radius)) * (Math.log((8 * radius) / wireRadius) - 0.5),
