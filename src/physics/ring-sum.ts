@@ -7,7 +7,8 @@ import { shapeOf, type TurnShape } from './turn-shape.ts';
  * Low-frequency inductance L (H) of a winding as coaxial rings at the axial `positions` of their wire centres, in any order.
  *
  * Units: m; `turn` is the radius of round turns, or another shape of turn (`polygonTurn`); `wireRadius` is the bare radius. The last
- * ring may be only `lastFraction` of a turn (0 to 1): its mutual terms are taken times that fraction, which is exact by symmetry, and its own term is that of an arc (`arcOwnShare`).
+ * ring may be only `lastFraction` of a turn (0 to 1): its mutual terms are taken times that fraction, which is exact by symmetry
+ * (of a polygon, at its corners), and its own term is that of an arc (`arcOwnShare`).
  * Domain: at least one position, no two alike (Infinity), 0 < wireRadius < radius.
  * Source: Maxwell 1873, art. 701 and 706; Grover 1946, ch. 16. Evenly spaced rings cost N evaluations of M, others N^2/2.
  * Accuracy: 2e-9 relative against the 5 largest of 11 independently computed ring sums, 1e-6 (rounding of the table) against
