@@ -2,6 +2,8 @@
 
 export interface XmlElement {
   readonly name: string;
+  /** 0 for the root. */
+  readonly depth: number;
   readonly attributes: Readonly<Record<string, string>>;
   /** Its own text, entities read. */
   text: string;
@@ -47,7 +49,7 @@ export function readXml(source: string): XmlElement[] {
       if (key! in attributes) throw new Error(`${key} twice`);
       attributes[key!] = read(value!);
     }
-    const element = { name: tag[1]!, attributes, text: '' };
+    const element = { name: tag[1]!, depth: open.length, attributes, text: '' };
     all.push(element);
     if (tag[3] === '') open.push(element);
     rest = rest.slice(tag[0].length);
