@@ -10,7 +10,14 @@ import { checkUnits, checkWant } from './want-checks.ts';
 export type Readable = Partial<ReadJob>;
 
 export function crossCheck(job: Readable): readonly Finding[] {
-  return [...checkWant(job), ...checkFormer(job), ...checkWinding(job), ...checkUnits(job), ...checkPrinter(job)];
+  return [
+    ...checkWant(job),
+    ...checkFormer(job),
+    ...checkWinding(job),
+    ...checkUnits(job),
+    ...checkPrinter(job),
+    ...checkParts(job),
+  ];
 }
 
 const ends = (values: Values): readonly number[] => ('list' in values ? values.list : [values.low, values.high]);
@@ -145,4 +152,23 @@ function checkPrinter({ printer }: Readable): Finding[] {
     );
   }
   return found;
+}
+
+/** Parts that the former has no use for. */
+function checkParts({ parts, former }: Readable): Finding[] {
+  if (parts === undefined || former === undefined) return [];
+  const out = former.kind === 'printed' ? 'saddle' : 'former';
+  const at = parts.indexOf(out);
+  if (at < 0) return [];
+  const why =
+    out === 'saddle' ? 'a printed former, whose holes come with it' : 'a former of kind tube, which is bought';
+  return [
+    finding(
+      'part-not-used',
+      ['parts', at],
+      `${out} for ${why}`,
+      'parts that suit the former',
+      `take ${out} out, or former.kind: ${former.kind === 'printed' ? 'tube' : 'printed'}`,
+    ),
+  ];
 }

@@ -149,6 +149,11 @@ const CASES: readonly (readonly [string, readonly string[]])[] = [
   [`${WISH}printer: { scale: [100 %, 100.2 %] }`, ['3 printer.scale: a list of 2']],
   [`${WISH}printer: { scale: 120 % }`, ['3 printer.scale: "120 %", which is above the 1.1 that make sense here']],
   [`${WISH}parts: [former, cone]`, ['3 parts[2]: "cone"']],
+  [`${WISH}parts: [former, saddle]`, ['3 parts[2]: saddle for a printed former, whose holes come with it']],
+  [
+    `${WISH}former: { kind: tube, outside-diameter: 76 mm }\nparts: former`,
+    ['4 parts[1]: former for a former of kind tube, which is bought'],
+  ],
   [
     `${WISH}former: { outside-diameter: 60 mm to 230 mm }`,
     ['3 former.outside-diameter: a printed former 230 mm wide on a bed of 220 mm x 220 mm'],
