@@ -10,7 +10,7 @@ export interface FormerDimensions {
   readonly hand: 'right' | 'left';
   readonly outsideR: number;
   readonly boreR: number;
-  /** Radius of the foot: that of the lower rim, or the outside when there is none. */
+  /** Radius of the foot: that of the base or the lower rim, or the outside when there is neither. */
   readonly footR: number;
   readonly topR: number;
   readonly lengthMm: number;
@@ -22,9 +22,31 @@ export interface FormerDimensions {
   readonly surfaceToMm: number;
   /** Holes through the wall, each along a radius. */
   readonly holes: readonly Hole[];
+  /** Upright holes for screws, in ears or base, as they are modelled. */
+  readonly screws: readonly Screw[];
+  readonly ridges: readonly RidgeSpan[];
   /** The groove runs over these turns, its runs-in included; null when smooth. */
   readonly groove: GrooveSpan | null;
   readonly axialMm: (turn: number) => number;
+}
+
+export interface Screw {
+  readonly angleDeg: number;
+  readonly radiusMm: number;
+  readonly diameterMm: number;
+  readonly thicknessMm: number;
+  /** Material from the hole to the nearest edge. */
+  readonly sideMm: number;
+}
+
+/** A ridge stands on the winding surface from `footMm` up, measured from the middle of the wire that leans on it. */
+export interface RidgeSpan {
+  readonly end: 'start' | 'finish';
+  readonly fromTurn: number;
+  readonly toTurn: number;
+  readonly footMm: number;
+  readonly heightMm: number;
+  readonly widthMm: number;
 }
 
 export interface GrooveSpan {
@@ -45,6 +67,7 @@ export function formerDimensions(record: PartsRecord): FormerDimensions {
   const winding = record.windings[0]!;
   const outsideR = former.outsideDiameterMm / 2;
   const flangeR = former.flange ? former.flange.diameterMm / 2 : outsideR;
+  const footR = former.base ? former.base.diameterMm / 2 : flangeR;
   const holes = wallHoles(record);
   const axialMm = (turn: number) => axialAt(winding.turnPositionsMm, winding.turns, winding.pitchMm, turn);
   const surfaceToMm = former.flange
@@ -56,23 +79,58 @@ export function formerDimensions(record: PartsRecord): FormerDimensions {
     hand: record.frame.hand,
     outsideR,
     boreR: former.boreDiameterMm / 2,
-    footR: flangeR,
+    footR,
     topR: flangeR,
     lengthMm: former.lengthMm,
     chamferMm: former.chamferMm,
     lineMm: record.printer.lineMm,
-    surfaceFromMm: former.flange ? former.flange.lowerMm : former.footMm,
+    surfaceFromMm: former.base?.thicknessMm ?? former.flange?.lowerMm ?? former.footMm,
     surfaceToMm,
     holes,
+    screws: screwsOf(former),
+    ridges: ridgesOf(former),
     groove: former.groove ? grooveSpan(former.groove, winding.turns, holes, axialMm, surfaceToMm) : null,
     axialMm,
   };
 }
 
-/** The former with its ears' holes as they are modelled: wider by the printer's compensation. */
+/** The former with the holes of mounting and posts as they are modelled: wider by the printer's compensation. */
 function asCut({ former, printer }: PartsRecord): Former {
   const more = printer.holeCompensationMm;
-  return { ...former, ears: former.ears.map((ear) => ({ ...ear, holeDiameterMm: ear.holeDiameterMm + more })) };
+  const { base, ears, posts } = former;
+  return {
+    ...former,
+    ears: ears.map((ear) => ({ ...ear, holeDiameterMm: ear.holeDiameterMm + more })),
+    base: base && { ...base, holeDiameterMm: base.holeDiameterMm + more },
+    posts: posts.map((post) => ({ ...post, eyeMm: post.eyeMm + more })),
+  };
+}
+
+function screwsOf({ ears, base }: Former): Screw[] {
+  const inEars = ears.map((ear) => ({
+    angleDeg: ear.angleDeg,
+    radiusMm: ear.centreRadiusMm,
+    diameterMm: ear.holeDiameterMm,
+    thicknessMm: ear.thicknessMm,
+    sideMm: (ear.widthMm - ear.holeDiameterMm) / 2,
+  }));
+  if (base === null) return inEars;
+  const radiusMm = base.circleDiameterMm / 2;
+  const inBase = Array.from({ length: base.holes }, (_, i) => ({
+    angleDeg: (base.firstDeg + (360 * i) / base.holes) % 360,
+    radiusMm,
+    diameterMm: base.holeDiameterMm,
+    thicknessMm: base.thicknessMm,
+    sideMm: base.diameterMm / 2 - radiusMm - base.holeDiameterMm / 2,
+  }));
+  return [...inEars, ...inBase];
+}
+
+function ridgesOf({ ridges }: Former): RidgeSpan[] {
+  if (ridges === null) return [];
+  const { heightMm, widthMm } = ridges;
+  const ends = (['start', 'finish'] as const).map((end) => ({ end, run: ridges[end] }));
+  return ends.flatMap(({ end, run }) => (run === null ? [] : [{ end, ...run, heightMm, widthMm }]));
 }
 
 /** Mounting holes that stand in an ear are cut with the ear; all others go through the wall, by the printer's compensation wider. */

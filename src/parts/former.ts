@@ -2,15 +2,19 @@
  * The printed former: a tube, plain or grooved, on its foot as it is printed.
  *
  *     dimensions -> room -> turned body (rims, slope, groove, bore)
- *                            + ears
- *                            - holes, ear holes, datum mark, numbers
+ *                            + ears, ridges, posts
+ *                            - holes, screw holes, eyes, datum mark, numbers
+ *
+ * A round base is the turned body's own foot.
  *
  * The axis stays at x = y = 0, so that angles of the record are angles of the part.
  */
 import type { PartsRecord } from '../record/schema.ts';
 import { type FormerDimensions, formerDimensions } from './dimensions.ts';
-import { datumCutters, earAdders, earCutters, wallCutters } from './holes.ts';
+import { datumCutters, earAdders, screwCutters, wallCutters } from './holes.ts';
 import { numberCutters } from './numbers.ts';
+import { eyeCutters, postAdders } from './posts.ts';
+import { ridgeAdders } from './ridges.ts';
 import { requireRoom } from './room.ts';
 import { formerSkin } from './skin.ts';
 import type { Expected, Loft, Point3, Skin, Solid } from './solid.ts';
@@ -21,10 +25,11 @@ export function formerParts(record: PartsRecord): Solid[] {
   const d = formerDimensions(record);
   requireRoom(d);
   const body = formerSkin(d);
-  const adders = earAdders(d);
+  const adders = [...earAdders(d), ...ridgeAdders(d), ...postAdders(d)];
   const numbers = numberCutters(d);
   const holes = wallCutters(d);
-  const earHoles = earCutters(d);
+  const screws = screwCutters(d);
+  const eyes = eyeCutters(d);
   return [
     {
       part: 'former',
@@ -34,11 +39,11 @@ export function formerParts(record: PartsRecord): Solid[] {
       material: record.former.material,
       densityGCm3: record.former.densityGCm3,
       shapes: [body, ...adders],
-      cutters: [...holes, ...earHoles, ...datumCutters(d), ...numbers],
+      cutters: [...holes, ...screws, ...eyes, ...datumCutters(d), ...numbers],
       expected: {
         bodies: 1,
-        genus: 1 + holes.length + earHoles.length,
-        genusIs: `1 bore, ${holes.length} holes in the wall, ${earHoles.length} in ears`,
+        genus: 1 + holes.length + screws.length + eyes.length,
+        genusIs: `1 bore, ${holes.length} holes in the wall, ${screws.length} for screws, ${eyes.length} in posts`,
         ...box(body, adders),
         volumeMm3: formerVolume(d, body, numbers),
       },

@@ -1,15 +1,15 @@
-/** Holes, ears and the datum mark of the former: what is cut out of the turned body and what is set on it. */
+/** Holes, ears, screw holes and the datum mark of the former: what is cut out of the turned body and set on it. */
 import type { Former } from '../record/schema.ts';
-import type { FormerDimensions } from './dimensions.ts';
+import { type FormerDimensions, roofMm } from './dimensions.ts';
 import { chordsFor } from './shapes.ts';
 import type { Loft, Point2, Point3 } from './solid.ts';
 
 const RAD = Math.PI / 180;
 /** Cutters stand this far out of what they cut, so that no two faces coincide. */
-const PROUD_MM = 1;
+export const PROUD_MM = 1;
 
 /** A place in the frame: `x` along the radius at the angle, `y` across it, counterclockwise positive. */
-function at(angleDeg: number, x: number, y: number, z: number): Point3 {
+export function at(angleDeg: number, x: number, y: number, z: number): Point3 {
   const c = Math.cos(angleDeg * RAD);
   const s = Math.sin(angleDeg * RAD);
   return [c * x - s * y, s * x + c * y, z];
@@ -35,8 +35,12 @@ export function teardrop(diameterMm: number): Point2[] {
 /** Holes along a radius, through the near wall only. */
 export function wallCutters(d: FormerDimensions): Loft[] {
   const inside = d.boreR / 2;
-  const outside = Math.max(d.footR, d.topR) + PROUD_MM;
   return d.holes.map((hole) => {
+    // Beside the winding surface a cutter stays clear of what stands on the foot.
+    const low = hole.axialMm - hole.diameterMm / 2 < d.surfaceFromMm;
+    const high = hole.axialMm + roofMm(hole.diameterMm) > d.surfaceToMm;
+    const ridge = d.former.ridges?.heightMm ?? 0;
+    const outside = Math.max(low ? d.footR : 0, high ? d.topR : 0, d.outsideR + ridge) + PROUD_MM;
     const shape = teardrop(hole.diameterMm);
     const ring = (x: number) => shape.map(([y, z]) => at(hole.angleDeg, x, y, hole.axialMm + z));
     return { kind: 'loft', name: `hole ${hole.label}`, rings: [ring(inside), ring(outside)], hubs: null };
@@ -98,23 +102,23 @@ export function earAdders(d: FormerDimensions): Loft[] {
   });
 }
 
-/** Upright holes of the ears, opened out at the bed by the foot's chamfer. */
-export function earCutters(d: FormerDimensions): Loft[] {
-  return d.former.ears.map((ear, i) => {
-    const r = ear.holeDiameterMm / 2;
+/** Upright holes of ears and base, opened out at the bed by the foot's chamfer. */
+export function screwCutters(d: FormerDimensions): Loft[] {
+  return d.screws.map((screw, i) => {
+    const r = screw.diameterMm / 2;
     const n = chordsFor(r, 2 * Math.PI, 16);
     const ring = (radius: number, z: number): Point3[] =>
       Array.from({ length: n }, (_, k) => {
         const a = (2 * Math.PI * (k + 0.5)) / n;
         const corner = radius / Math.cos(Math.PI / n);
-        return at(ear.angleDeg, ear.centreRadiusMm + corner * Math.cos(a), corner * Math.sin(a), z);
+        return at(screw.angleDeg, screw.radiusMm + corner * Math.cos(a), corner * Math.sin(a), z);
       });
-    const c = Math.min(d.chamferMm, ear.widthMm / 2 - r - d.lineMm);
+    const c = Math.min(d.chamferMm, screw.sideMm - d.lineMm);
     const foot = c > 0 ? [ring(r + c + PROUD_MM, -PROUD_MM), ring(r, c)] : [ring(r, -PROUD_MM)];
     return {
       kind: 'loft',
-      name: `ear hole ${i + 1}`,
-      rings: [...foot, ring(r, ear.thicknessMm + PROUD_MM)],
+      name: `screw hole ${i + 1}`,
+      rings: [...foot, ring(r, screw.thicknessMm + PROUD_MM)],
       hubs: null,
     };
   });

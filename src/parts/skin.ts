@@ -7,8 +7,9 @@ export function formerSkin(d: FormerDimensions): Skin {
   const c = d.chamferMm;
   const foot: ProfileRow[] = [{ rMm: d.footR - c, zMm: 0 }];
   if (c > 0) foot.push({ rMm: d.footR, zMm: c });
-  if (flange && flange.lowerMm > c && d.footR > d.outsideR)
-    foot.push({ rMm: d.footR, zMm: flange.lowerMm }, { rMm: d.outsideR, zMm: flange.lowerMm });
+  // A base takes the place of the lower rim.
+  if (d.footR > d.outsideR)
+    foot.push({ rMm: d.footR, zMm: d.surfaceFromMm }, { rMm: d.outsideR, zMm: d.surfaceFromMm });
   const top: ProfileRow[] =
     flange && d.topR > d.outsideR
       ? [

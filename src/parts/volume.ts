@@ -5,6 +5,8 @@
  */
 import type { FormerDimensions } from './dimensions.ts';
 import { datumDepthMm, earOutline, earOverlapMm } from './holes.ts';
+import { postsVolume } from './posts.ts';
+import { ridgesVolume } from './ridges.ts';
 import type { Engraving, Point2, ProfileRow, Skin } from './solid.ts';
 
 export function formerVolume(d: FormerDimensions, skin: Skin, engravings: readonly Engraving[]): number {
@@ -18,6 +20,9 @@ export function formerVolume(d: FormerDimensions, skin: Skin, engravings: readon
     inscribed * grooveVolume(d, skin) -
     holesVolume(d) +
     earsVolume(d) -
+    baseHolesVolume(d) +
+    ridgesVolume(d) +
+    postsVolume(d) -
     datumVolume(d) -
     engravings.reduce((sum, e) => sum + engravedVolume(e, d), 0)
   );
@@ -70,6 +75,12 @@ function earsVolume(d: FormerDimensions): number {
   return sum;
 }
 
+/** Screw holes of a base, which is part of the turned body. */
+function baseHolesVolume(d: FormerDimensions): number {
+  const { base } = d.former;
+  return base === null ? 0 : base.holes * Math.PI * (base.holeDiameterMm / 2) ** 2 * base.thicknessMm;
+}
+
 function areaOutside(outline: readonly Point2[], r: number): number {
   const half = Math.max(...outline.map((p) => Math.abs(p[1])));
   const strips = 400;
@@ -96,7 +107,7 @@ function datumVolume(d: FormerDimensions): number {
 }
 
 /** Strokes by length; where they cross they count twice, which is far below the tolerance. */
-function engravedVolume(e: Engraving, d: FormerDimensions): number {
+export function engravedVolume(e: Engraving, d: FormerDimensions): number {
   let length = 0;
   for (const line of e.strokes)
     for (let i = 1; i < line.length; i++) {

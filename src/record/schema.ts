@@ -38,6 +38,15 @@ export const settingSchema = z.strictObject({
   highKhz: num.nullable().describe('upper edge of what the last unit tunes, dead turns at both ends counted'),
 });
 
+/** Turns, counted from the start, that lean on a ridge. */
+const runSchema = z
+  .strictObject({
+    fromTurn: num,
+    toTurn: num,
+    footMm: num.describe('its lower edge on the winding surface, along the axis from the middle of the wire'),
+  })
+  .nullable();
+
 export const formerSchema = z.strictObject({
   kind: z.enum(['printed', 'tube']),
   surface: z.enum(['smooth', 'grooved']),
@@ -74,17 +83,32 @@ export const formerSchema = z.strictObject({
   body: z.enum(['full', 'ribbed']).describe('of a printed former: a wall all round, or end rings and ribs'),
   ribs: z
     .strictObject({
-      count: num.int(),
+      count: num.int().describe('a rib at every 360/count degrees from angle 0'),
       widthMm: num.describe('along the circumference'),
       depthMm: num.describe('along the radius, from the outside in'),
       ringMm: num.describe('height of each end ring'),
+      innerRings: z
+        .strictObject({
+          topsMm: z.array(num).describe('Z of their upper faces, from below; the last carries the upper end ring'),
+          crownMm: num.describe('height midway between two ribs; underneath they fall to the ribs at 45 degrees'),
+          acrossMm: num.describe('outside, across flats that face the middles between ribs'),
+          insideMm: num.describe('inside, across flats'),
+        })
+        .describe('rings with a flat a span, which keep the ribs from giving way'),
+      seatMm: num.describe('Z at which the upper end ring begins; it widens at 45 degrees to its rim'),
+      seatDiameterMm: num.describe('of the upper end ring there'),
     })
     .nullable()
     .describe('of a ribbed body'),
   ridges: z
-    .strictObject({ heightMm: num, widthMm: num })
+    .strictObject({
+      heightMm: num.describe('over the winding surface'),
+      widthMm: num.describe('along the axis, where it meets the winding surface; its underside rises at 45 degrees'),
+      start: runSchema.describe('under the first turn'),
+      finish: runSchema.describe('over the last turn that the finish row allows for'),
+    })
     .nullable()
-    .describe('helical ridges that a close winding leans on, before its start and behind its finish'),
+    .describe('helical ridges that a close winding on a smooth printed former leans on'),
   base: z
     .strictObject({
       diameterMm: num,
@@ -97,17 +121,30 @@ export const formerSchema = z.strictObject({
     .nullable()
     .describe('a round foot with a ring of screw holes'),
   posts: z
-    .array(z.strictObject({ tap: num.int(), angleDeg: num, axialMm: num }))
-    .describe('terminal posts beside taps that are made with a lug'),
+    .array(
+      z.strictObject({
+        label: text,
+        tap: num.int().nullable(),
+        angleDeg: num,
+        axialMm: num.describe('of the eye'),
+        widthMm: num.describe('along the circumference'),
+        reachMm: num.describe('from the winding surface outwards'),
+        heightMm: num.describe('over the foot'),
+        eyeMm: num.describe('diameter of the eye, as it should come out'),
+        eyeReachMm: num.describe('from the winding surface to the middle of the eye'),
+      }),
+    )
+    .describe('posts at the foot through whose eyes the leads of lugs are led'),
   joints: z
     .array(
       z.strictObject({
-        seamMm: num.describe('Z of the seam on the outside, at the angle of the key'),
-        climbMm: num.describe(
-          'the seam rises by this over one turn with the winding, so that it runs between turns; 0 where none lie',
-        ),
-        keyDeg: num.describe('angle of the step of the seam, which keeps the sections from turning'),
-        spigotMm: num.describe('length of the spigot in the bore below'),
+        turn: num
+          .nullable()
+          .describe('at the key the seam lies midway between this turn and the next; null for a flat seam'),
+        seamMm: num.describe('Z of the seam on the outside at the key, below the step; inwards it falls at 45 degrees'),
+        climbMm: num.describe('what the seam rises over one turn, along with the winding, and falls back at its step'),
+        keyDeg: num.describe('angle of the step, and of the tongue in the bore that keeps the sections from turning'),
+        spigotMm: num.describe('length of the spigot below the seam in the bore'),
         glueGapMm: num.describe('between spigot and bore, on the radius'),
       }),
     )

@@ -197,9 +197,24 @@ function otherPrint(job: Job): Change[] {
       changes.push({ text: `raise former.wall to ${wall} mm`, job: withFormer(job, { wallMm: wall }) });
     }
   }
-  if (job.former.mounting === 'ears')
-    changes.push({ text: 'set former.mounting to none', job: withFormer(job, { mounting: 'none' }) });
-  return [...changes, ...largerBed(job)];
+  if (job.former.mounting !== 'none')
+    changes.push({
+      text: 'set former.mounting to none',
+      job: withFormer(job, { mounting: 'none', screwMm: null, screwCircleMm: null }),
+    });
+  return [...changes, ...widerCircle(job), ...largerBed(job)];
+}
+
+/** The least circle of screws that passes the former the job is nearest to. */
+function widerCircle(job: Job): Change[] {
+  if (job.former.screwCircleMm === null) return [];
+  const free = withFormer(job, { screwCircleMm: null });
+  for (const { former } of fitsOf(free, ({ formerMm }) => formerMm, 1)) {
+    const mm = former.base?.circleDiameterMm ?? 2 * (former.ears[0]?.centreRadiusMm ?? 0);
+    if (mm > job.former.screwCircleMm)
+      return [{ text: `raise former.screw-circle to ${mm} mm`, job: withFormer(job, { screwCircleMm: mm }) }];
+  }
+  return [];
 }
 
 function largerBed(job: Job): Change[] {

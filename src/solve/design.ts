@@ -5,7 +5,18 @@ import type { Job } from '../job/job.ts';
 import type { Former, Hole } from '../record/schema.ts';
 import type { Candidate } from './candidates.ts';
 import type { Demand } from './demand.ts';
-import { type Around, formerFor, holesFor, LEAST_WEB_MM, startMm, tensionN, tightestPair } from './former.ts';
+import {
+  type Around,
+  formerFor,
+  holesFor,
+  LEAST_WEB_MM,
+  leastCircleMm,
+  postsFor,
+  startMm,
+  tensionN,
+  tightestPair,
+  widestMm,
+} from './former.ts';
 import { coilOf, freedomsOf, type Setting, sectionAt, settle, targetsOf } from './settle.ts';
 import { inductanceSpread } from './spread.ts';
 import { switchBreaches } from './switch-breaches.ts';
@@ -65,6 +76,7 @@ export type Limit =
   | 'printer.height'
   | 'printer.bed'
   | 'former.wall'
+  | 'former.screw-circle'
   | 'want.taps'
   | 'want.inductance'
   | 'winding.units'
@@ -154,12 +166,32 @@ function sizeBreaches(job: Job, former: Former): Breach[] {
   check('former.longest', former.lengthMm, job.former.longestMm, 'the former would be');
   if (former.kind !== 'printed') return breaches;
   check('printer.height', former.lengthMm, job.printer.heightMm, 'the former would stand');
-  const round = former.flange?.diameterMm ?? former.outsideDiameterMm;
+  const round = Math.max(
+    former.flange?.diameterMm ?? former.outsideDiameterMm,
+    former.base?.diameterMm ?? 0,
+    ...former.posts.map((post) => former.outsideDiameterMm + 2 * post.reachMm),
+  );
   const ear = former.ears[0];
   const across = ear === undefined ? round : 2 * ear.centreRadiusMm + ear.widthMm;
   check('printer.bed', across, Math.max(job.printer.bedXMm, job.printer.bedYMm), 'the former is across its ears');
-  check('printer.bed', round, Math.min(job.printer.bedXMm, job.printer.bedYMm), 'the former is across');
+  check(
+    'printer.bed',
+    round,
+    Math.min(job.printer.bedXMm, job.printer.bedYMm),
+    former.base === null ? 'the former is across' : 'the base is across',
+  );
   return breaches;
+}
+
+/** Screws that stand so near that their heads do not pass the rim. */
+function circleBreaches(around: Around): Breach[] {
+  const { kind, screwMm, screwCircleMm } = around.job.former;
+  if (kind !== 'printed' || screwMm === null || screwCircleMm === null) return [];
+  const widest = widestMm(around);
+  const least = leastCircleMm(around, widest);
+  if (screwCircleMm >= least - 1e-9) return [];
+  const text = `screws on a circle of ${screwCircleMm} mm: heads of ${2 * screwMm} mm pass the former, ${widest.toFixed(1)} mm wide, from ${least} mm on`;
+  return [{ limit: 'former.screw-circle', got: screwCircleMm, allowed: least, text, anyMethod: true }];
 }
 
 function wallBreaches(job: Job, former: Former): Breach[] {
@@ -190,6 +222,7 @@ export function designWith(
     grooved: candidate.pitch.kind === 'groove',
     overallMm: candidate.wire.overallMm,
     tensionN: tension.high,
+    lugs: method.name === 'lug' && job.former.kind === 'printed',
   };
   const start = startMm({ ...base, outsideMm: candidate.formerMm, pitchMm: candidate.pitch.mm });
   const setting: Setting = { job, demand, candidate, method, layout, startMm: start, correction };
@@ -209,10 +242,19 @@ export function designWith(
   const coil = coilOf(setting, settled, settled.turns);
   const turns = [...settled.taps, settled.turns];
   const around: Around = { ...base, outsideMm: settled.outsideMm, pitchMm: settled.pitchMm };
-  const former = formerFor(around, coil, turns, hand);
   const holes = holesFor(around, coil, turns, method, hand, settled.unitTaps);
+  const placed = postsFor(around, turns, hand, settled.unitTaps);
+  const posts = 'posts' in placed ? placed.posts : [];
+  const former = formerFor(around, coil, turns, hand, { holes, posts });
   const taps = tapsOf(setting, coil, turns);
-  const breaches = [...sizeBreaches(job, former), ...wallBreaches(job, former)];
+  const breaches = [...sizeBreaches(job, former), ...wallBreaches(job, former), ...circleBreaches(around)];
+  if ('needMm' in placed)
+    breaches.push({
+      limit: 'want.taps',
+      got: placed.needMm,
+      allowed: placed.haveMm,
+      text: `the posts of ${turns.length - 1 + settled.unitTaps.length} lugs take ${placed.needMm.toFixed(1)} mm round the foot, there are ${placed.haveMm.toFixed(1)} mm`,
+    });
   if (correction.length === 0) breaches.push(...bandBreaches(demand, taps));
   const off = Math.abs(taps[taps.length - 1]!.deviation);
   if (demand.units !== null) breaches.push(...switchBreaches(setting, coil, settled.unitTaps, turns[0]!));

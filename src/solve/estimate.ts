@@ -65,7 +65,7 @@ export function turnsFor(uh: number, diameterMm: number, pitchMm: number, bareMm
 /** Former beyond the winding: foot, anchor and rims of a printed one, bare ends of a tube. */
 function endsMm(job: Job, overallMm: number, pitchMm: number): number {
   const hole = wireHoleMm(overallMm, 1);
-  const trim = (job.winding.finishTrim ? 2 : 1) * pitchMm;
+  const trim = (job.winding.finishTrim ? 3 : 1) * pitchMm;
   if (job.former.kind === 'tube') return 20 + hole / 2 + trim;
   return (job.former.flanges ? 10 : 2) + 2.5 * hole + 3.2 + trim;
 }

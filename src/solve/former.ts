@@ -4,136 +4,96 @@
  */
 import type { Coil } from '../coil/coil.ts';
 import { angleOf, type Hand } from '../coil/layout.ts';
-import type { Job } from '../job/job.ts';
 import type { Former, Hole } from '../record/schema.ts';
-import { findMaterial, type Material } from '../stock/materials.ts';
+import { type Around, FLANGE_MM, footMm, grooveFor, RIM_MM } from './former/around.ts';
+import { finishHoles, lastEnd } from './former/finish-row.ts';
+import { mountingFor } from './former/mounting.ts';
+import { type Post, postSize } from './former/posts.ts';
+import { ridgeFootMm, ridgeSize, ridgesFor } from './former/ridges.ts';
+import { stiffnessText, wallFor } from './former/wall.ts';
 import { type TapMethod, WEB_MM, wireHoleMm } from './tap-methods.ts';
 
-const RIM_MM = 4;
-const FLANGE_MM = 3;
+export { type Around, grooveFor } from './former/around.ts';
+export { leastCircleMm } from './former/mounting.ts';
+export { postsFor } from './former/posts.ts';
+export { tensionN } from './former/wall.ts';
+
 const TUBE_MARGIN_MM = 10;
 /** Arc between the anchor hole and the start hole. */
 const ANCHOR_ARC_MM = 6;
-/** Strain that the winding may put on a printed wall before it is made thicker: 0.2 % of diameter is 0.3 % of L. */
-const STRAIN_GOAL = 0.002;
-const FINISH_BACK = 3;
-const FINISH_ON = 2;
 /** Least that may be left between two holes. */
 export const LEAST_WEB_MM = 0.8;
+/** Between a post and the flange's edge. */
+const POST_INSET_MM = 0.3;
 
-/** Depth and floor of a groove for this wire: half a wire deep, so that the wire's centre lies at the outside diameter. */
-export function grooveFor(overallMm: number): { depthMm: number; floorMm: number; widthMm: number } {
-  const depthMm = overallMm / 2;
-  // A wire on a flat floor between flanks of 45 degrees touches all three when the floor is 2 (sqrt 2 - 1) radii wide.
-  const floorMm = overallMm * (Math.SQRT2 - 1);
-  return { depthMm, floorMm, widthMm: floorMm + 2 * depthMm };
-}
-
-/** More than a hand holds steadily; thick wire is straightened and laid rather than stretched (common practice). */
-const MOST_N = { low: 12, high: 20 };
-
-/** Tension for winding, N: 30 to 50 N per square millimetre of copper, capped (common practice, from memory). */
-export function tensionN(copperMm2: number): { low: number; high: number } {
-  return { low: Math.min(30 * copperMm2, MOST_N.low), high: Math.min(50 * copperMm2, MOST_N.high) };
-}
-
-/** What the hoop pressure of the winding takes off the diameter, a fraction: T / (p t E). */
-function hoopStrain(tension: number, pitchMm: number, wallMm: number, modulusGPa: number): number {
-  return tension / (pitchMm * wallMm * modulusGPa * 1e3);
-}
-
-export interface Around {
-  readonly job: Job;
-  readonly outsideMm: number;
-  readonly grooved: boolean;
-  readonly overallMm: number;
-  readonly pitchMm: number;
-  readonly tensionN: number;
-}
-
-/** Z of the wire centre at the start hole: above the foot, the run-in of the groove and the anchor hole. */
+/** Z of the wire centre at the start hole: above the foot with its posts, the run-in of the groove and the anchor hole. */
 export function startMm(around: Around): number {
   if (around.job.former.kind === 'tube') return TUBE_MARGIN_MM;
   const hole = wireHoleMm(around.overallMm, 1);
   const anchor = hole + 1.2 + hole / 2 + WEB_MM;
   const runIn = around.grooved ? around.pitchMm * 0.75 + around.overallMm : 0;
-  const foot = around.job.former.flanges || around.job.former.mounting === 'ears' ? FLANGE_MM : 0;
-  return Math.ceil((foot + Math.max(anchor, runIn, 3)) * 2) / 2;
+  const posts = around.lugs ? postSize(around).heightMm : 0;
+  return Math.ceil((footMm(around) + posts + Math.max(anchor, runIn, 3)) * 2) / 2;
 }
 
-/** Turns from one finish hole to the next: a turn and the part of it that keeps the holes apart, also inside the wall. */
-function finishStep(around: Around): number {
-  const apart = wireHoleMm(around.overallMm, 1) + WEB_MM;
-  const arc = Math.sqrt(Math.max(0, apart ** 2 - around.pitchMm ** 2));
-  return 1 + arc / (Math.PI * insideMm(around));
-}
-
-function finishHoles(around: Around, coil: Coil): { turn: number; offset: number }[] {
-  const step = finishStep(around);
-  const trim = around.job.winding.finishTrim;
-  const back = trim ? Math.min(FINISH_BACK, Math.floor(coil.turns - 1)) : 0;
-  const row: { turn: number; offset: number }[] = [];
-  for (let k = -back; k <= (trim ? FINISH_ON : 1); k++) row.push({ turn: coil.turns + k * step, offset: k });
-  return row;
+/** Top of the last hole or of the finish ridge, whichever is higher. */
+function endMm(around: Around, coil: Coil): number {
+  const row = finishHoles(around, coil);
+  const hole = coil.positionMm(row[row.length - 1]!.turn) + wireHoleMm(around.overallMm, 1) / 2;
+  const size = ridgeSize(around);
+  if (size === null) return hole;
+  const foot = coil.positionMm(lastEnd(around, coil)) + ridgeFootMm('finish', around.overallMm, size.widthMm);
+  return Math.max(hole, foot + size.widthMm);
 }
 
 /** Length of the whole former for a winding, mm, rounded up to half a millimetre. */
 export function formerLengthMm(around: Around, coil: Coil): number {
-  const row = finishHoles(around, coil);
-  const last = coil.positionMm(row[row.length - 1]!.turn) + wireHoleMm(around.overallMm, 1) / 2;
+  const last = endMm(around, coil);
   if (around.job.former.kind === 'tube') return Math.ceil(last + TUBE_MARGIN_MM);
   const runOut = around.grooved ? around.overallMm + around.pitchMm : WEB_MM;
-  const rim = around.job.former.flanges ? RIM_MM + FLANGE_MM : 2;
+  const rim = around.job.former.flanges ? rimMm(around) + FLANGE_MM : 2;
   return Math.ceil((last + runOut + rim) * 2) / 2;
 }
 
-function wallFor(around: Around): { wallMm: number; strain: number; material: Material } {
-  const { job, grooved, overallMm } = around;
-  const found = findMaterial(job.former.material);
-  if (!found.ok) throw new Error(`material ${job.former.material} passed the reading of the job`);
-  const { material } = found;
-  const groove = grooved ? overallMm / 2 : 0;
-  const strainAt = (wall: number) => hoopStrain(around.tensionN, around.pitchMm, wall - groove, material.modulusGPa);
-  const stated = job.former.wallMm;
-  if (stated !== null) return { wallMm: stated, strain: strainAt(stated), material };
-  const line = job.printer.lineMm;
-  let lines = 4;
-  while (lines < 8 && strainAt(lines * line + groove) > STRAIN_GOAL) lines++;
-  const wallMm = Math.round((lines * line + groove) * 100) / 100;
-  return { wallMm, strain: strainAt(wallMm), material };
+/** How far the rims stand out: posts stand inside their edge. */
+function rimMm(around: Around): number {
+  return around.lugs ? Math.max(RIM_MM, postSize(around).reachMm + POST_INSET_MM) : RIM_MM;
 }
 
-/** Diameter at which holes come nearest to one another: the bore of a printed former, about the outside of a thin tube. */
-function insideMm(around: Around): number {
-  return Math.max(around.outsideMm - 2 * wallFor(around).wallMm, around.outsideMm / 4);
+/** Diameter of the widest part above the foot: what screw heads have to pass. */
+export function widestMm(around: Around): number {
+  const { outsideMm, lugs, job } = around;
+  if (job.former.flanges) return outsideMm + 2 * rimMm(around);
+  return lugs ? outsideMm + 2 * postSize(around).reachMm : outsideMm;
 }
 
-/** Ears at the foot for M4 screws, across the start hole's line so that leads stay free. */
-function earsFor(radiusMm: number): Former['ears'] {
-  return [90, 270].map((angleDeg) => ({
-    angleDeg,
-    holeDiameterMm: 4.4,
-    centreRadiusMm: radiusMm + 6,
-    widthMm: 13,
-    thicknessMm: FLANGE_MM,
-  }));
+/** What the former carries besides its wall: all radial holes, and posts for lugs. */
+export interface Fittings {
+  readonly holes: readonly Hole[];
+  readonly posts: readonly Post[];
 }
 
 /** The former with all its dimensions. The stiffness text says what the tension does to the wall. */
-export function formerFor(around: Around, coil: Coil, taps: readonly number[], hand: Hand): Former {
+export function formerFor(
+  around: Around,
+  coil: Coil,
+  taps: readonly number[],
+  hand: Hand,
+  { holes, posts }: Fittings,
+): Former {
   const { job, outsideMm, grooved, overallMm } = around;
   const printed = job.former.kind === 'printed';
-  const { wallMm, strain, material } = wallFor(around);
+  const wall = wallFor(around);
+  const { wallMm, material } = wall;
   const flanges = printed && job.former.flanges;
-  const flangeMm = outsideMm + 2 * RIM_MM;
-  const widest = flanges ? flangeMm : outsideMm;
+  const widest = widestMm(around);
+  const mounting = mountingFor(around, widest);
   const groove = grooveFor(overallMm);
   const numbers = [
     { text: 'S', angleDeg: 0, tap: null },
     ...taps.map((turn, index) => ({ text: `${index + 1}`, angleDeg: angleOf(turn, hand), tap: index + 1 })),
   ];
-  const percent = (strain * 100).toFixed(2);
-  const ears = printed && job.former.mounting === 'ears' ? earsFor(flanges ? flangeMm / 2 : outsideMm / 2) : [];
+  const round = mounting.base?.diameterMm ?? (flanges ? widest : outsideMm);
   return {
     kind: job.former.kind,
     surface: grooved ? 'grooved' : 'smooth',
@@ -143,20 +103,19 @@ export function formerFor(around: Around, coil: Coil, taps: readonly number[], h
     boreDiameterMm: Math.round((outsideMm - 2 * wallMm) * 100) / 100,
     wallMm,
     lengthMm: formerLengthMm(around, coil),
-    footMm: flanges || ears.length > 0 ? FLANGE_MM : 0,
+    footMm: footMm(around),
     topMm: flanges ? FLANGE_MM : 0,
-    flange: flanges ? { diameterMm: flangeMm, lowerMm: FLANGE_MM, upperMm: FLANGE_MM } : null,
+    flange: flanges ? { diameterMm: widest, lowerMm: FLANGE_MM, upperMm: FLANGE_MM } : null,
     groove: grooved ? { depthMm: groove.depthMm, floorMm: groove.floorMm, runInTurns: 0.25 } : null,
     chamferMm: printed ? 0.5 : 0,
-    ears,
+    ...mounting,
     numbers: flanges ? numbers : [],
     numberHeightMm: 3.2,
     datumMark: printed ? { angleDeg: 0, widthMm: 1.2, depthMm: 0.6 } : null,
     body: 'full',
     ribs: null,
-    ridges: null,
-    base: null,
-    posts: [],
+    ridges: ridgesFor(around, coil, holes, lastEnd(around, coil)),
+    posts: [...posts],
     joints: [],
     tenthMmPercent:
       Math.round(
@@ -166,8 +125,8 @@ export function formerFor(around: Around, coil: Coil, taps: readonly number[], h
             1),
       ) / 100,
     // Chords within 0.01 mm of the widest circle, in steps of 12 so that marks fall on them.
-    segments: Math.max(48, Math.ceil(Math.PI / Math.acos(1 - 0.01 / (widest / 2)) / 12) * 12),
-    stiffness: `${around.tensionN.toFixed(1)} N at this pitch takes ${percent} % off the diameter of a ${wallMm.toFixed(2)} mm wall of ${material.name} (modulus ${material.modulusGPa} GPa), ${(strain * 160).toFixed(2)} % off the inductance; wind no tighter`,
+    segments: Math.max(48, Math.ceil(Math.PI / Math.acos(1 - 0.01 / (round / 2)) / 12) * 12),
+    stiffness: stiffnessText(around, wall),
   };
 }
 
