@@ -5,14 +5,15 @@
 import { Fault, type FaultParts } from '../fault.ts';
 import type { Hole } from '../record/schema.ts';
 import { angleBetween, type FormerDimensions, roofMm } from './dimensions.ts';
-import { earHalfRootMm, earOverlapMm } from './holes.ts';
+import { baseFaults, earFaults, postFaults, ridgeFaults } from './room-fittings.ts';
 
 const mm = (x: number) => `${Number(x.toFixed(3))} mm`;
 const RAD = Math.PI / 180;
 
 /** @throws Fault with exit 4 that lists every reason at once. */
 export function requireRoom(d: FormerDimensions): void {
-  const faults = [...wallFaults(d), ...surfaceFaults(d), ...grooveFaults(d), ...holeFaults(d), ...earFaults(d)];
+  const checks = [wallFaults, surfaceFaults, grooveFaults, holeFaults, earFaults, baseFaults, postFaults, ridgeFaults];
+  const faults = checks.flatMap((check) => check(d));
   if (faults.length > 0) throw new Fault(4, faults);
 }
 
@@ -24,7 +25,7 @@ function wallFaults(d: FormerDimensions): FaultParts[] {
       code: 'former-wall-thin',
       got: `a wall of ${mm(left)} under the winding (outside ${mm(2 * d.outsideR)}, bore ${mm(2 * d.boreR)})`,
       expected: `at least two printed lines, ${mm(2 * d.lineMm)}, and a bore`,
-      todo: 'make the wall thicker or the groove shallower',
+      todo: `make the wall ${mm(2 * d.lineMm + (d.groove?.depthMm ?? 0))} or thicker, or the groove shallower`,
     });
   if (!Number.isInteger(d.segments) || d.segments < 24 || d.segments % 4 !== 0)
     faults.push({
@@ -128,28 +129,4 @@ function clearMm(a: Hole, b: Hole, boreR: number): number {
   const round = Math.hypot(across, rise) - (low.diameterMm + high.diameterMm) / 2;
   const point = Math.hypot(across, rise - roofMm(low.diameterMm)) - high.diameterMm / 2;
   return Math.min(round, point);
-}
-
-function earFaults(d: FormerDimensions): FaultParts[] {
-  const faults: FaultParts[] = [];
-  for (const ear of d.former.ears) {
-    const r = ear.holeDiameterMm / 2;
-    if (ear.widthMm / 2 - r < 2 * d.lineMm || ear.centreRadiusMm - r < d.footR || ear.thicknessMm <= 2 * d.chamferMm)
-      faults.push({
-        code: 'former-ear-no-room',
-        got: `an ear ${mm(ear.widthMm)} wide and ${mm(ear.thicknessMm)} thick, its hole of ${mm(ear.holeDiameterMm)} at radius ${mm(ear.centreRadiusMm)}`,
-        expected: `two lines round the hole, and the hole outside the foot (radius ${mm(d.footR)})`,
-        todo: 'make the ear wider or set its hole farther out',
-      });
-    const mark = d.former.datumMark;
-    const half = earHalfRootMm(ear, d.footR - earOverlapMm(d)) + (mark?.widthMm ?? 0);
-    if (mark && angleBetween(mark.angleDeg, ear.angleDeg) * RAD * d.footR < half)
-      faults.push({
-        code: 'former-ear-hides-datum',
-        got: `an ear at ${ear.angleDeg} degrees`,
-        expected: `ears clear of the datum mark at ${mark.angleDeg} degrees`,
-        todo: 'turn the ears',
-      });
-  }
-  return faults;
 }

@@ -28,7 +28,7 @@ export function formerVolume(d: FormerDimensions, skin: Skin, engravings: readon
   );
 }
 
-function turned(rows: readonly ProfileRow[]): number {
+export function turned(rows: readonly ProfileRow[]): number {
   let sum = 0;
   for (let i = 1; i < rows.length; i++) {
     const a = rows[i - 1]!;
@@ -62,7 +62,7 @@ function holesVolume(d: FormerDimensions): number {
 }
 
 /** Ears by strips across: what stands outside the foot, and above it outside the tube. */
-function earsVolume(d: FormerDimensions): number {
+export function earsVolume(d: FormerDimensions): number {
   const rootR = d.footR - earOverlapMm(d);
   let sum = 0;
   for (const ear of d.former.ears) {
@@ -76,7 +76,7 @@ function earsVolume(d: FormerDimensions): number {
 }
 
 /** Screw holes of a base, which is part of the turned body. */
-function baseHolesVolume(d: FormerDimensions): number {
+export function baseHolesVolume(d: FormerDimensions): number {
   const { base } = d.former;
   return base === null ? 0 : base.holes * Math.PI * (base.holeDiameterMm / 2) ** 2 * base.thicknessMm;
 }
@@ -99,7 +99,7 @@ function areaOutside(outline: readonly Point2[], r: number): number {
   return area;
 }
 
-function datumVolume(d: FormerDimensions): number {
+export function datumVolume(d: FormerDimensions): number {
   const mark = d.former.datumMark;
   if (!mark) return 0;
   const height = d.footR > d.outsideR ? d.surfaceFromMm : d.former.footMm;

@@ -96,6 +96,7 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
   }
   if (winding.pitchKind === 'spacer') add('after', STEP.takeSpacer);
   if (winding.taps.length > 1) add('after', STEP.taps[softens(former.material) ? 'soft' : 'firm']);
+  if (former.posts.length > 0) add('after', STEP.posts);
   add('after', STEP.afterMeasure);
   const textile = /cotton|silk/.test(winding.wire.covering);
   add('after', textile ? STEP.seal.textile : STEP.seal.other);

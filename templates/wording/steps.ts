@@ -63,6 +63,8 @@ export const STEP = {
     firm: 'Bare, tin and solder the taps.',
     soft: 'Bare, tin and solder the taps, with card between joint and former and the iron on for seconds only: the former softens.',
   },
+  posts:
+    'Sleeve each lug’s lead and lead it straight down to its post at the foot: through the eye, once round the post, and on. Joints go beyond the post, off the plastic.',
   seal: {
     textile:
       'Dry the coil in a warm place for a day; dope it sparingly (try the dope on a scrap of the former first), let it cure a day, measure again.',
