@@ -21,7 +21,9 @@ export function buildSolid(kernel: ManifoldToplevel, solid: Solid): TriangleMesh
     const cutters = solid.cutters.map(shape);
     const whole = shapes.length > 1 ? keep('joining', () => kernel.Manifold.union(shapes)) : shapes[0]!;
     const cut = cutters.length > 0 ? keep('cutting', () => kernel.Manifold.difference([whole, ...cutters])) : whole;
-    const mesh = cut.getMesh();
+    const { lowerMm = 0 } = solid;
+    const placed = lowerMm === 0 ? cut : keep('lowering', () => cut.translate(0, 0, -lowerMm));
+    const mesh = placed.getMesh();
     if (mesh.numProp !== 3) throw new MeshError(solid.part, 'reading back', `${mesh.numProp} numbers a vertex, not 3`);
     return { vertices: mesh.vertProperties, triangles: mesh.triVerts };
   } finally {

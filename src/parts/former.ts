@@ -12,6 +12,7 @@
 import type { PartsRecord } from '../record/schema.ts';
 import { type FormerDimensions, formerDimensions } from './dimensions.ts';
 import { datumCutters, earAdders, screwCutters, wallCutters } from './holes.ts';
+import { formerSections } from './joints.ts';
 import { numberCutters } from './numbers.ts';
 import { eyeCutters, postAdders } from './posts.ts';
 import { ridgeAdders } from './ridges.ts';
@@ -30,27 +31,26 @@ export function formerParts(record: PartsRecord): Solid[] {
   const holes = wallCutters(d);
   const screws = screwCutters(d);
   const eyes = eyeCutters(d);
-  return [
-    {
-      part: 'former',
-      name: 'Former',
-      kind: 'former',
-      quantity: 1,
-      material: record.former.material,
-      densityGCm3: record.former.densityGCm3,
-      shapes: [body, ...adders],
-      cutters: [...holes, ...screws, ...eyes, ...datumCutters(d), ...numbers],
-      expected: {
-        bodies: 1,
-        genus: 1 + holes.length + screws.length + eyes.length,
-        genusIs: `1 bore, ${holes.length} holes in the wall, ${screws.length} for screws, ${eyes.length} in posts`,
-        ...box(body, adders),
-        volumeMm3: formerVolume(d, body, numbers),
-      },
-      use: 'the coil is wound on it',
-      printNote: printNote(d),
+  const whole: Solid = {
+    part: 'former',
+    name: 'Former',
+    kind: 'former',
+    quantity: 1,
+    material: record.former.material,
+    densityGCm3: record.former.densityGCm3,
+    shapes: [body, ...adders],
+    cutters: [...holes, ...screws, ...eyes, ...datumCutters(d), ...numbers],
+    expected: {
+      bodies: 1,
+      genus: 1 + holes.length + screws.length + eyes.length,
+      genusIs: `1 bore, ${holes.length} holes in the wall, ${screws.length} for screws, ${eyes.length} in posts`,
+      ...box(body, adders),
+      volumeMm3: formerVolume(d, body, numbers),
     },
-  ];
+    use: 'the coil is wound on it',
+    printNote: printNote(d),
+  };
+  return record.former.joints.length === 0 ? [whole] : formerSections(record, d, whole, body);
 }
 
 /** Extremes of the dimensioned solid; cutters cannot enlarge it. */

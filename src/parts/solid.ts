@@ -41,11 +41,15 @@ export interface Skin {
   readonly groove: Groove | null;
 }
 
-/** A solid through rings of equally many points; both ends are closed by fans, from `hubs` or from a ring's first point. */
+/**
+ * A solid through rings of equally many points; both ends are closed by fans, from `hubs` or from a ring's first point, or
+ * the last ring is `joined` to the first.
+ */
 export interface Loft {
   readonly kind: 'loft';
   readonly name: string;
   readonly rings: readonly (readonly Point3[])[];
+  readonly joined?: true;
   readonly hubs: readonly [Point3, Point3] | null;
 }
 
@@ -94,7 +98,7 @@ export interface Expected {
   readonly volumeMm3: number;
 }
 
-/** A part to print: all shapes joined, then all cutters taken away. In print orientation, on Z = 0. */
+/** A part to print: all shapes joined, all cutters taken away, then lowered. In print orientation, on Z = 0. */
 export interface Solid {
   /** Stands in the file name, in messages and on beds: lower-case, words joined by `-`. */
   readonly part: string;
@@ -106,6 +110,9 @@ export interface Solid {
   readonly densityGCm3: number;
   readonly shapes: readonly Shape[];
   readonly cutters: readonly Cutter[];
+  /** How far the whole is moved down in the end, for a part that is described at its place in another; 0 when left out. */
+  readonly lowerMm?: number;
+  /** As lowered. */
   readonly expected: Expected;
   /** What it is for, in a sentence without a full stop. */
   readonly use: string;
