@@ -9,19 +9,22 @@ const preload = fileURLToPath(new URL('./rss.cjs', import.meta.url));
 
 export const median = (values) => [...values].sort((a, b) => a - b)[values.length >> 1];
 
-function once(args) {
+/** One run of a process; one that takes longer than `mostMs` is stopped and counts as that long. */
+export function once(args, mostMs) {
   const dir = mkdtempSync(join(tmpdir(), 'bench-'));
   const rss = join(dir, 'rss');
   const from = process.hrtime.bigint();
   const run = spawnSync(process.execPath, ['--require', preload, ...args], {
     env: { ...process.env, BENCH_RSS: rss },
     stdio: ['ignore', 'ignore', 'pipe'],
+    timeout: mostMs,
   });
   const ms = Number(process.hrtime.bigint() - from) / 1e6;
+  if (run.error?.code === 'ETIMEDOUT') return { ms, mb: Number.NaN, stopped: true };
   if (run.status !== 0) throw new Error(`node ${args.join(' ')} ended with ${run.status}: ${run.stderr}`);
   const mb = Number(readFileSync(rss, 'utf8')) / 1024;
   rmSync(dir, { recursive: true });
-  return { ms, mb };
+  return { ms, mb, stopped: false };
 }
 
 /** Medians of `runs` paired runs after one of each to warm up; `ratio` is the median of the ratios pair by pair. */

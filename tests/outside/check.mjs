@@ -1,4 +1,5 @@
 // npm run check:outside: what other people's programs say of our files. A program that is not there is skipped and named.
+// With --quick only the parts of one starter job are sliced, which is most of the time.
 import { spawnSync } from 'node:child_process';
 import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
@@ -14,6 +15,7 @@ let passed = 0;
 let failed = 0;
 const skipped = new Set();
 
+const quick = process.argv.includes('--quick');
 const run = (command, args) => spawnSync(command, args, { encoding: 'utf8', maxBuffer: 1 << 26 });
 const has = (command) => {
   const there = !spawnSync(command, ['--version']).error;
@@ -53,7 +55,8 @@ function pdf(path, record) {
   }
 }
 
-function stl(path) {
+let slices = 0;
+function stl(path, record, sliced) {
   if (has('admesh')) {
     const { status, stdout } = run('admesh', [path]);
     const zero = [
@@ -76,9 +79,62 @@ function stl(path) {
     check(`admesh ${path}: one part`, /Number of parts\s*:\s*1\b/.test(stdout), stdout);
   }
   if (has('prusa-slicer')) {
-    const { stdout } = run('prusa-slicer', ['--info', path]);
-    check(`prusa-slicer --info ${path}: manifold`, /manifold = yes/.test(stdout), stdout);
+    manifold(path);
+    if (sliced) slice(path, record);
   }
+}
+
+function manifold(path) {
+  const { stdout } = run('prusa-slicer', ['--info', path]);
+  const good = /manifold = yes/.test(stdout) && !/repair|open_edges|degenerate|facets_removed/i.test(stdout);
+  check(`prusa-slicer --info ${path}: manifold, nothing repaired`, good, stdout);
+}
+
+/** Slices without support. The slicer says so when something would be printed in the air. */
+function slice(path, { printer }) {
+  const { status, stdout, stderr } = run('prusa-slicer', [
+    '--export-gcode',
+    ...['--nozzle-diameter', printer.nozzleMm, '--layer-height', printer.layerMm].map(String),
+    ...['--first-layer-height', String(printer.layerMm)],
+    ...[
+      '--bed-shape',
+      [
+        [0, 0],
+        [printer.bedXMm, 0],
+        [printer.bedXMm, printer.bedYMm],
+        [0, printer.bedYMm],
+      ]
+        .map((p) => p.join('x'))
+        .join(','),
+    ],
+    ...['--max-print-height', String(printer.heightMm)],
+    ...['--output', join(work, 'part.gcode'), path],
+  ]);
+  const said = stdout + stderr;
+  const good =
+    status === 0 &&
+    /exported to/.test(said) &&
+    !/repaired|stability issues|floating|empty layer|warning|error/i.test(said);
+  check(`prusa-slicer slices ${path}`, good, said);
+  slices++;
+}
+
+function threemf(path, record) {
+  const { status, stderr } = run('unzip', ['-tq', path]);
+  if (has('unzip')) check(`unzip -t ${path}`, status === 0, stderr);
+  if (!has('prusa-slicer')) return;
+  manifold(path);
+  const { stdout } = run('prusa-slicer', ['--info', path]);
+  const bed = record.beds.find((one) => path.endsWith(one.path));
+  const items = bed.items.length;
+  check(`prusa-slicer --info ${path}: ${items} objects`, stdout.split('size_x').length - 1 >= 1, stdout);
+  const most = (axis) =>
+    Math.max(...[...stdout.matchAll(new RegExp(`max_${axis} = ([\\d.]+)`, 'g'))].map((m) => Number(m[1])));
+  check(
+    `prusa-slicer --info ${path}: inside the bed`,
+    most('x') <= record.printer.bedXMm && most('y') <= record.printer.bedYMm && most('z') <= record.printer.heightMm,
+    stdout,
+  );
 }
 
 function svg(path) {
@@ -132,7 +188,8 @@ try {
     check(`plan ${name}: a netlist`, record.files.filter(({ kind }) => kind === 'netlist').length === 1, out);
     for (const file of record.files) {
       if (file.kind === 'pdf') pdf(join(out, file.path), record);
-      if (file.kind === 'stl') stl(join(out, file.path));
+      if (file.kind === 'stl') stl(join(out, file.path), record, !quick || name === starters[0]);
+      if (file.kind === '3mf') threemf(join(out, file.path), record);
       if (file.kind === 'svg') svg(join(out, file.path));
       if (file.kind === 'netlist') netlist(join(out, file.path), record);
     }
@@ -143,5 +200,6 @@ try {
 }
 if (skipped.size > 0) console.log(`skipped, not installed: ${[...skipped].join(', ')}`);
 if (resonances > 0) console.log(`ngspice: ${resonances} runs, worst ${(worstResonance * 100).toFixed(4)} % off`);
+if (slices > 0) console.log(`sliced without support or repair: ${slices} parts`);
 console.log(`outside checks: ${passed} good, ${failed} bad`);
 if (failed > 0 || passed === 0) process.exit(1);
