@@ -4,12 +4,14 @@ import { strandLossValid } from '../physics/loss.ts';
 import { selfCapacitanceValid } from '../physics/medhurst.ts';
 import { ringsValid } from '../physics/ring-sum.ts';
 import type { Found } from '../solve/search.ts';
-import type { CoilRecord } from './schema.ts';
+import type { CoilRecord, Former } from './schema.ts';
 
 type Warning = CoilRecord['warnings'][number];
 
 /** A tap farther off than this is pointed out. */
 const FAR_OFF = 0.01;
+/** A pitch may be this far off whole layers: as far as a free pitch is stretched for the inductance. */
+const UNEVEN_LAYERS = 0.11;
 
 /** Said where the turns climb too steeply to be counted as rings. */
 export const steepText = (pitch: string, diameter: string): string =>
@@ -26,6 +28,15 @@ function coverageWarnings(coverage: CoilRecord['coverage']): Warning[] {
   if (near.length === 0) return gaps;
   const text = `Dead turns resonate on their own near what the switch tunes, at position ${near.join(', ')}: strong signals there come through. Shorting the dead turns in sections or cutting them off moves that away.`;
   return [...gaps, { code: 'dead-end-resonance', text }];
+}
+
+/** What becomes of the winding where a former is put together. */
+function sectionsText({ printer }: Job, { joints, lengthMm }: Former, close: boolean): string {
+  const turns = joints.some(({ turn }) => turn !== null);
+  const runs = turns
+    ? `Every seam among the turns runs midway between two of them${close ? ', under the line where they touch' : ''}, and the wire crosses it once, at its step`
+    : 'No seam lies under the winding';
+  return `The former is ${lengthMm} mm long and the printer takes ${printer.heightMm} mm: it is glued from ${joints.length + 1} sections. ${runs}. An edge that stands proud lifts a turn, a joint that is not closed widens one pitch.`;
 }
 
 export function warningsOf(job: Job, found: Found, alternatives: number, coverage: CoilRecord['coverage']): Warning[] {
@@ -81,6 +92,13 @@ export function warningsOf(job: Job, found: Found, alternatives: number, coverag
       `Diameters of ${candidate.wire.name}: ${candidate.wire.status}. Measure the wire at hand.`,
     );
   if (former.kind === 'printed') add('former-shrinks', `${former.stiffness}.`);
+  if (former.joints.length > 0) add('former-in-sections', sectionsText(job, former, candidate.pitch.kind === 'close'));
+  const layers = pitchMm / job.printer.layerMm;
+  if (candidate.pitch.kind === 'groove' && Math.abs(layers - Math.round(layers)) > UNEVEN_LAYERS)
+    add(
+      'pitch-uneven-layers',
+      `A pitch of ${+pitchMm.toFixed(3)} mm is ${layers.toFixed(2)} layers of ${job.printer.layerMm} mm: the edges of the groove fall unevenly from turn to turn. ${+(Math.round(layers) * job.printer.layerMm).toFixed(3)} mm is ${Math.round(layers)}.`,
+    );
   if (former.kind === 'tube')
     add(
       'measure-the-tube',

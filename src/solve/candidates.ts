@@ -4,7 +4,8 @@
  * Close: wire against wire; enamel comes out 2 % looser than its diameter, textile coverings at their diameter (common
  * practice: enamel 1 to 3 %, cotton compresses). Bare wire cannot be wound close. Spaced on a smooth former: by a second
  * wire or by spacer stock wound along and taken off. Grooved: whole layers of the printer, four at least, wide enough for
- * the groove and a land of a quarter of a wire.
+ * the groove and a land of a quarter of a wire. A pitch that is stated is taken as it stands or not at all: on a printed
+ * former it is close, or wide enough for a groove, or held by spacers that the job names.
  */
 import type { Job } from '../job/job.ts';
 import { spacers } from '../stock/spacers.ts';
@@ -37,7 +38,7 @@ export interface Candidate {
 /** Steps of the diameter grid on a printed former, mm. */
 const DIAMETER_STEP_MM = 1;
 /** A groove of fewer layers does not print (common practice). */
-const LEAST_LAYERS = 4;
+export const LEAST_LAYERS = 4;
 /** Wider than this many wires a pitch only costs length. */
 const WIDEST_IN_WIRES = 3;
 /** Thinner wire breaks under a hand that winds it on a form (common practice); who names it gets it. */
@@ -69,7 +70,7 @@ function spacedBy(wire: Wire, spacer: { name: string; thicknessMm: number }): Pi
 }
 
 /** Narrowest groove pitch that a wire and a layer height allow, mm. */
-function leastGroovePitchMm(overallMm: number, layerMm: number): number {
+export function leastGroovePitchMm(overallMm: number, layerMm: number): number {
   const needed = grooveFor(overallMm).widthMm + overallMm / 4;
   return layerMm * Math.max(LEAST_LAYERS, Math.ceil(needed / layerMm - 1e-9));
 }
@@ -108,6 +109,7 @@ function pitchAsked(job: Job, wire: Wire, mm: number): Pitch[] {
   const grooved = job.former.kind === 'printed' && mm >= LEAST_LAYERS * job.printer.layerMm;
   const wide = mm >= grooveFor(wire.overallMm).widthMm + wire.overallMm / 4;
   if (grooved && wide) return [{ kind: 'groove', mm, spacerMm: 0, spacerName: 'none' }];
+  if (job.former.kind === 'printed' && job.winding.spacers === null) return [];
   const spacerMm = round4(mm - wire.overallMm);
   return [{ kind: 'spacer', mm, spacerMm, spacerName: `${spacerMm} mm spacer` }];
 }

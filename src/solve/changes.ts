@@ -4,12 +4,14 @@
  */
 import type { Job, Want } from '../job/job.ts';
 import { MOST_TAPS } from '../job/schema.ts';
+import type { Former } from '../record/schema.ts';
 import { allWires } from '../stock/wires.ts';
-import type { Candidate } from './candidates.ts';
+import { type Candidate, leastGroovePitchMm, wiresFor } from './candidates.ts';
 import { positionsFor } from './demand.ts';
 import { type Design, designOf } from './design.ts';
 import { fits, fitsOf, nearestCount, nearestFit, type Order, shortest, threeDigits } from './first-fit.ts';
 import { demandFor, hasCoil, longestMm } from './search.ts';
+import { wireHoleMm } from './tap-methods.ts';
 
 interface Change {
   readonly text: string;
@@ -38,26 +40,40 @@ const withWinding = (job: Job, winding: Partial<Job['winding']>): Job => ({
 /** Key that holds the length down: a printed former that names no length has the height of the printer. */
 export function lengthKey(job: Job): 'former.longest' | 'printer.height' {
   const printed = job.former.kind === 'printed';
-  if (printed && ('former.longest' in job.assumed || job.printer.heightMm < job.former.longestMm))
-    return 'printer.height';
-  return 'former.longest';
+  return printed && ('former.longest' in job.assumed || longestMm(job) < job.former.longestMm)
+    ? 'printer.height'
+    : 'former.longest';
 }
 
-function longerFormer(job: Job): Change[] {
-  const free = withPrinter(withFormer(job, { longestMm: FREE_MM }), { heightMm: FREE_MM });
+function shortestFit(job: Job): { former: Former; how: string } | null {
   let fit: Design | null = null;
-  for (const design of fitsOf(free, shortest, TO_COMPARE))
+  for (const design of fitsOf(job, shortest, TO_COMPARE))
     if (fit === null || design.former.lengthMm < fit.former.lengthMm) fit = design;
-  if (fit === null || fit.former.lengthMm <= longestMm(job)) return [];
+  if (fit === null) return null;
+  const { former, candidate } = fit;
+  const sections = former.joints.length > 0 ? `, printed in ${former.joints.length + 1} sections` : '';
+  return { former, how: `(${candidate.wire.name} on ${former.outsideDiameterMm} mm${sections})` };
+}
+
+/** A longer former, in sections where the printer is lower. */
+function longerFormer(job: Job): Change[] {
+  const fit = shortestFit(withFormer(job, { longestMm: FREE_MM }));
+  if (fit === null || fit.former.lengthMm <= job.former.longestMm) return [];
   const mm = fit.former.lengthMm;
-  const taller = job.former.kind === 'printed' && mm > job.printer.heightMm;
-  const stated = !(job.former.kind === 'printed' && 'former.longest' in job.assumed);
-  const keys = [stated && mm > job.former.longestMm ? 'former.longest' : '', taller ? 'printer.height' : ''];
-  const raised = withPrinter(withFormer(job, { longestMm: Math.max(mm, job.former.longestMm) }), {
-    heightMm: Math.max(mm, job.printer.heightMm),
-  });
-  const how = `${fit.candidate.wire.name} on ${fit.former.outsideDiameterMm} mm`;
-  return [{ text: `raise ${keys.filter(Boolean).join(' and ')} to ${mm} mm (${how})`, job: raised }];
+  return [{ text: `raise former.longest to ${mm} mm ${fit.how}`, job: withFormer(job, { longestMm: mm }) }];
+}
+
+/** A printer that takes the former whole; the length follows where the job is silent. */
+function tallerPrinter(job: Job): Change[] {
+  if (job.former.kind !== 'printed') return [];
+  const follows = 'former.longest' in job.assumed;
+  if (!follows && job.former.longestMm <= job.printer.heightMm) return [];
+  const upTo = (mm: number) =>
+    withPrinter(follows ? withFormer(job, { longestMm: mm }) : job, { heightMm: Math.max(mm, job.printer.heightMm) });
+  const fit = shortestFit(upTo(FREE_MM));
+  if (fit === null || fit.former.lengthMm <= job.printer.heightMm) return [];
+  const mm = fit.former.lengthMm;
+  return [{ text: `raise printer.height to ${mm} mm ${fit.how}`, job: upTo(mm) }];
 }
 
 function otherDiameter(job: Job): Change[] {
@@ -174,10 +190,25 @@ function otherWish(job: Job): Change[] {
   return job.want.kind === 'band' ? otherBand(job, job.want) : [];
 }
 
+/** The nearest pitch above a stated one that has room for a groove, and for a hole of two wires where loops are drawn in. */
+function otherPitches(job: Job): number[] {
+  const { pitch, tapMethod } = job.winding;
+  if (typeof pitch !== 'number' || job.former.kind !== 'printed') return [];
+  const { layerMm } = job.printer;
+  const needed = wiresFor(job).map(({ overallMm }) => {
+    const hole = tapMethod === 'drawn in' ? (wireHoleMm(overallMm, 2) + overallMm) / 2 : 0;
+    return Math.max(leastGroovePitchMm(overallMm, layerMm), layerMm * Math.ceil(hole / layerMm - 1e-9));
+  });
+  const above = needed.filter((mm) => mm > pitch + 1e-9).sort((a, b) => a - b)[0];
+  return above === undefined ? [] : [Math.round(above * 1e4) / 1e4];
+}
+
 /** What the job asks of the way of winding, given up. */
 function otherWinding(job: Job): Change[] {
   const { pitch, tapMethod, tapLayout } = job.winding;
   const changes: Change[] = [];
+  for (const mm of otherPitches(job))
+    changes.push({ text: `set winding.pitch to ${mm} mm`, job: withWinding(job, { pitch: mm }) });
   if (pitch !== 'any') changes.push({ text: 'set winding.pitch to any', job: withWinding(job, { pitch: 'any' }) });
   if (tapMethod !== 'auto')
     changes.push({ text: 'set winding.tap-method to auto', job: withWinding(job, { tapMethod: 'auto' }) });
@@ -202,31 +233,45 @@ function otherPrint(job: Job): Change[] {
       text: 'set former.mounting to none',
       job: withFormer(job, { mounting: 'none', screwMm: null, screwCircleMm: null }),
     });
-  return [...changes, ...widerCircle(job), ...largerBed(job)];
+  return [...changes, ...otherCircle(job), ...largerBed(job)];
 }
 
-/** The least circle of screws that passes the former the job is nearest to. */
-function widerCircle(job: Job): Change[] {
-  if (job.former.screwCircleMm === null) return [];
+/** The circle of screws nearest to the one stated that passes the former, and that the bed takes. */
+function otherCircle(job: Job): Change[] {
+  const { screwCircleMm } = job.former;
+  if (screwCircleMm === null) return [];
   const free = withFormer(job, { screwCircleMm: null });
   for (const { former } of fitsOf(free, ({ formerMm }) => formerMm, 1)) {
-    const mm = former.base?.circleDiameterMm ?? 2 * (former.ears[0]?.centreRadiusMm ?? 0);
-    if (mm > job.former.screwCircleMm)
-      return [{ text: `raise former.screw-circle to ${mm} mm`, job: withFormer(job, { screwCircleMm: mm }) }];
+    const [ear] = former.ears;
+    const least = former.base?.circleDiameterMm ?? 2 * (ear?.centreRadiusMm ?? 0);
+    const { bedXMm, bedYMm } = job.printer;
+    const most =
+      former.base === null
+        ? Math.max(bedXMm, bedYMm) - (ear?.widthMm ?? 0)
+        : Math.min(bedXMm, bedYMm) - (former.base.diameterMm - former.base.circleDiameterMm);
+    const mm: number = Math.floor(10 * Math.max(least, Math.min(screwCircleMm, most)) + 1e-6) / 10;
+    if (mm !== screwCircleMm)
+      return [
+        {
+          text: `${mm > screwCircleMm ? 'raise' : 'lower'} former.screw-circle to ${mm} mm`,
+          job: withFormer(job, { screwCircleMm: mm }),
+        },
+      ];
   }
   return [];
 }
 
 function largerBed(job: Job): Change[] {
   const free = withPrinter(job, { bedXMm: FREE_MM, bedYMm: FREE_MM });
-  for (const { candidate } of fitsOf(free, ({ formerMm }) => formerMm, 1)) {
+  for (const { candidate, former } of fitsOf(free, ({ formerMm }) => formerMm, 1)) {
     const outcome = designOf(job, demandFor(job), candidate);
     if (outcome.ok) return [];
     const { bedXMm, bedYMm } = job.printer;
     const over = outcome.breaches.filter(({ limit }) => limit === 'printer.bed').map(({ got }) => Math.ceil(got));
-    // The ears lie along the longer side; across them the former needs the shorter one.
+    // Ears lie along the longer side; across them, and without them, the former needs the shorter one.
     const long = Math.max(bedXMm, bedYMm, ...over);
-    const short = Math.max(Math.min(bedXMm, bedYMm), Math.min(long, ...over.slice(1)) * (over.length > 1 ? 1 : 0));
+    const round = former.ears.length === 0 ? over : over.slice(1);
+    const short = Math.max(Math.min(bedXMm, bedYMm), ...round);
     const [x, y] = bedXMm >= bedYMm ? [long, short] : [short, long];
     return [{ text: `raise printer.bed to ${x} x ${y} mm`, job: withPrinter(job, { bedXMm: x, bedYMm: y }) }];
   }
@@ -235,7 +280,7 @@ function largerBed(job: Job): Change[] {
 
 /** Every change that alone would do, in words. */
 export function changesFor(job: Job): string[] {
-  const all = [longerFormer, otherDiameter, otherWire, otherWish, otherWinding, otherPrint];
+  const all = [longerFormer, tallerPrinter, otherDiameter, otherWire, otherWish, otherWinding, otherPrint];
   return all
     .flatMap((changesOf) => changesOf(job))
     .filter((change) => hasCoil(change.job))

@@ -17,6 +17,7 @@ import {
   tightestPair,
   widestMm,
 } from './former.ts';
+import { splitOf } from './joints.ts';
 import { coilOf, freedomsOf, type Setting, sectionAt, settle, targetsOf } from './settle.ts';
 import { inductanceSpread } from './spread.ts';
 import { switchBreaches } from './switch-breaches.ts';
@@ -165,15 +166,16 @@ function sizeBreaches(job: Job, former: Former): Breach[] {
   };
   check('former.longest', former.lengthMm, job.former.longestMm, 'the former would be');
   if (former.kind !== 'printed') return breaches;
-  check('printer.height', former.lengthMm, job.printer.heightMm, 'the former would stand');
   const round = Math.max(
     former.flange?.diameterMm ?? former.outsideDiameterMm,
     former.base?.diameterMm ?? 0,
     ...former.posts.map((post) => former.outsideDiameterMm + 2 * post.reachMm),
   );
   const ear = former.ears[0];
-  const across = ear === undefined ? round : 2 * ear.centreRadiusMm + ear.widthMm;
-  check('printer.bed', across, Math.max(job.printer.bedXMm, job.printer.bedYMm), 'the former is across its ears');
+  if (ear !== undefined) {
+    const across = 2 * ear.centreRadiusMm + ear.widthMm;
+    check('printer.bed', across, Math.max(job.printer.bedXMm, job.printer.bedYMm), 'the former is across its ears');
+  }
   check(
     'printer.bed',
     round,
@@ -192,6 +194,12 @@ function circleBreaches(around: Around): Breach[] {
   if (screwCircleMm >= least - 1e-9) return [];
   const text = `screws on a circle of ${screwCircleMm} mm: heads of ${2 * screwMm} mm pass the former, ${widest.toFixed(1)} mm wide, from ${least} mm on`;
   return [{ limit: 'former.screw-circle', got: screwCircleMm, allowed: least, text, anyMethod: true }];
+}
+
+function heightBreach(job: Job, former: Former, why: string): Breach {
+  const { heightMm } = job.printer;
+  const text = `the former would stand ${former.lengthMm.toFixed(1)} mm on a printer of ${heightMm} mm, and ${why}`;
+  return { limit: 'printer.height', got: former.lengthMm, allowed: heightMm, text };
 }
 
 function wallBreaches(job: Job, former: Former): Breach[] {
@@ -245,9 +253,20 @@ export function designWith(
   const holes = holesFor(around, coil, turns, method, hand, settled.unitTaps);
   const placed = postsFor(around, turns, hand, settled.unitTaps);
   const posts = 'posts' in placed ? placed.posts : [];
-  const former = formerFor(around, coil, turns, hand, { holes, posts });
+  const whole = formerFor(around, coil, turns, hand, { holes, posts });
   const taps = tapsOf(setting, coil, turns);
-  const breaches = [...sizeBreaches(job, former), ...wallBreaches(job, former), ...circleBreaches(around)];
+  const breaches = [...sizeBreaches(job, whole), ...wallBreaches(job, whole), ...circleBreaches(around)];
+  const split = splitOf({
+    former: whole,
+    holes,
+    hand,
+    overallMm: base.overallMm,
+    axialMm: (turn) => coil.positionMm(turn),
+    mostMm: job.former.longestMm,
+    printer: job.printer,
+  });
+  if ('none' in split) breaches.push(heightBreach(job, whole, split.none));
+  const former: Former = 'none' in split ? whole : { ...whole, joints: split.joints };
   if ('needMm' in placed)
     breaches.push({
       limit: 'want.taps',

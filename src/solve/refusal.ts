@@ -1,17 +1,52 @@
 /** When nothing fits: which limit failed, by how much, and what change of a single limit would help. */
 import { Fault, type Place } from '../fault.ts';
 import type { Job } from '../job/job.ts';
-import { candidatesOf, diametersFor, wiresFor } from './candidates.ts';
+import type { Wire } from '../stock/wire.ts';
+import {
+  type Candidate,
+  candidatesOf,
+  diametersFor,
+  LEAST_LAYERS,
+  leastGroovePitchMm,
+  wiresFor,
+} from './candidates.ts';
 import { changesFor, lengthKey } from './changes.ts';
 import { fixedTurnsOf } from './demand.ts';
 import type { Breach, Limit } from './design.ts';
 import { sizeOf } from './estimate.ts';
+import { grooveFor } from './former.ts';
 import { demandFor, longestMm, type NotFound } from './search.ts';
+import { landMm, wireHoleMm } from './tap-methods.ts';
 
 /** Where the job says what a limit holds down. */
 function keyOf(job: Job, limit: Limit): string {
   if (limit === 'holes') return 'want.taps';
-  return limit === 'former.longest' || limit === 'printer.height' ? lengthKey(job) : limit;
+  return limit === 'former.longest' ? lengthKey(job) : limit;
+}
+
+/** Why a stated pitch is none for a groove, of the wire that comes nearest to it. */
+function withoutGroove(job: Job, pitch: number): { key: string; got: string } | null {
+  if (job.former.kind !== 'printed' || job.winding.spacers !== null) return null;
+  const { layerMm } = job.printer;
+  const off = (wire: Wire) => Math.abs(leastGroovePitchMm(wire.overallMm, layerMm) - pitch);
+  const wire = [...wiresFor(job)].sort((a, b) => off(a) - off(b))[0];
+  if (wire === undefined || leastGroovePitchMm(wire.overallMm, layerMm) <= pitch) return null;
+  const { widthMm } = grooveFor(wire.overallMm);
+  const land = wire.overallMm / 4;
+  const got = `a pitch of ${pitch} mm is ${Number((pitch / layerMm).toFixed(2))} layers of ${layerMm} mm, a groove takes ${LEAST_LAYERS}; for ${wire.name} it is ${widthMm.toFixed(2)} mm wide with ${land.toFixed(2)} mm of land: ${Number(leastGroovePitchMm(wire.overallMm, layerMm).toFixed(3))} mm in whole layers at least`;
+  return { key: 'winding.pitch', got };
+}
+
+/** Why the tap method of the job has no place at any pitch of the job. */
+function noMethod(job: Job): string {
+  const none = `${job.winding.tapMethod} is not possible with any pitch of the job`;
+  if (job.winding.tapMethod !== 'drawn in') return none;
+  const room = ({ wire, pitch }: Candidate) => landMm(pitch.mm, wire.overallMm) - wireHoleMm(wire.overallMm, 2);
+  const best = candidatesOf(job).sort((a, b) => room(b) - room(a))[0];
+  if (best === undefined || room(best) >= 0) return none;
+  const { wire, pitch } = best;
+  const hole = wireHoleMm(wire.overallMm, 2);
+  return `${none}: ${wire.name} needs a hole of ${hole} mm for two wires, and at ${pitch.mm} mm its neighbours leave ${landMm(pitch.mm, wire.overallMm).toFixed(2)} mm; ${((hole + wire.overallMm) / 2).toFixed(2)} mm of pitch would do`;
 }
 
 /** Why the job leaves no pair of wire and former to try. */
@@ -25,6 +60,8 @@ function noCandidate(job: Job): { key: string; got: string } {
     return { key: 'winding.pitch', got: `a pitch of ${pitch} mm is narrower than the thinnest wire (${wire})` };
   if (pitch !== 'any' && wiresFor(job).every(({ covering }) => covering === 'bare'))
     return { key: 'winding.pitch', got: `bare wire (${wire}) at pitch: ${pitch} would touch its neighbours` };
+  const noGroove = typeof pitch === 'number' ? withoutGroove(job, pitch) : null;
+  if (noGroove !== null) return noGroove;
   const widest = Math.max(...diametersFor(job));
   return { key: 'wire', got: `the thinnest wire (${wire}) does not lie at a pitch of the job round ${widest} mm` };
 }
@@ -42,8 +79,7 @@ function worst(job: Job, notFound: NotFound): { key: string; got: string } {
     .map((candidate) => sizeOf(job, demand, candidate))
     .filter((size) => size !== null);
   const short = sizes.sort((a, b) => a.formerLengthMm - b.formerLengthMm)[0];
-  if (short === undefined)
-    return { key: 'winding.tap-method', got: `${job.winding.tapMethod} is not possible with any pitch of the job` };
+  if (short === undefined) return { key: 'winding.tap-method', got: noMethod(job) };
   if (short.formerLengthMm > longestMm(job)) {
     const over = short.formerLengthMm - longestMm(job);
     const got = `the shortest former, ${short.candidate.wire.name} on ${short.candidate.formerMm} mm, is about ${short.formerLengthMm.toFixed(0)} mm long, ${over.toFixed(0)} mm over the limit of ${longestMm(job)} mm`;

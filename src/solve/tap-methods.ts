@@ -43,9 +43,14 @@ function turnsBetweenHoles(holeMm: number, pitchMm: number): number {
   return Math.ceil((1.21 * holeMm + WEB_MM) / pitchMm);
 }
 
+/** Between the turn before and the turn after the one that is drawn in, mm: the place of its hole. */
+export function landMm(pitchMm: number, overallMm: number): number {
+  return 2 * pitchMm - overallMm;
+}
+
 /** A hole of two wires clears the turns beside it. */
 function hasLand(pitchMm: number, overallMm: number): boolean {
-  return wireHoleMm(overallMm, 2) <= 2 * pitchMm - overallMm + 1e-9;
+  return wireHoleMm(overallMm, 2) <= landMm(pitchMm, overallMm) + 1e-9;
 }
 
 /** Solid wire up to this twists tight by hand (common practice). */
