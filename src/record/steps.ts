@@ -61,6 +61,8 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
       wireM: place?.wireM ?? null,
       text,
     });
+  const [joint] = former.joints;
+  if (joint) add('prepare', STEP.glue(former.joints.length + 1, String(joint.glueGapMm), former.lengthMm.toFixed(1)));
   add('prepare', STEP.measure(former.outsideDiameterMm.toFixed(2), percentPerTenth(design)));
   if (former.kind === 'tube') add('prepare', STEP.drill(drillText(holes)));
   if (method.holes === 0 && winding.taps.length > 1) add('prepare', STEP.mark);

@@ -25,6 +25,8 @@ export interface Splitting {
   /** Greatest thickness over the wire's covering. */
   readonly overallMm: number;
   readonly axialMm: (turn: number) => number;
+  /** Longest former that the job allows; for a longer one no seams are looked for. */
+  readonly mostMm: number;
   readonly printer: {
     readonly heightMm: number;
     readonly lineMm: number;
@@ -59,7 +61,9 @@ interface Place extends Seam {
 /** Joints from below, none for a former that the printer takes whole; or why it cannot be split. */
 export function splitOf(it: Splitting): Split {
   const { former, printer } = it;
-  if (former.lengthMm <= printer.heightMm + 1e-9) return { joints: [] };
+  const { kind, lengthMm } = former;
+  const whole = lengthMm <= printer.heightMm + 1e-9;
+  if (kind !== 'printed' || whole || lengthMm > it.mostMm + 1e-9) return { joints: [] };
   if (former.body === 'ribbed') return { none: 'a ribbed former has no wall for a seam' };
   const glueGapMm = printer.clearanceMm / 2;
   const j = joiningOf(former.outsideDiameterMm / 2, former.boreDiameterMm / 2, glueGapMm, printer);

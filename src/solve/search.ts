@@ -62,9 +62,10 @@ export function demandFor(job: Job): Demand {
   return demandOf(job, largestSelfPf(job));
 }
 
-/** Longest former that both the job and the printer allow, mm. */
-export function longestMm(job: Job): number {
-  return job.former.kind === 'printed' ? Math.min(job.former.longestMm, job.printer.heightMm) : job.former.longestMm;
+/** Longest former that the job allows, mm; one that cannot be printed in sections no taller than the printer either. */
+export function longestMm({ former, printer }: Job): number {
+  const whole = former.kind === 'printed' && former.body === 'ribbed';
+  return whole ? Math.min(former.longestMm, printer.heightMm) : former.longestMm;
 }
 
 /** As far as the estimate tells; a margin of 3 % and 2 mm keeps what the design may still bring in. */

@@ -36,6 +36,9 @@ export const HOW: Record<MethodName, (loopMm: number) => string[]> = {
 export const STEP = {
   measure: (mm: string, effect: string) =>
     `Measure the former: ${mm} mm outside. 0.1 mm more is ${effect} % more inductance.`,
+  /** `gap` on the radius. */
+  glue: (sections: number, gap: string, length: string) =>
+    `Try the ${sections} sections of the former dry, former-1 lowest: notch over tongue, the steps of the seam together and the seam closed all round. Glue them with slow epoxy (glue gap ${gap} mm round the spigot), keep the holes free, let it cure, and file the seam flush. Length: ${length} mm.`,
   drill: (what: string) => `Wrap the template round the tube, printed side out, and drill ${what}. Take the burrs off.`,
   /** `size` when all holes are alike. */
   holes: (count: number, size: string | null, taps: string, rest: string) =>
