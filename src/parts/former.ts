@@ -15,6 +15,7 @@ import { datumCutters, earAdders, screwCutters, wallCutters } from './holes.ts';
 import { formerSections } from './joints.ts';
 import { numberCutters } from './numbers.ts';
 import { eyeCutters, postAdders } from './posts.ts';
+import { ribbedParts } from './ribbed.ts';
 import { ridgeAdders } from './ridges.ts';
 import { requireRoom } from './room.ts';
 import { formerSkin } from './skin.ts';
@@ -23,6 +24,7 @@ import { formerVolume } from './volume.ts';
 
 /** @throws Fault (exit 4) that names every dimension that cannot be */
 export function formerParts(record: PartsRecord): Solid[] {
+  if (record.former.body === 'ribbed') return ribbedParts(record);
   const d = formerDimensions(record);
   requireRoom(d);
   const body = formerSkin(d);

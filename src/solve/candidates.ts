@@ -5,15 +5,17 @@
  * practice: enamel 1 to 3 %, cotton compresses). Bare wire cannot be wound close. Spaced on a smooth former: by a second
  * wire or by spacer stock wound along and taken off. Grooved: whole layers of the printer, four at least, wide enough for
  * the groove and a land of a quarter of a wire. A pitch that is stated is taken as it stands or not at all: on a printed
- * former it is close, or wide enough for a groove, or held by spacers that the job names.
+ * former it is close, or wide enough for a groove, or held by spacers that the job names. Ribs have a notch a turn: the
+ * pitches of a groove.
  */
 import type { Job } from '../job/job.ts';
 import { spacers } from '../stock/spacers.ts';
 import { tubes } from '../stock/tubes.ts';
 import type { Wire } from '../stock/wire.ts';
 import { allWires } from '../stock/wires.ts';
-import { meanDiameterMm, turnsFor } from './estimate.ts';
+import { roundDiameterMm, turnsFor } from './estimate.ts';
 import { grooveFor } from './former.ts';
+import { ribSection, ribsFit } from './ribs.ts';
 import { type TapMethod, tapMethodsFor } from './tap-methods.ts';
 
 export type PitchKind = 'close' | 'spacer' | 'groove';
@@ -80,10 +82,11 @@ function pitchesFor(job: Job, wire: Wire): Pitch[] {
   const asked = job.winding.pitch;
   const bare = wire.covering === 'bare';
   const printed = job.former.kind === 'printed';
+  const ribbed = job.former.body === 'ribbed';
   const widest = WIDEST_IN_WIRES * wire.overallMm;
   const list: Pitch[] = [];
   if (typeof asked === 'number') return pitchAsked(job, wire, asked);
-  if (asked !== 'spaced' && !bare) list.push(closePitch(wire));
+  if (asked !== 'spaced' && !bare && !ribbed) list.push(closePitch(wire));
   if (asked === 'close') return list;
   if (printed) {
     for (let mm = leastGroovePitchMm(wire.overallMm, job.printer.layerMm); mm <= widest; mm += job.printer.layerMm)
@@ -91,7 +94,7 @@ function pitchesFor(job: Job, wire: Wire): Pitch[] {
   }
   // Bare wire that a spacer no longer holds can touch its neighbour; only who names it gets it on a smooth former.
   const holds = !bare || job.wires !== 'stock';
-  if (holds && (!printed || job.winding.spacers !== null)) {
+  if (holds && !ribbed && (!printed || job.winding.spacers !== null)) {
     const stock =
       job.winding.spacers?.map((thicknessMm) => ({ name: `${thicknessMm} mm spacer`, thicknessMm })) ?? spacers();
     for (const spacer of stock)
@@ -105,11 +108,13 @@ function pitchesFor(job: Job, wire: Wire): Pitch[] {
 function pitchAsked(job: Job, wire: Wire, mm: number): Pitch[] {
   const close = wire.overallMm * looseness(wire);
   if (mm < wire.overallMm) return [];
-  if (mm <= close * 1.03 && wire.covering !== 'bare') return [{ kind: 'close', mm, spacerMm: 0, spacerName: 'none' }];
+  const ribbed = job.former.body === 'ribbed';
+  if (!ribbed && mm <= close * 1.03 && wire.covering !== 'bare')
+    return [{ kind: 'close', mm, spacerMm: 0, spacerName: 'none' }];
   const grooved = job.former.kind === 'printed' && mm >= LEAST_LAYERS * job.printer.layerMm;
   const wide = mm >= grooveFor(wire.overallMm).widthMm + wire.overallMm / 4;
   if (grooved && wide) return [{ kind: 'groove', mm, spacerMm: 0, spacerName: 'none' }];
-  if (job.former.kind === 'printed' && job.winding.spacers === null) return [];
+  if (ribbed || (job.former.kind === 'printed' && job.winding.spacers === null)) return [];
   const spacerMm = round4(mm - wire.overallMm);
   return [{ kind: 'spacer', mm, spacerMm, spacerName: `${spacerMm} mm spacer` }];
 }
@@ -145,6 +150,7 @@ const STEPS = 4;
 
 /** The diameter of a range at which the fixed turns of two switches have the inductance asked for, or the end that is nearest. */
 function diameterForTurns(
+  job: Job,
   turns: number,
   uh: number,
   { lowMm, highMm }: { lowMm: number; highMm: number },
@@ -153,7 +159,7 @@ function diameterForTurns(
 ): number {
   let formerMm = Math.sqrt(lowMm * highMm);
   for (let k = 0; k < STEPS; k++) {
-    const mean = meanDiameterMm({ ...of, formerMm });
+    const mean = roundDiameterMm(job, { ...of, formerMm });
     const ratio = turnsFor(uh, mean, of.pitch.mm, of.wire.bareMm, gapsMm) / turns;
     formerMm = Math.min(highMm, Math.max(lowMm, formerMm * ratio));
   }
@@ -166,7 +172,13 @@ function diametersOf(job: Job, all: readonly number[], of: Omit<Candidate, 'form
   const range = former.diametersMm;
   if (winding.units === null || want.kind !== 'range' || former.kind !== 'printed' || 'listMm' in range) return all;
   const gapsMm = (of.methods[0]?.gapMm ?? 0) * (want.taps + winding.units - 2);
-  return [diameterForTurns(winding.units * want.taps, want.highUh, range, of, gapsMm)];
+  return [diameterForTurns(job, winding.units * want.taps, want.highUh, range, of, gapsMm)];
+}
+
+/** Whether the ribs of a ribbed body leave as much air as they take, with the usual tap method of the wire. */
+function ribsGoRound(job: Job, wire: Wire, methods: readonly TapMethod[], formerMm: number): boolean {
+  const ribs = ribSection(job, wire.overallMm, methods[0]);
+  return ribs === null || ribsFit(ribs, formerMm);
 }
 
 /** The whole space, wire by wire. */
@@ -178,7 +190,8 @@ export function candidatesOf(job: Job): Candidate[] {
       const methods = methodsFor(job, wire, pitch);
       const family = `${wire.name}, ${pitch.kind}`;
       for (const formerMm of diametersOf(job, diameters, { wire, pitch, methods, family }))
-        if (wire.overallMm <= formerMm * THICKEST_SHARE) list.push({ wire, formerMm, pitch, methods, family });
+        if (wire.overallMm <= formerMm * THICKEST_SHARE && ribsGoRound(job, wire, methods, formerMm))
+          list.push({ wire, formerMm, pitch, methods, family });
     }
   }
   return list;

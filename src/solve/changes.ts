@@ -23,6 +23,8 @@ const FREE_MM = 1e4;
 const TO_COMPARE = 24;
 const TO_FIND_WIRE = 60;
 const THICKEST_WALL_MM = 5;
+/** As the job's own limit. */
+const FEWEST_RIBS = 6;
 
 const withFormer = (job: Job, former: Partial<Job['former']>): Job => ({
   ...job,
@@ -221,7 +223,7 @@ function otherPrint(job: Job): Change[] {
   if (job.former.kind !== 'printed') return [];
   const changes: Change[] = [];
   const { wallMm } = job.former;
-  if (wallMm !== null) {
+  if (wallMm !== null && job.former.ribs === null) {
     const thicker = nearestFit(wallMm, THICKEST_WALL_MM, 1.25, (wall) => fits(withFormer(job, { wallMm: wall })));
     if (thicker !== null) {
       const wall = Math.ceil(thicker * 100 - 1e-9) / 100;
@@ -234,6 +236,20 @@ function otherPrint(job: Job): Change[] {
       job: withFormer(job, { mounting: 'none', screwMm: null, screwCircleMm: null }),
     });
   return [...changes, ...otherCircle(job), ...largerBed(job)];
+}
+
+/** Fewer ribs, of any depth; or a wall all round. */
+function otherRibs(job: Job): Change[] {
+  const { ribs, wallMm } = job.former;
+  if (ribs === null) return [];
+  const changes: Change[] = [];
+  for (let count = ribs - 1; count >= FEWEST_RIBS; count--) {
+    if (!fits(withFormer(job, { ribs: count }))) continue;
+    changes.push({ text: `lower former.ribs to ${count}`, job: withFormer(job, { ribs: count }) });
+    break;
+  }
+  if (wallMm !== null) changes.push({ text: 'leave former.wall out', job: withFormer(job, { wallMm: null }) });
+  return [...changes, { text: 'set former.body to full', job: withFormer(job, { body: 'full', ribs: null }) }];
 }
 
 /** The circle of screws nearest to the one stated that passes the former, and that the bed takes. */
@@ -280,7 +296,7 @@ function largerBed(job: Job): Change[] {
 
 /** Every change that alone would do, in words. */
 export function changesFor(job: Job): string[] {
-  const all = [longerFormer, tallerPrinter, otherDiameter, otherWire, otherWish, otherWinding, otherPrint];
+  const all = [longerFormer, tallerPrinter, otherDiameter, otherWire, otherWish, otherWinding, otherRibs, otherPrint];
   return all
     .flatMap((changesOf) => changesOf(job))
     .filter((change) => hasCoil(change.job))

@@ -12,12 +12,14 @@ import {
   LEAST_WEB_MM,
   leastCircleMm,
   postsFor,
+  ribsFor,
   startMm,
   tensionN,
   tightestPair,
   widestMm,
 } from './former.ts';
 import { splitOf } from './joints.ts';
+import { BEHIND_MM, mostRibs, ribDepths, ribSection, ribTensionN } from './ribs.ts';
 import { coilOf, freedomsOf, type Setting, sectionAt, settle, targetsOf } from './settle.ts';
 import { inductanceSpread } from './spread.ts';
 import { switchBreaches } from './switch-breaches.ts';
@@ -77,6 +79,7 @@ export type Limit =
   | 'printer.height'
   | 'printer.bed'
   | 'former.wall'
+  | 'former.ribs'
   | 'former.screw-circle'
   | 'want.taps'
   | 'want.inductance'
@@ -102,11 +105,15 @@ export type Outcome =
 
 /** A whole coil on a printed former that is farther off than this is not taken. */
 const WHOLE_OFF = 1e-3;
+/** On ribs the finish stands in one of them: half the way to the next, in L, may be missing where nothing else is free. */
+const wholeOff = ({ turns, shape }: Coil) =>
+  Math.max(WHOLE_OFF, shape.corners === undefined ? 0 : 1 / (shape.corners * turns));
 /** A printed former grows 0.1 % at most by its angle step; what is finer than this is not a miss of the band. */
 const BAND_SLACK = 2e-3;
 
 function sectionOf(coil: Coil, turn: number) {
-  const { wire, meanDiameterMm } = coil.shape;
+  const { wire } = coil.shape;
+  const meanDiameterMm = coil.equivalentDiameterMm;
   const deadTurns = Math.max(0, coil.turns - turn);
   return { wire, meanDiameterMm, turns: turn, deadTurns, pitchMm: coil.meanPitchMm(turn), wireM: coil.wireM(turn) };
 }
@@ -202,6 +209,22 @@ function heightBreach(job: Job, former: Former, why: string): Breach {
   return { limit: 'printer.height', got: former.lengthMm, allowed: heightMm, text };
 }
 
+/** Ribs that do not go round the former: too many, or of a depth that cannot be. */
+function ribBreach({ job, ribs, outsideMm, overallMm }: Around): Breach {
+  if (!ribs) throw new Error('a full body has no ribs');
+  const { least, most } = ribDepths(ribs, outsideMm, overallMm, job.printer.lineMm);
+  const { wallMm } = job.former;
+  const round = `${ribs.count} ribs ${ribs.widthMm} mm wide on ${outsideMm} mm`;
+  if (wallMm !== null && least <= most) {
+    const text = `${round} may be ${(least + BEHIND_MM).toFixed(2)} to ${(most + BEHIND_MM).toFixed(2)} mm deep, the wall is ${wallMm} mm`;
+    const allowed = Math.min(Math.max(wallMm, least + BEHIND_MM), most + BEHIND_MM);
+    return { limit: 'former.wall', got: wallMm, allowed, text, anyMethod: true };
+  }
+  const allowed = mostRibs(outsideMm, ribs.widthMm);
+  const text = `${round} leave less air than plastic, or no room behind their notches for rings`;
+  return { limit: 'former.ribs', got: ribs.count, allowed, text };
+}
+
 function wallBreaches(job: Job, former: Former): Breach[] {
   if (former.kind !== 'printed') return [];
   const left = former.wallMm - (former.groove?.depthMm ?? 0);
@@ -223,14 +246,16 @@ export function designWith(
   layout: TapLayout,
   correction: NonNullable<Setting['correction']> = [],
 ): Outcome {
-  const tension = tensionN(copperMm2(candidate.wire));
+  const ribs = ribSection(job, candidate.wire.overallMm, method);
+  const tension = (ribs === null ? tensionN : ribTensionN)(copperMm2(candidate.wire));
   const hand = job.winding.hand;
   const base = {
     job,
     grooved: candidate.pitch.kind === 'groove',
     overallMm: candidate.wire.overallMm,
     tensionN: tension.high,
-    lugs: method.name === 'lug' && job.former.kind === 'printed',
+    lugs: method.name === 'lug' && job.former.kind === 'printed' && ribs === null,
+    ribs,
   };
   const start = startMm({ ...base, outsideMm: candidate.formerMm, pitchMm: candidate.pitch.mm });
   const setting: Setting = { job, demand, candidate, method, layout, startMm: start, correction };
@@ -253,7 +278,9 @@ export function designWith(
   const holes = holesFor(around, coil, turns, method, hand, settled.unitTaps);
   const placed = postsFor(around, turns, hand, settled.unitTaps);
   const posts = 'posts' in placed ? placed.posts : [];
-  const whole = formerFor(around, coil, turns, hand, { holes, posts });
+  const plan = ribsFor(around, coil);
+  if (plan === 'no room') return { ok: false, breaches: [ribBreach(around)] };
+  const whole = formerFor(around, coil, turns, hand, { holes, posts, ribs: plan });
   const taps = tapsOf(setting, coil, turns);
   const breaches = [...sizeBreaches(job, whole), ...wallBreaches(job, whole), ...circleBreaches(around)];
   const split = splitOf({
@@ -277,9 +304,10 @@ export function designWith(
   if (correction.length === 0) breaches.push(...bandBreaches(demand, taps));
   const off = Math.abs(taps[taps.length - 1]!.deviation);
   if (demand.units !== null) breaches.push(...switchBreaches(setting, coil, settled.unitTaps, turns[0]!));
-  else if (former.kind === 'printed' && off > WHOLE_OFF) {
-    const text = `taps keep the finish from its place: the whole coil would be ${(off * 100).toFixed(2)} % off, ${WHOLE_OFF * 100} % at most`;
-    breaches.push({ limit: 'want.taps', got: off, allowed: WHOLE_OFF, text });
+  else if (former.kind === 'printed' && off > wholeOff(coil)) {
+    const allowed = wholeOff(coil);
+    const text = `taps keep the finish from its place: the whole coil would be ${(off * 100).toFixed(2)} % off, ${+(allowed * 100).toFixed(2)} % at most`;
+    breaches.push({ limit: 'want.taps', got: off, allowed, text });
   }
   const tight = tightestPair(holes, former.boreDiameterMm);
   if (tight !== null)

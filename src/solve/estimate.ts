@@ -5,12 +5,14 @@
  */
 import type { Job } from '../job/job.ts';
 import { selfCapacitance } from '../physics/medhurst.ts';
+import { equivalentDiameterMm } from '../physics/polygon.ts';
 import { roundWireInductance } from '../physics/rosa.ts';
 import { wheelerTurns } from '../physics/wheeler.ts';
 import type { Candidate } from './candidates.ts';
 import { type Demand, setCapacitance, tapsBetween } from './demand.ts';
+import { ribbedTurnMm, ribEndsMm, ribSection } from './ribs.ts';
 import { inductanceSpread } from './spread.ts';
-import { wireHoleMm } from './tap-methods.ts';
+import { type TapMethod, wireHoleMm } from './tap-methods.ts';
 import {
   actingSelfPf,
   copperG,
@@ -47,6 +49,16 @@ export function meanDiameterMm(candidate: Candidate): number {
   return candidate.pitch.kind === 'groove' ? candidate.formerMm : candidate.formerMm + candidate.wire.overallMm;
 }
 
+/** Diameter that stands for the turns in laws of round coils: the mean diameter, or on ribs that of the circle of a turn's area. */
+export function roundDiameterMm(
+  job: Job,
+  candidate: Candidate,
+  method: TapMethod | undefined = candidate.methods[0],
+): number {
+  const ribs = ribSection(job, candidate.wire.overallMm, method);
+  return equivalentDiameterMm(meanDiameterMm(candidate), ribs?.count, ribs?.bendMm);
+}
+
 /** Turns for an inductance at this pitch with `gapsMm` of gaps spread over the winding, from Nagaoka and Rosa. */
 export function turnsFor(uh: number, diameterMm: number, pitchMm: number, bareMm: number, gapsMm: number): number {
   const henry = uh * 1e-6;
@@ -63,10 +75,14 @@ export function turnsFor(uh: number, diameterMm: number, pitchMm: number, bareMm
 }
 
 /** Former beyond the winding: foot, anchor and rims of a printed one, bare ends of a tube. */
-function endsMm(job: Job, overallMm: number, pitchMm: number): number {
+function endsMm(job: Job, { wire, pitch, formerMm, methods }: Candidate): number {
+  const { overallMm } = wire;
+  const pitchMm = pitch.mm;
   const hole = wireHoleMm(overallMm, 1);
   const trim = (job.winding.finishTrim ? 3 : 1) * pitchMm;
   if (job.former.kind === 'tube') return 20 + hole / 2 + trim;
+  const ribs = ribSection(job, overallMm, methods[0]);
+  if (ribs !== null) return ribEndsMm(job, ribs, formerMm, overallMm) + trim;
   return (job.former.flanges ? 10 : 2) + 2.5 * hole + 3.2 + trim;
 }
 
@@ -75,7 +91,7 @@ export function sizeOf(job: Job, demand: Demand, candidate: Candidate): Size | n
   const method = candidate.methods[0];
   if (method === undefined) return null;
   const { wire, pitch } = candidate;
-  const diameter = meanDiameterMm(candidate);
+  const diameter = roundDiameterMm(job, candidate);
   const gapsMm = method.gapMm * tapsBetween(demand);
   let selfPf = diameter * 0.05;
   let turns = 0;
@@ -85,7 +101,7 @@ export function sizeOf(job: Job, demand: Demand, candidate: Candidate): Size | n
     turns = turnsFor(wholeUh, diameter, pitch.mm, wire.bareMm, gapsMm);
     selfPf = selfCapacitance((turns * pitch.mm + gapsMm) / 1e3, diameter / 1e3) * 1e12;
   }
-  const formerLengthMm = endsMm(job, wire.overallMm, pitch.mm) + turns * pitch.mm + gapsMm;
+  const formerLengthMm = endsMm(job, candidate) + turns * pitch.mm + gapsMm;
   const volumeMm3 = (Math.PI / 4) * candidate.formerMm ** 2 * formerLengthMm;
   return { candidate, wholeUh, turns, formerLengthMm, volumeMm3, gapsMm, selfPf };
 }
@@ -123,9 +139,10 @@ export function roughTargets(job: Job, demand: Demand, size: Size): number[] {
 export function estimateOf(job: Job, demand: Demand, size: Size): Estimate {
   const { candidate, turns, wholeUh, gapsMm } = size;
   const { wire, pitch } = candidate;
-  const diameter = meanDiameterMm(candidate);
+  const diameter = roundDiameterMm(job, candidate);
   const targets = roughTargets(job, demand, size);
-  const turnM = Math.sqrt((Math.PI * diameter) ** 2 + pitch.mm ** 2) / 1e3;
+  const ribs = ribSection(job, wire.overallMm, candidate.methods[0]);
+  const turnM = Math.hypot(ribbedTurnMm(meanDiameterMm(candidate), ribs), pitch.mm) / 1e3;
   let loss = 0;
   let firstTapTurns = turns;
   const looked = new Set([0, targets.length >> 1, targets.length - 1]);

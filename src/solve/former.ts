@@ -5,17 +5,20 @@
 import type { Coil } from '../coil/coil.ts';
 import { angleOf, type Hand } from '../coil/layout.ts';
 import type { Former, Hole } from '../record/schema.ts';
-import { type Around, FLANGE_MM, footMm, grooveFor, RIM_MM } from './former/around.ts';
+import { type Around, FLANGE_MM, footMm, grooveFor, RIM_MM, widestRibbedMm } from './former/around.ts';
 import { finishHoles, lastEnd } from './former/finish-row.ts';
 import { mountingFor } from './former/mounting.ts';
 import { type Post, postSize } from './former/posts.ts';
+import { ribbedKeys, ribbedLengthMm } from './former/ribbed.ts';
 import { ridgeFootMm, ridgeSize, ridgesFor } from './former/ridges.ts';
 import { stiffnessText, wallFor } from './former/wall.ts';
+import { type RibPlan, ribAnchorMm, ribStartMm } from './ribs.ts';
 import { type TapMethod, WEB_MM, wireHoleMm } from './tap-methods.ts';
 
 export { type Around, grooveFor } from './former/around.ts';
 export { leastCircleMm } from './former/mounting.ts';
 export { postsFor } from './former/posts.ts';
+export { ribsFor } from './former/ribbed.ts';
 export { tensionN } from './former/wall.ts';
 
 const TUBE_MARGIN_MM = 10;
@@ -29,6 +32,7 @@ const POST_INSET_MM = 0.3;
 /** Z of the wire centre at the start hole: above the foot with its posts, the run-in of the groove and the anchor hole. */
 export function startMm(around: Around): number {
   if (around.job.former.kind === 'tube') return TUBE_MARGIN_MM;
+  if (around.ribs) return ribStartMm(around.overallMm);
   const hole = wireHoleMm(around.overallMm, 1);
   const anchor = hole + 1.2 + hole / 2 + WEB_MM;
   const runIn = around.grooved ? around.pitchMm * 0.75 + around.overallMm : 0;
@@ -48,6 +52,7 @@ function endMm(around: Around, coil: Coil): number {
 
 /** Length of the whole former for a winding, mm, rounded up to half a millimetre. */
 export function formerLengthMm(around: Around, coil: Coil): number {
+  if (around.ribs) return ribbedLengthMm(around, around.ribs, coil);
   const last = endMm(around, coil);
   if (around.job.former.kind === 'tube') return Math.ceil(last + TUBE_MARGIN_MM);
   const runOut = around.grooved ? around.overallMm + around.pitchMm : WEB_MM;
@@ -62,7 +67,8 @@ function rimMm(around: Around): number {
 
 /** Diameter of the widest part above the foot: what screw heads have to pass. */
 export function widestMm(around: Around): number {
-  const { outsideMm, lugs, job } = around;
+  const { outsideMm, lugs, job, ribs } = around;
+  if (ribs) return widestRibbedMm(around);
   if (job.former.flanges) return outsideMm + 2 * rimMm(around);
   return lugs ? outsideMm + 2 * postSize(around).reachMm : outsideMm;
 }
@@ -71,6 +77,8 @@ export function widestMm(around: Around): number {
 export interface Fittings {
   readonly holes: readonly Hole[];
   readonly posts: readonly Post[];
+  /** In place of the wall. */
+  readonly ribs?: RibPlan | null;
 }
 
 /** The former with all its dimensions. The stiffness text says what the tension does to the wall. */
@@ -79,7 +87,7 @@ export function formerFor(
   coil: Coil,
   taps: readonly number[],
   hand: Hand,
-  { holes, posts }: Fittings,
+  { holes, posts, ribs = null }: Fittings,
 ): Former {
   const { job, outsideMm, grooved, overallMm } = around;
   const printed = job.former.kind === 'printed';
@@ -93,7 +101,7 @@ export function formerFor(
     { text: 'S', angleDeg: 0, tap: null },
     ...taps.map((turn, index) => ({ text: `${index + 1}`, angleDeg: angleOf(turn, hand), tap: index + 1 })),
   ];
-  const round = mounting.base?.diameterMm ?? (flanges ? widest : outsideMm);
+  const round = mounting.base?.diameterMm ?? (flanges || ribs ? widest : outsideMm);
   return {
     kind: job.former.kind,
     surface: grooved ? 'grooved' : 'smooth',
@@ -127,6 +135,7 @@ export function formerFor(
     // Chords within 0.01 mm of the widest circle, in steps of 12 so that marks fall on them.
     segments: Math.max(48, Math.ceil(Math.PI / Math.acos(1 - 0.01 / (round / 2)) / 12) * 12),
     stiffness: stiffnessText(around, wall),
+    ...(ribs === null ? {} : ribbedKeys(around, ribs, hand)),
   };
 }
 
@@ -151,8 +160,8 @@ export function holesFor(
       tap: null,
       turn: null,
       label: 'A',
-      angleDeg: angleOf(-ANCHOR_ARC_MM / circumference, hand),
-      axialMm: coil.positionMm(0) - wireHole - 1.2,
+      angleDeg: around.ribs ? 0 : angleOf(-ANCHOR_ARC_MM / circumference, hand),
+      axialMm: coil.positionMm(0) - (around.ribs ? ribAnchorMm(around.overallMm) : wireHole + 1.2),
       diameterMm: wireHole,
     },
     { purpose: 'start', tap: null, turn: 0, label: 'S', ...at(0), diameterMm: wireHole },

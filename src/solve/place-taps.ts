@@ -1,14 +1,15 @@
 /**
  * Where each tap goes: the nearest place to its inductance that a person can make. In one line the places are whole
- * turns; staggered they are steps of 5 degrees, which a protractor can set out too. Neighbours keep the distance that
- * their tap method needs, in turns or else in angle; who stands too near moves to the next free place.
+ * turns; staggered they are steps of 5 degrees, which a protractor can set out too, or the ribs of a ribbed former.
+ * Neighbours keep the distance that their tap method needs, in turns or else in angle; who stands too near moves to the
+ * next free place.
  */
 import type { Coil } from '../coil/coil.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
 
 export const STAGGER_STEPS = 72;
-/** How far from its best place a tap may be moved to clear its neighbours: a quarter of a turn. */
-const REACH = STAGGER_STEPS / 4;
+/** How far from its best place a tap may be moved to clear its neighbours, turns; on few ribs two of them. */
+const REACH = 1 / 4;
 /** Turns over which the row of finish holes reaches back from the finish, and the angle that it needs. */
 const FINISH_ROW_TURNS = 3;
 const FINISH_ROW_DEGREES = 15;
@@ -20,13 +21,19 @@ export function degreesBetween(a: number, b: number): number {
 }
 
 /** Whether a tap at `turn` clears the start, the `others` and the finish. */
-export function clears(turn: number, others: readonly number[], wholeTurns: number, method: TapMethod): boolean {
-  for (const other of others) {
+export function clears(
+  turn: number,
+  others: readonly number[],
+  placing: Pick<Placing, 'turns' | 'method' | 'ribs'>,
+): boolean {
+  const { turns: wholeTurns, method, ribs } = placing;
+  for (const other of ribs === undefined ? others : [...others, ...ribs.finishRow]) {
     if (Math.abs(turn - other) < method.turnsApart - 1e-9 && degreesBetween(turn, other) < method.degreesApart - 1e-9)
       return false;
   }
   // The start hole is a neighbour too: within a turn of it nothing can be tied off at the same angle.
   if (turn < 1 && degreesBetween(turn, 0) < method.degreesApart) return false;
+  if (ribs !== undefined) return true;
   const row = method.holes > 0 ? FINISH_ROW_TURNS + method.turnsApart : method.turnsApart;
   const needed = method.holes > 0 ? method.degreesApart + FINISH_ROW_DEGREES : method.degreesApart;
   return wholeTurns - turn >= row - 1e-9 || degreesBetween(turn, wholeTurns) >= needed - 1e-9;
@@ -39,6 +46,8 @@ export interface Placing {
   readonly turns: number;
   /** The first tap may not lie above its target: it has to reach the upper edge of a band. */
   readonly firstNotAbove: boolean;
+  /** Of a ribbed former: places are ribs, and each finish hole is a neighbour. */
+  readonly ribs?: { readonly count: number; readonly finishRow: readonly number[] };
 }
 
 /** Why a tap (numbered from 1) finds no place: its neighbours are too near, or it asks for more than the whole coil has. */
@@ -51,8 +60,8 @@ export interface NoPlace {
 
 /** Whether taps that were placed for another number of turns still clear the start, one another and the finish. */
 export function stillClear(taps: readonly number[], placing: Placing): boolean {
-  const { turns, method } = placing;
-  return taps.every((turn, index) => turn < turns - 1e-9 && clears(turn, taps.slice(0, index), turns, method));
+  const { turns } = placing;
+  return taps.every((turn, index) => turn < turns - 1e-9 && clears(turn, taps.slice(0, index), placing));
 }
 
 /**
@@ -60,8 +69,9 @@ export function stillClear(taps: readonly number[], placing: Placing): boolean {
  * or the first tap that finds no place.
  */
 export function placeTaps(coil: Coil, targetsUh: readonly number[], placing: Placing): { turns: number[] } | NoPlace {
-  const step = placing.layout === 'in line' ? 1 : 1 / STAGGER_STEPS;
-  const reach = placing.layout === 'in line' ? 0 : REACH;
+  const steps = placing.layout === 'in line' ? 1 : (placing.ribs?.count ?? STAGGER_STEPS);
+  const step = 1 / steps;
+  const reach = placing.layout === 'in line' ? 0 : Math.max(2, Math.round(steps * REACH));
   const placed: number[] = [];
   for (const [index, target] of targetsUh.entries()) {
     const ideal = coil.turnFor(target);
@@ -85,7 +95,7 @@ export function placeTaps(coil: Coil, targetsUh: readonly number[], placing: Pla
       else aboveOff = off(++above);
       const previous = placed[index - 1] ?? 0;
       if (turn <= previous + 1e-9 || turn >= placing.turns - 1e-9 || turn < Math.min(0.5, placing.turns)) continue;
-      if (clears(turn, placed, placing.turns, placing.method)) found = turn;
+      if (clears(turn, placed, placing)) found = turn;
     }
     if (found === null) return { noPlaceFor: index + 1, beyond: ideal >= placing.turns };
     placed.push(found);

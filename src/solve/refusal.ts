@@ -15,6 +15,7 @@ import { fixedTurnsOf } from './demand.ts';
 import type { Breach, Limit } from './design.ts';
 import { sizeOf } from './estimate.ts';
 import { grooveFor } from './former.ts';
+import { mostRibs, ribSection, ribsFit } from './ribs.ts';
 import { demandFor, longestMm, type NotFound } from './search.ts';
 import { landMm, wireHoleMm } from './tap-methods.ts';
 
@@ -63,6 +64,11 @@ function noCandidate(job: Job): { key: string; got: string } {
   const noGroove = typeof pitch === 'number' ? withoutGroove(job, pitch) : null;
   if (noGroove !== null) return noGroove;
   const widest = Math.max(...diametersFor(job));
+  const ribs = thinnest === undefined ? null : ribSection(job, thinnest.overallMm, undefined);
+  if (ribs !== null && !ribsFit(ribs, widest)) {
+    const got = `${ribs.count} ribs, ${ribs.widthMm} mm wide for ${wire}, leave less air than plastic round ${widest} mm; ${mostRibs(widest, ribs.widthMm)} would do`;
+    return { key: 'former.ribs', got };
+  }
   return { key: 'wire', got: `the thinnest wire (${wire}) does not lie at a pitch of the job round ${widest} mm` };
 }
 

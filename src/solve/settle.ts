@@ -11,8 +11,10 @@ import type { Gap } from '../coil/layout.ts';
 import type { Job } from '../job/job.ts';
 import type { Candidate } from './candidates.ts';
 import { type CoilView, type Demand, fixedTurnsOf, setCapacitance, tapsBetween } from './demand.ts';
-import { meanDiameterMm, turnsFor } from './estimate.ts';
+import { meanDiameterMm, roundDiameterMm, turnsFor } from './estimate.ts';
+import { finishRow } from './former/finish-row.ts';
 import { type NoPlace, type Placing, placeTaps, STAGGER_STEPS, stillClear } from './place-taps.ts';
+import { ribFinishStep, ribSection } from './ribs.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
 import { placeBothSwitches } from './two-switches.ts';
 import { actingSelfPf, type Section } from './working.ts';
@@ -47,8 +49,11 @@ const ROUNDS = 18;
 const TRIMS = 8;
 /** Two places for a tap can call for one another without end; from this round on it stays where it was, if it may. */
 const TAPS_STAY_FROM = 9;
-/** The finish hole of a printed former stands at whole degrees; of few turns a degree is too much, there at tenths. */
-const finishSteps = (turns: number) => (turns < 10 ? 3600 : 360);
+/**
+ * The finish hole of a printed former stands at whole degrees; of few turns a degree is too much, there at tenths. On ribs it stands
+ * in one of them.
+ */
+const finishSteps = ({ job }: Setting, turns: number) => job.former.ribs ?? (turns < 10 ? 3600 : 360);
 
 const roundTo = (value: number, steps: number) => Math.round(value * steps) / steps;
 
@@ -71,9 +76,11 @@ export function coilOf(setting: Setting, state: Settled, turns: number): Coil {
   const { candidate, method } = setting;
   const gaps: Gap[] =
     method.gapMm > 0 ? [...state.unitTaps, ...state.taps].map((turn) => ({ turn, gapMm: method.gapMm })) : [];
+  const ribs = ribSection(setting.job, candidate.wire.overallMm, method);
   return new Coil({
     wire: candidate.wire,
     meanDiameterMm: meanDiameterMm({ ...candidate, formerMm: state.outsideMm }),
+    ...(ribs === null ? {} : { corners: ribs.count, bendMm: ribs.bendMm }),
     pitchMm: state.pitchMm,
     turns,
     gaps,
@@ -142,7 +149,12 @@ function wholeTarget(setting: Setting, coil: Coil, taps: readonly number[]): num
 function wholeTurns(setting: Setting, freedom: Freedom, exact: number): number {
   const fixed = fixedTurnsOf(setting.demand);
   if (fixed !== null) return fixed;
-  if (freedom === 'finish angle') return Math.max(1 / finishSteps(exact), roundTo(exact, finishSteps(exact)));
+  const fine = finishSteps(setting, exact);
+  if (freedom === 'finish angle') return Math.max(1 / fine, roundTo(exact, fine));
+  // A pitch is stretched by little: from rib to rib it has to make up less.
+  const { ribs } = setting.job.former;
+  if (freedom === 'nearest' && ribs !== null && !hasDiameterRange(setting.job))
+    return Math.max(1, roundTo(exact, ribs));
   if (freedom === 'nearest') return Math.max(1, Math.round(exact));
   if (freedom === 'more') return Math.ceil(exact);
   if (freedom === 'fewer') return Math.max(1, Math.floor(exact));
@@ -158,7 +170,7 @@ function wholeTurns(setting: Setting, freedom: Freedom, exact: number): number {
  */
 export function settle(setting: Setting, freedom: Freedom): Settled | NoPlace | 'no room' {
   const { demand, candidate, method } = setting;
-  const mean = meanDiameterMm(candidate);
+  const mean = roundDiameterMm(setting.job, candidate, method);
   const gapsMm = method.gapMm * tapsBetween(demand);
   const guess = turnsFor(demand.wholeUh(mean * 0.05), mean, candidate.pitch.mm, candidate.wire.bareMm, gapsMm);
   let length = Math.ceil(Math.max(guess, fixedTurnsOf(demand) ?? 0) * 1.05) + 5;
@@ -183,7 +195,7 @@ export function settle(setting: Setting, freedom: Freedom): Settled | NoPlace | 
       else next.pitchMm = roundTo(state.pitchMm * ratio ** (-1 / 0.6), 1e4);
       if (!within(setting, next)) return 'no room';
     }
-    const placing = placingOf(setting, turns);
+    const placing = placingOf(setting, turns, next.pitchMm);
     if (demand.units !== null) {
       const placed = placeBothSwitches(demand.units, demand.taps, placing);
       if ('noPlaceFor' in placed) return placed;
@@ -212,7 +224,7 @@ export function settle(setting: Setting, freedom: Freedom): Settled | NoPlace | 
  * this one has a part of one, and with a tap in that turn the two differ by a few tenths of a percent.
  */
 function trimmed(setting: Setting, settled: Settled): Settled {
-  const steps = finishSteps(settled.turns);
+  const steps = finishSteps(setting, settled.turns);
   let state = settled;
   let best = settled;
   let least = Number.POSITIVE_INFINITY;
@@ -237,14 +249,19 @@ function trimmed(setting: Setting, settled: Settled): Settled {
 
 /** The taps as they are when they clear the finish at `turns`, else placed anew; null when that cannot be. */
 function tapsKept(setting: Setting, coil: Coil, taps: readonly number[], turns: number, wholeUh: number) {
-  const placing = placingOf(setting, turns);
+  const placing = placingOf(setting, turns, coil.shape.pitchMm);
   if (stillClear(taps, placing)) return taps;
   const placed = placeTaps(coil, setting.demand.targetsUh(viewOf(setting, coil, wholeUh, taps)).slice(0, -1), placing);
   return 'noPlaceFor' in placed ? null : placed.turns;
 }
 
-function placingOf(setting: Setting, turns: number): Placing {
-  return { layout: setting.layout, method: setting.method, turns, firstNotAbove: setting.demand.kind === 'band' };
+function placingOf(setting: Setting, turns: number, pitchMm: number): Placing {
+  const { job, layout, method, demand } = setting;
+  const { ribs } = job.former;
+  const firstNotAbove = demand.kind === 'band';
+  if (ribs === null) return { layout, method, turns, firstNotAbove };
+  const row = finishRow(job.winding.finishTrim, turns, ribFinishStep(ribs, setting.candidate.wire.overallMm, pitchMm));
+  return { layout, method, turns, firstNotAbove, ribs: { count: ribs, finishRow: row.map(({ turn }) => turn) } };
 }
 
 /** Targets of the final coil with these taps (the whole coil not among them), the whole coil's last. */

@@ -19,18 +19,20 @@ export interface BothSwitches {
 const MOST_OFF = 1 / 4;
 
 /** Distances from the whole turn, the least first: 0, one line over, one line back, two lines over, ... */
-function linesOf(degreesApart: number): number[] {
+function linesOf({ method, ribs }: Placing): number[] {
   const lines = [0];
-  for (let k = 1; (k * degreesApart) / 360 <= MOST_OFF + 1e-9; k++)
-    lines.push((k * degreesApart) / 360, (-k * degreesApart) / 360);
+  // On ribs a line is a rib, the next one that is far enough.
+  const apart = method.degreesApart / 360;
+  const step = ribs === undefined ? apart : Math.ceil(apart * ribs.count - 1e-9) / ribs.count;
+  for (let k = 1; k * step <= MOST_OFF + 1e-9; k++) lines.push(k * step, -k * step);
   return lines;
 }
 
 export function placeBothSwitches(units: number, tens: number, placing: Placing): BothSwitches | NoPlace {
-  const lines = linesOf(placing.method.degreesApart);
+  const lines = linesOf(placing);
   const taken = [0];
   const place = (whole: number, offsets: readonly number[]): number | null => {
-    const offset = offsets.find((off) => clears(whole + off, taken, placing.turns, placing.method));
+    const offset = offsets.find((off) => clears(whole + off, taken, placing));
     if (offset === undefined) return null;
     taken.push(whole + offset);
     return whole + offset;

@@ -10,6 +10,7 @@
  * turn taken off leaves free again what held it.
  */
 import type { Coil } from '../../coil/coil.ts';
+import { ribFinishStep } from '../ribs.ts';
 import { WEB_MM, wireHoleMm } from '../tap-methods.ts';
 import type { Around } from './around.ts';
 import { insideMm } from './wall.ts';
@@ -28,6 +29,8 @@ export interface FinishHole {
 
 /** Turns from one finish hole to the next: a turn and the part of it that keeps the holes apart, also inside the wall. */
 function finishStep(around: Around): number {
+  const { ribs } = around.job.former;
+  if (ribs !== null) return ribFinishStep(ribs, around.overallMm, around.pitchMm);
   const apart = wireHoleMm(around.overallMm, 1) + WEB_MM;
   const arc = Math.sqrt(Math.max(0, apart ** 2 - around.pitchMm ** 2));
   return 1 + arc / (Math.PI * insideMm(around));
@@ -35,12 +38,15 @@ function finishStep(around: Around): number {
 
 /** All holes of the row, ascending; the last one only ties the end. */
 export function finishHoles(around: Around, coil: Coil): FinishHole[] {
-  const step = finishStep(around);
-  const trim = around.job.winding.finishTrim;
-  const back = trim ? Math.min(FINISH_BACK, Math.floor(coil.turns - 1)) : 0;
+  return finishRow(around.job.winding.finishTrim, coil.turns, finishStep(around));
+}
+
+/** The row of a winding of so many turns, whose holes are `step` turns apart. */
+export function finishRow(trim: boolean, turns: number, step: number): FinishHole[] {
+  const back = trim ? Math.min(FINISH_BACK, Math.floor(turns - 1)) : 0;
   const on = (trim ? FINISH_ON : 0) + TIE;
   const row: FinishHole[] = [];
-  for (let k = -back; k <= on; k++) row.push({ turn: coil.turns + k * step, offset: k });
+  for (let k = -back; k <= on; k++) row.push({ turn: turns + k * step, offset: k });
   return row;
 }
 

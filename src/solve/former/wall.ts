@@ -26,12 +26,16 @@ export interface Wall {
   readonly material: Material;
 }
 
+export function materialOf({ former }: Around['job']): Material {
+  const found = findMaterial(former.material);
+  if (!found.ok) throw new Error(`material ${former.material} passed the reading of the job`);
+  return found.material;
+}
+
 /** The wall of the job, else whole lines under the groove. */
 export function wallFor(around: Around): Wall {
   const { job, grooved, overallMm } = around;
-  const found = findMaterial(job.former.material);
-  if (!found.ok) throw new Error(`material ${job.former.material} passed the reading of the job`);
-  const { material } = found;
+  const material = materialOf(job);
   const groove = grooved ? overallMm / 2 : 0;
   const strainAt = (wall: number) => hoopStrain(around.tensionN, around.pitchMm, wall - groove, material.modulusGPa);
   const stated = job.former.wallMm;
