@@ -59,6 +59,9 @@ export function earHalfRootMm(ear: Ear, rootR: number): number {
   return Math.min(0.7 * ear.widthMm, rootR * Math.sin(0.8 * Math.acos(rootR / ear.centreRadiusMm)));
 }
 
+/** An ear's outline begins with so many chords along its root. */
+export const EAR_ROOT_CHORDS = 8;
+
 /**
  * Outline of an ear in its own frame (x along the radius), shrunk by `insetMm`: the root follows the foot, a third wider
  * than the ear at most, and its sides run tangent into the round end. All of it is seen from the centre of that end.
@@ -73,9 +76,8 @@ export function earOutline(ear: Ear, rootR: number, insetMm: number): Point2[] {
   })();
   const rootAngle = Math.asin((halfRoot - insetMm) / rootR);
   const points: Point2[] = [];
-  const rootChords = 8;
-  for (let i = 0; i <= rootChords; i++) {
-    const a = rootAngle * (1 - (2 * i) / rootChords);
+  for (let i = 0; i <= EAR_ROOT_CHORDS; i++) {
+    const a = rootAngle * (1 - (2 * i) / EAR_ROOT_CHORDS);
     points.push([rootR * Math.cos(a), rootR * Math.sin(a)]);
   }
   const n = chordsFor(end, 2 * tangentAngle, 12);

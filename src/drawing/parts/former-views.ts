@@ -1,0 +1,24 @@
+/**
+ * Views of the former: from outside with the start hole in front, from above with it at the bottom, and its surface
+ * developed with the start hole in the middle. Angles grow to the right where they are seen from outside. All sizes are
+ * those that should come out: what the model is widened by for the printer is left out.
+ */
+import { formerDimensions } from '../../parts/dimensions.ts';
+import type { PartsRecord } from '../../record/schema.ts';
+import type { View } from '../views.ts';
+import { developed } from './former-developed.ts';
+import { elevation } from './former-elevation.ts';
+import { endView } from './former-end-view.ts';
+
+/** The views by part; none where the former is not printed in one full piece. */
+export function formerViews(record: PartsRecord): Record<string, View[]> {
+  const { former } = record;
+  if (former.kind !== 'printed' || former.body !== 'full' || former.joints.length > 0) return {};
+  return { former: wholeFormerViews(record) };
+}
+
+/** Elevation, end view and developed surface of a full body, whether it is printed whole or in sections. */
+export function wholeFormerViews(record: PartsRecord): View[] {
+  const d = formerDimensions({ ...record, printer: { ...record.printer, holeCompensationMm: 0 } });
+  return [elevation(d, record), endView(d), developed(d, record)];
+}
