@@ -4,11 +4,19 @@
  */
 import type { PartKind } from '../job/job.ts';
 import type { PartsRecord } from '../record/schema.ts';
+import { combParts } from './comb.ts';
+import { couponParts } from './coupon.ts';
 import { formerParts } from './former.ts';
+import { loopGaugeParts } from './loop-gauge.ts';
+import { saddleParts } from './saddle.ts';
 import type { Solid } from './solid.ts';
 
 const MAKERS: Partial<Record<PartKind, (record: PartsRecord) => Solid[]>> = {
   former: formerParts,
+  saddle: saddleParts,
+  comb: combParts,
+  'loop gauge': loopGaugeParts,
+  coupon: couponParts,
 };
 
 /** @throws Fault (exit 4) that names every dimension that cannot be */
