@@ -6,6 +6,7 @@ import { type Box, type Measure, overlap, shapeBox } from './boxes.ts';
 import type { Line, Shape, Text } from './drawing.ts';
 import { arrowHead, label, line, SMALL_MM } from './shapes.ts';
 import type { Span } from './views.ts';
+import { wrap } from './wrap.ts';
 
 export type Side = 'left' | 'right' | 'above' | 'below';
 
@@ -17,6 +18,9 @@ const HEAD_MM = 2;
 const SHOW_MM = 1.2;
 /** Between a line and the figures that stand in it. */
 const CLEAR_MM = 0.9;
+/** Words beyond the arrows that are wider are set in several lines. */
+const WIDEST_MM = 34;
+const LINE_MM = SMALL_MM * 1.2;
 /** Tail of an arrow that stands outside its dimension. */
 const TAIL_MM = 4.2;
 /** An extension line starts this far from the point and ends this far beyond the arrow. */
@@ -73,7 +77,8 @@ interface Laid {
   readonly v2: number;
   /** Rise of a slanting dimension line from end to end; 0 for one along the side. */
   readonly rise: number;
-  readonly text: string;
+  /** One line between the arrows; beyond them more where the words are many. */
+  readonly words: readonly string[];
   readonly width: number;
   /** Figures between the arrows, or beyond an end with the arrows inside or outside. */
   readonly set: 'between' | 'beyond' | 'squeezed';
@@ -89,10 +94,14 @@ function laid(span: Span, side: Side, scale: number, body: Box, measure: Measure
   const [u1, v1, u2, v2] = [along(side, a), outwards(side, a), along(side, b), outwards(side, b)];
   const rise = span.along === 'straight' ? v2 - v1 : 0;
   const length = Math.hypot(u2 - u1, rise);
-  const width = measure.width(span.text, SMALL_MM, true);
-  const common = { u1, v1, u2, v2, rise, text: span.text, width };
-  if (length >= width + 2 * (HEAD_MM + SHOW_MM + CLEAR_MM))
-    return { ...common, set: 'between', end: 'high', low: u1, high: u2 };
+  const widthOf = (text: string) => measure.width(text, SMALL_MM, true);
+  const whole = widthOf(span.text);
+  const places = { u1, v1, u2, v2, rise };
+  if (length >= whole + 2 * (HEAD_MM + SHOW_MM + CLEAR_MM))
+    return { ...places, words: [span.text], width: whole, set: 'between', end: 'high', low: u1, high: u2 };
+  // On the slant a line stays whole: the boxes of several would meet.
+  const words = rise === 0 ? wrap(span.text, WIDEST_MM, SMALL_MM, true, measure) : [span.text];
+  const width = Math.max(...words.map(widthOf));
   const set = length >= 2 * HEAD_MM + 1 ? 'beyond' : 'squeezed';
   const tail = set === 'squeezed' ? TAIL_MM : CLEAR_MM + 1;
   const room = tail + CLEAR_MM + width;
@@ -100,7 +109,9 @@ function laid(span: Span, side: Side, scale: number, body: Box, measure: Measure
   const end = u2 + room - last > first - (u1 - room) + 1e-6 ? 'low' : 'high';
   const other = set === 'squeezed' ? TAIL_MM : 0;
   return {
-    ...common,
+    ...places,
+    words,
+    width,
     set,
     end,
     low: u1 - (end === 'low' ? room : other),
@@ -183,7 +194,12 @@ function drawn(one: Laid, side: Side, v: number, crossing: readonly number[]): S
   // Read from below or from the right, whichever way the line runs.
   const [x, y] = on(at);
   const turn = degrees > 90.01 ? degrees - 180 : degrees < -89.99 ? degrees + 180 : degrees;
-  const texts = [label(x, y, one.text, { align: 'centre', anchor: 'middle', bold: true, turnDeg: turn })];
+  const down = (turn * Math.PI) / 180;
+  const texts = one.words.map((text, i) => {
+    const off = (i - (one.words.length - 1) / 2) * LINE_MM;
+    const at = [x + off * Math.sin(down), y - off * Math.cos(down)] as const;
+    return label(at[0], at[1], text, { align: 'centre', anchor: 'middle', bold: true, turnDeg: turn });
+  });
   return { lines, heads, texts };
 }
 
@@ -204,22 +220,27 @@ export function sideLines(
   const flat = all.filter((one) => Math.abs(one.rise) < 1e-6);
   const slanting = all.filter((one) => Math.abs(one.rise) >= 1e-6);
   const level = levels(flat);
-  const most = Math.max(-1, ...level);
+  const count = Math.max(-1, ...level) + 1;
+  /** What words of several lines take more than one, on each level. */
+  const extra = Array.from({ length: count }, (_, k) =>
+    Math.max(...flat.map((one, i) => (level[i] === k ? (one.words.length - 1) * LINE_MM : 0))),
+  );
+  const upTo = (k: number) => k * STEP_MM + extra.slice(0, k).reduce((sum, mm) => sum + mm, 0);
   const first = edgeOf(side, body) + FIRST_MM;
   const stacked = (more: number): SideLines =>
     joined(
       flat.map((one, i) => {
-        const crossing = flat.flatMap((other, k) => (level[k]! > level[i]! ? [other.u1, other.u2] : []));
+        const on = level[i]!;
+        const crossing = flat.flatMap((other, k) => (level[k]! > on ? [other.u1, other.u2] : []));
         for (const other of slanting) crossing.push(other.u1, other.u2);
-        return drawn(one, side, first + more + level[i]! * STEP_MM, crossing);
+        return drawn(one, side, first + more + upTo(on) + extra[on]! / 2, crossing);
       }),
     );
   const parts = [nearestClear(stacked, taken, measure)];
   // Slanting ones reach in and out: each goes as near as those before it allow.
   for (const one of slanting) {
     const before = [...taken, ...parts.flatMap((part) => boxesOf(part, measure))];
-    const beyond = first + (flat.length > 0 ? (most + 1) * STEP_MM : 0);
-    parts.push(nearestClear((more) => drawn(one, side, beyond + more, []), before, measure));
+    parts.push(nearestClear((more) => drawn(one, side, first + upTo(count) + more, []), before, measure));
   }
   return joined(parts);
 }

@@ -13,6 +13,18 @@ export const PAPER_MM = { A4: [210, 297], Letter: [215.9, 279.4] } as const;
 export interface Page extends Drawing {
   readonly widthMm: number;
   readonly heightMm: number;
+  /** Under the shapes. */
+  readonly pictures?: readonly PlacedPicture[];
+}
+
+/** A picture in pixels; x and y are its lower left corner. */
+export interface PlacedPicture {
+  /** Grey, without transparency: its data then go into the document as they are. */
+  readonly png: Uint8Array;
+  readonly x: number;
+  readonly y: number;
+  readonly widthMm: number;
+  readonly heightMm: number;
 }
 
 export interface DocumentInfo {
@@ -112,11 +124,18 @@ export class Paper implements Measure {
     for (const page of pages) {
       this.#document.addPage({ size: [page.widthMm * POINTS, page.heightMm * POINTS], margin: 0 }).strokeColor('black');
       this.#pen = '';
+      for (const picture of page.pictures ?? []) this.#place(picture, page.heightMm);
       for (const shape of page.shapes) this.#draw(shape, page.heightMm);
     }
     this.#document.end();
     await this.#ended;
     return Buffer.concat(this.#chunks);
+  }
+
+  #place({ png, x, y, widthMm, heightMm }: PlacedPicture, height: number): void {
+    const size = { width: widthMm * POINTS, height: heightMm * POINTS };
+    const data = Buffer.from(png.buffer, png.byteOffset, png.byteLength);
+    this.#document.image(data, x * POINTS, (height - y - heightMm) * POINTS, size);
   }
 
   #draw(shape: Shape, height: number): void {
