@@ -31,6 +31,18 @@ function foundFor(job: Job): Found {
   return found;
 }
 
+/** What is wrapped round a former or laid on it; nothing round ribs, whose holes are printed and between which is air. */
+async function surfaceFiles(record: CoilRecord): Promise<OutputFile[]> {
+  if (record.former.ribs !== null) return [];
+  const { wrapTemplate } = await import('./sheets/wrap-template.ts');
+  const { holePatternFiles } = await import('./sheets/hole-pattern.ts');
+  const bytes = await wrapTemplate(record);
+  return [
+    { path: 'wrap-template.pdf', kind: 'pdf', bytes, note: 'true scale, print at 100 %' },
+    ...holePatternFiles(record),
+  ];
+}
+
 /** The record and every file of the output folder. */
 export async function planJob(job: Job, options: { version: string }): Promise<Output<CoilRecord>> {
   const kernel = startKernel();
@@ -46,16 +58,12 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
     const beds = making.then((parts) => bedFiles(kernel, record, parts));
     beds.catch(() => undefined);
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
-    const { wrapTemplate } = await import('./sheets/wrap-template.ts');
     const { rangeSheet } = await import('./sheets/range-sheet.ts');
-    const { holePatternFiles } = await import('./sheets/hole-pattern.ts');
     const sheet = await windingSheet(record);
-    const template = await wrapTemplate(record);
     const ranges = await rangeSheet(record);
     const files: OutputFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
-      { path: 'wrap-template.pdf', kind: 'pdf', bytes: template, note: 'true scale, print at 100 %' },
-      ...holePatternFiles(record),
+      ...(await surfaceFiles(record)),
       { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
       netlistFile(record),
       ...partFiles(record, await making),

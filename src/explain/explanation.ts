@@ -36,6 +36,12 @@ export interface Figure {
   readonly error: string;
 }
 
+/** The diameter that stands for a turn in laws of round coils. */
+export function diameterOf({ winding, coil }: Subject): Input {
+  if (winding.corners === undefined) return input('mean diameter D', winding.meanDiameterMm, 'mm');
+  return input('diameter D of the circle of a turn’s area', coil.coil.equivalentDiameterMm, 'mm');
+}
+
 export interface Explanation {
   readonly job: string;
   /** Of the record. */

@@ -1,29 +1,30 @@
 /** Inductance: by hand from the current sheet, by the short formula, and the ring sum that the record states. */
 import { Coil } from '../coil/coil.ts';
 import { MU0 } from '../physics/constants.ts';
-import { ringMutual, ringSelf } from '../physics/maxwell.ts';
 import { nagaokaK, sheetInductance } from '../physics/nagaoka.ts';
 import { rosaA, rosaB, roundWireInductance } from '../physics/rosa.ts';
 import { wheeler1928, wheeler1982 } from '../physics/wheeler.ts';
-import { type Figure, type Input, input, type Step, type Subject, step } from './explanation.ts';
+import { diameterOf, type Figure, type Input, input, type Step, type Subject, step } from './explanation.ts';
 
 /** The section up to the tap as an even coil: what the closed formulas take it for. Metres. */
-function evenOf({ winding, tap, coil }: Subject) {
+function evenOf(subject: Subject) {
+  const { winding, tap, coil } = subject;
   const length = (coil.coil.positionMm(tap.turn) - coil.coil.positionMm(0)) / 1e3;
   return {
     turns: tap.turn,
-    diameter: winding.meanDiameterMm / 1e3,
+    diameter: coil.coil.equivalentDiameterMm / 1e3,
     length,
     pitch: length / tap.turn,
     wire: winding.wire.bareMm / 1e3,
+    called: diameterOf(subject),
   };
 }
 
 type Even = ReturnType<typeof evenOf>;
 
-const inputsOf = ({ turns, diameter, length }: Even): Input[] => [
+const inputsOf = ({ turns, called, length }: Even): Input[] => [
   input('turns to the tap n', turns),
-  input('mean diameter D', diameter * 1e3, 'mm'),
+  called,
   input('electrical length l, from the start to the tap', length * 1e3, 'mm'),
 ];
 
@@ -100,7 +101,9 @@ export function ringFigure(subject: Subject): Figure {
   const { tap, winding, coil } = subject;
   const even = evenOf(subject);
   const [radius, wireRadius] = [even.diameter / 2, even.wire / 2];
-  const own = ringSelf(radius, wireRadius) * 1e6;
+  const { turnShape } = coil.coil;
+  const own = turnShape.own(wireRadius) * 1e6;
+  const polygon = winding.corners === undefined ? '' : '; both more by what polygons have over circles of their area';
   const value = coil.coil.inductanceUh(tap.turn);
   const whole = Math.floor(tap.turn + 1e-9);
   const neighbour = winding.turnPositionsMm.length > 1;
@@ -110,18 +113,21 @@ export function ringFigure(subject: Subject): Figure {
     value,
     unit: 'µH',
     recorded: tap.inductanceUh,
-    formula:
-      'L = n Lring + 2 sum of M(zi - zk) over all pairs of turns; Lring = mu0 R (ln(8R/a) - 7/4 + (a/R)^2/8 (ln(8R/a) + 1/3)); M by elliptic integrals',
+    formula: `L = n Lring + 2 sum of M(zi - zk) over all pairs of turns; Lring = mu0 R (ln(8R/a) - 7/4 + (a/R)^2/8 (ln(8R/a) + 1/3)); M by elliptic integrals${polygon}`,
     source: 'Maxwell 1873, art. 701; Rayleigh & Niven 1881; Grover 1946, ch. 16',
     inputs: [
       input('turns to the tap n', tap.turn),
-      input('radius R of the wire centre', radius * 1e3, 'mm'),
+      input(
+        polygon === '' ? 'radius R of the wire centre' : 'radius R of the circle of a turn’s area',
+        radius * 1e3,
+        'mm',
+      ),
       input('bare radius a', wireRadius * 1e3, 'mm'),
       input('places of the turns', winding.turnPositionsMm.length, 'values'),
     ],
     intermediates: [
       step('one ring by itself Lring', '', own, 'µH'),
-      ...(neighbour ? [step('M of the first two turns', '', ringMutual(radius, apart) * 1e6, 'µH')] : []),
+      ...(neighbour ? [step('M of the first two turns', '', turnShape.mutual(apart) * 1e6, 'µH')] : []),
       step('all rings by themselves', 'whole turns x Lring', whole * own, 'µH'),
       step('between them, and part turn', 'L - whole turns x Lring', value - whole * own, 'µH'),
       ...(tap.turn >= 1 ? differences(subject, even, value) : []),

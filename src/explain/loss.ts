@@ -5,7 +5,7 @@ import { dcResistance, RESISTIVITY_20C } from '../physics/copper.ts';
 import { resistivityAt } from '../physics/field/field.ts';
 import { resistanceRatio } from '../physics/medhurst.ts';
 import { skinDepth, skinRatio } from '../physics/skin.ts';
-import { type Figure, type Input, input, type Step, type Subject, step } from './explanation.ts';
+import { diameterOf, type Figure, type Input, input, type Step, type Subject, step } from './explanation.ts';
 
 const kindOf = ({ winding }: Subject) =>
   winding.wire.strands > 1
@@ -29,7 +29,7 @@ function copperSteps(subject: Subject, kHz: number): Step[] {
   const { wire } = winding;
   const rho = resistivityAt(record.surroundings.celsius);
   const warmth = rho / RESISTIVITY_20C;
-  const length = (Math.PI * winding.meanDiameterMm * tap.turn) / 1e3;
+  const length = coil.coil.turnShape.length * tap.turn;
   const copper = coil.terminal(tap.turn, kHz, 'open').resistanceOhm;
   const skin = step('skin depth', 'sqrt(2 rho/(omega mu0))', skinDepth(kHz * 1e3) * Math.sqrt(warmth) * 1e3, 'mm');
   if (wire.strands > 1) {
@@ -45,7 +45,7 @@ function copperSteps(subject: Subject, kHz: number): Step[] {
   // The ratio asks for d over skin depth only: a warmer wire is a lower frequency to it.
   const ratio = skinRatio(wire.bareMm / 1e3, (kHz * 1e3) / warmth);
   const electrical = coil.coil.positionMm(tap.turn) - coil.coil.positionMm(0);
-  const phi = resistanceRatio(electrical / winding.meanDiameterMm, electrical / tap.turn / wire.bareMm);
+  const phi = resistanceRatio(electrical / coil.coil.equivalentDiameterMm, electrical / tap.turn / wire.bareMm);
   return [
     skin,
     step('direct current Rdc', '4 rho len/(pi d^2), loops left out', direct, 'Ω'),
@@ -62,10 +62,12 @@ function copperSteps(subject: Subject, kHz: number): Step[] {
   ];
 }
 
-const inputsOf = ({ winding, tap, record }: Subject, kHz: number): Input[] => [
+const inputsOf = (subject: Subject, kHz: number): Input[] => inputsAt(subject, kHz, diameterOf(subject));
+
+const inputsAt = ({ winding, tap, record }: Subject, kHz: number, diameter: Input): Input[] => [
   input('frequency f', kHz, 'kHz'),
   input('turns to the tap n', tap.turn),
-  input('mean diameter D', winding.meanDiameterMm, 'mm'),
+  diameter,
   input('bare wire d', winding.wire.bareMm, 'mm'),
   ...(winding.wire.strands > 1
     ? [input('strands', winding.wire.strands), input('strand ds', winding.wire.strandMm, 'mm')]

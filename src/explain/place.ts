@@ -76,22 +76,25 @@ export function wireFigure(subject: Subject): Figure {
   const { winding, tap, coil } = subject;
   const loops = loopsOf(subject);
   const helix = coil.coil.wireM(tap.turn);
+  const { corners, bendMm = 0 } = winding;
+  const around = corners === undefined ? 'pi D' : '(2 k (D/2 - b) sin(pi/k) + 2 pi b)';
   return {
     figure: 'wire from the start to the tap',
     value: helix + loops.count * loops.eachM,
     unit: 'm',
     recorded: tap.wireFromStartM,
-    formula: 'sqrt((pi D n)^2 + (z - z0)^2) and the loops of earlier taps',
+    formula: `sqrt((${around} n)^2 + (z - z0)^2) and the loops of earlier taps`,
     source: 'Pythagoras on the unrolled cylinder',
     inputs: [
-      input('mean diameter D', winding.meanDiameterMm, 'mm'),
+      input(corners === undefined ? 'mean diameter D' : 'diameter D over the ribs', winding.meanDiameterMm, 'mm'),
+      ...(corners === undefined ? [] : [input('ribs k', corners), input('bend over a rib b', bendMm, 'mm')]),
       input('turns to the tap n', tap.turn),
       input('advance z - z0', coil.coil.positionMm(tap.turn) - coil.coil.positionMm(0), 'mm'),
       input('loops before this tap', loops.count),
       input('wire in each', loops.eachM * 1000, 'mm'),
     ],
     intermediates: [
-      step('around', 'pi D n', (Math.PI * winding.meanDiameterMm * tap.turn) / 1000, 'm'),
+      step('around', `${around} n`, coil.coil.turnShape.length * tap.turn, 'm'),
       step('along the helix', '', helix, 'm'),
       step('in loops', 'number x length', loops.count * loops.eachM, 'm'),
     ],

@@ -4,6 +4,7 @@
  */
 import { cautionsFor } from '../../templates/wording/cautions.ts';
 import { HOW } from '../../templates/wording/steps.ts';
+import { FORMER_SHARE } from '../coil/positions.ts';
 import type { Job } from '../job/job.ts';
 import { partsOf } from '../parts/parts.ts';
 import type { Solid } from '../parts/solid.ts';
@@ -12,6 +13,7 @@ import { setCapacitance } from '../solve/demand.ts';
 import type { Design } from '../solve/design.ts';
 import { ASPECTS, aspectOf } from '../solve/prefer.ts';
 import { fieldLoss, lossTangentOf, workingCoilOf } from '../solve/refine.ts';
+import { plasticShare } from '../solve/ribs.ts';
 import type { Found } from '../solve/search.ts';
 import { spreadInWords, spreadOf } from '../solve/spread.ts';
 import { DEFAULT_AT_KHZ } from '../solve/working.ts';
@@ -138,11 +140,23 @@ function derivedOf(job: Job, design: Design): Record<string, string> {
   const { former } = design;
   const derived: Record<string, string> = { temperature: '20 °C' };
   if (job.former.wallMm === null)
-    derived['former.wall'] = `${former.wallMm} mm, from lines of ${job.printer.lineMm} mm`;
+    derived['former.wall'] =
+      former.ribs === null
+        ? `${former.wallMm} mm, from lines of ${job.printer.lineMm} mm`
+        : `${former.wallMm} mm, ribs and rings`;
   if (job.wires === 'stock') derived.wire = 'all in stock from 0.15 mm bare up';
   if (job.former.kind === 'tube' && job.winding.spacers === null) derived['winding.spacers'] = 'all in stock';
   if (job.set === null && job.atKhz === null) derived.at = `${DEFAULT_AT_KHZ} kHz, for the loss`;
   return derived;
+}
+
+/** How the loss of a ribbed former is estimated. */
+function ribbedLoss(former: Former): { formerLoss?: string } {
+  if (former.ribs === null) return {};
+  const percent = (100 * plasticShare(former)).toFixed(0);
+  return {
+    formerLoss: `estimate: ${FORMER_SHARE * 100} % of the self-capacitance would lie in a full wall; ribs and rings stand behind ${percent} % of the winding, and so much of the material's loss tangent is taken`,
+  };
 }
 
 /** What the parts of a found design read: the same figures as in its record, before the rest of that is worked out. */
@@ -180,7 +194,7 @@ export function makeRecord(job: Job, found: Found, version: string, solids?: rea
     tuning: job.set === null ? null : setCapacitance(job.set),
     atKhz: job.atKhz ?? (job.set === null ? DEFAULT_AT_KHZ : null),
     rest: job.set?.switch ?? ('open' as const),
-    lossTangent: lossTangentOf(job),
+    lossTangent: lossTangentOf(job, chosen.former),
   };
   const figures = figuresOf(chosen.working ?? workingCoilOf(job, chosen), conditions);
   const lossFactor = fieldLoss(job, chosen);
@@ -198,7 +212,7 @@ export function makeRecord(job: Job, found: Found, version: string, solids?: rea
     paper: job.paper,
     demand: demandOf(job, found),
     windings: [winding],
-    surroundings: figures.surroundings,
+    surroundings: { ...figures.surroundings, ...ribbedLoss(chosen.former) },
     spread,
     coverage: figures.coverage,
     switchKinds: figures.switchKinds,

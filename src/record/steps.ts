@@ -4,8 +4,9 @@ import { Coil } from '../coil/coil.ts';
 import type { Job } from '../job/job.ts';
 import type { Design } from '../solve/design.ts';
 import { findMaterial } from '../stock/materials.ts';
+import { ribName } from './rib-name.ts';
 import { decimals } from './rounding.ts';
-import type { CoilRecord, Step, Winding } from './schema.ts';
+import type { CoilRecord, Former, Step, Winding } from './schema.ts';
 
 /** Wire left free at each end, mm. */
 export const LEAD_MM = 200;
@@ -14,8 +15,10 @@ const SPREAD_TURNS = 5;
 /** A turn as people count: 12, 12.25. */
 const turnText = (turn: number) => String(decimals(turn, 2));
 
-function placeText(turn: number, angleDeg: number): string {
+function placeText(former: Former, turn: number, angleDeg: number): string {
   const whole = Math.floor(turn + 1e-6);
+  const rib = ribName(former, angleDeg);
+  if (rib !== null) return STEP.turnAndRib(whole, rib);
   return turn - whole < 1e-6 ? STEP.turn(whole) : STEP.turnAndAngle(whole, angleDeg.toFixed(0));
 }
 
@@ -62,10 +65,14 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
       text,
     });
   const [joint] = former.joints;
-  if (joint) add('prepare', STEP.glue(former.joints.length + 1, String(joint.glueGapMm), former.lengthMm.toFixed(1)));
+  if (joint) {
+    const climbs = former.joints.some(({ climbMm }) => climbMm > 0);
+    const { joints, lengthMm } = former;
+    add('prepare', STEP.glue(joints.length + 1, String(joint.glueGapMm), climbs, lengthMm.toFixed(1)));
+  }
   add('prepare', STEP.measure(former.outsideDiameterMm.toFixed(2), percentPerTenth(design)));
   if (former.kind === 'tube') add('prepare', STEP.drill(drillText(holes)));
-  if (method.holes === 0 && winding.taps.length > 1) add('prepare', STEP.mark);
+  if (method.holes === 0 && winding.taps.length > 1) add('prepare', former.ribs === null ? STEP.mark : STEP.markRibs);
   const metres = (winding.wireLengthM + winding.leadsM).toFixed(1);
   add('prepare', STEP.set(metres, winding.tensionLowN.toFixed(1), winding.tensionHighN.toFixed(1)));
   if (winding.pitchKind === 'spacer') add('prepare', STEP.spacer(winding.spacerName));
@@ -74,7 +81,7 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
   let last = 0;
   let checked = false;
   for (const { unit, turn, angleDeg, wireFromStartM } of winding.unitTaps ?? []) {
-    const wind = STEP.wind(turnText(turn - last), placeText(turn, angleDeg));
+    const wind = STEP.wind(turnText(turn - last), placeText(former, turn, angleDeg));
     add('tap', `${wind}: ${STEP.unitTap(unit)}`, { unit, turn, wireM: decimals(wireFromStartM, 2) });
     last = turn;
   }
@@ -87,7 +94,7 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
         wireM: decimals(design.coil.wireM(20) + method.loopM * (tap.tap - 1 + design.unitTaps.length), 2),
       });
     }
-    const wind = STEP.wind(turnText(tap.turn - last), placeText(tap.turn, tap.angleDeg));
+    const wind = STEP.wind(turnText(tap.turn - last), placeText(former, tap.turn, tap.angleDeg));
     const then = whole ? STEP.finish(LEAD_MM) : STEP.tap(tap.tap);
     add(whole ? 'finish' : 'tap', whole ? `${wind}. ${then}` : `${wind}: ${then}`, {
       tap: tap.tap,

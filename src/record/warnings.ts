@@ -71,7 +71,7 @@ export function warningsOf(job: Job, found: Found, alternatives: number, coverag
     const cure = layout === 'in line' ? '; `tap-layout: staggered` under `winding` brings them nearer' : '';
     add('taps-off-target', `Nearest places are more than 1 % off target at tap ${which}${cure}.`);
   }
-  const ratio = coil.woundMm(coil.turns) / coil.shape.meanDiameterMm;
+  const ratio = coil.woundMm(coil.turns) / coil.equivalentDiameterMm;
   if (!selfCapacitanceValid(ratio))
     add(
       'self-capacitance-outside-table',

@@ -168,10 +168,12 @@ export function formerSizes(record: CoilRecord, widthMm: number, measure: Measur
     [CHECKS.outside, fixed(former.outsideDiameterMm, 2)],
     [CHECKS.length2, fixed(former.lengthMm, 2)],
     [CHECKS.bore, fixed(former.boreDiameterMm, 2)],
-    [CHECKS.wall, fixed(former.wallMm, 2)],
+    former.ribs === null
+      ? [CHECKS.wall, fixed(former.wallMm, 2)]
+      : [CHECKS.ribSize, `${fixed(former.ribs.widthMm, 2)} x ${fixed(former.ribs.depthMm, 2)}`],
   ];
   if (former.flange) rows.push([CHECKS.rim, fixed(former.flange.diameterMm, 2)]);
-  if (former.groove) rows.push([CHECKS.groove, fixed(former.groove.depthMm, 2)]);
+  if (former.groove) rows.push([former.ribs === null ? CHECKS.groove : CHECKS.notch, fixed(former.groove.depthMm, 2)]);
   const columns = columnsOf(widthMm, [
     [CHECKS.part, 36, {}],
     [CHECKS.mm, 18, { ...RIGHT, bold: true }],

@@ -7,6 +7,7 @@ import { elevation, elevationScale, scaleText } from '../drawing/elevation.ts';
 import { endView, isStaggered } from '../drawing/end-view.ts';
 import { BODY_MM, CAP_SHARE, label, line, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
 import { PANEL_MM, panelHeight, tapPicture } from '../drawing/tap-picture.ts';
+import { ribName } from '../record/rib-name.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Block, beside, columns, heading, list, paragraph, stack, tickBox } from './block.ts';
 import { type Column, NO_BOX, shares, table } from './table.ts';
@@ -101,7 +102,7 @@ export function tapTable(
     [TAPS.done, 7, { kind: 'tick' }],
     [TAPS.tap, 7, { align: 'centre', bold: true }],
     [TAPS.turn, 15, { bold: true }],
-    [TAPS.angle, 12, { bold: true }],
+    [record.former.ribs === null ? TAPS.angle : TAPS.rib, 12, { bold: true }],
     [TAPS.position, 13, {}],
     [TAPS.inductance, 13, {}],
     [TAPS.wire, 13, {}],
@@ -122,7 +123,7 @@ export function tapTable(
       step?.kind === 'tap' ? '' : NO_BOX,
       `${tap.key}`,
       short(tap.turn, 3),
-      fixed(tap.angleDeg, 1),
+      ribName(record.former, tap.angleDeg) ?? fixed(tap.angleDeg, 1),
       fixed(tap.positionMm, 2),
       figures(tap.inductanceUh),
       fixed(tap.wireFromStartM, 2),

@@ -6,9 +6,11 @@ import { atFrequency, type Span, spanOf } from '../coil/positions.ts';
 import { WorkingCoil } from '../coil/working-coil.ts';
 import type { Job } from '../job/job.ts';
 import { capacitanceFor } from '../physics/tuning.ts';
+import type { Former } from '../record/schema.ts';
 import { findMaterial } from '../stock/materials.ts';
 import { type Demand, setCapacitance } from './demand.ts';
 import { bandBreaches, type Design, designWith, type Outcome } from './design.ts';
+import { plasticShare } from './ribs.ts';
 import { sectionAt } from './settle.ts';
 import { actingSelfPf } from './working.ts';
 
@@ -27,10 +29,10 @@ export interface Ranked {
   readonly lossFactor: number;
 }
 
-/** Loss tangent of the former's material. */
-export function lossTangentOf(job: Job): number {
+/** Loss tangent of the former's material; of a ribbed one as much of it as plastic takes of its surface. */
+export function lossTangentOf(job: Job, former: Former): number {
   const found = findMaterial(job.former.material);
-  return found.ok ? found.material.lossTangent : 0;
+  return (found.ok ? found.material.lossTangent : 0) * plasticShare(former);
 }
 
 export function workingCoilOf(job: Job, design: Design): WorkingCoil {
@@ -52,7 +54,7 @@ export function fieldLoss(job: Job, design: Design): number {
     { length: count },
     (_, i) => taps[count === 1 ? taps.length - 1 : Math.round((i * (taps.length - 1)) / (count - 1))]!,
   );
-  const tangent = lossTangentOf(job);
+  const tangent = lossTangentOf(job, design.former);
   const rest = job.set?.switch ?? 'open';
   const losses = looked.map((tap) => 1 / atFrequency(coil, tap.turn, tap.workingKhz, rest, tangent).q);
   return losses.reduce((sum, loss) => sum + loss, 0) / losses.length;

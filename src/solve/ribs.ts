@@ -271,6 +271,23 @@ export function planRibs(job: RibJob, section: RibSection, load: Load, seat: num
   };
 }
 
+/**
+ * Share of the winding surface behind which plastic stands: ribs, and between them inner rings. 1 for a full body. An estimate of how
+ * much of the former's loss is left: rings lie deeper than a wall would.
+ */
+export function plasticShare({
+  ribs,
+  outsideDiameterMm,
+  footMm,
+}: Pick<Former, 'ribs' | 'outsideDiameterMm' | 'footMm'>): number {
+  if (ribs === null) return 1;
+  const { count, widthMm, innerRings, seatMm: seat } = ribs;
+  const across = Math.min(1, (count * widthMm) / (Math.PI * outsideDiameterMm));
+  const height = innerRings.crownMm + gableMm(innerRings.acrossMm, ribs) / 2;
+  const along = Math.min(1, (innerRings.topsMm.length * height) / (seat - footMm));
+  return round(across + (1 - across) * along, 4);
+}
+
 type Tried = { readonly give: Give; readonly volume: number };
 
 function better(a: Tried, b: Tried): boolean {

@@ -36,14 +36,15 @@ export const HOW: Record<MethodName, (loopMm: number) => string[]> = {
 export const STEP = {
   measure: (mm: string, effect: string) =>
     `Measure the former: ${mm} mm outside. 0.1 mm more is ${effect} % more inductance.`,
-  /** `gap` on the radius. */
-  glue: (sections: number, gap: string, length: string) =>
-    `Try the ${sections} sections of the former dry, former-1 lowest: notch over tongue, the steps of the seam together and the seam closed all round. Glue them with slow epoxy (glue gap ${gap} mm round the spigot), keep the holes free, let it cure, and file the seam flush. Length: ${length} mm.`,
+  /** `gap` on the radius; `climbs`: the seam has a step. */
+  glue: (sections: number, gap: string, climbs: boolean, length: string) =>
+    `Try the ${sections} sections of the former dry, former-1 lowest: notch over tongue${climbs ? ', the steps of the seam together' : ''}, the seam closed all round. Glue them with slow epoxy (glue gap ${gap} mm round the spigot), keep the holes free, let it cure, and file the seam flush. Length: ${length} mm.`,
   drill: (what: string) => `Wrap the template round the tube, printed side out, and drill ${what}. Take the burrs off.`,
   /** `size` when all holes are alike. */
   holes: (count: number, size: string | null, taps: string, rest: string) =>
     size === null ? `the ${count} holes (taps ${taps}, all others ${rest})` : `the ${count} holes (${size})`,
   mark: 'Wrap the template and mark the angle and place of every tap on the former.',
+  markRibs: 'Mark the notch of every tap: the upper ring numbers the ribs, heights are in the table.',
   set: (metres: string, low: string, high: string) =>
     `Have ${metres} m of wire on the spool. Set the drag to ${low} to ${high} N.`,
   spacer: (name: string) => `Have the spacer ready: ${name}, wound along beside the wire from start to finish.`,
@@ -56,6 +57,8 @@ export const STEP = {
   wind: (turns: string, to: string) => `Wind ${turns} turns, to ${to}`,
   turn: (turn: number) => `turn ${turn}`,
   turnAndAngle: (turn: number, angle: string) => `turn ${turn} and on to ${angle}°`,
+  /** `rib` as it stands on the upper ring. */
+  turnAndRib: (turn: number, rib: string) => `turn ${turn}, ${rib === 'S' ? 'at rib S' : `and on to rib ${rib}`}`,
   tap: (tap: number) => `make tap ${tap}.`,
   unitTap: (unit: number) => `make unit tap u${unit}.`,
   check: (mm: string) => `At turn 20 stop: 20 turns measure ${mm} mm edge to edge; press or ease them until they do.`,
