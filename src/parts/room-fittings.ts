@@ -99,7 +99,8 @@ export function postFaults(d: FormerDimensions): FaultParts[] {
         todo: `lower it to ${mm(Math.max(0, Math.floor((lowest - d.lineMm - d.surfaceFromMm) * 10) / 10))} over the foot, or raise the winding`,
       });
     for (const other of posts.slice(i + 1)) {
-      const apart = 2 * d.outsideR * Math.sin((angleBetween(post.angleDeg, other.angleDeg) * RAD) / 2);
+      const middleR = d.outsideR + post.reachMm / 2;
+      const apart = 2 * middleR * Math.sin((angleBetween(post.angleDeg, other.angleDeg) * RAD) / 2);
       const need = (post.widthMm + other.widthMm) / 2 + 2;
       if (apart < need)
         faults.push({

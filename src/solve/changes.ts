@@ -230,7 +230,9 @@ function otherPrint(job: Job): Change[] {
       changes.push({ text: `raise former.wall to ${wall} mm`, job: withFormer(job, { wallMm: wall }) });
     }
   }
-  if (job.former.mounting !== 'none')
+  // Who states screws is not told to leave them out: that would take more than one change.
+  const stated = 'former.screw' in job.given || job.former.screwCircleMm !== null;
+  if (job.former.mounting !== 'none' && !stated)
     changes.push({
       text: 'set former.mounting to none',
       job: withFormer(job, { mounting: 'none', screwMm: null, screwCircleMm: null }),

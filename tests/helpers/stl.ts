@@ -175,6 +175,20 @@ export function uprightHole(
   return fitHole(facets, [radiusMm * c, radiusMm * s, 0], [0, 0, 1], [-s, c, 0], [c, s, 0], 0.55 * diameterMm + 0.05);
 }
 
+/** A lying hole across the radius at an angle, its middle at a radius and a height. */
+export function tangentHole(
+  facets: readonly Facet[],
+  angleDeg: number,
+  radiusMm: number,
+  axialMm: number,
+  diameterMm: number,
+): FittedHole {
+  const c = Math.cos(angleDeg * RAD);
+  const s = Math.sin(angleDeg * RAD);
+  const near: Vec = [radiusMm * c, radiusMm * s, axialMm];
+  return fitHole(facets, near, [-s, c, 0], [c, s, 0], [0, 0, 1], 0.75 * diameterMm + 0.05);
+}
+
 export interface GrooveVertex {
   readonly angleDeg: number;
   readonly zMm: number;

@@ -60,6 +60,14 @@ const ONE_WIRE = ['0.5 mm enamel'];
 const ONE: Parts = { ...change(BAND, 'former', { 'outside-diameter': '76 mm' }), wire: ONE_WIRE };
 const SHORT: Parts = { ...RANGE, wire: ONE_WIRE };
 
+/** Two taps on a base: cheap to work out for every diameter that is tried. */
+const SMALL: Parts = {
+  want: { inductance: '5 uH to 12 uH', taps: 2 },
+  former: { 'outside-diameter': '40 mm', longest: '40 mm', mounting: 'base' },
+  wire: ONE_WIRE,
+  winding: { pitch: 'close' },
+};
+
 const IMPOSSIBLE: readonly [string, Parts, string, RegExp][] = [
   ['too short', change(RANGE, 'former', { longest: '40 mm' }), 'former.longest', /9 mm over the limit of 40 mm/],
   [
@@ -141,6 +149,48 @@ const IMPOSSIBLE: readonly [string, Parts, string, RegExp][] = [
     'winding.tap-method',
     /drawn in is not possible/,
   ],
+  [
+    'a hole of two wires wider than its place',
+    {
+      ...change(SHORT, 'former', { 'outside-diameter': '60 mm' }),
+      winding: { 'tap-method': 'drawn in', pitch: '1 mm' },
+    },
+    'winding.tap-method',
+    /needs a hole of 1\.5 mm for two wires, and at 1 mm its neighbours leave 1\.47 mm; 1\.02 mm of pitch would do/,
+  ],
+  [
+    'a pitch of fewer layers than a groove takes, too narrow for its wire',
+    { ...SHORT, winding: { pitch: '0.7 mm' } },
+    'winding.pitch',
+    /3\.5 layers of 0\.2 mm, a groove takes 4; for 0\.5 mm enamel it is 0\.76 mm wide .* 1 mm in whole layers/,
+  ],
+  [
+    'screws whose heads do not pass the rim',
+    { ...SMALL, former: { ...SMALL.former, 'screw-circle': '50 mm' } },
+    'former.screw-circle',
+    /circle of 50 mm: heads of 8\.8 mm pass the former, 48\.0 mm wide, from 60 mm on/,
+  ],
+  [
+    'a base wider than the bed',
+    {
+      ...SMALL,
+      former: { ...SMALL.former, 'screw-circle': '110 mm' },
+      printer: { bed: '120 x 130 mm' },
+    },
+    'printer.bed',
+    /the base is across 120\.8 mm, allowed 120\.0 mm/,
+  ],
+  [
+    'more lugs than the foot has room for posts',
+    {
+      want: { inductance: Array.from({ length: 9 }, (_, i) => `${i + 1} uH`) },
+      former: { 'outside-diameter': '8 mm', longest: '60 mm', flanges: false, mounting: 'none' },
+      wire: ['0.3 mm enamel'],
+      winding: { 'tap-method': 'lug' },
+    },
+    'want.taps',
+    /the posts of 8 lugs take [\d.]+ mm round the foot, there are [\d.]+ mm/,
+  ],
 ];
 
 /** The offer a little smaller, in the direction of the job as it was: none of these may do; null where there is no less. */
@@ -163,6 +213,9 @@ function lessThan(parts: Parts, offer: string): Parts | null {
     less(/(want.overlap to )([\d.]+)/, (percent) => percent + 0.3) ??
     less(/(former.wall to )([\d.]+)/, (mm) => mm - 0.03) ??
     less(/(bed to )([\d.]+)/, (mm) => mm - 1) ??
+    less(/(raise former.screw-circle to )([\d.]+)/, (mm) => mm - 0.2) ??
+    less(/(lower former.screw-circle to )([\d.]+)/, (mm) => mm + 0.2) ??
+    less(/(winding.pitch to )([\d.]+)/, (mm) => mm - 0.2) ??
     (job.want.kind === 'list' ? null : less(/(want.taps to )(\d+)/, (n) => n + (offer.startsWith('raise') ? -1 : 1)))
   );
 }

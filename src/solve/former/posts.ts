@@ -27,12 +27,14 @@ type PostSize = Pick<Post, 'widthMm' | 'reachMm' | 'heightMm' | 'eyeMm' | 'eyeRe
 
 /** Sizes that all posts share. `heightMm` is over the foot, `axialMm` that of the eye over the datum. */
 export function postSize(around: Around): PostSize {
-  const line = around.job.printer.lineMm;
+  const { lineMm: line, holeCompensationMm } = around.job.printer;
+  // The model's eye is wider by the compensation, and the lines are counted in the model.
+  const eyeHalf = (EYE_MM + Math.max(0, holeCompensationMm)) / 2;
   const eyeReachMm = INNER_MM + EYE_MM / 2;
   const eyeUpMm = UNDER_MM + EYE_MM / 2;
   return {
     widthMm: Math.max(2.4, Math.round(400 * line) / 100),
-    reachMm: Math.round((eyeReachMm + EYE_MM / 2 + 2 * line) * 100) / 100,
+    reachMm: Math.ceil((eyeReachMm + eyeHalf + 2 * line) * 100 - 1e-6) / 100,
     heightMm: Math.ceil((eyeUpMm + EYE_MM * Math.SQRT1_2 + UNDER_MM) * 2) / 2,
     eyeMm: EYE_MM,
     eyeReachMm,
