@@ -18,6 +18,15 @@ function codes(record: CoilRecord): string[] {
   return [];
 }
 
+function todo(record: CoilRecord): string {
+  try {
+    formerParts(record);
+  } catch (error) {
+    if (error instanceof Fault) return error.faults[0]!.todo;
+  }
+  throw new Error('not refused');
+}
+
 const base = sampleRecord();
 const former = (change: Partial<CoilRecord['former']>): CoilRecord => ({
   ...base,
@@ -28,6 +37,36 @@ const hole = (label: string, change: Partial<CoilRecord['holes'][number]>): Coil
   holes: base.holes.map((h) => (h.label === label ? { ...h, ...change } : h)),
 });
 const ear = base.former.ears[0]!;
+const foot = {
+  diameterMm: 92,
+  thicknessMm: 3,
+  holes: 4,
+  circleDiameterMm: 81,
+  holeDiameterMm: 4.4,
+  firstDeg: 45,
+};
+const post = {
+  label: '1',
+  tap: 1,
+  angleDeg: 40,
+  axialMm: 4.8,
+  widthMm: 2.4,
+  reachMm: 3.7,
+  heightMm: 4.5,
+  eyeMm: 1.4,
+  eyeReachMm: 1.9,
+};
+const ridges = {
+  heightMm: 0.27,
+  widthMm: 0.9,
+  start: { fromTurn: 0.1, toTurn: 0.9, footMm: -1.17 },
+  finish: { fromTurn: 61.8, toTurn: 62.6, footMm: 0.11 },
+};
+const even = sampleRecord({ surface: 'smooth' });
+const smooth = (change: CoilRecord['former']['ridges']): CoilRecord => ({
+  ...even,
+  former: { ...even.former, ridges: change },
+});
 
 describe('a former that cannot be is refused by name', () => {
   test.each<[string, CoilRecord]>([
@@ -44,12 +83,60 @@ describe('a former that cannot be is refused by name', () => {
     ['former-ear-no-room', former({ ears: [{ ...ear, centreRadiusMm: 33 }] })],
     ['former-ear-hides-datum', former({ ears: [{ ...ear, angleDeg: 5 }] })],
     ['former-numbers-no-room', former({ numberHeightMm: 1.5 })],
+    ['former-base-no-room', former({ ears: [], base: { ...foot, circleDiameterMm: 70 } })],
+    ['former-base-small', former({ ears: [], base: { ...foot, diameterMm: 84 } })],
+    ['former-base-small', former({ ears: [], base: { ...foot, thicknessMm: 1 } })],
+    ['former-base-holes', former({ ears: [], base: { ...foot, holes: 40 } })],
+    ['former-base-holes', former({ ears: [], base: { ...foot, holes: 1 } })],
+    ['former-base-hides-datum', former({ ears: [], base: { ...foot, firstDeg: 0 } })],
+    ['former-post-no-room', former({ posts: [{ ...post, eyeMm: 2.6 }] })],
+    ['former-post-no-room', former({ posts: [{ ...post, axialMm: 6.6 }] })],
+    ['former-post-tall', former({ posts: [{ ...post, heightMm: 6 }] })],
+    ['former-posts-close', former({ posts: [post, { ...post, label: '2', angleDeg: 44 }] })],
+    ['former-ridge-no-room', former({ ridges })],
+    ['former-ridge-no-room', smooth({ ...ridges, start: { fromTurn: 0.1, toTurn: 1.2, footMm: -1 } })],
+    ['former-ridge-no-room', smooth({ ...ridges, finish: { fromTurn: 70, toTurn: 70.8, footMm: 0.1 } })],
+    ['former-ridge-steep', smooth({ ...ridges, widthMm: 0.27 })],
   ])('%s', (code, record) => {
     expect(codes(record)).toContain(code);
   });
 
-  test('the sample itself is not', () => {
+  test('the sample itself is not, nor a base, a post and ridges with the values that are named', () => {
     expect(codes(base)).toEqual([]);
+    expect(codes(former({ ears: [], base: foot, posts: [post] }))).toEqual([]);
+    expect(codes(smooth(ridges))).toEqual([]);
+  });
+
+  test.each<[CoilRecord, RegExp, (value: number) => CoilRecord]>([
+    [
+      former({ boreDiameterMm: 58 }),
+      /wall ([\d.]+) mm or thicker/,
+      (wall) => former({ boreDiameterMm: 60 - 2 * wall - 1e-6 }),
+    ],
+    [
+      former({ ears: [], base: { ...foot, circleDiameterMm: 70 } }),
+      /circle of ([\d.]+) mm or more/,
+      (circleDiameterMm) => former({ ears: [], base: { ...foot, circleDiameterMm } }),
+    ],
+    [
+      former({ ears: [], base: { ...foot, diameterMm: 84 } }),
+      /make it ([\d.]+) mm wide/,
+      (diameterMm) => former({ ears: [], base: { ...foot, diameterMm } }),
+    ],
+    [
+      former({ ears: [], base: { ...foot, holes: 40 } }),
+      /use 2 to (\d+)/,
+      (holes) => former({ ears: [], base: { ...foot, holes } }),
+    ],
+    [
+      former({ posts: [{ ...post, heightMm: 6 }] }),
+      /lower it to ([\d.]+) mm/,
+      (heightMm) => former({ posts: [{ ...post, heightMm }] }),
+    ],
+    [smooth({ ...ridges, widthMm: 0.27 }), /make it ([\d.]+) mm wide/, (widthMm) => smooth({ ...ridges, widthMm })],
+  ])('the nearest value that is named is taken (%#)', (record, named, take) => {
+    const [, value] = named.exec(todo(record))!;
+    expect(codes(take(Number(value)))).toEqual([]);
   });
 
   test('a groove of one turn', () => {
