@@ -9,10 +9,12 @@ import type { View } from '../views.ts';
 import { developed } from './former-developed.ts';
 import { elevation } from './former-elevation.ts';
 import { endView } from './former-end-view.ts';
+import { ribbedViews } from './ribbed-views.ts';
 
 /** The views by part; none where the former is not printed in one full piece. */
 export function formerViews(record: PartsRecord): Record<string, View[]> {
   const { former } = record;
+  if (former.kind === 'printed' && former.body === 'ribbed') return ribbedViews(record);
   if (former.kind !== 'printed' || former.body !== 'full' || former.joints.length > 0) return {};
   return { former: wholeFormerViews(record) };
 }
