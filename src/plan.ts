@@ -10,7 +10,7 @@
  * search runs, and works while the pages are written.
  */
 import type { Job } from './job/job.ts';
-import { startKernel } from './kernel/client.ts';
+import { type PicturedPart, startKernel } from './kernel/client.ts';
 import { bedFiles, partFiles } from './kernel/files.ts';
 import { netlistFile } from './netlist/file.ts';
 import { partsOf } from './parts/parts.ts';
@@ -43,6 +43,16 @@ async function surfaceFiles(record: CoilRecord): Promise<OutputFile[]> {
   ];
 }
 
+/** The sheet of the printed parts; none when nothing is printed. */
+async function partsSheetFile(record: CoilRecord, made: readonly PicturedPart[]): Promise<OutputFile[]> {
+  if (made.length === 0) return [];
+  const { partsSheet } = await import('./sheets/parts-sheet.ts');
+  const bytes = await partsSheet(record, new Map(made.map(({ part, pictures }) => [part, pictures])));
+  return [
+    { path: 'parts-sheet.pdf', kind: 'pdf', bytes, note: 'every printed part, dimensioned, and how to print it' },
+  ];
+}
+
 /** The record and every file of the output folder. */
 export async function planJob(job: Job, options: { version: string }): Promise<Output<CoilRecord>> {
   const kernel = startKernel();
@@ -61,12 +71,15 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
     const { rangeSheet } = await import('./sheets/range-sheet.ts');
     const sheet = await windingSheet(record);
     const ranges = await rangeSheet(record);
+    const made = await making;
+    const parts = await partsSheetFile(record, made);
     const files: OutputFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
       ...(await surfaceFiles(record)),
       { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
       netlistFile(record),
-      ...partFiles(record, await making),
+      ...parts,
+      ...partFiles(record, made),
       ...(await beds),
     ];
     return listed(record, files);

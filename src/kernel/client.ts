@@ -1,14 +1,14 @@
 /** The kernel as the pipeline sees it: threads started early, orders handed to whichever is free, closed at the end. */
 import { Worker } from 'node:worker_threads';
 import type { Solid } from '../parts/solid.ts';
-import type { BedFile, BedOrder, PartFile } from './make.ts';
+import type { BedFile, BedOrder, PicturedPart } from './make.ts';
 import type { Order, Reply, Request } from './message.ts';
 
-export type { BedFile, BedOrder, PartFile, PartReport } from './make.ts';
+export type { BedFile, BedOrder, PartFile, PartReport, PicturedPart } from './make.ts';
 
 export interface Kernel {
   /** @throws Error with one line when a part did not come out as described or a thread died */
-  part(solid: Solid, scale: readonly number[]): Promise<PartFile>;
+  part(solid: Solid, scale: readonly number[]): Promise<PicturedPart>;
   /** The meshes of the order are handed over: they are empty afterwards. */
   bed(order: BedOrder): Promise<BedFile>;
   close(): Promise<void>;

@@ -6,10 +6,10 @@ import type { Kernel, PartFile } from './client.ts';
 
 export function partFiles(record: CoilRecord, made: readonly PartFile[]): OutputFile[] {
   return made.map(({ part, path, kind, bytes }) => {
-    const { sizeMm, massG, material, quantity, use } = entryOf(record, part);
+    const { name, sizeMm, massG, material, quantity } = entryOf(record, part);
     const size = sizeMm.map((mm) => mm.toFixed(1)).join(' x ');
     const many = quantity > 1 ? `print ${quantity}; ` : '';
-    return { path, kind, bytes, note: `${many}${size} mm, ${massG} g of ${material}: ${use}` };
+    return { path, kind, bytes, note: `${name}: ${many}${size} mm, ${massG} g of ${material}` };
   });
 }
 

@@ -13,15 +13,10 @@ import { buildSolid } from './build.ts';
 import { checkBytes } from './check.ts';
 import { loadKernel } from './load.ts';
 import type { TriangleMesh } from './mesh.ts';
+import { PICTURE_PX, PICTURE_VIEWS, type ShadedPicture, shadedPicture } from './shade.ts';
 import { stlBytes } from './stl.ts';
 import { type PrintBed, threemfBytes } from './threemf.ts';
 import { canonical, weld } from './weld.ts';
-
-export interface Picture {
-  readonly png: Uint8Array<ArrayBuffer>;
-  readonly widthPx: number;
-  readonly heightPx: number;
-}
 
 export interface PartFile {
   readonly part: string;
@@ -30,8 +25,12 @@ export interface PartFile {
   readonly bytes: Uint8Array<ArrayBuffer>;
   /** The same triangles by index, for a bed. */
   readonly mesh: TriangleMesh;
-  readonly pictures: readonly Picture[];
   readonly report: PartReport;
+}
+
+/** A part with its shaded pictures, for the parts sheet. */
+export interface PicturedPart extends PartFile {
+  readonly pictures: readonly ShadedPicture[];
 }
 
 /** Measured on the bytes. */
@@ -70,7 +69,11 @@ export async function makePart(solid: Solid, scale: readonly number[] = [1, 1, 1
   const bytes = stlBytes(mesh);
   const { part } = solid;
   const report = checkBytes(kernel, part, bytes, scaledExpectation(solid.expected, scale));
-  return { part, path: `${part}.stl`, kind: 'stl', bytes, mesh, pictures: [], report };
+  return { part, path: `${part}.stl`, kind: 'stl', bytes, mesh, report };
+}
+
+export function pictured(part: PartFile): PicturedPart {
+  return { ...part, pictures: PICTURE_VIEWS.map((view) => shadedPicture(part.mesh, view, PICTURE_PX, PICTURE_PX)) };
 }
 
 export function makeBed({ path, ...bed }: BedOrder): BedFile {

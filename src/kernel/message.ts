@@ -1,6 +1,6 @@
 /** What client and worker say to one another. */
 import type { Solid } from '../parts/solid.ts';
-import type { BedFile, BedOrder, PartFile } from './make.ts';
+import type { BedFile, BedOrder, PicturedPart } from './make.ts';
 
 export type Order =
   | { readonly kind: 'part'; readonly solid: Solid; readonly scale: readonly number[] }
@@ -12,6 +12,6 @@ export interface Request {
 }
 
 export type Reply =
-  | { readonly id: number; readonly kind: 'part'; readonly part: PartFile }
+  | { readonly id: number; readonly kind: 'part'; readonly part: PicturedPart }
   | { readonly id: number; readonly kind: 'bed'; readonly bed: BedFile }
   | { readonly id: number; readonly kind: 'error'; readonly text: string };

@@ -23,10 +23,13 @@ export interface ShadedPicture {
   readonly heightPx: number;
 }
 
-/** Two sides of a part: the start hole of a former is in front in the first, its back in the second. */
+/**
+ * Two sides of a part. In the first, what is lettered along x reads from left to right, and the start hole of a former is in
+ * front on the right.
+ */
 export const PICTURE_VIEWS: readonly ViewAngle[] = [
-  { yawDeg: 25, pitchDeg: 30 },
-  { yawDeg: 205, pitchDeg: 30 },
+  { yawDeg: -55, pitchDeg: 32 },
+  { yawDeg: 125, pitchDeg: 32 },
 ];
 /** Largest picture on a parts sheet, either way: 56 mm at 250 dots to the inch. */
 export const PICTURE_PX = 550;

@@ -1,7 +1,7 @@
 /** Thread that makes parts and beds. It loads the kernel at once, so that it is warm when the first order comes. */
 import { parentPort } from 'node:worker_threads';
 import { loadKernel } from './load.ts';
-import { makeBed, makePart } from './make.ts';
+import { makeBed, makePart, pictured } from './make.ts';
 import type { Reply, Request } from './message.ts';
 
 const port = parentPort;
@@ -18,7 +18,7 @@ port.on('message', async (request: Request) => {
 async function answer({ id, order }: Request): Promise<Reply> {
   try {
     if (order.kind === 'bed') return { id, kind: 'bed', bed: makeBed(order.bed) };
-    return { id, kind: 'part', part: await makePart(order.solid, order.scale) };
+    return { id, kind: 'part', part: pictured(await makePart(order.solid, order.scale)) };
   } catch (error) {
     return { id, kind: 'error', text: error instanceof Error ? error.message : String(error) };
   }
