@@ -183,13 +183,13 @@ const IMPOSSIBLE: readonly [string, Parts, string, RegExp][] = [
   [
     'more lugs than the foot has room for posts',
     {
-      want: { inductance: Array.from({ length: 9 }, (_, i) => `${i + 1} uH`) },
-      former: { 'outside-diameter': '8 mm', longest: '60 mm', flanges: false, mounting: 'none' },
-      wire: ['0.3 mm enamel'],
+      want: { inductance: Array.from({ length: 10 }, (_, i) => `${i + 1} uH`) },
+      former: { 'outside-diameter': '10 mm', longest: '60 mm', flanges: false, mounting: 'none' },
+      wire: ['0.315 mm enamel'],
       winding: { 'tap-method': 'lug' },
     },
     'want.taps',
-    /the posts of 8 lugs take [\d.]+ mm round the foot, there are [\d.]+ mm/,
+    /the posts of 9 lugs take [\d.]+ mm round the foot, there are [\d.]+ mm/,
   ],
 ];
 
