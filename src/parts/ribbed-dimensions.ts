@@ -13,6 +13,8 @@ export interface RibbedDimensions extends FormerDimensions {
   /** From the axis to the inner rings' flats. */
   readonly ringOuterA: number;
   readonly ringInnerA: number;
+  /** Radius of the inner rings' inner corners. */
+  readonly ringCornerR: number;
   /** Radius of the upper end ring where it begins. */
   readonly seatR: number;
   readonly notch: Notch;
@@ -49,6 +51,7 @@ export function ribbedDimensions(record: PartsRecord): RibbedDimensions {
     ribToMm: ribs.seatMm + former.outsideR - seatR + INTO_UPPER_MM,
     ringOuterA: ribs.innerRings.acrossMm / 2,
     ringInnerA: ribs.innerRings.insideMm / 2,
+    ringCornerR: ribs.innerRings.insideMm / 2 / Math.cos(Math.PI / ribs.count),
     seatR,
     notch: { depthMm, floorMm, openMm: floorMm + 2 * depthMm },
     notchesMm: notchesOf(former, ribs.count, record.windings[0]!.turns),

@@ -13,6 +13,8 @@ const LEAST_LAND_MM = 0.05;
 const ROUNDING_MM = 0.02;
 /** Between a notch's floor and the inner rings, between inner rings. */
 const LEAST_APART_MM = 0.4;
+/** Of faces behind one another, so that none coincide. */
+const LEAST_BEHIND_MM = 0.1;
 /** Least span of an inner ring's underside, so that it is a window. */
 const LEAST_GABLE_MM = 0.5;
 
@@ -118,18 +120,19 @@ function ringFaults(d: RibbedDimensions): FaultParts[] {
       `make them ${mm(up(2 * narrow))} across inside`,
     );
   }
-  const corner = d.ringInnerA / Math.cos(half);
+  const corner = d.ringCornerR;
   if (d.seatR - corner < (LINES_BESIDE * d.lineMm) / 2 || corner > d.seatR || d.seatR > d.ringOuterA - 0.2)
     fault(
       `inner rings ${mm(2 * d.ringInnerA)} to ${mm(2 * d.ringOuterA)} across under an upper ring that begins ${mm(2 * d.seatR)} wide`,
       'an upper ring that begins inside the flats of the inner ring and outside its inner corners',
       `make the inner rings ${mm(down(2 * (d.seatR - (LINES_BESIDE * d.lineMm) / 2) * Math.cos(half)))} across inside, and let the upper ring begin ${mm(down(2 * (d.ringOuterA - 0.2)))} wide`,
     );
-  if (corner < d.ribInnerR + 0.1 || d.boreR > d.ribInnerR - 0.1)
+  const behind = d.ribInnerR + (d.ribs.widthMm / 2) * Math.tan(half);
+  if (corner < behind + LEAST_BEHIND_MM || d.boreR > d.ribInnerR - LEAST_BEHIND_MM)
     fault(
       `ribs whose inner faces lie at a radius of ${mm(d.ribInnerR)}, a bore of ${mm(d.boreR)} and inner corners at ${mm(corner)}`,
-      'ribs behind the bore, and the corners of the inner rings behind the inner faces of the ribs',
-      `make the ribs ${mm(down(d.outsideR - d.boreR - 0.1))} deep and the inner rings ${mm(up(2 * (d.ribInnerR + 0.1) * Math.cos(half)))} across inside`,
+      'ribs behind the bore, and inner rings that do not stand out beside the inner faces of the ribs',
+      `make the ribs ${mm(down(d.outsideR - d.boreR - LEAST_BEHIND_MM))} deep at most and the inner rings ${mm(up(2 * (behind + LEAST_BEHIND_MM) * Math.cos(half)))} across inside`,
     );
   let below = d.surfaceFromMm;
   for (const [i, top] of topsMm.entries()) {

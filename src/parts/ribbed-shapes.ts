@@ -6,8 +6,11 @@ import type { Loft, Point2, Point3, Prism, ProfileRow, Skin } from './solid.ts';
 const RAD = Math.PI / 180;
 /** How far the slopes under an inner ring run on inside the ribs, so that no edge lies on a rib's face. */
 const INTO_RIB_MM = 0.2;
-/** Slope inside the upper end ring's lower edge, over the corners of the inner ring that carries it. */
-export const LEAD_MM = 0.7;
+/** How far the slope inside the upper end ring reaches beyond the corners of the inner ring that carries it. */
+const OVER_CORNER_MM = 0.2;
+
+/** Height and width of that slope. */
+export const leadMm = (d: RibbedDimensions): number => d.ringCornerR - d.boreR + OVER_CORNER_MM;
 
 /** Lower and upper end ring. */
 export function endRings(d: RibbedDimensions): Skin[] {
@@ -31,7 +34,7 @@ export function endRings(d: RibbedDimensions): Skin[] {
     ),
     skin(
       [row(d.seatR, seat), row(topR, rim), row(topR, lengthMm)],
-      [row(boreR, lengthMm), row(boreR, seat + LEAD_MM), row(boreR + LEAD_MM, seat)],
+      [row(boreR, lengthMm), row(boreR, seat + leadMm(d)), row(boreR + leadMm(d), seat)],
     ),
   ];
 }

@@ -4,7 +4,7 @@
  */
 
 import { gableMm, type RibbedDimensions, ringFootMm } from './ribbed-dimensions.ts';
-import { LEAD_MM, ribOutline } from './ribbed-shapes.ts';
+import { leadMm, ribOutline } from './ribbed-shapes.ts';
 import { areaOf } from './shapes.ts';
 import type { Engraving, Skin } from './solid.ts';
 import { baseHolesVolume, datumVolume, earsVolume, engravedVolume, turned } from './volume.ts';
@@ -44,16 +44,13 @@ function inUpper(d: RibbedDimensions): number {
   let area = 0;
   for (let i = 0; i < STRIPS; i++) {
     const up = (height * (i + 0.5)) / STRIPS;
-    const inside = Math.max(d.ribInnerR, d.boreR + Math.max(0, LEAD_MM - up));
+    const inside = Math.max(d.ribInnerR, d.boreR + Math.max(0, leadMm(d) - up));
     area += (Math.max(0, Math.min(d.outsideR, d.seatR + up) - inside) * height) / STRIPS;
   }
   return area;
 }
 
-/**
- * What lies between the ribs: at a distance a from the axis a strip 2 g(a) wide, less the gable under it. And what of its inner
- * corners stands out inside the ribs' flat inner faces.
- */
+/** What lies between the ribs: at a distance a from the axis a strip 2 g(a) wide, less the gable under it. */
 function innerRingVolume(d: RibbedDimensions, topMm: number): number {
   const height = topMm - ringFootMm(d, topMm);
   const area = (flat: number) => {
@@ -61,11 +58,8 @@ function innerRingVolume(d: RibbedDimensions, topMm: number): number {
     return 2 * g * height - g * g;
   };
   const { ringInnerA: i, ringOuterA: o } = d;
-  const slope = Math.tan(Math.PI / d.ribs.count);
-  const corner = i / Math.cos(Math.PI / d.ribs.count);
-  const out = Math.max(0, d.ribs.widthMm / 2 - (corner - d.ribInnerR) / slope) ** 2 * slope;
   // Simpson, exact for a square.
-  return d.ribs.count * (((o - i) * (area(i) + 4 * area((i + o) / 2) + area(o))) / 6 + out * height);
+  return (d.ribs.count * (o - i) * (area(i) + 4 * area((i + o) / 2) + area(o))) / 6;
 }
 
 /** The last inner ring's part inside the upper end ring, between the ribs. */
@@ -73,7 +67,7 @@ function letIn(d: RibbedDimensions): number {
   const { innerRings, seatMm, count, widthMm } = d.ribs;
   const height = innerRings.topsMm[innerRings.topsMm.length - 1]! - seatMm;
   // Both edges of the upper end ring slope at 45 degrees.
-  const inner = d.boreR + LEAD_MM - height / 2;
+  const inner = d.boreR + leadMm(d) - height / 2;
   const outer = d.seatR + height / 2;
   return height * (Math.PI * (outer ** 2 - inner ** 2) - count * widthMm * (outer - inner));
 }

@@ -37,7 +37,7 @@ const LINES_BESIDE = 4;
 const PAIR_MM = 1.2;
 /** From the floor of a notch to the inner rings, so that neither wire nor loop touches them. */
 export const FREE_MM = 0.6;
-/** The ribs' inner faces stand this far behind the bore of the end rings, so that it is round; the inner rings' corners twice as far. */
+/** The ribs' inner faces stand this far behind the bore of the end rings, so that it is round; and inner rings behind those. */
 export const BEHIND_MM = 0.25;
 /** How far the upper end ring's foot lies inside the inner ring that carries it, and how far it is let into it. */
 export const SEAT_MM = 0.3;
@@ -182,7 +182,7 @@ export function giveOf(section: Omit<RibSection, 'bendMm'>, depthMm: number, spa
   const beam = depthMm - overallMm / 2;
   const bending = (q * spanMm ** 4) / (384 * e * ((widthMm * beam ** 3) / 12));
   const shear = (q * spanMm ** 2) / (8 * SHEAR * (e / (2 * (1 + POISSON))) * widthMm * beam);
-  const { outerMm, innerMm } = ringFlats(outsideMm, overallMm, count, depthMm);
+  const { outerMm, innerMm } = ringFlats(section, outsideMm, overallMm, depthMm);
   const gable = gableMm((outerMm + innerMm) / 2, section);
   // The ring is as high as its crown midway and higher by the gable at the ribs; what gives is the mean of 1/height.
   const height = gable / Math.log(1 + gable / CROWN_MM);
@@ -193,9 +193,14 @@ export function giveOf(section: Omit<RibSection, 'bendMm'>, depthMm: number, spa
   return { ribMm: bending + shear, ring, strain: (2 * (bending + shear)) / outsideMm + ring };
 }
 
-function ringFlats(outsideMm: number, overallMm: number, count: number, depthMm: number) {
+/** An inner ring's corners lie so far behind the ribs' inner faces that nothing of it stands out beside them. */
+const cornerBehindMm = ({ count, widthMm }: Pick<RibSection, 'count' | 'widthMm'>): number =>
+  BEHIND_MM + (widthMm / 2) * Math.tan(Math.PI / count);
+
+function ringFlats(section: Omit<RibSection, 'bendMm'>, outsideMm: number, overallMm: number, depthMm: number) {
+  const { count } = section;
   const outerMm = ringAcrossMm(outsideMm, overallMm, count);
-  const innerMm = (outsideMm - 2 * depthMm + 2 * BEHIND_MM) * Math.cos(Math.PI / count);
+  const innerMm = (outsideMm - 2 * depthMm + 2 * cornerBehindMm(section)) * Math.cos(Math.PI / count);
   return { outerMm, innerMm };
 }
 
@@ -209,7 +214,7 @@ export function ribDepths(
   const { count, widthMm } = section;
   const beside = LINES_BESIDE * lineMm;
   const flat = outsideMm / 2 - ringAcrossMm(outsideMm, overallMm, count) / 2;
-  const least = Math.max(overallMm / 2 + beside, flat + BEHIND_MM + beside + SEAT_MM);
+  const least = Math.max(overallMm / 2 + beside, flat + cornerBehindMm(section) + beside + SEAT_MM);
   // At the bore the ribs must leave a gable of a millimetre between them.
   const narrowest = (widthMm / 2 + 1) / Math.sin(Math.PI / count);
   const most = Math.min(DEEPEST * (outsideMm / 2), outsideMm / 2 - narrowest);
@@ -242,7 +247,7 @@ export function planRibs(job: RibJob, section: RibSection, load: Load, seat: num
   for (const depth of depths)
     for (let rings = 0; rings <= mostRings; rings++) {
       const give = giveOf(section, depth, (seat - END_MM) / (rings + 1), load);
-      const { outerMm, innerMm } = ringFlats(outsideMm, overallMm, count, depth);
+      const { outerMm, innerMm } = ringFlats(section, outsideMm, overallMm, depth);
       const ring = (count * gable * (2 * CROWN_MM + gable) * (outerMm - innerMm)) / 2;
       const volume = count * widthMm * depth * seat + (rings + 1) * ring;
       const one = { depth, rings, give, volume };
@@ -250,7 +255,7 @@ export function planRibs(job: RibJob, section: RibSection, load: Load, seat: num
     }
   if (best === null) return null;
   const { depth, rings, give } = best;
-  const { outerMm, innerMm } = ringFlats(outsideMm, overallMm, count, depth);
+  const { outerMm, innerMm } = ringFlats(section, outsideMm, overallMm, depth);
   const tops = Array.from({ length: rings }, (_, i) => END_MM + ((i + 1) * (seat - END_MM)) / (rings + 1));
   return {
     give,

@@ -12,6 +12,7 @@ export interface RibbedOptions extends Omit<SampleOptions, 'surface' | 'kind' | 
   /** Inner rings between the end rings. */
   readonly rings?: number;
   readonly rimMm?: number;
+  readonly segments?: number;
 }
 
 const round = (x: number, digits = 3) => Number(x.toFixed(digits));
@@ -61,7 +62,7 @@ export function ribbedRecord(options: RibbedOptions = {}): CoilRecord {
     ),
   ];
   const across = (outside - winding.wire.overallMm - 1.2) * Math.cos(half);
-  const inside = (outside - 2 * depth + 0.5) * Math.cos(half);
+  const inside = (outside - 2 * depth + 0.5 + width * Math.tan(half)) * Math.cos(half);
   const gable = (across / 2) * Math.tan(half) - width / 2 / Math.cos(half);
   const rings = options.rings ?? 1;
   const high = Math.max(...holes.map((one) => one.axialMm)) + 2;
@@ -74,6 +75,7 @@ export function ribbedRecord(options: RibbedOptions = {}): CoilRecord {
     former: {
       ...record.former,
       body: 'ribbed',
+      segments: options.segments ?? 144,
       boreDiameterMm: bore,
       wallMm: round((outside - bore) / 2),
       lengthMm: length,
