@@ -45,8 +45,9 @@ const KEY_STEP = 2;
 const FLAT_STEP_MM = 0.5;
 /** Least plain bore under a spigot and between a collar and the next spigot. */
 const APART_MM = 2;
-/** Sections are made alike to this. */
-const ALIKE_MM = 0.25;
+/** Heights of sections are tried at this distance, but no more than so many. */
+const ALIKE_MM = 0.5;
+const MOST_HEIGHTS = 100;
 
 /** How good a place is. */
 const FLAT = 0;
@@ -71,11 +72,13 @@ export function splitOf(it: Splitting): Split {
   if (j.ringR < j.boreR / 2 + j.marginMm)
     return { none: `a bore of ${former.boreDiameterMm} mm is too narrow for a spigot` };
   const places = placesOf(it, j);
-  const grade = graded(it, j, places);
-  for (let sections = 2; sections <= MOST_SECTIONS; sections++)
+  const flat = places.filter(({ turn }) => turn === null);
+  const gradeAt = grading(it, j);
+  const fewest = Math.ceil(lengthMm / printer.heightMm - 1e-9);
+  for (let sections = fewest; sections <= MOST_SECTIONS; sections++)
     for (const worst of [FLAT, CLEAR, BORED] as const) {
-      const usable = (i: number) => grade(i) <= worst;
-      const seams = evenly(former.lengthMm, printer.heightMm, sections, places, usable, j);
+      const usable = (place: Place) => gradeAt(place) <= worst;
+      const seams = evenly(lengthMm, printer.heightMm, sections, worst === FLAT ? flat : places, usable, j);
       if (seams !== null) return { joints: seams.map((seam) => ({ ...rounded(seam), glueGapMm: round(glueGapMm) })) };
     }
   return { none: 'no seam between the turns is clear of the holes' };
@@ -131,15 +134,15 @@ function placesOf(it: Splitting, j: Joining): Place[] {
   return inside.sort((a, b) => a.seamMm - b.seamMm);
 }
 
-/** The grade of a place, looked up once; infinite where it meets a hole. */
-function graded(it: Splitting, j: Joining, places: readonly Place[]): (i: number) => number {
-  const known = new Map<number, number>();
+/** Gives a place its grade, worked out once; infinite where it meets a hole. */
+function grading(it: Splitting, j: Joining): (place: Place) => number {
+  const known = new Map<Place, number>();
   const obstacles = obstaclesOf(it);
-  return (i) => {
-    let grade = known.get(i);
+  return (place) => {
+    let grade = known.get(place);
     if (grade === undefined) {
-      grade = gradeOf(it, j, places[i]!, obstacles);
-      known.set(i, grade);
+      grade = gradeOf(it, j, place, obstacles);
+      known.set(place, grade);
     }
     return grade;
   };
@@ -194,29 +197,25 @@ function gradeOf(it: Splitting, j: Joining, place: Place, obstacles: readonly Ob
 
 const NONE = Number.POSITIVE_INFINITY;
 
-/** Seams that make `sections` sections, the tallest as low as can be; null when one would be taller than `mostMm`. */
+/**
+ * Seams that make `sections` sections, the tallest as low as can be; null when one would be taller than `mostMm`. Every
+ * height is tried: where a taller section finds no seam above it, a lower one may.
+ */
 function evenly(
   lengthMm: number,
   mostMm: number,
   sections: number,
   places: readonly Place[],
-  usable: (i: number) => boolean,
+  usable: (place: Place) => boolean,
   j: Joining,
 ): Place[] | null {
-  const within = (tallest: number) => packed(lengthMm, tallest, sections, places, usable, j);
-  let best = within(mostMm);
-  let low = lengthMm / sections;
-  let high = mostMm;
-  while (best !== null && high - low > ALIKE_MM) {
-    const middle = (low + high) / 2;
-    const found = within(middle);
-    if (found === null) low = middle;
-    else {
-      best = found;
-      high = middle;
-    }
+  const least = lengthMm / sections;
+  const steps = Math.max(1, Math.min(MOST_HEIGHTS, Math.ceil((mostMm - least) / ALIKE_MM)));
+  for (let k = 1; k <= steps; k++) {
+    const seams = packed(lengthMm, least + ((mostMm - least) * k) / steps, sections, places, usable, j);
+    if (seams !== null) return seams;
   }
-  return best;
+  return null;
 }
 
 /** From below every section as tall as `tallestMm` and the places allow; null when that takes more than `sections`. */
@@ -225,7 +224,7 @@ function packed(
   tallestMm: number,
   sections: number,
   places: readonly Place[],
-  usable: (i: number) => boolean,
+  usable: (place: Place) => boolean,
   j: Joining,
 ): Place[] | null {
   const seams: Place[] = [];
@@ -234,7 +233,11 @@ function packed(
   while (lengthMm - bottom > tallestMm) {
     if (seams.length + 1 >= sections) return null;
     let i = highest(places, bottom + tallestMm);
-    while (i >= 0 && spigotEndMm(places[i]!, j) >= clearFrom && (topOf(places[i]!) > bottom + tallestMm || !usable(i)))
+    while (
+      i >= 0 &&
+      spigotEndMm(places[i]!, j) >= clearFrom &&
+      (topOf(places[i]!) > bottom + tallestMm || !usable(places[i]!))
+    )
       i--;
     const seam = places[i];
     if (seam === undefined || spigotEndMm(seam, j) < clearFrom) return null;
