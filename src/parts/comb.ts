@@ -3,7 +3,7 @@
  * laid and doped, and two notches on the other edge gauge the length of the first turns.
  *
  *     ___|  go  |___| no go |___      the winding goes into GO and not into NO GO
- *    |   20 TURNS 15.93 MM      |
+ *    |   20 TURNS 15.93         |
  *    |_  _  _  _  _  _  _  _  __|
  *      || || || || || || || ||        teeth, every turn or every second, fifth or tenth
  */
@@ -18,8 +18,10 @@ import { cutMm3, type Words, wordsCut } from './words.ts';
 const MOST_TURNS = 20;
 /** Of the space of a tooth: a wire at its greatest still enters. */
 const PLAY_MM = 0.1;
-/** A tooth too wide for the gap must still sink this far between two round wires, or it finds no place. */
-const SINK_MM = 0.08;
+/** A tooth too wide for the gap must still sink this far between two round wires, or a hand feels no place for it. */
+const SINK_MM = 0.06;
+/** Chords of the round nose of such a tooth: the end of a printed line is round in any case. */
+const NOSE_CHORDS = 8;
 /** Turns from one tooth to the next. */
 const EVERY = [1, 2, 5, 10] as const;
 /** Go and no-go stand this far from the nominal length: what 1 % of length is worth in inductance is about half of that. */
@@ -73,7 +75,7 @@ export function combDimensions({ windings, printer }: PartsRecord): CombDimensio
   const line = printer.lineMm;
   const between = pitchMm - wire.overallHighMm - PLAY_MM >= line;
   const toothMm = between ? pitchMm - wire.overallHighMm - PLAY_MM : line;
-  requireValley(pitchMm, toothMm, wire.overallMm, between);
+  if (!between) requireValley(pitchMm, toothMm, wire.overallMm);
   // The space from tooth to tooth is printed as well.
   const fits = EVERY.filter((every) => every * pitchMm - toothMm >= line && every < gaugedTurns);
   const everyTurns = fits[0] ?? gaugedTurns - 1;
@@ -89,7 +91,7 @@ export function combDimensions({ windings, printer }: PartsRecord): CombDimensio
 
   const texts = [
     `PITCH ${figure(pitchMm, 3)} MM`,
-    `${gaugedTurns} TURNS ${figure(gaugedMm, 2)} MM`,
+    `${gaugedTurns} TURNS ${figure(gaugedMm, 2)}`,
     ...(everyTurns > 1 ? [`A TOOTH A ${everyTurns} TURNS`] : []),
   ];
   const notch = (mm: number) => Math.max(mm, textWidthMm('NO GO', TEXT_MM) + 1);
@@ -132,26 +134,37 @@ export function combDimensions({ windings, printer }: PartsRecord): CombDimensio
 
 const figure = (mm: number, digits: number) => `${Number(mm.toFixed(digits))}`;
 
-/** How far a blunt tip sinks between two round wires side by side. */
-function sinkMm(pitchMm: number, tipMm: number, overallMm: number): number {
+/**
+ * A nose of radius q that lies on two wires of radius r side by side sinks r + q - sqrt((r + q)^2 - (pitch / 2)^2) below
+ * their tops.
+ */
+function requireValley(pitchMm: number, toothMm: number, overallMm: number): void {
   const r = overallMm / 2;
-  const half = (pitchMm - tipMm) / 2;
-  if (half >= r) return r;
-  return half <= 0 ? 0 : r - Math.sqrt(r * r - half * half);
-}
-
-function requireValley(pitchMm: number, toothMm: number, overallMm: number, between: boolean): void {
-  if (between || sinkMm(pitchMm, toothMm, overallMm) >= SINK_MM) return;
-  const r = overallMm / 2;
-  const room = 2 * Math.sqrt(r * r - Math.max(0, r - SINK_MM) ** 2);
-  const least = Math.ceil((toothMm + room) * 1000) / 1000;
-  const lineMost = Math.floor((pitchMm - room) * 1000) / 1000;
+  const both = r + toothMm / 2;
+  const half = pitchMm / 2;
+  if (half >= both || both - Math.sqrt(both * both - half * half) >= SINK_MM) return;
+  const least = Math.ceil(2000 * Math.sqrt(2 * SINK_MM * both - SINK_MM ** 2)) / 1000;
+  const lineMost = Math.floor(2000 * ((half * half + SINK_MM ** 2) / (2 * SINK_MM) - r)) / 1000;
   throw new Fault(4, {
     code: 'comb-pitch-fine',
     place: { key: 'parts' },
     got: `a pitch of ${figure(pitchMm, 3)} mm with wire of ${figure(overallMm, 3)} mm, for teeth one printed line of ${toothMm} mm wide`,
     expected: `a pitch of ${least} mm or more, so that a tooth sinks ${SINK_MM} mm between two wires`,
     todo: `${lineMost >= 0.2 ? `set printer.line to ${lineMost} mm or less, or ` : ''}leave the comb out of parts`,
+  });
+}
+
+/** The end of a tooth, from left to right. */
+const square = (l: number, r: number): Point2[] => [
+  [l, 0],
+  [r, 0],
+];
+
+function nose(l: number, r: number): Point2[] {
+  const q = (r - l) / 2;
+  return Array.from({ length: NOSE_CHORDS + 1 }, (_, i): Point2 => {
+    const a = (Math.PI * i) / NOSE_CHORDS;
+    return [l + q - q * Math.cos(a), q - q * Math.sin(a)];
   });
 }
 
@@ -164,7 +177,7 @@ export function combOutline(d: CombDimensions): Point2[] {
   for (let k = 0; k < d.teeth; k++) {
     const x = (k - (d.teeth - 1) / 2) * step;
     const [l, r] = [x - d.toothMm / 2, x + d.toothMm / 2];
-    outline.push([l, root], [l, 0], [r, 0], [r, root]);
+    outline.push([l, root], ...(d.seat === 'between' ? square(l, r) : nose(l, r)), [r, root]);
   }
   const floor = d.heightMm - d.notchDepthMm;
   const notch = (from: number, width: number): Point2[] => [

@@ -38,7 +38,7 @@ export interface SaddleDimensions {
   readonly pieces: readonly SaddlePiece[];
 }
 
-/** @throws Fault (exit 4): `saddle-no-tube`, `saddle-small-tube`, `saddle-no-holes`, `saddle-too-tall` */
+/** @throws Fault (exit 4): `saddle-no-tube`, `saddle-small-tube`, `saddle-no-holes`, `saddle-low-printer` */
 export function saddleDimensions(record: PartsRecord): SaddleDimensions {
   const { former, printer, holes } = record;
   const bored = holes.filter(({ purpose, diameterMm }) => purpose !== 'mount' && diameterMm > 0);

@@ -6,8 +6,8 @@
  *           -> passes, where guides would run into one another or their words find no room
  *
  * The first section rests with its rim against the tube's lower end. A section above is set by a drill shank through the
- * highest hole that was bored below it. The other half of a section is turned to the lines drawn along the lips of the
- * first; so are further passes.
+ * highest hole that was bored below it; where that is out of reach, by the upper end of the piece below, which stays on.
+ * The other half of a section is turned to the lines drawn along the lips of the first; so are further passes.
  */
 import { Fault } from '../fault.ts';
 import type { Former, Hole } from '../record/schema.ts';
@@ -32,6 +32,8 @@ export interface SaddlePiece {
   readonly fromMm: number;
   readonly toMm: number;
   readonly rim: boolean;
+  /** The piece that stays on and whose upper end this one stands on, lips in line; null when set otherwise. */
+  readonly standsOn: string | null;
   readonly guides: readonly Guide[];
   readonly words: readonly PlacedWords[];
   /** The piece whose lips the lines are drawn along to which this one is set; null when set by rim or pin alone. */
@@ -56,6 +58,8 @@ export const MARGIN_MM = 8;
 /** Height of a notch over a line, and half of its width. */
 export const NOTCH_MM = 2.5;
 export const HALF_NOTCH_MM = 1.25;
+/** Lower pieces would be all margin. */
+const LEAST_HEIGHT_MM = 40;
 /** A tube this thin is smaller than the words on the saddle. */
 const LEAST_TUBE_MM = 12;
 
@@ -64,41 +68,37 @@ export function saddlePieces(holes: readonly Hole[], space: Space): SaddlePiece[
   requireTube(holes, space);
   const middles = middlesFor(holes.map(({ angleDeg }) => angleDeg));
   const pieces: SaddlePiece[] = [];
+  let below: SaddlePiece | null = null;
   for (const section of sectionsOf(holes, space)) {
-    let leader: string | null = null;
-    // The half with the pin comes first: it needs no lines.
-    const halves = middles.toSorted(
-      (a, b) => Number(covers(b, section.pin, middles)) - Number(covers(a, section.pin, middles)),
-    );
-    for (const middleDeg of halves) {
-      const pin = section.pin && covers(middleDeg, section.pin, middles) ? section.pin : null;
-      let rest = section.holes.filter((hole) => covers(middleDeg, hole, middles));
-      const first = leader;
-      for (let pass = 0; rest.length > 0 || (pin !== null && pass === 0); pass++) {
+    // The half that is placed without lines comes first: that with the pin, or over the piece it stands on.
+    const first: number = section.stands && below ? below.middleDeg : halfOf(section.pin ?? section.holes[0], middles);
+    let leader: SaddlePiece | null = null;
+    for (const middleDeg of [first, ...middles.filter((middle) => middle !== first)]) {
+      const leads = middleDeg === first;
+      let rest = section.holes.filter((hole) => halfOf(hole, middles) === middleDeg);
+      for (let pass = 0; rest.length > 0 || (leads && pass === 0); pass++) {
         const letter = letterOf(pieces.length);
-        const part = `saddle-${letter.toLowerCase()}`;
-        const { guides, words, left } = fill(
-          rest,
-          pass === 0 ? pin : null,
-          { ...section, middleDeg, letter, notches: first !== null },
-          space,
-        );
-        pieces.push({
-          part,
+        const pin = leads && pass === 0 ? section.pin : null;
+        const { guides, words, left } = fill(rest, pin, { ...section, middleDeg, letter, notches: !leads }, space);
+        const piece: SaddlePiece = {
+          part: `saddle-${letter.toLowerCase()}`,
           letter,
           middleDeg,
           fromMm: section.fromMm,
           toMm: section.toMm,
           rim: section.rim,
+          standsOn: leads && pass === 0 && section.stands && below ? below.part : null,
           guides,
           words,
-          lined: leader,
-          notches: first !== null,
-        });
-        leader ??= part;
+          lined: leader?.part ?? null,
+          notches: !leads,
+        };
+        pieces.push(piece);
+        leader ??= piece;
         rest = left;
       }
     }
+    below = leader;
   }
   return pieces;
 }
@@ -106,7 +106,7 @@ export function saddlePieces(holes: readonly Hole[], space: Space): SaddlePiece[
 /** A, B ... Z, A1, B1 ... */
 const letterOf = (i: number) => String.fromCharCode(65 + (i % 26)) + (i < 26 ? '' : `${Math.floor(i / 26)}`);
 
-function requireTube(holes: readonly Hole[], { former }: Space): void {
+function requireTube(holes: readonly Hole[], { former, heightMm }: Space): void {
   const fault = (code: string, got: string, expected: string, todo: string) =>
     new Fault(4, { code, place: { key: 'parts' }, got, expected, todo });
   if (former.kind !== 'tube')
@@ -123,15 +123,22 @@ function requireTube(holes: readonly Hole[], { former }: Space): void {
       `a tube of ${LEAST_TUBE_MM} mm or more, that a saddle clips on`,
       'leave the saddle out of parts and bore through the hole pattern',
     );
+  if (heightMm < LEAST_HEIGHT_MM)
+    throw new Fault(4, {
+      code: 'saddle-low-printer',
+      place: { key: 'printer.height' },
+      got: `a printer that builds ${heightMm} mm`,
+      expected: `pieces of up to ${LEAST_HEIGHT_MM} mm, with ${MARGIN_MM} mm on both sides of their holes`,
+      todo: `use a printer that builds ${LEAST_HEIGHT_MM} mm or more, or leave the saddle out of parts`,
+    });
   if (holes.length === 0)
     throw fault('saddle-no-holes', 'no holes to bore', 'one hole or more', 'leave the saddle out of parts');
 }
 
-/** The half that a hole belongs to: the one whose middle is nearer, the first when both are as near. */
-function covers(middleDeg: number, hole: Hole | null, middles: readonly number[]): boolean {
-  if (!hole) return false;
-  const nearest = middles.toSorted((a, b) => angleBetween(a, hole.angleDeg) - angleBetween(b, hole.angleDeg))[0];
-  return nearest === middleDeg;
+/** The middle of the half that a hole belongs to: the nearer one, the first when both are as near. */
+function halfOf(hole: Hole | undefined, middles: readonly number[]): number {
+  if (!hole) return middles[0]!;
+  return middles.toSorted((a, b) => angleBetween(a, hole.angleDeg) - angleBetween(b, hole.angleDeg))[0]!;
 }
 
 /** One half that covers all holes where there is one; else two, turned so that the holes keep away from the lips. */
@@ -163,32 +170,42 @@ interface Section {
   readonly fromMm: number;
   readonly toMm: number;
   readonly rim: boolean;
-  /** Bored with the section below. */
+  /** Bored with a section below. */
   readonly pin: Hole | null;
+  /** On the section below, which stays on the tube. */
+  readonly stands: boolean;
 }
 
 /** As many holes from below as the printer's height takes, then on from the highest of them. */
 function sectionsOf(holes: readonly Hole[], { rimMm, heightMm }: Space): Section[] {
   const sorted = holes.toSorted((a, b) => a.axialMm - b.axialMm);
   const sections: Section[] = [];
-  let pin: Hole | null = null;
   for (let next = 0; next < sorted.length; ) {
-    const fromMm: number = pin ? pin.axialMm - MARGIN_MM : -rimMm;
-    const room = fromMm + heightMm - MARGIN_MM;
-    const taken = sorted.slice(next).filter(({ axialMm }) => axialMm <= room + 1e-9);
-    const hole = sorted[next]!;
-    if (taken.length === 0)
-      throw new Fault(4, {
-        code: 'saddle-too-tall',
-        place: { key: 'printer.height' },
-        got: `hole ${hole.label} at ${hole.axialMm} mm, ${Number((hole.axialMm - fromMm).toFixed(2))} mm above where its piece begins, for a printer of ${heightMm} mm`,
-        expected: "a piece that reaches from the tube's end, or from a hole bored before, to the next hole",
-        todo: `use a printer that builds ${Math.ceil((hole.axialMm - fromMm + MARGIN_MM) * 10) / 10} mm or more, or leave the saddle out of parts`,
-      });
-    const last: Hole = taken[taken.length - 1]!;
-    sections.push({ holes: taken, fromMm, toMm: last.axialMm + MARGIN_MM, rim: pin === null, pin });
-    next += taken.length;
-    pin = last;
+    const below = sections[sections.length - 1];
+    const pin = below?.holes[below.holes.length - 1] ?? null;
+    const within = (fromMm: number) =>
+      sorted.slice(next).filter(({ axialMm }) => axialMm <= fromMm + heightMm - MARGIN_MM + 1e-9);
+    const pinnedFrom = pin ? pin.axialMm - MARGIN_MM : -rimMm;
+    const nearby = !below || pin ? within(pinnedFrom) : [];
+    if (nearby.length > 0) {
+      const toMm = nearby[nearby.length - 1]!.axialMm + MARGIN_MM;
+      sections.push({ holes: nearby, fromMm: pinnedFrom, toMm, rim: !below, pin, stands: false });
+      next += nearby.length;
+      continue;
+    }
+    // Out of reach: the section below grows as far as it can and carries the next one.
+    const wishedMm = sorted[next]!.axialMm + MARGIN_MM - heightMm;
+    const grown = (fromMm: number, leastMm: number) => Math.max(leastMm, Math.min(fromMm + heightMm, wishedMm));
+    if (below) sections[sections.length - 1] = { ...below, toMm: grown(below.fromMm, below.toMm) };
+    else
+      sections.push({ holes: [], fromMm: -rimMm, toMm: grown(-rimMm, MARGIN_MM), rim: true, pin: null, stands: false });
+    const fromMm = sections[sections.length - 1]!.toMm;
+    const carried = within(fromMm);
+    const last = carried[carried.length - 1];
+    // One more that only carries: it ends where the next hole keeps its margin.
+    const toMm = last ? last.axialMm + MARGIN_MM : Math.min(fromMm + heightMm, sorted[next]!.axialMm - MARGIN_MM);
+    sections.push({ holes: carried, fromMm, toMm, rim: false, pin: null, stands: true });
+    next += carried.length;
   }
   return sections;
 }

@@ -186,6 +186,7 @@ function useOf(d: SaddleDimensions, piece: SaddlePiece): string {
   const place = [
     piece.rim ? 'its rim against the lower end of the tube' : '',
     pin ? `a drill shank through hole ${pin.hole.label}, bored before` : '',
+    piece.standsOn ? `its lower end on the upper end of ${piece.standsOn}, which stays on, lips in line` : '',
     piece.lined
       ? `${piece.notches ? 'its notches' : 'its lips'} on the lines along the lips of ${piece.lined}${piece.rim ? '' : ', its ends level with those of that piece'}`
       : '',

@@ -84,10 +84,10 @@ describe('fit coupon', () => {
           cases++;
         },
       ),
-      { numRuns: 7, seed: 20 },
+      { numRuns: 5, seed: 20 },
     );
     console.log(`coupon: ${cases} random records`);
-    expect(cases).toBe(7);
+    expect(cases).toBe(5);
   });
 
   test('its plug and sockets clear by exactly the number beside them, whatever the job has', async () => {

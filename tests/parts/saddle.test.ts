@@ -69,6 +69,9 @@ function keepsRules({ d, pieces }: Made, printer: CoilRecord['printer']): void {
     expect(piece.toMm - piece.fromMm).toBeLessThanOrEqual(printer.heightMm + 1e-9);
     for (const [i, a] of piece.guides.entries()) {
       expect(Math.abs(a.turnDeg)).toBeLessThanOrEqual(90 + 1e-9);
+      // The planner keeps 7 mm from a tube's end; pieces above keep a margin of 8 mm to the middle.
+      expect(a.hole.axialMm - a.diameterMm / 2 - Math.max(0, piece.fromMm)).toBeGreaterThan(4);
+      expect(piece.toMm - a.hole.axialMm - a.diameterMm * Math.SQRT1_2).toBeGreaterThan(4);
       for (const b of piece.guides.slice(i + 1))
         expect(webBetween(a, b, d.insideR)).toBeGreaterThanOrEqual(2 * printer.lineMm - 1e-9);
     }
@@ -118,14 +121,14 @@ describe('drill saddle', () => {
       fc.asyncProperty(
         fc.record({
           diameterMm: fc.integer({ min: 12, max: 120 }),
-          pitchUm: fc.integer({ min: 600, max: 4000 }),
+          pitchUm: fc.integer({ min: 600, max: 6000 }),
           taps: fc.integer({ min: 1, max: 5 }),
           turns: fc.integer({ min: 6, max: 24 }),
           seed: fc.integer({ min: 0, max: 96 }),
           hand: fc.constantFrom<'right' | 'left'>('right', 'left'),
           drawn: fc.boolean(),
           printer: fc.record({
-            heightMm: fc.integer({ min: 60, max: 300 }),
+            heightMm: fc.integer({ min: 40, max: 300 }),
             clearanceMm: fc.integer({ min: 0, max: 60 }).map((x) => x / 100),
             holeCompensationMm: fc.integer({ min: 0, max: 40 }).map((x) => x / 100),
             lineMm: fc.integer({ min: 25, max: 90 }).map((x) => x / 100),
@@ -140,11 +143,6 @@ describe('drill saddle', () => {
             { diameterMm, pitchMm: pitchUm / 1000, turns: at, hand, method: drawn ? 'drawn in' : 'twisted loop' },
             printer,
           );
-          const fault = faultOf(record);
-          if (fault) {
-            expect(fault.code).toBe('saddle-too-tall');
-            return;
-          }
           const it = await made(record);
           keepsRules(it, record.printer);
           expect(worstGuide(it, record)).toBeLessThan(PLACE_MM);
@@ -153,11 +151,11 @@ describe('drill saddle', () => {
           if (it.pieces.length > 2) several++;
         },
       ),
-      { numRuns: 12, seed: 11 },
+      { numRuns: 9, seed: 11 },
     );
     console.log(`saddle: ${guides} guides, ${words} words, ${several} records of more than two pieces`);
-    expect(guides).toBeGreaterThan(80);
-    expect(words).toBeGreaterThan(80);
+    expect(guides).toBeGreaterThan(60);
+    expect(words).toBeGreaterThan(60);
     expect(several).toBeGreaterThan(0);
   });
 
@@ -215,7 +213,7 @@ describe('drill saddle', () => {
     for (const piece of it.d.pieces) {
       const pin = piece.guides.find(({ index }) => index);
       if (pin) expect(bored.has(pin.hole.label)).toBe(true);
-      expect(piece.rim || pin !== undefined || piece.lined !== null).toBe(true);
+      expect(piece.rim || pin !== undefined || piece.lined !== null || piece.standsOn !== null).toBe(true);
       for (const { hole } of piece.guides) bored.add(hole.label);
     }
   });
@@ -226,15 +224,42 @@ describe('drill saddle', () => {
     expect(coarse.pieces.length).toBeGreaterThan(fine.pieces.length);
   });
 
-  test('a piece that cannot reach the next hole is refused with the height that can', () => {
-    const high = tube({ pitchMm: 6, turns: [20.5] }, { heightMm: 50 });
-    const fault = faultOf(high)!;
-    expect(fault.code).toBe('saddle-too-tall');
-    expect(fault.got).toContain('50 mm');
+  test('where the next hole is out of reach, pieces stand on one another', async () => {
+    const record = tube({ pitchMm: 6, turns: [20.5] }, { heightMm: 50 });
+    const it = await made(record);
+    keepsRules(it, record.printer);
+    expect(worstGuide(it, record)).toBeLessThan(PLACE_MM);
+    const standing = it.d.pieces.filter(({ standsOn }) => standsOn !== null);
+    expect(standing.length).toBeGreaterThan(0);
+    for (const piece of standing) {
+      const under = it.d.pieces.find(({ part }) => part === piece.standsOn)!;
+      expect([piece.fromMm, piece.middleDeg]).toEqual([under.toMm, under.middleDeg]);
+    }
+  });
+
+  test('pieces cover the holes of any tube, whatever the printer builds', () => {
+    let pieces = 0;
+    for (let heightMm = 40; heightMm <= 300; heightMm += 1)
+      for (const pitchMm of [2.1, 5]) {
+        const d = saddleDimensions(tube({ pitchMm }, { heightMm }));
+        for (const { fromMm, toMm, guides, rim } of d.pieces) {
+          expect(toMm - fromMm).toBeLessThanOrEqual(heightMm + 1e-9);
+          for (const { hole } of guides) {
+            expect(hole.axialMm - fromMm).toBeGreaterThanOrEqual(rim ? 5 : 8 - 1e-9);
+            expect(toMm - hole.axialMm).toBeGreaterThanOrEqual(8 - 1e-9);
+          }
+          pieces++;
+        }
+      }
+    console.log(`saddle: ${pieces} pieces on printers of 40 to 300 mm`);
+    expect(pieces).toBeGreaterThan(1000);
+  });
+
+  test('a printer too low is refused with the least that works', () => {
+    const fault = faultOf(tube({}, { heightMm: 39 }))!;
+    expect(fault.code).toBe('saddle-low-printer');
     const heightMm = Number(/builds ([\d.]+) mm/.exec(fault.todo)![1]);
-    const accepted = tube({ pitchMm: 6, turns: [20.5] }, { heightMm });
-    expect(faultOf(accepted)).toBeNull();
-    expect(faultOf(tube({ pitchMm: 6, turns: [20.5] }, { heightMm: heightMm - 0.2 }))?.code).toBe('saddle-too-tall');
+    expect(faultOf(tube({}, { heightMm }))).toBeNull();
   });
 
   test('printed formers, thin tubes and tubes without holes have no saddle', () => {

@@ -66,8 +66,7 @@ function developed(d: SaddleDimensions, piece: SaddlePiece): View {
   const { fromMm, toMm, guides } = piece;
   const u = (deg: number) => d.outsideR * deg * RAD;
   const half = u(d.halfSweepDeg);
-  const lowest = guides.toSorted((a, b) => a.hole.axialMm - b.hole.axialMm)[0]!;
-  const highest = guides.toSorted((a, b) => b.hole.axialMm - a.hole.axialMm)[0]!;
+  const heights = guides.map(({ hole }) => hole.axialMm);
   const middle: Line = { shape: 'line', weight: 'thin', dash: 'centre', x1: 0, y1: fromMm, x2: 0, y2: toMm };
   return {
     title: 'developed surface',
@@ -90,8 +89,12 @@ function developed(d: SaddleDimensions, piece: SaddlePiece): View {
       ),
     ],
     dimensions: [
-      upright(Math.max(0, fromMm), lowest.hole.axialMm, -half, 'left'),
-      upright(Math.max(0, fromMm), highest.hole.axialMm, half, 'right'),
+      ...(heights.length > 0
+        ? [
+            upright(Math.max(0, fromMm), Math.min(...heights), -half, 'left'),
+            upright(Math.max(0, fromMm), Math.max(...heights), half, 'right'),
+          ]
+        : []),
       callout(0, toMm, 'above', `${size(((piece.middleDeg % 360) + 360) % 360)} degrees`),
       ...guides.map(
         ({ hole, turnDeg }): Mark => ({
