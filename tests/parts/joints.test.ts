@@ -276,7 +276,7 @@ describe('former in sections, read back from its bytes', () => {
       const sides = facets.filter(({ normal, corners, area }) => {
         const turned = (angle(corners[0]) - keyDeg) * RAD;
         const side = Math.abs(-normal[0] * Math.sin(keyDeg * RAD) + normal[1] * Math.cos(keyDeg * RAD));
-        const inBore = corners.every((v) => radius(v) < record.former.boreDiameterMm / 2 + 0.01);
+        const inBore = corners.every((v) => radius(v) < record.former.boreDiameterMm / 2 + 0.05);
         return area > 1e-3 && side > 0.999 && Math.cos(turned) > 0.9 && inBore;
       });
       return sides.map(({ corners: [c] }) => c[1] * Math.cos(keyDeg * RAD) - c[0] * Math.sin(keyDeg * RAD));
