@@ -14,6 +14,8 @@ import type { Callout, Mark, Span, View } from './views.ts';
 export interface Dimensioned extends Drawing {
   /** All that is drawn, words included; the origin is the view's own. */
   readonly box: Box;
+  /** The view without its dimensions. */
+  readonly bodyBox: Box;
   /** Marks for which there was no room. */
   readonly missing: readonly string[];
 }
@@ -53,7 +55,7 @@ export function dimensioned(view: View, scale: number, measure: Measure): Dimens
   const gaps = texts.map((text) => grown(textBox(text, measure), BREAK_MM));
   const thin = [...placed.flatMap((part) => part.lines), ...named.lines].flatMap((each) => withGaps(each, gaps));
   const shapes = [...body, ...thin, ...placed.flatMap((part) => part.heads), ...texts];
-  return { shapes, box: boxAround(shapes, measure) ?? bodyBox, missing: named.missing };
+  return { shapes, box: boxAround(shapes, measure) ?? bodyBox, bodyBox, missing: named.missing };
 }
 
 type BodyShape = View['shapes'][number];

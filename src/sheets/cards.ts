@@ -96,3 +96,19 @@ export function lowest(cards: readonly Card[], widthMm: number): Card[][] {
   }
   return best?.rows ?? [];
 }
+
+/** The cards in two columns, the first on the left, shared out so that they are lowest; null where no two are narrow enough. */
+export function twoColumns(cards: readonly Card[], widthMm: number): Card | null {
+  if (cards.length < 2 || cards.length > MANY) return null;
+  let best: { columns: [Card, Card]; height: number } | null = null;
+  for (let mask = 1; mask < 2 ** cards.length - 1; mask += 2) {
+    const left = cards.filter((_, i) => mask & (1 << i));
+    const right = cards.filter((_, i) => !(mask & (1 << i)));
+    const width = (column: readonly Card[]) => Math.max(...column.map((card) => card.widthMm));
+    if (width(left) + GAP_MM + width(right) > widthMm) continue;
+    const columns: [Card, Card] = [over(left, GAP_MM), over(right, GAP_MM)];
+    const height = rowHeight(columns);
+    if (!best || height < best.height - 0.01) best = { columns, height };
+  }
+  return best && set([best.columns], widthMm);
+}

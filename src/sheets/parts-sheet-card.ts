@@ -1,5 +1,5 @@
 /** One part on the parts sheet: its name and facts, its views to a standard scale, its pictures beside them. */
-import { CARD, LIST } from '../../templates/wording/parts-sheet.ts';
+import { CARD } from '../../templates/wording/parts-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import { dimensioned } from '../drawing/dimensioned.ts';
 import { scaleText } from '../drawing/elevation.ts';
@@ -7,7 +7,7 @@ import { BODY_MM, label, movedAll, rectangle, SMALL_MM } from '../drawing/shapes
 import type { View } from '../drawing/views.ts';
 import type { PartEntry } from '../record/schema.ts';
 import { type Block, LEADING, paragraph, stack } from './block.ts';
-import { type Card, GAP_MM, lowest, over, plain, rowHeight, rowsOf, set, shifted } from './cards.ts';
+import { type Card, GAP_MM, lowest, over, plain, rowHeight, rowsOf, set, shifted, twoColumns } from './cards.ts';
 import { figures, fixed, sentence, short, wrap } from './text.ts';
 
 /** A shaded picture of a part. */
@@ -38,26 +38,32 @@ function picture({ png, widthPx, heightPx }: Picture, share: number): Card {
   return { widthMm, heightMm, shapes: [], pictures: [{ png, x: 0, y: -heightMm, widthMm, heightMm }] };
 }
 
-/** A view with its title under it. */
+/** A view with its title under the middle of its outline. */
 function drawn(view: View, scale: number, measure: Measure): Card {
-  const { shapes, box, missing } = dimensioned(view, scale, measure);
-  const width = box.right - box.left;
-  const words = [view.title, ...(missing.length > 0 ? [CARD.missing(missing.join(', '))] : [])];
-  const widthMm = Math.max(width, measure.width(view.title, SMALL_MM) + 2);
-  const under = words.flatMap((text) => wrap(text, widthMm, SMALL_MM, false, measure));
+  const { shapes, box, bodyBox, missing } = dimensioned(view, scale, measure);
+  const middle = (bodyBox.left + bodyBox.right) / 2;
+  const half = measure.width(view.title, SMALL_MM) / 2 + 1;
+  const left = Math.min(box.left, middle - half);
+  const widthMm = Math.max(box.right, middle + half) - left;
   const high = box.top - box.bottom;
-  const titles = under.map((text, i) =>
-    label(widthMm / 2, -high - 1.2 - (i + 0.8) * SMALL_MM * LEADING, text, { align: 'centre' }),
-  );
+  const note = missing.length > 0 ? wrap(CARD.missing(missing.join(', ')), widthMm, SMALL_MM, false, measure) : [];
+  const base = (i: number) => -high - 1.2 - (i + 0.8) * SMALL_MM * LEADING;
   return {
     widthMm,
-    heightMm: high + 1.2 + under.length * SMALL_MM * LEADING,
-    shapes: [...movedAll({ shapes }, (widthMm - width) / 2 - box.left, -box.top), ...titles],
+    heightMm: high + 1.2 + (1 + note.length) * SMALL_MM * LEADING,
+    shapes: [
+      ...movedAll({ shapes }, -left, -box.top),
+      label(middle - left, base(0), view.title, { align: 'centre' }),
+      ...note.map((text, i) => label(widthMm / 2, base(1 + i), text, { align: 'centre' })),
+    ],
     pictures: [],
   };
 }
 
-/** Views and pictures: pictures in a column at the right, or as a column or singly among the views, whichever is lowest. */
+/**
+ * Views and pictures as they are lowest: pictures in a column at the right, as a column or singly among the views, all in two
+ * columns, or two columns over the last view.
+ */
 function arranged(views: readonly Card[], pictures: readonly Card[], widthMm: number): Card {
   if (pictures.length === 0) return set(lowest(views, widthMm), widthMm);
   const column = over(pictures, 3);
@@ -76,6 +82,10 @@ function arranged(views: readonly Card[], pictures: readonly Card[], widthMm: nu
     const shapes = [...a.shapes, ...b.shapes];
     ways.unshift({ widthMm, heightMm, shapes, pictures: [...a.pictures, ...b.pictures] });
   }
+  const rest = twoColumns([...views.slice(0, -1), ...pictures], widthMm);
+  const last = set([views.slice(-1)], widthMm);
+  for (const way of [twoColumns([...views, ...pictures], widthMm), rest && over([rest, last], GAP_MM)])
+    if (way) ways.push(way);
   return ways.reduce((best, way) => (way.heightMm < best.heightMm - 0.01 ? way : best));
 }
 
@@ -95,7 +105,7 @@ function head({ entry, beds }: PartShown, scale: number, widthMm: number, measur
     ),
     label(widthMm - 2, -STRIP_MM / 2, right, { align: 'right', anchor: 'middle' }),
   ];
-  const facts = CARD.facts(LIST.piece(entry.quantity), entry.material, grams(entry.massG), sizeText(entry.sizeMm));
+  const facts = CARD.facts(entry.quantity, entry.material, grams(entry.massG), sizeText(entry.sizeMm));
   const words = [`${facts}; ${CARD.where(entry.path, beds)}`, CARD.use(entry.use), CARD.print(entry.printNote)];
   const lines = words.map((text) => paragraph(sentence(text), widthMm - 4, measure, { sizeMm: SMALL_MM }));
   const text = stack(lines, 0.3);

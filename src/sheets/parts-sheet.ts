@@ -26,7 +26,6 @@ const COLUMN_GAP = 6;
 interface Body {
   readonly part: string;
   readonly cards: readonly Card[];
-  readonly gapMm: number;
 }
 
 const height = (all: readonly Block[], gapMm: number) =>
@@ -74,7 +73,7 @@ function listed(record: CoilRecord, sheetOf: (part: string) => number, room: Roo
   let here: Block[] = [];
   const close = () => {
     const part = bodies.length === 0 ? PARTS_SHEET.list : PARTS_SHEET.more;
-    bodies.push({ part, cards: here.map(plain), gapMm: GAP });
+    bodies.push({ part, cards: [plain(stack(here, GAP))] });
     here = [];
   };
   for (const block of some) {
@@ -85,20 +84,32 @@ function listed(record: CoilRecord, sheetOf: (part: string) => number, room: Roo
   return bodies;
 }
 
-/** Cards on pages: each where it fits first, so that small parts share what larger ones leave. */
-function filled(parts: readonly (readonly Card[])[], room: Room): { pages: Card[][]; pageOf: number[] } {
-  const pages: Card[][] = [];
-  const pageOf = parts.map((cards) => {
+/**
+ * Cards on pages after those of the list: each where it fits first, so that small parts share what larger ones, and the
+ * list, leave free. With each part goes the page on which it begins, counted from 1.
+ */
+function filled(
+  list: readonly Body[],
+  parts: readonly (readonly Card[])[],
+  room: Room,
+): { bodies: Body[]; sheets: number[] } {
+  const before = list.length - 1;
+  const pages: Card[][] = [[...list[before]!.cards]];
+  const sheets = parts.map((cards) => {
     const at = cards.map((card) => {
       const free = pages.findIndex((page) => height([...page, card], GAP_MM) <= room.heightMm + 1e-9);
       if (free >= 0) pages[free]!.push(card);
       else pages.push([card]);
       return free >= 0 ? free : pages.length - 1;
     });
-    return at[0] ?? 0;
+    return before + 1 + Math.min(...at);
   });
-  return { pages, pageOf };
+  const bodies = pages.map((cards, i) => ({ part: i === 0 ? list[before]!.part : PARTS_SHEET.drawings, cards }));
+  return { bodies: [...list.slice(0, before), ...bodies], sheets };
 }
+
+/** Views, if there are any. */
+const drawable = (views: readonly View[] = []) => (views.length > 0 ? views : null);
 
 function bodiesOf(
   record: CoilRecord,
@@ -112,7 +123,7 @@ function bodiesOf(
       {
         entry,
         beds: blocks.bedsWith(record, entry.part),
-        views: views.get(entry.part) ?? boxViews(entry.sizeMm),
+        views: drawable(views.get(entry.part)) ?? boxViews(entry.sizeMm),
         pictures: pictures.get(entry.part) ?? [],
       },
       room.widthMm,
@@ -120,12 +131,18 @@ function bodiesOf(
       measure,
     ),
   );
-  const { pages, pageOf } = filled(cards, room);
-  const index = new Map(record.parts.map(({ part }, i) => [part, pageOf[i]!]));
-  // How many sheets the list takes does not hang on the numbers in it: they are put in once it is known.
-  const before = listed(record, () => 10, room, measure).length;
-  const list = listed(record, (part) => before + 1 + index.get(part)!, room, measure);
-  return [...list, ...pages.map((page) => ({ part: PARTS_SHEET.drawings, cards: page, gapMm: GAP_MM }))];
+  // How high the list is does not hang on the sheets named in it: they are put in once they are known.
+  const { sheets } = filled(
+    listed(record, () => 10, room, measure),
+    cards,
+    room,
+  );
+  const index = new Map(record.parts.map(({ part }, i) => [part, sheets[i]!]));
+  return filled(
+    listed(record, (part) => index.get(part)!, room, measure),
+    cards,
+    room,
+  ).bodies;
 }
 
 /**
@@ -151,7 +168,7 @@ export function layOutPartsSheet(
     let y = paperHeight - MARGIN_MM.along - head.heightMm - GAP;
     for (const card of body.cards) {
       placed.push(shifted(card, MARGIN_MM.across, y));
-      y -= card.heightMm + body.gapMm;
+      y -= card.heightMm + GAP_MM;
     }
     return {
       widthMm: paperWidth,

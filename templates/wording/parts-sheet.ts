@@ -85,8 +85,8 @@ export const CAUTIONS = {
 } as const;
 
 export const CARD = {
-  facts: (pieces: string, material: string, grams: string, size: string) =>
-    `${pieces}, ${material}, ${grams} g each if solid, ${size} mm`,
+  facts: (pieces: number, material: string, grams: string, size: string) =>
+    `${LIST.piece(pieces)}, ${material}, ${grams} g ${pieces === 1 ? '' : 'each '}if solid, ${size} mm`,
   where: (file: string, bed: string) => (bed === '' ? file : `${file}, bed ${bed}`),
   use: (text: string) => `Use: ${text}`,
   print: (text: string) => `Print: ${text}`,
