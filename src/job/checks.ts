@@ -14,6 +14,7 @@ export function crossCheck(job: Readable): readonly Finding[] {
     ...checkWant(job),
     ...checkFormer(job),
     ...checkWinding(job),
+    ...checkNotches(job),
     ...checkUnits(job),
     ...checkPrinter(job),
     ...checkParts(job),
@@ -112,6 +113,19 @@ function checkWinding({ winding }: Readable): Finding[] {
       'remove spacers, or take pitch: spaced',
     ),
   ];
+}
+
+/** The notches of ribs space the turns, whole layers apart. */
+function checkNotches({ former, winding }: Readable): Finding[] {
+  if (former?.kind !== 'printed' || former.body !== 'ribbed' || winding === undefined) return [];
+  const found: Finding[] = [];
+  const add = (key: 'pitch' | 'spacers', got: string, todo: string) =>
+    found.push(finding('notches', ['winding', key], got, 'turns that lie in the notches of the ribs', todo));
+  if (winding.pitch === 'close')
+    add('pitch', 'pitch: close on a former with body: ribbed', 'take pitch: any, or body: full');
+  if (winding.spacers !== undefined)
+    add('spacers', 'spacers for a former with body: ribbed', 'remove winding.spacers, or take body: full');
+  return found;
 }
 
 function checkPrinter({ printer }: Readable): Finding[] {

@@ -178,7 +178,7 @@ function diametersOf(job: Job, all: readonly number[], of: Omit<Candidate, 'form
 /** Whether the ribs of a ribbed body leave as much air as they take, with the usual tap method of the wire. */
 function ribsGoRound(job: Job, wire: Wire, methods: readonly TapMethod[], formerMm: number): boolean {
   const ribs = ribSection(job, wire.overallMm, methods[0]);
-  return ribs === null || ribsFit(ribs, formerMm);
+  return ribs === null || ribsFit(ribs, formerMm, wire.overallMm);
 }
 
 /** The whole space, wire by wire. */

@@ -220,7 +220,7 @@ function ribBreach({ job, ribs, outsideMm, overallMm }: Around): Breach {
     const allowed = Math.min(Math.max(wallMm, least + BEHIND_MM), most + BEHIND_MM);
     return { limit: 'former.wall', got: wallMm, allowed, text, anyMethod: true };
   }
-  const allowed = mostRibs(outsideMm, ribs.widthMm);
+  const allowed = mostRibs(outsideMm, ribs.widthMm, overallMm);
   const text = `${round} leave less air than plastic, or no room behind their notches for rings`;
   return { limit: 'former.ribs', got: ribs.count, allowed, text };
 }

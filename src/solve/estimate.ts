@@ -10,7 +10,7 @@ import { roundWireInductance } from '../physics/rosa.ts';
 import { wheelerTurns } from '../physics/wheeler.ts';
 import type { Candidate } from './candidates.ts';
 import { type Demand, setCapacitance, tapsBetween } from './demand.ts';
-import { ribbedTurnMm, ribEndsMm, ribSection } from './ribs.ts';
+import { cornersOn, ribbedTurnMm, ribEndsMm, ribSection } from './ribs.ts';
 import { inductanceSpread } from './spread.ts';
 import { type TapMethod, wireHoleMm } from './tap-methods.ts';
 import {
@@ -55,8 +55,9 @@ export function roundDiameterMm(
   candidate: Candidate,
   method: TapMethod | undefined = candidate.methods[0],
 ): number {
-  const ribs = ribSection(job, candidate.wire.overallMm, method);
-  return equivalentDiameterMm(meanDiameterMm(candidate), ribs?.count, ribs?.bendMm);
+  const mean = meanDiameterMm(candidate);
+  const { corners, bendMm } = cornersOn(ribSection(job, candidate.wire.overallMm, method), mean);
+  return equivalentDiameterMm(mean, corners, bendMm);
 }
 
 /** Turns for an inductance at this pitch with `gapsMm` of gaps spread over the winding, from Nagaoka and Rosa. */

@@ -65,8 +65,8 @@ function noCandidate(job: Job): { key: string; got: string } {
   if (noGroove !== null) return noGroove;
   const widest = Math.max(...diametersFor(job));
   const ribs = thinnest === undefined ? null : ribSection(job, thinnest.overallMm, undefined);
-  if (ribs !== null && !ribsFit(ribs, widest)) {
-    const got = `${ribs.count} ribs, ${ribs.widthMm} mm wide for ${wire}, leave less air than plastic round ${widest} mm; ${mostRibs(widest, ribs.widthMm)} would do`;
+  if (ribs !== null && !ribsFit(ribs, widest, thinnest!.overallMm)) {
+    const got = `${ribs.count} ribs, ${ribs.widthMm} mm wide for ${wire}, leave less air than plastic round ${widest} mm; ${mostRibs(widest, ribs.widthMm, thinnest!.overallMm)} would do`;
     return { key: 'former.ribs', got };
   }
   return { key: 'wire', got: `the thinnest wire (${wire}) does not lie at a pitch of the job round ${widest} mm` };

@@ -59,6 +59,9 @@ const POISSON = 0.36;
 /** Shear area of a rectangle over its area. */
 const SHEAR = 5 / 6;
 
+/** Of the radius, at most, may be the radius of bends. */
+const TIGHTEST = 0.95;
+
 const round = (value: number, digits = 3) => Number(value.toFixed(digits));
 
 /**
@@ -86,18 +89,26 @@ export function ribSection(
   return { count, widthMm, bendMm: round(widthMm / 2 / Math.tan(Math.PI / (2 * count)) + overallMm / 2, 4) };
 }
 
-/** Most ribs of this width that leave as much air as plastic round a former. */
-export function mostRibs(outsideMm: number, widthMm: number): number {
-  return Math.floor((Math.PI * outsideMm) / (2 * widthMm) + 1e-9);
+/** Most ribs of this width that leave more air than plastic round a former; their bends then still make no circle. */
+export function mostRibs(outsideMm: number, widthMm: number, overallMm: number): number {
+  return Math.floor((Math.PI * (TIGHTEST * outsideMm - overallMm)) / (2 * widthMm) + 1e-9);
 }
 
-export function ribsFit({ count, widthMm }: RibSection, outsideMm: number): boolean {
-  return count <= mostRibs(outsideMm, widthMm);
+export function ribsFit({ count, widthMm }: RibSection, outsideMm: number, overallMm: number): boolean {
+  return count <= mostRibs(outsideMm, widthMm, overallMm);
+}
+
+/** The corners of a coil's turns, none of a full body. Ribs that nearly touch make nearly a circle: they are refused, but later. */
+export function cornersOn(section: RibSection | null, meanDiameterMm: number): { corners?: number; bendMm?: number } {
+  if (section === null) return {};
+  return { corners: section.count, bendMm: Math.min(section.bendMm, (TIGHTEST * meanDiameterMm) / 2) };
 }
 
 /** Wire of one flat turn, mm. */
-export const ribbedTurnMm = (meanDiameterMm: number, section: RibSection | null): number =>
-  turnLengthMm(meanDiameterMm, section?.count, section?.bendMm);
+export function ribbedTurnMm(meanDiameterMm: number, section: RibSection | null): number {
+  const { corners, bendMm } = cornersOn(section, meanDiameterMm);
+  return turnLengthMm(meanDiameterMm, corners, bendMm);
+}
 
 /** Turns from one finish hole to the next: in one rib where the pitch leaves a web between holes, else on the next rib. */
 export function ribFinishStep(count: number, overallMm: number, pitchMm: number): number {
@@ -236,7 +247,7 @@ export function planRibs(job: RibJob, section: RibSection, load: Load, seat: num
   const { count, widthMm } = section;
   const { least, most } = ribDepths(section, outsideMm, overallMm, job.printer.lineMm);
   const stated = job.former.wallMm === null ? null : job.former.wallMm - BEHIND_MM;
-  if (!ribsFit(section, outsideMm) || least > most) return null;
+  if (!ribsFit(section, outsideMm, overallMm) || least > most) return null;
   if (stated !== null && (stated < least - 1e-9 || stated > most + 1e-9)) return null;
   const depths: number[] = [];
   if (stated !== null) depths.push(stated);

@@ -14,7 +14,7 @@ import { type CoilView, type Demand, fixedTurnsOf, setCapacitance, tapsBetween }
 import { meanDiameterMm, roundDiameterMm, turnsFor } from './estimate.ts';
 import { finishRow } from './former/finish-row.ts';
 import { type NoPlace, type Placing, placeTaps, STAGGER_STEPS, stillClear } from './place-taps.ts';
-import { ribFinishStep, ribSection } from './ribs.ts';
+import { cornersOn, ribFinishStep, ribSection } from './ribs.ts';
 import type { TapLayout, TapMethod } from './tap-methods.ts';
 import { placeBothSwitches } from './two-switches.ts';
 import { actingSelfPf, type Section } from './working.ts';
@@ -76,11 +76,11 @@ export function coilOf(setting: Setting, state: Settled, turns: number): Coil {
   const { candidate, method } = setting;
   const gaps: Gap[] =
     method.gapMm > 0 ? [...state.unitTaps, ...state.taps].map((turn) => ({ turn, gapMm: method.gapMm })) : [];
-  const ribs = ribSection(setting.job, candidate.wire.overallMm, method);
+  const meanMm = meanDiameterMm({ ...candidate, formerMm: state.outsideMm });
   return new Coil({
     wire: candidate.wire,
-    meanDiameterMm: meanDiameterMm({ ...candidate, formerMm: state.outsideMm }),
-    ...(ribs === null ? {} : { corners: ribs.count, bendMm: ribs.bendMm }),
+    meanDiameterMm: meanMm,
+    ...cornersOn(ribSection(setting.job, candidate.wire.overallMm, method), meanMm),
     pitchMm: state.pitchMm,
     turns,
     gaps,
