@@ -1,5 +1,5 @@
 /** Views of the fit coupon. */
-import { type CouponDimensions, couponDimensions } from '../../parts/coupon-dimensions.ts';
+import { type CouponDimensions, type CouponHole, couponDimensions } from '../../parts/coupon-dimensions.ts';
 import type { PartsRecord } from '../../record/schema.ts';
 import type { View } from '../views.ts';
 import { across, box, callout, hidden, round, size, upright } from './strokes.ts';
@@ -12,8 +12,9 @@ export function couponViews(record: PartsRecord): Record<string, View[]> {
 function platePlan(d: CouponDimensions): View {
   const upper = d.holes.filter(({ row }) => row !== 'lying');
   const lying = d.holes.filter(({ row }) => row === 'lying');
-  const first = (row: string) => d.holes.find((hole) => hole.row === row && (row === 'socket' || hole.stepMm === 0))!;
-  const [socket, screw, wire] = [first('socket'), first('upright'), first('lying')];
+  // The last of each row: its leader line crosses no other.
+  const last = (row: CouponHole['row']) => d.holes.findLast((hole) => hole.row === row)!;
+  const [socket, screw, wire] = [last('socket'), last('upright'), last('lying')];
   return {
     title: 'plan',
     shapes: [

@@ -46,14 +46,14 @@ function endView(d: SaddleDimensions, { rim }: SaddlePiece): View {
   const rimArc: Polyline = {
     shape: 'polyline',
     weight: 'thin',
-    points: saddleOutline(d, d.rimR).slice(saddleOutline(d, d.rimR).length / 2),
+    points: saddleOutline(d, d.rimR).filter(([x, y]) => Math.hypot(x, y) < d.insideR),
   };
   return {
     title: 'end view',
     shapes: [outline(saddleOutline(d, d.insideR)), ...(rim ? [rimArc] : [])],
     dimensions: [
       callout(d.insideR, 0, 'right', `inside dia ${size(2 * d.insideR)}, wall ${size(d.wallMm)}`),
-      callout(0, d.outsideR, 'above', `covers ${size(2 * d.halfSweepDeg)} degrees`),
+      callout(0, d.outsideR, 'above', `covers ${(2 * d.halfSweepDeg).toFixed(1)} degrees`),
       ...(rim
         ? [callout(d.rimR * Math.cos(1), -d.rimR * Math.sin(1), 'below', `rim inside dia ${size(2 * d.rimR)}`)]
         : []),
