@@ -27,7 +27,7 @@ export interface PartShown {
 /** Scales of drawings (ISO 5455, and 1:2.5 as in common use), the largest first. */
 const SCALES = [2, 1, 1 / 2, 1 / 2.5, 1 / 5, 1 / 10, 1 / 20, 1 / 50];
 /** Of the size at 250 dots to the inch. */
-const PICTURE_SHARES = [1, 0.8, 0.62];
+const PICTURE_SHARES = [1, 0.8, 0.62, 0.5];
 const DOTS_MM = 250 / 25.4;
 /** Between the head of a card and what is drawn. */
 const HEAD_GAP = 2;

@@ -48,14 +48,14 @@ export function partList(
       `${sheetOf(part)}`,
     ]);
   const asked = columnsOf(widthMm, [
-    [LIST.part, 44, { bold: true }],
-    [LIST.pieces, 13, { align: 'right' }],
-    [LIST.material, 17],
+    [LIST.part, 46, { bold: true }],
+    [LIST.pieces, 12, { align: 'right' }],
+    [LIST.material, 16],
     [LIST.mass, 14, { align: 'right' }],
-    [LIST.size, 36, { align: 'right' }],
-    [LIST.file, 40],
-    [LIST.bed, 10, { align: 'centre' }],
-    [LIST.sheet, 12, { align: 'right' }],
+    [LIST.size, 33, { align: 'right' }],
+    [LIST.file, 45],
+    [LIST.bed, 9, { align: 'centre' }],
+    [LIST.sheet, 11, { align: 'right' }],
   ]);
   const head = heading(from === 0 ? LIST.heading : LIST.continued, widthMm, measure);
   return stack([head, table(asked, rows, measure, { rowMm: 5 })], 0);

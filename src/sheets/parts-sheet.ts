@@ -51,24 +51,27 @@ interface Room {
 /** The list and all that belongs to it, over as many pages as it needs. */
 function listed(record: CoilRecord, sheetOf: (part: string) => number, room: Room, measure: Measure): Body[] {
   const { widthMm, heightMm } = room;
+  if (record.parts.length === 0) return flow([paragraph(PARTS_SHEET.none, widthMm, measure)], heightMm);
   const column = (widthMm - COLUMN_GAP) / 2;
+  const tables = [
+    ...parted(record.parts.length, heightMm, (from, to) =>
+      blocks.partList(record, from, to, sheetOf, widthMm, measure),
+    ),
+    blocks.totals(record, widthMm, measure),
+    ...parted(record.beds.length, heightMm, (from, to) => blocks.bedList(record, from, to, widthMm, measure)),
+  ];
   const measured = blocks.finished(record, column, measure);
   const printer = blocks.printer(record, column, measure);
   const narrow = blocks.cautions(record, column, 1, measure);
-  const pair = measured
-    ? [beside([printer, stack([measured, narrow], GAP)], COLUMN_GAP)]
-    : [beside([printer, narrow], COLUMN_GAP)];
-  const some =
-    record.parts.length === 0
-      ? [paragraph(PARTS_SHEET.none, widthMm, measure)]
-      : [
-          ...parted(record.parts.length, heightMm, (from, to) =>
-            blocks.partList(record, from, to, sheetOf, widthMm, measure),
-          ),
-          blocks.totals(record, widthMm, measure),
-          ...parted(record.beds.length, heightMm, (from, to) => blocks.bedList(record, from, to, widthMm, measure)),
-          ...pair,
-        ];
+  const right = measured ? stack([measured, narrow], GAP) : narrow;
+  const together = flow([...tables, beside([printer, right], COLUMN_GAP)], heightMm);
+  if (together.length === 1 || !measured) return together;
+  // What is high moves to the next page whole: cautions of the full width leave more of the rest on this one.
+  const wide = blocks.cautions(record, widthMm, 2, measure);
+  return flow([...tables, beside([printer, measured], COLUMN_GAP), wide], heightMm);
+}
+
+function flow(all: readonly Block[], heightMm: number): Body[] {
   const bodies: Body[] = [];
   let here: Block[] = [];
   const close = () => {
@@ -76,7 +79,7 @@ function listed(record: CoilRecord, sheetOf: (part: string) => number, room: Roo
     bodies.push({ part, cards: [plain(stack(here, GAP))] });
     here = [];
   };
-  for (const block of some) {
+  for (const block of all) {
     if (here.length > 0 && height([...here, block], GAP) > heightMm) close();
     here.push(block);
   }
