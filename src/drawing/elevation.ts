@@ -42,6 +42,7 @@ function halfWidth(record: CoilRecord): number {
   const reach = [
     former.outsideDiameterMm / 2,
     (former.flange?.diameterMm ?? 0) / 2,
+    (former.base?.diameterMm ?? 0) / 2,
     record.windings[0]!.meanDiameterMm / 2,
   ];
   for (const ear of former.ears)
@@ -114,15 +115,16 @@ function formerOutline(record: CoilRecord, s: number): Shape[] {
     const behind = Math.cos(a) < 0;
     shapes.push(rectangle(x - half, 0, 2 * half, ear.thicknessMm * s, 'thin', undefined, behind ? 'dashed' : 'solid'));
   }
-  const { flange } = former;
-  const low = flange ? flange.lowerMm * s : 0;
+  const { flange, base } = former;
+  const low = (base?.thicknessMm ?? flange?.lowerMm ?? 0) * s;
   const high = top - (flange ? flange.upperMm * s : 0);
   shapes.push(rectangle(-r, low, 2 * r, high - low, 'outline', 1));
   if (flange) {
     const rim = (flange.diameterMm / 2) * s;
-    shapes.push(rectangle(-rim, 0, 2 * rim, flange.lowerMm * s, 'outline'));
+    if (!base) shapes.push(rectangle(-rim, 0, 2 * rim, flange.lowerMm * s, 'outline'));
     shapes.push(rectangle(-rim, high, 2 * rim, flange.upperMm * s, 'outline'));
   }
+  if (base) shapes.push(rectangle((-base.diameterMm / 2) * s, 0, base.diameterMm * s, base.thicknessMm * s, 'outline'));
   return shapes;
 }
 
