@@ -5,16 +5,10 @@
  */
 import type { Hole } from '../record/schema.ts';
 import type { FormerDimensions } from './dimensions.ts';
-import type { JointDimensions } from './joints.ts';
+import type { Bored, JointDimensions } from './joint-dimensions.ts';
 import { ridgesVolume } from './ridges.ts';
 import type { ProfileRow, Skin, Solid } from './solid.ts';
 import { engravedVolume } from './volume.ts';
-
-interface Bored {
-  readonly hole: Hole;
-  readonly section: number;
-  readonly spigotOf: number | null;
-}
 
 /** mm3 from below. */
 export function sectionVolumes(

@@ -81,7 +81,8 @@ export function splitOf(it: Splitting): Split {
       const seams = evenly(lengthMm, printer.heightMm, sections, worst === FLAT ? flat : places, usable, j);
       if (seams !== null) return { joints: seams.map((seam) => ({ ...rounded(seam), glueGapMm: round(glueGapMm) })) };
     }
-  return { none: 'no seam between the turns is clear of the holes' };
+  if (fewest > MOST_SECTIONS) return { none: `it would take more than ${MOST_SECTIONS} sections` };
+  return { none: 'no seams that are clear of the holes leave every section low enough' };
 }
 
 const round = (value: number) => Math.round(value * 1e4) / 1e4;

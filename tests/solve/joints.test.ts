@@ -115,12 +115,14 @@ describe('where a former is split', () => {
   it('says why there is none', () => {
     const record = sampleRecord();
     const { former } = record;
-    const reason = (changed: CoilRecord) => {
-      const found = splitFor(changed, 60);
+    const reason = (changed: CoilRecord, heightMm = 60) => {
+      const found = splitFor(changed, heightMm);
       return 'none' in found ? found.none : 'split';
     };
     expect(reason({ ...record, former: { ...former, body: 'ribbed' } })).toContain('ribbed');
     expect(reason({ ...record, former: { ...former, outsideDiameterMm: 9, boreDiameterMm: 4.6 } })).toContain('4.6 mm');
+    expect(reason(record, 12)).toContain('more than 6 sections');
+    expect(reason(record, 20)).toContain('low enough');
     const everywhere = Array.from({ length: 60 }, (_, i) => ({
       ...record.holes[2]!,
       angleDeg: 0,
