@@ -15,7 +15,7 @@ import { fixedTurnsOf } from './demand.ts';
 import type { Breach, Limit } from './design.ts';
 import { sizeOf } from './estimate.ts';
 import { grooveFor } from './former.ts';
-import { mostRibs, ribSection, ribsFit } from './ribs.ts';
+import { mostRibs, ribSection } from './ribs.ts';
 import { demandFor, longestMm, type NotFound } from './search.ts';
 import { landMm, wireHoleMm } from './tap-methods.ts';
 
@@ -36,6 +36,20 @@ function withoutGroove(job: Job, pitch: number): { key: string; got: string } | 
   const land = wire.overallMm / 4;
   const got = `a pitch of ${pitch} mm is ${Number((pitch / layerMm).toFixed(2))} layers of ${layerMm} mm, a groove takes ${LEAST_LAYERS}; for ${wire.name} it is ${widthMm.toFixed(2)} mm wide with ${land.toFixed(2)} mm of land: ${Number(leastGroovePitchMm(wire.overallMm, layerMm).toFixed(3))} mm in whole layers at least`;
   return { key: 'winding.pitch', got };
+}
+
+/** Why ribs do not go round the widest former of the job, for the wire that asks for the narrowest ones. */
+function withoutRibs(job: Job, widest: number): { key: string; got: string } | null {
+  if (job.former.ribs === null) return null;
+  const full: Job = { ...job, former: { ...job.former, body: 'full', ribs: null } };
+  const [narrowest] = candidatesOf(full)
+    .filter(({ pitch }) => pitch.kind === 'groove')
+    .map(({ wire, methods }) => ({ wire, ribs: ribSection(job, wire.overallMm, methods[0])! }))
+    .sort((a, b) => a.ribs.widthMm - b.ribs.widthMm);
+  if (narrowest === undefined) return null;
+  const { wire, ribs } = narrowest;
+  const got = `${ribs.count} ribs, ${ribs.widthMm} mm wide for ${wire.name}, leave less air than plastic round ${widest} mm; ${mostRibs(widest, ribs.widthMm, wire.overallMm)} would do`;
+  return { key: 'former.ribs', got };
 }
 
 /** Why the tap method of the job has no place at any pitch of the job. */
@@ -64,11 +78,8 @@ function noCandidate(job: Job): { key: string; got: string } {
   const noGroove = typeof pitch === 'number' ? withoutGroove(job, pitch) : null;
   if (noGroove !== null) return noGroove;
   const widest = Math.max(...diametersFor(job));
-  const ribs = thinnest === undefined ? null : ribSection(job, thinnest.overallMm, undefined);
-  if (ribs !== null && !ribsFit(ribs, widest, thinnest!.overallMm)) {
-    const got = `${ribs.count} ribs, ${ribs.widthMm} mm wide for ${wire}, leave less air than plastic round ${widest} mm; ${mostRibs(widest, ribs.widthMm, thinnest!.overallMm)} would do`;
-    return { key: 'former.ribs', got };
-  }
+  const noRibs = withoutRibs(job, widest);
+  if (noRibs !== null) return noRibs;
   return { key: 'wire', got: `the thinnest wire (${wire}) does not lie at a pitch of the job round ${widest} mm` };
 }
 

@@ -48,8 +48,8 @@ const CROWN_MM = 3;
 export const END_MM = 3;
 /** Clear height that a window keeps beside its ribs. */
 const WINDOW_MM = 2;
-/** How far end rings stand out over the ribs: as a rim that holds the hand off the winding, or just round them. */
-const RIM = { wide: 4, narrow: 1 };
+/** How far end rings stand out over the ribs: as a rim that holds the hand off the winding, or for the numbers of the ribs. */
+const RIM = { wide: 4, narrow: 2 };
 /** What the winding may take off the diameter midway between rings, a fraction: 0.2 % of it is 0.3 % of L. */
 export const GIVE_GOAL = 0.002;
 /** Deepest ribs, a share of the radius; more inner rings help then. */
@@ -85,7 +85,7 @@ export function ribSection(
   const taps =
     method === undefined || method.holes === 0 ? 0 : method.holeMm * method.holes + PAIR_MM * (method.holes - 1);
   const across = Math.max(wire, taps) + LINES_BESIDE * lineMm + holeCompensationMm;
-  const widthMm = round(Math.max(LEAST_LINES * lineMm, across), 2);
+  const widthMm = Math.ceil(100 * Math.max(LEAST_LINES * lineMm, across) - 1e-6) / 100;
   return { count, widthMm, bendMm: round(widthMm / 2 / Math.tan(Math.PI / (2 * count)) + overallMm / 2, 4) };
 }
 
