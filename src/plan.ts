@@ -13,9 +13,8 @@ import type { Job } from './job/job.ts';
 import { type PicturedPart, startKernel } from './kernel/client.ts';
 import { bedFiles, partFiles } from './kernel/files.ts';
 import { netlistFile } from './netlist/file.ts';
-import { partsOf } from './parts/parts.ts';
 import { listed, type Output, type OutputFile } from './record/listing.ts';
-import { makeRecord, partsRecordOf } from './record/make.ts';
+import { makeRecord, printedOf } from './record/make.ts';
 import type { CoilRecord } from './record/schema.ts';
 import { refusal } from './solve/refusal.ts';
 import { type Found, search } from './solve/search.ts';
@@ -59,12 +58,12 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
   try {
     const found = foundFor(job);
     // The parts need no figures at work: they are made while those are worked out.
-    const printed = partsRecordOf(job, found);
-    const solids = partsOf(printed);
-    const making = Promise.all(solids.map((solid) => kernel.part(solid, printed.printer.scale)));
+    const parts = printedOf(job, found);
+    const { scale } = parts.record.printer;
+    const making = Promise.all(parts.solids.map((solid) => kernel.part(solid, scale)));
     // A failure of a thread is reported when it is awaited below, not as an unhandled rejection meanwhile.
     making.catch(() => undefined);
-    const record = makeRecord(job, found, options.version, solids);
+    const record = makeRecord(job, found, options.version, parts);
     const beds = making.then((parts) => bedFiles(kernel, record, parts));
     beds.catch(() => undefined);
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
@@ -72,13 +71,13 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
     const sheet = await windingSheet(record);
     const ranges = await rangeSheet(record);
     const made = await making;
-    const parts = await partsSheetFile(record, made);
+    const partsSheet = await partsSheetFile(record, made);
     const files: OutputFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
       ...(await surfaceFiles(record)),
       { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
       netlistFile(record),
-      ...parts,
+      ...partsSheet,
       ...partFiles(record, made),
       ...(await beds),
     ];

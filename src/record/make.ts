@@ -6,8 +6,7 @@ import { cautionsFor } from '../../templates/wording/cautions.ts';
 import { HOW } from '../../templates/wording/steps.ts';
 import { FORMER_SHARE } from '../coil/positions.ts';
 import type { Job } from '../job/job.ts';
-import { partsOf } from '../parts/parts.ts';
-import type { Solid } from '../parts/solid.ts';
+import { type Possible, possibleParts } from '../parts/parts.ts';
 import { alternativesTo, WORTH } from '../solve/alternatives.ts';
 import { setCapacitance } from '../solve/demand.ts';
 import type { Design } from '../solve/design.ts';
@@ -20,11 +19,11 @@ import { DEFAULT_AT_KHZ } from '../solve/working.ts';
 import { checksOf } from './checks.ts';
 import { figuresOf } from './figures.ts';
 import { hashOf } from './hash.ts';
-import { bedsOf, entriesOf, printerOf, wantedOf } from './printed.ts';
+import { askedFor, bedsOf, entriesOf, printerOf, wantedOf } from './printed.ts';
 import { decimals, deg, mm, significant } from './rounding.ts';
 import { type Alternative, type CoilRecord, type Former, type Hole, type PartsRecord, recordSchema } from './schema.ts';
 import { correctionsOf, stepsOf } from './steps.ts';
-import { warningsOf } from './warnings.ts';
+import { leftOutWarnings, warningsOf } from './warnings.ts';
 import { placesOf, windingOf } from './winding.ts';
 
 function frameOf(job: Job): CoilRecord['frame'] {
@@ -159,10 +158,17 @@ function ribbedLoss(former: Former): { formerLoss?: string } {
   };
 }
 
-/** What the parts of a found design read: the same figures as in its record, before the rest of that is worked out. */
-export function partsRecordOf(job: Job, found: Found): PartsRecord {
+export interface Printed extends Possible {
+  readonly record: PartsRecord;
+}
+
+/**
+ * The parts of a found design and what they read: the same figures as in its record, before the rest of that is worked out.
+ * @throws Fault (exit 4) for a part that was asked for and cannot be
+ */
+export function printedOf(job: Job, found: Found): Printed {
   const { chosen } = found;
-  return {
+  const record: PartsRecord = {
     job: job.name,
     frame: frameOf(job),
     former: formerOf(chosen.former),
@@ -173,6 +179,9 @@ export function partsRecordOf(job: Job, found: Found): PartsRecord {
     tapMethod: tapMethodOf(chosen),
     windings: [placesOf(chosen)],
   };
+  const { solids, leftOut } = possibleParts(record, askedFor(job));
+  const not = leftOut.map(({ kind }) => kind);
+  return { record: { ...record, wanted: record.wanted.filter((kind) => !not.includes(kind)) }, solids, leftOut };
 }
 
 function tapMethodOf({ method, unitTaps, layout }: Design): CoilRecord['tapMethod'] {
@@ -187,8 +196,8 @@ function tapMethodOf({ method, unitTaps, layout }: Design): CoilRecord['tapMetho
   };
 }
 
-/** The record of a found design, files still to come; `solids` are its parts where they are already described. The schema is checked, so that nothing leaves in another shape. */
-export function makeRecord(job: Job, found: Found, version: string, solids?: readonly Solid[]): CoilRecord {
+/** The record of a found design, files still to come; `parts` are its parts where they are already described. The schema is checked, so that nothing leaves in another shape. */
+export function makeRecord(job: Job, found: Found, version: string, parts = printedOf(job, found)): CoilRecord {
   const { chosen } = found;
   const conditions = {
     tuning: job.set === null ? null : setCapacitance(job.set),
@@ -201,8 +210,8 @@ export function makeRecord(job: Job, found: Found, version: string, solids?: rea
   const winding = windingOf(job, chosen, figures.taps);
   const spread = spreadOf(job, chosen);
   const { candidate } = chosen;
-  const printed = partsRecordOf(job, found);
-  const parts = entriesOf(solids ?? partsOf(printed));
+  const { record: printed, solids, leftOut } = parts;
+  const entries = entriesOf(solids);
   const alternatives = shownOf(job, found, lossFactor);
   const body: Omit<CoilRecord, 'hash' | 'files' | 'program'> = {
     record: 1,
@@ -217,8 +226,8 @@ export function makeRecord(job: Job, found: Found, version: string, solids?: rea
     coverage: figures.coverage,
     switchKinds: figures.switchKinds,
     settings: figures.settings,
-    parts,
-    beds: bedsOf(parts, printed.printer),
+    parts: entries,
+    beds: bedsOf(entries, printed.printer),
     steps: stepsOf(job, chosen, winding),
     checks: checksOf(chosen, winding, spread),
     corrections: correctionsOf(chosen),
@@ -237,7 +246,7 @@ export function makeRecord(job: Job, found: Found, version: string, solids?: rea
       tried: found.tried,
       feasible: found.feasible,
     },
-    warnings: warningsOf(job, found, alternatives.length, figures.coverage),
+    warnings: [...warningsOf(job, found, alternatives.length, figures.coverage), ...leftOutWarnings(leftOut)],
     given: { ...job.given },
     assumed: { ...job.assumed, ...derivedOf(job, chosen), ...spreadInWords(spread) },
     alternatives,

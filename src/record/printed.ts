@@ -33,6 +33,14 @@ export function wantedOf(job: Job, design: Pick<Design, 'former' | 'method' | 'c
   return PARTS.filter((part) => job.parts?.includes(part));
 }
 
+/** Kinds that the job asks for: by name, or by stating what only they are for. Others are left out when they cannot be. */
+export function askedFor(job: Job): ReadonlySet<PartKind> {
+  const asked = new Set<PartKind>();
+  for (const part of job.parts ?? []) if (part !== 'all') asked.add(part);
+  if ('shop.shaft' in job.given) asked.add('arbor');
+  return asked;
+}
+
 /** The list of parts, as they should come out. */
 export function entriesOf(solids: readonly Solid[]): PartEntry[] {
   return solids.map(({ part, name, kind, quantity, material, densityGCm3, expected, use, printNote }) => ({

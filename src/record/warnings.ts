@@ -1,5 +1,6 @@
 /** What a person should know before winding that no figure shows. */
 import type { Job } from '../job/job.ts';
+import type { Possible } from '../parts/parts.ts';
 import { strandLossValid } from '../physics/loss.ts';
 import { selfCapacitanceValid } from '../physics/medhurst.ts';
 import { ringsValid } from '../physics/ring-sum.ts';
@@ -110,4 +111,13 @@ export function warningsOf(job: Job, found: Found, alternatives: number, coverag
       `Only ${alternatives} other coils within what the job permits are better in some respect; permit more wires, diameters or pitches to see others.`,
     );
   return list;
+}
+
+/** Parts that would suit and cannot be made for this coil. */
+export function leftOutWarnings(leftOut: Possible['leftOut']): Warning[] {
+  return leftOut.map(({ kind, faults }) => {
+    const [first] = faults;
+    const why = first === undefined ? '' : `: ${first.got}; ${first.expected} would do. To have it, ${first.todo}`;
+    return { code: 'part-left-out', text: `Not printed: ${kind}${why}.` };
+  });
 }

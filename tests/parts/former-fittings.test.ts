@@ -3,7 +3,7 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import { axialAt } from '../../src/coil/layout.ts';
 import { makePart } from '../../src/kernel/make.ts';
 import { formerParts } from '../../src/parts/former.ts';
-import { partsRecordOf } from '../../src/record/make.ts';
+import { printedOf } from '../../src/record/make.ts';
 import type { PartsRecord } from '../../src/record/schema.ts';
 import { candidatesOf } from '../../src/solve/candidates.ts';
 import { designOf } from '../../src/solve/design.ts';
@@ -27,7 +27,7 @@ function laidOut(parts: Parts): PartsRecord | null {
   const job = jobOf(parts);
   for (const candidate of candidatesOf(job).slice(0, 4)) {
     const outcome = designOf(job, demandFor(job), candidate);
-    if (outcome.ok) return partsRecordOf(job, { chosen: outcome.design } as Found);
+    if (outcome.ok) return printedOf(job, { chosen: outcome.design } as Found).record;
   }
   return null;
 }

@@ -4,7 +4,7 @@ import { readJob } from '../../src/job/read.ts';
 import { makePart } from '../../src/kernel/make.ts';
 import { threemfBytes } from '../../src/kernel/threemf.ts';
 import { partsOf } from '../../src/parts/parts.ts';
-import { partsRecordOf } from '../../src/record/make.ts';
+import { printedOf } from '../../src/record/make.ts';
 import { bedsOf, entriesOf } from '../../src/record/printed.ts';
 import { refusal } from '../../src/solve/refusal.ts';
 import { search } from '../../src/solve/search.ts';
@@ -29,7 +29,7 @@ export async function partsOutcome(seed: number, full: boolean): Promise<Outcome
     const job = readJob(randomJob(seed), `random ${seed}`);
     const found = search(job);
     if (!('chosen' in found)) throw refusal(job, found);
-    const planned = partsRecordOf(job, found);
+    const { record: planned } = printedOf(job, found);
     const record = full ? planned : { ...planned, former: { ...planned.former, segments: COARSE } };
     const solids = partsOf(record);
     const entries = entriesOf(solids);

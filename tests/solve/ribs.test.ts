@@ -5,7 +5,7 @@ import type { Job } from '../../src/job/job.ts';
 import { readJob } from '../../src/job/read.ts';
 import { ribbedParts } from '../../src/parts/ribbed.ts';
 import { recordOf } from '../../src/plan.ts';
-import { partsRecordOf } from '../../src/record/make.ts';
+import { printedOf } from '../../src/record/make.ts';
 import { candidatesOf } from '../../src/solve/candidates.ts';
 import { designOf } from '../../src/solve/design.ts';
 import { tightestPair } from '../../src/solve/former.ts';
@@ -164,7 +164,7 @@ describe('designs on ribs', () => {
           expect(off).toBeLessThanOrEqual(Math.max(1e-3, 1 / (count * coil.turns)));
           // The gate of the parts finds nothing wrong.
           const found = { demand: demandFor(job), chosen: design, others: [], tried: 1, feasible: 1, ranked: [] };
-          expect(ribbedParts(partsRecordOf(job, found))).toHaveLength(1);
+          expect(ribbedParts(printedOf(job, found).record)).toHaveLength(1);
           near = Math.min(near, design.former.lengthMm - Math.max(...design.holes.map((hole) => hole.axialMm)));
         }
       }
