@@ -15,9 +15,9 @@ const PLACE_MM = 0.02;
 const STEEP = -0.715;
 const RAD = Math.PI / 180;
 
-async function made(record: CoilRecord): Promise<Facet[]> {
+async function made(record: CoilRecord): Promise<{ facets: Facet[]; volumeMm3: number }> {
   const [solid] = formerParts(record);
-  return facetsOf((await makePart(solid!)).bytes);
+  return { facets: facetsOf((await makePart(solid!)).bytes), volumeMm3: solid!.expected.volumeMm3 };
 }
 
 /** Few turns and chords, so that many fit into a test. */
@@ -84,8 +84,8 @@ describe('ribbed former read back from its bytes', () => {
         const record = ribbedRecord(options);
         const { former, windings, frame } = record;
         const [winding] = windings;
-        const [solid] = formerParts(record);
-        const facets = await made(record);
+        const { facets, volumeMm3 } = await made(record);
+        const upright = facets.filter(({ normal }) => Math.abs(normal[2]) < 1e-3);
         const { faultySides, bodies, genus } = surfaceOf(facets);
         const windows = options.count! * (options.rings! + 1);
         expect({ faultySides, bodies, genus }).toEqual({
@@ -100,7 +100,7 @@ describe('ribbed former read back from its bytes', () => {
         const { min, max } = boxOf(facets);
         expect(min[2]).toBe(0);
         expect(Math.abs(max[2] - former.lengthMm)).toBeLessThan(1e-4);
-        const off = Math.abs(volumeOf(facets) / solid!.expected.volumeMm3 - 1);
+        const off = Math.abs(volumeOf(facets) / volumeMm3 - 1);
         worstVolume = Math.max(worstVolume, off);
         // Half of what the gate allows; a lost inner ring or rib is several percent.
         expect(off).toBeLessThan(0.0025);
@@ -116,7 +116,7 @@ describe('ribbed former read back from its bytes', () => {
           const part = rib / former.ribs!.count;
           const angle = (frame.hand === 'right' ? 360 : -360) * part;
           const got = floorsOf(
-            facets,
+            upright,
             angle,
             former.outsideDiameterMm / 2 - former.groove!.depthMm,
             former.ribs!.widthMm / 2,
@@ -134,13 +134,13 @@ describe('ribbed former read back from its bytes', () => {
         expect(worstFloor).toBeLessThan(PLACE_MM);
         cases++;
       }),
-      { numRuns: 8, seed: 7 },
+      { numRuns: 10, seed: 7 },
     );
     console.log(
       `ribbed: ${cases} cages, ${holes} holes (worst ${(1000 * worstHole).toFixed(1)} um), ${floors} edges of notches (worst ${(1000 * worstFloor).toFixed(1)} um), volume off ${(100 * worstVolume).toFixed(3)} % at most`,
     );
-    expect(Math.min(cases, holes, floors)).toBeGreaterThan(10);
-  });
+    expect(Math.min(2 * cases, holes, floors)).toBeGreaterThan(10);
+  }, 30_000);
 
   test('takes the wire to its radius: half a wire lies in a notch', () => {
     const record = ribbedRecord();
