@@ -79,10 +79,11 @@ export function randomJob(seed: number): string {
     material: pick(['PLA', 'PETG']),
   };
   const shop = {
-    shaft: mm(pick([3, 4, 5, 6, 6.35, 8, 10, 12])),
+    // Now and then thicker than the bore takes.
+    shaft: mm(pick([3, 4, 5, 6, 6.35, 8, 10, 12].filter((one) => one < diameter / 3 || one < 4))),
     'shaft-form': pick(['round', 'hexagon']),
     spool: `${between(40, 160, 1)} x ${between(20, 100, 1)} mm`,
-    'spool-bore': mm(between(5, 30, 0.5)),
+    'spool-bore': mm(between(9, 30, 0.5)),
   };
   const some = printed ? ['former', 'coupon'] : ['saddle', 'coupon'];
   const parts = maybe(0.35) ? 'all' : pick([undefined, undefined, some, ['arbor', 'stand'], ['comb', 'loop gauge']]);

@@ -19,8 +19,8 @@ export interface Outcome {
   readonly features: readonly string[];
 }
 
-/** Chords round a former in a coarse run. */
-const COARSE = 48;
+/** Chords round a former in a coarse run: a multiple, like the planner's, of the steps in which seams are keyed. */
+const COARSE = 72;
 
 /** `full` keeps the chords that the planner chose. Never throws. */
 export async function partsOutcome(seed: number, full: boolean): Promise<Outcome> {
