@@ -32,10 +32,14 @@ export const DEFAULTS = {
   'shop.shaft-form': 'round',
   'shop.spool': '80 x 70 mm',
   'shop.spool-bore': '16 mm',
+  'shop.meter': '100 kHz',
+  'shop.meter-accuracy': '1 %',
+  'shop.capacitor-tolerance': '1 %',
+  units: 'metric',
 } as const;
 
 export type Data = Record<string, unknown>;
-export type Assumed = Record<string, string | number | boolean>;
+export type Assumed = Record<string, string | number | boolean | readonly string[]>;
 
 export interface Completed {
   /** The job with every default filled in, in the order of the file. */
@@ -65,7 +69,7 @@ export function complete(written: unknown): Completed {
 }
 
 /** Defaults that depend on another key. */
-function dependent(data: Data): Record<string, string | number | boolean | undefined> {
+function dependent(data: Data): Record<string, Assumed[string] | undefined> {
   const printed = at(data, 'former', 'kind') !== 'tube';
   const band = at(data, 'want', 'band') !== undefined;
   const nozzle = millimetres(at(data, 'printer', 'nozzle') ?? DEFAULTS['printer.nozzle']);
@@ -79,6 +83,7 @@ function dependent(data: Data): Record<string, string | number | boolean | undef
     'former.material': printed ? printMaterial(at(data, 'printer', 'material')) : 'card',
     'former.mounting': printed ? 'ears' : 'none',
     'former.flanges': printed,
+    'shop.capacitors': ['100 pF', '330 pF'],
     'former.body': printed ? 'full' : undefined,
     'former.ribs': printed && at(data, 'former', 'body') === 'ribbed' ? 12 : undefined,
     'former.screw': printed && at(data, 'former', 'mounting') !== 'none' ? '4.4 mm' : undefined,

@@ -10,6 +10,7 @@ import type {
   SWITCHES,
   TAP_LAYOUTS,
   TAP_METHODS,
+  UNITS,
 } from './schema.ts';
 
 export type Spacing = (typeof SPACINGS)[number];
@@ -106,6 +107,13 @@ export interface Shop {
   readonly spoolDiameterMm: number;
   readonly spoolWidthMm: number;
   readonly spoolBoreMm: number;
+  readonly meterKhz: number;
+  readonly meterName: string | null;
+  /** Of the reading, a fraction. */
+  readonly meterAccuracy: number;
+  /** Ascending. */
+  readonly capacitorsPf: readonly number[];
+  readonly capacitorTolerance: number;
 }
 
 export interface Job {
@@ -113,6 +121,7 @@ export interface Job {
   /** YYYY-MM-DD. */
   readonly date: string | null;
   readonly paper: 'A4' | 'Letter';
+  readonly units: (typeof UNITS)[number];
   readonly want: Want;
   readonly set: ReceivingSet | null;
   readonly former: JobFormer;

@@ -14,7 +14,7 @@ export function jobJsonSchema(): Record<string, unknown> {
   const schema = z.toJSONSchema(jobSchema, { io: 'input', unrepresentable: 'any' }) as Node;
   const filled = new Set([
     ...Object.keys(DEFAULTS),
-    ...['former', 'winding', 'printer', 'shop'],
+    ...['former', 'winding', 'printer', 'shop', 'shop.capacitors'],
     ...['outside-diameter', 'longest', 'material', 'mounting', 'flanges'].map((key) => `former.${key}`),
     ...['line', 'layer'].map((key) => `printer.${key}`),
   ]);

@@ -59,6 +59,7 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
     name: read.job,
     date: read.date ?? null,
     paper: read.paper,
+    units: read.units,
     want: toWant(read.want, read.winding.units !== undefined),
     set:
       read.set === undefined
@@ -116,6 +117,11 @@ function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
       spoolDiameterMm: shop.spool.x,
       spoolWidthMm: shop.spool.y,
       spoolBoreMm: shop['spool-bore'],
+      meterKhz: shop.meter,
+      meterName: shop['meter-name'] ?? null,
+      meterAccuracy: shop['meter-accuracy'],
+      capacitorsPf: ascending(shop.capacitors),
+      capacitorTolerance: shop['capacitor-tolerance'],
     },
     parts: read.parts ?? null,
     source: { file, lines: Object.fromEntries(lines) },

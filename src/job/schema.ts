@@ -35,6 +35,7 @@ export const MOUNTINGS = ['ears', 'base', 'none'] as const;
 /** What can be printed; `all` in a job stands for every one that suits its former. */
 export const PARTS = ['former', 'arbor', 'stand', 'saddle', 'comb', 'loop gauge', 'coupon'] as const;
 export const SHAFTS = ['round', 'hexagon'] as const;
+export const UNITS = ['metric', 'inch', 'both'] as const;
 export const PREFERENCES = ['least loss', 'compact', 'least wire', 'closest taps'] as const;
 /** Most switch positions of one coil. */
 export const MOST_TAPS = 60;
@@ -193,8 +194,16 @@ const shopSchema = z
     'shaft-form': choice(SHAFTS, 'A round shaft or a hexagon.'),
     spool: size('Largest wire spool: diameter x width.'),
     'spool-bore': quantity('length', 'Hole of the wire spool.'),
+    meter: quantity('frequency', 'Frequency at which the inductance meter measures.'),
+    'meter-name': field(readName, 'What the meter is called on the sheets.', { type: 'string' }).optional(),
+    'meter-accuracy': quantity('ratio', 'Its accuracy, of the reading.'),
+    capacitors: quantities(
+      'capacitance',
+      'Known capacitors to measure resonance with; two or more, the smaller and the greater far apart, for the two-capacitor method.',
+    ),
+    'capacitor-tolerance': quantity('ratio', 'How well they are known.'),
   })
-  .describe('What is on the bench, for arbor and winding stand.');
+  .describe('What is on the bench: for arbor and winding stand, and to measure with.');
 
 export const jobSchema = z
   .strictObject({
@@ -209,6 +218,7 @@ export const jobSchema = z
       format: 'date',
     }).optional(),
     paper: choice(['A4', 'Letter'], 'Paper of sheets and templates.'),
+    units: choice(UNITS, 'Lengths on the sheets in millimetres, in inches, or in both where a shop would want both.'),
     want: wantSchema,
     set: setSchema.optional(),
     former: formerSchema,

@@ -177,6 +177,11 @@ export const shopSchema = z.strictObject({
   spoolDiameterMm: num,
   spoolWidthMm: num,
   spoolBoreMm: num,
+  meterKhz: num.describe('at which the inductance meter measures'),
+  meterName: text.nullable(),
+  meterAccuracy: num.describe('a fraction of the reading'),
+  capacitorsPf: z.array(num).describe('known capacitors, ascending'),
+  capacitorTolerance: num.describe('a fraction'),
 });
 
 export const partSchema = z.strictObject({
@@ -261,6 +266,7 @@ export const recordSchema = z.strictObject({
   date: text.nullable(),
   hash: text,
   paper: z.enum(['A4', 'Letter']),
+  units: z.enum(['metric', 'inch', 'both']).optional().describe('of lengths on the sheets; metric when left out'),
   frame: frameSchema,
   demand: z.strictObject({
     kind: z.enum(['range', 'list', 'band']),

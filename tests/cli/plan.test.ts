@@ -182,8 +182,8 @@ coilwright: job.yaml, line 3, former.longest
     `${JOB}former:\n  longst: 140 mm\n`,
     `coilwright: job.yaml, line 4, former.longst
   got       a key that is not known
-  expected  one of: kind, outside-diameter, longest, wall, material, mounting,
-            flanges
+  expected  one of: kind, outside-diameter, longest, wall, material, body, ribs,
+            mounting, screw, screw-circle, flanges
   to do     did you mean longest?
 `,
   ],

@@ -85,6 +85,11 @@ describe('a job', () => {
       'shop.shaft-form': 'round',
       'shop.spool': '80 x 70 mm',
       'shop.spool-bore': '16 mm',
+      'shop.meter': '100 kHz',
+      'shop.meter-accuracy': '1 %',
+      'shop.capacitor-tolerance': '1 %',
+      'shop.capacitors': ['100 pF', '330 pF'],
+      units: 'metric',
     });
   });
 

@@ -230,7 +230,7 @@ function told(name: string, tally: Tally) {
   );
 }
 
-const RUNS = 3;
+const RUNS = 2;
 
 describe('former in sections, read back from its bytes', () => {
   test('random coils', async () => {
