@@ -11,7 +11,7 @@ import { ringAt } from './slab.ts';
 import type { Cutter, Engraving, Loft, Point2, Solid } from './solid.ts';
 import { type BaseDimensions, DOVETAIL } from './stand-dimensions.ts';
 import { M4 } from './stand-hardware.ts';
-import { edgeCutter, moved, onBed } from './stand-outline.ts';
+import { edgeCutters, moved, onBed } from './stand-outline.ts';
 import { cutMm3, wordsCut } from './words.ts';
 
 /** Rails beside the openings: a dovetail and 5 mm on either side of it. */
@@ -186,7 +186,7 @@ function pieceSolid(
     densityGCm3: printer.densityGCm3,
     shapes: moved([prism('base', [outline], 0, d.thicknessMm)], dx, dy),
     cutters: moved<Cutter>(
-      [...through, ...screws.map(({ cutter }) => cutter), ...tongueEdges(outline, piece), ...words],
+      [...through, ...screws.map(({ cutter }) => cutter), ...tongueEdges(d, piece), ...words],
       dx,
       dy,
     ),
@@ -207,12 +207,10 @@ function pieceSolid(
 }
 
 /** The lower edges of the tongues: first layers that spread would not enter a socket. */
-function tongueEdges(outline: readonly Point2[], piece: BasePiece): Cutter[] {
-  const cutters: Cutter[] = [];
-  for (const [i, a] of outline.entries()) {
-    const b = outline[(i + 1) % outline.length]!;
-    const out = (p: Point2) => p[0] > piece.toMm + 1e-9 || p[0] < piece.fromMm - 1e-9;
-    if (out(a) || out(b)) cutters.push(edgeCutter(a, b, TONGUE_CHAMFER_MM));
-  }
-  return cutters;
+function tongueEdges(d: BaseDimensions, piece: BasePiece): Cutter[] {
+  const y = railY(d);
+  const right = tongueOutline().map(([px, py]): Point2 => [piece.toMm + px, y + py]);
+  const left = tongueOutline().map(([px, py]): Point2 => [piece.fromMm - px, -y - py]);
+  const both = piece.part === 'whole' ? [] : piece.part === 'end' ? [right] : [right, left];
+  return both.flatMap((line) => edgeCutters(line, TONGUE_CHAMFER_MM));
 }

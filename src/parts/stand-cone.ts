@@ -8,13 +8,13 @@ import { PROUD_MM } from './holes.ts';
 import { areaOf, circle, prism } from './shapes.ts';
 import type { Cutter, Frame, Point2, ProfileRow, Solid } from './solid.ts';
 import type { ClampDimensions } from './stand-clamp.ts';
-import { chordsAt, turned, turnedMm3 } from './stand-outline.ts';
+import { chordsAt, turned, turnedMm3, turnedReachMm } from './stand-outline.ts';
 
 export const CONE_DEG = 20;
 const TAN = Math.tan((CONE_DEG * Math.PI) / 180);
 const SIN = Math.sin((CONE_DEG * Math.PI) / 180);
 /** Cone left over at both ends of the bores it takes, on the radius: a bore never sits on an edge. */
-const SEAT_MM = 1;
+export const SEAT_MM = 1;
 /** For the first layers, which spread. */
 const CHAMFER_MM = 0.4;
 /** Plastic between keyway and cone. */
@@ -153,9 +153,7 @@ export function coneSolid(
     prism('keyway', [house], -keyway.halfLengthMm, keyway.halfLengthMm, LYING),
     ...holes,
   ];
-  const widest = Math.max(...disc.map((row) => row.rMm));
-  const sides = circle(widest, 'solid').length;
-  const [x, y] = reachOf(widest, sides);
+  const reach = turnedReachMm(rows);
   const windowMm2 = windows ? 6 * areaOf(circle(windows.diameterMm / 2, 'hole')) : 0;
   return {
     ...what,
@@ -167,19 +165,13 @@ export function coneSolid(
       bodies: 1,
       genus: 1 + holes.length,
       genusIs: `the bore, ${holes.length} windows`,
-      minMm: [-x, -y, 0],
-      maxMm: [x, y, d.heightMm],
+      minMm: [-reach, -reach, 0],
+      maxMm: [reach, reach, d.heightMm],
       volumeMm3: turnedMm3(rows) - (areaOf(clamp.bore) + windowMm2) * d.heightMm - keywayMm3(clamp, d, disc[1]!.rMm),
     },
     printNote:
       'print on its big face, no supports; three walls, a third or more of infill; seam anywhere but on the keyway',
   };
-}
-
-/** Farthest corners of a circle drawn by {@link turned}, along x and y. */
-function reachOf(r: number, sides: number): Point2 {
-  const corners = Array.from({ length: sides }, (_, k) => (2 * Math.PI * (k + 0.5)) / sides);
-  return [r * Math.max(...corners.map(Math.cos)), r * Math.max(...corners.map(Math.sin))];
 }
 
 /** A keyway's section, open downwards: upright sides and a roof at 45 degrees. */

@@ -7,7 +7,7 @@ import type { Cutter, Engraving, Loft, Point2, Solid } from './solid.ts';
 import { CLAMP_GENUS, type ClampDimensions, clampCutters, clampMm3, clampOutline } from './stand-clamp.ts';
 import type { CrankDimensions } from './stand-dimensions.ts';
 import { M4 } from './stand-hardware.ts';
-import { moved, onBed, turned, turnedMm3 } from './stand-outline.ts';
+import { moved, onBed, turned, turnedMm3, turnedReachMm } from './stand-outline.ts';
 import { CUT_MM, cutMm3, STROKE_MM } from './words.ts';
 
 /** The pin's foot is a cone at 45 degrees, where it would break; the handle's mouth goes round it with half a millimetre. */
@@ -124,10 +124,7 @@ export function handleSolid(
     Math.tan(Math.PI / n) *
     (bore * bore * (d.handleLengthMm - MOUTH_MM) + (MOUTH_MM * (bore * bore + bore * mouth + mouth * mouth)) / 3);
   const body = turned('handle', rows);
-  const { minMm, maxMm } = onBed(
-    body.rings[1]!.map(([x, y]): Point2 => [x, y]),
-    d.handleLengthMm,
-  );
+  const reach = turnedReachMm(rows);
   return {
     ...what,
     kind: 'stand',
@@ -140,8 +137,8 @@ export function handleSolid(
       bodies: 1,
       genus: 1,
       genusIs: 'the bore',
-      minMm,
-      maxMm,
+      minMm: [-reach, -reach, 0],
+      maxMm: [reach, reach, d.handleLengthMm],
       volumeMm3: turnedMm3(rows) - boreMm3,
     },
     printNote: 'print standing, wide mouth down, no supports; three walls',

@@ -153,10 +153,11 @@ export function standDimensions(record: PartsRecord): StandDimensions {
     notches: false,
     word: 'SPOOL',
   });
-  const spoolAxisMm = Math.max(shop.spoolDiameterMm / 2 + 25, 65);
+  const spoolFootMm = Math.max(90, 2 * Math.ceil(spool.rimRMm + 10));
   const spoolUpright = uprightDimensions({
-    axisMm: spoolAxisMm,
-    footMm: Math.max(90, 2 * Math.ceil(spool.rimRMm + 10)),
+    // Not so wide for its height that the notches would lie in a roof.
+    axisMm: Math.max(shop.spoolDiameterMm / 2 + 25, 65, spoolFootMm - 38),
+    footMm: spoolFootMm,
     bearingMm,
     latch,
     notches: true,
@@ -165,9 +166,9 @@ export function standDimensions(record: PartsRecord): StandDimensions {
 
   const { cone } = arborDimensions(record);
   const spanMm = Math.ceil(former.lengthMm + 2 * (outsideMm(cone) + clamp.heightMm + ROOM_MM));
-  const spoolSpanMm =
-    shop.spoolWidthMm + 2 * (outsideMm(spool.cone) + clamp.heightMm + SPOOL_ROOM_MM + (bush?.flangeThicknessMm ?? 0));
   const flanges = 2 * (bush?.flangeThicknessMm ?? 0);
+  const atSpool = outsideMm(spool.cone) + clamp.heightMm + SPOOL_ROOM_MM;
+  const spoolSpanMm = Math.ceil(shop.spoolWidthMm + 2 * atSpool + flanges);
   const up = (mm: number) => 5 * Math.ceil(mm / 5);
   return {
     clamp,
@@ -180,7 +181,7 @@ export function standDimensions(record: PartsRecord): StandDimensions {
     latch,
     base: baseDimensions(record, spanMm, upright, STAND_WORDS),
     spoolBase: baseDimensions(record, spoolSpanMm, spoolUpright, []),
-    crank: crankDimensions(record, axisMm),
+    crank: crankDimensions(record, upright.axisMm),
     spool,
     shaftMm: up(spanMm + 2 * UPRIGHT_MM + flanges + 2 * clamp.heightMm + 4),
     spoolShaftMm: up(spoolSpanMm + 2 * UPRIGHT_MM + 6),
@@ -215,10 +216,14 @@ function uprightDimensions(ask: {
   readonly notches: boolean;
   readonly word: string;
 }): UprightDimensions {
-  const { axisMm, footMm, bearingMm, latch } = ask;
+  const { bearingMm, latch } = ask;
   const r = bearingMm / 2;
   const latchAlongMm = r + 1 + latch.radiusMm;
   const latchAsideMm = r + M4.holeMm / 2 + 4;
+  const headRMm = Math.hypot(latchAlongMm, latchAsideMm) + M4.holeMm / 2 + 4.5;
+  // The head of a thick shaft stays between the toes and over the screws.
+  const footMm = Math.max(ask.footMm, 2 * Math.ceil(headRMm + 4));
+  const axisMm = Math.max(ask.axisMm, headRMm + 25);
   const tenonWidthMm = 16;
   const screwXMm = footMm / 2 - 14;
   const notches = ask.notches ? Math.floor((axisMm - 10 - 28) / 9) + 1 : 0;
@@ -226,7 +231,7 @@ function uprightDimensions(ask: {
     thicknessMm: UPRIGHT_MM,
     axisMm,
     footMm,
-    headRMm: Math.hypot(latchAlongMm, latchAsideMm) + M4.holeMm / 2 + 4.5,
+    headRMm,
     bearingMm,
     tenonXMm: screwXMm - 8 - tenonWidthMm / 2,
     tenonWidthMm,
@@ -310,7 +315,10 @@ function crankDimensions({ printer }: PartsRecord, axisMm: number): CrankDimensi
  *
  *     tension = 0.9 x pull of the band x drum radius / radius at which the wire leaves the spool
  */
-const HELD = 0.9;
+export const HELD = 0.9;
+/** Holes of spools that are called alike differ by so much, both ways. */
+export const SPOOL_OFF_SHARE = 0.05;
+export const SPOOL_OFF_MM = 0.8;
 const RIM_STEP_MM = 3;
 const RIM_MM = 2;
 const DRUM_FLOOR_MM = 4;
@@ -318,7 +326,7 @@ const DRUM_FLOOR_MM = 4;
 function spoolDimensions(record: PartsRecord, clamp: ClampDimensions): SpoolDimensions {
   const { spoolBoreMm, spoolDiameterMm } = record.shop;
   const drumMm = 2 * (RIM_MM + RIM_STEP_MM) + DRUM_FLOOR_MM;
-  const offMm = Math.max(0.1 * spoolBoreMm, 1);
+  const offMm = Math.max(SPOOL_OFF_SHARE * spoolBoreMm, SPOOL_OFF_MM);
   const cone = coneDimensions(record, clamp, { boreMm: spoolBoreMm, offMm, discMm: drumMm });
   const wanted = Math.min(45, Math.max(20, 0.375 * spoolDiameterMm));
   const drumRMm = Math.max(wanted, cone.bigMm / 2, clamp.ringRMm + 6);

@@ -19,9 +19,7 @@ export const NUT_PLAY_MM = 0.3;
 /** Lengths that are sold, mm. */
 const LENGTHS_MM = [10, 12, 16, 20, 25, 30, 35, 40, 45, 50, 60, 70, 80];
 
-/** The shortest that reaches `mm`. @throws RangeError beyond 80 mm */
+/** The shortest that reaches `mm`; threaded rod, by the centimetre, where none does. */
 export function screwLengthMm(mm: number): number {
-  const found = LENGTHS_MM.find((length) => length >= mm);
-  if (found === undefined) throw new RangeError(`no M4 screw of ${mm} mm`);
-  return found;
+  return LENGTHS_MM.find((length) => length >= mm) ?? 10 * Math.ceil(mm / 10);
 }

@@ -1,6 +1,6 @@
 /** Outlines of flat parts, and how much of them is left where shapes are joined and cut: by strips, without a mesh. */
 
-import { boundsOf, circle, SAG_MM } from './shapes.ts';
+import { boundsOf, chordsFor, SAG_MM } from './shapes.ts';
 import { ringAt } from './slab.ts';
 import type { Cutter, Loft, Point2, Point3, ProfileRow, Shape } from './solid.ts';
 
@@ -137,9 +137,17 @@ export function hexagon(acrossFlatsMm: number): Point2[] {
   });
 }
 
+/** Corners round a turned body: a multiple of four, so that it reaches equally far on all sides. */
+const sidesOf = (rows: readonly ProfileRow[]): number =>
+  4 * Math.ceil(chordsFor(Math.max(...rows.map((row) => row.rMm))) / 4);
+
+/** How far a turned body reaches from its axis along x and y. */
+export const turnedReachMm = (rows: readonly ProfileRow[]): number =>
+  Math.max(...rows.map((row) => row.rMm)) * Math.cos(Math.PI / sidesOf(rows));
+
 /** A body turned about the upright axis through the origin. */
 export function turned(name: string, rows: readonly ProfileRow[]): Loft {
-  const sides = circle(Math.max(...rows.map((row) => row.rMm)), 'solid').length;
+  const sides = sidesOf(rows);
   return {
     kind: 'loft',
     name,
@@ -153,7 +161,7 @@ export function turned(name: string, rows: readonly ProfileRow[]): Loft {
 
 /** Volume of such a body by its frusta. */
 export function turnedMm3(rows: readonly ProfileRow[]): number {
-  const sides = circle(Math.max(...rows.map((row) => row.rMm)), 'solid').length;
+  const sides = sidesOf(rows);
   let sum = 0;
   for (let i = 1; i < rows.length; i++) {
     const { rMm: a, zMm: from } = rows[i - 1]!;
@@ -192,23 +200,30 @@ export function onBed(
   };
 }
 
-/** The lower edge from `a` to `b` of a counterclockwise outline taken off at 45 degrees, so that it enters its fellow. */
-export function edgeCutter(a: Point2, b: Point2, chamferMm: number): Cutter {
-  const long = Math.hypot(b[0] - a[0], b[1] - a[1]);
-  const [dx, dy] = [(b[0] - a[0]) / long, (b[1] - a[1]) / long];
-  const out = 0.3;
-  return {
-    kind: 'prism',
-    name: 'lower edge',
-    outlines: [
-      [
-        [-chamferMm - 1, -1],
-        [out, -1],
-        [out, chamferMm + out],
+/**
+ * The lower edges of something that stands out of an outline, taken off at 45 degrees so that it enters its fellow. `line`
+ * runs round it counterclockwise, from root to root; the cuts begin and end half a millimetre from the roots.
+ */
+export function edgeCutters(line: readonly Point2[], chamferMm: number): Cutter[] {
+  // Past a corner both cuts run on into the air, so that no two faces of cutters coincide.
+  const [short, past, out] = [-0.5, 0.7, 0.3];
+  return line.slice(1).map((b, i): Cutter => {
+    const a = line[i]!;
+    const long = Math.hypot(b[0] - a[0], b[1] - a[1]);
+    const [dx, dy] = [(b[0] - a[0]) / long, (b[1] - a[1]) / long];
+    return {
+      kind: 'prism',
+      name: 'lower edge',
+      outlines: [
+        [
+          [-chamferMm - 1, -1],
+          [out, -1],
+          [out, chamferMm + out],
+        ],
       ],
-    ],
-    fromMm: -long,
-    toMm: 0,
-    frame: { origin: [a[0], a[1], 0], x: [dy, -dx, 0], y: [0, 0, 1] },
-  };
+      fromMm: -long - (i === line.length - 2 ? short : past),
+      toMm: i === 0 ? short : past,
+      frame: { origin: [a[0], a[1], 0], x: [dy, -dx, 0], y: [0, 0, 1] },
+    };
+  });
 }

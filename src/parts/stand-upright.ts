@@ -6,7 +6,18 @@ import type { Cutter, Point2, Solid } from './solid.ts';
 import { type ClampDimensions, shaftBore } from './stand-clamp.ts';
 import type { BushDimensions, LatchDimensions, UprightDimensions } from './stand-dimensions.ts';
 import { M4, NUT_PLAY_MM } from './stand-hardware.ts';
-import { edgeCutter, hull, moved, notched, onBed, placed, slotted, turned, turnedMm3 } from './stand-outline.ts';
+import {
+  edgeCutters,
+  hull,
+  moved,
+  notched,
+  onBed,
+  placed,
+  slotted,
+  turned,
+  turnedMm3,
+  turnedReachMm,
+} from './stand-outline.ts';
 import { cutMm3, type Words, wordsCut } from './words.ts';
 
 /** Height of the upright part of the feet's sides. */
@@ -47,16 +58,18 @@ function footLine(d: UprightDimensions): Point2[] {
     ];
     return [...up.map(([px, y]): Point2 => [x - px, y]), ...up.toReversed().map(([px, y]): Point2 => [x + px, y])];
   };
-  const tenon = (x: number): Point2[] => {
-    const w = d.tenonWidthMm / 2;
-    return [
-      [x - w, 0],
-      [x - w, -d.tenonMm],
-      [x + w, -d.tenonMm],
-      [x + w, 0],
-    ];
-  };
-  return [...slot(-d.screwXMm), ...tenon(-d.tenonXMm), ...tenon(d.tenonXMm), ...slot(d.screwXMm)];
+  return [...slot(-d.screwXMm), ...tenonOutline(d, -d.tenonXMm), ...tenonOutline(d, d.tenonXMm), ...slot(d.screwXMm)];
+}
+
+/** A tenon from root to root. */
+function tenonOutline(d: UprightDimensions, x: number): Point2[] {
+  const w = d.tenonWidthMm / 2;
+  return [
+    [x - w, 0],
+    [x - w, -d.tenonMm],
+    [x + w, -d.tenonMm],
+    [x + w, 0],
+  ];
 }
 
 /** The bearing: round below, open upwards at 45 degrees to the right. */
@@ -164,16 +177,7 @@ function arrowLeft(d: UprightDimensions): Point2[][] {
 }
 
 function tenonEdges(d: UprightDimensions): Cutter[] {
-  const w = d.tenonWidthMm / 2;
-  return [-d.tenonXMm, d.tenonXMm].flatMap((x) => {
-    const end = -d.tenonMm;
-    const root = -1;
-    return [
-      edgeCutter([x - w, root], [x - w, end], TENON_CHAMFER_MM),
-      edgeCutter([x - w, end], [x + w, end], TENON_CHAMFER_MM),
-      edgeCutter([x + w, end], [x + w, root], TENON_CHAMFER_MM),
-    ];
-  });
+  return [-d.tenonXMm, d.tenonXMm].flatMap((x) => edgeCutters(tenonOutline(d, x), TENON_CHAMFER_MM));
 }
 
 /** A bar that turns on a screw across the bearing's open side. */
@@ -213,10 +217,7 @@ export function bushSolid(record: PartsRecord, d: BushDimensions, what: What & {
     { rMm: r, zMm: d.heightMm },
   ];
   const body = turned('bush', rows);
-  const { minMm, maxMm } = onBed(
-    body.rings[1]!.map(([x, y]): Point2 => [x, y]),
-    d.heightMm,
-  );
+  const reach = turnedReachMm(rows);
   return {
     ...what,
     kind: 'stand',
@@ -228,8 +229,8 @@ export function bushSolid(record: PartsRecord, d: BushDimensions, what: What & {
       bodies: 1,
       genus: 1,
       genusIs: 'the bore',
-      minMm,
-      maxMm,
+      minMm: [-reach, -reach, 0],
+      maxMm: [reach, reach, d.heightMm],
       volumeMm3: turnedMm3(rows) - areaOf(bore) * d.heightMm,
     },
     printNote: 'print on the flange, no supports; solid; file the running surface smooth',

@@ -28,9 +28,17 @@ import { boundsOf } from './shapes.ts';
 import type { Solid } from './solid.ts';
 import { baseSolids } from './stand-base.ts';
 import { collarSolid } from './stand-clamp.ts';
-import { coneSolid, coneWallMm, greatestShaftMm, hasWall, leastSmallMm } from './stand-cone.ts';
+import { coneSolid, coneWallMm, greatestShaftMm, hasWall, leastSmallMm, SEAT_MM } from './stand-cone.ts';
 import { crankSolid, handleSolid } from './stand-crank.ts';
-import { type SpoolDimensions, type StandDimensions, standDimensions, uprightScrewMm } from './stand-dimensions.ts';
+import {
+  HELD,
+  SPOOL_OFF_MM,
+  SPOOL_OFF_SHARE,
+  type SpoolDimensions,
+  type StandDimensions,
+  standDimensions,
+  uprightScrewMm,
+} from './stand-dimensions.ts';
 import { M4, screwLengthMm } from './stand-hardware.ts';
 import { bushSolid, latchSolid, uprightOutline, uprightSolid } from './stand-upright.ts';
 
@@ -109,7 +117,7 @@ export function standParts(record: PartsRecord): Solid[] {
 }
 
 function spoolUse({ windings, shop }: PartsRecord, { cone, bandN, drumRMm }: SpoolDimensions): string {
-  const full = (0.9 * drumRMm) / (shop.spoolDiameterMm / 2);
+  const full = (HELD * drumRMm) / (shop.spoolDiameterMm / 2);
   return `one in each end of the spool's hole, ${mm(cone.leastBoreMm)} to ${mm(cone.mostBoreMm)} mm; drag: a cord one and a half times round the groove, one end tied to the upright, a rubber band on the end that the drum pulls at, hooked into a notch of the upright: a lower one pulls harder; the wire's tension is ${full.toFixed(2)} of the band's pull on a full spool and grows as the spool runs empty: for ${mm(windings[0]!.tensionHighN)} N stretch the band to ${mm(bandN, 0)} N, and check with a scale on the wire`;
 }
 
@@ -211,11 +219,22 @@ const withSpool = (record: PartsRecord, spoolDiameterMm: number): PartsRecord =>
 
 /** The spool's hole has to take the shaft and a cone round it. */
 function spoolFaults(record: PartsRecord, { clamp, spool }: StandDimensions): FaultParts[] {
+  const { shaftMm, shaftForm, spoolBoreMm, spoolDiameterMm } = record.shop;
+  if (spoolBoreMm >= spoolDiameterMm)
+    return [
+      {
+        code: 'stand-spool-bore',
+        place: { key: 'shop.spool-bore' },
+        got: `a spool of ${mm(spoolDiameterMm)} mm with a hole of ${mm(spoolBoreMm)} mm`,
+        expected: 'a hole smaller than the spool',
+        todo: `state a hole below ${mm(spoolDiameterMm)} mm, or a larger spool`,
+      },
+    ];
   if (hasWall(record, clamp, spool.cone)) return [];
-  const { shaftMm, shaftForm, spoolBoreMm } = record.shop;
   const small = leastSmallMm(clamp, coneWallMm(record));
-  // The small end is the hole less a tenth of it, or a millimetre, and two millimetres.
-  const bore = Math.ceil(Math.max(small + 3, (small + 2) / 0.9) * 10) / 10;
+  // The least hole that the cone takes, and how far the one that it is made for may be off.
+  const least = small + 2 * SEAT_MM;
+  const bore = Math.ceil(Math.max(least + SPOOL_OFF_MM, least / (1 - SPOOL_OFF_SHARE)) * 10) / 10;
   const most = greatestShaftMm(record, spool.cone.smallMm);
   const across = shaftForm === 'round' ? '' : ' across flats';
   return [
