@@ -4,7 +4,7 @@
  * missing flange, ear or groove.
  */
 import type { FormerDimensions } from './dimensions.ts';
-import { datumDepthMm, earOutline, earOverlapMm } from './holes.ts';
+import { datumDepthMm, earHalfRootMm, earOutline, earOverlapMm } from './holes.ts';
 import { postsVolume } from './posts.ts';
 import { ridgesVolume } from './ridges.ts';
 import type { Engraving, Point2, ProfileRow, Skin } from './solid.ts';
@@ -71,6 +71,9 @@ export function earsVolume(d: FormerDimensions): number {
     const hole = Math.PI * (ear.holeDiameterMm / 2) ** 2;
     sum += (areaOutside(outline, d.footR) - hole) * low;
     sum += Math.max(0, areaOutside(outline, Math.max(rootR, d.outsideR)) - hole) * (ear.thicknessMm - low);
+    // At the bed the ear's edge is chamfered and its hole opened out; where it covers the foot's own chamfer, that is filled.
+    const filled = 2 * earHalfRootMm(ear, rootR);
+    sum -= ((edgeOutside(outline, d.footR) + Math.PI * ear.holeDiameterMm - filled) * d.chamferMm ** 2) / 2;
   }
   return sum;
 }
@@ -81,20 +84,30 @@ export function baseHolesVolume(d: FormerDimensions): number {
   return base === null ? 0 : base.holes * Math.PI * (base.holeDiameterMm / 2) ** 2 * base.thicknessMm;
 }
 
+function edgeOutside(outline: readonly Point2[], r: number): number {
+  let length = 0;
+  for (const [i, [x, y]] of outline.entries()) {
+    const [u, v] = outline[(i + 1) % outline.length]!;
+    if (Math.hypot(x + u, y + v) / 2 > r) length += Math.hypot(u - x, v - y);
+  }
+  return length;
+}
+
 function areaOutside(outline: readonly Point2[], r: number): number {
   const half = Math.max(...outline.map((p) => Math.abs(p[1])));
   const strips = 400;
   let area = 0;
   for (let i = 0; i < strips; i++) {
     const y = half * ((2 * (i + 0.5)) / strips - 1);
-    let far = 0;
+    const near = Math.abs(y) < r ? Math.sqrt(r * r - y * y) : 0;
+    const crossings: number[] = [];
     for (let k = 0; k < outline.length; k++) {
       const [ax, ay] = outline[k]!;
       const [bx, by] = outline[(k + 1) % outline.length]!;
-      if (ay > y !== by > y) far = Math.max(far, ax + ((y - ay) / (by - ay)) * (bx - ax));
+      if (ay > y !== by > y) crossings.push(Math.max(near, ax + ((y - ay) / (by - ay)) * (bx - ax)));
     }
-    const near = Math.abs(y) < r ? Math.sqrt(r * r - y * y) : 0;
-    area += Math.max(0, far - near) * ((2 * half) / strips);
+    crossings.sort((a, b) => a - b);
+    for (let k = 1; k < crossings.length; k += 2) area += (crossings[k]! - crossings[k - 1]!) * ((2 * half) / strips);
   }
   return area;
 }

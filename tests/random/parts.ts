@@ -19,8 +19,8 @@ export interface Outcome {
   readonly features: readonly string[];
 }
 
-/** Chords round a former in a coarse run: a multiple, like the planner's, of the steps in which seams are keyed. */
-const COARSE = 72;
+/** Chords round a former in a coarse run. Sections keep theirs: their seams are keyed at them. */
+const COARSE = 48;
 
 /** `full` keeps the chords that the planner chose. Never throws. */
 export async function partsOutcome(seed: number, full: boolean): Promise<Outcome> {
@@ -30,7 +30,9 @@ export async function partsOutcome(seed: number, full: boolean): Promise<Outcome
     const found = search(job);
     if (!('chosen' in found)) throw refusal(job, found);
     const { record: planned } = printedOf(job, found);
-    const record = full ? planned : { ...planned, former: { ...planned.former, segments: COARSE } };
+    const fine = full || planned.former.joints.length > 0;
+    const segments = fine ? planned.former.segments : Math.min(COARSE, planned.former.segments);
+    const record = { ...planned, former: { ...planned.former, segments } };
     const solids = partsOf(record);
     const entries = entriesOf(solids);
     const beds = bedsOf(entries, record.printer);
