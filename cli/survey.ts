@@ -21,7 +21,7 @@ export function describeSurvey(yargs: Argv) {
     .option('out', {
       type: 'string',
       requiresArg: true,
-      describe: 'folder to write the record and the range sheet to; nothing is written when left out',
+      describe: 'folder to write the record and the reference sheet to; nothing is written when left out',
     })
     .option('json', { type: 'boolean', default: false, describe: 'print the record, and nothing else' })
     .option('explain', {

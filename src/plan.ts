@@ -2,7 +2,7 @@
  * The pipeline of `plan`, without I/O:
  *
  *     job ──> demand ──> candidates ──> designs ──> chosen coil ──> record ──┬──> winding sheet (PDF)
- *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template, range sheet (PDF), netlist
+ *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template, reference sheet (PDF), netlist
  *      │     demand)     candidates)    design)     search)        make)     ├──> hole pattern (SVG, DXF), former (STL, in a worker)
  *      └────────────────────── nothing fits: solve/refusal ──> fault 4       └──> plan.json
  *
@@ -67,15 +67,20 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
     const beds = making.then((parts) => bedFiles(kernel, record, parts));
     beds.catch(() => undefined);
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
-    const { rangeSheet } = await import('./sheets/range-sheet.ts');
+    const { referenceSheet } = await import('./sheets/reference-sheet.ts');
     const sheet = await windingSheet(record);
-    const ranges = await rangeSheet(record);
+    const ranges = await referenceSheet(record);
     const made = await making;
     const partsSheet = await partsSheetFile(record, made);
     const files: OutputFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
       ...(await surfaceFiles(record)),
-      { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
+      {
+        path: 'reference-sheet.pdf',
+        kind: 'pdf',
+        bytes: ranges,
+        note: 'ranges, curves, switch wiring, and how the figures come about',
+      },
       netlistFile(record),
       ...partsSheet,
       ...partFiles(record, made),

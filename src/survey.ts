@@ -1,7 +1,7 @@
 /**
  * The pipeline of `survey`, without I/O:
  *
- *     coil file ──> measured coil ──> turns where they lie ──> figures at work ──> record ──┬──> range sheet, netlist
+ *     coil file ──> measured coil ──> turns where they lie ──> figures at work ──> record ──┬──> reference sheet, netlist
  *     (job/          (job/coil)        (coil/coil)              (record/figures)  (record/  └──> plan.json
  *      coil-file)                                                                  survey)
  *
@@ -54,10 +54,15 @@ export function surveyRecordOf(file: CoilFile, version: string): SurveyRecord {
 /** The record and every file of the output folder. */
 export async function surveyFiles(file: CoilFile, options: { version: string }): Promise<Output<SurveyRecord>> {
   const record = surveyRecordOf(file, options.version);
-  const { rangeSheet } = await import('./sheets/range-sheet.ts');
-  const ranges = await rangeSheet(record);
+  const { referenceSheet } = await import('./sheets/reference-sheet.ts');
+  const ranges = await referenceSheet(record);
   return listed(record, [
-    { path: 'range-sheet.pdf', kind: 'pdf', bytes: ranges, note: 'what every position tunes, and its figures' },
+    {
+      path: 'reference-sheet.pdf',
+      kind: 'pdf',
+      bytes: ranges,
+      note: 'ranges, curves, switch wiring, and how the figures come about',
+    },
     netlistFile(record),
   ]);
 }

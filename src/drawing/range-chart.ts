@@ -2,7 +2,7 @@
  * The range chart: one bar a switch position on a logarithmic frequency axis, wavelengths on the upper edge. Shared and missing
  * stretches, second resonances and the band are marked. Origin at the lower left corner of the picture, Y up, millimetres.
  */
-import { CHART } from '../../templates/wording/range-sheet.ts';
+import { CHART } from '../../templates/wording/reference-sheet.ts';
 import type { Measure } from './boxes.ts';
 import type { Drawing, Shape } from './drawing.ts';
 import { type LogAxis, placeOn, ticksOf, written } from './log-axis.ts';

@@ -11,11 +11,12 @@ import {
   tapsToClose,
 } from '../coil/positions.ts';
 import type { Rest, WorkingCoil } from '../coil/working-coil.ts';
+import { curveOf } from './curves.ts';
 import { decimals, significant } from './rounding.ts';
 import type { CoilRecord, Setting, Tap } from './schema.ts';
 import { settingsOf } from './settings.ts';
 
-export type WorkingFigures = Pick<Tap, 'working' | 'range' | 'ends'>;
+export type WorkingFigures = Pick<Tap, 'working' | 'range' | 'ends' | 'curve'>;
 
 /** Positions of a coil at work, and the parts of the record that follow from them. */
 export interface Figures {
@@ -107,6 +108,7 @@ export function figuresOf(coil: WorkingCoil, conditions: Conditions): Figures {
         bandwidthKhz: significant(at.bandwidthKhz, 3),
         parallelKohm: significant(at.parallelKohm, 3),
       })),
+      curve: curveOf(coil, position, conditions),
     })),
     surroundings: {
       leadPf: coil.around.leadPf,

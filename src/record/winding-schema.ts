@@ -67,6 +67,14 @@ const tapSchema = z.strictObject({
       }),
     )
     .describe('the position at both ends and the middle of its range; empty without a set'),
+  curve: z
+    .array(
+      z.strictObject({
+        capacitancePf: num.describe('of the set across the position: capacitor, stray, aerial'),
+        frequencyKhz: num,
+      }),
+    )
+    .describe('frequency against capacitance, from capacitor out to in in equal ratios; empty without a set'),
 });
 
 const unitTapSchema = z.strictObject({

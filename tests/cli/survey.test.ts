@@ -60,18 +60,22 @@ describe('survey', () => {
     const { exit, out } = await command(['survey', '-', '--out', 'found'], terminal);
     expect(exit).toBe(0);
     expect(out).toContain('Written to found\n');
-    expect(readdirSync(join(terminal.folder, 'found')).sort()).toEqual(['coil.cir', 'plan.json', 'range-sheet.pdf']);
+    expect(readdirSync(join(terminal.folder, 'found')).sort()).toEqual([
+      'coil.cir',
+      'plan.json',
+      'reference-sheet.pdf',
+    ]);
     const record = surveyRecordSchema.parse(
       JSON.parse(readFileSync(join(terminal.folder, 'found', 'plan.json'), 'utf8')),
     );
-    expect(record.files.map(({ path }) => path)).toEqual(['range-sheet.pdf', 'coil.cir']);
+    expect(record.files.map(({ path }) => path)).toEqual(['reference-sheet.pdf', 'coil.cir']);
     writeFileSync(join(terminal.folder, 'found', 'notes.txt'), 'mine');
     expect(await command(['survey', '-', '--out', 'found'], terminal)).toMatchObject({ exit: 0 });
     expect(readdirSync(join(terminal.folder, 'found')).sort()).toEqual([
       'coil.cir',
       'notes.txt',
       'plan.json',
-      'range-sheet.pdf',
+      'reference-sheet.pdf',
     ]);
     mkdirSync(join(terminal.folder, 'mine'));
     writeFileSync(join(terminal.folder, 'mine', 'thesis.txt'), 'mine');

@@ -241,6 +241,11 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
             bandwidthKhz: 4 + k,
             parallelKohm: 120 + 20 * k,
           })),
+          // As straight on logarithmic axes as a coil without capacitance of its own.
+          curve: Array.from({ length: 9 }, (_, k) => ({
+            capacitancePf: round(90 * (455 / 90) ** (k / 8), 2),
+            frequencyKhz: round((1200 + i) * ((530 + i) / (1200 + i)) ** (k / 8), 2),
+          })),
         })),
       },
     ],

@@ -146,11 +146,11 @@ describe('the record of a survey', () => {
     let made = 0;
     for (const { name, text } of COILS) {
       const { record, files } = await surveyFiles(readCoilFile(text, `${name}.yaml`), { version: '9.9.9' });
-      expect(files.map(({ path }) => path)).toEqual(['plan.json', 'range-sheet.pdf', 'coil.cir']);
+      expect(files.map(({ path }) => path)).toEqual(['plan.json', 'reference-sheet.pdf', 'coil.cir']);
       expect(JSON.parse(new TextDecoder().decode(files[0]!.bytes))).toEqual(record);
       expect(record.job.toLowerCase().replaceAll(' ', '-')).toBe(name);
       expect(record.files).toEqual([
-        { path: 'range-sheet.pdf', kind: 'pdf', sha256: expect.stringMatching(/^[0-9a-f]{64}$/) },
+        { path: 'reference-sheet.pdf', kind: 'pdf', sha256: expect.stringMatching(/^[0-9a-f]{64}$/) },
         { path: 'coil.cir', kind: 'netlist', sha256: expect.stringMatching(/^[0-9a-f]{64}$/) },
       ]);
       made++;

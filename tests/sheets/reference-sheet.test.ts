@@ -4,7 +4,7 @@ import { axisOf, drawRangeChart, type RangeChart } from '../../src/drawing/range
 import { readCoilFile } from '../../src/job/coil-file.ts';
 import type { CoilRecord } from '../../src/record/schema.ts';
 import { Paper } from '../../src/sheets/page.ts';
-import { layOutRangeSheet, rangeFrame, rangeSheet } from '../../src/sheets/range-sheet.ts';
+import { layOutReferenceSheet, referenceFrame, referenceSheet } from '../../src/sheets/reference-sheet.ts';
 import { surveyRecordOf } from '../../src/survey.ts';
 import { layoutFaults } from '../helpers/layout.ts';
 import { readPdf } from '../helpers/pdf.ts';
@@ -37,11 +37,11 @@ const LAYOUTS: readonly (readonly [name: string, record: CoilRecord])[] = [3, 24
   ]),
 );
 
-describe('range sheet, laid out', () => {
+describe('reference sheet, laid out', () => {
   test.each(LAYOUTS)('%s: no text over another, none outside, none below 8 pt', (_name, record) => {
-    const pages = layOutRangeSheet(record, measure);
+    const pages = layOutReferenceSheet(record, measure);
     expect(pages.length).toBeGreaterThan(0);
-    expect(layoutFaults(pages, rangeFrame, measure)).toEqual([]);
+    expect(layoutFaults(pages, referenceFrame, measure)).toEqual([]);
     const texts = pages.flatMap((page) => page.shapes.filter((shape) => shape.shape === 'text'));
     expect(texts.length).toBeGreaterThan(record.windings[0]!.taps.length * 20);
   });
@@ -49,7 +49,7 @@ describe('range sheet, laid out', () => {
   test('names that take several lines, and a band narrower than its words', () => {
     const record = { ...ranged(3, 'A4'), job: 'A name of some length for a coil '.repeat(2).trim() };
     const narrow = { ...record, demand: { ...record.demand, bandLowKhz: 9000, bandHighKhz: 9100 } };
-    expect(layoutFaults(layOutRangeSheet(narrow, measure), rangeFrame, measure)).toEqual([]);
+    expect(layoutFaults(layOutReferenceSheet(narrow, measure), referenceFrame, measure)).toEqual([]);
   });
 });
 
@@ -115,14 +115,14 @@ describe('the chart', () => {
   });
 });
 
-describe('range sheet, read back', () => {
+describe('reference sheet, read back', () => {
   test('prints the figures of a survey', async () => {
     const text = `name: Read back
 coil: { former-diameter: 76.2 mm, wire: 24 AWG enamel, turns: 60, pitch: 0.6 mm, taps: [20, 40] }
 set: { capacitor: 15 pF to 380 pF }
 band: 530 kHz to 1700 kHz`;
     const record = surveyRecordOf(readCoilFile(text, 'x'), '9.9.9');
-    const pdf = await readPdf(await rangeSheet(record));
+    const pdf = await readPdf(await referenceSheet(record));
     const cells = pdf.pages.flatMap((page) => page.texts.map((one) => one.text));
     const all = cells.join(' ').replace(/\s+/g, ' ');
     let checked = 0;
@@ -144,18 +144,20 @@ band: 530 kHz to 1700 kHz`;
     }
     for (const wanted of [record.job, record.hash.slice(0, 12), 'set.stray: 12 pF', 'band 530 – 1700 kHz'])
       expect(all).toContain(wanted);
-    console.log(`range sheet: ${checked} printed figures agree with the record`);
+    console.log(`reference sheet: ${checked} printed figures agree with the record`);
     expect(checked).toBe(3 * 8);
-    expect([pdf.title, pdf.printScaling, pdf.language]).toEqual(['Range sheet: Read back', 'None', 'en']);
+    expect([pdf.title, pdf.printScaling, pdf.language]).toEqual(['Reference sheet: Read back', 'None', 'en']);
   });
 
   test('is the same for the same record, and made of records of a plan and of ones without a set', async () => {
     const record = sampleRecord();
-    expect(Buffer.compare(Buffer.from(await rangeSheet(record)), Buffer.from(await rangeSheet(record)))).toBe(0);
+    expect(Buffer.compare(Buffer.from(await referenceSheet(record)), Buffer.from(await referenceSheet(record)))).toBe(
+      0,
+    );
     const bare = 'coil: { mean-diameter: 76 mm, wire: 24 AWG enamel, turns: 6, pitch: 1 mm }';
     const alone = surveyRecordOf(readCoilFile(bare, 'x'), '9.9.9');
-    const pages = layOutRangeSheet(alone, measure);
-    expect(layoutFaults(pages, rangeFrame, measure)).toEqual([]);
+    const pages = layOutReferenceSheet(alone, measure);
+    expect(layoutFaults(pages, referenceFrame, measure)).toEqual([]);
     expect(alone.windings[0]!.taps[0]!.range).toBeNull();
   });
 });

@@ -1,5 +1,5 @@
-/** The blocks of the range sheet, from the record of any verb. */
-import { CHART, ENDS, KINDS, NOTES, POSITIONS, TAKEN } from '../../templates/wording/range-sheet.ts';
+/** The blocks of the reference sheet, from the record of any verb. */
+import { CHART, ENDS, KINDS, NOTES, POSITIONS, TAKEN } from '../../templates/wording/reference-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import { chartHeight, drawRangeChart, type RangeChart, ROW_MM } from '../drawing/range-chart.ts';
 import { moved, SMALL_MM } from '../drawing/shapes.ts';

@@ -1,7 +1,7 @@
-/** The fixed words of the range sheet. */
+/** The fixed words of the reference sheet. */
 
-export const RANGE = {
-  document: 'Range sheet',
+export const REFERENCE = {
+  document: 'Reference sheet',
   chart: 'what every position tunes',
   figures: 'figures of every position',
   kinds: 'switch, conditions, notes',

@@ -1,14 +1,14 @@
 /**
- * The range sheet: the chart of what every position tunes, the figures behind it, the switch kinds side by side, and what all
+ * The reference sheet: the chart of what every position tunes, the figures behind it, the switch kinds side by side, and what all
  * was taken with. It reads the record of any verb and nothing else: same record, same bytes.
  */
-import { RANGE } from '../../templates/wording/range-sheet.ts';
+import { REFERENCE } from '../../templates/wording/reference-sheet.ts';
 import type { Box, Measure } from '../drawing/boxes.ts';
 import { moved } from '../drawing/shapes.ts';
 import type { FiguresRecord } from '../record/survey-schema.ts';
 import { type Block, stack } from './block.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
-import * as blocks from './range-blocks.ts';
+import * as blocks from './reference-ranges.ts';
 import { titleBlock } from './title-block.ts';
 
 /** Left free round every sheet: across, and along. */
@@ -67,18 +67,18 @@ class Filling {
 
 function fill(record: FiguresRecord, widthMm: number, heightMm: number, measure: Measure): Body[] {
   const pages = new Filling(heightMm);
-  pages.page(RANGE.chart);
-  pages.put(blocks.chart(record, widthMm, heightMm * CHART_SHARE, measure), RANGE.chart);
-  pages.putParted(blocks.positions(record, widthMm, measure), RANGE.figures);
-  pages.putParted(blocks.ends(record, widthMm, measure), RANGE.figures);
-  pages.put(blocks.endsHow(widthMm, measure), RANGE.figures);
+  pages.page(REFERENCE.chart);
+  pages.put(blocks.chart(record, widthMm, heightMm * CHART_SHARE, measure), REFERENCE.chart);
+  pages.putParted(blocks.positions(record, widthMm, measure), REFERENCE.figures);
+  pages.putParted(blocks.ends(record, widthMm, measure), REFERENCE.figures);
+  pages.put(blocks.endsHow(widthMm, measure), REFERENCE.figures);
   const kinds = blocks.kinds(record, widthMm, measure);
   if (kinds !== null) {
-    pages.putParted(kinds, RANGE.kinds);
-    pages.put(stack(blocks.kindNotes(record, widthMm, measure), 0.8), RANGE.kinds);
+    pages.putParted(kinds, REFERENCE.kinds);
+    pages.put(stack(blocks.kindNotes(record, widthMm, measure), 0.8), REFERENCE.kinds);
   }
   for (const group of [blocks.taken(record, widthMm, measure), blocks.notes(record, widthMm, measure)])
-    if (group.length > 0) putList(pages, group, RANGE.kinds);
+    if (group.length > 0) putList(pages, group, REFERENCE.kinds);
   return pages.bodies;
 }
 
@@ -96,15 +96,15 @@ function putList(pages: Filling, group: readonly Block[], part: string): void {
 }
 
 /** The pages as drawings. */
-export function layOutRangeSheet(record: FiguresRecord, measure: Measure): Page[] {
+export function layOutReferenceSheet(record: FiguresRecord, measure: Measure): Page[] {
   const [paperWidth, paperHeight] = PAPER_MM[record.paper];
   const widthMm = paperWidth - 2 * MARGIN_MM.across;
   const headOf = (part: string, sheet: string) =>
-    titleBlock(record, { document: RANGE.document, part, sheet }, widthMm, measure);
-  const head = headOf(RANGE.figures, RANGE.sheet(10, 10));
+    titleBlock(record, { document: REFERENCE.document, part, sheet }, widthMm, measure);
+  const head = headOf(REFERENCE.figures, REFERENCE.sheet(10, 10));
   const bodies = fill(record, widthMm, paperHeight - 2 * MARGIN_MM.along - head.heightMm - GAP, measure);
   return bodies.map((body, i) => {
-    const top = { ...headOf(body.part, RANGE.sheet(i + 1, bodies.length)), heightMm: head.heightMm };
+    const top = { ...headOf(body.part, REFERENCE.sheet(i + 1, bodies.length)), heightMm: head.heightMm };
     const { shapes } = stack([top, ...body.blocks], GAP);
     return {
       widthMm: paperWidth,
@@ -115,7 +115,7 @@ export function layOutRangeSheet(record: FiguresRecord, measure: Measure): Page[
 }
 
 /** What a page keeps free of ink. */
-export function rangeFrame(page: Page): Box {
+export function referenceFrame(page: Page): Box {
   return {
     left: MARGIN_MM.across,
     right: page.widthMm - MARGIN_MM.across,
@@ -124,11 +124,11 @@ export function rangeFrame(page: Page): Box {
   };
 }
 
-/** The range sheet of a record as the bytes of a PDF. */
-export async function rangeSheet(record: FiguresRecord): Promise<Uint8Array> {
+/** The reference sheet of a record as the bytes of a PDF. */
+export async function referenceSheet(record: FiguresRecord): Promise<Uint8Array> {
   const paper = new Paper({
-    title: `${RANGE.document}: ${record.job}`,
-    subject: RANGE.record(record.hash.slice(0, 12)),
+    title: `${REFERENCE.document}: ${record.job}`,
+    subject: REFERENCE.record(record.hash.slice(0, 12)),
   });
-  return paper.write(layOutRangeSheet(record, paper));
+  return paper.write(layOutReferenceSheet(record, paper));
 }
