@@ -21,7 +21,7 @@ const WIRES = [
   '22 AWG double cotton',
   '26 AWG single silk',
   '20 x 0.1 mm litz single silk',
-  '1.2 mm bare',
+  '1.25 mm bare',
 ];
 
 /** A job as text, the same for the same seed. */
@@ -41,7 +41,7 @@ export function randomJob(seed: number): string {
   // Turns that a coil of this size can hold: inductance grows with the diameter.
   const high = between(4, 40, 0.1) * (diameter / 20) ** 1.5;
   const taps = pick([1, 2, 2, 3, 4, 5, 6, 8, 11, 15]);
-  const low = high / between(1.6, 14, 0.1);
+  const low = high / between(taps < 5 ? 1.6 : 6, 16, 0.1);
   const nozzle = pick([0.25, 0.4, 0.4, 0.4, 0.6]);
   const height = maybe(0.25) ? between(50, 120, 1) : between(150, 300, 1);
   const longest = maybe(0.3) ? 1.8 * height : Math.max(60, height - 5);
@@ -52,7 +52,9 @@ export function randomJob(seed: number): string {
     longest: mm(Math.round(printed ? longest : 400)),
     mounting,
     ...(printed ? { flanges: maybe(0.7) } : {}),
-    ...(ribbed ? { body: 'ribbed', ribs: pick([6, 8, 9, 12, 16, 24]) } : {}),
+    ...(ribbed
+      ? { body: 'ribbed', ribs: pick([6, 8, 9, 12, 16, 24].filter((one) => one === 6 || one <= diameter / 4)) }
+      : {}),
     ...(maybe(0.15) ? { wall: mm(between(1, 4, 0.05)) } : {}),
     ...(mounting !== 'none' && maybe(0.4) ? { screw: mm(pick([3.4, 4.4, 5.5])) } : {}),
     ...(mounting !== 'none' && maybe(0.15) ? { 'screw-circle': mm(between(diameter + 10, diameter + 50, 1)) } : {}),
@@ -61,9 +63,9 @@ export function randomJob(seed: number): string {
   const winding = {
     hand: pick(['right', 'left']),
     earthed: pick(['start', 'finish']),
-    pitch: pick(['any', 'any', 'close', 'spaced', 'spaced', mm(between(0.3, 3))]),
-    'tap-method': pick(['auto', 'auto', 'twisted loop', 'lifted turn', 'cut pair', 'lug', 'drawn in']),
-    'tap-layout': pick(['auto', 'in line', 'staggered']),
+    pitch: pick(['any', 'any', 'any', 'close', 'spaced', 'spaced', 'spaced', mm(between(0.8, 3, 0.2))]),
+    'tap-method': pick(['auto', 'auto', 'auto', 'auto', 'twisted loop', 'lifted turn', 'cut pair', 'lug', 'drawn in']),
+    'tap-layout': pick(['auto', 'auto', 'in line', 'staggered']),
     'finish-trim': maybe(0.7),
   };
   const printer = {

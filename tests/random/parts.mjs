@@ -1,7 +1,9 @@
 // npm run check:parts: the printed parts of random jobs, seeded and resumable. Every one passes the checks on its bytes or is
 // refused with a reason; anything else is a failure.
 //
-//     npm run check:parts -- [--count 1000] [--seed 1] [--full 100] [--fresh]
+//     npm run check:parts -- [--made 1000] [--seed 1] [--fresh]
+//
+// Seeds are taken from --seed on until so many jobs are made; every ninth has the chords of the planner, the others fewer.
 //
 // Outcomes are kept in node_modules/.cache and a run that was broken off goes on where it was; --fresh starts anew.
 import { spawn } from 'node:child_process';
@@ -16,13 +18,14 @@ import { build } from 'esbuild';
 
 const { values } = parseArgs({
   options: {
-    count: { type: 'string', default: '1000' },
+    made: { type: 'string', default: '1000' },
     seed: { type: 'string', default: '1' },
-    full: { type: 'string', default: '100' },
     fresh: { type: 'boolean', default: false },
   },
 });
-const [count, first, full] = [values.count, values.seed, values.full].map(Number);
+const [made, first] = [values.made, values.seed].map(Number);
+/** Every so many jobs at full resolution. */
+const FULL = 9;
 const here = dirname(fileURLToPath(import.meta.url));
 const root = join(here, '..', '..');
 const cache = join(root, 'node_modules', '.cache', 'random-parts');
@@ -52,12 +55,19 @@ if (existsSync(log))
     } catch {}
   }
 const kept = outcomes.size;
-// Full resolution for every so many, spread evenly.
-const order = (i) =>
-  `${first + i}:${Math.floor(((i + 1) * full) / count) > Math.floor((i * full) / count) ? 'full' : 'coarse'}`;
-const todo = Array.from({ length: count }, (_, i) => i)
-  .filter((i) => !outcomes.has(first + i))
-  .map(order);
+let next = first;
+/** Seeds that are still to do, in order, as many as a batch takes; none when enough is made. */
+function batchOf(size) {
+  const batch = [];
+  while (batch.length < size && of('made').length < made) {
+    if (!outcomes.has(next)) batch.push(`${next}:${next % FULL === 0 ? 'full' : 'coarse'}`);
+    next++;
+    if (next - first > 20 * made) break;
+  }
+  return batch;
+}
+const of = (result) =>
+  [...outcomes.values()].filter((one) => one.seed >= first && one.seed < next && one.result === result);
 const BATCH = 20;
 const started = Date.now();
 let done = 0;
@@ -65,7 +75,7 @@ let done = 0;
 /** A fresh process every so many jobs, so that what one leaves behind cannot help or harm the rest. */
 async function work() {
   for (;;) {
-    const batch = todo.splice(0, BATCH);
+    const batch = batchOf(BATCH);
     if (batch.length === 0) return;
     const child = spawn(process.execPath, [join(cache, 'batch.mjs'), ...batch], {
       stdio: ['ignore', 'pipe', 'inherit'],
@@ -84,8 +94,6 @@ async function work() {
 }
 await Promise.all(Array.from({ length: Math.min(2, availableParallelism()) }, work));
 
-const all = [...outcomes.values()].filter(({ seed }) => seed >= first && seed < first + count);
-const of = (result) => all.filter((one) => one.result === result);
 const tally = (lists) => {
   const counts = new Map();
   for (const one of lists.flat()) counts.set(one, (counts.get(one) ?? 0) + 1);
@@ -96,11 +104,12 @@ const tally = (lists) => {
 };
 console.log(`made: ${tally(of('made').map(({ features }) => features))}`);
 console.log(`refused: ${tally(of('refused').map(({ said }) => [...new Set(said)]))}`);
+const fine = of('made').filter(({ seed }) => seed % FULL === 0).length;
 const files = of('made').reduce((sum, { said }) => sum + said.length, 0);
 const triangles = of('made').reduce((sum, one) => sum + one.triangles, 0);
 console.log(
-  `random jobs: ${all.length} (${kept} from before, ${done} in ${((Date.now() - started) / 1000).toFixed(0)} s); ` +
-    `${of('made').length} made (${files} files, ${triangles} triangles), ${of('refused').length} refused, ${of('failed').length} failed`,
+  `random jobs: ${next - first} (${kept} from before, ${done} in ${((Date.now() - started) / 1000).toFixed(0)} s); ` +
+    `${of('made').length} made (${files} files, ${triangles} triangles, ${fine} jobs at full resolution), ${of('refused').length} refused, ${of('failed').length} failed`,
 );
 for (const { seed, said } of of('failed')) console.log(`  seed ${seed}: ${said[0]?.split('\n')[0]}`);
 if (of('failed').length > 0 || of('made').length === 0) process.exit(1);
