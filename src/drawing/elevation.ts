@@ -128,23 +128,26 @@ function formerOutline(record: CoilRecord, s: number): Shape[] {
   return shapes;
 }
 
-/** The front half of every turn. */
-function turns(record: CoilRecord, s: number): Shape[] {
+/** The front half of the turn that comes round to the start hole's side at `k` turns, as points of the picture at a scale. */
+export function frontOfTurn(record: Pick<CoilRecord, 'windings' | 'frame'>, k: number, s: number): [number, number][] {
   const winding = record.windings[0]!;
   const sense = record.frame.hand === 'right' ? 1 : -1;
   const r = (winding.meanDiameterMm / 2) * s;
+  const from = Math.max(0, k - 0.25);
+  const to = Math.min(winding.turns, k + 0.25);
+  return Array.from({ length: 11 }, (_, i) => {
+    const u = from + ((to - from) * i) / 10;
+    const z = axialAt(winding.turnPositionsMm, winding.turns, winding.pitchMm, u);
+    return [sense * r * Math.sin(2 * Math.PI * u), z * s];
+  });
+}
+
+/** The front half of every turn. */
+function turns(record: CoilRecord, s: number): Shape[] {
+  const winding = record.windings[0]!;
   const shapes: Shape[] = [];
-  for (let k = 0; k - 0.25 < winding.turns; k++) {
-    const from = Math.max(0, k - 0.25);
-    const to = Math.min(winding.turns, k + 0.25);
-    const points: [number, number][] = [];
-    for (let i = 0; i <= 10; i++) {
-      const u = from + ((to - from) * i) / 10;
-      const z = axialAt(winding.turnPositionsMm, winding.turns, winding.pitchMm, u);
-      points.push([sense * r * Math.sin(2 * Math.PI * u), z * s]);
-    }
-    shapes.push(polyline(points, winding.wire.overallMm * s > 0.6 ? 'thin' : 'hair'));
-  }
+  for (let k = 0; k - 0.25 < winding.turns; k++)
+    shapes.push(polyline(frontOfTurn(record, k, s), winding.wire.overallMm * s > 0.6 ? 'thin' : 'hair'));
   return shapes;
 }
 
