@@ -114,7 +114,7 @@ describe.each(Object.entries(records))('views of a former: %s', (name, record) =
   });
 });
 
-test('no views of a bought tube, a ribbed body or sections', () => {
+test('no views of a bought tube, nor of ribs that the record does not have', () => {
   expect(formerViews(sampleRecord({ kind: 'tube' }))).toEqual({});
   expect(formerViews({ ...base, former: { ...base.former, body: 'ribbed' } })).toEqual({});
 });

@@ -1,7 +1,7 @@
 /** The winding surface of the former rolled out. */
 import type { FormerDimensions } from '../../parts/dimensions.ts';
 import { postTopMm } from '../../parts/posts.ts';
-import type { PartsRecord } from '../../record/schema.ts';
+import type { Hole, PartsRecord } from '../../record/schema.ts';
 import type { Polyline } from '../drawing.ts';
 import { circle, line, polyline, rectangle } from '../shapes.ts';
 import type { Callout, Mark, Span, View } from '../views.ts';
@@ -33,7 +33,7 @@ export function developed(d: FormerDimensions, record: PartsRecord): View {
   const dimensions: (Span | Callout | Mark)[] = [
     span('x', [-half, low], [half, low], 'below', mm(2 * half)),
     span('y', [half, low], [half, high], 'right', mm(high - low)),
-    ...holeSizes(d, x),
+    ...holeSizes(d.holes, x),
     ...d.holes.map((hole) => mark([x(hole.angleDeg) + hole.diameterMm / 2, hole.axialMm], hole.label)),
     ...d.former.posts.map((post) => mark([x(post.angleDeg) + post.widthMm / 2, post.axialMm], post.label)),
   ];
@@ -41,10 +41,10 @@ export function developed(d: FormerDimensions, record: PartsRecord): View {
 }
 
 /** One callout a size of hole, at the first of it. */
-function holeSizes(d: FormerDimensions, x: (angleDeg: number) => number): Callout[] {
-  const sizes = [...new Set(d.holes.map((hole) => hole.diameterMm))];
+export function holeSizes(holes: readonly Hole[], x: (angleDeg: number) => number): Callout[] {
+  const sizes = [...new Set(holes.map((hole) => hole.diameterMm))];
   return sizes.map((size) => {
-    const alike = d.holes.filter((hole) => hole.diameterMm === size);
+    const alike = holes.filter((hole) => hole.diameterMm === size);
     const first = alike[0]!;
     const many = alike.length > 1 ? `${alike.length} x ` : '';
     return callout([x(first.angleDeg), first.axialMm], 'left', `${many}${round(size)}`);

@@ -10,17 +10,18 @@ import { developed } from './former-developed.ts';
 import { elevation } from './former-elevation.ts';
 import { endView } from './former-end-view.ts';
 import { ribbedViews } from './ribbed-views.ts';
+import { sectionViews } from './section-views.ts';
 
-/** The views by part; none where the former is not printed in one full piece. */
+/** The views by part, of every section where there are several; none of a tube that is bought. */
 export function formerViews(record: PartsRecord): Record<string, View[]> {
   const { former } = record;
-  if (former.kind === 'printed' && former.body === 'ribbed') return ribbedViews(record);
-  if (former.kind !== 'printed' || former.body !== 'full' || former.joints.length > 0) return {};
-  return { former: wholeFormerViews(record) };
+  if (former.kind !== 'printed') return {};
+  if (former.body === 'ribbed') return ribbedViews(record);
+  return former.joints.length > 0 ? sectionViews(record) : { former: wholeFormerViews(record) };
 }
 
 /** Elevation, end view and developed surface of a full body, whether it is printed whole or in sections. */
-export function wholeFormerViews(record: PartsRecord): View[] {
+function wholeFormerViews(record: PartsRecord): View[] {
   const d = formerDimensions({ ...record, printer: { ...record.printer, holeCompensationMm: 0 } });
   return [elevation(d, record), endView(d), developed(d, record)];
 }
