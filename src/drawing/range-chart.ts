@@ -5,6 +5,7 @@
 import { CHART } from '../../templates/wording/reference-sheet.ts';
 import type { Measure } from './boxes.ts';
 import type { Drawing, Shape } from './drawing.ts';
+import type { Sign } from './legend.ts';
 import { type LogAxis, placeOn, ticksOf, written } from './log-axis.ts';
 import { arrowHead, label, line, rectangle, SMALL_MM } from './shapes.ts';
 
@@ -31,7 +32,7 @@ const FOOT_MM = 6;
 const HEAD_MM = 6;
 const BAND_MM = 5.5;
 /** Rows are as high as this allows. */
-export const ROW_MM = { least: 3.4, most: 8 } as const;
+export const ROW_MM = { least: 2.9, most: 8 } as const;
 const FILL = { own: 0.82, shared: 0.5 } as const;
 
 /** Height of the chart with rows of this height. */
@@ -89,8 +90,14 @@ function bar(axis: LogAxis, positions: readonly ChartPosition[], index: number, 
   }
   for (const [from, upTo] of secondsOf(own)) {
     if (from >= axis.high) continue;
-    const width = Math.max(0.4, at(Math.min(upTo, axis.high)) - at(from));
-    shapes.push(rectangle(at(from), y - barMm / 2, width, barMm, 'hair', undefined, 'dashed'));
+    const width = at(Math.min(upTo, axis.high)) - at(from);
+    const middle = at(from) + width / 2;
+    // A narrow box would be a blot of dashes.
+    shapes.push(
+      width < 1.4
+        ? line(middle, y - barMm / 2, middle, y + barMm / 2, 'outline', 'dashed')
+        : rectangle(at(from), y - barMm / 2, width, barMm, 'thin', undefined, 'dashed'),
+    );
   }
   return shapes;
 }
@@ -107,7 +114,7 @@ function bandOver(
   const text = CHART.band(`${Math.round(band.lowKhz)}`, `${Math.round(band.highKhz)}`);
   const width = measure.width(text, SMALL_MM, true);
   const room = right - left - 8;
-  const shapes: Shape[] = [left, right].map((x) => line(x, foot, x, top, 'thin', 'dashed'));
+  const shapes: Shape[] = [left, right].map((x) => line(x, foot, x, top, 'thin', 'centre'));
   shapes.push(arrowHead(left, y, 180, 2), arrowHead(right, y, 0, 2));
   if (width < room) {
     const middle = (left + right) / 2;
@@ -120,6 +127,33 @@ function bandOver(
     shapes.push(label(x, y, text, { align: rightwards ? 'left' : 'right', anchor: 'middle', bold: true }));
   }
   return shapes;
+}
+
+/** What the chart's signs mean, each as it is drawn; only those that this chart has. */
+export function chartSigns(chart: RangeChart): Sign[] {
+  const { positions, band } = chart;
+  const { signs } = CHART;
+  const tuned = positions.slice(1).map((next, i) => next.highKhz - positions[i]!.lowKhz);
+  const box = (fill: number) => rectangle(0, 0.2, 8, 2.6, 'thin', fill);
+  const whisker = [line(1, 1.5, 7, 1.5), line(1, 0.6, 1, 2.4), line(7, 0.6, 7, 2.4)];
+  const all: (Sign | null)[] = [
+    { shapes: [box(FILL.own)], words: signs.bar },
+    tuned.some((kHz) => kHz > 0) ? { shapes: [box(FILL.shared)], words: signs.shared } : null,
+    { shapes: whisker, words: signs.uncertainty },
+    positions.some((one) => secondsOf(one).length > 0)
+      ? { shapes: [rectangle(0, 0.2, 8, 2.6, 'thin', undefined, 'dashed')], words: signs.second }
+      : null,
+    tuned.some((kHz) => kHz < 0)
+      ? { shapes: [line(0, 0.8, 0, 2.2), line(8, 0.8, 8, 2.2), line(0, 1.5, 8, 1.5, 'outline')], words: signs.gap }
+      : null,
+    band === null
+      ? null
+      : {
+          shapes: [line(2, -0.5, 2, 3.5, 'thin', 'centre'), line(6, -0.5, 6, 3.5, 'thin', 'centre')],
+          words: signs.band,
+        },
+  ];
+  return all.filter((sign) => sign !== null);
 }
 
 /** Positions in order from the top; the picture is `widthMm` wide and as high as `chartHeight` says. */

@@ -1,63 +1,33 @@
-/** The blocks of the reference sheet, from the record of any verb. */
-import { CHART, ENDS, KINDS, NOTES, POSITIONS, TAKEN } from '../../templates/wording/reference-sheet.ts';
+/** Ranges, curves and figures of every position, and what they were taken with: blocks of the reference sheet. */
+import { CHART, CURVES, ENDS, KINDS, NOTES, POSITIONS, TAKEN } from '../../templates/wording/reference-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
-import { chartHeight, drawRangeChart, type RangeChart, ROW_MM } from '../drawing/range-chart.ts';
+import { drawLegend } from '../drawing/legend.ts';
+import { chartHeight, chartSigns, drawRangeChart, type RangeChart, ROW_MM } from '../drawing/range-chart.ts';
 import { moved, SMALL_MM } from '../drawing/shapes.ts';
+import { curvesLeastMm, drawTuningCurves } from '../drawing/tuning-curves.ts';
 import { significantText } from '../quantity/format.ts';
 import type { FiguresRecord } from '../record/survey-schema.ts';
 import { type Block, heading, list, paragraph, stack } from './block.ts';
-import { type Column, shares, table } from './table.ts';
+import { type Head, type Parted, parted } from './parted.ts';
 import { figures, fixed, sentence, short } from './text.ts';
+import { lengthText, unitsOf } from './units.ts';
 
-const ROW = 4.7;
 const RIGHT = { align: 'right' } as const;
 const CENTRE = { align: 'centre' } as const;
-
-/** A table that may be parted between two groups of rows. */
-export interface Parted {
-  /** Rows that stay together. */
-  readonly groups: readonly (readonly (readonly string[])[])[];
-  block(groups: readonly (readonly (readonly string[])[])[], continued: boolean): Block;
-}
-
-type Head = readonly [head: string, share: number, rest: Partial<Column>];
-
-function parted(
-  words: { heading: string; more: string },
-  heads: readonly Head[],
-  groups: Parted['groups'],
-  widthMm: number,
-  measure: Measure,
-): Parted {
-  const widths = shares(
-    widthMm,
-    heads.map(([, share]) => share),
-  );
-  const columns = heads.map(([head, , rest], i): Column => ({ head, widthMm: widths[i]!, ...rest }));
-  return {
-    groups,
-    block: (some, continued) =>
-      stack(
-        [
-          heading(continued ? words.more : words.heading, widthMm, measure),
-          table(columns, some.flat(), measure, { rowMm: ROW, sizeMm: SMALL_MM }),
-        ],
-        0,
-      ),
-  };
-}
 
 const khz = (value: number) => fixed(value, value >= 1000 ? 0 : 1);
 /** Three figures. */
 const three = (value: number) => (value >= 100 ? fixed(value, 0) : significantText(value, 3));
 const half = (value: number) => `${Number(value.toPrecision(2))}`;
 
+function bandOf({ demand }: FiguresRecord): RangeChart['band'] {
+  const { bandLowKhz, bandHighKhz } = demand;
+  return bandLowKhz === null || bandHighKhz === null ? null : { lowKhz: bandLowKhz, highKhz: bandHighKhz };
+}
+
 function chartOf(record: FiguresRecord): RangeChart | null {
   const positions = record.windings[0]!.taps.flatMap(({ tap, range }) => (range === null ? [] : [{ tap, ...range }]));
-  if (positions.length === 0) return null;
-  const { bandLowKhz, bandHighKhz } = record.demand;
-  const band = bandLowKhz === null || bandHighKhz === null ? null : { lowKhz: bandLowKhz, highKhz: bandHighKhz };
-  return { positions, band };
+  return positions.length === 0 ? null : { positions, band: bandOf(record) };
 }
 
 /** The chart with its heading and legend, no higher than `mostMm` where rows allow it. */
@@ -65,13 +35,43 @@ export function chart(record: FiguresRecord, widthMm: number, mostMm: number, me
   const head = heading(CHART.heading, widthMm, measure);
   const drawn = chartOf(record);
   if (drawn === null) return stack([head, paragraph(CHART.none, widthMm, measure)], 0.5);
-  const legend = paragraph(`${CHART.legend} ${CHART.beyond}`, widthMm, measure, { sizeMm: SMALL_MM });
+  const signs = drawLegend(chartSigns(drawn), widthMm, measure);
+  const seconds = drawn.positions.some((one) => one.secondLowKhz !== null || one.secondHighKhz !== null);
+  const words = seconds ? `${CHART.right} ${CHART.beyond}` : CHART.right;
+  const legend = stack(
+    [
+      { widthMm, heightMm: signs.heightMm, shapes: signs.shapes },
+      paragraph(words, widthMm, measure, { sizeMm: SMALL_MM }),
+    ],
+    1,
+  );
   const room = mostMm - head.heightMm - legend.heightMm - 2 - chartHeight({ ...drawn, positions: [] }, 0);
   const rowMm = Math.min(ROW_MM.most, Math.max(ROW_MM.least, room / drawn.positions.length));
   const heightMm = chartHeight(drawn, rowMm);
   const { shapes } = drawRangeChart(drawn, widthMm, rowMm, measure);
   const picture = { widthMm, heightMm, shapes: shapes.map((shape) => moved(shape, 0, -heightMm)) };
   return stack([head, picture, legend], 1);
+}
+
+/** The tuning curves, or why there are none. */
+export function curves(record: FiguresRecord, widthMm: number, heightMm: number, measure: Measure): Block {
+  const { taps, unitTaps = [] } = record.windings[0]!;
+  const { set } = record.demand;
+  const head = heading(CURVES.heading, widthMm, measure);
+  const drawn = taps.filter(({ curve }) => curve.length > 1).map(({ tap, curve }) => ({ tap, points: curve }));
+  if (drawn.length === 0 || set === null) return stack([head, paragraph(CURVES.none, widthMm, measure)], 0.5);
+  const band = bandOf(record);
+  const fixedPf = set.strayPf + set.aerialPf;
+  const words = [
+    CURVES.how(short(fixedPf, 2)),
+    ...(unitTaps.length > 0 ? [CURVES.units] : []),
+    ...(band === null ? [] : [CURVES.band]),
+  ];
+  const how = paragraph(words.join(' '), widthMm, measure, { sizeMm: SMALL_MM });
+  const high = Math.max(curvesLeastMm(drawn.length), heightMm - head.heightMm - how.heightMm - 2);
+  const { shapes } = drawTuningCurves({ curves: drawn, fixedPf, band }, widthMm, high, measure);
+  const picture = { widthMm, heightMm: high, shapes: shapes.map((shape) => moved(shape, 0, -high)) };
+  return stack([head, picture, how], 1);
 }
 
 /** Every position in one row. */
@@ -127,7 +127,7 @@ export function ends(record: FiguresRecord, widthMm: number, measure: Measure): 
   const ranged = taps.some((tap) => tap.ends.length > 0);
   const heads: Head[] = [
     [ENDS.tap, 10, { ...CENTRE, bold: true }],
-    [ENDS.at, 20, {}],
+    ...(ranged ? ([[ENDS.at, 20, {}]] as const) : []),
     [ENDS.kHz, 24, RIGHT],
     [ENDS.inductance, 24, RIGHT],
     [ENDS.resistance, 24, RIGHT],
@@ -150,7 +150,7 @@ export function ends(record: FiguresRecord, widthMm: number, measure: Measure): 
     const { frequencyKhz, inductanceUh, resistanceOhm, q } = tap.working;
     const parallel = (q * 2e-3 * Math.PI * frequencyKhz * inductanceUh) / 1e3;
     const cells = [khz(frequencyKhz), figures(inductanceUh), figures(resistanceOhm), fixed(q, 0)];
-    return [[`${tap.tap}`, '', ...cells, three(frequencyKhz / q), three(parallel)]];
+    return [[`${tap.tap}`, ...(ranged ? [''] : []), ...cells, three(frequencyKhz / q), three(parallel)]];
   });
   const words = ranged ? ENDS : { heading: ENDS.alone, more: ENDS.alone };
   return parted(words, heads, groups, widthMm, measure);
@@ -204,9 +204,11 @@ export function taken(record: FiguresRecord, widthMm: number, measure: Measure):
   const winding = record.windings[0]!;
   const { set } = record.demand;
   const { surroundings } = record;
+  const units = unitsOf(record);
+  const length = (mm: number, digits: number) => lengthText(mm, units, { digits, trim: true });
   const lines = [
-    TAKEN.coil(short(winding.turns, 3), short(winding.meanDiameterMm, 3), short(winding.windingLengthMm, 2)),
-    TAKEN.wire(winding.wire.name, short(winding.wire.bareMm, 4), short(winding.wire.overallMm, 4)),
+    TAKEN.coil(short(winding.turns, 3), length(winding.meanDiameterMm, 3), length(winding.windingLengthMm, 2)),
+    TAKEN.wire(winding.wire.name, length(winding.wire.bareMm, 4), length(winding.wire.overallMm, 4)),
     set === null
       ? TAKEN.noSet
       : TAKEN.set(

@@ -1,111 +1,72 @@
 /**
- * The reference sheet: the chart of what every position tunes, the figures behind it, the switch kinds side by side, and what all
- * was taken with. It reads the record of any verb and nothing else: same record, same bytes.
+ * The reference sheet: the chart of what every position tunes with the figures behind it, tuning curves, the wiring of the switch and its
+ * kinds side by side, why this coil and which others, what all was taken with, and how the figures come about. It reads the record
+ * of any verb and nothing else: same record, same bytes.
  */
 import { REFERENCE } from '../../templates/wording/reference-sheet.ts';
 import type { Box, Measure } from '../drawing/boxes.ts';
 import { moved } from '../drawing/shapes.ts';
-import type { FiguresRecord } from '../record/survey-schema.ts';
-import { type Block, stack } from './block.ts';
+import type { ExplainedRecord } from '../explain/explain.ts';
+import type { CoilRecord } from '../record/schema.ts';
+import { stack } from './block.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
-import * as blocks from './reference-ranges.ts';
+import { type Body, Filling, GAP_MM } from './parted.ts';
+import { noOthers, others, why } from './reference-chosen.ts';
+import { explained } from './reference-explained.ts';
+import * as ranges from './reference-ranges.ts';
+import { wiring } from './reference-wiring.ts';
 import { titleBlock } from './title-block.ts';
 
 /** Left free round every sheet: across, and along. */
 const MARGIN_MM = { across: 12, along: 11 } as const;
-const GAP = 3;
 /** The chart leaves the rest of its page to the table of positions. */
 const CHART_SHARE = 0.62;
+/** Height of the tuning curves with heading and words, where their numbers do not want more. */
+const CURVES_MM = { least: 110, wanted: 150 } as const;
 
-interface Body {
-  readonly part: string;
-  readonly blocks: Block[];
-}
+/** A record of any verb; one of a plan also tells why it chose. */
+export type ReferenceRecord = ExplainedRecord & { readonly chosen?: CoilRecord['chosen'] | null };
 
-/** Pages that are filled from the top. */
-class Filling {
-  readonly bodies: Body[] = [];
-  #left = 0;
-  readonly #heightMm: number;
-
-  constructor(heightMm: number) {
-    this.#heightMm = heightMm;
-  }
-
-  page(part: string): void {
-    this.bodies.push({ part, blocks: [] });
-    this.#left = this.#heightMm;
-  }
-
-  get left(): number {
-    return this.#left - (this.bodies.at(-1)!.blocks.length > 0 ? GAP : 0);
-  }
-
-  put(block: Block, part: string): void {
-    if (block.heightMm > this.left + 1e-9) this.page(part);
-    this.#left = this.left - block.heightMm;
-    this.bodies.at(-1)!.blocks.push(block);
-  }
-
-  /** As many groups as the page holds, the rest on the next; two at least, or none. */
-  putParted(part: blocks.Parted, name: string): void {
-    let from = 0;
-    while (from < part.groups.length) {
-      let to = part.groups.length;
-      while (to > from && part.block(part.groups.slice(from, to), from > 0).heightMm > this.left + 1e-9) to--;
-      const some = to - from;
-      if (some < Math.min(2, part.groups.length - from) && this.bodies.at(-1)!.blocks.length > 0) {
-        this.page(name);
-        continue;
-      }
-      to = Math.max(to, from + 1);
-      this.put(part.block(part.groups.slice(from, to), from > 0), name);
-      from = to;
-    }
-  }
-}
-
-function fill(record: FiguresRecord, widthMm: number, heightMm: number, measure: Measure): Body[] {
+function fill(record: ReferenceRecord, widthMm: number, heightMm: number, measure: Measure): Body[] {
   const pages = new Filling(heightMm);
   pages.page(REFERENCE.chart);
-  pages.put(blocks.chart(record, widthMm, heightMm * CHART_SHARE, measure), REFERENCE.chart);
-  pages.putParted(blocks.positions(record, widthMm, measure), REFERENCE.figures);
-  pages.putParted(blocks.ends(record, widthMm, measure), REFERENCE.figures);
-  pages.put(blocks.endsHow(widthMm, measure), REFERENCE.figures);
-  const kinds = blocks.kinds(record, widthMm, measure);
+  pages.put(ranges.chart(record, widthMm, heightMm * CHART_SHARE, measure), REFERENCE.chart);
+  pages.putParted(ranges.positions(record, widthMm, measure), REFERENCE.figures);
+  // What the first page leaves is enough for them, or they get a page with more.
+  const room = pages.left >= CURVES_MM.least ? Math.min(pages.left, CURVES_MM.wanted) : CURVES_MM.wanted;
+  pages.put(ranges.curves(record, widthMm, room, measure), REFERENCE.curves);
+  pages.putParted(ranges.ends(record, widthMm, measure), REFERENCE.figures);
+  pages.put(ranges.endsHow(widthMm, measure), REFERENCE.figures);
+  for (const block of wiring(record, widthMm, measure)) pages.put(block, REFERENCE.wiring);
+  const kinds = ranges.kinds(record, widthMm, measure);
   if (kinds !== null) {
     pages.putParted(kinds, REFERENCE.kinds);
-    pages.put(stack(blocks.kindNotes(record, widthMm, measure), 0.8), REFERENCE.kinds);
+    pages.put(stack(ranges.kindNotes(record, widthMm, measure), 0.8), REFERENCE.kinds);
   }
-  for (const group of [blocks.taken(record, widthMm, measure), blocks.notes(record, widthMm, measure)])
-    if (group.length > 0) putList(pages, group, REFERENCE.kinds);
+  const { chosen = null } = record;
+  if (chosen !== null) {
+    pages.put(why(chosen, widthMm, measure), REFERENCE.chosen);
+    const table = others(record, widthMm, measure);
+    if (table === null) pages.put(noOthers(widthMm, measure), REFERENCE.chosen);
+    else pages.putParted(table, REFERENCE.chosen);
+  }
+  for (const group of [ranges.taken(record, widthMm, measure), ranges.notes(record, widthMm, measure)])
+    if (group.length > 0) pages.putList(group, REFERENCE.kinds);
+  pages.putList(explained(record, widthMm, measure), REFERENCE.explained);
   return pages.bodies;
 }
 
-/** A heading with its items; together when the page holds them, else item by item. */
-function putList(pages: Filling, group: readonly Block[], part: string): void {
-  const whole = stack(group, 0.5);
-  if (whole.heightMm <= pages.left) {
-    pages.put(whole, part);
-    return;
-  }
-  const [head, first, ...rest] = group;
-  if (head === undefined) return;
-  pages.put(first === undefined ? head : stack([head, first], 0.5), part);
-  for (const block of rest) pages.put(block, part);
-}
-
 /** The pages as drawings. */
-export function layOutReferenceSheet(record: FiguresRecord, measure: Measure): Page[] {
+export function layOutReferenceSheet(record: ReferenceRecord, measure: Measure): Page[] {
   const [paperWidth, paperHeight] = PAPER_MM[record.paper];
   const widthMm = paperWidth - 2 * MARGIN_MM.across;
   const headOf = (part: string, sheet: string) =>
     titleBlock(record, { document: REFERENCE.document, part, sheet }, widthMm, measure);
   const head = headOf(REFERENCE.figures, REFERENCE.sheet(10, 10));
-  const bodies = fill(record, widthMm, paperHeight - 2 * MARGIN_MM.along - head.heightMm - GAP, measure);
+  const bodies = fill(record, widthMm, paperHeight - 2 * MARGIN_MM.along - head.heightMm - GAP_MM, measure);
   return bodies.map((body, i) => {
     const top = { ...headOf(body.part, REFERENCE.sheet(i + 1, bodies.length)), heightMm: head.heightMm };
-    const { shapes } = stack([top, ...body.blocks], GAP);
+    const { shapes } = stack([top, ...body.blocks], GAP_MM);
     return {
       widthMm: paperWidth,
       heightMm: paperHeight,
@@ -125,7 +86,7 @@ export function referenceFrame(page: Page): Box {
 }
 
 /** The reference sheet of a record as the bytes of a PDF. */
-export async function referenceSheet(record: FiguresRecord): Promise<Uint8Array> {
+export async function referenceSheet(record: ReferenceRecord): Promise<Uint8Array> {
   const paper = new Paper({
     title: `${REFERENCE.document}: ${record.job}`,
     subject: REFERENCE.record(record.hash.slice(0, 12)),

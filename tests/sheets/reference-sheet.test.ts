@@ -84,7 +84,7 @@ describe('the chart', () => {
     expect(axis.high).toBeCloseTo(2 * 2060 * 1.08, 9);
     const { shapes } = drawRangeChart(chart, 180, 8, measure);
     const outlines = shapes.flatMap((shape) =>
-      shape.shape === 'polyline' && shape.weight === 'thin' ? [shape.points] : [],
+      shape.shape === 'polyline' && shape.weight === 'thin' && shape.dash !== 'dashed' ? [shape.points] : [],
     );
     const bars = outlines.map((points) => [Math.min(...points.map(([x]) => x)), Math.max(...points.map(([x]) => x))]);
     const wanted = chart.positions.map(({ lowKhz, highKhz }) => [lowKhz, highKhz].map((kHz) => 9 + placeOn(axis, kHz)));
