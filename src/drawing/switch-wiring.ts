@@ -4,7 +4,7 @@
  */
 import { type Box, type Measure, overlap, textBox } from './boxes.ts';
 import type { Shape, Text } from './drawing.ts';
-import { arrowHead, circle, earthSymbol, label, line, polygon, polyline } from './shapes.ts';
+import { arrowHead, circle, earthSymbol, label, line, polygon, polyline, SMALL_MM } from './shapes.ts';
 import { positionDeg } from './switch-angles.ts';
 
 export interface Contact {
@@ -85,12 +85,15 @@ function layOut(wafer: Wafer, halfMm: number, measure: Measure): Layout {
     if (clear(labels, measure)) return { ringMm, contactMm: NUMBERED_MM, labels };
   }
   const last = wafer.contacts.length - 1;
+  const widest = Math.max(...wafer.contacts.map(({ number }) => measure.width(number, SMALL_MM, true)));
+  const beside = DOT_MM + 2.2;
+  const ringMm = Math.min(RING_MM.dots, halfMm - beside - widest);
   for (let every = 1; ; every++) {
     const some = wafer.contacts.map(({ number }, i) =>
       wafer.contacts[i]!.name !== '' && (i === last || (i % every === 0 && last - i >= every)) ? number : '',
     );
-    const labels = labelsAt(wafer, RING_MM.dots + DOT_MM + 2.2, some, true);
-    if (every > last || clear(labels, measure)) return { ringMm: RING_MM.dots, contactMm: DOT_MM, labels };
+    const labels = labelsAt(wafer, ringMm + beside, some, true);
+    if (every > last || clear(labels, measure)) return { ringMm, contactMm: DOT_MM, labels };
   }
 }
 
@@ -163,7 +166,7 @@ export function drawWafer(wafer: Wafer, side: Side, halfMm: number, measure: Mea
   const half = Math.max(
     ringMm + contactMm,
     ...boxes.map(({ left, right }) => Math.max(-left, right)),
-    words === null ? 0 : measure.width(words, 2.83, true) / 2,
+    words === null ? 0 : measure.width(words, SMALL_MM, true) / 2,
   );
   const top = Math.max(ringMm + contactMm, ...boxes.map((box) => box.top));
   const bottom = wafer.common === null ? lowest : low - 4.4;
