@@ -5,7 +5,7 @@
  */
 import type { FormerDimensions } from './dimensions.ts';
 import { datumDepthMm, earHalfRootMm, earOutline, earOverlapMm } from './holes.ts';
-import { postsVolume } from './posts.ts';
+import { postsVolume, standsOnFoot } from './posts.ts';
 import { ridgesVolume } from './ridges.ts';
 import type { Engraving, Point2, ProfileRow, Skin } from './solid.ts';
 
@@ -23,6 +23,7 @@ export function formerVolume(d: FormerDimensions, skin: Skin, engravings: readon
     baseHolesVolume(d) +
     ridgesVolume(d) +
     postsVolume(d) -
+    sharedVolume(d) -
     datumVolume(d) -
     engravings.reduce((sum, e) => sum + engravedVolume(e, d), 0)
   );
@@ -82,6 +83,37 @@ export function earsVolume(d: FormerDimensions): number {
 export function baseHolesVolume(d: FormerDimensions): number {
   const { base } = d.former;
   return base === null ? 0 : base.holes * Math.PI * (base.holeDiameterMm / 2) ** 2 * base.thicknessMm;
+}
+
+/** What posts that stand on the bed share with ears beside which they stand: counted with both. */
+function sharedVolume(d: FormerDimensions): number {
+  const rootR = d.footR - earOverlapMm(d);
+  const samples = 40;
+  let sum = 0;
+  for (const post of d.former.posts)
+    for (const ear of standsOnFoot(d, post) ? [] : d.former.ears) {
+      const outline = earOutline(ear, rootR, 0);
+      const turn = ((post.angleDeg - ear.angleDeg) * Math.PI) / 180;
+      let inside = 0;
+      for (let i = 0; i < samples; i++)
+        for (let k = 0; k < samples; k++) {
+          const x = d.outsideR + (post.reachMm * (i + 0.5)) / samples;
+          const y = post.widthMm * ((k + 0.5) / samples - 0.5);
+          const at: Point2 = [x * Math.cos(turn) - y * Math.sin(turn), x * Math.sin(turn) + y * Math.cos(turn)];
+          if (within(outline, at)) inside++;
+        }
+      sum += (inside / samples ** 2) * post.reachMm * post.widthMm * ear.thicknessMm;
+    }
+  return sum;
+}
+
+function within(outline: readonly Point2[], [x, y]: Point2): boolean {
+  let crossings = 0;
+  for (const [k, [ax, ay]] of outline.entries()) {
+    const [bx, by] = outline[(k + 1) % outline.length]!;
+    if (ay > y !== by > y && ax + ((y - ay) / (by - ay)) * (bx - ax) > x) crossings++;
+  }
+  return crossings % 2 === 1;
 }
 
 function edgeOutside(outline: readonly Point2[], r: number): number {
