@@ -8,6 +8,7 @@
  */
 import * as z from 'zod';
 import { PARTS } from '../job/schema.ts';
+import { matchedSchema } from './match-schema.ts';
 import { type Winding, windingSchema } from './winding-schema.ts';
 
 export type { Tap, UnitTap, Winding } from './winding-schema.ts';
@@ -368,6 +369,7 @@ export const recordSchema = z.strictObject({
   given: z.record(text, z.unknown()),
   assumed: z.record(text, z.unknown()),
   alternatives: z.array(alternativeSchema),
+  matched: matchedSchema.optional().describe('of match: the old coil as inferred, and old against new'),
   files: z.array(z.strictObject({ path: text, kind: text, sha256: text })),
 });
 
