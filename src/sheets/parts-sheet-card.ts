@@ -5,10 +5,12 @@ import { dimensioned } from '../drawing/dimensioned.ts';
 import { scaleText } from '../drawing/elevation.ts';
 import { BODY_MM, label, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
 import type { View } from '../drawing/views.ts';
+import { reworded } from '../drawing/words.ts';
 import type { PartEntry } from '../record/schema.ts';
 import { type Block, LEADING, paragraph, stack } from './block.ts';
 import { type Card, GAP_MM, lowest, over, plain, rowHeight, rowsOf, set, shifted, twoColumns } from './cards.ts';
-import { figures, fixed, sentence, short, wrap } from './text.ts';
+import { figures, fixed, sentence, wrap } from './text.ts';
+import { type LengthStyle, lengthCell, lengthsText, lengthUnit, type Units } from './units.ts';
 
 /** A shaded picture of a part. */
 export interface Picture {
@@ -18,6 +20,7 @@ export interface Picture {
 }
 
 export interface PartShown {
+  readonly units: Units;
   readonly entry: PartEntry;
   readonly beds: string;
   readonly views: readonly View[];
@@ -89,12 +92,12 @@ function arranged(views: readonly Card[], pictures: readonly Card[], widthMm: nu
   return ways.reduce((best, way) => (way.heightMm < best.heightMm - 0.01 ? way : best));
 }
 
-/** Width, depth and height as the part is printed. */
-export const sizeText = (sizeMm: readonly number[]) => sizeMm.map((mm) => short(mm, 2)).join(' × ');
+/** Sizes of parts: to a hundredth, without noughts at the end. */
+export const PART_STYLE: LengthStyle = { digits: 2, trim: true };
 
 /** Name and scale in a grey strip, then what there is to know. */
-function head({ entry, beds }: PartShown, scale: number, widthMm: number, measure: Measure): Block {
-  const right = CARD.scale(scaleText(scale));
+function head({ entry, beds, units }: PartShown, scale: number, widthMm: number, measure: Measure): Block {
+  const right = CARD.scale(scaleText(scale), lengthUnit(units));
   const nameWidth = widthMm - measure.width(right, SMALL_MM) - 9;
   const name = wrap(titleOf(entry.name), nameWidth, BODY_MM, true, measure);
   const strip = STRIP_MM + (name.length - 1) * BODY_MM * LEADING;
@@ -105,7 +108,12 @@ function head({ entry, beds }: PartShown, scale: number, widthMm: number, measur
     ),
     label(widthMm - 2, -STRIP_MM / 2, right, { align: 'right', anchor: 'middle' }),
   ];
-  const facts = CARD.facts(entry.quantity, entry.material, grams(entry.massG), sizeText(entry.sizeMm));
+  const facts = CARD.facts(
+    entry.quantity,
+    entry.material,
+    grams(entry.massG),
+    lengthsText(entry.sizeMm, units, ' × ', PART_STYLE),
+  );
   const words = [`${facts}; ${CARD.where(entry.path, beds)}`, CARD.use(entry.use), CARD.print(entry.printNote)];
   const lines = words.map((text) => paragraph(sentence(text), widthMm - 4, measure, { sizeMm: SMALL_MM }));
   const text = stack(lines, 0.3);
@@ -160,8 +168,9 @@ function fitted(
  */
 export function partCards(part: PartShown, widthMm: number, heightMm: number, measure: Measure): Card[] {
   const known = new Map<number, readonly Card[]>();
+  const views = part.views.map((view) => reworded(view, (mm) => lengthCell(mm, part.units, PART_STYLE)));
   const viewsAt = (scale: number) => {
-    const found = known.get(scale) ?? part.views.map((view) => drawn(view, scale, measure));
+    const found = known.get(scale) ?? views.map((view) => drawn(view, scale, measure));
     known.set(scale, found);
     return found;
   };

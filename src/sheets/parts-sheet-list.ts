@@ -5,9 +5,19 @@ import { movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { findMaterial } from '../stock/materials.ts';
 import { type Block, columns, heading, list, paragraph, stack } from './block.ts';
-import { grams, sizeText, titleOf } from './parts-sheet-card.ts';
+import { grams, PART_STYLE, titleOf } from './parts-sheet-card.ts';
 import { type Column, shares, table } from './table.ts';
-import { fixed, sentence, short } from './text.ts';
+import { sentence, short } from './text.ts';
+import {
+  lengthCell,
+  lengthCells,
+  lengthHeads,
+  lengthsText,
+  lengthText,
+  lengthUnit,
+  type Units,
+  unitsOf,
+} from './units.ts';
 
 /** Numbers of the beds that hold a part, counted from 1. */
 export function bedsWith(record: CoilRecord, part: string): string {
@@ -26,6 +36,12 @@ function columnsOf(
   return parts.map(([head, , more], i) => ({ head, widthMm: widths[i]!, ...more }));
 }
 
+/** Three sizes in a cell, each unit on a line of its own. */
+function sizeCell(sizeMm: readonly number[], units: Units): string {
+  const lines = units === 'both' ? (['metric', 'inch'] as const) : [units];
+  return lines.map((unit) => sizeMm.map((mm) => lengthCell(mm, unit, PART_STYLE)).join(' × ')).join('\n');
+}
+
 /** The parts `from` up to `to`; `sheetOf` tells where each is drawn. */
 export function partList(
   record: CoilRecord,
@@ -35,6 +51,7 @@ export function partList(
   widthMm: number,
   measure: Measure,
 ): Block {
+  const units = unitsOf(record);
   const rows = record.parts
     .slice(from, to)
     .map(({ part, name, quantity, material, massG, sizeMm, path }) => [
@@ -42,7 +59,7 @@ export function partList(
       `${quantity}`,
       material,
       grams(massG),
-      sizeText(sizeMm),
+      sizeCell(sizeMm, units),
       path,
       bedsWith(record, part) || '–',
       `${sheetOf(part)}`,
@@ -52,7 +69,7 @@ export function partList(
     [LIST.pieces, 12, { align: 'right' }],
     [LIST.material, 16],
     [LIST.mass, 14, { align: 'right' }],
-    [LIST.size, 33, { align: 'right' }],
+    [LIST.size(lengthUnit(units)), 33, { align: 'right' }],
     [LIST.file, 45],
     [LIST.bed, 9, { align: 'centre' }],
     [LIST.sheet, 11, { align: 'right' }],
@@ -90,6 +107,8 @@ export function bedList(record: CoilRecord, from: number, to: number, widthMm: n
 /** Every setting with whether the job gave it. */
 export function printer(record: CoilRecord, widthMm: number, measure: Measure): Block {
   const { printer, shop, parts, assumed } = record;
+  const inShop = (...sizes: number[]) => lengthsText(sizes, unitsOf(record), ' × ', { digits: 2, trim: true });
+  // What a slicer is set to is millimetres everywhere.
   const mm = (...sizes: number[]) => PRINTER.mm(sizes.map((size) => short(size, 3)).join(' × '));
   const rows: (readonly [key: string, what: string, value: string])[] = [
     ['printer.bed', PRINTER.bed, mm(printer.bedXMm, printer.bedYMm)],
@@ -103,11 +122,11 @@ export function printer(record: CoilRecord, widthMm: number, measure: Measure): 
     ['printer.material', PRINTER.material, printer.material],
   ];
   if (parts.some((part) => part.kind === 'arbor' || part.kind === 'stand'))
-    rows.push(['shop.shaft', PRINTER.shaft[shop.shaftForm], mm(shop.shaftMm)]);
+    rows.push(['shop.shaft', PRINTER.shaft[shop.shaftForm], inShop(shop.shaftMm)]);
   if (parts.some((part) => part.kind === 'stand'))
     rows.push(
-      ['shop.spool', PRINTER.spool, mm(shop.spoolDiameterMm, shop.spoolWidthMm)],
-      ['shop.spool-bore', PRINTER.spoolBore, mm(shop.spoolBoreMm)],
+      ['shop.spool', PRINTER.spool, inShop(shop.spoolDiameterMm, shop.spoolWidthMm)],
+      ['shop.spool-bore', PRINTER.spoolBore, inShop(shop.spoolBoreMm)],
     );
   const asked = columnsOf(widthMm, [
     [PRINTER.what, 47],
@@ -128,17 +147,22 @@ export function printer(record: CoilRecord, widthMm: number, measure: Measure): 
 export function finished(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
   if (!record.parts.some((part) => part.kind === 'former')) return null;
   const { former } = record;
+  const units = unitsOf(record);
   const asked = columnsOf(widthMm, [
     [FINISHED.what, 38],
-    [FINISHED.wanted, 18, { align: 'right', bold: true }],
+    ...lengthHeads(units).map((unit) => [unit, 18, { align: 'right', bold: true }] as const),
     [FINISHED.reading, 26, { kind: 'blank' }],
   ]);
   const rows = [
-    [FINISHED.outside, fixed(former.outsideDiameterMm, 2), ''],
-    [FINISHED.length, fixed(former.lengthMm, 2), ''],
+    [FINISHED.outside, ...lengthCells(former.outsideDiameterMm, units), ''],
+    [FINISHED.length, ...lengthCells(former.lengthMm, units), ''],
   ];
   const words = [
-    FINISHED.tenth(short(Math.abs(former.tenthMmPercent), 3), former.tenthMmPercent >= 0),
+    FINISHED.tenth(
+      lengthText(0.1, units, { digits: 1 }),
+      short(Math.abs(former.tenthMmPercent), 3),
+      former.tenthMmPercent >= 0,
+    ),
     FINISHED.scale,
     sentence(former.stiffness),
   ].map((text) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM }));

@@ -14,6 +14,7 @@ import { PAPER_MM, type Page, Paper } from './page.ts';
 import { type Picture, partCards } from './parts-sheet-card.ts';
 import * as blocks from './parts-sheet-list.ts';
 import { titleBlock } from './title-block.ts';
+import { unitsOf } from './units.ts';
 
 export type { Picture } from './parts-sheet-card.ts';
 
@@ -125,6 +126,7 @@ function bodiesOf(
     partCards(
       {
         entry,
+        units: unitsOf(record),
         beds: blocks.bedsWith(record, entry.part),
         views: drawable(views.get(entry.part)) ?? boxViews(entry.sizeMm),
         pictures: pictures.get(entry.part) ?? [],

@@ -17,7 +17,7 @@ export const LIST = {
   pieces: 'pieces',
   material: 'material',
   mass: 'g each',
-  size: 'size mm, as it is printed',
+  size: (unit: string) => `size ${unit}, as it is printed`,
   file: 'file',
   bed: 'bed',
   sheet: 'sheet',
@@ -64,12 +64,11 @@ export const PRINTER = {
 export const FINISHED = {
   heading: 'Measure on the finished former',
   what: 'size',
-  wanted: 'mm',
   reading: 'reading',
   outside: 'outside diameter',
   length: 'length, foot to top',
-  tenth: (percent: string, more: boolean) =>
-    `0.1 mm more of outside diameter makes the inductance ${percent} % ${more ? 'greater' : 'smaller'}, 0.1 mm less as much ${more ? 'smaller' : 'greater'}.`,
+  tenth: (length: string, percent: string, more: boolean) =>
+    `${length} more of outside diameter makes the inductance ${percent} % ${more ? 'greater' : 'smaller'}, as much less ${percent} % ${more ? 'smaller' : 'greater'}.`,
   scale: 'If it came out off size: wanted size over measured size is the scale to write under printer.',
 } as const;
 
@@ -86,11 +85,11 @@ export const CAUTIONS = {
 
 export const CARD = {
   facts: (pieces: number, material: string, grams: string, size: string) =>
-    `${LIST.piece(pieces)}, ${material}, ${grams} g ${pieces === 1 ? '' : 'each '}if solid, ${size} mm`,
+    `${LIST.piece(pieces)}, ${material}, ${grams} g ${pieces === 1 ? '' : 'each '}if solid, ${size}`,
   where: (file: string, bed: string) => (bed === '' ? file : `${file}, bed ${bed}`),
   use: (text: string) => `Use: ${text}`,
   print: (text: string) => `Print: ${text}`,
-  scale: (text: string) => `scale ${text}, sizes in mm`,
+  scale: (text: string, unit: string) => `scale ${text}, sizes in ${unit}`,
   missing: (names: string) => `No room for the mark of ${names}.`,
   continued: (name: string) => `${name}, continued`,
 } as const;

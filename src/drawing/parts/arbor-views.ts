@@ -5,6 +5,7 @@ import { type ClampDimensions, clampOutline, slitOutline } from '../../parts/sta
 import { type ConeDimensions, discRows } from '../../parts/stand-cone.ts';
 import type { PartsRecord } from '../../record/schema.ts';
 import type { View } from '../views.ts';
+import { said, type Wording } from '../words.ts';
 import { across, box, callout, hidden, outline, round, size, upright } from './strokes.ts';
 
 export function arborViews(record: PartsRecord): Record<string, View[]> {
@@ -35,9 +36,9 @@ export function coneViews(clamp: ClampDimensions, d: ConeDimensions, disc: reado
       ),
     ],
     dimensions: [
-      across(-small, small, top, 'above', `dia ${size(d.smallMm)}`),
-      across(-big, big, d.discMm, 'above', `dia ${size(d.bigMm)}`),
-      ...(widest > big ? [across(-widest, widest, 0, 'below', `dia ${size(2 * widest)}`)] : []),
+      across(-small, small, top, 'above', said`dia ${size(d.smallMm)}`),
+      across(-big, big, d.discMm, 'above', said`dia ${size(d.bigMm)}`),
+      ...(widest > big ? [across(-widest, widest, 0, 'below', said`dia ${size(2 * widest)}`)] : []),
       upright(0, top, -widest, 'left'),
       upright(0, d.discMm, widest, 'right'),
     ],
@@ -58,14 +59,14 @@ export function coneViews(clamp: ClampDimensions, d: ConeDimensions, disc: reado
     ],
     dimensions: [
       callout(-bore, 0, 'left', boreText(clamp)),
-      callout(widthMm / 2, half * 0.7, 'right', `keyway ${size(widthMm)} wide, ${size(depthMm)} deep`),
+      callout(widthMm / 2, half * 0.7, 'right', said`keyway ${size(widthMm)} wide, ${size(depthMm)} deep`),
     ],
   };
   return [elevation, plan];
 }
 
-const boreText = ({ form, boreMm }: ClampDimensions): string =>
-  form === 'round' ? `bore dia ${size(boreMm)}` : `bore ${size(boreMm)} across flats`;
+const boreText = ({ form, boreMm }: ClampDimensions): Wording =>
+  form === 'round' ? said`bore dia ${size(boreMm)}` : said`bore ${size(boreMm)} across flats`;
 
 /** The bore as it should come out. */
 export function boreShape({ form, boreMm, bore, boreReachMm }: ClampDimensions): View['shapes'][number] {
@@ -93,9 +94,9 @@ export function collarViews(d: ClampDimensions): View[] {
     dimensions: [
       across(-d.ringRMm, d.endXMm, -d.halfWidthMm, 'below'),
       upright(-d.halfWidthMm, d.halfWidthMm, -d.ringRMm, 'left'),
-      across(-key.widthMm / 2, key.widthMm / 2, key.toMm, 'above', `keys ${size(key.widthMm)}`),
+      across(-key.widthMm / 2, key.widthMm / 2, key.toMm, 'above', said`keys ${size(key.widthMm)}`),
       callout(-d.boreMm / 2, 0, 'left', boreText(d)),
-      callout(d.endXMm, 0, 'right', `slit ${size(d.slitMm)}`),
+      callout(d.endXMm, 0, 'right', said`slit ${size(d.slitMm)}`),
       callout(d.screwXMm + d.nutMm / 2, d.nutFromMm + d.nutDepthMm / 2, 'right', 'M4 nut'),
     ],
   };
@@ -109,7 +110,7 @@ export function collarViews(d: ClampDimensions): View[] {
     dimensions: [
       upright(0, d.heightMm, d.endXMm, 'right'),
       upright(0, top, -d.ringRMm, 'left'),
-      callout(d.screwXMm, d.heightMm / 2, 'below', `dia ${size(d.screwHoleMm)} for M4 x ${d.screwLengthMm}`),
+      callout(d.screwXMm, d.heightMm / 2, 'below', said`dia ${size(d.screwHoleMm)} for M4 x ${d.screwLengthMm}`),
     ],
   };
   return [plan, elevation];

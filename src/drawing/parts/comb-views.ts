@@ -2,6 +2,7 @@
 import { combDimensions, combOutline } from '../../parts/comb.ts';
 import type { PartsRecord } from '../../record/schema.ts';
 import type { View } from '../views.ts';
+import { said } from '../words.ts';
 import { across, box, callout, outline, size, upright } from './strokes.ts';
 
 /** @throws Fault (exit 4) as `combDimensions` */
@@ -15,13 +16,18 @@ export function combViews(record: PartsRecord): Record<string, View[]> {
     title: 'plan',
     shapes: [outline(combOutline(d))],
     dimensions: [
-      across(d.goFromMm, d.goFromMm + d.goMm, d.heightMm, 'above', `go ${size(d.goMm)}`),
-      across(d.noGoFromMm, d.noGoFromMm + d.noGoMm, d.heightMm, 'above', `no go ${size(d.noGoMm)}`),
-      across(-span / 2, span / 2, 0, 'below', `${d.teeth - 1} x ${size(step)} = ${size(span)}`),
+      across(d.goFromMm, d.goFromMm + d.goMm, d.heightMm, 'above', said`go ${size(d.goMm)}`),
+      across(d.noGoFromMm, d.noGoFromMm + d.noGoMm, d.heightMm, 'above', said`no go ${size(d.noGoMm)}`),
+      across(-span / 2, span / 2, 0, 'below', said`${d.teeth - 1} x ${size(step)} = ${size(span)}`),
       across(-half, half, 0, 'below'),
       upright(0, d.heightMm, -half, 'left'),
       upright(floor, d.heightMm, half, 'right'),
-      callout(-span / 2, d.toothLengthMm / 2, 'left', `teeth ${size(d.toothMm)} wide, ${size(d.toothLengthMm)} long`),
+      callout(
+        -span / 2,
+        d.toothLengthMm / 2,
+        'left',
+        said`teeth ${size(d.toothMm)} wide, ${size(d.toothLengthMm)} long`,
+      ),
     ],
   };
   const elevation: View = {

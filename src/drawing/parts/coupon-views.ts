@@ -2,6 +2,7 @@
 import { type CouponDimensions, type CouponHole, couponDimensions } from '../../parts/coupon-dimensions.ts';
 import type { PartsRecord } from '../../record/schema.ts';
 import type { View } from '../views.ts';
+import { said } from '../words.ts';
 import { across, box, callout, hidden, round, size, upright } from './strokes.ts';
 
 export function couponViews(record: PartsRecord): Record<string, View[]> {
@@ -33,9 +34,9 @@ function platePlan(d: CouponDimensions): View {
     dimensions: [
       across(0, d.widthMm, 0, 'below'),
       upright(0, d.depthMm, 0, 'left'),
-      callout(socket.x, socket.y, 'right', `sockets dia ${d.plugMm} + number`),
-      callout(screw.x, screw.y, 'right', `holes dia ${size(d.screwHoleMm)} + number`),
-      callout(wire.x, wire.y, 'right', `lying holes dia ${size(d.wireHoleMm)} + number`),
+      callout(socket.x, socket.y, 'right', said`sockets dia ${size(d.plugMm)} + number (mm)`),
+      callout(screw.x, screw.y, 'right', said`holes dia ${size(d.screwHoleMm)} + number (mm)`),
+      callout(wire.x, wire.y, 'right', said`lying holes dia ${size(d.wireHoleMm)} + number (mm)`),
     ],
   };
 }
@@ -76,7 +77,7 @@ function plugElevation(d: CouponDimensions): View {
       },
     ],
     dimensions: [
-      across(-r, r, top - c, 'above', `dia ${size(d.plugMm)}`),
+      across(-r, r, top - c, 'above', said`dia ${size(d.plugMm)}`),
       across(-d.headMm / 2, d.headMm / 2, 0, 'below'),
       upright(0, top, -d.headMm / 2, 'left'),
     ],

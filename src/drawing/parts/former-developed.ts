@@ -5,6 +5,7 @@ import type { Hole, PartsRecord } from '../../record/schema.ts';
 import type { Polyline } from '../drawing.ts';
 import { circle, line, polyline, rectangle } from '../shapes.ts';
 import type { Callout, Mark, Span, View } from '../views.ts';
+import { said } from '../words.ts';
 import { callout, mark, mm, type Point, round, span } from './sizes.ts';
 
 type Shapes = View['shapes'][number];
@@ -47,7 +48,7 @@ export function holeSizes(holes: readonly Hole[], x: (angleDeg: number) => numbe
     const alike = holes.filter((hole) => hole.diameterMm === size);
     const first = alike[0]!;
     const many = alike.length > 1 ? `${alike.length} x ` : '';
-    return callout([x(first.angleDeg), first.axialMm], 'left', `${many}${round(size)}`);
+    return callout([x(first.angleDeg), first.axialMm], 'left', said`${many}${round(size)}`);
   });
 }
 

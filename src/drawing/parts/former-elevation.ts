@@ -7,6 +7,7 @@ import type { PartsRecord } from '../../record/schema.ts';
 import type { Line, Polyline } from '../drawing.ts';
 import { circle, line, polygon, polyline, rectangle } from '../shapes.ts';
 import type { Callout, Span, View } from '../views.ts';
+import { said } from '../words.ts';
 import { callout, mm, type Point, round, span } from './sizes.ts';
 
 const RAD = Math.PI / 180;
@@ -67,13 +68,13 @@ function elevationSizes(d: FormerDimensions, record: PartsRecord): View['dimensi
   dimensions.push(span('x', [-r, waist], [r, waist], 'below', round(2 * r)));
   if (former.base) dimensions.push(span('x', [-d.footR, 0], [d.footR, 0], 'below', round(2 * d.footR)));
   if (groove) {
-    const text = `groove ${mm(groove.depthMm)} deep, floor ${mm(groove.floorMm)}, pitch ${mm(winding.pitchMm)}`;
+    const text = said`groove ${mm(groove.depthMm)} deep, floor ${mm(groove.floorMm)}, pitch ${mm(winding.pitchMm)}`;
     dimensions.push(callout([-r, d.axialMm(winding.turns / 2)], 'left', text));
   }
   const [ridge] = ridges;
   if (ridge) {
     const z = d.axialMm(ridge.fromTurn + 0.25) + ridge.footMm + ridge.widthMm / 2;
-    const text = `ridge ${mm(ridge.heightMm)} high, ${mm(ridge.widthMm)} wide`;
+    const text = said`ridge ${mm(ridge.heightMm)} high, ${mm(ridge.widthMm)} wide`;
     dimensions.push(callout([-r, z], 'left', text));
   }
   return dimensions;

@@ -3,6 +3,7 @@ import type { FormerDimensions } from '../../parts/dimensions.ts';
 import { EAR_ROOT_CHORDS, earOutline } from '../../parts/holes.ts';
 import { circle, line, polygon, polyline } from '../shapes.ts';
 import type { Callout, Mark, Span, View } from '../views.ts';
+import { said } from '../words.ts';
 import { callout, degrees, mark, mm, type Point, round, span } from './sizes.ts';
 
 const RAD = Math.PI / 180;
@@ -72,12 +73,12 @@ function endSizes(d: FormerDimensions): View['dimensions'] {
   const wall = fromAbove(135, (d.outsideR + d.boreR) / 2);
   const dimensions: (Span | Callout | Mark)[] = [
     span('x', [-d.boreR, 0], [d.boreR, 0], 'above', round(2 * d.boreR)),
-    callout(wall, 'right', `wall ${mm(former.wallMm)}`),
+    callout(wall, 'right', said`wall ${mm(former.wallMm)}`),
   ];
   const [screw] = d.screws;
   if (screw) {
     const at = d.screws.map(({ angleDeg }) => degrees(angleDeg)).join(', ');
-    const text = `${d.screws.length} x ${round(screw.diameterMm)} on ${round(2 * screw.radiusMm)}, at ${at}`;
+    const text = said`${d.screws.length} x ${round(screw.diameterMm)} on ${round(2 * screw.radiusMm)}, at ${at}`;
     dimensions.push(callout(fromAbove(screw.angleDeg, screw.radiusMm), 'right', text));
   }
   const [post] = former.posts;
@@ -86,7 +87,7 @@ function endSizes(d: FormerDimensions): View['dimensions'] {
       callout(
         fromAbove(post.angleDeg, d.outsideR + post.reachMm),
         'below',
-        `${former.posts.length} posts ${mm(post.widthMm)} wide, out ${mm(post.reachMm)}, eye ${round(post.eyeMm)}`,
+        said`${former.posts.length} posts ${mm(post.widthMm)} wide, out ${mm(post.reachMm)}, eye ${round(post.eyeMm)}`,
       ),
     );
     for (const each of former.posts)

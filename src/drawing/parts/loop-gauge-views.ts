@@ -2,6 +2,7 @@
 import { loopGaugeDimensions } from '../../parts/loop-gauge.ts';
 import type { PartsRecord } from '../../record/schema.ts';
 import type { View } from '../views.ts';
+import { mmText, said } from '../words.ts';
 import { across, box, callout, outline, round, size, upright } from './strokes.ts';
 
 /** @throws Fault (exit 4) as `loopGaugeDimensions` */
@@ -18,15 +19,15 @@ export function loopGaugeViews(record: PartsRecord): Record<string, View[]> {
     title: 'plan',
     shapes: [
       outline([[0, -half], ...edge, [0, half], [d.lengthMm, half], [d.lengthMm, -half]]),
-      ...d.lanes.map(({ pegMm, yMm, halfMm }) => round(pegMm, yMm, d.pegR, `peg ${size(halfMm)}`)),
+      ...d.lanes.map(({ pegMm, yMm, halfMm }) => round(pegMm, yMm, d.pegR, `peg ${mmText(halfMm)}`)),
     ],
     dimensions: [
       ...d.lanes.map(({ pegMm, yMm, halfMm }) =>
-        across(0, pegMm, yMm, 'above', `loop ${size(halfMm)}: ${size(pegMm)}`),
+        across(0, pegMm, yMm, 'above', said`loop ${mmText(halfMm)}: ${size(pegMm)}`),
       ),
       across(0, d.lengthMm, -half, 'below'),
       upright(-half, half, 0, 'left'),
-      callout(d.lanes[0]!.pegMm, d.lanes[0]!.yMm, 'right', `pegs dia ${size(2 * d.pegR)}`),
+      callout(d.lanes[0]!.pegMm, d.lanes[0]!.yMm, 'right', said`pegs dia ${size(2 * d.pegR)}`),
     ],
   };
   const top = d.plateMm + d.pegHeightMm;

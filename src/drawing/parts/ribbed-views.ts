@@ -14,6 +14,7 @@ import { ribName } from '../../record/rib-name.ts';
 import type { PartsRecord } from '../../record/schema.ts';
 import { circle, line, polygon, polyline, rectangle } from '../shapes.ts';
 import type { Callout, Mark, Span, View } from '../views.ts';
+import { said } from '../words.ts';
 import { developed } from './former-developed.ts';
 import { endView } from './former-end-view.ts';
 import { callout, degrees, mark, mm, type Point, round, span } from './sizes.ts';
@@ -122,12 +123,12 @@ function elevationSizes(d: RibbedDimensions, record: PartsRecord): View['dimensi
     span('y', [r, 0], [r, d.axialMm(0)], 'right', mm(d.axialMm(0))),
     span('y', [r, 0], [r, winding.finishMm], 'right', mm(winding.finishMm)),
     span('x', [-d.topR, lengthMm], [d.topR, lengthMm], 'above', round(2 * d.topR)),
-    span('x', [-r, waist], [r, waist], 'below', `${round(2 * r)} over the ribs`),
+    span('x', [-r, waist], [r, waist], 'below', said`${round(2 * r)} over the ribs`),
     ...(d.former.base ? [span('x', [-d.footR, 0], [d.footR, 0], 'below', round(2 * d.footR))] : []),
     callout(
       [seen(0, r, ribs.widthMm / 2), d.axialMm(Math.floor(winding.turns / 2))],
       'right',
-      `notches ${mm(notch.depthMm)} deep, floor ${mm(notch.floorMm)}, pitch ${mm(winding.pitchMm)}`,
+      said`notches ${mm(notch.depthMm)} deep, floor ${mm(notch.floorMm)}, pitch ${mm(winding.pitchMm)}`,
     ),
   ];
 }
@@ -159,12 +160,12 @@ function fromAbove(d: RibbedDimensions): View {
     callout(
       place(ribAngleDeg(d, 1), d.outsideR - depthMm / 2),
       'right',
-      `${count} ribs ${mm(widthMm)} x ${mm(depthMm)}`,
+      said`${count} ribs ${mm(widthMm)} x ${mm(depthMm)}`,
     ),
     callout(
       place(180 / count, d.ringOuterA),
       'below',
-      `inner rings ${mm(2 * d.ringOuterA)} across flats, ${mm(2 * d.ringInnerA)} inside`,
+      said`inner rings ${mm(2 * d.ringOuterA)} across flats, ${mm(2 * d.ringInnerA)} inside`,
     ),
     ...d.notchesMm.map((_, rib) => {
       const a = ribAngleDeg(d, rib);
@@ -176,7 +177,7 @@ function fromAbove(d: RibbedDimensions): View {
       callout(
         place(screw.angleDeg, screw.radiusMm),
         'right',
-        `${d.screws.length} x ${round(screw.diameterMm)} on ${round(2 * screw.radiusMm)}, at ${d.screws.map(({ angleDeg }) => degrees(angleDeg)).join(', ')}`,
+        said`${d.screws.length} x ${round(screw.diameterMm)} on ${round(2 * screw.radiusMm)}, at ${d.screws.map(({ angleDeg }) => degrees(angleDeg)).join(', ')}`,
       ),
     );
   return { title: 'end view', shapes: [...shapes, flats(d.ringOuterA), flats(d.ringInnerA), ...ribs], dimensions };
@@ -226,7 +227,7 @@ function alongRib(d: RibbedDimensions, record: PartsRecord): View {
       callout(
         [r - d.notch.depthMm, d.axialMm(1)],
         'right',
-        `notches every ${mm(record.windings[0]!.pitchMm)}, flanks 45°`,
+        said`notches every ${mm(record.windings[0]!.pitchMm)}, flanks 45°`,
       ),
     ],
   };

@@ -5,6 +5,7 @@ import { HALF_NOTCH_MM, NOTCH_MM, type SaddlePiece } from '../../parts/saddle-pi
 import type { PartsRecord } from '../../record/schema.ts';
 import type { Line, Polyline } from '../drawing.ts';
 import type { Mark, View } from '../views.ts';
+import { said, worded } from '../words.ts';
 import { across, box, callout, hidden, outline, round, size, upright } from './strokes.ts';
 
 const RAD = Math.PI / 180;
@@ -52,10 +53,10 @@ function endView(d: SaddleDimensions, { rim }: SaddlePiece): View {
     title: 'end view',
     shapes: [outline(saddleOutline(d, d.insideR)), ...(rim ? [rimArc] : [])],
     dimensions: [
-      callout(d.insideR, 0, 'right', `inside dia ${size(2 * d.insideR)}, wall ${size(d.wallMm)}`),
+      callout(d.insideR, 0, 'right', said`inside dia ${size(2 * d.insideR)}, wall ${size(d.wallMm)}`),
       callout(0, d.outsideR, 'above', `covers ${(2 * d.halfSweepDeg).toFixed(1)} degrees`),
       ...(rim
-        ? [callout(d.rimR * Math.cos(1), -d.rimR * Math.sin(1), 'below', `rim inside dia ${size(2 * d.rimR)}`)]
+        ? [callout(d.rimR * Math.cos(1), -d.rimR * Math.sin(1), 'below', said`rim inside dia ${size(2 * d.rimR)}`)]
         : []),
     ],
   };
@@ -95,12 +96,12 @@ function developed(d: SaddleDimensions, piece: SaddlePiece): View {
             upright(Math.max(0, fromMm), Math.max(...heights), half, 'right'),
           ]
         : []),
-      callout(0, toMm, 'above', `${size(((piece.middleDeg % 360) + 360) % 360)} degrees`),
+      callout(0, toMm, 'above', `${Number((((piece.middleDeg % 360) + 360) % 360).toFixed(2))} degrees`),
       ...guides.map(
         ({ hole, turnDeg }): Mark => ({
           kind: 'mark',
           at: [u(turnDeg), hole.axialMm],
-          text: `${hole.label} dia ${size(hole.diameterMm)}`,
+          ...worded(said`${hole.label} dia ${size(hole.diameterMm)}`),
         }),
       ),
     ],

@@ -12,6 +12,7 @@ import type { Box } from '../boxes.ts';
 import { clipped } from '../clip.ts';
 import { circle, line, polygon, polyline } from '../shapes.ts';
 import type { Callout, Mark, Span, View } from '../views.ts';
+import { said, type Wording } from '../words.ts';
 import { developed, holeSizes } from './former-developed.ts';
 import { elevation } from './former-elevation.ts';
 import { endView } from './former-end-view.ts';
@@ -163,7 +164,7 @@ function outsideSizes(section: Section): View['dimensions'] {
   if (below) {
     dimensions.unshift(span('y', [-below.spigotR, low], [-r, from], 'left', mm(from - low)));
     dimensions.push(
-      span('x', [-below.spigotR, low], [below.spigotR, low], 'below', `${round(2 * below.spigotR)} spigot`),
+      span('x', [-below.spigotR, low], [below.spigotR, low], 'below', said`${round(2 * below.spigotR)} spigot`),
     );
   } else if (d.footR > r) dimensions.push(span('x', [-d.footR, 0], [d.footR, 0], 'below', round(2 * d.footR)));
   if (!above && d.topR > r)
@@ -174,9 +175,9 @@ function outsideSizes(section: Section): View['dimensions'] {
 }
 
 /** Where the seam lies and how it runs. */
-function seamWords(joint: JointDimensions): string {
-  const key = `key at ${degrees(joint.keyDeg)}, ${mm(joint.seamMm)} above the datum`;
-  return joint.turn === null ? `flat seam, ${key}` : `seam, climbs ${mm(joint.climbMm)} a turn, ${key}`;
+function seamWords(joint: JointDimensions): Wording {
+  const key = said`key at ${degrees(joint.keyDeg)}, ${mm(joint.seamMm)} above the datum`;
+  return joint.turn === null ? said`flat seam, ${key}` : said`seam, climbs ${mm(joint.climbMm)} a turn, ${key}`;
 }
 
 /** A place from above, the start hole at the bottom; `t` beside the radius. */
@@ -201,7 +202,7 @@ function fromAbove({ d, below, above }: Section): View {
     const [half, r] = [above.tongueWidthMm / 2, above.boreR - above.tongueReachMm];
     const at = (t: number) => [place(above.keyDeg, d.boreR, t), place(above.keyDeg, r, t)] as const;
     shapes.push(polyline([...at(-half), ...at(half).toReversed()], 'thin'));
-    const words = `tongue ${mm(above.tongueWidthMm)} wide, out ${mm(above.tongueReachMm)}, at ${degrees(above.keyDeg)}`;
+    const words = said`tongue ${mm(above.tongueWidthMm)} wide, out ${mm(above.tongueReachMm)}, at ${degrees(above.keyDeg)}`;
     dimensions.push(callout(place(above.keyDeg, r), 'left', words));
   }
   if (below) {
@@ -209,10 +210,10 @@ function fromAbove({ d, below, above }: Section): View {
     shapes.push(circle(0, 0, below.ringR, 'thin'));
     const at = (t: number) => [place(below.keyDeg, below.spigotR, t), place(below.keyDeg, below.ringR, t)] as const;
     for (const t of [-half, half]) shapes.push(line(...at(t)[0], ...at(t)[1], 'hair', 'dashed'));
-    const words = `notch ${mm(below.notchWidthMm)} wide in the spigot, at ${degrees(below.keyDeg)}`;
+    const words = said`notch ${mm(below.notchWidthMm)} wide in the spigot, at ${degrees(below.keyDeg)}`;
     dimensions.push(
       callout(place(below.keyDeg, (below.spigotR + below.ringR) / 2), 'left', words),
-      span('x', [-below.ringR, 0], [below.ringR, 0], 'above', `${round(2 * below.ringR)} spigot inside`),
+      span('x', [-below.ringR, 0], [below.ringR, 0], 'above', said`${round(2 * below.ringR)} spigot inside`),
     );
   }
   return { title: 'end view', shapes, dimensions };
@@ -332,16 +333,20 @@ function cutSizes({ d, below, above }: Section): View['dimensions'] {
       callout(
         [below.spigotR, (below.endMm + inside) / 2],
         'right',
-        `spigot, ${mm(below.glueGapMm)} for glue on the radius`,
+        said`spigot, ${mm(below.glueGapMm)} for glue on the radius`,
       ),
-      callout([below.ringR, below.notchToMm], 'below', `notch up to ${mm(below.notchToMm - below.endMm)}, roof 45°`),
+      callout(
+        [below.ringR, below.notchToMm],
+        'below',
+        said`notch up to ${mm(below.notchToMm - below.endMm)}, roof 45°`,
+      ),
     );
   }
   if (above) {
     const r = above.boreR - above.tongueReachMm;
     dimensions.push(
       span('y', [r, above.tongueFromMm], [r, above.tongueToMm], 'left', mm(above.tongueToMm - above.tongueFromMm)),
-      callout([r, above.tongueFromMm], 'below', `tongue, out ${mm(above.tongueReachMm)}`),
+      callout([r, above.tongueFromMm], 'below', said`tongue, out ${mm(above.tongueReachMm)}`),
       callout([d.outsideR, above.seamMm], 'right', 'seam falls inwards at 45°'),
     );
   }

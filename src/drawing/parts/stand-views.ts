@@ -19,6 +19,7 @@ import { hull } from '../../parts/stand-outline.ts';
 import { latchHole, uprightOutline, windowOutline } from '../../parts/stand-upright.ts';
 import type { PartsRecord } from '../../record/schema.ts';
 import type { View } from '../views.ts';
+import { said } from '../words.ts';
 import { boreShape, collarViews, coneViews } from './arbor-views.ts';
 import { across, box, callout, hidden, outline, round, size, upright } from './strokes.ts';
 
@@ -44,7 +45,7 @@ export function standViews(record: PartsRecord): Record<string, View[]> {
                 spool.drumRMm,
                 spool.drumMm / 2,
                 'right',
-                `groove dia ${size(2 * spool.drumRMm)}, ${size(spool.floorMm)} wide`,
+                said`groove dia ${size(2 * spool.drumRMm)}, ${size(spool.floorMm)} wide`,
               ),
             ],
           }
@@ -64,13 +65,13 @@ function uprightViews(d: UprightDimensions): View[] {
     title: 'plan',
     shapes: [outline(shape), round(hx, hy, M4.holeMm / 2, 'latch'), ...(window ? [outline(window)] : [])],
     dimensions: [
-      across(d.tenonXMm - w, d.tenonXMm + w, -d.tenonMm, 'below', `tenon ${size(d.tenonWidthMm)}`),
+      across(d.tenonXMm - w, d.tenonXMm + w, -d.tenonMm, 'below', said`tenon ${size(d.tenonWidthMm)}`),
       across(-d.screwXMm, d.screwXMm, 0, 'below'),
       across(-half, half, 0, 'below'),
       upright(0, d.axisMm, -half, 'left'),
       upright(-d.tenonMm, top, half, 'right'),
-      callout(0, d.axisMm - d.bearingMm / 2, 'left', `bearing ${size(d.bearingMm)} wide, round below`),
-      callout(hx, hy, 'left', `dia ${size(M4.holeMm)}`),
+      callout(0, d.axisMm - d.bearingMm / 2, 'left', said`bearing ${size(d.bearingMm)} wide, round below`),
+      callout(hx, hy, 'left', said`dia ${size(M4.holeMm)}`),
     ],
   };
   const edge: View = {
@@ -115,15 +116,17 @@ function basePlan(record: PartsRecord, d: BaseDimensions, piece: BasePiece): Vie
       ...(ends ? [across(piece.fromMm, x, -half, 'below')] : []),
       ...(piece.part === 'whole' ? [across(x, -x, -half, 'below')] : []),
       across(piece.fromMm, piece.toMm, -half, 'below'),
-      ...(joint.length > 0 ? [across(joint[0]!, joint[1]!, half, 'above', `tongue ${size(DOVETAIL.lengthMm)}`)] : []),
+      ...(joint.length > 0
+        ? [across(joint[0]!, joint[1]!, half, 'above', said`tongue ${size(DOVETAIL.lengthMm)}`)]
+        : []),
       upright(-half, half, piece.toMm, 'right'),
       ...(ends
         ? [
             upright(-d.screwYMm, d.screwYMm, piece.fromMm, 'left'),
-            callout(x, d.tenonYMm, 'above', `mortise ${size(mx)} x ${size(my)}`),
+            callout(x, d.tenonYMm, 'above', said`mortise ${size(mx)} x ${size(my)}`),
           ]
         : []),
-      callout(piece.fromMm, 0, 'left', `${size(d.thicknessMm)} thick`),
+      callout(piece.fromMm, 0, 'left', said`${size(d.thicknessMm)} thick`),
     ],
   };
 }
@@ -147,7 +150,7 @@ function crankViews({ clamp, crank: d }: StandDimensions): View[] {
       across(-d.armMm, 0, -clamp.halfWidthMm, 'below'),
       across(left, clamp.endXMm, -clamp.halfWidthMm, 'below'),
       upright(-clamp.halfWidthMm, clamp.halfWidthMm, left, 'left'),
-      callout(0, clamp.boreMm / 2, 'above', `bore ${size(clamp.boreMm)}`),
+      callout(0, clamp.boreMm / 2, 'above', said`bore ${size(clamp.boreMm)}`),
     ],
   };
   const elevation: View = {
@@ -158,7 +161,7 @@ function crankViews({ clamp, crank: d }: StandDimensions): View[] {
       round(clamp.screwXMm, clamp.heightMm / 2, clamp.screwHoleMm / 2, 'screw'),
     ],
     dimensions: [
-      across(-d.armMm - d.pinMm / 2, -d.armMm + d.pinMm / 2, top, 'above', `dia ${size(d.pinMm)}`),
+      across(-d.armMm - d.pinMm / 2, -d.armMm + d.pinMm / 2, top, 'above', said`dia ${size(d.pinMm)}`),
       upright(clamp.heightMm, top, left, 'left'),
       upright(0, clamp.heightMm, clamp.endXMm, 'right'),
       callout(clamp.screwXMm, clamp.heightMm / 2, 'below', `M4 x ${clamp.screwLengthMm}`),
@@ -180,8 +183,8 @@ function handleViews({ crank: d }: StandDimensions): View[] {
       title: 'elevation',
       shapes: [box(-r, 0, 2 * r, top), ...bore],
       dimensions: [
-        across(-r, r, 0, 'below', `dia ${size(2 * r)}`),
-        across(-b, b, top, 'above', `bore dia ${size(2 * b)}`),
+        across(-r, r, 0, 'below', said`dia ${size(2 * r)}`),
+        across(-b, b, top, 'above', said`bore dia ${size(2 * b)}`),
         upright(0, top, -r, 'left'),
       ],
     },
@@ -198,7 +201,7 @@ function latchViews({ latch: d }: StandDimensions): View[] {
       dimensions: [
         across(-r, d.reachMm + r, -r, 'below'),
         upright(-r, r, d.reachMm + r, 'right'),
-        callout(0, M4.holeMm / 2, 'above', `dia ${size(M4.holeMm)}`),
+        callout(0, M4.holeMm / 2, 'above', said`dia ${size(M4.holeMm)}`),
       ],
     },
     {
@@ -219,8 +222,8 @@ function bushViews({ clamp }: StandDimensions, d: NonNullable<StandDimensions['b
         box(-r, d.flangeThicknessMm, 2 * r, d.heightMm - d.flangeThicknessMm),
       ],
       dimensions: [
-        across(-r, r, d.heightMm, 'above', `dia ${size(d.outsideMm)}`),
-        across(-f, f, 0, 'below', `dia ${size(d.flangeMm)}`),
+        across(-r, r, d.heightMm, 'above', said`dia ${size(d.outsideMm)}`),
+        across(-f, f, 0, 'below', said`dia ${size(d.flangeMm)}`),
         upright(0, d.heightMm, -f, 'left'),
         upright(0, d.flangeThicknessMm, f, 'right'),
       ],
@@ -228,7 +231,7 @@ function bushViews({ clamp }: StandDimensions, d: NonNullable<StandDimensions['b
     {
       title: 'plan',
       shapes: [round(0, 0, f), round(0, 0, r), boreShape(clamp)],
-      dimensions: [callout(0, clamp.boreMm / 2, 'above', `${size(clamp.boreMm)} across flats`)],
+      dimensions: [callout(0, clamp.boreMm / 2, 'above', said`${size(clamp.boreMm)} across flats`)],
     },
   ];
 }
@@ -285,7 +288,7 @@ function assembled(record: PartsRecord, d: StandDimensions): View[] {
       across(-base.uprightXMm + stand.thicknessMm / 2, base.uprightXMm - stand.thicknessMm / 2, bottom, 'below'),
       across(-end, end, bottom, 'below'),
       upright(0, axis, end, 'right'),
-      callout(d.shaftMm / 2, axis, 'above', `shaft ${size(shop.shaftMm)}, ${size(d.shaftMm)} long`),
+      callout(d.shaftMm / 2, axis, 'above', said`shaft ${size(shop.shaftMm)}, ${size(d.shaftMm)} long`),
       callout(-face - clamp.heightMm / 2, axis + clamp.endXMm, 'above', 'crank'),
     ],
   };
@@ -328,8 +331,8 @@ function holderElevation(record: PartsRecord, d: StandDimensions): View {
     dimensions: [
       across(-end, end, -base.thicknessMm, 'below'),
       upright(0, axis, end, 'right'),
-      callout(0, axis + r, 'above', `spool dia ${size(2 * r)} x ${size(2 * half)}`),
-      callout(d.spoolShaftMm / 2, axis, 'above', `shaft ${size(d.spoolShaftMm)} long`),
+      callout(0, axis + r, 'above', said`spool dia ${size(2 * r)} x ${size(2 * half)}`),
+      callout(d.spoolShaftMm / 2, axis, 'above', said`shaft ${size(d.spoolShaftMm)} long`),
     ],
   };
 }

@@ -2,6 +2,7 @@
 import type { Circle, Polyline } from '../drawing.ts';
 import { polygon, polyline, rectangle } from '../shapes.ts';
 import type { Callout, Span } from '../views.ts';
+import { type Length, type Wording, worded } from '../words.ts';
 
 type Point = readonly [number, number];
 
@@ -21,20 +22,21 @@ export const round = (x: number, y: number, r: number, name?: string): Circle =>
   ...(name === undefined ? {} : { name }),
 });
 
-/** To a hundredth, without noughts at the end. */
-export const size = (mm: number): string => `${Number(mm.toFixed(2))}`;
+export const size = (mm: number): Length => ({ mm });
 
-export function across(fromX: number, toX: number, y: number, side: 'above' | 'below', text?: string): Span {
-  return { kind: 'span', along: 'x', from: [fromX, y], to: [toX, y], side, text: text ?? size(toX - fromX) };
+export function across(fromX: number, toX: number, y: number, side: 'above' | 'below', words?: Wording): Span {
+  const [from, to] = [[fromX, y] as const, [toX, y] as const];
+  return { kind: 'span', along: 'x', from, to, side, ...worded(words ?? size(toX - fromX)) };
 }
 
-export function upright(fromY: number, toY: number, x: number, side: 'left' | 'right', text?: string): Span {
-  return { kind: 'span', along: 'y', from: [x, fromY], to: [x, toY], side, text: text ?? size(toY - fromY) };
+export function upright(fromY: number, toY: number, x: number, side: 'left' | 'right', words?: Wording): Span {
+  const [from, to] = [[x, fromY] as const, [x, toY] as const];
+  return { kind: 'span', along: 'y', from, to, side, ...worded(words ?? size(toY - fromY)) };
 }
 
-export const callout = (x: number, y: number, side: Callout['side'], text: string): Callout => ({
+export const callout = (x: number, y: number, side: Callout['side'], words: Wording): Callout => ({
   kind: 'callout',
   at: [x, y],
   side,
-  text,
+  ...worded(words),
 });
