@@ -2,7 +2,7 @@
  * The pipeline of `plan`, without I/O:
  *
  *     job ──> demand ──> candidates ──> designs ──> chosen coil ──> record ──┬──> winding sheet (PDF)
- *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template, reference sheet (PDF), netlist
+ *      │    (solve/     (solve/        (solve/     (solve/        (record/   ├──> wrap template, reference sheet, range plate (PDF), netlist
  *      │     demand)     candidates)    design)     search)        make)     ├──> hole pattern (SVG, DXF), former (STL, in a worker)
  *      └────────────────────── nothing fits: solve/refusal ──> fault 4       └──> plan.json
  *
@@ -52,6 +52,15 @@ async function partsSheetFile(record: CoilRecord, made: readonly PicturedPart[])
   ];
 }
 
+/** The plate of the range switch; none for a coil of one position. */
+async function rangePlateFile(record: CoilRecord): Promise<OutputFile[]> {
+  const { rangePlate } = await import('./sheets/range-plate.ts');
+  const bytes = await rangePlate(record);
+  return bytes === null
+    ? []
+    : [{ path: 'range-plate.pdf', kind: 'pdf', bytes, note: 'for the switch, true scale, print at 100 %' }];
+}
+
 /** The record and every file of the output folder. */
 export async function planJob(job: Job, options: { version: string }): Promise<Output<CoilRecord>> {
   const kernel = startKernel();
@@ -81,6 +90,7 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
         bytes: ranges,
         note: 'ranges, curves, switch wiring, and how the figures come about',
       },
+      ...(await rangePlateFile(record)),
       netlistFile(record),
       ...partsSheet,
       ...partFiles(record, made),
