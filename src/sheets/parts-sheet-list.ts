@@ -36,10 +36,11 @@ function columnsOf(
   return parts.map(([head, , more], i) => ({ head, widthMm: widths[i]!, ...more }));
 }
 
-/** Three sizes in a cell, each unit on a line of its own. */
-function sizeCell(sizeMm: readonly number[], units: Units): string {
+/** Sizes in a cell, each unit on a line of its own; with the unit only where the head of the column does not have it. */
+function sizeCell(sizeMm: readonly number[], units: Units, bare = true): string {
   const lines = units === 'both' ? (['metric', 'inch'] as const) : [units];
-  return lines.map((unit) => sizeMm.map((mm) => lengthCell(mm, unit, PART_STYLE)).join(' × ')).join('\n');
+  const cell = (unit: Units) => sizeMm.map((mm) => lengthCell(mm, unit, PART_STYLE)).join(' × ');
+  return lines.map((unit) => (bare ? cell(unit) : lengthsText(sizeMm, unit, ' × ', PART_STYLE))).join('\n');
 }
 
 /** The parts `from` up to `to`; `sheetOf` tells where each is drawn. */
@@ -107,7 +108,7 @@ export function bedList(record: CoilRecord, from: number, to: number, widthMm: n
 /** Every setting with whether the job gave it. */
 export function printer(record: CoilRecord, widthMm: number, measure: Measure): Block {
   const { printer, shop, parts, assumed } = record;
-  const inShop = (...sizes: number[]) => lengthsText(sizes, unitsOf(record), ' × ', { digits: 2, trim: true });
+  const inShop = (...sizes: number[]) => sizeCell(sizes, unitsOf(record), false);
   // What a slicer is set to is millimetres everywhere.
   const mm = (...sizes: number[]) => PRINTER.mm(sizes.map((size) => short(size, 3)).join(' × '));
   const rows: (readonly [key: string, what: string, value: string])[] = [

@@ -51,7 +51,7 @@ function fitted(
   measure: Measure,
 ): Column[] {
   const least = asked.map((column, c) => {
-    const words = (column.align ?? 'left') === 'left' ? [] : rows.map((row) => row[c] ?? '');
+    const words = (column.align ?? 'left') === 'left' ? [] : rows.flatMap((row) => (row[c] ?? '').split('\n'));
     const head = column.head.split(' ').map((word) => measure.width(word, SMALL_MM, true));
     const cells = words.map((word) => measure.width(word, sizeMm, column.bold));
     return Math.max(...head, ...cells) + 2 * PAD + 0.01;
