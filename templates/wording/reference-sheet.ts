@@ -50,8 +50,8 @@ export const CURVES = {
 export const WIRING = {
   heading: 'Switch wiring',
   one: 'The coil has one position: there is no switch to wire.',
-  front: 'from the front, the side of the knob',
-  behind: 'from behind, the side it is wired from',
+  front: 'from the front',
+  behind: 'from behind, to wire by',
   wafer: (name: string, side: string) => `${name}, ${side}`,
   single: 'Switch',
   tens: 'Tens switch',
@@ -64,7 +64,7 @@ export const WIRING = {
   start: 'S',
   set: 'common: to the set',
   turning: (step: string, shown: string) =>
-    `Numbers run clockwise seen from the front, counterclockwise from behind. Drawn: ${shown}; ${step}° from one position to the next, and on a switch with another step in the same order.`,
+    `Numbers run clockwise seen from the front, the side of the knob, and counterclockwise from behind, the side it is wired from. Drawn: ${shown}; ${step}° from one position to the next, and on a switch with another step in the same order.`,
   at: (name: string, position: string) => `${name} in position ${position}`,
   stop: (name: string, positions: number) => `${name}: set the stop to ${positions} positions.`,
   names: 'Contact and tap have the same number; the last contact takes the finish F.',

@@ -1,10 +1,15 @@
 import { describe, expect, test } from 'vitest';
 import { placeOn, written } from '../../src/drawing/log-axis.ts';
 import { axisOf, drawRangeChart, type RangeChart } from '../../src/drawing/range-chart.ts';
+import { curveAxes, drawTuningCurves } from '../../src/drawing/tuning-curves.ts';
+import { explainTap } from '../../src/explain/explain.ts';
 import { readCoilFile } from '../../src/job/coil-file.ts';
+import { tidy } from '../../src/quantity/format.ts';
 import type { CoilRecord } from '../../src/record/schema.ts';
-import { Paper } from '../../src/sheets/page.ts';
+import { PAPER_MM, Paper } from '../../src/sheets/page.ts';
+import { exampleTap } from '../../src/sheets/reference-explained.ts';
 import { layOutReferenceSheet, referenceFrame, referenceSheet } from '../../src/sheets/reference-sheet.ts';
+import { wafersOf } from '../../src/sheets/reference-wiring.ts';
 import { surveyRecordOf } from '../../src/survey.ts';
 import { layoutFaults } from '../helpers/layout.ts';
 import { readPdf } from '../helpers/pdf.ts';
@@ -32,8 +37,10 @@ function ranged(count: number, paper: 'A4' | 'Letter', step = 1.3, width = 1.5):
 
 const LAYOUTS: readonly (readonly [name: string, record: CoilRecord])[] = [3, 24, 60].flatMap((count) =>
   (['A4', 'Letter'] as const).flatMap((paper) => [
-    [`${count} positions, ${paper}`, ranged(count, paper, count > 24 ? 1.08 : 1.3)] as const,
-    [`${count} positions with gaps, ${paper}`, ranged(count, paper, 1.12, 1.05)] as const,
+    [
+      `${count} positions${paper === 'Letter' ? ' with gaps' : ''}, ${paper}`,
+      paper === 'Letter' ? ranged(count, paper, 1.12, 1.05) : ranged(count, paper, count > 24 ? 1.08 : 1.3),
+    ] as const,
   ]),
 );
 
@@ -159,5 +166,142 @@ band: 530 kHz to 1700 kHz`;
     const pages = layOutReferenceSheet(alone, measure);
     expect(layoutFaults(pages, referenceFrame, measure)).toEqual([]);
     expect(alone.windings[0]!.taps[0]!.range).toBeNull();
+  });
+});
+
+const PLAN_KINDS = ['open', 'shorted', 'shorted in sections', 'disconnected'] as const;
+
+describe('switch wiring', () => {
+  test.each(PLAN_KINDS)(
+    '%s: every tap on the contact of its number, common and start as the earthed end says',
+    (rest) => {
+      let wired = 0;
+      for (const unitTurns of [[], [1, 2, 3, 4, 5, 6, 7, 8, 9]])
+        for (const earthedEnd of ['start', 'finish'] as const) {
+          const plain = sampleRecord({ turns: [10, 20, 30, 40], unitTurns });
+          const record = {
+            ...plain,
+            frame: { ...plain.frame, earthedEnd },
+            surroundings: { ...plain.surroundings, rest },
+          };
+          const wafers = wafersOf(record);
+          const two = unitTurns.length > 0;
+          expect(wafers.length).toBe((two ? 2 : 1) * (rest === 'disconnected' ? 2 : 1));
+          const tens = wafers[0]!;
+          expect(tens.contacts.map(({ number, name }) => `${number} ${name}`)).toEqual([
+            '1 tap 1',
+            '2 tap 2',
+            '3 tap 3',
+            '4 F',
+          ]);
+          // Hot where the start, or the units' common, is earthed.
+          expect(tens.common === 'earth').toBe(earthedEnd === 'finish');
+          expect(tens.link).toBe(rest === 'shorted' ? 'last' : null);
+          expect(tens.bridge).toBe(rest === 'shorted in sections' ? 'behind' : null);
+          if (two) {
+            const units = wafers[rest === 'disconnected' ? 2 : 1]!;
+            expect(units.contacts[0]).toEqual({ number: '0', name: 'S' });
+            expect(units.contacts[9]).toEqual({ number: '9', name: 'u9' });
+            expect(units.common === 'earth').toBe(earthedEnd === 'start');
+            expect([units.link, units.bridge]).toEqual([
+              rest === 'shorted' ? 'first' : null,
+              rest === 'shorted in sections' ? 'before' : null,
+            ]);
+          }
+          const pages = layOutReferenceSheet(record, measure);
+          expect(layoutFaults(pages, referenceFrame, measure)).toEqual([]);
+          wired += wafers.length;
+        }
+      console.log(`switch wiring, ${rest}: ${wired} wafers`);
+      expect(wired).toBe(rest === 'disconnected' ? 12 : 6);
+    },
+  );
+
+  test('from behind every contact is mirrored about the middle of its view', () => {
+    const record = sampleRecord({ turns: [10, 20, 30, 40, 50] });
+    const [wafer] = wafersOf(record);
+    const circles = layOutReferenceSheet(record, measure)
+      .flatMap((page) => page.shapes)
+      .flatMap((shape) => (shape.shape === 'circle' && shape.name?.startsWith('contact') ? [shape] : []));
+    expect(circles.length).toBe(2 * wafer!.contacts.length);
+    const half = PAPER_MM.A4[0] / 2;
+    for (const { number } of wafer!.contacts) {
+      const [front, behind] = circles.filter(({ name }) => name === `contact ${number}`);
+      // The front is drawn left, the back right, each in the middle of its half of the page's width.
+      expect(front!.y).toBeCloseTo(behind!.y, 9);
+      expect(front!.x + behind!.x).toBeCloseTo(2 * half, 9);
+    }
+    // Clockwise from the front: the first three rise and go right.
+    const fronts = circles.slice(0, 5);
+    for (const [i, { x }] of fronts.entries()) if (i > 0) expect(x).toBeGreaterThan(fronts[i - 1]!.x);
+  });
+});
+
+describe('the rest of the sheet', () => {
+  const textsOf = (record: Parameters<typeof layOutReferenceSheet>[0]) =>
+    layOutReferenceSheet(record, measure).flatMap((page) =>
+      page.shapes.flatMap((shape) => (shape.shape === 'text' ? [shape.text] : [])),
+    );
+
+  test('draws every curve through its points', () => {
+    const record = sampleRecord();
+    const { taps } = record.windings[0]!;
+    const curves = taps.map(({ tap, curve }) => ({ tap, points: curve }));
+    const drawn = { curves, fixedPf: 72, band: null };
+    const [pf, kHz] = curveAxes(drawn, 186, 150);
+    const lines = drawTuningCurves(drawn, 186, 150, measure).shapes.filter(
+      (shape) => shape.shape === 'polyline' && !shape.closed,
+    );
+    expect(lines.length).toBe(taps.length);
+    lines.forEach((line, i) => {
+      if (line.shape !== 'polyline') return;
+      line.points.forEach(([x, y], k) => {
+        const point = taps[i]!.curve[k]!;
+        expect(x - 13).toBeCloseTo(placeOn(pf, point.capacitancePf), 9);
+        expect(y - 11).toBeCloseTo(placeOn(kHz, point.frequencyKhz), 9);
+      });
+    });
+  });
+
+  test('tells why this coil and lists the others; with no set it says what it leaves out', () => {
+    const record = sampleRecord();
+    const texts = textsOf(record);
+    const all = texts.join(' ');
+    expect(all).toContain(record.chosen.why.slice(1, 20));
+    for (const other of record.alternatives) {
+      expect(all).toContain(other.wire);
+      for (const cell of [`${other.formerMm}`, other.wireM.toFixed(2), other.lossFactor.toFixed(5)])
+        expect(texts).toContain(cell);
+    }
+    const winding = record.windings[0]!;
+    const taps = winding.taps.map((tap) => ({ ...tap, range: null, ends: [], curve: [] }));
+    const alone = { ...record, demand: { ...record.demand, set: null }, windings: [{ ...winding, taps }] };
+    const told = textsOf(alone);
+    expect(told.join(' ')).toContain('Tuning curves are left out');
+    expect(told).not.toContain('at');
+    expect(layoutFaults(layOutReferenceSheet(alone, measure), referenceFrame, measure)).toEqual([]);
+  });
+
+  test('works the figures of one tap out again, and prints inches where they are wanted', () => {
+    const record = sampleRecord();
+    const explained = explainTap(record, exampleTap(record));
+    const all = textsOf(record).join(' ');
+    let told = 0;
+    for (const { figure, value, unit } of explained.figures.slice(3)) {
+      const name = figure.charAt(0).toUpperCase() + figure.slice(1);
+      expect(all).toContain(`${name}: ${tidy(value, 5)}${unit === '' ? '' : ` ${unit}`}`);
+      told++;
+    }
+    expect(told).toBeGreaterThan(8);
+    console.log(`reference sheet: ${told} figures explained`);
+    for (const units of ['inch', 'both'] as const) {
+      const pages = layOutReferenceSheet({ ...record, units }, measure);
+      expect(layoutFaults(pages, referenceFrame, measure)).toEqual([]);
+      const inches = pages.flatMap((page) =>
+        page.shapes.flatMap((shape) => (shape.shape === 'text' ? [shape.text] : [])),
+      );
+      const cell = (record.alternatives[0]!.lengthMm / 25.4).toFixed(3);
+      expect(inches).toContain(units === 'inch' ? cell : `${record.alternatives[0]!.lengthMm.toFixed(1)} (${cell})`);
+    }
   });
 });
