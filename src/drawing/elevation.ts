@@ -3,12 +3,15 @@
  * from the datum. Angles grow to the right on the side that is seen, so a right-hand coil climbs to the right.
  * Millimetres on paper; the origin is where the axis meets the datum.
  */
-import { axialAt } from '../coil/layout.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import type { Measure } from './boxes.ts';
 import type { Drawing, Shape } from './drawing.ts';
-import { arrow, arrowHead, circle, earthSymbol, label, line, polyline, rectangle, SMALL_MM } from './shapes.ts';
+import { formerOutline, turns } from './elevation-body.ts';
+import { seamLines } from './seam-lines.ts';
+import { arrow, arrowHead, circle, earthSymbol, label, line, polyline, SMALL_MM } from './shapes.ts';
 import { spread } from './spread.ts';
+
+export { frontOfTurn } from './elevation-body.ts';
 
 export interface ElevationWords {
   readonly datum: string;
@@ -18,7 +21,13 @@ export interface ElevationWords {
   readonly top: string;
   readonly rightHand: string;
   readonly leftHand: string;
+  /** Beside the seam of a former in sections. */
+  readonly seam: string;
 }
+
+/** How lengths are written beside the coil: in millimetres to the hundredth where nothing else is said. */
+export type WriteLength = (mm: number) => string;
+const millimetres: WriteLength = (mm) => mm.toFixed(2);
 
 export interface Elevation extends Drawing {
   readonly scale: number;
@@ -54,7 +63,11 @@ function halfWidth(record: CoilRecord): number {
 const MOST_NAMED = 40;
 
 /** The column of distances: what is named and where it lies. */
-function ordinateItems(record: CoilRecord, words: ElevationWords): { name: string; z: number; value: string }[] {
+function ordinateItems(
+  record: CoilRecord,
+  words: ElevationWords,
+  length: WriteLength,
+): { name: string; z: number; value: string }[] {
   const winding = record.windings[0]!;
   const last = winding.taps.length;
   // Of very many taps every second or third is named beside the drawing; the tap table has them all.
@@ -70,12 +83,17 @@ function ordinateItems(record: CoilRecord, words: ElevationWords): { name: strin
       })),
     { name: words.top, z: record.former.lengthMm },
   ];
-  return items.map((item) => ({ ...item, value: item.z.toFixed(2) }));
+  return items.map((item) => ({ ...item, value: length(item.z) }));
 }
 
 /** Widths of the two columns of text beside the coil. */
-function ordinateWidths(record: CoilRecord, words: ElevationWords, measure: Measure): [number, number] {
-  const items = ordinateItems(record, words);
+function ordinateWidths(
+  record: CoilRecord,
+  words: ElevationWords,
+  measure: Measure,
+  length: WriteLength,
+): [number, number] {
+  const items = ordinateItems(record, words, length);
   return [
     Math.max(...items.map((item) => measure.width(item.name, SMALL_MM))),
     Math.max(...items.map((item) => measure.width(item.value, SMALL_MM, true))),
@@ -89,8 +107,9 @@ export function elevationScale(
   heightMm: number,
   words: ElevationWords,
   measure: Measure,
+  length: WriteLength = millimetres,
 ): number {
-  const [names, values] = ordinateWidths(record, words, measure);
+  const [names, values] = ordinateWidths(record, words, measure, length);
   const room = widthMm - 2 - LEADS_MM - TEXT_MM - names - 2 - values;
   const wide = 2 * halfWidth(record);
   const fits = SCALES.find((scale) => wide * scale <= room && record.former.lengthMm * scale <= heightMm);
@@ -101,54 +120,6 @@ export function elevationScale(
 export function scaleText(scale: number): string {
   const digits = (x: number) => `${Number(x.toFixed(2))}`;
   return scale >= 1 ? `${digits(scale)}:1` : `1:${digits(1 / scale)}`;
-}
-
-function formerOutline(record: CoilRecord, s: number): Shape[] {
-  const { former } = record;
-  const r = (former.outsideDiameterMm / 2) * s;
-  const top = former.lengthMm * s;
-  const shapes: Shape[] = [];
-  for (const ear of former.ears) {
-    const a = (ear.angleDeg * Math.PI) / 180;
-    const x = Math.sin(a) * ear.centreRadiusMm * s;
-    const half = (ear.widthMm / 2) * s;
-    const behind = Math.cos(a) < 0;
-    shapes.push(rectangle(x - half, 0, 2 * half, ear.thicknessMm * s, 'thin', undefined, behind ? 'dashed' : 'solid'));
-  }
-  const { flange, base } = former;
-  const low = (base?.thicknessMm ?? flange?.lowerMm ?? 0) * s;
-  const high = top - (flange ? flange.upperMm * s : 0);
-  shapes.push(rectangle(-r, low, 2 * r, high - low, 'outline', 1));
-  if (flange) {
-    const rim = (flange.diameterMm / 2) * s;
-    if (!base) shapes.push(rectangle(-rim, 0, 2 * rim, flange.lowerMm * s, 'outline'));
-    shapes.push(rectangle(-rim, high, 2 * rim, flange.upperMm * s, 'outline'));
-  }
-  if (base) shapes.push(rectangle((-base.diameterMm / 2) * s, 0, base.diameterMm * s, base.thicknessMm * s, 'outline'));
-  return shapes;
-}
-
-/** The front half of the turn that comes round to the start hole's side at `k` turns, as points of the picture at a scale. */
-export function frontOfTurn(record: Pick<CoilRecord, 'windings' | 'frame'>, k: number, s: number): [number, number][] {
-  const winding = record.windings[0]!;
-  const sense = record.frame.hand === 'right' ? 1 : -1;
-  const r = (winding.meanDiameterMm / 2) * s;
-  const from = Math.max(0, k - 0.25);
-  const to = Math.min(winding.turns, k + 0.25);
-  return Array.from({ length: 11 }, (_, i) => {
-    const u = from + ((to - from) * i) / 10;
-    const z = axialAt(winding.turnPositionsMm, winding.turns, winding.pitchMm, u);
-    return [sense * r * Math.sin(2 * Math.PI * u), z * s];
-  });
-}
-
-/** The front half of every turn. */
-function turns(record: CoilRecord, s: number): Shape[] {
-  const winding = record.windings[0]!;
-  const shapes: Shape[] = [];
-  for (let k = 0; k - 0.25 < winding.turns; k++)
-    shapes.push(polyline(frontOfTurn(record, k, s), winding.wire.overallMm * s > 0.6 ? 'thin' : 'hair'));
-  return shapes;
 }
 
 /** A dot at a place on the surface: full in front, hollow behind. */
@@ -170,9 +141,16 @@ function dots(record: CoilRecord, s: number): Shape[] {
 }
 
 /** Distances from the datum, in a column right of the coil. */
-function ordinates(record: CoilRecord, s: number, words: ElevationWords, edge: number, measure: Measure) {
-  const items = ordinateItems(record, words);
-  const [nameWidth, valueWidth] = ordinateWidths(record, words, measure);
+function ordinates(
+  record: CoilRecord,
+  s: number,
+  words: ElevationWords,
+  edge: number,
+  measure: Measure,
+  length: WriteLength,
+) {
+  const items = ordinateItems(record, words, length);
+  const [nameWidth, valueWidth] = ordinateWidths(record, words, measure, length);
   const places = spread(
     items.map((item) => item.z * s),
     STEP,
@@ -197,14 +175,18 @@ function ordinates(record: CoilRecord, s: number, words: ElevationWords, edge: n
   };
 }
 
+/** Where the leads of start and finish stand: apart even on a coil drawn small. */
+function leadHeights(record: CoilRecord, s: number): [number, number] {
+  const { startMm, finishMm } = record.windings[0]!;
+  return [startMm * s, Math.max(finishMm * s, startMm * s + 9)];
+}
+
 /** Start and finish as leads on the left; the earthed one ends in the earth symbol. */
 function leads(record: CoilRecord, s: number, edge: number): Shape[] {
   const winding = record.windings[0]!;
   const body = -(record.former.outsideDiameterMm / 2) * s;
   const shapes: Shape[] = [];
-  const startZ = winding.startMm * s;
-  // The two stand apart even on a coil drawn small.
-  const finishZ = Math.max(winding.finishMm * s, startZ + 9);
+  const [startZ, finishZ] = leadHeights(record, s);
   for (const [end, z, place, letter] of [
     ['start', startZ, startZ, 'S'],
     ['finish', winding.finishMm * s, finishZ, 'F'],
@@ -220,6 +202,28 @@ function leads(record: CoilRecord, s: number, edge: number): Shape[] {
     }
   }
   return shapes;
+}
+
+/** Least from a lead to the word beside a seam. */
+const CLEAR_OF_LEADS = 6;
+
+/** Seams of a former in sections, as far as they are in front, named at the left. */
+function seams(record: CoilRecord, s: number, edge: number, words: ElevationWords): Shape[] {
+  const r = (record.former.outsideDiameterMm / 2) * s;
+  const taken = leadHeights(record, s);
+  return seamLines(record, -90, 90).flatMap((places) => {
+    const points = places.map(([a, z]) => [r * Math.sin((a * Math.PI) / 180), z * s] as const);
+    const z = points[0]![1];
+    // Up and down in turns, until the word is clear of both leads.
+    let y = z;
+    for (let off = 0; taken.some((at) => Math.abs(at - y) < CLEAR_OF_LEADS); off++)
+      y = z + (off % 2 === 0 ? 1 : -1) * Math.ceil((off + 1) / 2);
+    return [
+      polyline(points, 'outline'),
+      line(-r, z, -edge, y, 'hair'),
+      label(-edge - 0.6, y, words.seam, { align: 'right', anchor: 'middle' }),
+    ];
+  });
 }
 
 /** An arrow that climbs the way the wire runs on the side that is seen. */
@@ -242,15 +246,22 @@ function handArrow(record: CoilRecord, y: number, words: ElevationWords): Shape[
 }
 
 /** The whole picture at a scale. */
-export function elevation(record: CoilRecord, scale: number, words: ElevationWords, measure: Measure): Elevation {
+export function elevation(
+  record: CoilRecord,
+  scale: number,
+  words: ElevationWords,
+  measure: Measure,
+  length: WriteLength = millimetres,
+): Elevation {
   const edge = halfWidth(record) * scale + 1;
   const top = record.former.lengthMm * scale;
   const r = (record.former.outsideDiameterMm / 2) * scale;
-  const column = ordinates(record, scale, words, edge, measure);
+  const column = ordinates(record, scale, words, edge, measure, length);
   const shapes: Shape[] = [
     ...formerOutline(record, scale),
     line(0, -3, 0, top + 2, 'hair', 'centre'),
     ...turns(record, scale),
+    ...seams(record, scale, edge, words),
     ...dots(record, scale),
     ...leads(record, scale, edge),
     ...column.shapes,
@@ -260,7 +271,7 @@ export function elevation(record: CoilRecord, scale: number, words: ElevationWor
     line(-r, -1, -r, -7, 'hair'),
     line(r, -1, r, -7, 'hair'),
   ];
-  const size = `⌀ ${record.former.outsideDiameterMm.toFixed(2)}`;
+  const size = `⌀ ${length(record.former.outsideDiameterMm)}`;
   const half = measure.width(size, SMALL_MM, true) / 2 + 1.5;
   if (r > half + 3) {
     shapes.push(...arrow(-half, -6, -r, -6), ...arrow(half, -6, r, -6));

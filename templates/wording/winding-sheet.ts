@@ -43,6 +43,7 @@ export const DRAWING = {
   top: 'top',
   rightHand: 'right-hand',
   leftHand: 'left-hand',
+  seam: 'seam',
   heading: (scale: string) => `The coil, scale ${scale}`,
   seen: 'Start hole in front. Dots: full on this side, hollow behind. Heights: mm from the datum to the wire centre.',
   hand: {
