@@ -47,6 +47,8 @@ export interface Body {
 
 /** Between two blocks of a page, mm. */
 export const GAP_MM = 3;
+/** Between two items of a list, mm. */
+const ITEM_GAP_MM = 0.5;
 
 /** Pages that are filled from the top. */
 export class Filling {
@@ -92,16 +94,17 @@ export class Filling {
     }
   }
 
-  /** A heading with its items; together when the page holds them, else item by item, the first with its heading. */
+  /** A heading with its items, as many as each page holds; the heading never without its first item. */
   putList(group: readonly Block[], part: string): void {
-    const whole = stack(group, 0.5);
-    if (whole.heightMm <= this.left) {
-      this.put(whole, part);
-      return;
-    }
     const [head, first, ...rest] = group;
     if (head === undefined) return;
-    this.put(first === undefined ? head : stack([head, first], 0.5), part);
-    for (const block of rest) this.put(block, part);
+    const whole = (items: readonly Block[]) => stack(items, ITEM_GAP_MM);
+    let items = [first === undefined ? head : whole([head, first]), ...rest];
+    while (items.length > 0) {
+      let count = items.length;
+      while (count > 1 && whole(items.slice(0, count)).heightMm > this.left + 1e-9) count--;
+      this.put(whole(items.slice(0, count)), part);
+      items = items.slice(count);
+    }
   }
 }
