@@ -81,6 +81,9 @@ export interface Fittings {
   readonly ribs?: RibPlan | null;
 }
 
+/** On the lower edges, for the first layers. */
+const MOST_CHAMFER_MM = 0.5;
+
 /** The former with all its dimensions. The stiffness text says what the tension does to the wall. */
 export function formerFor(
   around: Around,
@@ -115,7 +118,8 @@ export function formerFor(
     topMm: flanges ? FLANGE_MM : 0,
     flange: flanges ? { diameterMm: widest, lowerMm: FLANGE_MM, upperMm: FLANGE_MM } : null,
     groove: grooved ? { depthMm: groove.depthMm, floorMm: groove.floorMm, runInTurns: 0.25 } : null,
-    chamferMm: printed ? 0.5 : 0,
+    // Inside and out, it leaves at least half of a thin wall to stand on.
+    chamferMm: printed ? Math.min(MOST_CHAMFER_MM, Math.round(25 * wallMm) / 100) : 0,
     ...mounting,
     numbers: flanges ? numbers : [],
     numberHeightMm: 3.2,
