@@ -28,7 +28,7 @@ export interface InductanceReading {
   readonly kHz: number;
 }
 
-/** Resonance with a known capacitor across the tap. */
+/** Resonance with a known capacitor across the tap. Readings with the same capacitor share its error. */
 export interface ResonanceReading {
   readonly kHz: Reading;
   readonly capacitorPf: Reading;
@@ -77,7 +77,7 @@ export interface OldWire {
 export interface OldCoil {
   readonly diameters: readonly DiameterReading[];
   readonly wire: OldWire;
-  /** Centre to centre; `close`: the turns touch, as close winding does (common practice 1 % +- 2 % over the wire). */
+  /** Centre to centre; `close`: the turns touch (common practice: enamel lies 1 % to 3 % looser than its diameter, textile within 3 %). */
   readonly pitchMm: Reading | 'close' | null;
   /** Over all wires, edge to edge. */
   readonly windingLengthMm: Reading | null;
