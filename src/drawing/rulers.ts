@@ -7,6 +7,32 @@ const RULER_MM = 100;
 /** How far a ruler reaches beside its line, figures included. */
 export const RULER_BREADTH_MM = 8.5;
 
+const INCH_MM = 25.4;
+const INCHES = 4;
+const SIXTEENTHS = 16;
+/** How far the ruler in inches reaches, its last figure included. */
+export const INCH_RULER_MM = INCHES * INCH_MM + 4;
+
+/** How long the stroke of a sixteenth is: the longer the fewer it halves. */
+function inchStroke(sixteenth: number): number {
+  if (sixteenth % SIXTEENTHS === 0) return 4.2;
+  return sixteenth % 8 === 0 ? 3.2 : sixteenth % 4 === 0 ? 2.4 : sixteenth % 2 === 0 ? 1.8 : 1.2;
+}
+
+/** Four inches in sixteenths to the right of the origin, strokes and figures below its line. */
+export function inchRuler(unit: string): Drawing {
+  const shapes: Shape[] = [line(0, 0, INCHES * INCH_MM, 0, 'thin')];
+  for (let n = 0; n <= INCHES * SIXTEENTHS; n++) {
+    const x = (n * INCH_MM) / SIXTEENTHS;
+    const whole = n % SIXTEENTHS === 0;
+    shapes.push(line(x, 0, x, -inchStroke(n), whole ? 'thin' : 'hair'));
+    if (!whole) continue;
+    const text = n === INCHES * SIXTEENTHS ? `${INCHES} ${unit}` : `${n / SIXTEENTHS}`;
+    shapes.push(label(x, -7.2, text, { align: 'centre' }));
+  }
+  return { shapes };
+}
+
 /** 100 mm to the right of the origin, ticks and figures below its line. */
 export function rulerAcross(unit: string): Drawing {
   const shapes: Shape[] = [line(0, 0, RULER_MM, 0, 'thin')];

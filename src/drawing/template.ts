@@ -6,9 +6,11 @@
  */
 import type { CoilRecord, Hole } from '../record/schema.ts';
 import type { Box, Measure } from './boxes.ts';
-import type { Shape } from './drawing.ts';
+import type { Line, Shape } from './drawing.ts';
 import { type Marked, placeLabels } from './labels.ts';
-import { circle, label, line, rectangle } from './shapes.ts';
+import { seamLines } from './seam-lines.ts';
+import { circle, label, line, polyline, rectangle } from './shapes.ts';
+import { loopMarks, markAtTap } from './tap-marks.ts';
 
 /** Thickness of the paper, mm. */
 export const PAPER_THICKNESS_MM = 0.1;
@@ -24,7 +26,7 @@ export interface Developed {
   readonly shapes: readonly Shape[];
   /** What labels and holes take up. */
   readonly taken: readonly Box[];
-  /** The edges of the winding: written over only where there is no better place. */
+  /** The edges of the winding, and seams of a former in sections: written over only where there is no better place. */
   readonly lines: readonly Box[];
   /** Labels for which there was no room. */
   readonly unlabelled: readonly string[];
@@ -39,6 +41,7 @@ export interface Developed {
 
 interface Place {
   readonly name: string;
+  readonly tap: boolean;
   readonly label: string;
   readonly angleDeg: number;
   readonly axialMm: number;
@@ -52,6 +55,7 @@ const holeName = (hole: Hole) => `hole ${hole.purpose} ${hole.label}`;
 export function places(record: CoilRecord): Place[] {
   const found: Place[] = record.holes.map((hole) => ({
     name: holeName(hole),
+    tap: hole.purpose === 'tap',
     label: hole.label,
     angleDeg: hole.angleDeg,
     axialMm: hole.axialMm,
@@ -66,6 +70,7 @@ export function places(record: CoilRecord): Place[] {
   for (const tap of marked) {
     found.push({
       name: `tap ${tap.label}`,
+      tap: true,
       label: tap.label,
       angleDeg: tap.angleDeg,
       axialMm: tap.positionMm,
@@ -113,6 +118,15 @@ function angleScale(seam: number, circumference: number, top: number): Shape[] {
   return shapes;
 }
 
+/** Small boxes along a line, for what is to keep off it. */
+function alongLine({ x1, y1, x2, y2 }: Line): Box[] {
+  const count = Math.max(1, Math.ceil(Math.hypot(x2 - x1, y2 - y1)));
+  return Array.from({ length: count + 1 }, (_, i) => {
+    const [x, y] = [x1 + ((x2 - x1) * i) / count, y1 + ((y2 - y1) * i) / count];
+    return { left: x - 0.2, right: x + 0.2, bottom: y - 0.2, top: y + 0.2 };
+  });
+}
+
 export function developed(record: CoilRecord, measure: Measure): Developed {
   const { former } = record;
   const winding = record.windings[0]!;
@@ -132,24 +146,37 @@ export function developed(record: CoilRecord, measure: Measure): Developed {
   const half = winding.wire.overallMm / 2;
   const edges = [winding.startMm - half, winding.finishMm + half];
   for (const z of edges) shapes.push(line(0, z, circumference, z, 'hair', 'dashed'));
-  const lines = edges.map((z): Box => ({ left: 0, right: circumference, bottom: z - 0.1, top: z + 0.1 }));
+  const lines: Box[] = edges.map((z): Box => ({ left: 0, right: circumference, bottom: z - 0.1, top: z + 0.1 }));
+  for (const places of seamLines(record, seam, seam + 360)) {
+    const points = places.map(([a, z]) => [((a - seam) / 360) * circumference, z] as const);
+    const heights = points.map(([, z]) => z);
+    shapes.push(polyline(points, 'thin'));
+    lines.push({ left: 0, right: circumference, bottom: Math.min(...heights), top: Math.max(...heights) + 0.1 });
+  }
+  const method = record.tapMethod.name;
   const marks: Marked[] = [];
   for (const place of all) {
     const at = x(place.angleDeg);
     shapes.push(...markOf(place, at));
+    const own = markAtTap(method, at, place.axialMm, winding.wire.overallMm, winding.pitchMm);
+    const bored = place.diameterMm > 0;
+    if (place.tap && !bored) shapes.push(...own.shapes);
     marks.push({
       text: place.label,
       x: at,
       y: place.axialMm,
-      reachMm: place.diameterMm > 0 ? place.diameterMm / 2 + 0.7 : 1.5,
+      reachMm: bored ? place.diameterMm / 2 + 0.7 : own.reachMm,
     });
   }
   const region = { left: 1, right: circumference - 1, bottom: bottom + 0.6, top: top - 0.6 };
   const labels = placeLabels(marks, region, [], lines, measure);
-  shapes.push(...labels.shapes);
+  const leaders = labels.shapes.filter((shape): shape is Line => shape.shape === 'line').flatMap(alongLine);
+  const taps = all.filter(({ tap }) => tap).map((place) => ({ x: x(place.angleDeg), y: place.axialMm }));
+  const loops = loopMarks(method, taps, region, [...labels.taken, ...leaders]);
+  shapes.push(...labels.shapes, ...loops.shapes);
   return {
     shapes,
-    taken: labels.taken,
+    taken: [...labels.taken, ...loops.taken],
     lines,
     unlabelled: labels.missing,
     unbored: all.some((place) => place.diameterMm === 0),

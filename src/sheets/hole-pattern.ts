@@ -13,7 +13,8 @@ import { svgOf } from '../drawing/svg.ts';
 import { markOf, places, seamOf } from '../drawing/template.ts';
 import type { OutputFile } from '../record/listing.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { fixed, short, wrap } from './text.ts';
+import { short, wrap } from './text.ts';
+import { lengthText, unitsOf } from './units.ts';
 
 /** Clear round the outline, for the datum and angle marks, mm. */
 const MARGIN_MM = 6;
@@ -64,11 +65,16 @@ export function layOutHolePattern(record: CoilRecord): Pattern {
   const labels = placeLabels(marks, region, [], [], measure);
   shapes.push(...labels.shapes);
 
+  // What machines read is in millimetres whatever the sheets are in: inches are only added.
+  const noted = unitsOf(record) === 'metric' ? 'metric' : 'both';
   const notes = [
     PATTERN.title(record.job),
     PATTERN.record(record.hash.slice(0, 12)),
     PATTERN.view,
-    PATTERN.across(short(former.outsideDiameterMm / 2, 4), fixed(round, 3)),
+    PATTERN.across(
+      lengthText(former.outsideDiameterMm / 2, noted, { digits: 4, trim: true }),
+      lengthText(round, noted, { digits: 3 }),
+    ),
     PATTERN.left(short(seam, 3)),
     ...(all.some((place) => place.diameterMm === 0) ? [PATTERN.unbored] : []),
     ...(labels.missing.length > 0 ? [PATTERN.unlabelled(labels.missing.join(', '))] : []),

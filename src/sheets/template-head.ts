@@ -6,27 +6,38 @@ import { label, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
 import { type Developed, PAPER_THICKNESS_MM } from '../drawing/template.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Block, paragraph, stack } from './block.ts';
-import { fixed, short } from './text.ts';
+import { short } from './text.ts';
 import type { Tile, Tiling } from './tiles.ts';
 import { titleBlock } from './title-block.ts';
+import { lengthText, lengthUnit, unitsOf } from './units.ts';
+
+/** Side of the check square: always also in millimetres, which stand beside it. */
+export const checkSize = (record: CoilRecord): string =>
+  lengthText(50, unitsOf(record) === 'metric' ? 'metric' : 'both', { digits: 1, trim: true });
 
 /** What to do with the sheet. */
 function instructions(record: CoilRecord, drawn: Developed, tiled: boolean, widthMm: number, measure: Measure): Block {
   const { former } = record;
+  const units = unitsOf(record);
+  const taps = record.windings[0]!.taps.length > 1;
+  const named = (mm: number, digits: number) => lengthText(mm, units, { digits, trim: true });
   const set =
     former.flange !== null
-      ? WRAP.setRim(fixed(drawn.bottomMm, 2))
+      ? WRAP.setRim(lengthText(drawn.bottomMm, units))
       : former.kind === 'tube'
         ? WRAP.setTube
         : WRAP.setFoot;
   const words = [
-    WRAP.print,
+    WRAP.print(units === 'metric' ? WRAP.rulers : WRAP.rulersInch, checkSize(record)),
     WRAP.side,
-    `${set} ${former.kind === 'tube' ? WRAP.jig : WRAP.printed}${drawn.unbored ? ` ${WRAP.unbored}` : ''}`,
+    `${set} ${former.kind === 'tube' ? WRAP.jig : WRAP.printed}${taps ? ` ${WRAP.taps[record.tapMethod.name]}` : ''}${former.joints.length > 0 ? ` ${WRAP.sections}` : ''}`,
+    ...(former.kind === 'tube' ? [WRAP.seam(short(drawn.seamDeg, 1))] : []),
     WRAP.measure(
-      short(former.outsideDiameterMm / 2, 3),
-      short(PAPER_THICKNESS_MM / 2, 3),
-      fixed(drawn.circumferenceMm, 2),
+      named(former.outsideDiameterMm / 2, 3),
+      named(PAPER_THICKNESS_MM / 2, 3),
+      named(PAPER_THICKNESS_MM, 1),
+      lengthText(drawn.circumferenceMm, units),
+      lengthUnit(units),
     ),
     ...(drawn.unlabelled.length > 0 ? [WRAP.unlabelled(drawn.unlabelled.join(', '))] : []),
     ...(tiled ? [WRAP.tiles] : []),

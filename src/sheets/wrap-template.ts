@@ -8,18 +8,31 @@ import { type Box, type Measure, overlap } from '../drawing/boxes.ts';
 import { clipped } from '../drawing/clip.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { freePlace } from '../drawing/labels.ts';
-import { checkSquare, cross, RULER_BREADTH_MM, rulerAcross, rulerUp, SQUARE_ROOM_MM } from '../drawing/rulers.ts';
+import {
+  checkSquare,
+  cross,
+  INCH_RULER_MM,
+  inchRuler,
+  RULER_BREADTH_MM,
+  rulerAcross,
+  rulerUp,
+  SQUARE_ROOM_MM,
+} from '../drawing/rulers.ts';
 import { arrow, label, line, moved, movedAll, SMALL_MM } from '../drawing/shapes.ts';
 import { type Developed, developed, SCALE_MM, TAB_MM } from '../drawing/template.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
-import { templateHead } from './template-head.ts';
-import { fixed } from './text.ts';
+import { checkSize, templateHead } from './template-head.ts';
 import { type Joint, joints, SHARED_MM, type Tile, type Tiling, tile } from './tiles.ts';
+import { lengthText, unitsOf } from './units.ts';
 
 /** Left free round every page, mm: what most printers cannot print on. */
 const TEMPLATE_MARGIN_MM = 7;
+/** What the rulers take at the left and at the foot of the page. */
 const RULER_BAND = RULER_BREADTH_MM + 3;
+/** Where the ruler in inches begins, beside the one in millimetres where the page is wide enough, else over it. */
+const INCHES_FROM = 118;
+const inchesBeside = (roomWidthMm: number) => roomWidthMm >= INCHES_FROM + INCH_RULER_MM;
 const HEAD_GAP = 3;
 const INFO = { width: 47, height: 14 };
 
@@ -30,6 +43,8 @@ interface Format {
   readonly tiling: Tiling;
   readonly roomWidthMm: number;
   readonly roomHeightMm: number;
+  /** What the rulers take at the foot. */
+  readonly footMm: number;
 }
 
 const wholeOf = (drawn: Developed): Box => ({
@@ -49,11 +64,13 @@ function formatOf(record: CoilRecord, drawn: Developed, measure: Measure): Forma
   ].map(([widthMm, heightMm]): Format => {
     const inner = widthMm! - 2 * TEMPLATE_MARGIN_MM;
     const roomWidthMm = inner - RULER_BAND;
+    const over = unitsOf(record) !== 'metric' && !inchesBeside(roomWidthMm);
+    const foot = RULER_BAND + (over ? RULER_BREADTH_MM : 0);
     // The head is lower without a map: try one page first.
     const room = (tiling: Tiling) =>
       heightMm! -
       2 * TEMPLATE_MARGIN_MM -
-      RULER_BAND -
+      foot -
       HEAD_GAP -
       templateHead(record, drawn, tiling, tiling.tiles[0]!, TITLE.sheet(10, 10), inner, measure).heightMm;
     const one = tile(whole, Infinity, Infinity);
@@ -64,7 +81,7 @@ function formatOf(record: CoilRecord, drawn: Developed, measure: Measure): Forma
         roomHeightMm = room(tiling);
         tiling = tile(whole, roomWidthMm, roomHeightMm);
       }
-    return { widthMm: widthMm!, heightMm: heightMm!, tiling, roomWidthMm, roomHeightMm };
+    return { widthMm: widthMm!, heightMm: heightMm!, tiling, roomWidthMm, roomHeightMm, footMm: foot };
   });
   const [upright, turned] = formats as [Format, Format];
   return turned.tiling.tiles.length < upright.tiling.tiles.length ? turned : upright;
@@ -83,23 +100,36 @@ function info(record: CoilRecord): Shape[] {
 }
 
 /** What the lower edge is, written along it where there is room. */
-function datumWords(drawn: Developed, here: Tile, taken: readonly Box[], measure: Measure): Shape[] {
+function datumWords(
+  record: CoilRecord,
+  drawn: Developed,
+  here: Tile,
+  taken: readonly Box[],
+  measure: Measure,
+): Shape[] {
   if (here.row > 0) return [];
-  const words = drawn.bottomMm === 0 ? WRAP.datum : WRAP.aboveDatum(fixed(drawn.bottomMm, 2));
-  const strip = { ...surface(drawn, here), bottom: drawn.bottomMm + 0.5, top: drawn.bottomMm + 3.5 };
+  const { bottomMm } = drawn;
+  const words = bottomMm === 0 ? WRAP.datum : WRAP.aboveDatum(lengthText(bottomMm, unitsOf(record)));
   const width = measure.width(words, SMALL_MM);
-  const place = freePlace(strip, [...taken, ...drawn.lines], width, 2.8) ?? freePlace(strip, taken, width, 2.8);
-  return place ? [label(place.x, place.y + 0.7, words)] : [];
+  // As low as there is room, clear of the dashed edge of the winding.
+  for (let up = 0.5; up < 25; up += 0.5) {
+    const strip = { ...surface(drawn, here), bottom: bottomMm + up, top: bottomMm + up + 2.85 };
+    const place = freePlace(strip, [...taken, ...drawn.lines], width, 2.8);
+    if (place) return [label(place.x, place.y + 0.7, words)];
+  }
+  return [];
 }
 
-/** The words on the tab, as much of them as a window shows whole. */
-function tabWords(drawn: Developed, window: Box, measure: Measure): Shape[] {
+/** The words on the tab, as much of them as a window shows whole: of a tube that is bought also where its own seam goes. */
+function tabWords(record: CoilRecord, drawn: Developed, window: Box, measure: Measure): Shape[] {
   const low = Math.max(drawn.bottomMm, window.bottom);
   const high = Math.min(drawn.topMm, window.top);
-  const long = Math.max(...WRAP.overlap.map((words) => measure.width(words, SMALL_MM)));
+  const lines = record.former.kind === 'tube' ? [...WRAP.overlap, WRAP.tubeSeam] : WRAP.overlap;
+  const step = 9.6 / (lines.length + 0.2);
+  const long = Math.max(...lines.map((words) => measure.width(words, SMALL_MM)));
   if (high - low < long + 2) return [];
-  const words = WRAP.overlap.map((text, i) =>
-    label(drawn.circumferenceMm + 3.8 + i * 3.8, (low + high) / 2, text, { align: 'centre', turnDeg: 90 }),
+  const words = lines.map((text, i) =>
+    label(drawn.circumferenceMm + step * (i + 0.9), (low + high) / 2, text, { align: 'centre', turnDeg: 90 }),
   );
   return clipped(words, window, measure);
 }
@@ -181,10 +211,14 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
   const { shapes: seams, taken: used } = joined(tiling, drawn);
   const all = [...drawn.shapes, ...seams];
   const square = squarePlace(format, drawn, used);
-  const pictures = checkSquare(WRAP.square, measure);
+  const pictures = checkSquare(WRAP.square(checkSize(record)), measure);
   const many = tiling.tiles.length + (square ? 0 : 1);
   const x0 = TEMPLATE_MARGIN_MM + RULER_BAND;
-  const y0 = TEMPLATE_MARGIN_MM + RULER_BAND;
+  const y0 = TEMPLATE_MARGIN_MM + format.footMm;
+  const metric = unitsOf(record) === 'metric';
+  const [inchX, inchY] = inchesBeside(format.roomWidthMm)
+    ? [x0 + INCHES_FROM, TEMPLATE_MARGIN_MM + RULER_BREADTH_MM]
+    : [x0, TEMPLATE_MARGIN_MM + 2 * RULER_BREADTH_MM];
   const inner = format.widthMm - 2 * TEMPLATE_MARGIN_MM;
 
   const page = (here: Tile, n: number, content: readonly Shape[]): Page => {
@@ -195,6 +229,7 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
       shapes: [
         ...movedAll(top, TEMPLATE_MARGIN_MM, format.heightMm - TEMPLATE_MARGIN_MM),
         ...movedAll(rulerAcross(WRAP.unit), x0, TEMPLATE_MARGIN_MM + RULER_BREADTH_MM),
+        ...(metric ? [] : movedAll(inchRuler(WRAP.inch), inchX, inchY)),
         ...movedAll(rulerUp(WRAP.unit), TEMPLATE_MARGIN_MM + RULER_BREADTH_MM, y0),
         ...content,
       ],
@@ -204,7 +239,7 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
   const pages = tiling.tiles.map((here, i) => {
     const toPage = (shape: Shape) => moved(shape, x0 - here.window.left, y0 - here.window.bottom);
     const taken = [...used];
-    const shapes = [...clipped(all, here.window, measure), ...tabWords(drawn, here.window, measure)];
+    const shapes = [...clipped(all, here.window, measure), ...tabWords(record, drawn, here.window, measure)];
     if (square?.tile === here) {
       shapes.push(...movedAll(pictures, square.x, square.y));
       taken.push({
@@ -222,7 +257,7 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
       shapes.push(...info(record).map((shape) => moved(shape, place.x + 2, place.y + 2)));
       taken.push({ left: place.x, right: place.x + INFO.width + 4, bottom: place.y, top: place.y + INFO.height + 4 });
     }
-    shapes.push(...datumWords(drawn, here, taken, measure));
+    shapes.push(...datumWords(record, drawn, here, taken, measure));
     return page(here, i + 1, shapes.map(toPage));
   });
   // A surface too full for the square: it gets a page.

@@ -5,7 +5,7 @@ export const PATTERN = {
   record: (hash: string) => `record ${hash}`,
   view: 'Surface of the former, developed flat, seen from outside: drill from outside. All lengths in mm.',
   across: (radius: string, round: string) =>
-    `Across: angle × outside radius ${radius} mm, no paper thickness added; ${round} mm once round.`,
+    `Across: angle × outside radius ${radius}, no paper thickness added; ${round} once round.`,
   left: (seam: string) =>
     `Left edge at ${seam}°; angles grow to the right. 0° is the start hole S. Heights count from the datum.`,
   unbored: 'X: place of a tap without a hole.',
