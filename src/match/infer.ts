@@ -58,8 +58,15 @@ function workAnew(problem: Problem, state: State): void {
     const key = index === old.taps.length - 1 ? 'whole' : `taps[${index + 1}]`;
     const turn = state.turns[t]!;
     const readings = [];
-    if (tap.inductance !== null) readings.push({ name: `${key}.inductance`, turn, kHz: tap.inductance.kHz });
-    if (tap.resonance !== null) readings.push({ name: `${key}.resonance`, turn, kHz: tap.resonance.kHz.value });
+    if (tap.inductance !== null)
+      readings.push({ name: `${key}.inductance`, turn, kHz: tap.inductance.kHz, pf: undefined });
+    if (tap.resonance !== null)
+      readings.push({
+        name: `${key}.resonance`,
+        turn,
+        kHz: tap.resonance.kHz.value,
+        pf: tap.resonance.capacitorPf.value,
+      });
     return readings;
   });
   if (electrical.length === 0) return;
@@ -68,7 +75,7 @@ function workAnew(problem: Problem, state: State): void {
     earthed: old.earthed,
     celsius: old.celsius,
   });
-  for (const { name, turn, kHz } of electrical) problem.atWork.set(name, atWork(working, turn, kHz));
+  for (const { name, turn, kHz, pf } of electrical) problem.atWork.set(name, atWork(working, turn, kHz, pf));
 }
 
 function solve(problem: Problem, rows: readonly Row[], from: State, free: readonly number[]): Solved {

@@ -15,10 +15,13 @@ const omegaOf = (kHz: number) => 2e3 * Math.PI * kHz;
 /** pF that tunes uH to kHz. */
 const tuningPf = (uh: number, kHz: number) => 1e18 / (omegaOf(kHz) ** 2 * uh);
 
-/** Crowding and the coil's own capacitance at a tap, for readings near this frequency. */
-export function atWork(working: WorkingCoil, turn: number, kHz: number): AtWork {
+/**
+ * Crowding and the coil's own capacitance at a tap, for readings near this frequency; `capacitorPf` for a resonance with it. Dead
+ * turns raise the capacitance the more, the nearer they are to a resonance of their own.
+ */
+export function atWork(working: WorkingCoil, turn: number, kHz: number, capacitorPf?: number): AtWork {
   const lowUh = working.inductanceUh(0, turn);
-  const pf = Math.min(MOST_PF, Math.max(20, tuningPf(lowUh, kHz)));
+  const pf = capacitorPf ?? Math.min(MOST_PF, Math.max(20, tuningPf(lowUh, kHz)));
   const resonant = working.tuned(turn, pf, 'open').kHz;
   const ownPf = tuningPf(lowUh, resonant) - pf;
   return { crowded: kHz < CROWDS_FROM_KHZ ? 1 : 1 / working.crowding(turn, kHz), ownPf };

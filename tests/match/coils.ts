@@ -103,7 +103,11 @@ export function randomCoil(seed: number): Made {
   const x = Float64Array.from([meanMm, bareMm, overallMm, tapGapMm, pitchMm, 0, 0, 0]);
   const state = new State(shape, [{ tap: count - 1 }], wire, x, turns);
   const working = new WorkingCoil(state.coilOf(turns[count - 1]!), turns, { leadPf: 0, earthed: 'start', celsius: 20 });
-  const [meter, self, length] = [normal() * 0.01, normal() * 0.15, normal() * 0.01].map((one) => one / 1.96) as [number, number, number];
+  const [meter, self, length] = [normal() * 0.01, normal() * 0.15, normal() * 0.01].map((one) => one / 1.96) as [
+    number,
+    number,
+    number,
+  ];
   const capacitorError = normal() / 1.96;
   const whole = turns[count - 1]!;
   const kHz = uniform() < 0.5 ? 10 : 100;
@@ -117,22 +121,32 @@ export function randomCoil(seed: number): Made {
     const at = atWork(working, turn, kHz);
     const shown = shownUh(lowUh, kHz, { ...at, ownPf: at.ownPf * (1 + self) }) * (1 + meter);
     const pf = 330;
-    const first = resonantKhz(lowUh, pf, { crowded: 1, ownPf: 5 });
-    const atFirst = atWork(working, turn, first);
-    const resonant = resonantKhz(lowUh, pf * (1 + 0.01 * capacitorError), { ...atFirst, ownPf: atFirst.ownPf * (1 + self) });
+    const first = working.tuned(turn, pf, 'open').kHz;
+    const atFirst = atWork(working, turn, first, pf);
+    const resonant = resonantKhz(lowUh, pf * (1 + 0.01 * capacitorError), {
+      ...atFirst,
+      ownPf: atFirst.ownPf * (1 + self),
+    });
     const told = positionMm !== null || counted !== null || last;
     return {
       turns: counted,
       positionMm,
       inductance: metered || !told ? { uh: noisy(shown, 0.005 * shown + 0.05), kHz } : null,
       resonance: resonated ? { kHz: noisy(resonant, 0.005 * resonant), capacitorPf: reading(pf, 0.01 * pf) } : null,
-      resistanceOhm: last && uniform() < 0.5 ? noisy(state.resistanceOhm(turn) * (1 + length), 0.01 * state.resistanceOhm(turn) + 0.02) : null,
+      resistanceOhm:
+        last && uniform() < 0.5
+          ? noisy(state.resistanceOhm(turn) * (1 + length), 0.01 * state.resistanceOhm(turn) + 0.02)
+          : null,
     };
   });
   const formers = uniform() < 0.3 ? 2 : 1;
   const old: OldCoil = {
     ...EMPTY,
-    diameters: Array.from({ length: formers }, () => ({ of: 'former' as const, how: 'caliper' as const, mm: noisy(meanMm - overallMm, 0.2) })),
+    diameters: Array.from({ length: formers }, () => ({
+      of: 'former' as const,
+      how: 'caliper' as const,
+      mm: noisy(meanMm - overallMm, 0.2),
+    })),
     wire: { ...EMPTY.wire, bareMm: noisy(bareMm, 0.01), overallMm: noisy(overallMm, 0.01) },
     pitchMm: uniform() < 0.4 ? noisy(pitchMm, 0.01 * pitchMm) : null,
     windingLengthMm: noisy(state.placeMm(whole) + overallMm, 0.3),
@@ -140,7 +154,9 @@ export function randomCoil(seed: number): Made {
     taps: named(taps),
   };
   // Something must tell the pitch.
-  const pitched = old.pitchMm !== null || old.taps.some((tap, i) => tap.turns !== null && (tap.positionMm !== null || i === count - 1));
+  const pitched =
+    old.pitchMm !== null ||
+    old.taps.some((tap, i) => tap.turns !== null && (tap.positionMm !== null || i === count - 1));
   return {
     truth: {
       meanMm,
