@@ -10,7 +10,7 @@ import type { PartEntry } from '../record/schema.ts';
 import { type Block, LEADING, paragraph, stack } from './block.ts';
 import { type Card, GAP_MM, lowest, over, plain, rowHeight, rowsOf, set, shifted, twoColumns } from './cards.ts';
 import { figures, fixed, sentence, wrap } from './text.ts';
-import { type LengthStyle, lengthCell, lengthsText, lengthUnit, type Units } from './units.ts';
+import { type LengthStyle, lengthCell, lengthsText, lengthWord, type Units } from './units.ts';
 
 /** A shaded picture of a part. */
 export interface Picture {
@@ -97,7 +97,7 @@ export const PART_STYLE: LengthStyle = { digits: 2, trim: true };
 
 /** Name and scale in a grey strip, then what there is to know. */
 function head({ entry, beds, units }: PartShown, scale: number, widthMm: number, measure: Measure): Block {
-  const right = CARD.scale(scaleText(scale), lengthUnit(units));
+  const right = CARD.scale(scaleText(scale), lengthWord(units));
   const nameWidth = widthMm - measure.width(right, SMALL_MM) - 9;
   const name = wrap(titleOf(entry.name), nameWidth, BODY_MM, true, measure);
   const strip = STRIP_MM + (name.length - 1) * BODY_MM * LEADING;

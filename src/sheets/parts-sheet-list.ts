@@ -14,7 +14,7 @@ import {
   lengthHeads,
   lengthsText,
   lengthText,
-  lengthUnit,
+  lengthWord,
   type Units,
   unitsOf,
 } from './units.ts';
@@ -70,7 +70,7 @@ export function partList(
     [LIST.pieces, 12, { align: 'right' }],
     [LIST.material, 16],
     [LIST.mass, 14, { align: 'right' }],
-    [LIST.size(lengthUnit(units)), 33, { align: 'right' }],
+    [LIST.size(lengthWord(units)), 33, { align: 'right' }],
     [LIST.file, 45],
     [LIST.bed, 9, { align: 'centre' }],
     [LIST.sheet, 11, { align: 'right' }],

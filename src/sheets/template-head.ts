@@ -9,7 +9,7 @@ import { type Block, paragraph, stack } from './block.ts';
 import { short } from './text.ts';
 import type { Tile, Tiling } from './tiles.ts';
 import { titleBlock } from './title-block.ts';
-import { lengthText, lengthUnit, unitsOf } from './units.ts';
+import { lengthText, lengthWord, unitsOf } from './units.ts';
 
 /** Side of the check square: always also in millimetres, which stand beside it. */
 export const checkSize = (record: CoilRecord): string =>
@@ -37,7 +37,7 @@ function instructions(record: CoilRecord, drawn: Developed, tiled: boolean, widt
       named(PAPER_THICKNESS_MM / 2, 3),
       named(PAPER_THICKNESS_MM, 1),
       lengthText(drawn.circumferenceMm, units),
-      lengthUnit(units),
+      lengthWord(units),
     ),
     ...(drawn.unlabelled.length > 0 ? [WRAP.unlabelled(drawn.unlabelled.join(', '))] : []),
     ...(tiled ? [WRAP.tiles] : []),

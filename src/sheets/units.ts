@@ -69,6 +69,14 @@ export const lengthUnit = (units: Units): string =>
     () => 'in',
   );
 
+/** The same as a word in a sentence, where `in` would be read as one: `mm`, `inches`, `mm (inches)`. */
+export const lengthWord = (units: Units): string =>
+  told(
+    units,
+    () => 'mm',
+    () => 'inches',
+  );
+
 /** One cell a column, for tables that give each unit its own: with the heads of `lengthHeads`. */
 export function lengthCells(mm: number, units: Units, style: LengthStyle = {}): string[] {
   if (units === 'both') return [mmNumber(mm, style), inchNumber(mm, style)];

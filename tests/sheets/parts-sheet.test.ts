@@ -11,6 +11,7 @@ import type { CoilRecord, PartEntry } from '../../src/record/schema.ts';
 import { type Page, Paper } from '../../src/sheets/page.ts';
 import { layOutPartsSheet, type Picture, partsFrame, partsSheet } from '../../src/sheets/parts-sheet.ts';
 import { anyView, plateViews, tubeViews } from '../drawing/sample-views.ts';
+import { splitRecord } from '../helpers/joints.ts';
 import { layoutBoxes, layoutFaults } from '../helpers/layout.ts';
 import { readPdf } from '../helpers/pdf.ts';
 import { sampleRecord } from '../helpers/sample.ts';
@@ -229,6 +230,52 @@ describe('parts sheet, read back', () => {
       expect(widthPx / (widthMm / 25.4)).toBeGreaterThan(249.99);
       expect(widthMm / heightMm).toBeCloseTo(widthPx / heightPx, 9);
     }
+  });
+});
+
+describe('parts sheet in other units', () => {
+  const jigs = { ...sampleRecord(), wanted: PARTS.filter((part) => part !== 'saddle') };
+
+  test.each(['inch', 'both'] as const)('%s: every size of every part, and nothing overlaps', (units) => {
+    const record = { ...withParts(jigs, []), units };
+    const pages = layOutPartsSheet(record, PICTURES, measure);
+    expect(pageFaults(pages)).toEqual([]);
+    const texts = layoutBoxes(pages, measure).map((each) => each.text);
+    const inch = (mm: number) => `${Number((mm / 25.4).toFixed(4))}`;
+    const said = (mm: number) => (units === 'both' ? `${Number(mm.toFixed(2))} (${inch(mm)})` : inch(mm));
+    let checked = 0;
+    for (const views of viewsOf(record).values())
+      for (const view of views)
+        for (const each of view.dimensions) {
+          if (each.kind !== 'span' || each.pieces?.length !== 1) continue;
+          const axis = each.along === 'x' ? 0 : 1;
+          const mm = Math.abs(each.to[axis] - each.from[axis]);
+          // A length that is nothing but a number, written from the length itself and not from the millimetres.
+          expect(texts, `${view.title} ${each.text}`).toContain(said(mm));
+          checked++;
+        }
+    // No word of a view kept its millimetres: those with lengths in them are all written anew.
+    const plain = new Set(
+      [...viewsOf(record).values()].flat().flatMap((view) => view.dimensions.map(({ text }) => text)),
+    );
+    const kept = texts.filter((text) => plain.has(text) && /\d\.\d/.test(text) && !/°|loop/.test(text));
+    expect(kept).toEqual([]);
+    const words = texts.join(' ');
+    expect(words).toContain(units === 'both' ? 'sizes in mm (inches)' : 'sizes in inches');
+    expect(texts).toContain((record.former.outsideDiameterMm / 25.4).toFixed(4));
+    expect(texts.includes(record.former.outsideDiameterMm.toFixed(2))).toBe(units === 'both');
+    console.log(`parts sheet, ${units}: ${checked} lengths on ${pages.length} pages`);
+    expect(checked).toBeGreaterThan(30);
+  });
+
+  test('a former in sections is drawn section by section', () => {
+    const whole = sampleRecord();
+    const record = { ...withParts(splitRecord(whole, 0.6 * whole.former.lengthMm), []) };
+    expect(record.parts.filter(({ kind }) => kind === 'former').length).toBe(2);
+    const pages = layOutPartsSheet(record, new Map(), measure);
+    expect(pageFaults(pages)).toEqual([]);
+    const titles = layoutBoxes(pages, measure).filter(({ text }) => text === 'developed surface');
+    expect(titles.length).toBe(2);
   });
 });
 

@@ -9,6 +9,7 @@ import {
   lengthsText,
   lengthText,
   lengthUnit,
+  lengthWord,
   unitsOf,
   wireCell,
   wireText,
@@ -27,6 +28,7 @@ describe('lengths on paper', () => {
 
   it('fills columns: one with brackets, or one a unit', () => {
     expect(lengthUnit('both')).toBe('mm (in)');
+    expect(lengthWord('inch')).toBe('inches');
     expect(lengthCell(25.4, 'both')).toBe('25.40 (1.0000)');
     expect(lengthHeads('both')).toEqual(['mm', 'in']);
     expect(lengthCells(25.4, 'both', { digits: 1 })).toEqual(['25.4', '1.000']);
