@@ -6,6 +6,7 @@ import { tmpdir } from 'node:os';
 import { basename, dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { checkNetlist } from './ngspice.mjs';
+import { measureRulers } from './rulers.mjs';
 
 const root = join(dirname(fileURLToPath(import.meta.url)), '..', '..');
 const program = join(root, 'dist', 'coilwright.js');
@@ -52,6 +53,19 @@ function pdf(path, record) {
       rows.length > 0 && rows.every((row) => / yes +yes /.test(row)),
       stdout,
     );
+  }
+}
+
+let rulers = 0;
+let worstRuler = 0;
+/** A page at true scale, measured as it is rendered. */
+function trueScale(path, { paper }) {
+  if (!has('pdftoppm')) return;
+  for (const [axis, mm] of Object.entries(measureRulers(path))) {
+    // What a print may be off; a dot is 0.042 mm.
+    check(`${path}: the ruler ${axis} on ${paper} is 100 mm`, mm !== null && Math.abs(mm - 100) < 0.1, `${mm} mm`);
+    rulers++;
+    worstRuler = Math.max(worstRuler, Math.abs((mm ?? 0) - 100));
   }
 }
 
@@ -188,6 +202,7 @@ try {
     check(`plan ${name}: a netlist`, record.files.filter(({ kind }) => kind === 'netlist').length === 1, out);
     for (const file of record.files) {
       if (file.kind === 'pdf') pdf(join(out, file.path), record);
+      if (file.path === 'wrap-template.pdf') trueScale(join(out, file.path), record);
       if (file.kind === 'stl') stl(join(out, file.path), record, !quick || name === starters[0]);
       if (file.kind === '3mf') threemf(join(out, file.path), record);
       if (file.kind === 'svg') svg(join(out, file.path));
@@ -200,6 +215,7 @@ try {
 }
 if (skipped.size > 0) console.log(`skipped, not installed: ${[...skipped].join(', ')}`);
 if (resonances > 0) console.log(`ngspice: ${resonances} runs, worst ${(worstResonance * 100).toFixed(4)} % off`);
+if (rulers > 0) console.log(`rulers of 100 mm, rendered: ${rulers}, worst ${worstRuler.toFixed(3)} mm off`);
 if (slices > 0) console.log(`sliced without support or repair: ${slices} parts`);
 console.log(`outside checks: ${passed} good, ${failed} bad`);
 if (failed > 0 || passed === 0) process.exit(1);
