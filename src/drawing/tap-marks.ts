@@ -4,7 +4,7 @@
  */
 import type { CoilRecord } from '../record/schema.ts';
 import { type Box, inside, overlap } from './boxes.ts';
-import type { Dash, Shape } from './drawing.ts';
+import type { Shape } from './drawing.ts';
 import { polygon, polyline, rectangle } from './shapes.ts';
 
 export type TapMethod = CoilRecord['tapMethod']['name'];
@@ -14,6 +14,7 @@ const STRIP_MM = 5;
 const LUG_MM = { wide: 4, thick: 0.5, foot: 2.4 } as const;
 /** A loop: its twist begins and ends so far from the place, then comes the eye; half its breadth. */
 const LOOP_MM = { from: 1.6, twist: 3.8, end: 6.2, half: 1 } as const;
+const EYE_CORNERS = 16;
 /** Directions of a loop, the handiest first: it stands outwards, so that any of them is true. */
 const TURNS = [90, 60, 120, 30, 150, 0, 180, -30, -150, -60, -120, -90];
 
@@ -38,22 +39,33 @@ export function markAtTap(method: TapMethod, x: number, y: number, overallMm: nu
   return { shapes: [], reachMm: 1.5 };
 }
 
-/** Two strands twisted about one another, and the eye at their end, along a direction. */
-function loopAt(x: number, y: number, turnDeg: number, dash: Dash): Shape[] {
+/**
+ * Two strands twisted about one another, and the eye at their end, along a direction. Behind the paper both are in dashes of
+ * their own: those of a dashed line are longer than the eye is round.
+ */
+function loopAt(x: number, y: number, turnDeg: number, behind: boolean): Shape[] {
   const [c, s] = [Math.cos((turnDeg * Math.PI) / 180), Math.sin((turnDeg * Math.PI) / 180)];
   const at = (along: number, aside: number): Place => [x + along * c - aside * s, y + along * s + aside * c];
   const { from, twist, end, half } = LOOP_MM;
+  const middle = (twist + end) / 2;
+  const eye = Array.from({ length: EYE_CORNERS }, (_, i) => {
+    const a = (i * 2 * Math.PI) / EYE_CORNERS;
+    return at(middle + ((end - twist) / 2) * Math.cos(a), half * Math.sin(a));
+  });
+  if (behind) {
+    const third = (twist - from) / 3;
+    const dashes = [
+      [at(from, 0), at(from + third, 0)],
+      [at(twist - third, 0), at(twist, 0)],
+      ...eye.flatMap((corner, i) => (i % 2 === 0 ? [[corner, eye[i + 1]!]] : [])),
+    ];
+    return dashes.map((points) => polyline(points, 'thin'));
+  }
   const strand = (side: number) =>
     Array.from({ length: 13 }, (_, i) =>
       at(from + ((twist - from) * i) / 12, side * 0.4 * Math.sin((i * Math.PI) / 4)),
     );
-  const middle = (twist + end) / 2;
-  const eye = Array.from({ length: 16 }, (_, i) => {
-    const a = (i * Math.PI) / 8;
-    return at(middle + ((end - twist) / 2) * Math.cos(a), half * Math.sin(a));
-  });
-  const strands = dash === 'dashed' ? [[at(from, 0), at(twist, 0)]] : [strand(1), strand(-1)];
-  return [...strands.map((points) => ({ ...polyline(points, 'thin'), dash })), polygon(eye, 'thin', undefined, dash)];
+  return [polyline(strand(1), 'thin'), polyline(strand(-1), 'thin'), polygon(eye, 'thin')];
 }
 
 function loopBox(x: number, y: number, turnDeg: number): Box {
@@ -84,7 +96,7 @@ export function loopMarks(
       return inside(box, region) && !others.some((other) => overlap(other, box));
     });
     if (turn === undefined) continue;
-    shapes.push(...loopAt(x, y, turn, method === 'drawn in' ? 'dashed' : 'solid'));
+    shapes.push(...loopAt(x, y, turn, method === 'drawn in'));
     used.push(loopBox(x, y, turn));
   }
   return { shapes, taken: used };
