@@ -33,6 +33,29 @@ await build({
   define: { 'process.env.COILWRIGHT_VERSION': JSON.stringify(require('./package.json').version) },
 });
 
+// The bench page's side of the program: one script for browsers since 2020, put into each page with its style.
+await build({
+  absWorkingDir: root,
+  entryPoints: { 'bench-page': 'src/bench/page-main.ts' },
+  outdir: dist,
+  bundle: true,
+  minify: true,
+  format: 'iife',
+  platform: 'browser',
+  target: 'es2020',
+  charset: 'utf8',
+  legalComments: 'none',
+});
+await build({
+  absWorkingDir: root,
+  entryPoints: { 'bench-page': 'templates/bench/page.css' },
+  outdir: dist,
+  bundle: true,
+  minify: true,
+  target: 'es2020',
+});
+await copyFile(join(root, 'templates/bench/page.html'), join(dist, 'bench-page.html'));
+
 const fonts = dirname(require.resolve('dejavu-fonts-ttf/package.json'));
 for (const font of ['DejaVuSans', 'DejaVuSans-Bold', 'DejaVuSansMono']) {
   await copyFile(join(fonts, 'ttf', `${font}.ttf`), join(dist, `${font}.ttf`));
