@@ -14,7 +14,7 @@ import { type PicturedPart, startKernel } from './kernel/client.ts';
 import { bedFiles, partFiles } from './kernel/files.ts';
 import { netlistFile } from './netlist/file.ts';
 import { listed, type Output, type OutputFile } from './record/listing.ts';
-import { makeRecord, printedOf } from './record/make.ts';
+import { makeRecord, printedOf, type RecordExtra } from './record/make.ts';
 import type { CoilRecord } from './record/schema.ts';
 import { refusal } from './solve/refusal.ts';
 import { type Found, search } from './solve/search.ts';
@@ -61,18 +61,34 @@ async function rangePlateFile(record: CoilRecord): Promise<OutputFile[]> {
     : [{ path: 'range-plate.pdf', kind: 'pdf', bytes, note: 'for the switch, true scale, print at 100 %' }];
 }
 
+/** What is made into a folder: a job, the coil found for it, and what the record of another verb holds besides. */
+export interface Produced {
+  readonly job: Job;
+  readonly found: Found;
+  readonly extra?: RecordExtra;
+}
+
 /** The record and every file of the output folder. */
 export async function planJob(job: Job, options: { version: string }): Promise<Output<CoilRecord>> {
+  return produce(() => ({ job, found: foundFor(job) }), options);
+}
+
+/** Finds, and makes every file; `more` are files that only another verb has. */
+export async function produce(
+  find: () => Produced,
+  options: { version: string },
+  more: (record: CoilRecord) => Promise<readonly OutputFile[]> = async () => [],
+): Promise<Output<CoilRecord>> {
   const kernel = startKernel();
   try {
-    const found = foundFor(job);
+    const { job, found, extra } = find();
     // The parts need no figures at work: they are made while those are worked out.
     const parts = printedOf(job, found);
     const { scale } = parts.record.printer;
     const making = Promise.all(parts.solids.map((solid) => kernel.part(solid, scale)));
     // A failure of a thread is reported when it is awaited below, not as an unhandled rejection meanwhile.
     making.catch(() => undefined);
-    const record = makeRecord(job, found, options.version, parts);
+    const record = makeRecord(job, found, options.version, parts, extra);
     const beds = making.then((parts) => bedFiles(kernel, record, parts));
     beds.catch(() => undefined);
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
@@ -83,6 +99,7 @@ export async function planJob(job: Job, options: { version: string }): Promise<O
     const partsSheet = await partsSheetFile(record, made);
     const files: OutputFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
+      ...(await more(record)),
       ...(await surfaceFiles(record)),
       {
         path: 'reference-sheet.pdf',

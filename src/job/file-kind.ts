@@ -24,3 +24,9 @@ export const COIL_FILE: FileKind = {
   least: 'at least the key coil',
   begin: 'coilwright start found-coil',
 };
+export const OLD_COIL_FILE: FileKind = {
+  noun: 'an old coil',
+  file: 'a file of an old coil',
+  least: 'at least the key old',
+  begin: 'coilwright start broken-form',
+};

@@ -51,7 +51,8 @@ function readable(data: unknown): Readable {
   return found as Readable;
 }
 
-function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
+/** A job of what was read; for files that hold one among other things. */
+export function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string): Job {
   const { former, winding, printer, shop } = read;
   const written = given(tree.data);
   const lines = Object.keys(written).map((key) => [key, tree.lineOf(key.split('.'))]);

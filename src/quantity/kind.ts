@@ -9,7 +9,8 @@ export type KindName =
   | 'scale'
   | 'resistance'
   | 'angle'
-  | 'temperature';
+  | 'temperature'
+  | 'mass';
 
 export interface Kind {
   /** With its article, for messages: `a length`. */
@@ -35,4 +36,5 @@ export const KINDS: Readonly<Record<KindName, Kind>> = {
   resistance: { noun: 'a resistance', unit: 'ohm', low: 1e-6, high: 1e9, offered: ['ohm', 'kohm'], example: '2.5 ohm' },
   angle: { noun: 'an angle', unit: 'deg', low: 1e-3, high: 3.6e5, offered: ['deg'], example: '30 deg' },
   temperature: { noun: 'a temperature', unit: 'degC', low: -80, high: 300, offered: ['degC'], example: '20 degC' },
+  mass: { noun: 'a weight', unit: 'g', low: 1e-3, high: 1e5, offered: ['g', 'oz'], example: '35 g' },
 };

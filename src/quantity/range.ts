@@ -88,6 +88,7 @@ function sample(kind: KindName): string {
     resistance: '1 ohm to 5 ohm',
     angle: '0 deg to 90 deg',
     temperature: '0 degC to 40 degC',
+    mass: '20 g to 40 g',
   };
   return samples[kind];
 }

@@ -196,8 +196,17 @@ function tapMethodOf({ method, unitTaps, layout }: Design): CoilRecord['tapMetho
   };
 }
 
+/** What the record of another verb holds besides. */
+export type RecordExtra = Pick<CoilRecord, 'verb' | 'matched'> & { readonly warnings?: CoilRecord['warnings'] };
+
 /** The record of a found design, files still to come; `parts` are its parts where they are already described. The schema is checked, so that nothing leaves in another shape. */
-export function makeRecord(job: Job, found: Found, version: string, parts = printedOf(job, found)): CoilRecord {
+export function makeRecord(
+  job: Job,
+  found: Found,
+  version: string,
+  parts = printedOf(job, found),
+  { warnings = [], ...extra }: RecordExtra = { verb: 'plan' },
+): CoilRecord {
   const { chosen } = found;
   const conditions = {
     tuning: job.set === null ? null : setCapacitance(job.set),
@@ -215,7 +224,7 @@ export function makeRecord(job: Job, found: Found, version: string, parts = prin
   const alternatives = shownOf(job, found, lossFactor);
   const body: Omit<CoilRecord, 'hash' | 'files' | 'program'> = {
     record: 1,
-    verb: 'plan',
+    ...extra,
     ...printed,
     date: job.date,
     paper: job.paper,
@@ -247,7 +256,11 @@ export function makeRecord(job: Job, found: Found, version: string, parts = prin
       tried: found.tried,
       feasible: found.feasible,
     },
-    warnings: [...warningsOf(job, found, alternatives.length, figures.coverage), ...leftOutWarnings(leftOut)],
+    warnings: [
+      ...warnings,
+      ...warningsOf(job, found, alternatives.length, figures.coverage),
+      ...leftOutWarnings(leftOut),
+    ],
     given: { ...job.given },
     assumed: { ...job.assumed, ...derivedOf(job, chosen), ...spreadInWords(spread) },
     alternatives,
