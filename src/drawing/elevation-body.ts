@@ -1,6 +1,7 @@
 /** The former and the turns on it as the elevation shows them. Millimetres on paper at a scale `s`. */
 import { axialAt } from '../coil/layout.ts';
 import type { CoilRecord } from '../record/schema.ts';
+import type { Winding } from '../record/winding-schema.ts';
 import type { Shape } from './drawing.ts';
 import { polyline, rectangle } from './shapes.ts';
 
@@ -45,15 +46,18 @@ function ribs({ former }: CoilRecord, low: number, high: number, s: number): Sha
   });
 }
 
+/** What is known of turns that are drawn: of a record, or of a coil of which there is no more. */
+export interface Wound {
+  readonly windings: readonly Pick<Winding, 'turns' | 'pitchMm' | 'meanDiameterMm' | 'turnPositionsMm'>[];
+  readonly frame: Pick<CoilRecord['frame'], 'hand'>;
+  readonly former: Pick<CoilRecord['former'], 'ribs'>;
+}
+
 /**
  * The front half of the turn that comes round to the start hole's side at `k` turns, as points of the picture at a scale.
  * Over ribs the wire runs straight from one to the next.
  */
-export function frontOfTurn(
-  record: Pick<CoilRecord, 'windings' | 'frame' | 'former'>,
-  k: number,
-  s: number,
-): [number, number][] {
+export function frontOfTurn(record: Wound, k: number, s: number): [number, number][] {
   const winding = record.windings[0]!;
   const sense = record.frame.hand === 'right' ? 1 : -1;
   const r = (winding.meanDiameterMm / 2) * s;

@@ -38,7 +38,26 @@ export interface Elevation extends Drawing {
   readonly downMm: number;
 }
 
-const SCALES = [5, 4, 3, 2.5, 2, 1.5, 1, 1 / 1.5, 1 / 2, 1 / 2.5, 1 / 3, 1 / 4, 1 / 5, 1 / 7.5, 1 / 10, 1 / 15, 1 / 20];
+/** Usual scales, the largest first. */
+export const SCALES = [
+  5,
+  4,
+  3,
+  2.5,
+  2,
+  1.5,
+  1,
+  1 / 1.5,
+  1 / 2,
+  1 / 2.5,
+  1 / 3,
+  1 / 4,
+  1 / 5,
+  1 / 7.5,
+  1 / 10,
+  1 / 15,
+  1 / 20,
+];
 /** Room for the leads left of the coil, and from its right edge to the column of text. */
 const LEADS_MM = 9;
 const TEXT_MM = 7;

@@ -1,0 +1,89 @@
+/**
+ * The comparison sheet of a replacement: page 1 the old coil against the new, drawn and tap by tap; then what is known of the
+ * old one and how surely. It reads the record and nothing else: same record, same bytes. Throws an Error for a record that
+ * replaces nothing.
+ */
+import { COMPARISON } from '../../templates/wording/comparison-sheet.ts';
+import type { Box, Measure } from '../drawing/boxes.ts';
+import type { MatchRecord } from '../drawing/comparison.ts';
+import { moved } from '../drawing/shapes.ts';
+import type { CoilRecord } from '../record/schema.ts';
+import { stack } from './block.ts';
+import * as known from './comparison-sheet-known.ts';
+import * as taps from './comparison-sheet-taps.ts';
+import { PAPER_MM, type Page, Paper } from './page.ts';
+import { type Body, Filling, GAP_MM } from './parted.ts';
+import { titleBlock } from './title-block.ts';
+
+/** Left free round every sheet: across, and along. */
+const MARGIN_MM = { across: 12, along: 11 } as const;
+/** The drawing takes what the table of taps leaves of its page, within these. */
+const PAIR_MM = { least: 95, most: 165 } as const;
+
+function fill(record: MatchRecord, widthMm: number, heightMm: number, measure: Measure): Body[] {
+  const pages = new Filling(heightMm);
+  const { against: first, known: second } = COMPARISON;
+  pages.page(first);
+  const table = taps.against(record, widthMm, measure);
+  const how = taps.againstHow(record, widthMm, measure);
+  const rest = table.block(table.groups, false).heightMm + how.heightMm + 2 * GAP_MM;
+  const room = Math.min(PAIR_MM.most, Math.max(PAIR_MM.least, heightMm - rest));
+  pages.put(taps.pair(record, widthMm, room, measure), first);
+  pages.putParted(table, first);
+  pages.put(how, first);
+  pages.putList(taps.ways(record, widthMm, measure), first);
+  const both = taps.waysTaps(record, widthMm, measure);
+  if (both !== null) pages.putParted(both, first);
+  pages.putParted(known.coils(record, widthMm, measure), second);
+  for (const group of [known.doubts, known.proposals, known.contradictions, known.nextOnes])
+    pages.putList(group(record, widthMm, measure), second);
+  if (record.matched.residuals.length > 0) pages.putParted(known.measured(record, widthMm, measure), second);
+  pages.put(known.fitText(record, widthMm, measure), second);
+  pages.putList(known.assumed(record, widthMm, measure), second);
+  return pages.bodies;
+}
+
+function matchedOf(record: CoilRecord): MatchRecord {
+  const { matched } = record;
+  if (matched === undefined) throw new Error('a comparison sheet of a record that replaces nothing');
+  return { ...record, matched };
+}
+
+/** The pages as drawings. */
+export function layOutComparisonSheet(record: CoilRecord, measure: Measure): Page[] {
+  const [paperWidth, paperHeight] = PAPER_MM[record.paper];
+  const widthMm = paperWidth - 2 * MARGIN_MM.across;
+  const headOf = (part: string, sheet: string) =>
+    titleBlock(record, { document: COMPARISON.document, part, sheet }, widthMm, measure);
+  const head = headOf(COMPARISON.known, COMPARISON.sheet(10, 10));
+  const room = paperHeight - 2 * MARGIN_MM.along - head.heightMm - GAP_MM;
+  const bodies = fill(matchedOf(record), widthMm, room, measure);
+  return bodies.map((body, i) => {
+    const top = { ...headOf(body.part, COMPARISON.sheet(i + 1, bodies.length)), heightMm: head.heightMm };
+    const { shapes } = stack([top, ...body.blocks], GAP_MM);
+    return {
+      widthMm: paperWidth,
+      heightMm: paperHeight,
+      shapes: shapes.map((shape) => moved(shape, MARGIN_MM.across, paperHeight - MARGIN_MM.along)),
+    };
+  });
+}
+
+/** What a page keeps free of ink. */
+export function comparisonFrame(page: Page): Box {
+  return {
+    left: MARGIN_MM.across,
+    right: page.widthMm - MARGIN_MM.across,
+    bottom: MARGIN_MM.along,
+    top: page.heightMm - MARGIN_MM.along,
+  };
+}
+
+/** The comparison sheet of a record as the bytes of a PDF. */
+export async function comparisonSheet(record: CoilRecord): Promise<Uint8Array> {
+  const paper = new Paper({
+    title: `${COMPARISON.document}: ${record.job}`,
+    subject: COMPARISON.record(record.hash.slice(0, 12)),
+  });
+  return paper.write(layOutComparisonSheet(record, paper));
+}
