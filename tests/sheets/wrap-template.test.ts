@@ -363,11 +363,15 @@ describe('wrap template, laid out', () => {
       diameterMm: fc.double({ min: 12, max: 160, noNaN: true }),
       pitchMm: fc.double({ min: 0.6, max: 3, noNaN: true }),
       job: fc.string({ minLength: 1, maxLength: 160 }),
+      lowMm: fc.integer({ min: 0, max: 60 }).map((tenths) => tenths / 10),
     });
     fc.assert(
-      fc.property(options, ({ taps, whole, staggered, method, units, ...rest }) => {
+      fc.property(options, ({ taps, whole, staggered, method, units, lowMm, ...rest }) => {
         const turns = evenTurns(taps, whole, staggered);
-        const record = { ...fullRecord({ ...rest, method: method as 'lug', turns }), units };
+        const full = fullRecord({ ...rest, method: method as 'lug', turns });
+        // A start so low that the edge of the winding runs where the lower edge is named, or a little higher.
+        const startMm = (full.former.flange?.lowerMm ?? 0) + full.windings[0]!.wire.overallMm / 2 + lowMm;
+        const record = { ...full, units, windings: [{ ...full.windings[0]!, startMm }] };
         const pages = layOutWrapTemplate(record, measure);
         expect(layoutFaults(pages, templateFrame, measure)).toEqual([]);
         expect(edgesThroughWords(pages)).toEqual([]);
