@@ -38,18 +38,22 @@ export interface Count {
   readonly log: string;
 }
 
+export interface Place {
+  readonly turn: number;
+  readonly positionMm: number;
+}
+export type Places = Readonly<Record<string, Place>>;
+
 export interface Progress {
   readonly count: Count;
-  /** Turns of the stops that a correction placed anew, by their key; empty: as planned. */
-  readonly places: Readonly<Record<string, number>>;
+  /** Stops that a correction placed anew, by their key; empty: as planned. */
+  readonly places: Places;
   readonly measures: readonly LengthMeasure[];
 }
 
 /** Why kept progress is not taken up. */
 export type Refusal = 'damaged' | 'version' | 'another record';
-export type Parsed =
-  | { readonly ok: true; readonly progress: Progress }
-  | { readonly ok: false; readonly why: Refusal };
+export type Parsed = { readonly ok: true; readonly progress: Progress } | { readonly ok: false; readonly why: Refusal };
 
 /** Wire, m. */
 export interface SpoolState {
@@ -88,11 +92,11 @@ export interface PitchPiece {
 }
 
 /**
- * `made`: done already; nothing moves it. `free`: moves along the wire as far as it likes. `steps`: whole turns only (taps in
- * line, posts), or from rib to rib. `hole`: the former is drilled, the wire nearest to the hole is taken. `kept`: placed by the
+ * `made`: done already; nothing moves it. `steps`: whole turns only (taps in
+ * line, posts), from rib to rib, or by 5 degrees, which a protractor can set out. `hole`: the former is drilled, the wire nearest to the hole is taken. `kept`: placed by the
  * groove, or of a units switch.
  */
-export type Placing = 'made' | 'free' | 'steps' | 'hole' | 'kept';
+export type Placing = 'made' | 'steps' | 'hole' | 'kept';
 
 export interface CorrectedStop {
   readonly key: string;
@@ -101,7 +105,7 @@ export interface CorrectedStop {
   readonly placing: Placing;
   readonly plannedTurn: number;
   readonly turn: number;
-  /** Turns from one possible place to the next; null with `made`, `kept` and `hole`, 0 with `free`. */
+  /** Turns from one possible place to the next; null with `made`, `kept` and `hole`. */
   readonly stepTurns: number | null;
   readonly angleDeg: number;
   readonly positionMm: number;
@@ -216,18 +220,3 @@ export interface ReadingRow {
   readonly verdict: string;
   readonly remark: string;
 }
-
-/*
- * Functions:
- *
- * counter.ts     NOTHING: Count; NEW: Progress
- *                stopsOf(record, places?: Progress['places'], measures?: Progress['measures']): Stop[]
- *                nextStop / heldBy(stops, count): Stop | null; turnOf(stops, count): number; turnsToGo(stops, count): number
- *                countTurn / confirmStop(stops, count): Count; takeBack(count): Count; replay(stops, log): Count | null
- *                serialise(record, progress): string; parse(record, text): Parsed
- * spool.ts       spoolAt(record, stops, count, spoolM: number | null): SpoolState
- * correction.ts  plannedLengthMm(record, turn, over): number
- *                correct(record, { measures, count, stops }): Correction; placesOf(correction): Progress['places']
- * judge.ts       questionsOf(record): Question[]; judge(record, question, value, { celsius? }): Judgement
- * readings-csv.ts  toCsv(rows): string; fromCsv(text): ReadingRow[] (throws Fault); rowOf(record, question, value, judgement, { serial, celsius?, remark? }): ReadingRow
- */
