@@ -59,6 +59,12 @@ function parser(terminal: Terminal, version: string): Argv {
       async (found) => (await import('./survey.ts')).survey(found, terminal, version),
     )
     .command(
+      VERBS.match.written,
+      VERBS.match.does,
+      async (one) => (await import('./match.ts')).describeMatch(one),
+      async (found) => (await import('./match.ts')).match(found, terminal, version),
+    )
+    .command(
       VERBS.stock.written,
       VERBS.stock.does,
       async (one) => (await import('./stock.ts')).describeStock(one),

@@ -7,10 +7,14 @@ import { nearest } from '../src/job/nearest.ts';
 import { outputFault } from '../src/output/faults.ts';
 import { COILS } from '../templates/coils/coils.ts';
 import { STARTERS, type Starter } from '../templates/jobs/starters.ts';
+import { MATCHES } from '../templates/matches/matches.ts';
 import type { Terminal } from './terminal.ts';
 
-const ALL: readonly Starter[] = [...STARTERS, ...COILS];
+const ALL: readonly Starter[] = [...STARTERS, ...COILS, ...MATCHES];
 const isCoil = (starter: Starter): boolean => COILS.includes(starter);
+const isOld = (starter: Starter): boolean => MATCHES.includes(starter);
+/** The verb that a starter is for. */
+const verbOf = (starter: Starter): string => (isOld(starter) ? 'match' : isCoil(starter) ? 'survey' : 'plan');
 
 export function describeStart(yargs: Argv) {
   return yargs
@@ -24,7 +28,8 @@ export function describeStart(yargs: Argv) {
     .option('schema', {
       type: 'boolean',
       default: false,
-      describe: 'write the schema of the file instead, for editors: job.schema.json, or coil.schema.json',
+      describe:
+        'write the schema of the file instead, for editors: job.schema.json, coil.schema.json or match.schema.json',
     })
     .example('$0 start', `writes ${STARTERS[0].name}.yaml`)
     .example('$0 start forty-coil-lot --out lot.yaml', 'writes that starter as lot.yaml');
@@ -78,11 +83,19 @@ function jobFile({ name }: StartOptions): NewFile {
   return {
     name: `${starter.name}.yaml`,
     text: starter.text,
-    next: (shown) => `edit it, then: coilwright ${isCoil(starter) ? 'survey' : 'plan'} ${shown}`,
+    next: (shown) => `edit it, then: coilwright ${verbOf(starter)} ${shown}`,
   };
 }
 
 async function schemaFile(starter: string | undefined): Promise<NewFile> {
+  if (starter !== undefined && isOld(find(starter))) {
+    const { oldCoilJsonSchema } = await import('../src/job/old-coil/json-schema.ts');
+    return {
+      name: 'match.schema.json',
+      text: `${JSON.stringify(oldCoilJsonSchema(), null, 2)}\n`,
+      next: (shown) => `name it in the file of an old coil: $schema: ./${shown}`,
+    };
+  }
   if (starter !== undefined && isCoil(find(starter))) {
     const { coilJsonSchema } = await import('../src/job/coil/json-schema.ts');
     return {

@@ -1,6 +1,6 @@
 /** Wrong use of the command line: from what the parser says to a fault with exit code 2. */
 import { Fault, type FaultParts } from '../src/fault.ts';
-import { COIL_FILE, JOB_FILE } from '../src/job/file-kind.ts';
+import { COIL_FILE, JOB_FILE, OLD_COIL_FILE } from '../src/job/file-kind.ts';
 import { nearest } from '../src/job/nearest.ts';
 import { WrongUse } from './command-line.ts';
 import { COMMON_OPTIONS, isVerb, VERB_NAMES, VERBS, type Verb } from './verbs.ts';
@@ -29,8 +29,8 @@ function parts(message: string, given: readonly string[]): readonly FaultParts[]
 }
 
 function noFile(verb: Verb): FaultParts {
-  const { noun, begin } = verb === 'survey' ? COIL_FILE : JOB_FILE;
-  const word = verb === 'survey' ? 'coil' : 'job';
+  const { noun, begin } = verb === 'survey' ? COIL_FILE : verb === 'match' ? OLD_COIL_FILE : JOB_FILE;
+  const word = verb === 'survey' || verb === 'match' ? 'coil' : 'job';
   return {
     code: `no-${word}`,
     got: `${verb} without ${noun}`,

@@ -16,6 +16,11 @@ export const VERBS = {
     does: 'work out the figures of a coil from its measured dimensions: inductance, loss, range of every tap',
     options: ['out', 'json', 'explain'],
   },
+  match: {
+    written: 'match <coil>',
+    does: 'infer an old coil from what can be measured of it, and make its replacement: every tap as it was',
+    options: ['out', 'json', 'explain'],
+  },
   stock: {
     written: 'stock [what] [words..]',
     does: 'list the wires, tubes, materials and spacers that are known',

@@ -1,6 +1,7 @@
 /** What is taken when a key of an old coil's file is left out, by dotted key. Common practice. */
 import { UNCERTAINTY } from '../../match/uncertainty.ts';
 import { type Assumed, complete, type Data, DEFAULTS, isData } from '../defaults.ts';
+import { PLUS_MINUS } from './reading.ts';
 
 export const OLD_DEFAULTS = {
   'old.layers': 'single',
@@ -19,7 +20,14 @@ export const BY_THE_OLD = ['former.outside-diameter', 'wire'] as const;
 /** A list entry that is only a word or a number. */
 function tapOf(raw: unknown): unknown {
   if (raw === 'lost' || raw === null) return { lost: true };
-  return typeof raw === 'number' ? { turns: raw } : raw;
+  return typeof raw === 'number' ? { turns: raw } : withGroup(raw);
+}
+
+/** An inductance that is written without its group of keys. */
+function withGroup(raw: unknown): unknown {
+  if (!isData(raw) || typeof raw.inductance !== 'string') return raw;
+  const [value, uncertainty] = raw.inductance.split(PLUS_MINUS);
+  return { ...raw, inductance: uncertainty === undefined ? { value } : { value, uncertainty } };
 }
 
 /** Fills in what was left out; `fallback` names a job without a name. Does not judge what is there. */
@@ -37,6 +45,8 @@ export function completeOld(written: unknown, fallback: string): { data: unknown
     if (old.taps.length === 0) delete old.taps;
     else old.taps = old.taps.map(tapOf);
   }
+  if (isData(old)) old.whole = withGroup(old.whole);
+  if (isData(old) && old.whole === undefined) delete old.whole;
   const assumed: Assumed = {};
   if (!Object.hasOwn(own, 'job')) {
     own.job = fallback;

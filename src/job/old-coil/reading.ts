@@ -18,7 +18,8 @@ export interface Written {
 /** How one value of a kind is read. */
 export type ReadValue = (raw: unknown) => Parsed<number>;
 
-const PARTS = /\s*(?:±|\+\/-|\+-)\s*/u;
+/** Between a value and its uncertainty. */
+export const PLUS_MINUS = /\s*(?:±|\+\/-|\+-)\s*/u;
 
 /** Reads a value of a kind, or a plain number of a noun. */
 export function valueReader(kind: KindName, allowed: Allowed = {}): ReadValue {
@@ -97,8 +98,8 @@ export function readWritten(raw: unknown, read: ReadValue, noun: string): Parsed
     const half = halfWidth(raw.uncertainty, value.value, read);
     return half.ok ? { ok: true, value: { value: value.value, uncertainty: half.value } } : half;
   }
-  if (typeof raw === 'string' && PARTS.test(raw)) {
-    const [first = '', second = '', ...rest] = raw.split(PARTS);
+  if (typeof raw === 'string' && PLUS_MINUS.test(raw)) {
+    const [first = '', second = '', ...rest] = raw.split(PLUS_MINUS);
     const unit = /[\d.]\s*([a-zA-Z"µΩ°].*)$/u.exec(second)?.[1] ?? '';
     // 76.2 ± 0.2 mm: the unit stands behind both.
     const both = /[a-zA-Z"%°]/.test(first) ? first : `${first} ${unit}`;
