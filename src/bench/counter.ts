@@ -180,7 +180,7 @@ function placesFrom(value: unknown): Places | null {
   );
 }
 
-function measuresFrom(value: unknown): Progress.measures | null {
+function measuresFrom(value: unknown): Progress['measures'] | null {
   if (!Array.isArray(value)) return null;
   const good = value.every(
     (one: unknown) =>
@@ -189,7 +189,7 @@ function measuresFrom(value: unknown): Progress.measures | null {
       (one.over === 'extent' || one.over === 'wires'),
   );
   if (!good) return null;
-  return (value as Progress.measures).map(({ turn, lengthMm, halfMm, over }) => ({ turn, lengthMm, halfMm, over }));
+  return (value as Progress['measures']).map(({ turn, lengthMm, halfMm, over }) => ({ turn, lengthMm, halfMm, over }));
 }
 
 /** What `serialise` made, where it is of this record; it may have been spoilt in between. */
