@@ -119,6 +119,8 @@ export interface CorrectedStop {
   readonly highUh: number;
   /** What it would be at its planned turn. */
   readonly plannedUh: number;
+  /** Where it would meet its target; null without one. */
+  readonly idealTurn: number | null;
   /** The hole it is led through, and how far its centre lies above (+) or below the wire's. */
   readonly hole: { readonly label: string; readonly offMm: number } | null;
   /** Turns to unwind to reach the better place that is already wound over; 0: none. */

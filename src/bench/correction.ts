@@ -221,6 +221,7 @@ function correctedStop(
     deviationPercent: targetUh === null ? null : 100 * (inductanceUh / targetUh - 1),
     ...limits,
     plannedUh: coils.long.inductanceUh(Math.min(one.plannedTurn, coils.long.turns)),
+    idealTurn: targetUh === null ? null : coils.long.turnFor(targetUh),
     hole: one.hole,
     backTurns: one.backTurns,
   };
