@@ -8,6 +8,7 @@ export interface ShownTap {
   readonly now: string;
   readonly inductance: string;
   readonly off: string;
+  readonly note: string;
 }
 
 export interface ShownCorrection {
@@ -16,6 +17,8 @@ export interface ShownCorrection {
   readonly taps: readonly ShownTap[];
   /** The places above are the ones that the counter stops at. */
   readonly inUse: boolean;
+  /** A length does not go together with what was counted. */
+  readonly doubtful: boolean;
 }
 
 export interface CorrectionWork {
@@ -41,18 +44,21 @@ export function showCorrection(shown: ShownCorrection | null, work: CorrectionWo
   use.addEventListener('click', work.use);
   const drop = el('button', { type: 'button' }, shown.inUse ? words.drop : words.leave);
   drop.addEventListener('click', work.drop);
-  const rows = shown.taps.map(({ name, planned, now, inductance, off }) => ({
+  const rows = shown.taps.map(({ name, planned, now, inductance, off, note }) => ({
     name,
     cells: [
       cell(words.planned, undefined, planned),
       cell(words.now, undefined, el('strong', {}, now)),
       cell(words.inductance, undefined, inductance),
       cell(words.off, undefined, off),
+      cell(words.note, 'words', note),
     ],
   }));
-  const heads = [words.tap, words.planned, words.now, words.inductance, words.off];
+  const heads = [words.tap, words.planned, words.now, words.inductance, words.off, words.note];
   place.replaceChildren(
-    ...shown.lines.map((line) => el('p', {}, line)),
+    ...shown.lines.map((line, i) =>
+      el('p', { class: shown.doubtful && i < shown.lines.length - 2 ? 'fault' : undefined }, line),
+    ),
     ...(rows.length === 0 ? [] : [table(words.caption, heads, rows)]),
     el('p', {}, el('strong', {}, shown.inUse ? words.inUse : words.notYet)),
     el('div', { class: 'row' }, ...(shown.inUse ? [drop] : [use, drop])),

@@ -1,58 +1,43 @@
 /** Counting: by key, click or touch, held at every stop until what is to be done there is done. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
-import { Coil } from '../coil/coil.ts';
-import { short } from '../sheets/text.ts';
 import { lengthText, unitsOf, wireText } from '../sheets/units.ts';
+import type { Stop } from './api.ts';
+import { plannedMm } from './correction.ts';
+import { confirmStop, countTurn, heldBy, NOTHING, nextStop, takeBack, turnOf, turnsToGo } from './counter.ts';
 import { type Figure, type ShownStop, showCount, showFigures } from './page-counter.ts';
 import { byId, setText } from './page-dom.ts';
-import { counts, debounced, isControl, isTaken, isWriting, keyOf } from './page-keys.ts';
+import { keysPart } from './page-input.ts';
+import { debounced } from './page-keys.ts';
 import { laidWire } from './page-laid.ts';
-import {
-  confirmStop,
-  countTurn,
-  heldBy,
-  NOTHING,
-  nextStop,
-  type Stop,
-  stopsOf,
-  takeBack,
-  turnOf,
-} from './page-model.ts';
+import { positive } from './page-number.ts';
 import { pictureOf } from './page-picture.ts';
 import type { App } from './page-session.ts';
 import { sounds } from './page-sound.ts';
+import { markOf, nameOf, turnsText } from './page-words.ts';
+import { spoolAt } from './spool.ts';
 
 /** After a stop opens nothing confirms it for so long: what was meant to count must not. */
 const GUARD_MS = 500;
-
-const turnsText = (turns: number) => short(turns, 2);
 
 export interface CounterPart {
   readonly show: () => void;
 }
 
-export function counterPart(app: App): CounterPart {
+export function counterPart(app: App, changed: () => void): CounterPart {
   const { record } = app;
   const winding = record.windings[0]!;
   const units = unitsOf(record);
-  const stops = stopsOf(record);
   const picture = pictureOf(record);
   const noises = sounds(() => app.settings().muted);
   const mayCount = debounced();
   let heldSince = Number.NEGATIVE_INFINITY;
+  const count = () => app.session().progress.count;
 
-  const nameOf = (stop: Stop): string => {
-    if (stop.kind === 'tap') return BENCH.stop.tap(stop.number!);
-    if (stop.kind === 'unit') return BENCH.stop.unit(stop.number!);
-    return BENCH.stop[stop.kind];
-  };
   const placeOf = (stop: Stop): string => {
-    const whole = Math.floor(stop.turn + 1e-6);
-    const angle = stop.angleDeg.toFixed(0);
     const height = lengthText(stop.positionMm, units, { digits: 1 });
-    const place = BENCH.stop.place(turnsText(stop.turn), angle, height);
-    if (stop.turn - whole < 1e-6) return place;
-    return `${BENCH.stop.onFrom(String(whole), turnsText(stop.turn - whole), angle)} ${place}`;
+    const angle = stop.angleDeg.toFixed(0);
+    const on = stop.onDeg < 0.5 ? '' : `${BENCH.stop.onFrom(String(stop.whole), stop.onDeg.toFixed(0))} `;
+    return `${on}${BENCH.stop.place(turnsText(stop.turn), angle, height)}`;
   };
   const shownStop = (stop: Stop): ShownStop => {
     const name = nameOf(stop);
@@ -61,68 +46,54 @@ export function counterPart(app: App): CounterPart {
     return {
       name,
       place: placeOf(stop),
-      text: stop.text,
+      text: stop.text === '' ? BENCH.stop.moved : stop.text,
       how: made ? record.tapMethod.how : [],
       goOn: made ? tap(name) : stop.kind === 'check' ? check : finish,
     };
   };
 
-  const coil = coilOf(app);
-  const loops = (turn: number) =>
-    stops.filter((stop) => (stop.kind === 'tap' || stop.kind === 'unit') && stop.turn < turn).length;
   const figures = (): Figure[] => {
     const words = BENCH.figures;
-    const count = app.session().count;
-    const turn = turnOf(stops, count);
-    const used = turn === 0 ? 0 : coil.wireM(turn) + loops(turn) * record.tapMethod.loopM;
-    const spool = Number(app.session().spool.replace(',', '.'));
-    const known = app.session().spool.trim() !== '' && Number.isFinite(spool) && spool > 0;
-    const left = spool - used - winding.leadsM / 2;
-    const need = Math.max(0, winding.wireLengthM - used) + winding.leadsM / 2;
-    const lack = known && left < need;
+    const stops = app.stops();
+    const { usedM, neededM, leftM, lackM } = spoolAt(record, stops, count(), positive(app.session().spool));
+    const left = leftM === null ? words.unknown : wireText(leftM, units);
+    const lacking = lackM !== null && lackM > 0;
+    const turn = turnOf(stops, count());
+    const long = turn === 0 ? 0 : plannedMm(record, turn, 'extent');
     return [
-      { name: words.used, value: wireText(used, units) },
-      { name: words.needed, value: wireText(need, units) },
-      {
-        name: words.left,
-        value: !known
-          ? words.unknown
-          : lack
-            ? `${wireText(left, units)}: ${words.short(wireText(need - left, units))}`
-            : wireText(left, units),
-        lacking: lack,
-      },
-      {
-        name: words.height,
-        value: turn === 0 ? lengthText(0, units, { digits: 1 }) : lengthText(coil.woundMm(turn), units, { digits: 1 }),
-      },
+      { name: words.used, value: wireText(usedM, units) },
+      { name: words.needed, value: wireText(neededM, units) },
+      { name: words.left, value: lacking ? `${left}: ${words.short(wireText(lackM, units))}` : left, lacking },
+      { name: words.long, value: lengthText(long, units, { digits: 1 }) },
     ];
   };
 
   const show = () => {
-    const { count } = app.session();
-    const next = nextStop(stops, count);
-    const held = heldBy(stops, count);
+    const stops = app.stops();
+    const next = nextStop(stops, count());
+    const held = heldBy(stops, count());
     const { key } = app.settings();
     const keys = key === null ? BENCH.count.space : BENCH.count.spaceAnd(key.name);
-    const left = next === null ? 0 : Math.floor(next.turn + 1e-6) - count.whole;
+    const turn = turnOf(stops, count());
+    const turns = stops.at(-1)?.turn ?? winding.turns;
+    const { log, whole, done } = count();
     showCount({
-      turn: next === null ? turnsText(winding.turns) : String(count.whole),
-      label: `${BENCH.count.turn} ${BENCH.count.of(turnsText(winding.turns))}`,
+      turn: next === null ? turnsText(turn) : String(whole),
+      label: `${BENCH.count.turn} ${BENCH.count.of(turnsText(turns))}`,
       nextLabel: next === null ? '' : BENCH.count.next(nameOf(next)),
-      left: next === null ? BENCH.count.finished : BENCH.count.left(String(left)),
+      left: next === null ? BENCH.count.finished : BENCH.count.left(turnsText(turnsToGo(stops, count()))),
       hint: next === null ? BENCH.count.done : BENCH.count.hint(keys),
       stop: held === null ? null : shownStop(held),
       finished: next === null,
-      undo: count.log === '' ? null : count.log.endsWith('t') ? BENCH.count.undoTurn : BENCH.count.undoStop,
+      undo: log === '' ? null : log.endsWith('t') ? BENCH.count.undoTurn : BENCH.count.undoStop,
     });
-    const turn = turnOf(stops, count);
     picture.show(turn, next?.turn ?? null);
-    const marks = stops.map((stop) => ({ turn: stop.turn, name: shortName(stop) }));
+    const marks = stops.map((stop) => ({ turn: stop.turn, name: markOf(stop) }));
+    const ahead = next === null ? null : (marks[done] ?? null);
     const laid = byId('laid');
-    const ahead = next === null ? null : (marks[count.done] ?? null);
-    laid.replaceChildren(laidWire(turn, winding.turns, marks, ahead, laid.clientWidth || 320, turnsText));
+    laid.replaceChildren(laidWire(turn, turns, marks, ahead, laid.clientWidth || 320, turnsText));
     showFigures(figures());
+    changed();
   };
 
   const say = (text: string) => {
@@ -130,19 +101,24 @@ export function counterPart(app: App): CounterPart {
     setText(byId('said'), text);
   };
 
+  const spoken = () => {
+    const stops = app.stops();
+    const next = nextStop(stops, count());
+    if (next === null) return BENCH.count.done;
+    return BENCH.count.spoken(turnsText(turnOf(stops, count())), turnsText(turnsToGo(stops, count())), nameOf(next));
+  };
+
   const press = () => {
-    const { count } = app.session();
-    const after = countTurn(stops, count);
-    if (after === count) {
-      if (heldBy(stops, count) !== null) say(BENCH.count.held);
+    const stops = app.stops();
+    const after = countTurn(stops, count());
+    if (after === count()) {
+      if (heldBy(stops, after) !== null) say(BENCH.count.held);
       return;
     }
-    app.keep({ count: after });
+    app.count(after);
     const held = heldBy(stops, after);
     if (held === null) {
-      const next = nextStop(stops, after)!;
-      const left = Math.floor(next.turn + 1e-6) - after.whole;
-      say(BENCH.count.spoken(String(after.whole), String(left), nameOf(next)));
+      say(spoken());
       noises.turn();
     } else {
       heldSince = performance.now();
@@ -156,23 +132,14 @@ export function counterPart(app: App): CounterPart {
 
   const confirm = () => {
     if (performance.now() - heldSince < GUARD_MS) return;
-    const { count } = app.session();
-    const after = confirmStop(stops, count);
-    if (after === count) return;
+    const after = confirmStop(app.stops(), count());
+    if (after === count()) return;
+    // Two stops in one turn follow one another at once.
     heldSince = performance.now();
-    app.keep({ count: after });
-    const next = nextStop(stops, after);
-    say(
-      next === null
-        ? BENCH.count.done
-        : BENCH.count.spoken(
-            turnsText(turnOf(stops, after)),
-            String(Math.max(0, Math.floor(next.turn + 1e-6) - after.whole)),
-            nameOf(next),
-          ),
-    );
+    app.count(after);
+    say(spoken());
     show();
-    if (next === null) byId<HTMLDetailsElement>('after').open = true;
+    if (nextStop(app.stops(), after) === null) byId<HTMLDetailsElement>('after').open = true;
   };
 
   byId('picture').append(picture.element);
@@ -184,12 +151,11 @@ export function counterPart(app: App): CounterPart {
 
   const undo = byId('undo');
   undo.addEventListener('click', (event) => {
-    app.keep({ count: takeBack(app.session().count) });
+    app.count(takeBack(count()));
     show();
-    say(BENCH.count.undone(turnsText(turnOf(stops, app.session().count))));
+    say(BENCH.count.undone(turnsText(turnOf(app.stops(), count()))));
     // After a click or touch the space bar shall count again, not take back once more.
-    if (event.detail > 0)
-      byId(heldBy(stops, app.session().count) === null ? 'count' : 'stop').focus({ preventScroll: true });
+    if (event.detail > 0) byId(heldBy(app.stops(), count()) === null ? 'count' : 'stop').focus({ preventScroll: true });
   });
 
   // A count is cleared by two presses, so that a slip does not.
@@ -206,121 +172,13 @@ export function counterPart(app: App): CounterPart {
       return;
     }
     ask(false);
-    app.keep({ count: NOTHING });
+    app.count(NOTHING);
     show();
     say(BENCH.count.undone('0'));
   });
   again.addEventListener('blur', () => ask(false));
 
   keysPart(app, press, confirm, mayCount);
-  soundPart(app);
-  setupPart(app, show);
   window.addEventListener('resize', show);
   return { show };
-}
-
-const shortName = (stop: Stop) =>
-  stop.kind === 'tap'
-    ? String(stop.number)
-    : stop.kind === 'unit'
-      ? `u${stop.number}`
-      : stop.kind === 'finish'
-        ? 'F'
-        : '✓';
-
-/** The record's coil, turns where the record states them. */
-function coilOf({ record }: App): Coil {
-  const { wire, meanDiameterMm, corners, bendMm, pitchMm, turns, startMm, turnPositionsMm } = record.windings[0]!;
-  return new Coil({ wire, meanDiameterMm, corners, bendMm, pitchMm, turns, gaps: [], startMm }, turnPositionsMm);
-}
-
-function keysPart(app: App, press: () => void, confirm: () => void, mayCount: (now: number) => boolean): void {
-  let learning = false;
-  const learn = byId('learn');
-  const forget = byId<HTMLButtonElement>('forget');
-  const words = BENCH.setup;
-  const show = (said?: string) => {
-    const { key } = app.settings();
-    setText(learn, learning ? words.learning : words.learn);
-    forget.hidden = key === null;
-    setText(byId('key-words'), said ?? (key === null ? words.noKey : words.key(key.name)));
-  };
-  learn.addEventListener('click', () => {
-    learning = true;
-    show();
-  });
-  learn.addEventListener('blur', () => {
-    learning = false;
-    show();
-  });
-  forget.addEventListener('click', () => {
-    app.set({ key: null });
-    learn.focus();
-    show();
-  });
-  show();
-
-  // Before anything on the page acts on a key: a foot switch counts wherever the focus is.
-  window.addEventListener(
-    'keydown',
-    (event) => {
-      const { target } = event;
-      if (learning && event.key !== 'Tab') {
-        event.preventDefault();
-        event.stopPropagation();
-        if (event.repeat) return;
-        learning = false;
-        if (event.key === 'Escape') return show();
-        const key = keyOf(event);
-        if (isTaken(event)) return show(words.notThis(key.name.trim() || words.spaceName));
-        app.set({ key });
-        return show();
-      }
-      if (isWriting(target)) return;
-      const onCount = target === byId('count') || target === byId('go-on');
-      if (counts(event, app.settings().key)) {
-        // The space bar works a button that has the focus; a learned key counts wherever nothing is being written.
-        if (event.code === 'Space' && isControl(target) && !onCount) return;
-        event.preventDefault();
-        if (!event.repeat && mayCount(performance.now())) press();
-      } else if (event.key === 'Enter' && (onCount || !isControl(target))) {
-        event.preventDefault();
-        if (!event.repeat) confirm();
-      }
-    },
-    true,
-  );
-  // A button acts on the space bar when it comes up.
-  window.addEventListener(
-    'keyup',
-    (event) => {
-      const { target } = event;
-      if (event.code === 'Space' && (target === byId('count') || target === byId('go-on'))) event.preventDefault();
-    },
-    true,
-  );
-}
-
-function soundPart(app: App): void {
-  const button = byId('sound');
-  const show = () => setText(button, app.settings().muted ? BENCH.sound.off : BENCH.sound.on);
-  button.addEventListener('click', () => {
-    app.set({ muted: !app.settings().muted });
-    show();
-  });
-  show();
-}
-
-function setupPart(app: App, show: () => void): void {
-  const spool = byId<HTMLInputElement>('spool');
-  spool.value = app.session().spool;
-  spool.addEventListener('input', () => {
-    app.keep({ spool: spool.value });
-    const text = spool.value.trim();
-    const good = text === '' || Number(text.replace(',', '.')) > 0;
-    setText(byId('spool-fault'), good ? '' : BENCH.setup.spoolFault(text));
-    if (good) spool.removeAttribute('aria-invalid');
-    else spool.setAttribute('aria-invalid', 'true');
-    show();
-  });
 }

@@ -7,7 +7,7 @@ export interface CountingKey {
 }
 
 /** What a contact needs to come to rest; nobody winds a turn in less. */
-export const BOUNCE_MS = 120;
+export const BOUNCE_MS = 80;
 
 /** Keys that confirm, leave or move about. */
 const TAKEN = /^(Enter|NumpadEnter|Tab|Escape|Shift.*|Control.*|Alt.*|Meta.*|Space)$/;

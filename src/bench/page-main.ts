@@ -1,11 +1,15 @@
 /** The browser's side of the bench page: holds what is counted and read, and shows it. Started by being loaded. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
 import type { CoilRecord } from '../record/schema.ts';
+import { stopsOf } from './counter.ts';
+import { correctionPart } from './page-correcting.ts';
 import { showTicks } from './page-counter.ts';
-import { counterPart } from './page-counting.ts';
+import { type CounterPart, counterPart } from './page-counting.ts';
 import { byId, el, setText } from './page-dom.ts';
 import { lookSwitch } from './page-look.ts';
-import { EMPTY, fitting, SETTINGS, type Session, settingsFrom } from './page-session.ts';
+import { readingsPart } from './page-reading.ts';
+import { type App, EMPTY, SETTINGS, type Session, sessionFrom, sessionTo, settingsFrom } from './page-session.ts';
+import { soundPart, spoolPart } from './page-setup.ts';
 import { openStore } from './page-store.ts';
 
 const record = JSON.parse(byId('record').textContent ?? '') as CoilRecord;
@@ -13,7 +17,7 @@ const record = JSON.parse(byId('record').textContent ?? '') as CoilRecord;
 const store = openStore(() => notice(BENCH.kept.memory));
 const name = record.hash;
 const kept = store.read(name);
-let session: Session = fitting(kept, record) ?? EMPTY;
+let session: Session = sessionFrom(kept, record) ?? EMPTY;
 let settings = settingsFrom(store.read(SETTINGS));
 
 function notice(text: string): void {
@@ -30,7 +34,7 @@ window.addEventListener('storage', (event) => {
 
 const keep = (change: Partial<Session>) => {
   session = { ...session, ...change };
-  store.write(name, session);
+  store.write(name, sessionTo(session, record));
 };
 const set = (change: Partial<typeof settings>) => {
   settings = { ...settings, ...change };
@@ -38,8 +42,20 @@ const set = (change: Partial<typeof settings>) => {
 };
 
 lookSwitch(settings.look, (look) => set({ look }));
-const app = { record, session: () => session, keep, settings: () => settings, set };
-const counter = counterPart(app);
+const app: App = {
+  record,
+  session: () => session,
+  keep,
+  settings: () => settings,
+  set,
+  stops: () => stopsOf(record, session.progress.places),
+  count: (count) => keep({ progress: { ...session.progress, count } }),
+};
+const correcting = correctionPart(app, () => counter.show());
+const counter: CounterPart = counterPart(app, () => correcting.show());
+soundPart(app);
+spoolPart(app, counter.show);
+readingsPart(app);
 
 const steps = (...kinds: readonly string[]) => record.steps.filter(({ kind }) => kinds.includes(kind));
 const tick = (step: number, on: boolean) =>
@@ -47,6 +63,6 @@ const tick = (step: number, on: boolean) =>
 const ticked = (step: number) => session.ticks.includes(step);
 showTicks('before-list', steps('prepare', 'start'), ticked, tick);
 showTicks('after-list', steps('after'), ticked, tick);
-byId<HTMLDetailsElement>('before').open = session.count.log === '';
+byId<HTMLDetailsElement>('before').open = session.progress.count.log === '';
 byId('cautions').replaceChildren(...record.cautions.map((text) => el('li', {}, text)));
 counter.show();

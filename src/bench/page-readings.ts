@@ -1,6 +1,6 @@
 /** The table of readings: limits, a blank each, and what the reading says, at once. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
-import { byId, cell, el, setText, table } from './page-dom.ts';
+import { byId, cell, el, table } from './page-dom.ts';
 
 export interface ShownReading {
   /** Stable: readings are kept and saved under it. */
@@ -23,6 +23,8 @@ export interface ShownVerdict {
 export interface ReadingsTable {
   /** A heading over each table. */
   readonly caption: string;
+  /** Open from the start; others are opened when wanted. */
+  readonly open: boolean;
   readonly readings: readonly ShownReading[];
 }
 
@@ -36,14 +38,22 @@ export interface ReadingsWork {
 /** Builds the tables once; each blank then updates its own row. */
 export function showReadings(tables: readonly ReadingsTable[], work: ReadingsWork): void {
   const words = BENCH.readings;
-  byId('readings').replaceChildren(
-    ...tables.map(({ caption, readings }) =>
-      table(
-        caption,
-        [words.what, words.low, words.nominal, words.high, words.unit, words.reading, words.verdict],
-        readings.map((reading) => ({ name: reading.what, cells: rowCells(reading, work) })),
-      ),
-    ),
+  const heads = [words.what, words.low, words.nominal, words.high, words.unit, words.reading, words.verdict];
+  const place = byId('readings');
+  const opened = new Set([...place.querySelectorAll('details[open]')].map((one) => one.id));
+  place.replaceChildren(
+    ...tables.map(({ caption, open, readings }, i) => {
+      const id = `readings-${i}`;
+      const rows = readings.map((reading) => ({ name: reading.what, cells: rowCells(reading, work) }));
+      // Tables that are opened have something in them.
+      const filled = readings.some((reading) => work.text(reading.id).trim() !== '');
+      return el(
+        'details',
+        { id, open: open || filled || opened.has(id) },
+        el('summary', {}, caption),
+        table(caption, heads, rows),
+      );
+    }),
   );
 }
 
@@ -88,5 +98,4 @@ export function saveText(name: string, text: string): void {
   link.click();
   // Given up only when the browser has surely begun to read it.
   window.setTimeout(() => URL.revokeObjectURL(url), 10_000);
-  setText(byId('saved'), BENCH.readings.saved(name));
 }

@@ -1,16 +1,19 @@
 /** What the page keeps of one coil, and what it keeps for all of them. */
 import type { CoilRecord } from '../record/schema.ts';
+import type { Count, Progress, Stop } from './api.ts';
+import { NEW, parse, serialise } from './counter.ts';
 import type { CountingKey } from './page-keys.ts';
 import type { Look } from './page-look.ts';
-import { type Count, NOTHING, replay, stopsOf } from './page-model.ts';
 
 export interface Session {
-  readonly count: Count;
+  readonly progress: Progress;
   /** As entered: wire on the spool at the start, and readings by their name. */
   readonly spool: string;
   readonly readings: Readonly<Record<string, string>>;
   /** Numbers of steps that are ticked. */
   readonly ticks: readonly number[];
+  /** Temperature of the coil when it was measured, as entered. */
+  readonly celsius: string;
   readonly woundBy: string;
   readonly coilNo: string;
 }
@@ -26,40 +29,51 @@ export interface App {
   readonly record: CoilRecord;
   readonly session: () => Session;
   readonly keep: (change: Partial<Session>) => void;
+  /** The stops as they are now, with a correction in use. */
+  readonly stops: () => readonly Stop[];
+  readonly count: (count: Count) => void;
   readonly settings: () => Settings;
   readonly set: (change: Partial<Settings>) => void;
 }
 
 export const SETTINGS = 'settings';
-export const EMPTY: Session = { count: NOTHING, spool: '', readings: {}, ticks: [], woundBy: '', coilNo: '' };
+export const EMPTY: Session = {
+  progress: NEW,
+  spool: '',
+  readings: {},
+  ticks: [],
+  celsius: '',
+  woundBy: '',
+  coilNo: '',
+};
 
 type Loose = Readonly<Record<string, unknown>>;
 const loose = (value: unknown): Loose | null => (typeof value === 'object' && value !== null ? (value as Loose) : null);
 const textOf = (value: unknown) => (typeof value === 'string' ? value : '');
 
-/** The count, played anew from its log: whatever was kept, the result is one that this coil can have. */
-function countFrom(value: unknown, record: CoilRecord): Count | null {
-  const log = loose(value)?.log;
-  if (typeof log !== 'string') return null;
-  return replay(stopsOf(record), log);
-}
-
 /** What was kept, where it fits this coil; null where it does not. */
-export function fitting(value: unknown, record: CoilRecord): Session | null {
+export function sessionFrom(value: unknown, record: CoilRecord): Session | null {
   const kept = loose(value);
-  const count = kept === null ? null : countFrom(kept.count, record);
-  if (kept === null || count === null) return null;
+  const parsed = parse(record, textOf(kept?.progress));
+  if (kept === null || !parsed.ok) return null;
   const readings = Object.entries(loose(kept.readings) ?? {}).filter(([, text]) => typeof text === 'string');
   const ticks = Array.isArray(kept.ticks) ? kept.ticks.filter((one) => typeof one === 'number') : [];
   return {
-    count,
+    progress: parsed.progress,
     spool: textOf(kept.spool),
     readings: Object.fromEntries(readings) as Record<string, string>,
     ticks: ticks as number[],
+    celsius: textOf(kept.celsius),
     woundBy: textOf(kept.woundBy),
     coilNo: textOf(kept.coilNo),
   };
 }
+
+/** As it is kept: the counter's own text, and the rest as it is. */
+export const sessionTo = (session: Session, record: CoilRecord): unknown => ({
+  ...session,
+  progress: serialise(record, session.progress),
+});
 
 export function settingsFrom(value: unknown): Settings {
   const kept = loose(value);

@@ -54,8 +54,8 @@ export const BENCH = {
     finish: 'Finish',
     /** How far past the last whole turn. */
     place: (turn: string, angle: string, height: string) => `Turn ${turn}, at ${angle}°, ${height} above the datum.`,
-    onFrom: (whole: string, part: string, angle: string) =>
-      `From turn ${whole} go on by ${part} of a turn, to ${angle}°.`,
+    onFrom: (whole: string, on: string) => `From turn ${whole} go on by ${on}°.`,
+    moved: 'This place was moved by the correction; it is not the one on the winding sheet.',
     goOn: {
       tap: (name: string) => `${name} is made: go on (Enter)`,
       check: 'Checked: go on (Enter)',
@@ -72,7 +72,7 @@ export const BENCH = {
     used: 'wire used',
     left: 'left on the spool',
     needed: 'needed to the end',
-    height: 'winding is long',
+    long: 'should be long here',
     unknown: 'not known',
     short: (lack: string) => `${lack} short`,
   },
@@ -96,7 +96,39 @@ export const BENCH = {
     heading: 'Correct while winding',
     words:
       'Lay a rule along the winding, edge to edge over the wires, and enter what it shows. The taps still to come are placed anew for a winding that goes on at that pitch.',
-    wound: (turn: string, unit: string) => `length of the ${turn} turns wound, ${unit}`,
+    over: 'measured',
+    extent: 'from the start hole to the wire’s end',
+    wires: 'over the wires side by side, away from the start hole',
+    wound: {
+      extent: (turn: string, unit: string) => `length of ${turn} turns, ${unit}`,
+      wires: (turn: string, unit: string) => `length over ${turn} wires, ${unit}`,
+    },
+    notYetWound: {
+      extent: 'Wind a turn at least before measuring.',
+      wires: 'Wind two turns at least before measuring.',
+    },
+    fault: (text: string) =>
+      text === '' ? 'Enter a length.' : `“${text}” is no length: enter a number, such as 38.5.`,
+    length: (turn: string, mm: string, planned: string) => `${turn} turns measure ${mm}; planned were ${planned}.`,
+    doubt: {
+      'a turn': (turns: string) =>
+        `That is ${turns} turns off: more like a turn missed in counting, or measured the other way. Count the wires before you go by it.`,
+      'too short': () => 'Wires side by side cannot be that short. Measure again, and count the wires.',
+      'too long': (turns: string) => `That is ${turns} turns off, more than any winding strays. Measure again.`,
+      groove: (turns: string) =>
+        `A groove keeps its pitch: ${turns} turns off means that turns were jumped or miscounted. Count the wires.`,
+    },
+    pitch: (mm: string, planned: string) =>
+      `Turns still to come are reckoned with a pitch of ${mm} (planned ${planned}).`,
+    lacks: (mm: string) => `The winding lacks ${mm} of room on the former.`,
+    whole: (turns: string, long: string, wire: string, uh: string, off: string, limits: string) =>
+      `The finished coil: ${turns} turns, ${long} long, ${wire} of wire, ${uh} µH${off === '' ? '' : ` (${off} % off target)`}, in 95 of 100 cases ${limits} µH.`,
+    place: (turn: string, angle: string) => `${turn}, at ${angle}°`,
+    placing: { made: 'made', steps: '', hole: '', kept: 'keeps its place' },
+    hole: (label: string, mm: string, above: boolean) =>
+      `hole ${label} lies ${mm} ${above ? 'above' : 'below'} the wire`,
+    back: (turns: string) => `better: unwind ${turns} turns`,
+    note: 'note',
     work: 'Work it out',
     caption: 'Stops still to come',
     tap: 'stop',
@@ -122,6 +154,32 @@ export const BENCH = {
     reading: 'reading',
     verdict: 'judged',
     blank: (what: string, unit: string) => `Reading: ${what}, ${unit}`,
+    none: '–',
+    whole: 'Former, winding and whole coil',
+    byTap: {
+      length: 'Wound length at every tap',
+      resistance: 'DC resistance at every tap',
+      inductance: 'Inductance at every tap',
+      resonance: 'Resonance at every tap',
+      diameter: 'Diameters',
+      other: 'Others',
+    },
+    noNumber: (text: string) => `“${text}” is no number`,
+    verdicts: {
+      pass: 'within limits',
+      low: 'too low',
+      high: 'too high',
+      implausible: 'hardly possible: measure again',
+      'not judged': 'written down, not judged',
+    },
+    doubts: {
+      leads: 'the meter’s leads count for too much here',
+      resistance: 'resistance misleads the meter here',
+      capacitance: 'capacitance misleads the meter here',
+    },
+    celsius: 'coil at °C',
+    remark: (name: string) => `wound by ${name}`,
+    nothing: 'There is no reading to save yet.',
     woundBy: 'wound by',
     coilNo: 'coil no.',
     save: 'Save readings (CSV)',

@@ -181,7 +181,22 @@ function netlist(path, record) {
   worstResonance = Math.max(worstResonance, checkNetlist(path, record, simulate, count));
 }
 
+/** The bench page, driven in a browser by tests of their own. */
+function benchPage() {
+  if (!has('/usr/bin/chromium')) return;
+  const vitest = join(root, 'node_modules', 'vitest', 'vitest.mjs');
+  const args = ['run', '--config', 'tests/vitest.config.ts', 'tests/bench-page/browser.test.ts'];
+  const { status, stdout, stderr } = spawnSync(process.execPath, [vitest, ...args], {
+    cwd: root,
+    encoding: 'utf8',
+    env: { ...process.env, DRIVE_BENCH_PAGE: '1', NO_COLOR: '1' },
+  });
+  check('the bench page in a browser', status === 0 && /Tests\s+\d+ passed/.test(stdout), stdout + stderr);
+  for (const line of stdout.split('\n').filter((text) => /^bench page: \d/.test(text))) console.log(line);
+}
+
 try {
+  benchPage();
   const starters = readdirSync(jobs).filter((name) => name.endsWith('.yaml'));
   for (const name of starters) {
     // Ranges need a set: a starter without one is planned a second time with it, for its netlist.
