@@ -93,7 +93,7 @@ export interface PitchPiece {
 
 /**
  * `made`: done already; nothing moves it. `steps`: whole turns only (taps in
- * line, posts), from rib to rib, or by 5 degrees, which a protractor can set out. `hole`: the former is drilled, the wire nearest to the hole is taken. `kept`: placed by the
+ * line, posts), from rib to rib, or by 5 degrees, which a protractor can set out. `hole`: the former is drilled, one of the wires beside the hole is taken. `kept`: placed by the
  * groove, or of a units switch.
  */
 export type Placing = 'made' | 'steps' | 'hole' | 'kept';

@@ -10,6 +10,7 @@ import { angleOf, type Gap } from '../coil/layout.ts';
 import { limitsOf } from '../coil/tolerance.ts';
 import { coilOf } from '../record/rebuild.ts';
 import { ribName } from '../record/rib-name.ts';
+import { decimals } from '../record/rounding.ts';
 import type { CoilRecord, Tap } from '../record/schema.ts';
 import type {
   CorrectedStop,
@@ -41,7 +42,9 @@ const LONGER = 1.15;
 const LONGER_TURNS = 3;
 /** Gaps move with the taps, which moves these again: settled after two or three rounds. */
 const MOST_ROUNDS = 5;
-/** Of a plan that no tap lies nearer than so to its neighbour, where nothing else keeps them apart. */
+/** A wire this much of a pitch off a hole, and no more, can still be led into it. */
+const BESIDE = 0.75;
+/** Taps lie no nearer to one another than this where their steps are finer. */
 const APART_TURNS = 0.25;
 /** A length off by more than this is of another coil. */
 const FAR = 0.15;
@@ -118,31 +121,52 @@ function nearestStep(coil: Coil, moving: Moving, targetUh: number, notAbove: boo
   return (notAbove && below > 0) || off(below) <= off(above) ? below : above;
 }
 
-/** The turn at which the wire passes nearest to a hole: at the angle of the turn that it was planned for. */
-function turnAtHole(coil: Coil, turn: number, axialMm: number): { turn: number; offMm: number } {
-  const nearest = turn + Math.round((axialMm - coil.positionMm(turn)) / coil.shape.pitchMm);
-  return { turn: nearest, offMm: axialMm - coil.positionMm(nearest) };
+/** The turns beside a hole that was drilled for `turn`, at its angle: one, or two where the hole lies between them. */
+function turnsAtHole(coil: Coil, turn: number, axialMm: number): number[] {
+  const { pitchMm } = coil.shape;
+  const off = (at: number) => Math.abs(axialMm - coil.positionMm(at));
+  const nearest = turn + Math.round((axialMm - coil.positionMm(turn)) / pitchMm);
+  return [nearest - 1, nearest, nearest + 1].filter(
+    (at) => at > 0 && at <= coil.turns && (at === nearest || off(at) <= BESIDE * pitchMm),
+  );
+}
+
+interface Drilled {
+  readonly label: string;
+  readonly turn: number;
+  readonly axialMm: number;
+}
+
+/** Holes of the row that the end can be led in at: it comes out at the next. */
+function finishHoles({ holes }: CorrectedRecord): Drilled[] {
+  const row = holes
+    .flatMap(({ purpose, label, turn, axialMm }) =>
+      purpose === 'finish' && turn !== null ? [{ label, turn, axialMm }] : [],
+    )
+    .sort((a, b) => a.turn - b.turn);
+  return row.length > 1 ? row.slice(0, -1) : row;
+}
+
+/** The hole of a tap, or the middle of the two of a cut pair. */
+function tapHole({ holes }: CorrectedRecord, { stop, plannedTurn }: Moving): Drilled {
+  const own = holes.filter(({ purpose, tap }) => purpose === 'tap' && tap === stop.number);
+  const axialMm = own.reduce((sum, hole) => sum + hole.axialMm, 0) / own.length;
+  return { label: own.map(({ label }) => label).join(', '), turn: plannedTurn, axialMm };
 }
 
 function atHole(record: CorrectedRecord, coil: Coil, moving: Moving, least: number): void {
-  const finish = moving.stop.kind === 'finish';
-  const rows = record.holes
-    .filter(({ purpose, tap, turn }) =>
-      turn === null ? false : finish ? purpose === 'finish' : purpose === 'tap' && tap === moving.stop.number,
-    )
-    .sort((a, b) => a.turn! - b.turn!);
-  // The end is led in at one hole of the row and out at the next.
-  const usable = finish && rows.length > 1 ? rows.slice(0, -1) : rows;
+  const usable = moving.stop.kind === 'finish' ? finishHoles(record) : [tapHole(record, moving)];
   const targetUh = moving.tap!.targetUh;
   let best: { off: number; turn: number; backTurns: number; hole: CorrectedStop['hole'] } | null = null;
-  for (const { label, turn, axialMm } of usable) {
-    const at = turnAtHole(coil, turn!, axialMm);
-    const { turn: reached, backTurns } = reachable(at.turn, 1, least);
-    if (reached > coil.turns) continue;
-    const off = Math.abs(coil.inductanceUh(reached) - targetUh) + (backTurns > 0 ? targetUh : 0);
-    const offMm = axialMm - coil.positionMm(reached);
-    if (best === null || off < best.off) best = { off, turn: reached, backTurns, hole: { label, offMm } };
-  }
+  for (const { label, turn, axialMm } of usable)
+    for (const at of turnsAtHole(coil, turn, axialMm)) {
+      const { turn: reached, backTurns } = reachable(at, 1, least);
+      if (reached > coil.turns) continue;
+      // Only what can be reached is compared, as long as anything can.
+      const off = Math.abs(coil.inductanceUh(reached) - targetUh) + (backTurns > 0 ? targetUh : 0);
+      const offMm = axialMm - coil.positionMm(reached);
+      if (best === null || off < best.off) best = { off, turn: reached, backTurns, hole: { label, offMm } };
+    }
   if (best === null) return;
   moving.turn = best.turn;
   moving.backTurns = best.backTurns;
@@ -162,6 +186,7 @@ function place(record: CorrectedRecord, coil: Coil, moving: readonly Moving[], w
       const notAbove = record.demand.kind === 'band' && one.stop.number === 1;
       Object.assign(one, reachable(nearestStep(coil, one, one.tap!.targetUh, notAbove), step, least));
     }
+    one.turn = decimals(one.turn, 6);
     if (Math.abs(one.turn - before) > 1e-9) moved = true;
     previous = one.turn;
   }
