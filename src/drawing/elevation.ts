@@ -292,17 +292,21 @@ export function elevation(
   ];
   const size = `⌀ ${length(record.former.outsideDiameterMm)}`;
   const half = measure.width(size, SMALL_MM, true) / 2 + 1.5;
+  let reach = edge + LEADS_MM;
   if (r > half + 3) {
     shapes.push(...arrow(-half, -6, -r, -6), ...arrow(half, -6, r, -6));
     shapes.push(label(0, -6, size, { align: 'centre', anchor: 'middle', bold: true }));
   } else {
     shapes.push(...arrow(-r - 5, -6, -r, -6), ...arrow(r + 5, -6, r, -6));
-    shapes.push(label(0, -10.5, size, { align: 'centre', bold: true }));
+    // Beside a slim former the column of text may reach down to it.
+    const x = Math.min(0, edge + TEXT_MM - 1 - half);
+    shapes.push(label(x, -10.5, size, { align: 'centre', bold: true }));
+    reach = Math.max(reach, half - x);
   }
   return {
     shapes,
     scale,
-    leftMm: edge + LEADS_MM,
+    leftMm: reach,
     rightMm: column.right,
     upMm: Math.max(top + 12, column.top),
     downMm: Math.max(r > half + 3 ? 8 : 12, -column.bottom),

@@ -1,21 +1,21 @@
-/** What to measure on the finished coil, with limits: from the record's own winding and former. */
+/** What to measure besides the taps, with limits: the former, the winding under way, and resonance of the whole coil. */
 
 import type { Spread } from '../coil/tolerance.ts';
-import { resonance } from '../physics/tuning.ts';
+import type { Shop } from '../job/job.ts';
 import type { Design } from '../solve/design.ts';
-import { decimals, significant } from './rounding.ts';
-import type { Check, Winding } from './schema.ts';
+import { lengthHalfMm } from './meter.ts';
+import type { Measuring } from './meter-schema.ts';
+import { decimals } from './rounding.ts';
+import type { Check } from './schema.ts';
 import { overTwenty } from './steps.ts';
 
-/** Capacitor that most benches have at hand, and how well its value is known. */
-const KNOWN_PF = 100;
-const KNOWN_SPREAD = 0.01;
-/** Medhurst's table is stated to 5 %. */
-const SELF_SPREAD = 0.05;
-
-export function checksOf(design: Design, winding: Winding, spread: Spread): Check[] {
-  const { former, coil } = design;
-  const whole = winding.taps[winding.taps.length - 1]!;
+export function checksOf(
+  design: Design,
+  spread: Spread,
+  measuring: Measuring,
+  shop: Pick<Shop, 'capacitorTolerance'>,
+): Check[] {
+  const { former, coil, taps } = design;
   const checks: Check[] = [];
   const add = (what: string, nominal: number, low: number, high: number, unit: string, digits: number) =>
     checks.push({
@@ -27,65 +27,16 @@ export function checksOf(design: Design, winding: Winding, spread: Spread): Chec
       digits,
     });
   const diameter = former.outsideDiameterMm;
-  add(
-    'former outside diameter, before winding',
-    diameter,
-    diameter - spread.diameterMm,
-    diameter + spread.diameterMm,
-    'mm',
-    2,
-  );
-  const lengthSpread = (turns: number) => {
-    const pitchPart = spread.pitch * coil.shape.pitchMm * turns;
-    const gapPart =
-      spread.gap *
-      design.method.gapMm *
-      Math.sqrt([...design.unitTaps, ...design.taps.map(({ turn }) => turn)].filter((turn) => turn < turns).length);
-    return Math.hypot(pitchPart, gapPart, 0.05 * winding.wire.overallMm);
-  };
+  const half = spread.diameterMm;
+  add('former, outside diameter', diameter, diameter - half, diameter + half, 'mm', 2);
   if (coil.places.length >= 21) {
     const mm = overTwenty(design);
-    const half = lengthSpread(19);
-    add('over 20 turns from the start, edge to edge', mm, mm - half, mm + half, 'mm', 2);
+    const width = lengthHalfMm(coil, spread, 19);
+    add('20 turns, edge to edge', mm, mm - width, mm + width, 'mm', 2);
   }
-  const half = lengthSpread(winding.turns);
-  add(
-    'whole winding, S to F, edge to edge',
-    winding.windingLengthMm,
-    winding.windingLengthMm - half,
-    winding.windingLengthMm + half,
-    'mm',
-    2,
-  );
-  add(
-    'DC resistance S to F at 20 °C (four wires below 1 Ω)',
-    whole.resistanceDcOhm,
-    whole.resistanceLowOhm,
-    whole.resistanceHighOhm,
-    'Ω',
-    whole.resistanceDcOhm < 10 ? 3 : 2,
-  );
-  add(
-    'inductance S to F, low frequency',
-    whole.inductanceUh,
-    whole.inductanceLowUh,
-    whole.inductanceHighUh,
-    'µH',
-    whole.inductanceUh < 100 ? 2 : 1,
-  );
-  const kHz = (uh: number, pf: number) => resonance(uh * 1e-6, pf * 1e-12) / 1e3;
-  const self = winding.selfCapacitancePf;
-  const nominal = kHz(whole.inductanceUh, KNOWN_PF + self);
-  const capacitance = Math.hypot(KNOWN_SPREAD * KNOWN_PF, SELF_SPREAD * self) / (KNOWN_PF + self) / 2;
-  const inductance = (whole.inductanceHighUh / whole.inductanceLowUh - 1) / 4;
-  const width = nominal * Math.hypot(capacitance, inductance);
-  add(
-    `resonance S to F with ${KNOWN_PF} pF ± 1 %, start earthed`,
-    significant(nominal, 6),
-    nominal - width,
-    nominal + width,
-    'kHz',
-    0,
-  );
+  const percent = `${decimals(100 * shop.capacitorTolerance, 3)} %`;
+  for (const { tap, capacitancePf, frequencyKhz, lowKhz, highKhz } of measuring.resonances)
+    if (tap === taps.length)
+      add(`resonance S to F with ${capacitancePf} pF ± ${percent}, S earthed`, frequencyKhz, lowKhz, highKhz, 'kHz', 0);
   return checks;
 }

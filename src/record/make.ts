@@ -7,6 +7,7 @@ import { HOW } from '../../templates/wording/steps.ts';
 import { FORMER_SHARE } from '../coil/positions.ts';
 import type { Job } from '../job/job.ts';
 import { type Possible, possibleParts } from '../parts/parts.ts';
+import { lengthText } from '../sheets/units.ts';
 import { alternativesTo, WORTH } from '../solve/alternatives.ts';
 import { setCapacitance } from '../solve/demand.ts';
 import type { Design } from '../solve/design.ts';
@@ -16,13 +17,15 @@ import { plasticShare } from '../solve/ribs.ts';
 import type { Found } from '../solve/search.ts';
 import { spreadInWords, spreadOf } from '../solve/spread.ts';
 import { DEFAULT_AT_KHZ } from '../solve/working.ts';
+import { adviceOf, correctionsOf } from './advice.ts';
 import { checksOf } from './checks.ts';
 import { figuresOf } from './figures.ts';
 import { hashOf } from './hash.ts';
+import { measuringOf } from './meter.ts';
 import { askedFor, bedsOf, entriesOf, printerOf, wantedOf } from './printed.ts';
 import { decimals, deg, mm, significant } from './rounding.ts';
 import { type Alternative, type CoilRecord, type Former, type Hole, type PartsRecord, recordSchema } from './schema.ts';
-import { correctionsOf, stepsOf } from './steps.ts';
+import { stepsOf } from './steps.ts';
 import { leftOutWarnings, warningsOf } from './warnings.ts';
 import { placesOf, windingOf } from './winding.ts';
 
@@ -176,7 +179,7 @@ export function printedOf(job: Job, found: Found): Printed {
     printer: printerOf(job),
     shop: { ...job.shop, capacitorsPf: [...job.shop.capacitorsPf] },
     wanted: wantedOf(job, chosen),
-    tapMethod: tapMethodOf(chosen),
+    tapMethod: tapMethodOf(chosen, job.units),
     windings: [placesOf(chosen)],
   };
   const { solids, leftOut } = possibleParts(record, askedFor(job));
@@ -184,7 +187,7 @@ export function printedOf(job: Job, found: Found): Printed {
   return { record: { ...record, wanted: record.wanted.filter((kind) => !not.includes(kind)) }, solids, leftOut };
 }
 
-function tapMethodOf({ method, unitTaps, layout }: Design): CoilRecord['tapMethod'] {
+function tapMethodOf({ method, unitTaps, layout }: Design, units: Job['units']): CoilRecord['tapMethod'] {
   return {
     name: method.name,
     // Unit taps are a turn apart and never in one line.
@@ -192,7 +195,7 @@ function tapMethodOf({ method, unitTaps, layout }: Design): CoilRecord['tapMetho
     gapMm: mm(method.gapMm),
     loopM: method.loopM,
     why: method.why,
-    how: HOW[method.name](Math.round(method.loopM * 1000)),
+    how: HOW[method.name](Math.round(method.loopM * 1000), (length, digits) => lengthText(length, units, { digits })),
   };
 }
 
@@ -214,10 +217,12 @@ export function makeRecord(
     rest: job.set?.switch ?? ('open' as const),
     lossTangent: lossTangentOf(job, chosen.former),
   };
-  const figures = figuresOf(chosen.working ?? workingCoilOf(job, chosen), conditions);
+  const working = chosen.working ?? workingCoilOf(job, chosen);
+  const figures = figuresOf(working, conditions);
   const lossFactor = fieldLoss(job, chosen);
   const winding = windingOf(job, chosen, figures.taps);
   const spread = spreadOf(job, chosen);
+  const measuring = measuringOf(working, winding.taps, job.shop, spread, conditions.lossTangent);
   const { candidate } = chosen;
   const { record: printed, solids, leftOut } = parts;
   const entries = entriesOf(solids);
@@ -239,8 +244,10 @@ export function makeRecord(
     parts: entries,
     beds: bedsOf(entries, printed.printer),
     steps: stepsOf(job, chosen, winding),
-    checks: checksOf(chosen, winding, spread),
-    corrections: correctionsOf(chosen),
+    checks: checksOf(chosen, spread, measuring, job.shop),
+    corrections: correctionsOf(chosen, measuring, job.units),
+    advice: adviceOf(chosen, measuring),
+    measuring,
     cautions: cautionsFor({
       printed: chosen.former.kind === 'printed',
       tube: chosen.former.kind === 'tube',

@@ -8,7 +8,9 @@
  */
 import * as z from 'zod';
 import { PARTS } from '../job/schema.ts';
+import { adviceTapSchema, correctionSchema } from './advice-schema.ts';
 import { matchedSchema } from './match-schema.ts';
+import { measuringSchema } from './meter-schema.ts';
 import { type Winding, windingSchema } from './winding-schema.ts';
 
 export type { Tap, UnitTap, Winding } from './winding-schema.ts';
@@ -242,8 +244,6 @@ export const checkSchema = z.strictObject({
   digits: num.int().describe('decimals to print'),
 });
 
-export const correctionSchema = z.strictObject({ doing: text, wholePercent: num, firstTapPercent: num });
-
 export const alternativeSchema = z.strictObject({
   wire: text,
   formerMm: num,
@@ -354,7 +354,9 @@ export const recordSchema = z.strictObject({
   beds: z.array(bedSchema),
   steps: z.array(stepSchema),
   checks: z.array(checkSchema),
-  corrections: z.array(correctionSchema),
+  corrections: z.array(correctionSchema).describe('what can be done when the coil reads high or low'),
+  advice: z.array(adviceTapSchema).describe('section by section, one a tap'),
+  measuring: measuringSchema.describe('what the instruments of the shop will show of the finished coil'),
   cautions: z.array(text),
   chosen: z.strictObject({
     prefer: text,

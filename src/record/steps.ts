@@ -1,16 +1,16 @@
 /** The winding in order, from the design: what to do, at which turn, with how much wire used. */
-import { CORRECTION, STEP } from '../../templates/wording/steps.ts';
+import { STEP } from '../../templates/wording/steps.ts';
 import { Coil } from '../coil/coil.ts';
 import type { Job } from '../job/job.ts';
+import { forcesText, lengthText, wireText } from '../sheets/units.ts';
 import type { Design } from '../solve/design.ts';
 import { findMaterial } from '../stock/materials.ts';
 import { ribName } from './rib-name.ts';
 import { decimals } from './rounding.ts';
-import type { CoilRecord, Former, Step, Winding } from './schema.ts';
+import type { Former, Step, Winding } from './schema.ts';
 
 /** Wire left free at each end, mm. */
 export const LEAD_MM = 200;
-const SPREAD_TURNS = 5;
 
 /** A turn as people count: 12, 12.25. */
 const turnText = (turn: number) => String(decimals(turn, 2));
@@ -31,6 +31,9 @@ function percentPerTenth(design: Design): string {
 /** What softens below this does not stand a soldering iron beside it; phenolic paper and card do. */
 const SOFT_BELOW_C = 120;
 
+/** Tubes that are dried and sealed before they are wound; phenolic paper is sealed by its resin. */
+const TAKES_WATER = new Set(['card', 'wood']);
+
 /** Whether a soldering iron harms a former of this material. */
 function softens(material: string): boolean {
   const found = findMaterial(material);
@@ -38,9 +41,11 @@ function softens(material: string): boolean {
 }
 
 /** Which holes are drilled how wide; all alike: one size. */
-function drillText(holes: Design['holes']): string {
+function drillText(holes: Design['holes'], units: Job['units']): string {
   const sizeOf = (some: Design['holes']) =>
-    [...new Set(some.map((hole) => hole.diameterMm))].map((size) => `${size} mm`).join(', ');
+    [...new Set(some.map((hole) => hole.diameterMm))]
+      .map((size) => lengthText(size, units, { digits: 2, trim: true }))
+      .join(', ');
   const wide = holes.filter((hole) => hole.purpose === 'tap');
   const rest = holes.filter((hole) => hole.purpose !== 'tap');
   const alike = wide.length === 0 || sizeOf(wide) === sizeOf(rest);
@@ -49,6 +54,8 @@ function drillText(holes: Design['holes']): string {
 
 export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
   const { former, method, holes } = design;
+  const { units } = job;
+  const length = (mm: number, digits: number) => lengthText(mm, units, { digits });
   const steps: Step[] = [];
   const add = (
     kind: Step['kind'],
@@ -68,15 +75,19 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
   if (joint) {
     const climbs = former.joints.some(({ climbMm }) => climbMm > 0);
     const { joints, lengthMm } = former;
-    add('prepare', STEP.glue(joints.length + 1, String(joint.glueGapMm), climbs, lengthMm.toFixed(1)));
+    add(
+      'prepare',
+      STEP.glue(joints.length + 1, lengthText(joint.glueGapMm, units, { trim: true }), climbs, length(lengthMm, 1)),
+    );
   }
-  add('prepare', STEP.measure(former.outsideDiameterMm.toFixed(2), percentPerTenth(design)));
-  if (former.kind === 'tube') add('prepare', STEP.drill(drillText(holes)));
+  add('prepare', STEP.measure(length(former.outsideDiameterMm, 2), length(0.1, 1), percentPerTenth(design)));
+  if (former.kind === 'tube') add('prepare', STEP.drill(drillText(holes, units)));
+  if (former.kind === 'tube' && TAKES_WATER.has(former.material)) add('prepare', STEP.dry);
   if (method.holes === 0 && winding.taps.length > 1) add('prepare', former.ribs === null ? STEP.mark : STEP.markRibs);
-  const metres = (winding.wireLengthM + winding.leadsM).toFixed(1);
-  add('prepare', STEP.set(metres, winding.tensionLowN.toFixed(1), winding.tensionHighN.toFixed(1)));
+  const wire = wireText(winding.wireLengthM + winding.leadsM, units, 1);
+  add('prepare', STEP.set(wire, forcesText([winding.tensionLowN, winding.tensionHighN], units)));
   if (winding.pitchKind === 'spacer') add('prepare', STEP.spacer(winding.spacerName));
-  add('start', STEP.start(LEAD_MM), { turn: 0, wireM: 0 });
+  add('start', STEP.start(length(LEAD_MM, 0)), { turn: 0, wireM: 0 });
   add('start', STEP.direction[job.winding.hand]);
   let last = 0;
   let checked = false;
@@ -89,13 +100,13 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
     const whole = tap.tap === winding.taps.length;
     if (!checked && last < 20 && tap.turn > 20 && winding.pitchKind !== 'groove') {
       checked = true;
-      add('wind', STEP.check(overTwenty(design).toFixed(1)), {
+      add('wind', STEP.check(length(overTwenty(design), 1)), {
         turn: 20,
         wireM: decimals(design.coil.wireM(20) + method.loopM * (tap.tap - 1 + design.unitTaps.length), 2),
       });
     }
     const wind = STEP.wind(turnText(tap.turn - last), placeText(former, tap.turn, tap.angleDeg));
-    const then = whole ? STEP.finish(LEAD_MM) : STEP.tap(tap.tap);
+    const then = whole ? STEP.finish(length(LEAD_MM, 0)) : STEP.tap(tap.tap);
     add(whole ? 'finish' : 'tap', whole ? `${wind}. ${then}` : `${wind}: ${then}`, {
       tap: tap.tap,
       turn: tap.turn,
@@ -116,34 +127,4 @@ export function stepsOf(job: Job, design: Design, winding: Winding): Step[] {
 export function overTwenty(design: Design): number {
   const { places, shape } = design.coil;
   return places[19]! - places[0]! + shape.wire.overallMm;
-}
-
-/** What can be done to a coil that reads high or low, worked out for this coil by the ring sum. */
-export function correctionsOf(design: Design): CoilRecord['corrections'] {
-  const { coil, taps } = design;
-  const first = taps[0]!.turn;
-  const spread = (from: number): Coil => {
-    const gapMm = coil.shape.wire.overallMm;
-    const gaps = Array.from({ length: SPREAD_TURNS }, (_, i) => ({ turn: from + i, gapMm }));
-    return new Coil({ ...coil.shape, gaps: [...coil.shape.gaps, ...gaps] });
-  };
-  const line = (doing: string, other: Coil, whole: number) => ({
-    doing,
-    wholePercent: decimals(100 * (other.inductanceUh(whole) / coil.inductanceUh(coil.turns) - 1), 2),
-    firstTapPercent: decimals(
-      taps.length > 1 ? 100 * (other.inductanceUh(first) / coil.inductanceUh(first) - 1) : 0,
-      2,
-    ),
-  });
-  const list: CoilRecord['corrections'] = [];
-  if (coil.turns > 2) list.push(line(CORRECTION.turnOff, coil, coil.turns - 1));
-  const more = new Coil({ ...coil.shape, turns: coil.turns + 1 });
-  list.push(line(CORRECTION.turnOn, more, coil.turns + 1));
-  if (coil.turns > 2 * SPREAD_TURNS && design.candidate.pitch.kind !== 'groove') {
-    list.push(line(CORRECTION.spreadFinish, spread(coil.turns - SPREAD_TURNS), coil.turns));
-    list.push(line(CORRECTION.spreadStart, spread(1), coil.turns));
-  }
-  const wider = new Coil({ ...coil.shape, meanDiameterMm: coil.shape.meanDiameterMm + 0.1 });
-  list.push(line(CORRECTION.thicker, wider, coil.turns));
-  return list;
 }

@@ -20,7 +20,15 @@ const surveySectionSchema = z.strictObject({
 });
 
 /** What is made for a coil, which one that was found has no part in. */
-const PRINTED = { printer: true, shop: true, wanted: true, parts: true, beds: true } as const;
+const PRINTED = {
+  printer: true,
+  shop: true,
+  wanted: true,
+  parts: true,
+  beds: true,
+  measuring: true,
+  advice: true,
+} as const;
 
 export const surveyRecordSchema = recordSchema.omit(PRINTED).extend({
   verb: z.literal('survey'),

@@ -4,88 +4,149 @@ import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { label, line, SMALL_MM } from '../drawing/shapes.ts';
 import type { CoilRecord, Setting, Tap } from '../record/schema.ts';
-import { type Block, heading, list, paragraph, stack } from './block.ts';
-import { type Column, shares, table } from './table.ts';
-import { figures, fixed, sentence, short, signed } from './text.ts';
+import { type Block, heading, paragraph, stack } from './block.ts';
+import { sectionCells, sectionParts, sectionWords } from './check-blocks-advice.ts';
+import { BLANK, CENTRE, columnsOf, RIGHT, TICK } from './check-blocks-columns.ts';
+import { shares, table } from './table.ts';
+import { figures, fixed, sentence, short } from './text.ts';
+import { lengthCell, lengthCells, lengthHeads, lengthUnit, unitsOf } from './units.ts';
 
-function columnsOf(widthMm: number, parts: readonly (readonly [string, number, Partial<Column>])[]): Column[] {
-  const widths = shares(
-    widthMm,
-    parts.map(([, part]) => part),
-  );
-  return parts.map(([head, , rest], i) => ({ head, widthMm: widths[i]!, ...rest }));
-}
+/** What stands for a range of figures in a narrow column. */
+const between = (low: string, high: string) => `${low}–${high}`;
 
-const RIGHT = { align: 'right' } as const;
-const CENTRE = { align: 'centre' } as const;
-const BLANK = { kind: 'blank', align: 'centre' } as const;
-const TICK = { kind: 'tick', align: 'centre' } as const;
-
+/** What is measured besides the taps. */
 export function checks(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block {
+  const units = unitsOf(record);
   const columns = columnsOf(widthMm, [
-    [CHECKS.what, 74, {}],
-    [CHECKS.low, 18, RIGHT],
-    [CHECKS.nominal, 18, { ...RIGHT, bold: true }],
-    [CHECKS.high, 18, RIGHT],
-    [CHECKS.unit, 14, {}],
-    [CHECKS.reading, 28, BLANK],
-    [CHECKS.good, 16, TICK],
+    [CHECKS.what, 38, {}],
+    [CHECKS.nominal, 13, { ...CENTRE, bold: true }],
+    [CHECKS.limits, 22, CENTRE],
+    [CHECKS.unit, 9, CENTRE],
+    [CHECKS.reading, 18, BLANK],
+    ['', 6, TICK],
   ]);
-  const rows = record.checks.map((check) => [
-    check.what,
-    fixed(check.low, check.digits),
-    fixed(check.nominal, check.digits),
-    fixed(check.high, check.digits),
-    check.unit,
-  ]);
-  return stack([heading(CHECKS.heading, widthMm, measure), table(columns, rows, measure, { rowMm })], 0);
+  const rows = record.checks
+    // Resonances have their rows where they are drawn.
+    .filter(({ unit }) => unit !== 'kHz')
+    .map(({ what, low, nominal, high, unit, digits }) => {
+      const told = (value: number) => (unit === 'mm' ? lengthCells(value, units, { digits }) : [fixed(value, digits)]);
+      const highs = told(high);
+      return [
+        what,
+        told(nominal).join('\n'),
+        told(low)
+          .map((text, i) => between(text, highs[i]!))
+          .join('\n'),
+        (unit === 'mm' ? lengthHeads(units) : [unit]).join('\n'),
+      ];
+    });
+  const body = table(columns, rows, measure, { rowMm, sizeMm: SMALL_MM });
+  return { ...stack([heading(CHECKS.heading, widthMm, measure), body], 0), widthMm };
 }
 
 /** Rows of a table of taps that go on one page at most. */
 const ROWS = 30;
 
-/** Every tap with its limits, in as many tables as go on one page each. */
-export function tapChecks(record: CoilRecord, widthMm: number, rowMm: number, measure: Measure): Block[] {
+/** Every tap with its limits, in as many tables as go on one page each; with what to do about a tap in its row where `advised`. */
+export function tapChecks(
+  record: CoilRecord,
+  widthMm: number,
+  rowMm: number,
+  measure: Measure,
+  advised = false,
+): Block[] {
   const { taps } = record.windings[0]!;
   const parts = Math.ceil(taps.length / ROWS);
   const each = Math.ceil(taps.length / parts);
-  const words = paragraph(CHECKS.limits(dominants(record)), widthMm, measure, { sizeMm: SMALL_MM });
+  const { former } = record;
+  const words = [
+    `${meterWords(record)} ${CHECKS.limitsHold(dominants(record))} ${CHECKS.measureHow}`,
+    `${sentence(former.material)} ${sentence(former.stiffness)}`,
+    ...(advised ? [sectionWords(record)] : []),
+  ].map((text) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM }));
   return Array.from({ length: parts }, (_, i) => {
     const head = heading(i === 0 ? CHECKS.taps : CHECKS.tapsMore, widthMm, measure);
-    const body = [head, tapCheckTable(taps.slice(i * each, (i + 1) * each), widthMm, rowMm, measure)];
-    return stack(i === parts - 1 ? [...body, { ...words, heightMm: words.heightMm + 0.5 }] : body, 0.8);
+    const body = [head, tapCheckTable(record, taps.slice(i * each, (i + 1) * each), widthMm, rowMm, measure, advised)];
+    return stack(i === parts - 1 ? [stack(body, 0), stack(words, 0.3)] : body, 0.8);
   });
 }
 
-function tapCheckTable(taps: readonly Tap[], widthMm: number, rowMm: number, measure: Measure): Block {
-  const ranged = taps.some((tap) => tap.range !== null);
+/** Limits of what the meter shows; in brackets where it is not to be trusted. */
+function meterCell({ lowUh, highUh, doubt }: CoilRecord['measuring']['meter'][number]): string {
+  if (lowUh === null || highUh === null) return CHECKS.none;
+  const text = between(figures(lowUh), figures(highUh));
+  return doubt === null ? text : `(${text})`;
+}
+
+/** The known capacitor that taps are measured with: the largest, beside which strays count least. */
+export const tapCapacitorPf = (record: CoilRecord): number | null => record.shop.capacitorsPf.at(-1) ?? null;
+
+function tapCheckTable(
+  record: CoilRecord,
+  taps: readonly Tap[],
+  widthMm: number,
+  rowMm: number,
+  measure: Measure,
+  advised: boolean,
+): Block {
+  const { measuring, shop } = record;
+  const read = advised ? 12 : 14;
+  const units = unitsOf(record);
+  const pf = tapCapacitorPf(record);
+  const lengths =
+    units === 'both' ? [CHECKS.lengthIn('mm'), CHECKS.lengthIn('in')] : [CHECKS.lengthIn(lengthUnit(units))];
   const columns = columnsOf(widthMm, [
-    ['tap', 10, { ...CENTRE, bold: true }],
-    [CHECKS.deviation, 14, RIGHT],
-    [CHECKS.length, 18, RIGHT],
-    [CHECKS.reading, 19, BLANK],
-    [CHECKS.inductance, 30, CENTRE],
-    [CHECKS.reading, 20, BLANK],
-    [CHECKS.resistance, 32, CENTRE],
-    [CHECKS.reading, 20, BLANK],
-    ...(ranged ? ([[CHECKS.range, 26, CENTRE]] as const) : []),
-    [CHECKS.good, 13, TICK],
+    [CHECKS.tap, 8, { ...CENTRE, bold: true }],
+    ...lengths.map((head) => [head, 24, CENTRE] as const),
+    [CHECKS.read, read, BLANK],
+    [CHECKS.resistance, 22, CENTRE],
+    [CHECKS.read, read, BLANK],
+    [CHECKS.meterShows(short(shop.meterKhz, 3)), 22, CENTRE],
+    [CHECKS.read, read, BLANK],
+    ...(pf === null
+      ? []
+      : ([
+          [CHECKS.resonance(short(pf, 3)), 20, CENTRE],
+          [CHECKS.read, read, BLANK],
+        ] as const)),
+    [CHECKS.good, advised ? 7 : 9, TICK],
+    ...(advised ? sectionParts(record) : []),
   ]);
-  const rows = taps.map((tap) => {
-    const cells = [
-      `${tap.tap}`,
-      signed(tap.deviationPercent, 2),
-      fixed(tap.woundLengthMm, 2),
+  const rows = taps.map(({ tap, resistanceLowOhm, resistanceHighOhm }) => {
+    const { lowMm, highMm } = measuring.lengths[tap - 1]!;
+    const high = lengthCells(highMm, units);
+    const found = measuring.resonances.find((one) => one.tap === tap && one.capacitancePf === pf);
+    return [
+      `${tap}`,
+      ...lengthCells(lowMm, units).map((low, i) => between(low, high[i]!)),
       '',
-      CHECKS.between(figures(tap.inductanceLowUh), figures(tap.inductanceHighUh)),
+      between(ohms(resistanceLowOhm), ohms(resistanceHighOhm)),
       '',
-      CHECKS.between(figures(tap.resistanceLowOhm), figures(tap.resistanceHighOhm)),
+      meterCell(measuring.meter[tap - 1]!),
       '',
+      ...(found === undefined ? [] : [between(kiloHertz(found.lowKhz), kiloHertz(found.highKhz)), '']),
+      '',
+      ...(advised ? sectionCells(record, tap) : []),
     ];
-    if (ranged) cells.push(tap.range ? CHECKS.between(fixed(tap.range.lowKhz, 0), fixed(tap.range.highKhz, 0)) : '');
-    return cells;
   });
-  return table(columns, rows, measure, { rowMm });
+  return table(columns, rows, measure, { rowMm, sizeMm: SMALL_MM });
+}
+
+/** Thousandths, or four figures when there are fewer than those. */
+const ohms = (value: number) => fixed(value, value < 0.1 ? 4 : value < 10 ? 3 : value < 100 ? 2 : 1);
+/** To a thousandth at least. */
+export const kiloHertz = (value: number) => fixed(value, value < 100 ? 2 : value < 1000 ? 1 : 0);
+
+/** Which meter, where it can be trusted, and what to take where it cannot. */
+function meterWords(record: CoilRecord): string {
+  const { measuring, shop } = record;
+  const { meter, fromTap, toTap } = measuring;
+  const name = CHECKS.meter(shop.meterName, short(shop.meterKhz, 3), short(100 * shop.meterAccuracy, 3));
+  const where = fromTap === null ? CHECKS.nowhere : CHECKS.trusted(fromTap, toTap!, meter.length);
+  const doubts = [...new Set(meter.flatMap(({ doubt }) => doubt ?? []))];
+  if (doubts.length === 0) return `${name} ${where}`;
+  const why = doubts.map((doubt) => CHECKS.doubts[doubt](short(measuring.leadUh, 3))).join('; ');
+  return `${name} ${where} ${CHECKS.brackets(why)} ${shop.capacitorsPf.length > 0 ? CHECKS.insteadResonance : CHECKS.instead}`;
 }
 
 /** What makes the limits wide, with the taps where it does: `pitch (taps 1 to 3), former diameter (tap 4)`. */
@@ -147,42 +208,26 @@ function settingsOf(
   return stack(isLast ? [...body, how] : body, 0.5);
 }
 
-export function corrections(record: CoilRecord, widthMm: number, measure: Measure): Block {
-  const columns = columnsOf(widthMm, [
-    [CHECKS.doing, 70, {}],
-    [CHECKS.whole, 16, RIGHT],
-    [CHECKS.first, 15, RIGHT],
-  ]);
-  const rows = record.corrections.map((each) => [
-    each.doing,
-    signed(each.wholePercent, 2),
-    signed(each.firstTapPercent, 2),
-  ]);
-  const how = paragraph(CHECKS.correctionsHow, widthMm, measure, { sizeMm: SMALL_MM });
-  return stack([heading(CHECKS.corrections, widthMm, measure), table(columns, rows, measure), how], 1);
-}
-
+/** Sizes of the former as it should come out. */
 export function formerSizes(record: CoilRecord, widthMm: number, measure: Measure): Block {
   const { former } = record;
+  const units = unitsOf(record);
+  const size = (mm: number) => lengthCell(mm, units);
   const rows: [string, string][] = [
-    [CHECKS.outside, fixed(former.outsideDiameterMm, 2)],
-    [CHECKS.length2, fixed(former.lengthMm, 2)],
-    [CHECKS.bore, fixed(former.boreDiameterMm, 2)],
+    [CHECKS.length, size(former.lengthMm)],
+    [CHECKS.bore, size(former.boreDiameterMm)],
     former.ribs === null
-      ? [CHECKS.wall, fixed(former.wallMm, 2)]
-      : [CHECKS.ribSize, `${fixed(former.ribs.widthMm, 2)} x ${fixed(former.ribs.depthMm, 2)}`],
+      ? [CHECKS.wall, size(former.wallMm)]
+      : [CHECKS.ribSize, `${size(former.ribs.widthMm)} × ${size(former.ribs.depthMm)}`],
   ];
-  if (former.flange) rows.push([CHECKS.rim, fixed(former.flange.diameterMm, 2)]);
-  if (former.groove) rows.push([former.ribs === null ? CHECKS.groove : CHECKS.notch, fixed(former.groove.depthMm, 2)]);
+  if (former.flange) rows.push([CHECKS.rim, size(former.flange.diameterMm)]);
+  if (former.groove) rows.push([former.ribs === null ? CHECKS.groove : CHECKS.notch, size(former.groove.depthMm)]);
   const columns = columnsOf(widthMm, [
-    [CHECKS.part, 36, {}],
-    [CHECKS.mm, 18, { ...RIGHT, bold: true }],
+    [CHECKS.part, 30, {}],
+    [lengthUnit(units), 30, { ...RIGHT, bold: true }],
     [CHECKS.reading, 24, BLANK],
   ]);
-  const what = paragraph(`${sentence(former.material)} ${sentence(former.stiffness)}`, widthMm, measure, {
-    sizeMm: SMALL_MM,
-  });
-  return stack([heading(CHECKS.former, widthMm, measure), table(columns, rows, measure), what], 1);
+  return stack([heading(CHECKS.former, widthMm, measure), table(columns, rows, measure, { sizeMm: SMALL_MM })], 0);
 }
 
 export function signature(widthMm: number, measure: Measure): Block {
@@ -196,49 +241,4 @@ export function signature(widthMm: number, measure: Measure): Block {
     x += widths[i]!;
   });
   return { widthMm, heightMm, shapes };
-}
-
-export function reasons(record: CoilRecord, widthMm: number, measure: Measure): Block {
-  const { chosen } = record;
-  const first = CHECKS.chosen(chosen.prefer, `${chosen.tried}`, `${chosen.feasible}`);
-  const text = paragraph(`${first} ${sentence(chosen.why)}`, widthMm, measure);
-  return stack([heading(CHECKS.why, widthMm, measure), text], 0);
-}
-
-export function alternatives(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
-  if (record.alternatives.length === 0) return null;
-  const columns = columnsOf(widthMm, [
-    [CHECKS.wire, 46, {}],
-    [CHECKS.formerMm, 14, RIGHT],
-    [CHECKS.pitch, 21, RIGHT],
-    [CHECKS.turns, 13, RIGHT],
-    [CHECKS.windingMm, 13, RIGHT],
-    [CHECKS.wireM, 14, RIGHT],
-    [CHECKS.worst, 13, RIGHT],
-    [CHECKS.loss, 15, RIGHT],
-    [CHECKS.better, 42, {}],
-  ]);
-  const rows = record.alternatives.map((each) => [
-    each.wire,
-    short(each.formerMm, 2),
-    `${short(each.pitchMm, 3)} ${each.pitchKind}`,
-    short(each.turns, 2),
-    fixed(each.lengthMm, 1),
-    fixed(each.wireM, 2),
-    fixed(each.worstTapPercent, 2),
-    fixed(each.lossFactor, 5),
-    each.betterIn.join(', '),
-  ]);
-  const body = table(columns, rows, measure, { sizeMm: SMALL_MM, rowMm: 4.8 });
-  return stack([heading(CHECKS.alternatives, widthMm, measure), body], 0);
-}
-
-export function warnings(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
-  if (record.warnings.length === 0) return null;
-  const items = list(
-    record.warnings.map((each) => ({ mark: '•', text: each.text })),
-    widthMm,
-    measure,
-  );
-  return stack([heading(CHECKS.warnings, widthMm, measure), ...items], 0.5);
 }

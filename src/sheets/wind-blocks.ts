@@ -7,31 +7,45 @@ import { elevation, elevationScale, scaleText } from '../drawing/elevation.ts';
 import { endView, isStaggered } from '../drawing/end-view.ts';
 import { BODY_MM, CAP_SHARE, label, line, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
 import { PANEL_MM, panelHeight, tapPicture } from '../drawing/tap-picture.ts';
+import { BARING_MM, baringPicture, coveringKind } from '../drawing/tap-picture-end.ts';
 import { ribName } from '../record/rib-name.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Block, beside, columns, heading, list, paragraph, stack, tickBox } from './block.ts';
 import { type Column, NO_BOX, shares, table } from './table.ts';
 import { figures, fixed, short } from './text.ts';
+import {
+  forcesText,
+  lengthCell,
+  lengthHeads,
+  lengthText,
+  lengthUnit,
+  unitsOf,
+  wireCell,
+  wireText,
+  wireUnit,
+} from './units.ts';
 
 /** Wire, winding, pitch, tension, what to have ready, the whole coil: one strip. */
 export function facts(record: CoilRecord, widthMm: number, measure: Measure): Block {
   const winding = record.windings[0]!;
   const { wire } = winding;
+  const units = unitsOf(record);
+  const named = (mm: number) => lengthText(mm, units, { digits: 3, trim: true });
   const pitchWords =
     winding.pitchKind === 'close'
       ? FACTS.close
       : winding.pitchKind === 'groove'
         ? FACTS.groove
-        : FACTS.spacer(winding.spacerName, short(winding.spacerMm, 3));
+        : FACTS.spacer(winding.spacerName, named(winding.spacerMm));
   const cells: [string, string, string][] = [
-    [FACTS.wire, wire.name, FACTS[wire.covering === 'bare' ? 'uncovered' : 'overall'](short(wire.overallMm, 3))],
+    [FACTS.wire, wire.name, FACTS[wire.covering === 'bare' ? 'uncovered' : 'overall'](named(wire.overallMm))],
     [FACTS.winding, FACTS.turns(short(winding.turns, 3)), FACTS.hand[record.frame.hand]],
-    [FACTS.pitch, `${short(winding.pitchMm, 4)} mm`, pitchWords],
-    [FACTS.tension, FACTS.newton(short(winding.tensionLowN, 1), short(winding.tensionHighN, 1)), FACTS.steady],
+    [FACTS.pitch, lengthText(winding.pitchMm, units, { digits: units === 'metric' ? 4 : 3, trim: true }), pitchWords],
+    [FACTS.tension, forcesText([winding.tensionLowN, winding.tensionHighN], units), FACTS.steady],
     [
       FACTS.cut,
-      `${fixed(winding.wireLengthM + winding.leadsM, 2)} m`,
-      FACTS.ends(short(winding.leadsM, 2), fixed(winding.wireMassG, 1)),
+      wireText(winding.wireLengthM + winding.leadsM, units),
+      FACTS.ends(wireText(winding.leadsM, units, 1), fixed(winding.wireMassG, 1)),
     ],
     [FACTS.coil, `${figures(winding.inductanceUh)} µH`, FACTS.low],
   ];
@@ -60,8 +74,10 @@ export function facts(record: CoilRecord, widthMm: number, measure: Measure): Bl
 /** The coil to scale, with what must be said about the frame. */
 export function coilDrawing(record: CoilRecord, widthMm: number, highMm: number, measure: Measure): Block {
   const words = { ...DRAWING };
-  const scale = elevationScale(record, widthMm, highMm, words, measure);
-  const picture = elevation(record, scale, words, measure);
+  const units = unitsOf(record);
+  const length = (mm: number) => lengthCell(mm, units);
+  const scale = elevationScale(record, widthMm, highMm, words, measure, length);
+  const picture = elevation(record, scale, words, measure, length);
   const head = heading(DRAWING.heading(scaleText(scale)), widthMm, measure);
   const spare = Math.max(0, widthMm - picture.leftMm - picture.rightMm);
   const drawn: Block = {
@@ -72,7 +88,7 @@ export function coilDrawing(record: CoilRecord, widthMm: number, highMm: number,
   const words8 = (text: string, bold = false) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM, bold });
   const notes = [
     words8(`${DRAWING.hand[record.frame.hand]} ${DRAWING.earthed[record.frame.earthedEnd]}`, true),
-    words8(`${DRAWING.seen} ${DRAWING.datumIs(record.frame.datum)}`),
+    words8(`${DRAWING.seen(lengthUnit(units))} ${DRAWING.datumIs(record.frame.datum)}`),
   ];
   return stack([head, drawn, ...notes], 1);
 }
@@ -94,8 +110,14 @@ export function tapTable(
   measure: Measure,
   from = 0,
   to = tapRows(record),
+  sizeMm: number = BODY_MM,
 ): Block {
   const { taps, unitTaps = [] } = record.windings[0]!;
+  const units = unitsOf(record);
+  // Both units take room: there thousandths of an inch do, and the angle tells what a hundredth of a turn leaves out.
+  const both = units === 'both';
+  const heights = (mm: number) =>
+    both ? [lengthCell(mm, 'metric'), lengthCell(mm, 'inch', { digits: 1 })] : [lengthCell(mm, units)];
   const stepOf = new Map(record.steps.map((step) => [step.unit === undefined ? step.tap : `u${step.unit}`, step]));
   const parts: readonly (readonly [string, number, Partial<Column>])[] = [
     [TAPS.step, 8, {}],
@@ -103,9 +125,9 @@ export function tapTable(
     [TAPS.tap, 7, { align: 'centre', bold: true }],
     [TAPS.turn, 15, { bold: true }],
     [record.former.ribs === null ? TAPS.angle : TAPS.rib, 12, { bold: true }],
-    [TAPS.position, 13, {}],
+    ...lengthHeads(units).map((unit, i) => [i === 0 ? TAPS.positionIn(unit) : unit, 13, {}] as const),
     [TAPS.inductance, 13, {}],
-    [TAPS.wire, 13, {}],
+    [TAPS.wireIn(wireUnit(both ? 'metric' : units)), 13, {}],
   ];
   const widths = shares(
     widthMm,
@@ -122,16 +144,16 @@ export function tapTable(
       step ? `${step.step}` : '',
       step?.kind === 'tap' ? '' : NO_BOX,
       `${tap.key}`,
-      short(tap.turn, 3),
+      short(tap.turn, both ? 2 : 3),
       ribName(record.former, tap.angleDeg) ?? fixed(tap.angleDeg, 1),
-      fixed(tap.positionMm, 2),
+      ...heights(tap.positionMm),
       figures(tap.inductanceUh),
-      fixed(tap.wireFromStartM, 2),
+      wireCell(tap.wireFromStartM, both ? 'metric' : units),
     ];
   });
   const columnsOf = parts.map(([head, , more], i) => ({ head, widthMm: widths[i]!, align: 'right' as const, ...more }));
   const head = heading(from === 0 ? TAPS.heading : TAPS.more, widthMm, measure);
-  const whole = stack([head, table(columnsOf, rows, measure, { rowMm })], 0);
+  const whole = stack([head, table(columnsOf, rows, measure, { rowMm, sizeMm: both ? SMALL_MM : sizeMm })], 0);
   if (unitTaps.length === 0 || to < made.length) return whole;
   return stack([whole, paragraph(TAPS.switches, widthMm, measure, { sizeMm: SMALL_MM })], 0.8);
 }
@@ -150,8 +172,8 @@ export function tapAngles(record: CoilRecord, widthMm: number, measure: Measure)
   return { ...stack([heading(DRAWING.above, widthMm, measure), beside([words, drawn], 4)], 0), widthMm };
 }
 
-/** The tap of this coil, drawn, and how it is made. */
-export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure): Block {
+/** The tap of this coil, drawn, and how it is made; in `brief` the words under the pictures do. */
+export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure, brief = false): Block {
   const method = record.tapMethod;
   const { wire } = record.windings[0]!;
   const panels = TAP_WORDS.STAGES[method.name].map((words, i) => {
@@ -165,15 +187,23 @@ export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure)
     return { ...stack([drawn, under], 0.8), widthMm: PANEL_MM.width };
   });
   const how = list(
-    [
-      ...method.how.map((text, i) => ({ mark: `${i + 1}.`, text })),
-      { mark: '•', text: TAP_WORDS.baring(wire.covering, wire.strands, wire.solderable) },
-    ],
+    (brief ? [] : method.how).map((text, i) => ({ mark: `${i + 1}.`, text })),
     widthMm,
     measure,
   );
+  const bared: Block = {
+    widthMm: BARING_MM.width,
+    heightMm: BARING_MM.height,
+    shapes: movedAll(baringPicture(coveringKind(wire)), 0, -BARING_MM.height),
+  };
+  const baring = paragraph(
+    TAP_WORDS.baring(wire.covering, wire.strands, wire.solderable),
+    widthMm - BARING_MM.width - 3,
+    measure,
+    { sizeMm: SMALL_MM },
+  );
   const head = heading(TAP_WORDS.HEADING[method.name], widthMm, measure);
-  return { ...stack([head, beside(panels, 0.5), ...how], 0.8), widthMm };
+  return { ...stack([head, beside(panels, 0.5), ...how, beside([bared, baring], 3)], 0.8), widthMm };
 }
 
 /** The other steps, each with its box and number; steps that are rows of the tap table are named in their place. */

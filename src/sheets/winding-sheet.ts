@@ -9,6 +9,8 @@ import { BODY_MM, moved, SMALL_MM } from '../drawing/shapes.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Block, beside, columns, heading, stack } from './block.ts';
 import * as check from './check-blocks.ts';
+import * as advice from './check-blocks-advice.ts';
+import { twoCapacitors } from './check-blocks-line.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
 import { titleBlock } from './title-block.ts';
 import * as wind from './wind-blocks.ts';
@@ -114,6 +116,7 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
   const strip = wind.facts(record, room.widthMm, measure);
   const free = room.heightMm - strip.heightMm - GAP;
   const method = wind.tapMethod(record, column, measure);
+  const brief = wind.tapMethod(record, column, measure, true);
   const angles = present(wind.tapAngles(record, column, measure));
   const wide = wind.cautions(record, room.widthMm, 2, measure);
   const narrow = wind.cautions(record, column, 1, measure);
@@ -131,7 +134,7 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
   };
   for (const { rowMm, gapMm, sizeMm } of CLOSENESS) {
     const items = wind.stepItems(record, column, measure, sizeMm);
-    const taps = wind.tapTable(record, column, rowMm, measure);
+    const taps = wind.tapTable(record, column, rowMm, measure, 0, undefined, sizeMm);
     const steps = stepsBlock(items, STEPS.heading, 1, gapMm, measure);
     for (const size of DRAWING_MM.keys()) {
       const drawing = drawingOf(size);
@@ -142,6 +145,19 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
         { left: [drawing, method, narrow], right: [taps, ...angles, steps] },
         { left: [drawing, method, ...angles, narrow], right: [taps, steps] },
         { left: [drawing, ...angles, narrow], right: [taps, steps, method] },
+        { left: [drawing, taps], right: [steps, method, ...angles], foot: wide },
+        { left: [drawing, taps, ...angles], right: [steps, method], foot: wide },
+        // The pictures alone tell how a tap is made, when there is no room for more.
+        ...(sizeMm === SMALL_MM
+          ? [
+              { left: [drawing, brief, ...angles], right: [taps, steps], foot: wide },
+              { left: [drawing, brief], right: [taps, ...angles, steps], foot: wide },
+              { left: [drawing, taps], right: [steps, brief, ...angles], foot: wide },
+              { left: [drawing, taps, ...angles], right: [steps, brief], foot: wide },
+              { left: [drawing, taps], right: [steps, brief, ...angles, narrow] },
+              { left: [drawing, brief, narrow], right: [taps, ...angles, steps] },
+            ]
+          : []),
       ];
       const found = whole.find((each) => fits(each, free));
       if (found) return [page(found)];
@@ -182,26 +198,58 @@ function toWindFrom(record: CoilRecord, room: Room, measure: Measure): Body[] {
   return bodies;
 }
 
-/** What is measured and what to do about it; then why the coil is as it is. */
-function checkBlocks(record: CoilRecord, room: Room, rowMm: number, measure: Measure): [Block[], Block[]] {
-  const { widthMm } = room;
-  const left = (widthMm - COLUMN_GAP) * 0.6;
-  const doing = { ...check.corrections(record, left, measure), widthMm: left };
-  const former = check.formerSizes(record, widthMm - COLUMN_GAP - left, measure);
-  return [
-    [
-      check.checks(record, widthMm, rowMm, measure),
-      ...check.tapChecks(record, widthMm, rowMm, measure),
-      ...check.settings(record, widthMm, Math.min(rowMm, 5.2), measure),
-      beside([doing, former], COLUMN_GAP),
-      check.signature(widthMm, measure),
-    ],
-    [
-      check.reasons(record, widthMm, measure),
-      ...present(check.alternatives(record, widthMm, measure)),
-      ...present(check.warnings(record, widthMm, measure)),
-    ],
-  ];
+/** How the page to check by is set, the widest first: a row to write in, and the graph. */
+const CHECK_SIZES = [
+  { rowMm: 6.6, graphMm: 58 },
+  { rowMm: 6.6, graphMm: 48 },
+  { rowMm: 6, graphMm: 42 },
+  { rowMm: 5.4, graphMm: 36 },
+  { rowMm: 4.9, graphMm: 36 },
+  { rowMm: 4.9, graphMm: 30 },
+  { rowMm: 4.8, graphMm: 25 },
+  { rowMm: 4.8, graphMm: 21 },
+] as const;
+/** Share of the width that the left column takes. */
+const CHECK_SHARE = 0.48;
+
+/** Taps whose advice goes into their rows, where one unit of length leaves the room. */
+const ADVISED_FROM = 9;
+
+/** The page to check by: the taps over the whole width, below them two columns. Null when one page does not hold it. */
+function checkPage(record: CoilRecord, room: Room, measure: Measure): Body | null {
+  const many = record.windings[0]!.taps.length >= ADVISED_FROM && record.units !== 'both';
+  return (
+    (many ? null : checkPageWith(record, room, measure, false)) ??
+    (record.units === 'both' ? null : checkPageWith(record, room, measure, true))
+  );
+}
+
+function checkPageWith(record: CoilRecord, room: Room, measure: Measure, advised: boolean): Body | null {
+  const settings = check.settings(record, room.widthMm, 4.9, measure);
+  const sign = check.signature(room.widthMm, measure);
+  const left = (room.widthMm - COLUMN_GAP) * CHECK_SHARE;
+  const right = room.widthMm - COLUMN_GAP - left;
+  const doing = advice.corrections(record, right, measure);
+  const sections = advised ? [] : advice.sections(record, right, measure);
+  const sizes = check.formerSizes(record, left, measure);
+  for (const { rowMm, graphMm } of CHECK_SIZES) {
+    const wide = [...check.tapChecks(record, room.widthMm, rowMm, measure, advised), ...settings];
+    const free = room.heightMm - height(wide) - sign.heightMm - 2 * GAP;
+    if (free < 0) continue;
+    const before = check.checks(record, left, rowMm, measure);
+    const line = twoCapacitors(record, left, graphMm, measure);
+    const tries: Arrangement[] = [
+      { left: [before, ...line, sizes], right: [doing, ...sections] },
+      { left: [...line, sizes], right: [check.checks(record, right, rowMm, measure), doing, ...sections] },
+      { left: [before, ...line], right: [doing, ...sections] },
+      { left: line, right: [check.checks(record, right, rowMm, measure), doing, ...sections] },
+    ];
+    const found = tries.find((each) => fits(each, free));
+    if (!found) continue;
+    const columns = beside([{ ...stack(found.left, GAP), widthMm: left }, stack(found.right, GAP)], COLUMN_GAP);
+    return { part: TITLE.check, blocks: [...wide, columns], foot: sign };
+  }
+  return null;
 }
 
 /** Blocks over as many pages as they need. */
@@ -220,19 +268,24 @@ function flow(blocks: readonly Block[], first: string, more: string, heightMm: n
   return bodies;
 }
 
-/** Page 2; what explains the coil moves to a page of its own when rows to write in would become too low. */
+/** Page 2; with more taps than it holds, as many pages as they need: the taps first, then what to do about them. */
 function toCheckBy(record: CoilRecord, room: Room, measure: Measure): Body[] {
-  const set = (rowMm: number) => checkBlocks(record, room, rowMm, measure);
-  for (const rowMm of [7, 6.4, 5.8, 5.2]) {
-    const blocks = set(rowMm).flat();
-    if (height(blocks) <= room.heightMm) return [{ part: TITLE.check, blocks }];
-  }
-  const rowMm = [7.5, 7, 6.4, 5.8, 5.2].find((row) => height(set(row)[0]) <= room.heightMm) ?? 6.4;
-  const [measured, explained] = set(rowMm);
-  return [
-    ...flow(measured, TITLE.check, TITLE.checkMore, room.heightMm),
-    ...flow(explained, TITLE.why, TITLE.why, room.heightMm),
+  const page = checkPage(record, room, measure);
+  if (page !== null) return [page];
+  const half = (room.widthMm - COLUMN_GAP) / 2;
+  const { rowMm, graphMm } = CHECK_SIZES[2];
+  const blocks = [
+    ...check.tapChecks(record, room.widthMm, CHECK_SIZES[3].rowMm, measure),
+    ...check.settings(record, room.widthMm, 5.2, measure),
+    ...pairs([
+      stack([check.checks(record, half, rowMm, measure), check.formerSizes(record, half, measure)], GAP),
+      stack(twoCapacitors(record, half, graphMm, measure), GAP),
+    ]).map((pair) => beside(pair, COLUMN_GAP)),
+    advice.corrections(record, room.widthMm, measure),
+    ...advice.sections(record, room.widthMm, measure),
+    check.signature(room.widthMm, measure),
   ];
+  return flow(blocks, TITLE.check, TITLE.checkMore, room.heightMm);
 }
 
 /** The pages as drawings. */

@@ -6,7 +6,6 @@ export const TITLE = {
   more: 'to wind from, continued',
   check: 'to check by',
   checkMore: 'to check by, continued',
-  why: 'why this coil',
   job: 'job',
   sheet: (n: number, of: number) => `sheet ${n} of ${of}`,
   record: (hash: string) => `record ${hash}`,
@@ -15,8 +14,8 @@ export const TITLE = {
 
 export const FACTS = {
   wire: 'Wire',
-  overall: (mm: string) => `${mm} mm over the covering`,
-  uncovered: (mm: string) => `${mm} mm thick`,
+  overall: (length: string) => `${length} over the covering`,
+  uncovered: (length: string) => `${length} thick`,
   winding: 'Winding',
   turns: (turns: string) => `${turns} turns`,
   hand: { right: 'right-hand', left: 'left-hand' },
@@ -24,12 +23,12 @@ export const FACTS = {
   close: 'close wound, turn against turn',
   groove: 'in the groove of the former',
   /** Lines are named by their size, threads are not. */
-  spacer: (name: string, mm: string) => `spacer: ${name}${name.endsWith(' mm') ? '' : `, ${mm} mm`}`,
+  spacer: (name: string, length: string) =>
+    `spacer: ${name}${name.endsWith(' mm') && length.endsWith(' mm') ? '' : `, ${length}`}`,
   tension: 'Tension',
-  newton: (low: string, high: string) => `${low} to ${high} N`,
   steady: 'steady, from start to finish',
   cut: 'Wire to have ready',
-  ends: (metres: string, grams: string) => `${metres} m of it in the two ends; ${grams} g`,
+  ends: (wire: string, grams: string) => `${wire} of it in the two ends; ${grams} g`,
   former: 'Former',
   coil: 'Whole coil',
   low: 'at low frequency',
@@ -45,7 +44,8 @@ export const DRAWING = {
   leftHand: 'left-hand',
   seam: 'seam',
   heading: (scale: string) => `The coil, scale ${scale}`,
-  seen: 'Start hole in front. Dots: full on this side, hollow behind. Heights: mm from the datum to the wire centre.',
+  seen: (unit: string) =>
+    `Start hole in front. Dots: full on this side, hollow behind. Heights: ${unit} from the datum to the wire centre.`,
   hand: {
     right: 'Climbs to the right on this side.',
     left: 'Climbs to the left on this side.',
@@ -66,12 +66,11 @@ export const TAPS = {
   done: '',
   tap: 'tap',
   turn: 'turn',
-  position: 'height mm',
+  positionIn: (unit: string) => `height ${unit}`,
   angle: 'angle °',
   rib: 'rib',
   inductance: 'µH',
-  deviation: 'off %',
-  wire: 'wire m',
+  wireIn: (unit: string) => `wire ${unit}`,
   switches: 'u1, u2, ...: units switch, with S as its 0. Numbers: tens switch. µH: from the start S.',
 } as const;
 
@@ -85,22 +84,42 @@ export const STEPS = {
 export const CAUTIONS = { heading: 'Take care' } as const;
 
 export const CHECKS = {
-  heading: 'Measure and write down',
+  heading: 'Before and while winding',
   what: 'what',
-  low: 'low',
   nominal: 'nominal',
-  high: 'high',
+  limits: 'limits',
   unit: 'unit',
   reading: 'reading',
+  read: 'read',
   good: 'in limits',
+  none: '–',
+  tap: 'tap',
   taps: 'Every tap, measured from the start S',
   tapsMore: 'Every tap, continued',
-  deviation: 'off target %',
-  length: 'wound length mm',
-  inductance: 'inductance µH',
-  resistance: 'DC resistance Ω at 20 °C',
-  range: 'tunes kHz',
-  limits: (inputs: string) => `Limits hold for 95 of 100 coils. What widens them most: ${inputs}.`,
+  lengthIn: (unit: string) => `wound length ${unit}`,
+  resistance: 'DC Ω at 20 °C',
+  meterShows: (kHz: string) => `meter µH at ${kHz} kHz`,
+  resonance: (pf: string) => `kHz with ${pf} pF`,
+  meter: (name: string | null, kHz: string, percent: string) => `${name ?? 'Meter'} at ${kHz} kHz, ± ${percent} %:`,
+  nowhere: 'not to be trusted on this coil.',
+  trusted: (from: number, to: number, of: number) => {
+    if (from === 1 && to === of) return of === 1 ? 'can be trusted.' : 'can be trusted on every tap.';
+    if (to === of)
+      return from === of ? 'can be trusted on the whole coil only.' : `can be trusted from tap ${from} on.`;
+    return from === to ? `can be trusted on tap ${from} only.` : `can be trusted on taps ${from} to ${to}.`;
+  },
+  brackets: (why: string) => `In brackets where not: ${why}.`,
+  doubts: {
+    leads: (uh: string) => `its leads, ± ${uh} µH after zeroing, weigh more than its accuracy`,
+    resistance: () => 'it sees more resistance than reactance, Q is below 1',
+    capacitance: () => 'it measures too near the resonance of the coil with itself',
+  },
+  insteadResonance: 'Measure resonance there.',
+  instead:
+    'Measure resonance with a known capacitor there, or take an instrument with four wires and a higher frequency.',
+  limitsHold: (inputs: string) => `Limits hold for 95 of 100 coils; widened most by ${inputs}.`,
+  measureHow:
+    'S on the earthy terminal, turns beyond the tap open, a diameter clear all round; leads zeroed. Four wires below 1 Ω. Resonance: couple loosely, no probe on the coil.',
   dominant: (input: string, first: number, last: number) =>
     first === last ? `${input} (tap ${first})` : `${input} (taps ${first} to ${last})`,
   between: (low: string, high: string) => `${low} – ${high}`,
@@ -114,36 +133,75 @@ export const CHECKS = {
   step: 'step %',
   q: 'Q, unit 0',
   atKhz: 'at kHz',
-  corrections: 'When it reads high or low',
-  correctionsHow:
-    'A reading that is too high wants a line with a minus, one too low a line with a plus. Measure again after each.',
-  doing: 'what to do',
-  whole: 'whole coil %',
-  first: 'first tap %',
+  range: 'tunes kHz',
   former: 'Former, before winding',
   part: 'size',
-  mm: 'mm',
-  outside: 'outside diameter',
   bore: 'bore',
   wall: 'wall',
-  ribSize: 'ribs, width x depth',
+  ribSize: 'ribs, width × depth',
   notch: 'depth of the notches',
-  length2: 'length, foot to top',
+  length: 'length, foot to top',
   rim: 'rim diameter',
   groove: 'depth of the groove',
   signature: ['wound by', 'date', 'checked by', 'date', 'coil no.'],
-  why: 'Why this coil',
-  chosen: (prefer: string, tried: string, feasible: string) =>
-    `Chosen for ${prefer}: ${tried} coils were tried, ${feasible} met the demands.`,
-  alternatives: 'Other coils that meet the demands',
-  wire: 'wire',
-  formerMm: 'former ⌀ mm',
-  pitch: 'pitch mm',
-  turns: 'turns',
-  windingMm: 'length mm',
-  wireM: 'wire m',
-  worst: 'worst tap %',
-  loss: 'loss 1/Q',
-  better: 'better in',
-  warnings: 'Note',
+} as const;
+
+export const ADVICE = {
+  heading: 'The whole coil reads high or low',
+  doing: 'what to do',
+  /** Of the meter, on the whole coil. */
+  when: 'when it shows µH',
+  tapPercent: (tap: number) => `tap ${tap} %`,
+  whole: 'whole %',
+  over: (uh: string) => `over ${uh}`,
+  under: (uh: string) => `under ${uh}`,
+  never: '–',
+  between: (low: string, high: string) => `${low}–${high}`,
+  how: (low: string, high: string) => `From ${low} to ${high} µH leave it. Measure again after each.`,
+  howNoMeter:
+    'The meter is not to be trusted here: go by the resonance. 1 % more inductance is 0.5 % less frequency. Take the line that comes nearest, measure again after each.',
+  sections: 'One tap reads high or low',
+  sectionsMore: 'One tap, continued',
+  tap: 'tap',
+  aTurn: 'turn ∓ %',
+  countAgain: 'count again outside µH',
+  longer: (length: string) => `+${length} %`,
+  degrees: '°/%',
+  /** The first tap that is out names the section. */
+  sectionsHow:
+    'The first tap from S that is out names the section: the one that ends there. Out by more than half of what a turn less or more does (turn ∓): count again.',
+  /** What the section itself allows. */
+  tight: {
+    groove: 'Else look for a turn out of the groove or slack, or a tap in the wrong place.',
+    close: 'Else it is tight when it reads high, loose when low: ease or press its turns.',
+    spacer: 'Else it is tight when it reads high, loose when low: ease or press its turns.',
+  },
+  /** Whether a tap of this kind can be moved. */
+  move: {
+    'twisted loop':
+      'Or, before it is soldered, wind back and twist the tap anew, moved by °/%: back towards S when high, on when low.',
+    'lifted turn': 'Or move the strip along the turn by °/%: back towards S when high, on when low.',
+    'cut pair': 'Its holes hold the tap; on the next former move it by °/%, back towards S when high, on when low.',
+    lug: 'Or slide the lug along the turn by °/%: back towards S when high, on when low.',
+    'drawn in': 'Its hole holds the tap; on the next former move it by °/%, back towards S when high, on when low.',
+  },
+} as const;
+
+export const LINE = {
+  heading: 'L and own capacitance by two capacitors',
+  across: 'added pF',
+  up: '1/f² in 1/MHz²',
+  capacitor: 'pF',
+  expected: 'kHz',
+  limits: 'limits kHz',
+  reading: 'f kHz',
+  square: '(1000/f)²',
+  /** y is (1000/f)². */
+  formula: (factor: string) => [`L = ${factor} × (y₂ − y₁)/(C₂ − C₁) =`, 'C₀ = y₁ × (C₂ − C₁)/(y₂ − y₁) − C₁ ='],
+  formulaUnits: ['µH', 'pF'],
+  how: 'Whole coil, S earthed; y is (1000/f)². Draw the readings in: sound ones lie on a straight line. Its slope gives L; it meets the axis C₀ left of 0, the coil’s own capacitance and clips.',
+  expect: (uh: string, pf: string) => `Expected: L ${uh} µH, C₀ ${pf} pF; grey: the limits.`,
+  known: (percent: string, uhPercent: string, pf: string) =>
+    `Capacitors known to ${percent} % leave ± ${uhPercent} % of L and ± ${pf} pF of C₀ open.`,
+  second: 'A second known capacitor is needed, two to four times the first.',
 } as const;

@@ -50,6 +50,7 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
   const ohm = (u: number) => (1.7241e-8 * metre(u)) / ((Math.PI * (bare / 1000) ** 2) / 4);
   const uh = (u: number) =>
     (3.9479 * (mean / 1000) ** 2 * u * u * 250) / ((u * pitch) / 1000 + 0.45 * (mean / 1000)) / 1000;
+  const kHz = (of: number, pf: number) => 1e6 / (2 * Math.PI * Math.sqrt(of * (pf + 3.1)));
   const drawn = method === 'drawn in';
   const holes: Hole[] = [
     {
@@ -370,9 +371,73 @@ export function sampleRecord(options: SampleOptions = {}): CoilRecord {
       { what: 'Resonance with 100 pF', low: 800, nominal: 810, high: 820, unit: 'kHz', digits: 0 },
     ],
     corrections: [
-      { doing: 'one turn off at the finish', wholePercent: -2.1, firstTapPercent: 0 },
-      { doing: 'last five turns spread by one wire each', wholePercent: -0.7, firstTapPercent: 0 },
+      {
+        doing: 'one turn off at the finish',
+        kind: 'trim',
+        tapsPercent: turnsAt.map((_, i) => (i === turnsAt.length - 1 ? -2.1 : 0)),
+        fromUh: round(uh(turns) * 1.0105, 3),
+        toUh: null,
+      },
+      {
+        doing: 'last five turns spread by one wire each',
+        kind: 'trim',
+        tapsPercent: turnsAt.map((_, i) => (i === turnsAt.length - 1 ? -0.7 : 0)),
+        fromUh: null,
+        toUh: null,
+      },
+      {
+        doing: 'former 0.1 mm larger (next coil)',
+        kind: 'next coil',
+        tapsPercent: turnsAt.map(() => 0.21),
+        fromUh: null,
+        toUh: null,
+      },
     ],
+    advice: turnsAt.map((turn, i) => ({
+      tap: i + 1,
+      fewPercent: round((100 * uh(turn - 1)) / uh(turn) - 100, 2),
+      manyPercent: round((100 * uh(turn + 1)) / uh(turn) - 100, 2),
+      fewUh: round((uh(turn) + uh(turn - 1)) / 2, 3),
+      manyUh: round((uh(turn) + uh(turn + 1)) / 2, 3),
+      millimetrePercent: -0.61,
+      degreesPerPercent: round(3.6 * turn * 0.6, 1),
+    })),
+    measuring: {
+      leadUh: 0.02,
+      clipPf: 1,
+      meter: turnsAt.map((turn, i) => ({
+        tap: i + 1,
+        inductanceUh: round(uh(turn) * 0.998, 3),
+        readingUh: round(uh(turn) * 0.999, 3),
+        lowUh: round(uh(turn) * 0.976, 3),
+        highUh: round(uh(turn) * 1.022, 3),
+        q: round(20 + turn, 1),
+        doubt: null,
+      })),
+      fromTap: 1,
+      toTap: turnsAt.length,
+      lengths: turnsAt.map((turn, i) => ({
+        tap: i + 1,
+        lowMm: round(at(turn) - start + overall - 0.1 - 0.002 * turn),
+        highMm: round(at(turn) - start + overall + 0.1 + 0.002 * turn),
+      })),
+      resonances: turnsAt.flatMap((turn, i) =>
+        [100, 330].map((pf) => ({
+          tap: i + 1,
+          capacitancePf: pf,
+          frequencyKhz: round(kHz(uh(turn), pf), 2),
+          lowKhz: round(kHz(uh(turn), pf) * 0.99, 2),
+          highKhz: round(kHz(uh(turn), pf) * 1.01, 2),
+        })),
+      ),
+      line: {
+        slopePerPf: round(4e-6 * Math.PI ** 2 * uh(turns), 8),
+        selfPf: 3.1,
+        inductanceUh: round(uh(turns), 3),
+        inductancePercent: 1.5,
+        selfHalfPf: 2.1,
+      },
+    },
     cautions: [
       'Keep hair, sleeves and gloves away from a turning mandrel.',
       'Wire under tension and cut ends fly: wear eye protection.',

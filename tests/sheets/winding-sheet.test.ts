@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
+import type { CoilRecord } from '../../src/record/schema.ts';
 import { PAPER_MM, Paper } from '../../src/sheets/page.ts';
 import { layOutWindingSheet, sheetFrame, windingSheet } from '../../src/sheets/winding-sheet.ts';
 import { evenTurns, fullRecord, layoutBoxes, layoutFaults } from '../helpers/layout.ts';
@@ -15,6 +16,52 @@ function onLine(page: PdfPage, of: PdfText): string[] {
     .filter((text) => Math.abs(text.y - of.y) < 0.4)
     .sort((a, b) => a.x - b.x)
     .map((text) => text.text);
+}
+
+interface Bench {
+  readonly units: 'metric' | 'inch' | 'both';
+  readonly meterName: string | null;
+  readonly meterKhz: number;
+  readonly capacitors: number;
+  readonly untrusted: number;
+  readonly strands: number;
+  readonly covering: 'enamel' | 'double cotton' | 'bare';
+}
+
+/** The same coil on another bench: its meter, capacitors and units, and its meter not trusted on the first taps. */
+function onBench(record: CoilRecord, at: Bench): CoilRecord {
+  const { measuring, shop, windings } = record;
+  const whole = windings[0]!.taps.length;
+  const capacitorsPf = [47, 100, 330, 1000].slice(0, at.capacitors);
+  const doubts = ['leads', 'resistance', 'capacitance'] as const;
+  const first = at.untrusted < whole ? at.untrusted + 1 : null;
+  return {
+    ...record,
+    units: at.units,
+    shop: { ...shop, meterName: at.meterName, meterKhz: at.meterKhz, capacitorsPf },
+    windings: windings.map((winding) => ({
+      ...winding,
+      wire: { ...winding.wire, strands: at.strands, covering: at.covering },
+    })),
+    measuring: {
+      ...measuring,
+      meter: measuring.meter.map((one) => {
+        if (one.tap > at.untrusted) return one;
+        const doubt = doubts[one.tap % 3]!;
+        return doubt === 'capacitance'
+          ? { ...one, doubt, readingUh: null, lowUh: null, highUh: null }
+          : { ...one, doubt };
+      }),
+      fromTap: first,
+      toTap: first === null ? null : whole,
+      resonances: windings[0]!.taps.flatMap(({ tap }) =>
+        capacitorsPf.map((capacitancePf) => {
+          const one = measuring.resonances.find((each) => each.tap === tap)!;
+          return { ...one, capacitancePf };
+        }),
+      ),
+    },
+  };
 }
 
 describe('winding sheet, read back', () => {
@@ -51,25 +98,40 @@ describe('winding sheet, read back', () => {
       // Beside the drawing: the distance from the datum.
       expect(first.texts.some((text) => text.x < middle && text.text === tap.positionMm.toFixed(2))).toBe(true);
     }
-    // Page 2: limits of every tap.
+    // Page 2: limits of every tap, in the order of their columns.
+    const between = (text: string) => text.split('–').map(number) as [number, number];
+    const pf = record.shop.capacitorsPf.at(-1);
     for (const tap of taps) {
-      const low = second.texts.filter((text) => text.text === `${tap.tap}`).map((text) => onLine(second, text));
-      const row = low.find((cells) => cells.length === 6)!;
-      const between = (text: string) => text.split('–').map((part) => number(part.trim()));
-      expect(number(row[1]!)).toBeCloseTo(tap.deviationPercent, 2);
-      expect(number(row[2]!)).toBeCloseTo(tap.woundLengthMm, 2);
-      const [lowUh, highUh] = between(row[3]!) as [number, number];
-      expect(Math.abs(lowUh / tap.inductanceLowUh - 1)).toBeLessThan(1e-3);
-      expect(Math.abs(highUh / tap.inductanceHighUh - 1)).toBeLessThan(1e-3);
-      const [lowOhm, highOhm] = between(row[4]!) as [number, number];
-      expect(Math.abs(lowOhm / tap.resistanceLowOhm - 1)).toBeLessThan(1e-3);
-      expect(Math.abs(highOhm / tap.resistanceHighOhm - 1)).toBeLessThan(1e-3);
-      expect(between(row[5]!)).toEqual([tap.range!.lowKhz, tap.range!.highKhz]);
-      checked += 7;
+      const rows = second.texts.filter((text) => text.text === `${tap.tap}`).map((text) => onLine(second, text));
+      const row = rows
+        .find((cells) => cells.length === 5)!
+        .slice(1)
+        .map(between);
+      const { lengths, meter, resonances } = record.measuring;
+      const { lowMm, highMm } = lengths[tap.tap - 1]!;
+      const { lowUh, highUh } = meter[tap.tap - 1]!;
+      const at = resonances.find((one) => one.tap === tap.tap && one.capacitancePf === pf)!;
+      const wanted = [
+        [lowMm, highMm],
+        [tap.resistanceLowOhm, tap.resistanceHighOhm],
+        [lowUh!, highUh!],
+        [at.lowKhz, at.highKhz],
+      ];
+      // Half a unit of the last digit that is printed: 0.01 mm, 0.001 ohm, four figures, 0.1 or 1 kHz.
+      const within = [0.0051, 0.00051, highUh! * 5.1e-4, at.lowKhz < 1000 ? 0.051 : 0.51];
+      wanted.forEach((pair, i) => {
+        pair.forEach((value, k) => {
+          expect(Math.abs(row[i]![k]! - value)).toBeLessThanOrEqual(within[i]!);
+          checked++;
+        });
+      });
     }
-    for (const check of record.checks) expect(all).toContain(check.nominal.toFixed(check.digits));
+    for (const check of record.checks)
+      if (check.unit !== 'kHz') expect(all).toContain(check.nominal.toFixed(check.digits));
+    for (const each of record.corrections) expect(all).toContain(each.doing);
+    for (const each of record.advice) expect(all).toContain(each.degreesPerPercent.toFixed(0));
     console.log(`winding sheet, ${hand}: ${checked} printed figures agree with the record`);
-    expect(checked).toBe(taps.length * 14);
+    expect(checked).toBe(taps.length * 15);
   });
 
   test('signs, title, language, scaling and sheet numbers', async () => {
@@ -127,25 +189,25 @@ describe('winding sheet, read back', () => {
 });
 
 describe('winding sheet, laid out', () => {
+  const names = ['Set', `Long ${'name of a job for the upper workshop '.repeat(5)}`, 'Unbroken'.repeat(20)];
+  const units = ['metric', 'inch', 'both'] as const;
   const cases = [3, 24].flatMap((taps) =>
     (['A4', 'Letter'] as const).flatMap((paper) =>
       [false, true].flatMap((staggered) =>
-        ['Set', `Long ${'name of a job for the upper workshop '.repeat(5)}`, 'Unbroken'.repeat(20)].map((job) => ({
-          taps,
-          paper,
-          staggered,
-          job,
-        })),
+        names.map((job, i) => ({ taps, paper, staggered, job, units: units[(i + taps) % 3]! })),
       ),
     ),
   );
 
   test('nothing overlaps, leaves the margins or is too small', () => {
     let boxes = 0;
-    for (const { taps, paper, staggered, job } of cases) {
+    for (const { taps, paper, staggered, job, units } of cases) {
       const turns = evenTurns(taps, 96, staggered);
-      const pages = layOutWindingSheet(fullRecord({ turns, paper, job, diameterMm: 76 }), measure);
-      expect(layoutFaults(pages, sheetFrame, measure), `${taps} taps, ${paper}, ${job.slice(0, 12)}`).toEqual([]);
+      const record = { ...fullRecord({ turns, paper, job, diameterMm: 76 }), units };
+      const pages = layOutWindingSheet(record, measure);
+      expect(layoutFaults(pages, sheetFrame, measure), `${taps} taps, ${paper}, ${units}, ${job.slice(0, 12)}`).toEqual(
+        [],
+      );
       boxes += layoutBoxes(pages, measure).length;
     }
     console.log(`winding sheet: ${cases.length} layouts, ${boxes} texts`);
@@ -167,16 +229,40 @@ describe('winding sheet, laid out', () => {
       stepWords: fc.integer({ min: 1, max: 60 }),
       job: fc.string({ minLength: 1, maxLength: 160 }),
     });
+    const bench = fc.record({
+      units: fc.constantFrom(...units),
+      meterName: fc.option(fc.string({ minLength: 1, maxLength: 120 })),
+      meterKhz: fc.constantFrom(0.12, 1, 100, 1234.567),
+      capacitors: fc.integer({ min: 0, max: 4 }),
+      untrusted: fc.integer({ min: 0, max: 24 }),
+      strands: fc.constantFrom(1, 20),
+      covering: fc.constantFrom('enamel' as const, 'double cotton' as const, 'bare' as const),
+    });
     fc.assert(
-      fc.property(options, ({ taps, whole, staggered, method, ...rest }) => {
+      fc.property(options, bench, ({ taps, whole, staggered, method, ...rest }, at) => {
         const record = fullRecord({ ...rest, method: method as 'lug', turns: evenTurns(taps, whole, staggered) });
-        expect(layoutFaults(layOutWindingSheet(record, measure), sheetFrame, measure)).toEqual([]);
+        const changed = onBench(record, at);
+        expect(layoutFaults(layOutWindingSheet(changed, measure), sheetFrame, measure)).toEqual([]);
         runs++;
       }),
       { seed: 20, numRuns: 40 },
     );
     console.log(`winding sheet: ${runs} random records laid out`);
     expect(runs).toBe(40);
+  });
+
+  test.each(['metric', 'inch', 'both'] as const)('two pages for 3 to 15 taps, in %s', (units) => {
+    let sheets = 0;
+    for (let taps = 3; taps <= 15; taps += 3)
+      for (const paper of ['A4', 'Letter'] as const) {
+        const record = { ...sampleRecord({ turns: evenTurns(taps, 96, false), paper, diameterMm: 76 }), units };
+        const pages = layOutWindingSheet(record, measure);
+        expect(layoutFaults(pages, sheetFrame, measure)).toEqual([]);
+        expect(pages.length, `${taps} taps, ${paper}`).toBe(2);
+        sheets++;
+      }
+    console.log(`winding sheet, ${units}: ${sheets} sheets of two pages`);
+    expect(sheets).toBe(10);
   });
 
   test('text set over text is noticed', () => {
