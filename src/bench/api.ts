@@ -46,7 +46,7 @@ export type Places = Readonly<Record<string, Place>>;
 
 export interface Progress {
   readonly count: Count;
-  /** Stops that a correction placed anew, by their key; empty: as planned. */
+  /** Stops that lie elsewhere than planned, by their key; empty: all as planned. */
   readonly places: Places;
   readonly measures: readonly LengthMeasure[];
 }

@@ -289,11 +289,19 @@ export function correct(record: CorrectedRecord, wound: Wound): Correction {
   };
 }
 
-/** Where the counter is to stop from now on; with those that are made, which an earlier correction may have moved. */
-export function placesOf({ stops }: Pick<Correction, 'stops'>): Places {
-  return Object.fromEntries(
-    stops
-      .filter(({ turn, plannedTurn }) => Math.abs(turn - plannedTurn) > 1e-9)
-      .map(({ key, turn, positionMm }) => [key, { turn, positionMm }]),
+/** Wires that lie so near to their planned place, mm, lie there. */
+const SAME_MM = 1e-3;
+
+/** Where the counter is to stop from now on, and where stops that are made really lie: all that are not as planned. */
+export function placesOf(record: Pick<CoilRecord, 'windings'>, { stops }: Pick<Correction, 'stops'>): Places {
+  const { taps, unitTaps = [] } = record.windings[0]!;
+  const plannedMm = ({ kind, number }: CorrectedStop) =>
+    (kind === 'unit' ? unitTaps.find(({ unit }) => unit === number) : taps.find(({ tap }) => tap === number))
+      ?.positionMm;
+  const moved = stops.filter(
+    (stop) =>
+      Math.abs(stop.turn - stop.plannedTurn) > 1e-9 ||
+      Math.abs(stop.positionMm - (plannedMm(stop) ?? stop.positionMm)) > SAME_MM,
   );
+  return Object.fromEntries(moved.map(({ key, turn, positionMm }) => [key, { turn, positionMm }]));
 }
