@@ -7,7 +7,6 @@
  *        └──> too little, impossible: fault 3 (doubts)                                                      └──> what to measure next
  */
 import { angleOf } from '../coil/layout.ts';
-import { WorkingCoil } from '../coil/working-coil.ts';
 import { contradictionsIn, residualsOf, tested } from './contradictions.ts';
 import { refuseImpossible, tooLittle } from './doubts.ts';
 import { estimateOf, figure, type Mixture, quantile, type Solved, type Spread, spreadsOf } from './figures.ts';
@@ -15,11 +14,11 @@ import { jacobian, leastSquares, stateOf } from './fit.ts';
 import { nextMeasurements } from './next.ts';
 import { type LostTap, lostTaps } from './patterns.ts';
 import { boundsOf, isLost, type Problem, problemOf, type Row } from './problem.ts';
-import { atWork } from './readings.ts';
 import { startOf } from './start.ts';
 import type { State } from './state.ts';
 import type { Estimate, InferredCoil, InferredTap, OldCoil } from './types.ts';
 import { type Candidate, linearised, wholeTurns } from './whole-turns.ts';
+import { workAnew } from './work-anew.ts';
 
 export interface InferOptions {
   /** Readings that do not go with the others are left out of the fit instead of pulling at it. */
@@ -40,6 +39,8 @@ export function infer(old: OldCoil, options: InferOptions = {}): InferredCoil {
   const free = problem.known.flatMap(({ exact }, t) => (exact === null ? [t] : []));
   const bounds = boundsOf(problem, first.x, first.turns);
   let rows: readonly Row[] = [...problem.rows, ...bounds];
+  // Without the coil's own capacitance a resonance would pull every turn.
+  workAnew(problem, first);
   let solved = solve(problem, rows, first, free);
   const test = contradictionsIn(problem, rows, solved.state, free);
   if (options.leaveOut === true && test.contradictions.length > 0) {
@@ -49,33 +50,6 @@ export function infer(old: OldCoil, options: InferOptions = {}): InferredCoil {
   const doubt = tooLittle(problem, [], solved);
   if (doubt !== null) throw doubt;
   return described(solved, rows, test.contradictions);
-}
-
-/** Crowding and own capacitance of every tap with an electrical reading, at these values of the unknowns. */
-function workAnew(problem: Problem, state: State): void {
-  const { old, known } = problem;
-  const electrical = known.flatMap(({ tap, index }, t) => {
-    const key = index === old.taps.length - 1 ? 'whole' : `taps[${index + 1}]`;
-    const turn = state.turns[t]!;
-    const readings = [];
-    if (tap.inductance !== null)
-      readings.push({ name: `${key}.inductance`, turn, kHz: tap.inductance.kHz, pf: undefined });
-    if (tap.resonance !== null)
-      readings.push({
-        name: `${key}.resonance`,
-        turn,
-        kHz: tap.resonance.kHz.value,
-        pf: tap.resonance.capacitorPf.value,
-      });
-    return readings;
-  });
-  if (electrical.length === 0) return;
-  const working = new WorkingCoil(state.coilOf(state.whole), state.turns, {
-    leadPf: 0,
-    earthed: old.earthed,
-    celsius: old.celsius,
-  });
-  for (const { name, turn, kHz, pf } of electrical) problem.atWork.set(name, atWork(working, turn, kHz, pf));
 }
 
 function solve(problem: Problem, rows: readonly Row[], from: State, free: readonly number[]): Solved {

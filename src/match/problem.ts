@@ -8,7 +8,7 @@ import { DENSITY } from '../physics/copper.ts';
 import type { Wire } from '../stock/wire.ts';
 import { coveringOf, thicknessOf } from './covering.ts';
 import { resonantKhz, shownUh } from './readings.ts';
-import { type AtWork, placesIn, type SectionEnd, type Shape, type State, UNKNOWN } from './state.ts';
+import { type AtWork, type AtWorkNear, placesIn, type SectionEnd, type Shape, type State, UNKNOWN } from './state.ts';
 import type { OldCoil, OldTap, Reading } from './types.ts';
 
 /** Standard deviation of a normal error whose half width at 95 % this is. */
@@ -52,7 +52,9 @@ export interface Problem {
   readonly known: readonly KnownTap[];
   readonly rows: readonly Row[];
   /** Crowding and own capacitance at each known tap, by the row's key. */
-  readonly atWork: Map<string, AtWork>;
+  readonly atWork: Map<string, AtWorkNear>;
+  /** What an electrical reading may be off besides its own uncertainty, one standard deviation, by the row's key. */
+  readonly doubt: Map<string, number>;
   /** What was taken without a measurement, in words. */
   readonly assumed: Record<string, string>;
 }
@@ -114,7 +116,8 @@ export function problemOf(old: OldCoil): Problem {
   const capacitors = [
     ...new Set(old.taps.flatMap(({ resonance }) => (resonance === null ? [] : [resonance.capacitorPf.value]))),
   ];
-  const shape: Shape = { sections: Math.max(1, old.sections.length), capacitors };
+  const lostBefore = known.map((index, t) => index - (t === 0 ? -1 : known[t - 1]!) - 1);
+  const shape: Shape = { sections: Math.max(1, old.sections.length), capacitors, lostBefore };
   const ends: SectionEnd[] =
     old.sections.length === 0
       ? [{ tap: taps.length - 1 }]
@@ -129,6 +132,7 @@ export function problemOf(old: OldCoil): Problem {
     known: taps,
     rows: [],
     atWork: new Map(),
+    doubt: new Map(),
     assumed: { ...assumed },
   };
   return { ...problem, rows: rowsOf(problem) };
@@ -140,19 +144,24 @@ function rowsOf(problem: Problem): Row[] {
   const { old, shape, known, wire, assumed } = problem;
   const at = placesIn(shape);
   const rows: Row[] = [];
-  const add = (key: string, unit: string, reading: Reading, predict: Predict, more: Partial<Row> = {}) =>
+  const add = (key: string, unit: string, reading: Reading, predict: Predict, more: Partial<Row> = {}) => {
+    const stated = Math.max(reading.uncertainty * SIGMA, 1e-9 * Math.abs(reading.value) + 1e-12);
     rows.push({
       key,
       unit,
       value: reading.value,
-      sigma: Math.max(reading.uncertainty * SIGMA, 1e-9 * Math.abs(reading.value) + 1e-12),
       electrical: false,
       granted: false,
       bound: false,
       tap: null,
       ...more,
+      // What is in doubt besides is known once the coil at work is.
+      get sigma() {
+        return Math.hypot(stated, problem.doubt.get(key) ?? 0);
+      },
       predict,
     });
+  };
   const granted = { granted: true };
 
   old.diameters.forEach(({ of, how, mm }, i) => {
@@ -215,9 +224,10 @@ function rowsOf(problem: Problem): Row[] {
     const key = `sections[${s + 1}]`;
     if (section.pitchMm !== null) pitchRow(s, `${key}.pitch`, section.pitchMm);
     if (section.lengthMm !== null)
-      add(`${key}.length`, 'mm', section.lengthMm, ({ measures, ends }) => {
-        const turns = ends[s]! - (s === 0 ? 0 : ends[s - 1]!);
-        return (turns - 1) * measures.pitchMm[s]! + measures.overallMm;
+      add(`${key}.length`, 'mm', section.lengthMm, ({ measures, ends, pushed }) => {
+        const from = s === 0 ? 0 : ends[s - 1]!;
+        const within = pushed.filter((turn) => turn > from && turn < ends[s]!).length;
+        return (ends[s]! - from - 1) * measures.pitchMm[s]! + measures.overallMm + within * measures.tapGapMm;
       });
     if (section.gapAfterMm !== null)
       add(`${key}.gap-after`, 'mm', section.gapAfterMm, ({ measures }) => measures.sectionGapMm[s]!);
@@ -258,15 +268,17 @@ function rowsOf(problem: Problem): Row[] {
         (state) => state.resistanceOhm(state.turns[i]!) * copper * (1 + state.x[at.length]!),
         of,
       );
-    const scaled = (key: string, x: Float64Array): AtWork => {
-      const work = problem.atWork.get(key) ?? { crowded: 1, ownPf: 0 };
-      return { crowded: work.crowded, ownPf: work.ownPf * (1 + x[at.self]!) };
+    const scaled = (key: string, { x, turns }: State): AtWork => {
+      const work = problem.atWork.get(key);
+      if (work === undefined) return { crowded: 1, ownPf: 0 };
+      const nearer = work.power === 0 ? 1 : (work.turn / turns[i]!) ** work.power;
+      return { crowded: work.crowded, ownPf: work.ownPf * nearer * (1 + x[at.self]!) };
     };
     const { inductance, resonance } = tap;
     if (inductance !== null) {
       const name = `${key}.inductance`;
       const shown: Predict = (state) =>
-        shownUh(state.inductanceUh(state.turns[i]!), inductance.kHz, scaled(name, state.x)) * (1 + state.x[at.meter]!);
+        shownUh(state.inductanceUh(state.turns[i]!), inductance.kHz, scaled(name, state)) * (1 + state.x[at.meter]!);
       add(name, 'uH', inductance.uh, shown, { ...of, electrical: true });
     }
     if (resonance !== null) {
@@ -274,7 +286,7 @@ function rowsOf(problem: Problem): Row[] {
       const { value, uncertainty } = resonance.capacitorPf;
       const c = at.capacitor + shape.capacitors.indexOf(value);
       const shown: Predict = (state) =>
-        resonantKhz(state.inductanceUh(state.turns[i]!), value + uncertainty * state.x[c]!, scaled(name, state.x));
+        resonantKhz(state.inductanceUh(state.turns[i]!), value + uncertainty * state.x[c]!, scaled(name, state));
       add(name, 'kHz', resonance.kHz, shown, { ...of, electrical: true });
     }
   });

@@ -16,16 +16,24 @@ const omegaOf = (kHz: number) => 2e3 * Math.PI * kHz;
 const tuningPf = (uh: number, kHz: number) => 1e18 / (omegaOf(kHz) ** 2 * uh);
 
 /**
- * Crowding and the coil's own capacitance at a tap, for readings near this frequency; `capacitorPf` for a resonance with it. Dead
- * turns raise the capacitance the more, the nearer they are to a resonance of their own.
+ * What the coil itself puts across a tap, pF, for readings near this frequency; `capacitorPf` for a resonance with it. Dead turns raise
+ * it the more, the nearer they are to a resonance of their own.
  */
-export function atWork(working: WorkingCoil, turn: number, kHz: number, capacitorPf?: number): AtWork {
+export function ownPfAt(working: WorkingCoil, turn: number, kHz: number, capacitorPf?: number): number {
   const lowUh = working.inductanceUh(0, turn);
   const pf = capacitorPf ?? Math.min(MOST_PF, Math.max(20, tuningPf(lowUh, kHz)));
-  const resonant = working.tuned(turn, pf, 'open').kHz;
-  const ownPf = tuningPf(lowUh, resonant) - pf;
-  return { crowded: kHz < CROWDS_FROM_KHZ ? 1 : 1 / working.crowding(turn, kHz), ownPf };
+  return tuningPf(lowUh, working.tuned(turn, pf, 'open').kHz) - pf;
 }
+
+/** Working over low-frequency inductance at a tap: current crowds in the wire. */
+export const crowdedAt = (working: WorkingCoil, turn: number, kHz: number): number =>
+  kHz < CROWDS_FROM_KHZ ? 1 : 1 / working.crowding(turn, kHz);
+
+/** Both at a tap. */
+export const atWork = (working: WorkingCoil, turn: number, kHz: number, capacitorPf?: number): AtWork => ({
+  crowded: crowdedAt(working, turn, kHz),
+  ownPf: ownPfAt(working, turn, kHz, capacitorPf),
+});
 
 /** Inductance that a meter at this frequency shows, uH: crowded, and raised by the coil's own capacitance. */
 export function shownUh(lowUh: number, kHz: number, { crowded, ownPf }: AtWork): number {

@@ -13,6 +13,8 @@ export interface Shape {
   readonly sections: number;
   /** Known capacitors of which one error each is shared by all readings with it, pF. */
   readonly capacitors: readonly number[];
+  /** Taps of which nothing is known push the wire aside too: how many lie before each known one. */
+  readonly lostBefore?: readonly number[];
 }
 
 export const UNKNOWN = { mean: 0, bare: 1, overall: 2, tapGap: 3, pitch: 4 } as const;
@@ -33,6 +35,14 @@ export interface AtWork {
   readonly crowded: number;
   /** What the coil itself puts across the tap, pF. */
   readonly ownPf: number;
+}
+
+/** The same about a number of turns: own capacitance falls with this power of the turns, for dead turns act through the square of a ratio. */
+export interface AtWorkNear extends AtWork {
+  readonly turn: number;
+  readonly power: number;
+  /** Turns at which the crowding was taken. */
+  readonly crowdedTurn: number;
 }
 
 /** So many turns more than the coil has, so that what a turn more would do can be asked. */
@@ -70,7 +80,13 @@ export class State {
       from = at;
       return at;
     });
-    this.pushed = turns.slice(0, -1).filter((turn) => !this.ends.some((end) => Math.abs(end - turn) < 1e-6));
+    const lost = (shape.lostBefore ?? []).flatMap((count, t) => {
+      const before = t === 0 ? 0 : turns[t - 1]!;
+      return Array.from({ length: count }, (_, k) => before + ((turns[t]! - before) * (k + 1)) / (count + 1));
+    });
+    this.pushed = [...turns.slice(0, -1), ...lost].filter(
+      (turn) => !this.ends.some((end) => Math.abs(end - turn) < 1e-6),
+    );
     const { gap } = placesIn(shape);
     this.measures = {
       meanMm: x[UNKNOWN.mean]!,
@@ -103,7 +119,7 @@ export class State {
 
   /** With turns to spare: for inductances from the start alone. */
   get coil(): Coil {
-    this.#coil ??= this.coilOf(Math.ceil(this.whole - 1e-9) + SPARE);
+    this.#coil ??= this.coilOf(Math.ceil(Math.max(...this.turns) - 1e-9) + SPARE);
     return this.#coil;
   }
 
