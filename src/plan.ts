@@ -95,10 +95,13 @@ export async function produce(
     const { referenceSheet } = await import('./sheets/reference-sheet.ts');
     const sheet = await windingSheet(record);
     const ranges = await referenceSheet(record);
+    const { benchPage } = await import('./bench/page.ts');
+    const page = await benchPage(record);
     const made = await making;
     const partsSheet = await partsSheetFile(record, made);
     const files: OutputFile[] = [
       { path: 'winding-sheet.pdf', kind: 'pdf', bytes: sheet, note: 'to wind from and to check by' },
+      { path: 'bench-page.html', kind: 'html', bytes: page, note: 'to wind by, in a browser, without a network' },
       ...(await more(record)),
       ...(await surfaceFiles(record)),
       {
