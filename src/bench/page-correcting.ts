@@ -90,7 +90,7 @@ export function correctionPart(app: App, moved: () => void): CorrectingPart {
     const work = {
       use: () => {
         if (draft === null) return;
-        put({ places: placesOf(worked(draft)), measures: draft });
+        put({ places: placesOf(record, worked(draft)), measures: draft });
         draft = null;
         moved();
         byId('correction-head').focus();

@@ -1,6 +1,6 @@
 /** What a length measured while winding changes: where taps still to come must go, and what the coil will be. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
-import { byId, cell, el, setText, table } from './page-dom.ts';
+import { byId, type Column, cell, el, setText, table } from './page-dom.ts';
 
 export interface ShownTap {
   readonly name: string;
@@ -51,15 +51,19 @@ export function showCorrection(shown: ShownCorrection | null, work: CorrectionWo
       cell(words.now, undefined, el('strong', {}, now)),
       cell(words.inductance, undefined, inductance),
       cell(words.off, undefined, off),
-      cell(words.note, 'words', note),
+      cell('', 'words line', note),
     ],
   }));
-  const heads = [words.tap, words.planned, words.now, words.inductance, words.off, words.note];
+  const columns: Column[] = [
+    { head: words.tap, kind: 'words' },
+    ...[words.planned, words.now, words.inductance, words.off].map((head) => ({ head })),
+    { head: words.note, kind: 'words' },
+  ];
   place.replaceChildren(
     ...shown.lines.map((line, i) =>
       el('p', { class: shown.doubtful && i < shown.lines.length - 2 ? 'fault' : undefined }, line),
     ),
-    ...(rows.length === 0 ? [] : [table(words.caption, heads, rows)]),
+    ...(rows.length === 0 ? [] : [table(words.caption, columns, rows)]),
     el('p', {}, el('strong', {}, shown.inUse ? words.inUse : words.notYet)),
     el('div', { class: 'row' }, ...(shown.inUse ? [drop] : [use, drop])),
   );

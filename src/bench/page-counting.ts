@@ -56,7 +56,7 @@ export function counterPart(app: App, changed: () => void): CounterPart {
     const words = BENCH.figures;
     const stops = app.stops();
     const { usedM, neededM, leftM, lackM } = spoolAt(record, stops, count(), positive(app.session().spool));
-    const left = leftM === null ? words.unknown : wireText(leftM, units);
+    const left = leftM === null ? words.unknown : leftM <= 0 ? words.out : wireText(leftM, units);
     const lacking = lackM !== null && lackM > 0;
     const turn = turnOf(stops, count());
     const long = turn === 0 ? 0 : plannedMm(record, turn, 'extent');

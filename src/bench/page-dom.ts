@@ -55,15 +55,20 @@ export interface TableRow {
   readonly cells: readonly HTMLElement[];
 }
 
+/** A column: its head, and `words` for text, which stands left, or `wide` for text that takes what room there is. */
+export interface Column {
+  readonly head: string;
+  readonly kind?: 'words' | 'wide';
+}
+
 /** A table with a caption, a head a column, and rows that are headed by their first cell; cards on a narrow screen. */
-export function table(caption: string, heads: readonly string[], rows: readonly TableRow[]): HTMLElement {
-  const head = (text: string, i: number) =>
-    el('th', { scope: 'col', role: 'columnheader', class: i === 0 ? 'words' : undefined }, text);
+export function table(caption: string, columns: readonly Column[], rows: readonly TableRow[]): HTMLElement {
+  const head = ({ head, kind }: Column) => el('th', { scope: 'col', role: 'columnheader', class: kind }, head);
   return el(
     'table',
     { class: 'cards', role: 'table' },
     el('caption', {}, caption),
-    el('thead', { role: 'rowgroup' }, el('tr', { role: 'row' }, ...heads.map(head))),
+    el('thead', { role: 'rowgroup' }, el('tr', { role: 'row' }, ...columns.map(head))),
     el(
       'tbody',
       { role: 'rowgroup' },

@@ -6,6 +6,7 @@ import type { Measure } from '../drawing/boxes.ts';
 import { type Elevation, elevation, elevationScale, frontOfTurn } from '../drawing/elevation.ts';
 import { svgOf } from '../drawing/svg.ts';
 import type { CoilRecord } from '../record/schema.ts';
+import { lengthCell, unitsOf } from '../sheets/units.ts';
 import { svgEl } from './page-dom.ts';
 
 /** Room that the drawing is laid out for, so that its type is legible on a phone; it grows with the page. */
@@ -32,8 +33,9 @@ export interface Picture {
 
 export function pictureOf(record: CoilRecord): Picture {
   const measure = browserMeasure();
-  const scale = elevationScale(record, ROOM_MM.wide, ROOM_MM.high, DRAWING, measure);
-  const drawing = elevation(record, scale, DRAWING, measure);
+  const length = (mm: number) => lengthCell(mm, unitsOf(record));
+  const scale = elevationScale(record, ROOM_MM.wide, ROOM_MM.high, DRAWING, measure, length);
+  const drawing = elevation(record, scale, DRAWING, measure, length);
   const view = { left: -drawing.leftMm, right: drawing.rightMm, bottom: -drawing.downMm, top: drawing.upMm };
   const text = svgOf(drawing, view, { title: BENCH.picture.title(record.job), description: BENCH.picture.words });
   const svg = document.importNode(new DOMParser().parseFromString(text, 'image/svg+xml').documentElement, true);

@@ -1,6 +1,6 @@
 /** The table of readings: limits, a blank each, and what the reading says, at once. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
-import { byId, cell, el, table } from './page-dom.ts';
+import { byId, type Column, cell, el, table } from './page-dom.ts';
 
 export interface ShownReading {
   /** Stable: readings are kept and saved under it. */
@@ -38,7 +38,13 @@ export interface ReadingsWork {
 /** Builds the tables once; each blank then updates its own row. */
 export function showReadings(tables: readonly ReadingsTable[], work: ReadingsWork): void {
   const words = BENCH.readings;
-  const heads = [words.what, words.low, words.nominal, words.high, words.unit, words.reading, words.verdict];
+  const columns: Column[] = [
+    { head: words.what, kind: 'words' },
+    ...[words.low, words.nominal, words.high].map((head) => ({ head })),
+    { head: words.unit, kind: 'words' },
+    { head: words.reading, kind: 'words' },
+    { head: words.verdict, kind: 'wide' },
+  ];
   const place = byId('readings');
   const opened = new Set([...place.querySelectorAll('details[open]')].map((one) => one.id));
   place.replaceChildren(
@@ -51,7 +57,7 @@ export function showReadings(tables: readonly ReadingsTable[], work: ReadingsWor
         'details',
         { id, open: open || filled || opened.has(id) },
         el('summary', {}, caption),
-        table(caption, heads, rows),
+        table(caption, columns, rows),
       );
     }),
   );
@@ -86,8 +92,8 @@ function rowCells({ id, what, low, nominal, high, unit }: ShownReading, work: Re
     cell(words.nominal, undefined, nominal),
     cell(words.high, undefined, high),
     cell(words.unit, 'words', unit),
-    cell(words.reading, undefined, blank),
-    cell(words.verdict, 'words', said),
+    cell(words.reading, 'words line', blank),
+    cell('', 'wide line', said),
   ];
 }
 

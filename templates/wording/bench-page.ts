@@ -75,6 +75,7 @@ export const BENCH = {
     long: 'should be long here',
     unknown: 'not known',
     short: (lack: string) => `${lack} short`,
+    out: 'none',
   },
 
   setup: {
@@ -95,10 +96,10 @@ export const BENCH = {
   correction: {
     heading: 'Correct while winding',
     words:
-      'Lay a rule along the winding, edge to edge over the wires, and enter what it shows. The taps still to come are placed anew for a winding that goes on at that pitch.',
+      'Lay a rule along the winding, edge to edge over the wires: up from the start hole to the wire’s end, or away from the hole over wires that lie side by side. The taps still to come are placed anew for a winding that goes on at that pitch.',
     over: 'measured',
-    extent: 'from the start hole to the wire’s end',
-    wires: 'over the wires side by side, away from the start hole',
+    extent: 'start hole to wire’s end',
+    wires: 'over wires side by side',
     wound: {
       extent: (turn: string, unit: string) => `length of ${turn} turns, ${unit}`,
       wires: (turn: string, unit: string) => `length over ${turn} wires, ${unit}`,
@@ -130,7 +131,7 @@ export const BENCH = {
     back: (turns: string) => `better: unwind ${turns} turns`,
     note: 'note',
     work: 'Work it out',
-    caption: 'Stops still to come',
+    caption: 'Stops, with what is wound counted in',
     tap: 'stop',
     planned: 'planned at turn',
     now: 'now at turn',
