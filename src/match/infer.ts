@@ -11,7 +11,7 @@ import { contradictionsIn, residualsOf, tested } from './contradictions.ts';
 import { refuseImpossible, tooLittle } from './doubts.ts';
 import { estimateOf, figure, type Mixture, quantile, type Solved, type Spread, spreadsOf } from './figures.ts';
 import { jacobian, leastSquares, stateOf } from './fit.ts';
-import { nextMeasurements } from './next.ts';
+import { type LostWidth, nextMeasurements } from './next.ts';
 import { type LostTap, lostTaps } from './patterns.ts';
 import { boundsOf, isLost, type Problem, problemOf, type Row } from './problem.ts';
 import { startOf } from './start.ts';
@@ -141,9 +141,27 @@ function described(solved: Solved, rows: readonly Row[], contradictions: Inferre
     residuals: residualsOf(all),
     contradictions,
     proposals: lost.flatMap(({ proposals }) => proposals),
-    next: nextMeasurements(solved, inductances),
+    next: nextMeasurements(solved, inductances, lostWidths(solved, lost, byIndex)),
     assumed: problem.assumed,
   };
+}
+
+/** Place of a trace, mm, half width. */
+const TRACE_MM = 0.3;
+
+function lostWidths({ state }: Solved, lost: readonly LostTap[], taps: ReadonlyMap<number, InferredTap>): LostWidth[] {
+  return lost.map(({ index, name }) => {
+    const { turn, inductanceUh } = taps.get(index)!;
+    const turns = TRACE_MM / (state.placeMm(turn + 0.5) - state.placeMm(turn - 0.5));
+    // Within less than half a turn a place settles the turn.
+    const then = turns < 0.5 ? 0 : (turns * state.perTurnUh(turn)) / inductanceUh.value;
+    return {
+      key: `old.taps[${index + 1}].position`,
+      name,
+      now: (inductanceUh.high - inductanceUh.low) / 2 / inductanceUh.value,
+      then,
+    };
+  });
 }
 
 type Measured = Pick<

@@ -2,7 +2,7 @@
 
 import { lengthText } from '../quantity/format.ts';
 import { nameOf } from './contradictions.ts';
-import { figure, type Solved, type Spread, spreadsOf } from './figures.ts';
+import { figure, quantile, type Solved, type Spread, spreadsOf } from './figures.ts';
 import { dot, solveWith } from './linear.ts';
 import type { Row } from './problem.ts';
 import { isTextile, SIGMA, tapKey } from './problem.ts';
@@ -101,22 +101,54 @@ function possible({ problem, state }: Solved): Possible[] {
   return list;
 }
 
-const variance = (weights: readonly number[], values: readonly number[]) => {
-  const sum = weights.reduce((a, b) => a + b, 0);
-  const mean = weights.reduce((a, w, i) => a + w * values[i]!, 0) / sum;
-  return weights.reduce((a, w, i) => a + w * (values[i]! - mean) ** 2, 0) / sum;
-};
+/** Sets of whole turns that a look ahead needs; the rest weigh little. */
+const LOOKED = 40;
 
-/** Relative half width at 95 %. */
-const half = (one: Spread, sigma2: number, weights: readonly number[]) =>
-  Math.sqrt(Math.max(0, sigma2) + variance(weights, one.shifts)) / SIGMA / one.value;
+/** Half of the 95 % limits over the value. */
+function half(one: Spread, sigma2: number, weights: readonly number[]): number {
+  const used = weights.slice(0, LOOKED);
+  const sum = used.reduce((a, b) => a + b, 0);
+  const mixture = {
+    centres: one.shifts.slice(0, LOOKED),
+    weights: used.map((weight) => weight / sum),
+    sigma: Math.sqrt(Math.max(0, sigma2)),
+  };
+  return (quantile(mixture, 0.975) - quantile(mixture, 0.025)) / 2 / one.value;
+}
 
 /** Worth saying from a tenth of the limit on. */
 const WORTH = 0.9;
 const SHOWN = 4;
 
-/** `inductances` are the spreads of the inductance of each known tap. */
-export function nextMeasurements(solved: Solved, inductances: readonly Spread[]): NextMeasurement[] {
+/** A lost tap whose limits, half over value, are these now, and what they would be with its place known. */
+export interface LostWidth {
+  readonly key: string;
+  readonly name: string;
+  readonly now: number;
+  readonly then: number;
+}
+
+/**
+ * `inductances` are the spreads of the inductance of each known tap. Where a lost tap is the widest of all, only a trace of it
+ * helps.
+ */
+export function nextMeasurements(
+  solved: Solved,
+  inductances: readonly Spread[],
+  lost: readonly LostWidth[] = [],
+): NextMeasurement[] {
+  const known = amongKnown(solved, inductances);
+  const weights = solved.candidates.map((one) => one.weight);
+  const widest = Math.max(...inductances.map((one) => half(one, one.sigma ** 2, weights)));
+  const worst = [...lost].sort((a, b) => b.now - a.now)[0];
+  if (worst === undefined || worst.now <= widest) return known;
+  const others = Math.max(widest, worst.then, ...lost.filter((one) => one !== worst).map((one) => one.now));
+  if (others >= WORTH * worst.now) return known;
+  const text = `a trace of tap ${worst.name}, such as its hole: its place to ± ${lengthText(0.3)}`;
+  return [{ key: worst.key, text, nowPercent: 100 * worst.now, thenPercent: 100 * others }, ...known].slice(0, SHOWN);
+}
+
+function amongKnown(solved: Solved, inductances: readonly Spread[]): NextMeasurement[] {
   const { linear, candidates, state } = solved;
   const weights = candidates.map((one) => one.weight);
   const now = Math.max(...inductances.map((one) => half(one, one.sigma ** 2, weights)));

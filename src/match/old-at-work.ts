@@ -1,6 +1,6 @@
 /** The inferred old coil in its set: ranges of every position with their limits, inductance, loss and Q where it worked. */
 import { Coil } from '../coil/coil.ts';
-import { type Conditions, type Position, positionOf } from '../coil/positions.ts';
+import { type AtFrequency, atFrequency, type Conditions, type Span, spanOf } from '../coil/positions.ts';
 import { WorkingCoil } from '../coil/working-coil.ts';
 import type { Job } from '../job/job.ts';
 import { setCapacitance } from '../solve/demand.ts';
@@ -23,11 +23,23 @@ export function coilOf({
   return new Coil(shape, turnPositionsMm);
 }
 
+/** A position where it worked: its range, and its figures in the middle of that. */
+export interface OldPosition {
+  readonly span: Span | null;
+  readonly working: AtFrequency;
+}
+
+function positionAt(working: WorkingCoil, turn: number, { tuning, atKhz, rest, lossTangent }: Conditions): OldPosition {
+  const span = tuning === null ? null : spanOf(working, turn, tuning, rest);
+  const kHz = atKhz ?? (span === null ? DEFAULT_AT_KHZ : Math.sqrt(span.low.kHz * span.high.kHz));
+  return { span, working: atFrequency(working, turn, kHz, rest, lossTangent) };
+}
+
 export interface OldAtWork {
   readonly working: WorkingCoil;
   readonly conditions: Conditions;
   /** One a tap, the whole coil last. */
-  readonly positions: readonly Position[];
+  readonly positions: readonly OldPosition[];
 }
 
 export function oldAtWork(inferred: InferredCoil, old: OldCoil, job: Job): OldAtWork {
@@ -45,7 +57,7 @@ export function oldAtWork(inferred: InferredCoil, old: OldCoil, job: Job): OldAt
     rest: set?.switch ?? 'open',
     lossTangent: material?.ok ? material.material.lossTangent : 0,
   };
-  return { working, conditions, positions: taps.map((turn) => positionOf(working, turn, conditions)) };
+  return { working, conditions, positions: taps.map((turn) => positionAt(working, turn, conditions)) };
 }
 
 /**

@@ -3,14 +3,16 @@
  * As it was: every tap lies where it lay, at the old pitch, with what inductance that gives. Both are found by the search of `plan`;
  * what the first round leaves over (crowding of another wire, gaps of the new taps) goes into the targets of the next.
  */
-import type { WorkingCoil } from '../coil/working-coil.ts';
+import type { Terminal, WorkingCoil } from '../coil/working-coil.ts';
 import { Fault } from '../fault.ts';
 import type { Job } from '../job/job.ts';
 import { lengthText } from '../quantity/format.ts';
+import { candidatesOf, wiresFor } from '../solve/candidates.ts';
 import type { Design } from '../solve/design.ts';
 import { workingCoilOf } from '../solve/refine.ts';
 import { refusal } from '../solve/refusal.ts';
 import { type Found, search } from '../solve/search.ts';
+import type { Wire } from '../stock/wire.ts';
 import { coilOf, type OldAtWork } from './old-at-work.ts';
 import type { InferredCoil } from './types.ts';
 
@@ -44,7 +46,7 @@ export type Tried = { readonly ok: true; readonly of: Replacement } | { readonly
 
 /** Targets are mended so often; the first round is off by what the wires differ in crowding. */
 const ROUNDS = 3;
-/** A deviation of the working inductance that another round would not better. */
+/** Targets that move by less find the same coil. */
 const NEAR = 2e-4;
 
 /** Inductance up to where the wire of a design passes this distance from the start; beyond the finish it runs on with its slope. */
@@ -65,6 +67,12 @@ function inductanceAtMm({ coil }: Design, mm: number): number {
   return coil.inductanceUh((low + high) / 2);
 }
 
+/** Farthest that a tap lies from where the old one lay, mm. */
+function farthest({ coil, taps }: Design, places: readonly number[]): number {
+  const from = coil.positionMm(0);
+  return Math.max(...taps.map(({ turn }, i) => Math.abs(coil.positionMm(turn) - from - places[i]!)));
+}
+
 /** Of the diameters there are, the one nearest to the old. */
 function nearestTo({ former }: Job, mm: number): Job['former']['diametersMm'] {
   const of = former.diametersMm;
@@ -72,37 +80,78 @@ function nearestTo({ former }: Job, mm: number): Job['former']['diametersMm'] {
   return former.kind === 'tube' ? of : { listMm: [Math.min(of.highMm, Math.max(of.lowMm, mm))] };
 }
 
-function against(job: Job, design: Design, inferred: InferredCoil, old: OldAtWork): TapAgainst[] {
-  const working: WorkingCoil = workingCoilOf(job, design);
+/** Taps at which the field is solved when only a few are looked at: the difference from low frequency is smooth in between. */
+const LOOKED = 3;
+
+function against(
+  design: Design,
+  working: WorkingCoil,
+  inferred: InferredCoil,
+  old: OldAtWork,
+  all: boolean,
+): TapAgainst[] {
   const { coil, taps } = design;
   const first = coil.positionMm(0);
+  // Shorted turns take more or less of it from tap to tap.
+  const smooth = old.conditions.rest === 'open' || old.conditions.rest === 'disconnected';
+  const count = all || !smooth ? taps.length : Math.min(LOOKED, taps.length);
+  const looked = Array.from({ length: count }, (_, i) =>
+    count === 1 ? taps.length - 1 : Math.round((i * (taps.length - 1)) / (count - 1)),
+  );
+  const solved = new Map(
+    looked.map((i) => [i, working.terminal(taps[i]!.turn, old.positions[i]!.working.kHz, old.conditions.rest)]),
+  );
+  const shared = (i: number, of: (at: Terminal, i: number) => number): number => {
+    const own = solved.get(i);
+    if (own !== undefined) return of(own, i);
+    const next = looked.findIndex((one) => one > i);
+    const [low, high] = [looked[next - 1]!, looked[next]!];
+    const [from, to] = [of(solved.get(low)!, low), of(solved.get(high)!, high)];
+    return from + ((to - from) * (i - low)) / (high - low);
+  };
   return taps.map(({ turn, inductanceUh }, i) => {
-    const { kHz, inductanceUh: wasUh } = old.positions[i]!.working;
-    const at = working.terminal(turn, kHz, old.conditions.rest);
+    const crowded = shared(i, (at, k) => at.inductanceUh / taps[k]!.inductanceUh);
+    const workingUh = crowded * inductanceUh;
     return {
       turn,
       positionMm: coil.positionMm(turn) - first,
       low: inductanceUh / inferred.taps[i]!.inductanceUh.value - 1,
-      working: at.inductanceUh / wasUh - 1,
-      workingUh: at.inductanceUh,
-      q: at.q,
+      working: workingUh / old.positions[i]!.working.inductanceUh - 1,
+      workingUh,
+      q: shared(i, (at) => at.q),
     };
   });
 }
 
-function replacementOf(way: Way, job: Job, found: Found, inferred: InferredCoil, old: OldAtWork): Replacement {
-  const taps = against(job, found.chosen, inferred, old);
+/** `all` taps by the field, or a few and the rest in between. */
+function replacementOf(
+  way: Way,
+  job: Job,
+  found: Found,
+  inferred: InferredCoil,
+  old: OldAtWork,
+  all: boolean,
+): Replacement {
+  const working = found.chosen.working ?? workingCoilOf(job, found.chosen);
+  const taps = against(found.chosen, working, inferred, old, all);
   const off = taps.map((tap) => Math.abs(tap.working));
   const tap = off.indexOf(Math.max(...off));
   return {
     way,
     job,
-    found,
+    found: { ...found, chosen: { ...found.chosen, working } },
     taps,
     worst: { tap, working: off[tap]! },
-    farthestMm: Math.max(...taps.map((one, i) => Math.abs(one.positionMm - inferred.taps[i]!.positionMm.value))),
+    farthestMm: farthest(
+      found.chosen,
+      inferred.taps.map(({ positionMm }) => positionMm.value),
+    ),
   };
 }
+
+/** The same with every tap by the field: for the way that is made. */
+export const inFull = ({ way, job, found }: Replacement, inferred: InferredCoil, old: OldAtWork): Replacement =>
+  replacementOf(way, job, found, inferred, old, true);
 
 const wishing = (job: Job, inductancesUh: readonly number[]): Job => ({
   ...job,
@@ -120,43 +169,50 @@ function narrowed(job: Job, { candidate, former }: Design): Job {
   };
 }
 
-/** Rounds of a search whose targets follow what the round before was off by. */
-function mended(
-  way: Way,
-  job: Job,
-  start: readonly number[],
-  next: (tried: Replacement, targets: readonly number[]) => readonly number[],
-  better: (a: Replacement, b: Replacement) => boolean,
-  inferred: InferredCoil,
-  old: OldAtWork,
-): Tried {
+/** What is thought of a coil that was found: how far off it is, and what to ask for next. */
+interface Judged {
+  readonly off: number;
+  readonly next: readonly number[];
+}
+
+type Rounds = { readonly job: Job; readonly found: Found } | { readonly why: Fault };
+
+/** Rounds of a search whose targets follow what the round before was off by; the best of them. */
+function mended(job: Job, start: readonly number[], judge: (found: Found, job: Job) => Judged): Rounds {
   let targets = start;
-  let best: Replacement | null = null;
+  let best: { job: Job; found: Found; off: number } | null = null;
   let asked = job;
   for (let round = 0; round < ROUNDS; round++) {
     const wish = wishing(asked, targets);
     const found = search(wish);
     if (!('chosen' in found)) {
       if (best !== null) break;
-      return { ok: false, why: refusal(wish, found) };
+      return { why: refusal(wish, found) };
     }
-    const one = replacementOf(way, wish, found, inferred, old);
-    if (best === null || better(one, best)) best = one;
-    else break;
-    if (way === 'as it worked' && one.worst.working < NEAR) break;
+    const { off, next } = judge(found, wish);
+    if (best !== null && off > best.off - NEAR) break;
+    best = { job: wish, found, off };
     asked = narrowed(job, found.chosen);
-    targets = next(one, targets);
-    if (!rising(targets)) break;
+    const settled = next.every((uh, i) => Math.abs(uh / targets[i]! - 1) < NEAR);
+    targets = next;
+    if (settled || !rising(targets)) break;
   }
-  return { ok: true, of: best! };
+  return best!;
 }
 
 /** As it worked: the old inductances at work. */
 export function asItWorked(job: Job, inferred: InferredCoil, old: OldAtWork): Tried {
   const start = inferred.taps.map(({ inductanceUh }) => inductanceUh.value);
+  const seen = new Map<Found, Replacement>();
   // What a tap is off because it must stand at a hole is not to be mended, only what the low-frequency targets miss.
-  const next = ({ taps }: Replacement) => start.map((uh, i) => (uh * (1 + taps[i]!.low)) / (1 + taps[i]!.working));
-  return mended('as it worked', job, start, next, (a, b) => a.worst.working < b.worst.working - NEAR, inferred, old);
+  const judge = (found: Found, wish: Job): Judged => {
+    const one = replacementOf('as it worked', wish, found, inferred, old, false);
+    seen.set(found, one);
+    const next = start.map((uh, i) => (uh * (1 + one.taps[i]!.low)) / (1 + one.taps[i]!.working));
+    return { off: one.worst.working, next };
+  };
+  const found = mended(job, start, judge);
+  return 'why' in found ? { ok: false, why: found.why } : { ok: true, of: seen.get(found.found)! };
 }
 
 /** As it was: the old places at the old pitch, with a wire that goes in. */
@@ -170,25 +226,65 @@ export function asItWas(job: Job, inferred: InferredCoil, old: OldAtWork): Tried
     );
   const was = coilOf(inferred);
   const pitchMm = Math.round(1e4 * was.shape.pitchMm) / 1e4;
-  const wires = job.wires === 'stock' ? job.wires : job.wires.filter((wire) => wire.overallMm <= pitchMm);
+  const known = wiresFor(job);
+  const wires = known.filter((wire) => wire.overallMm <= pitchMm);
   if (wires.length === 0)
     return no(
       'wire-above-pitch',
-      `wires of ${(job.wires as readonly { overallMm: number }[]).map(({ overallMm }) => lengthText(overallMm, 3)).join(', ')} for the old pitch of ${lengthText(pitchMm, 4)}`,
+      `wires of ${known.map(({ overallMm }) => lengthText(overallMm, 3)).join(', ')} for the old pitch of ${lengthText(pitchMm, 4)}`,
       `a wire no thicker than ${lengthText(pitchMm, 3)} over its covering`,
       'add such a wire, or take replacement: as it worked',
     );
   const places = inferred.taps.map(({ positionMm }) => positionMm.value);
   const diametersMm = nearestTo(job, inferred.formerDiameterMm.value);
-  const asked: Job = {
-    ...job,
-    wires,
-    winding: { ...job.winding, pitch: pitchMm },
-    former: { ...job.former, diametersMm },
-  };
+  const former = { ...job.former, diametersMm };
   const start = inferred.taps.map(({ inductanceUh }) => inductanceUh.value);
-  const next = ({ found }: Replacement) => places.map((mm) => inductanceAtMm(found.chosen, mm));
-  return mended('as it was', asked, start, next, (a, b) => a.farthestMm < b.farthestMm - 0.01, inferred, old);
+  const judge = ({ chosen }: Found): Judged => ({
+    off: farthest(chosen, places),
+    next: places.map((mm) => inductanceAtMm(chosen, mm)),
+  });
+  const tried: Tried[] = [];
+  for (const winding of pitchesLike(job, wires, pitchMm)) {
+    // Where taps lie comes first; of coils that look alike the one with the least loss is taken.
+    const asked: Job = { ...job, ...winding, former, prefer: 'closest taps' };
+    if (candidatesOf(asked).length === 0) continue;
+    const one = mended(asked, start, judge);
+    if ('why' in one) {
+      tried.push({ ok: false, why: one.why });
+      continue;
+    }
+    const of = replacementOf('as it was', one.job, one.found, inferred, old, false);
+    tried.push({ ok: true, of });
+    // Taps within half a turn of where they were: no other pitch can look more alike.
+    if (of.farthestMm < pitchMm / 2) break;
+  }
+  const found = tried.flatMap((one) => (one.ok ? [one] : []));
+  const best = found.sort((a, b) => a.of.farthestMm - b.of.farthestMm)[0];
+  return (
+    best ??
+    tried[0] ??
+    no(
+      'pitch',
+      `the old pitch of ${lengthText(pitchMm, 4)} with ${wires.map(({ name }) => name).join(', ')}`,
+      'a pitch for a groove, for spacers, or for turns that touch',
+      'add a wire about as thick as the pitch, or take replacement: as it worked',
+    )
+  );
+}
+
+/** Thinner than this there is nothing to wind along, mm. */
+const THINNEST_SPACER_MM = 0.08;
+/** Close turns of another wire pass for the old ones when it is as thick within this part. */
+const AS_THICK = 0.1;
+
+/** Ways to wind that look like the old pitch: at that pitch itself, or close with wires nearly as thick. */
+function pitchesLike(job: Job, wires: readonly Wire[], pitchMm: number): Pick<Job, 'wires' | 'winding'>[] {
+  const spaces = wires.map((wire) => Math.round(1e3 * (pitchMm - wire.overallMm)) / 1e3);
+  const spacers = [...new Set(spaces.filter((mm) => mm >= THINNEST_SPACER_MM))].sort((a, b) => a - b);
+  const at = { wires, winding: { ...job.winding, pitch: pitchMm, spacers: spacers.length > 0 ? spacers : null } };
+  const thick = wires.filter((wire) => wire.overallMm > pitchMm * (1 - AS_THICK) && wire.covering !== 'bare');
+  const close = { wires: thick, winding: { ...job.winding, pitch: 'close' as const, spacers: null } };
+  return thick.length === 0 || job.former.body === 'ribbed' ? [at] : [at, close];
 }
 
 function no(code: string, got: string, expected: string, todo: string): Tried {

@@ -10,7 +10,8 @@ export type KindName =
   | 'resistance'
   | 'angle'
   | 'temperature'
-  | 'mass';
+  | 'mass'
+  | 'wire';
 
 export interface Kind {
   /** With its article, for messages: `a length`. */
@@ -37,4 +38,5 @@ export const KINDS: Readonly<Record<KindName, Kind>> = {
   angle: { noun: 'an angle', unit: 'deg', low: 1e-3, high: 3.6e5, offered: ['deg'], example: '30 deg' },
   temperature: { noun: 'a temperature', unit: 'degC', low: -80, high: 300, offered: ['degC'], example: '20 degC' },
   mass: { noun: 'a weight', unit: 'g', low: 1e-3, high: 1e5, offered: ['g', 'oz'], example: '35 g' },
+  wire: { noun: 'a length of wire', unit: 'm', low: 1e-2, high: 1e4, offered: ['m', 'ft'], example: '15.2 m' },
 };

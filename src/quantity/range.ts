@@ -89,6 +89,7 @@ function sample(kind: KindName): string {
     angle: '0 deg to 90 deg',
     temperature: '0 degC to 40 degC',
     mass: '20 g to 40 g',
+    wire: '10 m to 20 m',
   };
   return samples[kind];
 }

@@ -81,7 +81,7 @@ const REFUSED: readonly (readonly [string, KindName, string, string])[] = [
   ['20 uF', 'inductance', 'measures a capacitance', 'uH or mH'],
   ['20 uh', 'inductance', '"uh" is not known', 'write uH'],
   ['530 khz', 'frequency', '"khz" is not known', 'write kHz'],
-  ['20 kg', 'inductance', 'does not measure an inductance', 'uH or mH'],
+  ['20 kg', 'inductance', 'measures a weight', 'uH or mH'],
   ['20 furlong', 'length', '"furlong" is not known', 'mm or in'],
   ['1/0 in', 'length', 'a fraction over zero', '76 mm'],
   ['60-90 mm', 'length', 'looks like a range', '"to"'],

@@ -90,14 +90,13 @@ function wireOf(old: ReadOld, into: Filling, faults: Finding[]): OldWire {
         'keep the one that was measured best',
       ),
     );
-  const length = optional(into, group.length, 'wire-length', 'old.wire.length');
   return {
     ...nothing,
     covering: group.covering ?? null,
     bareMm: optional(into, group.bare, 'wire', 'old.wire.bare'),
     overallMm: overall ?? byCount[0] ?? null,
     massG: optional(into, group.weight, 'weight', 'old.wire.weight'),
-    lengthM: length === null ? null : { value: length.value / 1e3, uncertainty: length.uncertainty / 1e3 },
+    lengthM: optional(into, group.length, 'wire-length', 'old.wire.length'),
   };
 }
 

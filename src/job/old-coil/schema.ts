@@ -55,7 +55,7 @@ const wireGroup = z
       'What covers the copper; enamel when left out.',
     ).optional(),
     weight: reading('mass', 'All the wire of the coil, taken off and weighed with its covering.').optional(),
-    length: reading('length', 'All the wire of the coil, taken off and measured.').optional(),
+    length: reading('wire', 'All the wire of the coil, taken off and measured.').optional(),
   })
   .describe('The wire as measured; or its size and covering as text, such as 26 AWG single silk.');
 
