@@ -97,6 +97,8 @@ function inductanceAdvice(record: JudgedRecord, tap: number, uh: number, deviati
     }
   } else if (section) {
     advice.push(pitchKind === 'groove' ? words.groove : words[side]);
+    // A tap that is off by a turn is not moved by degrees.
+    if (advice.length > 1) return [...advice, ...(tap > 1 ? [words.first] : [])];
     const degrees = (section.degreesPerPercent * Math.abs(deviation)).toFixed(0);
     const way = side === 'high' ? 'back' : 'on';
     const fast = record.tapMethod.name === 'cut pair' || record.tapMethod.name === 'drawn in';
@@ -134,7 +136,7 @@ function adviceOf(
     case 'resistance': {
       const words = VERDICT.resistance;
       const advice: string[] = [words[side]];
-      if (nominal < 1) advice.push(words.fourWires);
+      if (nominal < 1 && side === 'high') advice.push(words.fourWires);
       if (celsius === null) advice.push(words.warm);
       if (tap !== null && tap > 1) advice.push(words.earlier);
       return advice;

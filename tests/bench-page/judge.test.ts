@@ -124,6 +124,7 @@ describe('advice', () => {
     const question = ask('uh-3');
     const few = judge(record, question, question.nominal! * (1 + fewPercent / 100));
     expect(few.advice.join()).toContain('one too few');
+    expect(few.advice.join()).not.toContain('along the wire');
     const high = judge(record, question, question.nominal! * 1.025);
     expect(high.advice.join()).not.toContain('one too');
     expect(high.advice.join()).toContain(`${(2.5 * degreesPerPercent).toFixed(0)}° along the wire, back`);
