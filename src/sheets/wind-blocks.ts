@@ -158,58 +158,93 @@ export function tapTable(
   return stack([whole, paragraph(TAPS.switches, widthMm, measure, { sizeMm: SMALL_MM })], 0.8);
 }
 
-/** Where round the former the taps stand; nothing when they stand in one line. */
-export function tapAngles(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
-  if (!isStaggered(record)) return null;
+/** The coil seen from above as a block. */
+function seenFromAbove(record: CoilRecord, measure: Measure): Block {
   const { shapes, box } = endView(record, 11, measure);
-  const size = box.right - box.left;
-  const words = paragraph(DRAWING.aboveWords, widthMm - size - 4, measure, { sizeMm: SMALL_MM });
-  const drawn: Block = {
-    widthMm: size,
+  return {
+    widthMm: box.right - box.left,
     heightMm: box.top - box.bottom,
     shapes: movedAll({ shapes }, -box.left, -box.top),
   };
+}
+
+/** Where round the former the taps stand; nothing when they stand in one line. */
+export function tapAngles(record: CoilRecord, widthMm: number, measure: Measure): Block | null {
+  if (!isStaggered(record)) return null;
+  const drawn = seenFromAbove(record, measure);
+  const words = paragraph(DRAWING.aboveWords, widthMm - drawn.widthMm - 4, measure, { sizeMm: SMALL_MM });
   return { ...stack([heading(DRAWING.above, widthMm, measure), beside([words, drawn], 4)], 0), widthMm };
 }
 
-/** The tap of this coil, drawn, and how it is made; in `brief` the words under the pictures do. */
-export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure, brief = false): Block {
-  const method = record.tapMethod;
-  const { wire } = record.windings[0]!;
-  const panels = TAP_WORDS.STAGES[method.name].map((words, i) => {
+/** The three pictures of the tap of this coil, with their words. */
+function tapPanels(record: CoilRecord, measure: Measure): Block {
+  const { name } = record.tapMethod;
+  const panels = TAP_WORDS.STAGES[name].map((words, i) => {
     const stage = i as 0 | 1 | 2;
     const drawn: Block = {
       widthMm: PANEL_MM.width,
-      heightMm: panelHeight(method.name),
-      shapes: movedAll(tapPicture(method.name, stage), 0, -panelHeight(method.name)),
+      heightMm: panelHeight(name),
+      shapes: movedAll(tapPicture(name, stage), 0, -panelHeight(name)),
     };
     const under = paragraph(words, PANEL_MM.width - 2, measure, { sizeMm: SMALL_MM });
     return { ...stack([drawn, under], 0.8), widthMm: PANEL_MM.width };
   });
-  const how = list(
-    (brief ? [] : method.how).map((text, i) => ({ mark: `${i + 1}.`, text })),
-    widthMm,
-    measure,
-  );
-  const bared: Block = {
+  return beside(panels, 0.5);
+}
+
+/** How an end of this wire is bared: its picture, and the words at that width. */
+function baring(record: CoilRecord, widthMm: number, measure: Measure): [picture: Block, words: Block] {
+  const { wire } = record.windings[0]!;
+  const picture: Block = {
     widthMm: BARING_MM.width,
     heightMm: BARING_MM.height,
     shapes: movedAll(baringPicture(coveringKind(wire)), 0, -BARING_MM.height),
   };
-  const baring = paragraph(
-    TAP_WORDS.baring(wire.covering, wire.strands, wire.solderable),
-    widthMm - BARING_MM.width - 3,
-    measure,
-    { sizeMm: SMALL_MM },
-  );
-  const head = heading(TAP_WORDS.HEADING[method.name], widthMm, measure);
-  return { ...stack([head, beside(panels, 0.5), ...how, beside([bared, baring], 3)], 0.8), widthMm };
+  const text = TAP_WORDS.baring(wire.covering, wire.strands, wire.solderable);
+  return [picture, paragraph(text, widthMm, measure, { sizeMm: SMALL_MM })];
 }
 
-/** The other steps, each with its box and number; steps that are rows of the tap table are named in their place. */
-export function stepItems(record: CoilRecord, widthMm: number, measure: Measure, sizeMm = BODY_MM): Block[] {
+/** The tap of this coil, drawn, and how it is made. */
+export function tapMethod(record: CoilRecord, widthMm: number, measure: Measure): Block {
+  const { name, how } = record.tapMethod;
+  const steps = list(
+    how.map((text, i) => ({ mark: `${i + 1}.`, text })),
+    widthMm,
+    measure,
+  );
+  const head = heading(TAP_WORDS.HEADING[name], widthMm, measure);
+  const bared = beside(baring(record, widthMm - BARING_MM.width - 3, measure), 3);
+  return { ...stack([head, tapPanels(record, measure), ...steps, bared], 0.8), widthMm };
+}
+
+/** The same where room is short: the words under the pictures do, and the view from above stands beside the bared end. */
+export function tapBriefly(record: CoilRecord, widthMm: number, measure: Measure): Block {
+  const head = heading(TAP_WORDS.HEADING[record.tapMethod.name], widthMm, measure);
+  const panels = tapPanels(record, measure);
+  if (!isStaggered(record)) {
+    const bared = beside(baring(record, widthMm - BARING_MM.width - 3, measure), 3);
+    return { ...stack([head, panels, bared], 0.8), widthMm };
+  }
+  const above = seenFromAbove(record, measure);
+  const inner = widthMm - above.widthMm - 4;
+  const words = paragraph(`${DRAWING.above}. ${DRAWING.aboveWords}`, inner, measure, { sizeMm: SMALL_MM });
+  const left = { ...stack([...baring(record, inner, measure), words], 0.8), widthMm: inner };
+  return { ...stack([head, panels, beside([left, above], 4)], 0.8), widthMm };
+}
+
+/**
+ * The other steps, each with its box and number; steps that are rows of the tap table are named in their place. `part` leaves those
+ * out that come when all is wound, or has those alone.
+ */
+export function stepItems(
+  record: CoilRecord,
+  widthMm: number,
+  measure: Measure,
+  sizeMm: number = BODY_MM,
+  part: 'all' | 'winding' | 'after' = 'all',
+): Block[] {
   const items: Block[] = [];
-  const { steps } = record;
+  const steps = record.steps.filter(({ kind }) => part === 'all' || (kind === 'after') === (part === 'after'));
   const indent = 11;
   const add = (mark: Shape[], words: string) => {
     const text = paragraph(words, widthMm - indent, measure, { sizeMm });
@@ -228,6 +263,8 @@ export function stepItems(record: CoilRecord, widthMm: number, measure: Measure,
     while (steps[i + 1]?.kind === 'tap') last = steps[++i]!;
     add([], STEPS.rows(step.step, last.step));
   }
+  const after = record.steps.filter(({ kind }) => kind === 'after');
+  if (part === 'winding' && after.length > 0) add([], STEPS.overleaf(after[0]!.step, after.at(-1)!.step));
   return items;
 }
 

@@ -77,6 +77,9 @@ export const TAPS = {
 export const STEPS = {
   heading: 'Steps: tick each when it is done',
   more: 'Steps, continued',
+  after: 'Steps when it is wound',
+  overleaf: (first: number, last: number) =>
+    `${first === last ? `Step ${first}` : `Steps ${first} to ${last}`}: on the sheet to check by.`,
   rows: (first: number, last: number) =>
     first === last ? `Step ${first}: in the table.` : `Steps ${first} to ${last}: row by row in the table.`,
 } as const;
