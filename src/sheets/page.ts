@@ -33,6 +33,8 @@ export interface DocumentInfo {
 }
 
 const POINTS = 72 / 25.4;
+/** Pages written before the library's memory is let go. */
+const PAGES_AT_ONCE = 50;
 
 /** What is used of a glyph and of a face of pdfkit; its type declarations leave them out. */
 interface Glyph {
@@ -44,6 +46,7 @@ interface Face {
   readonly scale: number;
   readonly font: { glyphForCodePoint(code: number): Glyph };
   layoutRun(text: string): unknown;
+  layoutCache: object;
 }
 
 /**
@@ -69,8 +72,8 @@ function setPlainly(face: Face): void {
 /** A document to lay out for and then to write, once. */
 export class Paper implements Measure {
   readonly #document: PDFKit.PDFDocument;
-  readonly #chunks: Uint8Array[] = [];
   readonly #ended: Promise<void>;
+  readonly #faces: Face[] = [];
   readonly #widths: [Map<string, number>, Map<string, number>] = [new Map(), new Map()];
 
   /** The weight and dash that the page is set to. */
@@ -102,9 +105,10 @@ export class Paper implements Measure {
       ['bold', files.bold],
     ] as const) {
       this.#document.registerFont(name, file).font(name);
-      setPlainly((this.#document as unknown as { _font: Face })._font);
+      const face = (this.#document as unknown as { _font: Face })._font;
+      setPlainly(face);
+      this.#faces.push(face);
     }
-    this.#document.on('data', (chunk: Uint8Array) => this.#chunks.push(chunk));
     this.#ended = new Promise((resolve) => this.#document.on('end', resolve));
   }
 
@@ -121,15 +125,31 @@ export class Paper implements Measure {
 
   /** The bytes of a document of these pages. */
   async write(pages: readonly Page[]): Promise<Uint8Array> {
-    for (const page of pages) {
+    const chunks: Uint8Array[] = [];
+    await this.stream(pages, (chunk) => chunks.push(chunk));
+    return Buffer.concat(chunks);
+  }
+
+  /** The same piece by piece, for documents of any length: what is written is not kept. */
+  async stream(pages: Iterable<Page> | AsyncIterable<Page>, take: (chunk: Uint8Array) => void): Promise<void> {
+    this.#document.on('data', take);
+    let count = 0;
+    for await (const page of pages) {
       this.#document.addPage({ size: [page.widthMm * POINTS, page.heightMm * POINTS], margin: 0 }).strokeColor('black');
       this.#pen = '';
       for (const picture of page.pictures ?? []) this.#place(picture, page.heightMm);
       for (const shape of page.shapes) this.#draw(shape, page.heightMm);
+      if (++count % PAGES_AT_ONCE === 0) await this.#letGo();
     }
     this.#document.end();
     await this.#ended;
-    return Buffer.concat(this.#chunks);
+  }
+
+  /** The library packs pages behind its back and remembers every line that it has set: both are given time and let go. */
+  async #letGo(): Promise<void> {
+    await new Promise((resolve) => setImmediate(resolve));
+    for (const width of this.#widths) width.clear();
+    for (const face of this.#faces) face.layoutCache = Object.create(null);
   }
 
   #place({ png, x, y, widthMm, heightMm }: PlacedPicture, height: number): void {

@@ -38,6 +38,8 @@ async function bundled(part) {
 try {
   copyFileSync(createRequire(import.meta.url).resolve('manifold-3d/manifold.wasm'), join(work, 'manifold.wasm'));
   symlinkSync(join(root, 'node_modules'), join(work, 'node_modules'));
+  for (const font of ['DejaVuSans', 'DejaVuSans-Bold'])
+    copyFileSync(join(root, 'dist', `${font}.ttf`), join(work, `${font}.ttf`));
   const bare = join(work, 'bare.mjs');
   writeFileSync(bare, '');
   line('coilwright --help against a bare Node start', pair([program, '--help'], [bare], 15), '1.9 or less');
@@ -74,10 +76,10 @@ try {
       `${(coarse.ms / alone.ms).toFixed(3)} of the time (goal 0.1 or less); ${coarse.ms.toFixed(0)} ms against ` +
       `${alone.stopped ? 'more than ' : ''}${alone.ms.toFixed(0)} ms`,
   );
-  const { status, stdout, stderr } = spawnSync(process.execPath, [await bundled('hundred'), record], {
-    encoding: 'utf8',
-  });
-  process.stdout.write(status === 0 ? stdout : stderr);
+  for (const part of ['hundred', 'sheet']) {
+    const { status, stdout, stderr } = spawnSync(process.execPath, [await bundled(part), record], { encoding: 'utf8' });
+    process.stdout.write(status === 0 ? stdout : stderr);
+  }
 
   for (const part of ['search', 'field']) {
     await import(pathToFileURL(await bundled(part)));
