@@ -4,6 +4,7 @@ import type { Argv } from 'yargs';
 import { OLD_COIL_FILE } from '../src/job/file-kind.ts';
 import { slug } from '../src/job/name.ts';
 import { readOldCoil } from '../src/job/old-coil-file.ts';
+import type { matchCoil } from '../src/match.ts';
 import { checkFolder, writeFolder } from '../src/output/transaction.ts';
 import { checkOut } from './check-out.ts';
 import { explainedTap } from './explained-tap.ts';
@@ -45,14 +46,22 @@ export interface MatchOptions {
   readonly explain?: string | undefined;
 }
 
+/** What infers and plans, loaded only once there is an old coil. */
+export type LoadMatcher = () => Promise<typeof matchCoil>;
+
 /** Throws a Fault with exit code 2, 3, 4 or 5. Nothing is written unless all of it is. */
-export async function match(options: MatchOptions, terminal: Terminal, version: string): Promise<void> {
+export async function runMatch(
+  options: MatchOptions,
+  terminal: Terminal,
+  version: string,
+  load: LoadMatcher,
+): Promise<void> {
   checkOut(options.out);
   const file = readOldCoil(await readJobText(options.coil, terminal, OLD_COIL_FILE), options.coil);
   const target = resolve(terminal.folder, options.out ?? join('out', slug(file.job.name)));
   await checkFolder(target);
-  const { matchCoil } = await import('../src/match.ts');
-  const { record, files } = await matchCoil(file, { version });
+  const matcher = await load();
+  const { record, files } = await matcher(file, { version });
   const explained = await explainedTap(record, options.explain);
   const folder = await writeFolder(target, files);
   if (options.json) {
@@ -65,4 +74,9 @@ export async function match(options: MatchOptions, terminal: Terminal, version: 
   terminal.out(showMatch(record, terminal.columns, plain));
   terminal.out(`\n${showPlan(record, shown, files, terminal.columns, plain)}`);
   if (explained !== null) terminal.out(`\n${showExplain(explained, terminal.columns)}`);
+}
+
+/** With the real matcher. */
+export async function match(options: MatchOptions, terminal: Terminal, version: string): Promise<void> {
+  await runMatch(options, terminal, version, async () => (await import('../src/match.ts')).matchCoil);
 }

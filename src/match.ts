@@ -13,7 +13,7 @@ import type { Job } from './job/job.ts';
 import type { MatchFile } from './job/old-coil-file.ts';
 import { infer } from './match/infer.ts';
 import { oldAtWork } from './match/old-at-work.ts';
-import { asItWas, asItWorked, inFull, type Replacement, type Tried } from './match/replace.ts';
+import { asItWas, asItWorked, type Replacement, type Tried } from './match/replace.ts';
 import type { Contradiction, InferredCoil } from './match/types.ts';
 import { type Produced, produce } from './plan.ts';
 import { lengthText, percentText, tidy } from './quantity/format.ts';
@@ -144,7 +144,7 @@ function matched(file: MatchFile): Produced {
   const was = asItWas(job, inferred, work);
   const tried: Tried = file.replacement === 'as it was' ? was : worked;
   if (!tried.ok) throw tried.why;
-  const chosen = inFull(tried.of, inferred, work);
+  const chosen = tried.of;
   const block = matchedOf({ name: job.name, old: file.old, inferred, work, chosen, worked, was });
   const extra = { verb: 'match' as const, matched: block, warnings: warningsOf(file, inferred, chosen) };
   return { job: chosen.job, found: chosen.found, extra };

@@ -3,7 +3,7 @@
  * As it was: every tap lies where it lay, at the old pitch, with what inductance that gives. Both are found by the search of `plan`;
  * what the first round leaves over (crowding of another wire, gaps of the new taps) goes into the targets of the next.
  */
-import type { Terminal, WorkingCoil } from '../coil/working-coil.ts';
+import type { WorkingCoil } from '../coil/working-coil.ts';
 import { Fault } from '../fault.ts';
 import type { Job } from '../job/job.ts';
 import { lengthText } from '../quantity/format.ts';
@@ -26,6 +26,8 @@ export interface TapAgainst {
   readonly low: number;
   /** The same at the frequency at which the old one worked, the rest as the switch leaves it. */
   readonly working: number;
+  /** Working over low-frequency inductance. */
+  readonly crowded: number;
   readonly workingUh: number;
   readonly q: number;
 }
@@ -80,60 +82,44 @@ function nearestTo({ former }: Job, mm: number): Job['former']['diametersMm'] {
   return former.kind === 'tube' ? of : { listMm: [Math.min(of.highMm, Math.max(of.lowMm, mm))] };
 }
 
-/** Taps at which the field is solved when only a few are looked at: the difference from low frequency is smooth in between. */
-const LOOKED = 3;
-
+/** Figures of every tap; `like` are those of a coil so much alike that its current crowds as this one's does. */
 function against(
   design: Design,
   working: WorkingCoil,
   inferred: InferredCoil,
   old: OldAtWork,
-  all: boolean,
+  like: readonly TapAgainst[] | null,
 ): TapAgainst[] {
   const { coil, taps } = design;
   const first = coil.positionMm(0);
-  // Shorted turns take more or less of it from tap to tap.
-  const smooth = old.conditions.rest === 'open' || old.conditions.rest === 'disconnected';
-  const count = all || !smooth ? taps.length : Math.min(LOOKED, taps.length);
-  const looked = Array.from({ length: count }, (_, i) =>
-    count === 1 ? taps.length - 1 : Math.round((i * (taps.length - 1)) / (count - 1)),
-  );
-  const solved = new Map(
-    looked.map((i) => [i, working.terminal(taps[i]!.turn, old.positions[i]!.working.kHz, old.conditions.rest)]),
-  );
-  const shared = (i: number, of: (at: Terminal, i: number) => number): number => {
-    const own = solved.get(i);
-    if (own !== undefined) return of(own, i);
-    const next = looked.findIndex((one) => one > i);
-    const [low, high] = [looked[next - 1]!, looked[next]!];
-    const [from, to] = [of(solved.get(low)!, low), of(solved.get(high)!, high)];
-    return from + ((to - from) * (i - low)) / (high - low);
-  };
   return taps.map(({ turn, inductanceUh }, i) => {
-    const crowded = shared(i, (at, k) => at.inductanceUh / taps[k]!.inductanceUh);
+    const was = old.positions[i]!.working;
+    const known = like?.[i];
+    const at = known === undefined ? working.terminal(turn, was.kHz, old.conditions.rest) : null;
+    const crowded = at === null ? known!.crowded : at.inductanceUh / inductanceUh;
     const workingUh = crowded * inductanceUh;
     return {
       turn,
       positionMm: coil.positionMm(turn) - first,
       low: inductanceUh / inferred.taps[i]!.inductanceUh.value - 1,
-      working: workingUh / old.positions[i]!.working.inductanceUh - 1,
+      working: workingUh / was.inductanceUh - 1,
+      crowded,
       workingUh,
-      q: shared(i, (at) => at.q),
+      q: at?.q ?? known!.q,
     };
   });
 }
 
-/** `all` taps by the field, or a few and the rest in between. */
 function replacementOf(
   way: Way,
   job: Job,
   found: Found,
   inferred: InferredCoil,
   old: OldAtWork,
-  all: boolean,
+  like: readonly TapAgainst[] | null = null,
 ): Replacement {
   const working = found.chosen.working ?? workingCoilOf(job, found.chosen);
-  const taps = against(found.chosen, working, inferred, old, all);
+  const taps = against(found.chosen, working, inferred, old, like);
   const off = taps.map((tap) => Math.abs(tap.working));
   const tap = off.indexOf(Math.max(...off));
   return {
@@ -149,13 +135,10 @@ function replacementOf(
   };
 }
 
-/** The same with every tap by the field: for the way that is made. */
-export const inFull = ({ way, job, found }: Replacement, inferred: InferredCoil, old: OldAtWork): Replacement =>
-  replacementOf(way, job, found, inferred, old, true);
-
-const wishing = (job: Job, inductancesUh: readonly number[]): Job => ({
+/** Targets are told in the record: five digits are more than any of them is known to. */
+const wishing = (job: Job, targets: readonly number[]): Job => ({
   ...job,
-  want: { kind: 'list', inductancesUh },
+  want: { kind: 'list', inductancesUh: targets.map((uh) => Number(uh.toPrecision(5))) },
 });
 const rising = (list: readonly number[]): boolean => list.every((one, i) => i === 0 || one > list[i - 1]!);
 
@@ -203,16 +186,17 @@ function mended(job: Job, start: readonly number[], judge: (found: Found, job: J
 /** As it worked: the old inductances at work. */
 export function asItWorked(job: Job, inferred: InferredCoil, old: OldAtWork): Tried {
   const start = inferred.taps.map(({ inductanceUh }) => inductanceUh.value);
-  const seen = new Map<Found, Replacement>();
+  let first: Replacement | null = null;
   // What a tap is off because it must stand at a hole is not to be mended, only what the low-frequency targets miss.
   const judge = (found: Found, wish: Job): Judged => {
-    const one = replacementOf('as it worked', wish, found, inferred, old, false);
-    seen.set(found, one);
+    const one = replacementOf('as it worked', wish, found, inferred, old, first?.taps);
+    first ??= one;
     const next = start.map((uh, i) => (uh * (1 + one.taps[i]!.low)) / (1 + one.taps[i]!.working));
     return { off: one.worst.working, next };
   };
   const found = mended(job, start, judge);
-  return 'why' in found ? { ok: false, why: found.why } : { ok: true, of: seen.get(found.found)! };
+  if ('why' in found) return { ok: false, why: found.why };
+  return { ok: true, of: replacementOf('as it worked', found.job, found.found, inferred, old) };
 }
 
 /** As it was: the old places at the old pitch, with a wire that goes in. */
@@ -253,7 +237,7 @@ export function asItWas(job: Job, inferred: InferredCoil, old: OldAtWork): Tried
       tried.push({ ok: false, why: one.why });
       continue;
     }
-    const of = replacementOf('as it was', one.job, one.found, inferred, old, false);
+    const of = replacementOf('as it was', one.job, one.found, inferred, old);
     tried.push({ ok: true, of });
     // Taps within half a turn of where they were: no other pitch can look more alike.
     if (of.farthestMm < pitchMm / 2) break;
