@@ -47,7 +47,9 @@ const comparisonSchema = z.strictObject({
   workingPercent: num.describe('new over old at that frequency'),
   oldQ: num,
   newQ: num,
-  withinLimits: z.boolean().describe('the new inductance lies within the 95 % limits of the old one'),
+  withinLimits: z
+    .boolean()
+    .describe('at work the new inductance lies within the 95 % limits of the old one, in proportion'),
 });
 
 const waySchema = z.strictObject({

@@ -65,6 +65,9 @@ function oldOf(name: string, old: OldCoil, inferred: InferredCoil, work: OldAtWo
   };
 }
 
+/** Whether so many times the old inductance still lies within its limits. */
+const within = ({ value, low, high }: Estimate, ratio: number) => ratio >= low / value && ratio <= high / value;
+
 const percent = (fraction: number) => decimals(100 * fraction, 3);
 
 function comparisonOf(of: Replacement, inferred: InferredCoil, work: OldAtWork): Matched['comparison'] {
@@ -88,7 +91,7 @@ function comparisonOf(of: Replacement, inferred: InferredCoil, work: OldAtWork):
       workingPercent: percent(tap.working),
       oldQ: significant(working.q, 3),
       newQ: significant(tap.q, 3),
-      withinLimits: newUh >= was.inductanceUh.low && newUh <= was.inductanceUh.high,
+      withinLimits: within(was.inductanceUh, 1 + tap.working),
     };
   });
 }

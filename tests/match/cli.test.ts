@@ -34,7 +34,10 @@ describe('match', () => {
     const rows = out.split('\n').map((line) => line.trim().split(/\s+/));
     let compared = 0;
     for (const one of record.matched!.comparison) {
-      const row = rows.find((cells) => cells[0] === `${one.tap}` && cells[1] === `${one.oldTurn}` && cells.length > 8)!;
+      const row = rows.find(
+        (cells) =>
+          cells[1] === `${one.oldTurn}` && cells[2] === `${Number(one.newTurn.toFixed(3))}` && cells.length > 8,
+      )!;
       expect(Math.abs(Number(row[3]) / one.oldWorkingUh - 1)).toBeLessThan(1e-3);
       expect(Math.abs(Number(row[4]) / one.newWorkingUh - 1)).toBeLessThan(1e-3);
       compared++;
