@@ -67,7 +67,7 @@ function refuse({ job }: MatchFile, contradictions: readonly Contradiction[]): F
   );
 }
 
-/** The line of the key, or of the section in which it stands. */
+/** The line of the key, or of the first one in its section. */
 function lineOf({ source }: Job, dotted: string): number | undefined {
   let key = dotted;
   while (key !== '') {
@@ -76,7 +76,9 @@ function lineOf({ source }: Job, dotted: string): number | undefined {
     const cut = Math.max(key.lastIndexOf('.'), key.lastIndexOf('['));
     key = cut < 0 ? '' : key.slice(0, cut);
   }
-  return undefined;
+  const section = dotted.split('.')[0] ?? '';
+  const lines = Object.entries(source.lines).flatMap(([at, line]) => (at.startsWith(`${section}.`) ? [line] : []));
+  return lines.length === 0 ? undefined : Math.min(...lines);
 }
 
 /** The coil that fits what was measured; throws a Fault (exit 3). */

@@ -1,11 +1,13 @@
 /** Old coils that cannot be inferred: too little was measured, or what was measured cannot be of one single-layer winding. */
 import { Fault, type FaultParts } from '../fault.ts';
-import { lengthText, percentText, tidy } from '../quantity/format.ts';
+import { frequencyText, lengthText, percentText, tidy } from '../quantity/format.ts';
 import { nameOf } from './contradictions.ts';
 import { figure, type Solved, spreadsOf } from './figures.ts';
 import { nextMeasurements } from './next.ts';
 import type { LostTap } from './patterns.ts';
 import { BOUND, type Problem, tapKey } from './problem.ts';
+import { resonantKhz } from './readings.ts';
+import type { State } from './state.ts';
 import type { OldCoil } from './types.ts';
 
 /** A limit this wide, half over value, is no answer. */
@@ -160,5 +162,43 @@ export function refuseImpossible(old: OldCoil): void {
       expected: 'a pitch no less than the wire over its covering',
       todo: 'measure over many turns and divide; check the diameter of the wire',
     });
+  for (const { of, mm } of old.diameters) {
+    const former = wire === null ? mm.value : mm.value - { former: 0, mean: 1, 'over wire': 2 }[of] * wire;
+    if (wire !== null && former < 2 * wire) {
+      parts.push({
+        code: 'wire-too-thick',
+        place: { key: 'old.wire' },
+        got: `wire of ${lengthText(wire, 3)} on a form of ${lengthText(Math.max(0, former), 3)}`,
+        expected: `a wire no thicker than half the form, ${lengthText(Math.max(0, former) / 2, 3)}`,
+        todo: 'check both diameters and their units',
+      });
+      break;
+    }
+  }
   if (parts.length > 0) throw new Fault(3, parts);
+}
+
+/** A meter this near to the coil's own resonance, in inductance shown over inductance, no longer tells it. */
+const MOST_RAISED = 2;
+
+/** A fault for an inductance read near or above the own resonance of the coil; null when none was. */
+export function tooNearResonance({ old, known, atWork }: Problem, state: State): Fault | null {
+  const parts = known.flatMap(({ tap, index }, t): FaultParts[] => {
+    const work = atWork.get(`${tapKey(old, index)}.inductance`);
+    if (tap.inductance === null || work === undefined) return [];
+    const { kHz } = tap.inductance;
+    const uh = state.inductanceUh(state.turns[t]!) * work.crowded;
+    const own = resonantKhz(uh, 0, { crowded: 1, ownPf: work.ownPf });
+    if (!(work.ownPf > 0) || (kHz / own) ** 2 < 1 - 1 / MOST_RAISED) return [];
+    return [
+      {
+        code: 'meter-near-resonance',
+        place: { key: `old.${tapKey(old, index)}.inductance` },
+        got: `an inductance read at ${frequencyText(kHz)} on ${index === old.taps.length - 1 ? 'the whole coil' : `tap ${tap.name}`}, which resonates by itself at about ${frequencyText(own)}`,
+        expected: `a meter at ${frequencyText(own / 4)} or less`,
+        todo: 'check the frequency of the meter, or read at a lower one; or give the resonance with a known capacitor',
+      },
+    ];
+  });
+  return parts.length === 0 ? null : new Fault(3, parts);
 }

@@ -8,7 +8,7 @@
  */
 import { angleOf } from '../coil/layout.ts';
 import { contradictionsIn, residualsOf, tested } from './contradictions.ts';
-import { refuseImpossible, tooLittle } from './doubts.ts';
+import { refuseImpossible, tooLittle, tooNearResonance } from './doubts.ts';
 import { estimateOf, figure, type Mixture, quantile, type Solved, type Spread, spreadsOf } from './figures.ts';
 import { jacobian, leastSquares, stateOf } from './fit.ts';
 import { type LostWidth, nextMeasurements } from './next.ts';
@@ -42,6 +42,8 @@ export function infer(old: OldCoil, options: InferOptions = {}): InferredCoil {
   // Without the coil's own capacitance a resonance would pull every turn.
   workAnew(problem, first);
   let solved = solve(problem, rows, first, free);
+  const near = tooNearResonance(problem, solved.state);
+  if (near !== null) throw near;
   const test = contradictionsIn(problem, rows, solved.state, free);
   if (options.leaveOut === true && test.contradictions.length > 0) {
     rows = test.kept;
