@@ -29,7 +29,7 @@ const WRONG: readonly (readonly [readonly string[], string])[] = [
     [],
     `coilwright: not a command
   got       no verb
-  expected  one of: start, plan, survey, stock
+  expected  one of: start, plan, survey, match, stock
   to do     see: coilwright --help
 `,
   ],
@@ -37,7 +37,7 @@ const WRONG: readonly (readonly [readonly string[], string])[] = [
     ['pln', 'job.yaml'],
     `coilwright: not a command
   got       the verb "pln"
-  expected  one of: start, plan, survey, stock
+  expected  one of: start, plan, survey, match, stock
   to do     did you mean plan?
 `,
   ],
@@ -45,7 +45,7 @@ const WRONG: readonly (readonly [readonly string[], string])[] = [
     ['wind'],
     `coilwright: not a command
   got       the verb "wind"
-  expected  one of: start, plan, survey, stock
+  expected  one of: start, plan, survey, match, stock
   to do     see: coilwright --help
 `,
   ],
@@ -112,7 +112,7 @@ coilwright: not a command
     `coilwright: not a command
   got       the starter "low-bench-reciever"
   expected  one of: low-bench-receiver, cracked-form-replacement,
-            forty-coil-lot, found-coil, found-sections
+            forty-coil-lot, found-coil, found-sections, broken-form
   to do     did you mean low-bench-receiver?
 `,
   ],
