@@ -53,7 +53,7 @@ describe('the replacement', () => {
   }, 60_000);
 
   it('is quick for 12 taps, without its files', () => {
-    // A processor that runs other tests besides is up to twice as slow; alone it takes about 2 s.
+    // 3 s are meant for an idle machine; with ten other processes on two cores it took 3.1 to 3.8 s, so twice that is allowed here.
     console.log(`12 taps: ${seconds.toFixed(2)} s of the processor`);
     expect(record.windings[0]!.taps).toHaveLength(12);
     expect(seconds).toBeLessThan(6);
