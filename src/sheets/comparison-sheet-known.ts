@@ -60,10 +60,10 @@ export function coils(record: MatchRecord, widthMm: number, measure: Measure): P
     [COILS.hand, COILS.wound(old.hand, old.earthedEnd), '', COILS.wound(record.frame.hand, record.frame.earthedEnd)],
   ];
   const heads: Head[] = [
-    [COILS.figure, 42, {}],
-    [COILS.old, 44, {}],
-    [COILS.limits, 60, {}],
-    [COILS.new, 42, {}],
+    [COILS.figure, 38, {}],
+    [COILS.old, 50, {}],
+    [COILS.limits, 50, {}],
+    [COILS.new, 50, {}],
   ];
   return parted(
     { heading: COILS.heading, more: COILS.more },
@@ -74,7 +74,7 @@ export function coils(record: MatchRecord, widthMm: number, measure: Measure): P
   );
 }
 
-const percent = (share: number) => fixed(100 * share, 0);
+const percent = (share: number) => (share > 0 && share < 0.005 ? '<1' : fixed(100 * share, 0));
 
 /** A heading and its items. */
 function told(words: string, items: readonly string[], widthMm: number, measure: Measure): Block[] {
@@ -110,9 +110,7 @@ const tapName = (tap: number, name: string) => (name === `${tap}` ? `Tap ${tap}`
 /** Empty when no tap is lost. */
 export function proposals({ matched }: MatchRecord, widthMm: number, measure: Measure): Block[] {
   if (matched.proposals.length === 0) return [];
-  const items = matched.proposals.map(({ tap, text, confidence }) =>
-    PROPOSED.text(/^\d+$/.test(tap) ? `Tap ${tap}` : tap, sentence(text), percent(confidence)),
-  );
+  const items = matched.proposals.map(({ text, confidence }) => PROPOSED.text(sentence(text), percent(confidence)));
   return told(PROPOSED.heading, items, widthMm, measure);
 }
 
@@ -123,11 +121,10 @@ function reading(record: MatchRecord, value: number, unit: string): string {
   return unit === '' ? number : `${number} ${unit === 'uH' ? 'µH' : unit === 'ohm' ? 'Ω' : unit}`;
 }
 
+/** Empty when there is none; the words under the measurements say so then. */
 export function contradictions(record: MatchRecord, widthMm: number, measure: Measure): Block[] {
   const found = record.matched.contradictions;
-  const head = CONTRADICTED.heading;
-  if (found.length === 0)
-    return [heading(head, widthMm, measure), paragraph(CONTRADICTED.none, widthMm, measure, { sizeMm: SMALL_MM })];
+  if (found.length === 0) return [];
   const items = found.map(({ text, got, expected, unit, sigmas }) =>
     CONTRADICTED.text(
       sentence(text),
@@ -136,7 +133,7 @@ export function contradictions(record: MatchRecord, widthMm: number, measure: Me
       fixed(Math.abs(sigmas), 1),
     ),
   );
-  return told(head, items, widthMm, measure);
+  return told(CONTRADICTED.heading, items, widthMm, measure);
 }
 
 export function nextOnes({ matched }: MatchRecord, widthMm: number, measure: Measure): Block[] {
@@ -177,14 +174,15 @@ export function measured(record: MatchRecord, widthMm: number, measure: Measure)
 /** Chi-square beyond this many standard deviations of its distribution is not what errors as stated give. */
 const UNLIKELY = 2;
 
-export function fitText({ matched: { fit } }: MatchRecord, widthMm: number, measure: Measure): Block {
+export function fitText({ matched: { fit, contradictions } }: MatchRecord, widthMm: number, measure: Measure): Block {
   const words = () => {
     if (fit === null) return MEASURED.spare;
     const off = (fit.chiSquare - fit.freedom) / Math.sqrt(2 * fit.freedom);
     const verdict = off > UNLIKELY ? MEASURED.loose : off < -UNLIKELY ? MEASURED.tight : MEASURED.good;
     return MEASURED.fit(fixed(fit.chiSquare, 1), fit.freedom, verdict);
   };
-  return paragraph(words(), widthMm, measure, { sizeMm: SMALL_MM });
+  const none = contradictions.length === 0 ? `${CONTRADICTED.none} ` : '';
+  return paragraph(`${none}${words()}`, widthMm, measure, { sizeMm: SMALL_MM });
 }
 
 /** Empty when everything was measured. */

@@ -56,7 +56,8 @@ export function against(record: MatchRecord, widthMm: number, measure: Measure):
   const unit = lengthUnit(units);
   const heads: Head[] = [
     [AGAINST.tap, 8, { bold: true }],
-    [AGAINST.which, 26, {}],
+    // Inches leave its words no line of their own.
+    [AGAINST.which, 25, units === 'metric' ? CENTRE : {}],
     [AGAINST.turns, 12, RIGHT],
     [AGAINST.position(unit), 15, RIGHT],
     [AGAINST.spread, 10, RIGHT],
@@ -122,7 +123,9 @@ export function againstHow({ matched }: MatchRecord, widthMm: number, measure: M
     AGAINST.worst(matched.worst.tap, signed(matched.worst.workingPercent, 2)),
     ...(bandLowKhz === null || bandHighKhz === null ? [] : [AGAINST.band(khz(bandLowKhz), khz(bandHighKhz))]),
   ];
-  const named = matched.old.taps.filter(({ tap, name }) => name !== `${tap}`);
+  const last = matched.old.taps.length;
+  // The whole coil is called that by every old coil.
+  const named = matched.old.taps.filter(({ tap, name }) => name !== `${tap}` && tap !== last);
   const names = named.map(({ tap, name }) => AGAINST.named(tap, name)).join(', ');
   return stack(
     [
@@ -182,13 +185,13 @@ export function ways(record: MatchRecord, widthMm: number, measure: Measure): Bl
   const total = heads.reduce((sum, [, share]) => sum + share, 0);
   const columns = heads.map(([title, share, rest]) => ({ head: title, widthMm: (widthMm * share) / total, ...rest }));
   const notes = list(
-    matched.ways.map((way) => ({ mark: '•', text: WAYS.cannot(sentence(way.way).slice(0, -1), sentence(way.text)) })),
+    matched.ways.filter((way) => !way.possible).map((way) => ({ mark: '•', text: sentence(way.text) })),
     widthMm,
     measure,
   );
   const how = paragraph(WAYS.how, widthMm, measure, { sizeMm: SMALL_MM });
   const body = table(columns, rows, measure, { rowMm: 4.7, sizeMm: SMALL_MM });
-  return [head, stack([body, how], 1), ...notes];
+  return [head, stack([body, how], 1.4), ...notes];
 }
 
 /** Rows of two halves side by side, to be read down the first half and then down the second. */

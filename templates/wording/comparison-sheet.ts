@@ -45,7 +45,7 @@ export const AGAINST = {
   plusMinus: (value: string, half: string) => `${value} ±${half}`,
   /** After turns that are not determined. */
   doubt: (turns: string) => `${turns}?`,
-  how: 'µH: low frequency, start to tap; at work: at the frequency beside it, with what the switch leaves of the rest. Off: new over old. Within, outside: of the 95 % limits of the old tap. ±: half width at 95 %, the wider side. A turn with a question mark is the likeliest of several.',
+  how: 'µH: low frequency, start to tap; at work: at the frequency beside it, with what the switch leaves of the rest. Off: new over old. Within, outside: at work, of the 95 % limits of the old tap in proportion. ±: half width at 95 %, the wider side. A turn with a question mark is the likeliest of several.',
   worst: (tap: number, percent: string) => `Farthest off at work: tap ${tap}, ${percent} %.`,
   named: (tap: number, name: string) => `${tap} ${name}`,
   names: (names: string) => `On the old set the taps are called: ${names}.`,
@@ -66,7 +66,6 @@ export const WAYS = {
   how: 'As it worked: the inductances of the old taps. As it was: their places, for looks. Farthest: from a tap to where it was.',
   none: '–',
   same: 'As it worked and as it was come to the same coil: the inductances of the old taps, at their places.',
-  cannot: (way: string, why: string) => `${way}: ${why}`,
   taps: 'Both ways, tap by tap',
   tapsMore: 'Both ways, tap by tap, continued',
   tap: 'tap',
@@ -110,14 +109,14 @@ export const TURNS = {
 
 export const PROPOSED = {
   heading: 'Lost taps, proposed from the pattern of the others',
-  text: (tap: string, text: string, percent: string) => `${tap}: ${text} Confidence ${percent} %.`,
+  text: (text: string, percent: string) => `${text} Confidence ${percent} %.`,
 } as const;
 
 export const CONTRADICTED = {
   heading: 'Measurements that contradict the others',
   text: (text: string, got: string, expected: string, sigmas: string) =>
     `${text} Written: ${got}; the others make it ${expected}: ${sigmas} standard deviations off.`,
-  none: 'None: every measurement goes with the others.',
+  none: 'No measurement contradicts the others.',
 } as const;
 
 export const NEXT = {

@@ -234,7 +234,8 @@ export function randomOldCoil(seed: number, mostTurns = 140): Measured {
   const tapGap = pushes ? dice.between(0.1, 0.8) * overallMm : 0;
   // Measured where there is one; where not, taken as none within a tenth of the wire.
   const tapHalf = pushes ? 0.05 : 0.1 * overallMm;
-  const tapGapMm = pushes ? tapGap : dice.error(tapHalf);
+  // However tight, copper does not lie in copper.
+  const tapGapMm = pushes ? tapGap : Math.max(dice.error(tapHalf), 1.015 * bareMm - Math.min(...pitchMm));
   const tapGapRead = pushes ? dice.read(tapGap, tapHalf) : { value: 0, uncertainty: tapHalf };
   const { places, placeAt } = laid({ ends, pitchMm, sectionGapMm, tapGapMm, overallMm }, turns);
   const windingLengthMm = placeAt(whole) + overallMm;

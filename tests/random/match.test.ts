@@ -5,7 +5,7 @@ import { type MatchOutcome, matchOutcome } from './match.ts';
 // A short run of `npm run check:match`, other seeds than its own, and coils of fewer turns.
 const FROM = 900_001;
 const COUNT = 60;
-const MOST_TURNS = 50;
+const MOST_TURNS = 40;
 
 test('the truth lies within the stated limits of an inferred coil, and determined turns are right', () => {
   const outcomes: MatchOutcome[] = [];
