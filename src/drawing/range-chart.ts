@@ -27,7 +27,8 @@ export interface RangeChart {
 /** Speed of light in m kHz. */
 const LIGHT_M_KHZ = 299_792.458;
 const LEFT_MM = 9;
-const RIGHT_MM = 20;
+/** Room for `gap 45.8 %` behind the last bar. */
+const RIGHT_MM = 25;
 const FOOT_MM = 6;
 const HEAD_MM = 6;
 const BAND_MM = 5.5;
@@ -168,14 +169,16 @@ export function drawRangeChart(chart: RangeChart, widthMm: number, rowMm: number
   for (const kHz of ticksOf(axis)) shapes.push(line(at(kHz), foot, at(kHz), top, 'hair'));
 
   const widthOf = (value: number) => measure.width(`${value}`, SMALL_MM);
-  for (const kHz of written(axis, at, widthOf, 1.6)) {
+  // What would stand under the unit is left out.
+  const clear = (place: number, value: number) => place + widthOf(value) / 2 <= right + 2;
+  for (const kHz of written(axis, at, widthOf, 1.6).filter((one) => clear(at(one), one))) {
     shapes.push(line(at(kHz), foot - 1, at(kHz), foot, 'thin'));
     shapes.push(label(at(kHz), foot - 4, `${kHz}`, { align: 'centre' }));
   }
   shapes.push(label(right + 3, foot - 4, CHART.kHz, { bold: true }));
   const metres = { low: LIGHT_M_KHZ / axis.high, high: LIGHT_M_KHZ / axis.low };
   const atMetres = (m: number) => at(LIGHT_M_KHZ / m);
-  for (const m of written(metres, atMetres, widthOf, 1.6)) {
+  for (const m of written(metres, atMetres, widthOf, 1.6).filter((one) => clear(atMetres(one), one))) {
     shapes.push(line(atMetres(m), top, atMetres(m), top + 1, 'thin'));
     shapes.push(label(atMetres(m), top + 2, `${m}`, { align: 'centre' }));
   }

@@ -164,16 +164,20 @@ export function kinds(record: FiguresRecord, widthMm: number, measure: Measure):
   const first = switchKinds[0];
   if (first === undefined) return null;
   const ranged = switchKinds.some(({ positions }) => positions.some((one) => one.lowKhz !== null));
+  // Five figures on both sides of the dash are wider than the column.
+  const mega = switchKinds.some(({ positions }) => positions.some((one) => (one.highKhz ?? 0) >= 1e4));
   const heads: Head[] = [
     [KINDS.tap, 8, { ...CENTRE, bold: true }],
     ...switchKinds.flatMap(({ kind, inUse }): Head[] => [
       [KINDS.inductance(kind), 17, { ...RIGHT, bold: inUse }],
       [KINDS.q, 10, { ...RIGHT, bold: inUse }],
-      ...(ranged ? ([[KINDS.range, 21, { ...CENTRE, bold: inUse }]] as const) : []),
+      ...(ranged ? ([[mega ? KINDS.megaRange : KINDS.range, 21, { ...CENTRE, bold: inUse }]] as const) : []),
     ]),
   ];
   const range = ({ lowKhz, highKhz }: { lowKhz: number | null; highKhz: number | null }) =>
-    lowKhz === null || highKhz === null ? '' : `${fixed(lowKhz, 0)}–${fixed(highKhz, 0)}`;
+    lowKhz === null || highKhz === null ? '' : mega
+        ? `${fixed(lowKhz / 1e3, 1)}–${fixed(highKhz / 1e3, 1)}`
+        : `${fixed(lowKhz, 0)}–${fixed(highKhz, 0)}`;
   const groups = first.positions.map(({ tap }, i) => [
     [
       `${tap}`,

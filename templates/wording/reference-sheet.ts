@@ -131,6 +131,7 @@ export const KINDS = {
   inductance: (kind: string) => `${kind} µH`,
   q: 'Q',
   range: 'kHz',
+  megaRange: 'MHz',
   inUse: (kind: string) => `${kind} (in use):`,
   other: (kind: string) => `${kind}:`,
 } as const;
