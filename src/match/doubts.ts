@@ -44,7 +44,9 @@ export function tooLittle(
       expected: whole ? ADDITIONS.turns : 'turns, a position, an inductance, a resonance or a resistance',
       todo: whole
         ? 'add one of them: each alone decides how long the coil is'
-        : 'add one of them, or write lost: then it is proposed from the others',
+        : old.sections.some(({ endsAtTap }) => endsAtTap === index + 1)
+          ? 'add one of them, or the length of the section that ends there'
+          : 'add one of them, or write lost: then it is proposed from the others',
     };
   });
   for (const { index, name } of lost)

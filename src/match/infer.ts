@@ -13,7 +13,7 @@ import { estimateOf, figure, type Mixture, quantile, type Solved, type Spread, s
 import { jacobian, leastSquares, stateOf } from './fit.ts';
 import { type LostWidth, nextMeasurements } from './next.ts';
 import { type LostTap, lostTaps } from './patterns.ts';
-import { boundsOf, isLost, type Problem, problemOf, type Row } from './problem.ts';
+import { boundsOf, type Problem, problemOf, type Row } from './problem.ts';
 import { startOf } from './start.ts';
 import type { State } from './state.ts';
 import type { Estimate, InferredCoil, InferredTap, OldCoil } from './types.ts';
@@ -221,9 +221,8 @@ function inferredWire({ bareMm, overallMm }: Measured) {
 
 function lostOf({ problem, state }: Solved): LostTap[] {
   const { old, known } = problem;
-  const lost = old.taps.flatMap((tap, index) =>
-    index < old.taps.length - 1 && isLost(tap) ? [{ index, name: tap.name }] : [],
-  );
+  const told = new Set(known.map(({ index }) => index));
+  const lost = old.taps.flatMap(({ name }, index) => (told.has(index) ? [] : [{ index, name }]));
   if (lost.length === 0) return [];
   const found = lostTaps(
     lost,

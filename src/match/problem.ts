@@ -70,8 +70,16 @@ export const isTextile = (covering: string): boolean => /cotton|silk/.test(cover
 export const tapKey = (old: OldCoil, index: number): string =>
   index === old.taps.length - 1 ? 'whole' : `taps[${index + 1}]`;
 
-export const isLost = (tap: OldTap): boolean =>
+const isLost = (tap: OldTap): boolean =>
   [tap.turns, tap.positionMm, tap.inductance, tap.resonance, tap.resistanceOhm].every((one) => one === null);
+
+/** Numbers of the taps that the fit finds; one at which a section ends is among them, whatever was read of it. */
+const foundTaps = (old: OldCoil): number[] =>
+  old.taps.flatMap((tap, index) =>
+    index === old.taps.length - 1 || !isLost(tap) || old.sections.some(({ endsAtTap }) => endsAtTap === index + 1)
+      ? [index]
+      : [],
+  );
 
 /** Share of a turn at this angle, the way the winding climbs. */
 export function fractionAt(angleDeg: number, hand: 'right' | 'left'): number {
@@ -108,9 +116,7 @@ export function wireBefore(old: OldCoil): { wire: Wire; assumed: Record<string, 
 }
 
 export function problemOf(old: OldCoil): Problem {
-  const known = old.taps
-    .map((_, index) => index)
-    .filter((index) => index === old.taps.length - 1 || !isLost(old.taps[index]!));
+  const known = foundTaps(old);
   const taps = known.map((index) => knownTap(old, index));
   const { wire, assumed } = wireBefore(old);
   const capacitors = [

@@ -88,6 +88,15 @@ function turnsBy(problem: Problem, state: State, tap: OldTap, whole: boolean): n
   return metres === null ? null : (1e3 * metres) / (Math.PI * measures.meanMm);
 }
 
+/** Turns of the tap at which a section ends, by the length of that section; null when it was not measured. */
+function turnsBySection({ old }: Problem, state: State, index: number): number | null {
+  const s = old.sections.findIndex(({ endsAtTap }) => endsAtTap === index + 1);
+  const lengthMm = old.sections[s]?.lengthMm?.value;
+  if (lengthMm === undefined) return null;
+  const before = s === 0 ? 0 : state.ends[s - 1]!;
+  return before + 1 + (lengthMm - state.measures.overallMm) / state.measures.pitchMm[s]!;
+}
+
 export interface Start {
   readonly state: State;
   /** Known taps about whose turns nothing was read. */
@@ -111,9 +120,9 @@ export function startOf(problem: Problem): Start {
   let turns: number[] = known.map(({ exact }) => exact ?? MOST_TURNS);
   for (let round = 0; round < 2; round++) {
     const rough = stateOf(problem, x, turns);
-    const even = known.map(({ tap, exact, fraction }, i) => {
+    const even = known.map(({ tap, exact, fraction, index }, i) => {
       if (exact !== null) return exact;
-      const found = turnsBy(problem, rough, tap, i === known.length - 1);
+      const found = turnsBy(problem, rough, tap, i === known.length - 1) ?? turnsBySection(problem, rough, index);
       if (found === null && round === 0) untold.push(i);
       return found === null ? null : Math.max(Math.round(found - fraction) + fraction, fraction > 0 ? fraction : 1);
     });
