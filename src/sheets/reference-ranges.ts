@@ -175,7 +175,9 @@ export function kinds(record: FiguresRecord, widthMm: number, measure: Measure):
     ]),
   ];
   const range = ({ lowKhz, highKhz }: { lowKhz: number | null; highKhz: number | null }) =>
-    lowKhz === null || highKhz === null ? '' : mega
+    lowKhz === null || highKhz === null
+      ? ''
+      : mega
         ? `${fixed(lowKhz / 1e3, 1)}–${fixed(highKhz / 1e3, 1)}`
         : `${fixed(lowKhz, 0)}–${fixed(highKhz, 0)}`;
   const groups = first.positions.map(({ tap }, i) => [
