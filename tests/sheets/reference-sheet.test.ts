@@ -86,7 +86,7 @@ describe('the chart', () => {
   };
 
   test('draws every bar where its frequencies lie on the axis', () => {
-    const axis = axisOf(chart, 180 - 9 - 20);
+    const axis = axisOf(chart, 180 - 9 - 25);
     expect(axis.low).toBeCloseTo(530 / 1.08, 9);
     expect(axis.high).toBeCloseTo(2 * 2060 * 1.08, 9);
     const { shapes } = drawRangeChart(chart, 180, 8, measure);
