@@ -146,6 +146,20 @@ export function angleBetween(aDeg: number, bDeg: number): number {
   return Math.min(d, 360 - d);
 }
 
+/** Material between two teardrops where they are closest, at this radius; negative when they overlap. */
+export function webMm(
+  a: Pick<Hole, 'angleDeg' | 'axialMm' | 'diameterMm'>,
+  b: Pick<Hole, 'angleDeg' | 'axialMm' | 'diameterMm'>,
+  radiusMm: number,
+): number {
+  const across = (radiusMm * Math.PI * angleBetween(a.angleDeg, b.angleDeg)) / 180;
+  const [low, high] = a.axialMm <= b.axialMm ? [a, b] : [b, a];
+  const rise = high.axialMm - low.axialMm;
+  const round = Math.hypot(across, rise) - (low.diameterMm + high.diameterMm) / 2;
+  const point = Math.hypot(across, rise - roofMm(low.diameterMm)) - high.diameterMm / 2;
+  return Math.min(round, point);
+}
+
 /**
  * The groove goes on to the last hole of the finish row when there is room, so that turns added in trimming lie in it too;
  * otherwise it ends at the finish.

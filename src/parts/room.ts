@@ -3,12 +3,10 @@
  * catch a record that was written or changed by hand.
  */
 import { Fault, type FaultParts } from '../fault.ts';
-import type { Hole } from '../record/schema.ts';
-import { angleBetween, type FormerDimensions, roofMm } from './dimensions.ts';
+import { type FormerDimensions, roofMm, webMm } from './dimensions.ts';
 import { baseFaults, earFaults, postFaults, ridgeFaults } from './room-fittings.ts';
 
 const mm = (x: number) => `${Number(x.toFixed(3))} mm`;
-const RAD = Math.PI / 180;
 
 /** @throws Fault with exit 4 that lists every reason at once. */
 export function requireRoom(d: FormerDimensions): void {
@@ -109,7 +107,7 @@ function holeFaults(d: FormerDimensions): FaultParts[] {
   }
   for (const [i, a] of d.holes.entries())
     for (const b of d.holes.slice(i + 1)) {
-      const clear = clearMm(a, b, d.boreR);
+      const clear = webMm(a, b, d.boreR);
       if (clear <= 0)
         faults.push({
           code: 'former-holes-meet',
@@ -119,14 +117,4 @@ function holeFaults(d: FormerDimensions): FaultParts[] {
         });
     }
   return faults;
-}
-
-/** Material between two teardrops where they are closest, at the bore; negative when they overlap. */
-function clearMm(a: Hole, b: Hole, boreR: number): number {
-  const across = boreR * RAD * angleBetween(a.angleDeg, b.angleDeg);
-  const [low, high] = a.axialMm <= b.axialMm ? [a, b] : [b, a];
-  const rise = high.axialMm - low.axialMm;
-  const round = Math.hypot(across, rise) - (low.diameterMm + high.diameterMm) / 2;
-  const point = Math.hypot(across, rise - roofMm(low.diameterMm)) - high.diameterMm / 2;
-  return Math.min(round, point);
 }

@@ -11,7 +11,7 @@
  */
 import { Fault } from '../fault.ts';
 import type { Former, Hole } from '../record/schema.ts';
-import { angleBetween, roofMm } from './dimensions.ts';
+import { angleBetween, webMm } from './dimensions.ts';
 import { type PlacedWords, placeWords, turnFrom } from './saddle-words.ts';
 
 /** A hole with the diameter of its guide and the words beside it. */
@@ -250,10 +250,6 @@ function fill(
 
 /** Plastic left between two lying guides where they come nearest, on the inside; negative where they meet. */
 export function webBetween(a: Guide, b: Guide, insideR: number): number {
-  const [low, high] = a.hole.axialMm <= b.hole.axialMm ? [a, b] : [b, a];
-  const across = (insideR * Math.PI * Math.abs(a.turnDeg - b.turnDeg)) / 180;
-  const rise = high.hole.axialMm - low.hole.axialMm;
-  const round = Math.hypot(across, rise) - (low.diameterMm + high.diameterMm) / 2;
-  const point = Math.hypot(across, rise - roofMm(low.diameterMm)) - high.diameterMm / 2;
-  return Math.min(round, point);
+  const lying = ({ hole, turnDeg, diameterMm }: Guide) => ({ angleDeg: turnDeg, axialMm: hole.axialMm, diameterMm });
+  return webMm(lying(a), lying(b), insideR);
 }

@@ -4,6 +4,7 @@
  */
 import type { Coil } from '../coil/coil.ts';
 import { angleOf, type Hand } from '../coil/layout.ts';
+import { webMm } from '../parts/dimensions.ts';
 import type { Former, Hole } from '../record/schema.ts';
 import { type Around, FLANGE_MM, footMm, grooveFor, RIM_MM, widestRibbedMm } from './former/around.ts';
 import { finishHoles, lastEnd } from './former/finish-row.ts';
@@ -210,12 +211,7 @@ export function tightestPair(holes: readonly Hole[], boreMm: number): { a: Hole;
   for (let i = 0; i < holes.length; i++)
     for (let j = i + 1; j < holes.length; j++) {
       const [a, b] = holes[i]!.axialMm <= holes[j]!.axialMm ? [holes[i]!, holes[j]!] : [holes[j]!, holes[i]!];
-      const turn = Math.abs(a.angleDeg - b.angleDeg) / 360;
-      const arc = Math.min(turn, 1 - turn) * Math.PI * boreMm;
-      const rise = b.axialMm - a.axialMm;
-      const round = Math.hypot(arc, rise) - (a.diameterMm + b.diameterMm) / 2;
-      const roof = Math.hypot(arc, rise - a.diameterMm * Math.SQRT1_2) - b.diameterMm / 2;
-      const leftMm = Math.min(round, roof);
+      const leftMm = webMm(a, b, boreMm / 2);
       if (leftMm < LEAST_WEB_MM - 1e-6 && (worst === null || leftMm < worst.leftMm)) worst = { a, b, leftMm };
     }
   return worst;
