@@ -4,19 +4,16 @@
  * replaces nothing.
  */
 import { COMPARISON } from '../../templates/wording/comparison-sheet.ts';
-import type { Box, Measure } from '../drawing/boxes.ts';
+import type { Measure } from '../drawing/boxes.ts';
 import type { MatchRecord } from '../drawing/comparison.ts';
-import { moved } from '../drawing/shapes.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { stack } from './block.ts';
 import * as known from './comparison-sheet-known.ts';
 import * as taps from './comparison-sheet-taps.ts';
-import { PAPER_MM, type Page, Paper } from './page.ts';
+import { headedPages } from './headed.ts';
+import { type Page, Paper } from './page.ts';
 import { type Body, Filling, GAP_MM } from './parted.ts';
-import { titleBlock } from './title-block.ts';
+import { frameOf } from './sheet-frame.ts';
 
-/** Left free round every sheet: across, and along. */
-const MARGIN_MM = { across: 12, along: 11 } as const;
 /** The drawing takes what the table of taps leaves of its page, within these. */
 const PAIR_MM = { least: 95, most: 165 } as const;
 
@@ -51,33 +48,12 @@ function matchedOf(record: CoilRecord): MatchRecord {
 
 /** The pages as drawings. */
 export function layOutComparisonSheet(record: CoilRecord, measure: Measure): Page[] {
-  const [paperWidth, paperHeight] = PAPER_MM[record.paper];
-  const widthMm = paperWidth - 2 * MARGIN_MM.across;
-  const headOf = (part: string, sheet: string) =>
-    titleBlock(record, { document: COMPARISON.document, part, sheet }, widthMm, measure);
-  const head = headOf(COMPARISON.known, COMPARISON.sheet(10, 10));
-  const room = paperHeight - 2 * MARGIN_MM.along - head.heightMm - GAP_MM;
-  const bodies = fill(matchedOf(record), widthMm, room, measure);
-  return bodies.map((body, i) => {
-    const top = { ...headOf(body.part, COMPARISON.sheet(i + 1, bodies.length)), heightMm: head.heightMm };
-    const { shapes } = stack([top, ...body.blocks], GAP_MM);
-    return {
-      widthMm: paperWidth,
-      heightMm: paperHeight,
-      shapes: shapes.map((shape) => moved(shape, MARGIN_MM.across, paperHeight - MARGIN_MM.along)),
-    };
-  });
+  return headedPages(record, COMPARISON, COMPARISON.known, measure, (widthMm, heightMm) =>
+    fill(matchedOf(record), widthMm, heightMm, measure),
+  );
 }
 
-/** What a page keeps free of ink. */
-export function comparisonFrame(page: Page): Box {
-  return {
-    left: MARGIN_MM.across,
-    right: page.widthMm - MARGIN_MM.across,
-    bottom: MARGIN_MM.along,
-    top: page.heightMm - MARGIN_MM.along,
-  };
-}
+export { frameOf as comparisonFrame };
 
 /** The comparison sheet of a record as the bytes of a PDF. */
 export async function comparisonSheet(record: CoilRecord): Promise<Uint8Array> {

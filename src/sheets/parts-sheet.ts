@@ -3,7 +3,7 @@
  * from two sides. It reads the record and the pictures and nothing else: same record, same bytes.
  */
 import { PARTS_SHEET } from '../../templates/wording/parts-sheet.ts';
-import type { Box, Measure } from '../drawing/boxes.ts';
+import type { Measure } from '../drawing/boxes.ts';
 import { boxViews } from '../drawing/parts/box-views.ts';
 import { viewsOf } from '../drawing/parts/views.ts';
 import type { View } from '../drawing/views.ts';
@@ -13,13 +13,12 @@ import { type Card, GAP_MM, plain, shifted } from './cards.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
 import { type Picture, partCards } from './parts-sheet-card.ts';
 import * as blocks from './parts-sheet-list.ts';
+import { frameOf, MARGIN_MM } from './sheet-frame.ts';
 import { titleBlock } from './title-block.ts';
 import { unitsOf } from './units.ts';
 
 export type { Picture } from './parts-sheet-card.ts';
 
-/** Left free round every sheet: across, and along. */
-const MARGIN_MM = { across: 12, along: 11 } as const;
 const GAP = 3.5;
 const COLUMN_GAP = 6;
 
@@ -184,15 +183,7 @@ export function layOutPartsSheet(
   });
 }
 
-/** What a page keeps free of ink. */
-export function partsFrame(page: Page): Box {
-  return {
-    left: MARGIN_MM.across,
-    right: page.widthMm - MARGIN_MM.across,
-    bottom: MARGIN_MM.along,
-    top: page.heightMm - MARGIN_MM.along,
-  };
-}
+export { frameOf as partsFrame };
 
 /** The parts sheet of a record as the bytes of a PDF. */
 export async function partsSheet(

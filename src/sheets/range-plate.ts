@@ -3,7 +3,7 @@
  * by. It reads the record and nothing else: same record, same bytes.
  */
 import { PLATE } from '../../templates/wording/range-plate.ts';
-import type { Box, Measure } from '../drawing/boxes.ts';
+import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { type DrawnPlate, drawPlate, HOLE_MM, type Plate, type PlatePosition } from '../drawing/range-plate.ts';
 import { checkSquare, RULER_BREADTH_MM, rulerAcross, SQUARE_ROOM_MM } from '../drawing/rulers.ts';
@@ -13,11 +13,11 @@ import { type Block, paragraph, stack } from './block.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
 import { Filling, parted } from './parted.ts';
 import { stepOf } from './reference-wiring.ts';
+import { frameOf, MARGIN_MM } from './sheet-frame.ts';
 import { figures, fixed, short } from './text.ts';
 import { titleBlock } from './title-block.ts';
 import { lengthText, unitsOf } from './units.ts';
 
-const MARGIN_MM = { across: 12, along: 11 } as const;
 const GAP_MM = 3;
 
 interface NamedPlate extends Plate {
@@ -170,15 +170,7 @@ export function layOutRangePlate(record: FiguresRecord, measure: Measure): Page[
   return [...plated, ...tables.map((table, i) => page(rows.length + i + 1, movedAll(table, MARGIN_MM.across, top)))];
 }
 
-/** What a page keeps free of ink. */
-export function plateFrame(page: Page): Box {
-  return {
-    left: MARGIN_MM.across,
-    right: page.widthMm - MARGIN_MM.across,
-    bottom: MARGIN_MM.along,
-    top: page.heightMm - MARGIN_MM.along,
-  };
-}
+export { frameOf as plateFrame };
 
 /** The range plate of a record as the bytes of a PDF; null for a coil of one position, which has no switch. */
 export async function rangePlate(record: FiguresRecord): Promise<Uint8Array | null> {

@@ -4,21 +4,19 @@
  * of any verb and nothing else: same record, same bytes.
  */
 import { REFERENCE } from '../../templates/wording/reference-sheet.ts';
-import type { Box, Measure } from '../drawing/boxes.ts';
-import { moved } from '../drawing/shapes.ts';
+import type { Measure } from '../drawing/boxes.ts';
 import type { ExplainedRecord } from '../explain/explain.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { stack } from './block.ts';
-import { PAPER_MM, type Page, Paper } from './page.ts';
-import { type Body, Filling, GAP_MM } from './parted.ts';
+import { headedPages } from './headed.ts';
+import { type Page, Paper } from './page.ts';
+import { type Body, Filling } from './parted.ts';
 import { noOthers, others, why } from './reference-chosen.ts';
 import { explained } from './reference-explained.ts';
 import * as ranges from './reference-ranges.ts';
 import { wiring } from './reference-wiring.ts';
-import { titleBlock } from './title-block.ts';
+import { frameOf } from './sheet-frame.ts';
 
-/** Left free round every sheet: across, and along. */
-const MARGIN_MM = { across: 12, along: 11 } as const;
 /** The chart leaves the rest of its page to the table of positions. */
 const CHART_SHARE = 0.62;
 /** Height of the tuning curves with heading and words, where their numbers do not want more. */
@@ -58,32 +56,12 @@ function fill(record: ReferenceRecord, widthMm: number, heightMm: number, measur
 
 /** The pages as drawings. */
 export function layOutReferenceSheet(record: ReferenceRecord, measure: Measure): Page[] {
-  const [paperWidth, paperHeight] = PAPER_MM[record.paper];
-  const widthMm = paperWidth - 2 * MARGIN_MM.across;
-  const headOf = (part: string, sheet: string) =>
-    titleBlock(record, { document: REFERENCE.document, part, sheet }, widthMm, measure);
-  const head = headOf(REFERENCE.figures, REFERENCE.sheet(10, 10));
-  const bodies = fill(record, widthMm, paperHeight - 2 * MARGIN_MM.along - head.heightMm - GAP_MM, measure);
-  return bodies.map((body, i) => {
-    const top = { ...headOf(body.part, REFERENCE.sheet(i + 1, bodies.length)), heightMm: head.heightMm };
-    const { shapes } = stack([top, ...body.blocks], GAP_MM);
-    return {
-      widthMm: paperWidth,
-      heightMm: paperHeight,
-      shapes: shapes.map((shape) => moved(shape, MARGIN_MM.across, paperHeight - MARGIN_MM.along)),
-    };
-  });
+  return headedPages(record, REFERENCE, REFERENCE.figures, measure, (widthMm, heightMm) =>
+    fill(record, widthMm, heightMm, measure),
+  );
 }
 
-/** What a page keeps free of ink. */
-export function referenceFrame(page: Page): Box {
-  return {
-    left: MARGIN_MM.across,
-    right: page.widthMm - MARGIN_MM.across,
-    bottom: MARGIN_MM.along,
-    top: page.heightMm - MARGIN_MM.along,
-  };
-}
+export { frameOf as referenceFrame };
 
 /** The reference sheet of a record as the bytes of a PDF. */
 export async function referenceSheet(record: ReferenceRecord): Promise<Uint8Array> {

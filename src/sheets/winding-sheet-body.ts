@@ -2,8 +2,6 @@
 import type { Measure } from '../drawing/boxes.ts';
 import { type Block, columns, heading, stack } from './block.ts';
 
-/** Left free round every sheet: across, and along. */
-export const MARGIN_MM = { across: 12, along: 11 } as const;
 /** Between blocks, and between columns. */
 export const GAP = 3.5;
 export const COLUMN_GAP = 6;

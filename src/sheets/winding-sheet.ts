@@ -3,7 +3,7 @@
  * the record and nothing else: same record, same bytes.
  */
 import { STEPS, TITLE } from '../../templates/wording/winding-sheet.ts';
-import type { Box, Measure } from '../drawing/boxes.ts';
+import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { moved, SMALL_MM } from '../drawing/shapes.ts';
 import type { CoilRecord } from '../record/schema.ts';
@@ -12,6 +12,7 @@ import * as check from './check-blocks.ts';
 import * as advice from './check-blocks-advice.ts';
 import { twoCapacitors } from './check-blocks-line.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
+import { frameOf, MARGIN_MM } from './sheet-frame.ts';
 import { titleBlock } from './title-block.ts';
 import * as wind from './wind-blocks.ts';
 import {
@@ -21,7 +22,6 @@ import {
   fits,
   GAP,
   height,
-  MARGIN_MM,
   pairs,
   type Room,
   stepsBlock,
@@ -170,15 +170,7 @@ export function layOutWindingSheet(record: CoilRecord, measure: Measure): Page[]
   });
 }
 
-/** What a page keeps free of ink. */
-export function sheetFrame(page: Page): Box {
-  return {
-    left: MARGIN_MM.across,
-    right: page.widthMm - MARGIN_MM.across,
-    bottom: MARGIN_MM.along,
-    top: page.heightMm - MARGIN_MM.along,
-  };
-}
+export { frameOf as sheetFrame };
 
 /** The winding sheet of a record as the bytes of a PDF. */
 export async function windingSheet(record: CoilRecord): Promise<Uint8Array> {
