@@ -1,31 +1,20 @@
 /** `plan`: reads a job, plans it, writes the output folder, says what came of it. */
-import { join, relative, resolve } from 'node:path';
 import type { Argv } from 'yargs';
-import { slug } from '../src/job/name.ts';
 import { readJob } from '../src/job/read.ts';
-import { checkFolder, writeFolder } from '../src/output/transaction.ts';
 import type { planJob } from '../src/plan.ts';
 import { checkOut } from './check-out.ts';
-import { explainedTap } from './explained-tap.ts';
+import { describeProduce, type ProduceOptions, produceFolder } from './produce.ts';
 import { readJobText } from './read-job.ts';
-import { showExplain } from './show-explain.ts';
-import { showPlan } from './show-plan.ts';
 import type { Terminal } from './terminal.ts';
 
 export function describePlan(yargs: Argv) {
-  return yargs
-    .positional('job', { type: 'string', demandOption: true, describe: 'job file, YAML or JSON; - for standard input' })
-    .option('out', {
+  return describeProduce(
+    yargs.positional('job', {
       type: 'string',
-      requiresArg: true,
-      describe: 'folder to write; out/<name of the job> when left out',
-    })
-    .option('json', { type: 'boolean', default: false, describe: 'print the record, and nothing else' })
-    .option('explain', {
-      type: 'string',
-      requiresArg: true,
-      describe: 'number of a tap: how each of its figures comes about; with --json that instead of the record',
-    })
+      demandOption: true,
+      describe: 'job file, YAML or JSON; - for standard input',
+    }),
+  )
     .example('$0 plan low-bench-receiver.yaml', 'writes out/low-bench-receiver')
     .example(
       '$0 plan - --out coil --json < job.yaml',
@@ -33,11 +22,8 @@ export function describePlan(yargs: Argv) {
     );
 }
 
-export interface PlanOptions {
+export interface PlanOptions extends ProduceOptions {
   readonly job: string;
-  readonly out?: string | undefined;
-  readonly json: boolean;
-  readonly explain?: string | undefined;
 }
 
 /** The planner, loaded only once there is a job to plan. */
@@ -52,20 +38,7 @@ export async function runPlan(
 ): Promise<void> {
   checkOut(options.out);
   const job = readJob(await readJobText(options.job, terminal), options.job);
-  const target = resolve(terminal.folder, options.out ?? join('out', slug(job.name)));
-  await checkFolder(target);
-  const planner = await load();
-  const { record, files } = await planner(job, { version });
-  const explained = await explainedTap(record, options.explain);
-  const folder = await writeFolder(target, files);
-  if (options.json) {
-    terminal.out(`${JSON.stringify(explained ?? record, null, 2)}\n`);
-    return;
-  }
-  const below = relative(terminal.folder, folder);
-  const shown = below === '' ? '.' : below.startsWith('..') ? folder : below;
-  terminal.out(showPlan(record, shown, files, terminal.columns, terminal.plain ?? false));
-  if (explained !== null) terminal.out(`\n${showExplain(explained, terminal.columns)}`);
+  await produceFolder(options, terminal, job.name, async () => (await load())(job, { version }));
 }
 
 /** With the real planner. */

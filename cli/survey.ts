@@ -1,5 +1,5 @@
 /** `survey`: reads a measured coil, works out its figures, shows them; writes a folder only when one is named. */
-import { relative, resolve } from 'node:path';
+import { resolve } from 'node:path';
 import type { Argv } from 'yargs';
 import { readCoilFile } from '../src/job/coil-file.ts';
 import { COIL_FILE } from '../src/job/file-kind.ts';
@@ -9,6 +9,7 @@ import { explainedTap } from './explained-tap.ts';
 import { readJobText } from './read-job.ts';
 import { showExplain } from './show-explain.ts';
 import { showSurvey } from './show-survey.ts';
+import { shownFolder } from './shown-folder.ts';
 import type { Terminal } from './terminal.ts';
 
 export function describeSurvey(yargs: Argv) {
@@ -56,8 +57,7 @@ export async function survey(options: SurveyOptions, terminal: Terminal, version
     terminal.out(`${JSON.stringify(explained ?? record, null, 2)}\n`);
     return;
   }
-  const below = folder === null ? '' : relative(terminal.folder, folder);
-  const shown = below === '' ? '.' : below.startsWith('..') ? (folder ?? '.') : below;
-  terminal.out(showSurvey(record, page, folder === null ? null : { folder: shown, files }));
+  const written = folder === null ? null : { folder: shownFolder(terminal.folder, folder), files };
+  terminal.out(showSurvey(record, page, written));
   if (explained !== null) terminal.out(`\n${showExplain(explained, terminal.columns)}`);
 }
