@@ -7,7 +7,7 @@
  */
 
 import { partsOf } from '../parts/parts.ts';
-import type { Expected, Point3, Solid } from '../parts/solid.ts';
+import { type Expected, type Point3, type Solid, stlPath } from '../parts/solid.ts';
 import type { PartsRecord } from '../record/schema.ts';
 import { buildSolid } from './build.ts';
 import { checkBytes } from './check.ts';
@@ -69,7 +69,7 @@ export async function makePart(solid: Solid, scale: readonly number[] = [1, 1, 1
   const bytes = stlBytes(mesh);
   const { part } = solid;
   const report = checkBytes(kernel, part, bytes, scaledExpectation(solid.expected, scale));
-  return { part, path: `${part}.stl`, kind: 'stl', bytes, mesh, report };
+  return { part, path: stlPath(part), kind: 'stl', bytes, mesh, report };
 }
 
 export function pictured(part: PartFile): PicturedPart {

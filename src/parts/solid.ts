@@ -98,6 +98,9 @@ export interface Expected {
   readonly volumeMm3: number;
 }
 
+/** The file of a part. */
+export const stlPath = (part: string): string => `${part}.stl`;
+
 /** A part to print: all shapes joined, all cutters taken away, then lowered. In print orientation, on Z = 0. */
 export interface Solid {
   /** Stands in the file name, in messages and on beds: lower-case, words joined by `-`. */

@@ -142,7 +142,10 @@ export function clampCutters(record: PartsRecord, d: ClampDimensions, reliefMm: 
 }
 
 /** Handles of a clamp: the screw's hole through one lug, and from the slit to the pocket and from there out in the other. */
-export const CLAMP_GENUS = 3;
+export const CLAMP_GENUS = {
+  genus: 3,
+  genusIs: 'the screw hole in one lug, and on both sides of the nut in the other',
+} as const;
 
 /** Volume of an outline with the cuts of a clamp. */
 export function clampMm3(
@@ -182,8 +185,7 @@ export function collarSolid(
     cutters: moved(clampCutters(record, d, 0), dx, dy),
     expected: {
       bodies: 1,
-      genus: CLAMP_GENUS,
-      genusIs: 'the screw hole in one lug, and on both sides of the nut in the other',
+      ...CLAMP_GENUS,
       minMm,
       maxMm,
       volumeMm3: clampMm3(record, d, outline, 0) + 2 * key.widthMm * key.heightMm * (key.toMm - key.fromMm),

@@ -61,8 +61,7 @@ export function crankSolid(
     ),
     expected: {
       bodies: 1,
-      genus: CLAMP_GENUS,
-      genusIs: 'the screw hole in one lug, and on both sides of the nut in the other',
+      ...CLAMP_GENUS,
       minMm,
       maxMm,
       volumeMm3:

@@ -2,7 +2,7 @@
 import type { Job, PartKind } from '../job/job.ts';
 import { PARTS } from '../job/schema.ts';
 import { layOutBeds } from '../parts/bed-layout.ts';
-import type { Solid } from '../parts/solid.ts';
+import { type Solid, stlPath } from '../parts/solid.ts';
 import type { Design } from '../solve/design.ts';
 import { findMaterial } from '../stock/materials.ts';
 import { decimals, significant } from './rounding.ts';
@@ -47,7 +47,7 @@ export function entriesOf(solids: readonly Solid[]): PartEntry[] {
     part,
     name,
     kind,
-    path: `${part}.stl`,
+    path: stlPath(part),
     quantity,
     material,
     sizeMm: expected.maxMm.map((most, i) => decimals(most - expected.minMm[i]!, 3)),

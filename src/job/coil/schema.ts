@@ -46,13 +46,15 @@ const wireGroup = z
   })
   .describe('The wire as measured; or its size and covering as text, such as 24 AWG enamel.');
 
-const readWireText = (raw: unknown): Parsed<FoundWire> => {
+/** A wire by its size and covering in words. */
+export const readWireText = (raw: unknown): Parsed<FoundWire> => {
   const found = findWire(String(raw).slice(0, 200));
   return found.ok ? { ok: true, value: found } : found;
 };
 const wireText = field(readWireText, 'The wire by size and covering, such as 24 AWG enamel.', { type: 'string' });
 
-const readMaterial = (raw: unknown): Parsed<string | null> => {
+/** What a former is of; null for none, whose loss is then left out. */
+export const readMaterial = (raw: unknown): Parsed<string | null> => {
   if (raw === 'none' || raw === 'air') return { ok: true, value: null };
   const found = findMaterial(typeof raw === 'string' ? raw : '');
   if (found.ok) return { ok: true, value: found.material.name };

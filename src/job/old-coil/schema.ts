@@ -4,16 +4,13 @@
  */
 import * as z from 'zod';
 import type { Parsed } from '../../quantity/parse.ts';
-import { type FoundWire, findWire } from '../../stock/find.ts';
-import { findMaterial } from '../../stock/materials.ts';
 import { COVERINGS } from '../../stock/wire.ts';
+import { MOST_TURNS, readMaterial, readWireText } from '../coil/schema.ts';
 import { choice, count, field, flag, quantity, range, shown } from '../field.ts';
 import { readName } from '../name.ts';
 import { jobSchema } from '../schema.ts';
 import { plain, plainReading, reading, readWritten, valueReader, type Written } from './reading.ts';
 
-/** Most turns that the figures are made for. */
-export const MOST_TURNS = 500;
 const MOST_TAPS = 60;
 
 const turnsNumber = plain(0.25, MOST_TURNS, 'turns', '31 or 20.5');
@@ -59,19 +56,7 @@ const wireGroup = z
   })
   .describe('The wire as measured; or its size and covering as text, such as 26 AWG single silk.');
 
-const readWireText = (raw: unknown): Parsed<FoundWire> => {
-  const found = findWire(String(raw).slice(0, 200));
-  return found.ok ? { ok: true, value: found } : found;
-};
 const wireText = field(readWireText, 'The wire by size and covering, such as 26 AWG single silk.', { type: 'string' });
-
-const readMaterial = (raw: unknown): Parsed<string | null> => {
-  if (raw === 'none' || raw === 'air') return { ok: true, value: null };
-  const found = findMaterial(typeof raw === 'string' ? raw : '');
-  if (found.ok) return { ok: true, value: found.material.name };
-  const expected = `none, ${found.expected}`;
-  return typeof raw === 'string' ? { ...found, expected } : { ...found, got: shown(raw), expected };
-};
 
 /** Counted turns; the word unknown is nothing. */
 const readTurns = (raw: unknown): Parsed<Written | null> =>
