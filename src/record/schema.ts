@@ -9,9 +9,14 @@
 import * as z from 'zod';
 import { PARTS } from '../job/schema.ts';
 import { adviceTapSchema, correctionSchema } from './advice-schema.ts';
+import { formerSchema } from './former-schema.ts';
 import { matchedSchema } from './match-schema.ts';
 import { measuringSchema } from './meter-schema.ts';
+import { bedSchema, partSchema, printerSchema, shopSchema } from './printing-schema.ts';
 import { type Winding, windingSchema } from './winding-schema.ts';
+
+export type { Former } from './former-schema.ts';
+export type { BedEntry, PartEntry, PrinterFigures } from './printing-schema.ts';
 
 export type { Tap, UnitTap, Winding } from './winding-schema.ts';
 
@@ -39,180 +44,6 @@ export const settingSchema = z.strictObject({
   q: num.describe('with unit 0'),
   lowKhz: num.nullable().describe('lower edge of what unit 0 tunes; null without a set'),
   highKhz: num.nullable().describe('upper edge of what the last unit tunes, dead turns at both ends counted'),
-});
-
-/** Turns, counted from the start, that lean on a ridge. */
-const runSchema = z
-  .strictObject({
-    fromTurn: num,
-    toTurn: num,
-    footMm: num.describe('its lower edge on the winding surface, along the axis from the middle of the wire'),
-  })
-  .nullable();
-
-export const formerSchema = z.strictObject({
-  kind: z.enum(['printed', 'tube']),
-  surface: z.enum(['smooth', 'grooved']),
-  material: text,
-  densityGCm3: num,
-  outsideDiameterMm: num,
-  boreDiameterMm: num,
-  wallMm: num,
-  lengthMm: num.describe('whole former, foot to top'),
-  footMm: num.describe('thickness of the lower flange or end band; the winding surface begins above it'),
-  topMm: num.describe('thickness of the upper flange or end band'),
-  flange: z
-    .strictObject({ diameterMm: num, lowerMm: num, upperMm: num })
-    .nullable()
-    .describe('rims at foot and top, their diameter and thicknesses; null when plain'),
-  groove: z
-    .strictObject({
-      depthMm: num.describe('from the outside to the flat floor'),
-      floorMm: num.describe('width of the flat floor; flanks rise at 45 degrees'),
-      runInTurns: num.describe(
-        'the groove deepens from nothing over this many turns before the start and after the finish',
-      ),
-    })
-    .nullable(),
-  chamferMm: num.describe('on the lower outer and inner edges, for the first layers'),
-  ears: z.array(
-    z.strictObject({ angleDeg: num, holeDiameterMm: num, centreRadiusMm: num, widthMm: num, thicknessMm: num }),
-  ),
-  numbers: z
-    .array(z.strictObject({ text, angleDeg: num, tap: num.int().nullable() }))
-    .describe('tap numbers and the letter S, cut into the face of the upper flange at the angle of their hole'),
-  numberHeightMm: num,
-  datumMark: z.strictObject({ angleDeg: num, widthMm: num, depthMm: num }).nullable(),
-  body: z.enum(['full', 'ribbed']).describe('of a printed former: a wall all round, or end rings and ribs'),
-  ribs: z
-    .strictObject({
-      count: num.int().describe('a rib at every 360/count degrees from angle 0'),
-      widthMm: num.describe('along the circumference'),
-      depthMm: num.describe('along the radius, from the outside in'),
-      ringMm: num.describe('height of each end ring'),
-      innerRings: z
-        .strictObject({
-          topsMm: z.array(num).describe('Z of their upper faces, from below; the last carries the upper end ring'),
-          crownMm: num.describe('height midway between two ribs; underneath they fall to the ribs at 45 degrees'),
-          acrossMm: num.describe('outside, across flats that face the middles between ribs'),
-          insideMm: num.describe('inside, across flats'),
-        })
-        .describe('rings with a flat a span, which keep the ribs from giving way'),
-      seatMm: num.describe('Z at which the upper end ring begins; it widens at 45 degrees to its rim'),
-      seatDiameterMm: num.describe('of the upper end ring there'),
-    })
-    .nullable()
-    .describe('of a ribbed body'),
-  ridges: z
-    .strictObject({
-      heightMm: num.describe('over the winding surface'),
-      widthMm: num.describe('along the axis, where it meets the winding surface; its underside rises at 45 degrees'),
-      start: runSchema.describe('under the first turn'),
-      finish: runSchema.describe('over the last turn that the finish row allows for'),
-    })
-    .nullable()
-    .describe('helical ridges that a close winding on a smooth printed former leans on'),
-  base: z
-    .strictObject({
-      diameterMm: num,
-      thicknessMm: num,
-      holes: num.int(),
-      circleDiameterMm: num,
-      holeDiameterMm: num,
-      firstDeg: num.describe('angle of the first hole; the others stand evenly round'),
-    })
-    .nullable()
-    .describe('a round foot with a ring of screw holes'),
-  posts: z
-    .array(
-      z.strictObject({
-        label: text,
-        tap: num.int().nullable(),
-        angleDeg: num,
-        axialMm: num.describe('of the eye'),
-        widthMm: num.describe('along the circumference'),
-        reachMm: num.describe('from the winding surface outwards'),
-        heightMm: num.describe('over the foot'),
-        eyeMm: num.describe('diameter of the eye, as it should come out'),
-        eyeReachMm: num.describe('from the winding surface to the middle of the eye'),
-      }),
-    )
-    .describe('posts at the foot through whose eyes the leads of lugs are led'),
-  joints: z
-    .array(
-      z.strictObject({
-        turn: num
-          .nullable()
-          .describe('at the key the seam lies midway between this turn and the next; null for a flat seam'),
-        seamMm: num.describe('Z of the seam on the outside at the key, below the step; inwards it falls at 45 degrees'),
-        climbMm: num.describe('what the seam rises over one turn, along with the winding, and falls back at its step'),
-        keyDeg: num.describe('angle of the step, and of the tongue in the bore that keeps the sections from turning'),
-        spigotMm: num.describe('length of the spigot below the seam in the bore'),
-        glueGapMm: num.describe('between spigot and bore, on the radius'),
-      }),
-    )
-    .describe('where a former taller than the printer is put together, from below'),
-  tenthMmPercent: num.describe('what a tenth of a millimetre more of outside diameter does to the inductance'),
-  segments: num.int().describe('chords round the former'),
-  stiffness: text.describe('what the winding tension does to this wall'),
-});
-
-export const printerSchema = z.strictObject({
-  bedXMm: num,
-  bedYMm: num,
-  heightMm: num,
-  nozzleMm: num,
-  lineMm: num,
-  layerMm: num,
-  holeCompensationMm: num.describe('added to the diameter of every hole as modelled'),
-  clearanceMm: num.describe('gap on diameter between printed parts that go into one another'),
-  scale: z
-    .array(num)
-    .length(3)
-    .describe('what files are enlarged by along x, y and z; every other figure is as it should come out'),
-  material: text.describe('of jigs'),
-  densityGCm3: num.describe('of that material'),
-});
-
-export const shopSchema = z.strictObject({
-  shaftMm: num.describe('diameter, or across the flats'),
-  shaftForm: z.enum(['round', 'hexagon']),
-  spoolDiameterMm: num,
-  spoolWidthMm: num,
-  spoolBoreMm: num,
-  meterKhz: num.describe('at which the inductance meter measures'),
-  meterName: text.nullable(),
-  meterAccuracy: num.describe('a fraction of the reading'),
-  capacitorsPf: z.array(num).describe('known capacitors, ascending'),
-  capacitorTolerance: num.describe('a fraction'),
-});
-
-export const partSchema = z.strictObject({
-  part: text.describe('stands in file names and on beds'),
-  name: text,
-  kind: z.enum(PARTS),
-  path: text,
-  quantity: num.int(),
-  material: text,
-  sizeMm: z.array(num).length(3).describe('outer size as it should come out, in print orientation'),
-  volumeMm3: num.describe('of the solid'),
-  massG: num.describe('of solid plastic, one piece'),
-  use: text,
-  printNote: text,
-});
-
-export const bedSchema = z.strictObject({
-  path: text,
-  material: text,
-  items: z.array(
-    z.strictObject({
-      part: text,
-      copy: num.int(),
-      xMm: num.describe('left edge of its box on the bed'),
-      yMm: num.describe('front edge'),
-      turned: z.boolean().describe('by a quarter turn'),
-    }),
-  ),
 });
 
 export const holeSchema = z.strictObject({
@@ -377,10 +208,6 @@ export const recordSchema = z.strictObject({
 
 export type CoilRecord = z.infer<typeof recordSchema>;
 export type Setting = z.infer<typeof settingSchema>;
-export type Former = z.infer<typeof formerSchema>;
-export type PrinterFigures = z.infer<typeof printerSchema>;
-export type PartEntry = z.infer<typeof partSchema>;
-export type BedEntry = z.infer<typeof bedSchema>;
 export type Hole = z.infer<typeof holeSchema>;
 export type Step = z.infer<typeof stepSchema>;
 export type Check = z.infer<typeof checkSchema>;
