@@ -19,7 +19,10 @@ export interface TableOptions {
   readonly sizeMm?: number;
 }
 
-const PAD = 1.2;
+/** Left free beside every cell's text, and the least of it where the figures would not go into the width otherwise. */
+const PAD_MM = [1.2, 1, 0.8, 0.6] as const;
+/** Least width of a column of boxes. */
+const TICK_MM = 4.4;
 /** In a column of boxes: this row has none. */
 export const NO_BOX = '-';
 
@@ -30,39 +33,63 @@ export function shares(totalMm: number, parts: readonly number[]): number[] {
 }
 
 /** Where a cell's text is set, and how it is aligned there. */
-function place(column: Column, x: number): { x: number; align: 'left' | 'centre' | 'right' } {
+function place(column: Column, x: number, pad: number): { x: number; align: 'left' | 'centre' | 'right' } {
   const align = column.align ?? 'left';
-  const at = align === 'left' ? x + PAD : align === 'right' ? x + column.widthMm - PAD : x + column.widthMm / 2;
+  const at = align === 'left' ? x + pad : align === 'right' ? x + column.widthMm - pad : x + column.widthMm / 2;
   return { x: at, align };
 }
 
-function cellLines(column: Column, text: string, sizeMm: number, bold: boolean, measure: Measure): string[] {
-  return wrap(text, column.widthMm - 2 * PAD, sizeMm, bold, measure);
+function cellLines(
+  column: Column,
+  text: string,
+  sizeMm: number,
+  bold: boolean,
+  pad: number,
+  measure: Measure,
+): string[] {
+  return wrap(text, column.widthMm - 2 * pad, sizeMm, bold, measure);
+}
+
+/** Widths at which no word of a head and no figure (in columns that are centred or to the right) is broken, without the room beside it. */
+function leastWidths(
+  columns: readonly Column[],
+  rows: readonly (readonly string[])[],
+  sizeMm: number,
+  measure: Measure,
+): number[] {
+  return columns.map((column, c) => {
+    const words = (column.align ?? 'left') === 'left' ? [] : rows.flatMap((row) => (row[c] ?? '').split('\n'));
+    const head = column.head.split(' ').map((word) => measure.width(word, SMALL_MM, true));
+    const cells = words.map((word) => measure.width(word, sizeMm, column.bold));
+    return Math.max(...head, ...cells) + 0.01;
+  });
 }
 
 /**
- * Widths at which no figure is broken: a column of figures (centred or to the right) that is too narrow for its widest
- * cell takes what it lacks from the columns that have some to spare.
+ * Columns in which nothing is broken: one that is too narrow takes what it lacks from those that have some to spare, and all have
+ * less room beside their text where that does not do.
  */
 function fitted(
   asked: readonly Column[],
   rows: readonly (readonly string[])[],
   sizeMm: number,
   measure: Measure,
-): Column[] {
-  const least = asked.map((column, c) => {
-    const words = (column.align ?? 'left') === 'left' ? [] : rows.flatMap((row) => (row[c] ?? '').split('\n'));
-    const head = column.head.split(' ').map((word) => measure.width(word, SMALL_MM, true));
-    const cells = words.map((word) => measure.width(word, sizeMm, column.bold));
-    return Math.max(...head, ...cells) + 2 * PAD + 0.01;
-  });
-  const lacking = asked.reduce((sum, column, c) => sum + Math.max(0, least[c]! - column.widthMm), 0);
-  const spare = asked.reduce((sum, column, c) => sum + Math.max(0, column.widthMm - least[c]!), 0);
+): { columns: Column[]; pad: number } {
+  const bare = leastWidths(asked, rows, sizeMm, measure);
+  const total = asked.reduce((sum, column) => sum + column.widthMm, 0);
+  const leastAt = (pad: number) =>
+    asked.map((column, c) => Math.max(bare[c]! + 2 * pad, column.kind === 'tick' ? TICK_MM : 0));
+  const sum = (widths: readonly number[]) => widths.reduce((all, width) => all + width, 0);
+  const pad = PAD_MM.find((each) => sum(leastAt(each)) <= total) ?? PAD_MM.at(-1)!;
+  const least = leastAt(pad);
+  const lacking = sum(asked.map((column, c) => Math.max(0, least[c]! - column.widthMm)));
+  const spare = sum(asked.map((column, c) => Math.max(0, column.widthMm - least[c]!)));
   const share = spare > 0 ? Math.min(1, lacking / spare) : 0;
-  return asked.map((column, c) => {
+  const columns = asked.map((column, c) => {
     const over = column.widthMm - least[c]!;
     return { ...column, widthMm: over < 0 ? least[c]! : column.widthMm - over * share };
   });
+  return { columns, pad };
 }
 
 export function table(
@@ -73,17 +100,17 @@ export function table(
 ): Block {
   const sizeMm = options.sizeMm ?? BODY_MM;
   const rowMm = options.rowMm ?? 5.2;
-  const columns = fitted(asked, rows, sizeMm, measure);
+  const { columns, pad } = fitted(asked, rows, sizeMm, measure);
   const widthMm = columns.reduce((sum, column) => sum + column.widthMm, 0);
   const shapes: Shape[] = [];
-  const heads = columns.map((column) => cellLines(column, column.head, SMALL_MM, true, measure));
+  const heads = columns.map((column) => cellLines(column, column.head, SMALL_MM, true, pad, measure));
   const deepest = Math.max(...heads.map((lines) => lines.length));
   const headMm = deepest * SMALL_MM * LEADING + 1.6;
   shapes.push(rectangle(0, -headMm, widthMm, headMm, 'hair', 0.92));
   let x = 0;
   columns.forEach((column, c) => {
     const lines = heads[c]!;
-    const at = place(column, x);
+    const at = place(column, x, pad);
     lines.forEach((text, i) => {
       const up = (lines.length - 1 - i) * SMALL_MM * LEADING;
       shapes.push(label(at.x, -headMm + 1.5 + up, text, { align: at.align, bold: true }));
@@ -92,7 +119,9 @@ export function table(
   });
   let y = -headMm;
   for (const row of rows) {
-    const cells = columns.map((column, c) => cellLines(column, row[c] ?? '', sizeMm, column.bold ?? false, measure));
+    const cells = columns.map((column, c) =>
+      cellLines(column, row[c] ?? '', sizeMm, column.bold ?? false, pad, measure),
+    );
     const most = Math.max(...cells.map((lines) => lines.length));
     const height = Math.max(rowMm, most * sizeMm * LEADING + 1.2);
     x = 0;
@@ -101,7 +130,7 @@ export function table(
         if (row[c] !== NO_BOX) shapes.push(tickBox(x + column.widthMm / 2 - 1.7, y - height / 2 - 1.7));
       } else if (column.kind !== 'blank') {
         const lines = cells[c]!;
-        const at = place(column, x);
+        const at = place(column, x, pad);
         const middle = y - height / 2 + ((lines.length - 1) * sizeMm * LEADING) / 2;
         lines.forEach((text, i) => {
           if (text === '') return;

@@ -26,8 +26,8 @@ const NAMES = [
   'Ääkköset ≤ µ Ω',
 ];
 
-/** A random job with what only sheets care for. */
-function sheetJob(seed: number): string {
+/** A random job as text, with what only sheets care for. */
+export function sheetJob(seed: number): string {
   const random = chance(seed + 77);
   const pick = <T>(list: readonly T[]): T => list[Math.floor(random() * list.length)]!;
   const job = JSON.parse(randomJob(seed));
