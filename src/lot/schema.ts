@@ -75,6 +75,8 @@ const bedSchema = z.strictObject({
   layerMm: num,
   nozzleMm: num,
   printer: text.describe('name of the printers whose bed it is laid out for'),
+  bedXMm: num.describe('of that bed, across'),
+  bedYMm: num.describe('of that bed, from front to back'),
   count: num.int().describe('how often it is printed'),
   massG: num.describe('of solid plastic, once'),
   items: z.array(pieceSchema).min(1),
