@@ -1,6 +1,7 @@
 /** Carries what is not ours from the old folder into the new one. */
 import { copyFile, link, lstat, mkdir, readdir, readlink, symlink, utimes } from 'node:fs/promises';
 import { join } from 'node:path';
+import { sync } from './disk.ts';
 import { isErrno, refuseFolder } from './faults.ts';
 
 /**
@@ -46,12 +47,13 @@ export async function carryOver(
 }
 
 /** A hard link; a copy with the same times where the file system has no links. */
-async function secondName(from: string, to: string): Promise<void> {
+export async function secondName(from: string, to: string): Promise<void> {
   try {
     await link(from, to);
   } catch (error) {
     if (!isErrno(error, 'EPERM', 'ENOTSUP', 'EOPNOTSUPP', 'ENOSYS', 'EMLINK', 'EXDEV')) throw error;
     await copyFile(from, to);
+    await sync(to);
     const { atime, mtime } = await lstat(from);
     await utimes(to, atime, mtime);
   }

@@ -31,6 +31,8 @@ export function outputFault(error: unknown, target: string): unknown {
   if (!(error instanceof Error) || !('code' in error) || typeof error.code !== 'string' || error instanceof Fault) {
     return error;
   }
+  // Codes of Node's own, such as that of a thread out of memory, are no answers of the file system.
+  if (error.code.startsWith('ERR_')) return error;
   const [got, todo] = CAUSES[error.code] ?? [
     `an error of the file system, ${error.code}`,
     'choose another folder with --out',

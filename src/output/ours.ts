@@ -2,14 +2,19 @@
 import { lstat, readFile } from 'node:fs/promises';
 import { join } from 'node:path';
 
-/** The file that marks a folder as ours. */
-const RECORD_NAME = 'plan.json';
+/** Any of these marks a folder as ours. */
+const RECORD_NAMES = ['plan.json', 'lot.json', 'proof.json'] as const;
 /** No record is larger; what is, is not ours. */
 const LARGEST_BYTES = 64_000_000;
 
-/** Relative paths that the record lists, and the record itself; null when the folder is not ours. */
+/** Relative paths that the records list, and the records themselves; null when the folder is not ours. */
 export async function filesOf(folder: string): Promise<ReadonlySet<string> | null> {
-  const path = join(folder, RECORD_NAME);
+  const found = await Promise.all(RECORD_NAMES.map((name) => listedBy(folder, name)));
+  return found.every((paths) => paths === null) ? null : new Set(found.flatMap((paths) => paths ?? []));
+}
+
+async function listedBy(folder: string, name: string): Promise<readonly string[] | null> {
+  const path = join(folder, name);
   try {
     const found = await lstat(path);
     if (!found.isFile() || found.size > LARGEST_BYTES) return null;
@@ -18,7 +23,7 @@ export async function filesOf(folder: string): Promise<ReadonlySet<string> | nul
     if (!('program' in record) || typeof record.program !== 'string' || !/^coilwright\b/.test(record.program))
       return null;
     const listed = 'files' in record && Array.isArray(record.files) ? record.files : [];
-    return new Set([RECORD_NAME, ...listed.flatMap(pathOf)]);
+    return [name, ...listed.flatMap(pathOf)];
   } catch {
     return null;
   }

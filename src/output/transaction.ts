@@ -5,32 +5,54 @@
  *          -> give what is not ours a second name in it -> old to backup -> new into place -> backup away -> unlock
  *
  * At every moment the old folder or the new one is whole, under its name or as the backup; the next run puts a backup
- * back. A folder is ours when its plan.json says so; the files it lists are what may be replaced.
+ * back. A folder is ours when its record says so; the files that lists are what may be replaced. A run that takes long holds
+ * the lock from its start, and may keep what is finished beside the folder, to be linked into it in the end.
  */
-import { access, constants, lstat, mkdir, open, readdir, rename, rm, rmdir } from 'node:fs/promises';
+import { access, constants, lstat, mkdir, readdir, rename, rm, rmdir } from 'node:fs/promises';
 import { basename, dirname, join, resolve } from 'node:path';
-import { carryOver } from './carry.ts';
+import { carryOver, secondName } from './carry.ts';
+import { sync, writeSynced } from './disk.ts';
 import { isErrno, outputFault, refuseFolder } from './faults.ts';
 import { lock } from './lock.ts';
 import { filesOf } from './ours.ts';
 
-export interface OutputFile {
+export interface FromMemory {
   /** Relative, with forward slashes. */
   readonly path: string;
   readonly bytes: Uint8Array;
 }
 
+interface FromDisk {
+  readonly path: string;
+  /** Absolute path of a file that is whole and synced and never written to again: it gets a second name in the folder. */
+  readonly source: string;
+}
+
+export type OutputFile = FromMemory | FromDisk;
+
 export interface Names {
   readonly temporary: string;
   readonly backup: string;
   readonly lock: string;
+  /** What a long run has finished so far. */
+  readonly work: string;
+}
+
+/** A place that is locked for one run. */
+export interface Held {
+  /** Absolute path of the folder to be. */
+  readonly target: string;
+  /** Beside it, on the same disk; the run that uses it makes it and takes it away. */
+  readonly work: string;
+  /** The whole folder, replacing a folder of ours that is there. */
+  readonly write: (files: readonly OutputFile[]) => Promise<void>;
 }
 
 /** Names beside the folder that a killed run may leave. */
 export function namesBeside(dir: string): Names {
   const target = resolve(dir);
   const beside = join(dirname(target), `.${basename(target)}.coilwright`);
-  return { temporary: `${beside}-new`, backup: `${beside}-old`, lock: `${beside}-lock` };
+  return { temporary: `${beside}-new`, backup: `${beside}-old`, lock: `${beside}-lock`, work: `${beside}-work` };
 }
 
 /**
@@ -38,26 +60,30 @@ export function namesBeside(dir: string): Names {
  * Throws a Fault with exit code 5; what was there is then there still.
  */
 export async function writeFolder(dir: string, files: readonly OutputFile[]): Promise<string> {
+  for (const { path } of files) checked(path);
+  return holding(dir, async ({ target, write }) => {
+    await write(files);
+    return target;
+  });
+}
+
+/**
+ * Does `run` while no other run can write the folder `dir`. Throws a Fault with exit code 5 when the place cannot be used or
+ * is not free, and whatever `run` throws.
+ */
+export async function holding<T>(dir: string, run: (held: Held) => Promise<T>): Promise<T> {
   const target = resolve(dir);
-  const written = new Set(files.map((file) => checked(file.path)));
   if (dirname(target) === target) {
     throw refuseFolder(target, 'the root of the file system', 'choose a folder below it');
   }
+  const names = namesBeside(target);
   try {
     await mkdir(dirname(target), { recursive: true });
-    const names = namesBeside(target);
     const unlock = await lock(names.lock, target);
     try {
       await mend(target, names);
-      const ours = await judge(target);
-      await writeAll(names.temporary, files);
-      if (ours === null) {
-        await rename(names.temporary, target);
-      } else {
-        await carryOver(target, names.temporary, ours, written);
-        await swap(target, names);
-      }
-      await sync(dirname(target));
+      await judge(target);
+      return await run({ target, work: names.work, write: (files) => replace(target, names, files) });
     } finally {
       await rm(names.temporary, { recursive: true, force: true });
       await unlock();
@@ -65,7 +91,19 @@ export async function writeFolder(dir: string, files: readonly OutputFile[]): Pr
   } catch (error) {
     throw outputFault(error, target);
   }
-  return target;
+}
+
+async function replace(target: string, names: Names, files: readonly OutputFile[]): Promise<void> {
+  const written = new Set(files.map(({ path }) => checked(path)));
+  const ours = await judge(target);
+  await writeAll(names.temporary, files);
+  if (ours === null) {
+    await rename(names.temporary, target);
+  } else {
+    await carryOver(target, names.temporary, ours, written);
+    await swap(target, names);
+  }
+  await sync(dirname(target));
 }
 
 /**
@@ -147,17 +185,12 @@ async function kindOf(path: string): Promise<'nothing' | 'folder' | 'link' | 'ot
 async function writeAll(folder: string, files: readonly OutputFile[]): Promise<void> {
   await mkdir(folder);
   const folders = new Set([folder]);
-  for (const { path, bytes } of files) {
-    const full = join(folder, path);
+  for (const file of files) {
+    const full = join(folder, file.path);
     await mkdir(dirname(full), { recursive: true });
-    folders.add(dirname(full));
-    const handle = await open(full, 'wx');
-    try {
-      await handle.writeFile(bytes);
-      await handle.sync();
-    } finally {
-      await handle.close();
-    }
+    for (let one = dirname(full); one.length > folder.length; one = dirname(one)) folders.add(one);
+    if ('bytes' in file) await writeSynced(full, file.bytes);
+    else await secondName(file.source, full);
   }
   for (const one of folders) await sync(one);
 }
@@ -173,17 +206,4 @@ async function swap(target: string, names: Names): Promise<void> {
   }
   await sync(dirname(target));
   await rm(names.backup, { recursive: true, force: true });
-}
-
-/** Makes the names in a folder last; some systems cannot, and need not. */
-async function sync(folder: string): Promise<void> {
-  const handle = await open(folder, 'r').catch(() => null);
-  if (handle === null) return;
-  try {
-    await handle.sync();
-  } catch (error) {
-    if (!isErrno(error, 'EINVAL', 'EPERM', 'EISDIR', 'EBADF', 'ENOTSUP')) throw error;
-  } finally {
-    await handle.close();
-  }
 }

@@ -4,7 +4,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll } from 'vitest';
 import { Fault, type FaultParts } from '../../src/fault.ts';
-import type { OutputFile } from '../../src/output/transaction.ts';
+import type { FromMemory } from '../../src/output/transaction.ts';
 
 const made: string[] = [];
 afterAll(() => {
@@ -18,7 +18,7 @@ export function scratch(): string {
 }
 
 /** A set of files as a run makes them: a record that lists the others. */
-export function output(others: Readonly<Record<string, string>>): OutputFile[] {
+export function output(others: Readonly<Record<string, string>>): FromMemory[] {
   const files = Object.keys(others).map((path) => ({ path, kind: 'text', sha256: '0' }));
   const record = { record: 1, program: 'coilwright 0.0.0', files };
   return [

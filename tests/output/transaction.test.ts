@@ -5,6 +5,7 @@ import {
   mkdirSync,
   readFileSync,
   renameSync,
+  rmSync,
   symlinkSync,
   utimesSync,
   writeFileSync,
@@ -15,7 +16,7 @@ import { describe, expect, it } from 'vitest';
 import { Fault } from '../../src/fault.ts';
 import { outputFault } from '../../src/output/faults.ts';
 import { lock } from '../../src/output/lock.ts';
-import { checkFolder, namesBeside, writeFolder } from '../../src/output/transaction.ts';
+import { checkFolder, holding, namesBeside, writeFolder } from '../../src/output/transaction.ts';
 import { below, faultOf, output, scratch } from './folder.ts';
 
 const FIRST = output({ 'sheet.pdf': 'first', 'parts/former.stl': 'first' });
@@ -45,6 +46,46 @@ describe('a folder that is written', () => {
     await writeFolder(join(base, 'coil'), SECOND);
     expect(below(join(base, 'coil'))).toEqual(SECOND_BELOW);
     expect(Object.keys(below(base)).every((path) => path.startsWith('coil/'))).toBe(true);
+  });
+
+  it('is ours by the record of a lot or of readings too', async () => {
+    for (const name of ['lot.json', 'proof.json']) {
+      const coil = join(scratch(), 'coil');
+      const record = { record: 1, program: 'coilwright 0.0.0', files: [{ path: 'kinds/a/plan.json' }] };
+      await writeFolder(coil, [
+        { path: name, bytes: Buffer.from(JSON.stringify(record)) },
+        { path: 'kinds/a/plan.json', bytes: Buffer.from('{}') },
+      ]);
+      writeFileSync(join(coil, 'kinds', 'mine.txt'), 'mine');
+      await writeFolder(coil, SECOND);
+      expect(below(coil)).toEqual({ ...SECOND_BELOW, 'kinds/mine.txt': 'mine' });
+    }
+  });
+
+  it('takes files from the disk, which live on under their new name', async () => {
+    const base = scratch();
+    const source = join(base, 'finished.pdf');
+    writeFileSync(source, 'finished');
+    await holding(join(base, 'coil'), ({ write }) => write([...FIRST, { path: 'kinds/a/sheet.pdf', source }]));
+    rmSync(source);
+    expect(below(join(base, 'coil'))).toMatchObject({ 'kinds/a/sheet.pdf': 'finished', 'sheet.pdf': 'first' });
+    await expect(
+      holding(join(base, 'other'), ({ write }) => write([{ path: 'a.pdf', source }])),
+    ).rejects.toBeInstanceOf(Fault);
+    expect(Object.keys(below(base)).filter((path) => !path.startsWith('coil/'))).toEqual([]);
+  });
+
+  it('is held from the start of a long run, whose own errors come through as they are', async () => {
+    const base = scratch();
+    const coil = join(base, 'coil');
+    const mistake = Object.assign(new Error('a thread out of memory'), { code: 'ERR_WORKER_OUT_OF_MEMORY' });
+    await expect(
+      holding(coil, async () => {
+        expect((await faultOf(lock(namesBeside(coil).lock, coil, 60))).code).toBe('locked');
+        throw mistake;
+      }),
+    ).rejects.toBe(mistake);
+    expect(below(base)).toEqual({});
   });
 
   it('takes an empty folder that is there', async () => {
