@@ -1,5 +1,5 @@
 /**
- * A QR code (ISO/IEC 18004) as black rectangles, so that it prints as sharply as the lines beside it. Its lightest border, the
+ * A QR code (ISO/IEC 18004) as black rectangles, so that it prints as sharply as the lines beside it. Its border, the
  * quiet zone of four modules that readers need, is part of its size.
  */
 import encodeQR from 'qr';
@@ -16,8 +16,6 @@ export interface QrCode {
   /** Modules along an edge, without the quiet zone. */
   readonly modules: number;
   readonly moduleMm: number;
-  /** With the quiet zone. */
-  readonly sizeMm: number;
 }
 
 /** Free all round, in modules (ISO/IEC 18004, 5.3.8). */
@@ -53,13 +51,13 @@ function rectangles(rows: readonly (readonly boolean[])[]): Rect[] {
 }
 
 /**
- * @param codeMm edge of the code without its quiet zone
+ * @param sizeMm edge of the code with its quiet zone
  * @throws Error for a text that no code holds (about 2000 signs)
  */
-export function qrCode(text: string, codeMm: number, spare: Spare): QrCode {
+export function qrCode(text: string, sizeMm: number, spare: Spare): QrCode {
   const rows = encodeQR(text, 'raw', { ecc: spare, border: 0 });
   const modules = rows.length;
-  const moduleMm = codeMm / modules;
+  const moduleMm = sizeMm / (modules + 2 * QUIET_MODULES);
   const quiet = QUIET_MODULES * moduleMm;
   // A rectangle is filled and stroked: half the stroke inside leaves its outer edge where the module ends.
   const inset = WEIGHT_MM.hair / 2;
@@ -73,7 +71,7 @@ export function qrCode(text: string, codeMm: number, spare: Spare): QrCode {
       0,
     ),
   );
-  return { shapes, modules, moduleMm, sizeMm: codeMm + 2 * quiet };
+  return { shapes, modules, moduleMm };
 }
 
 /** What the code of a coil says: its serial and the hash of its record, a blank between them. */

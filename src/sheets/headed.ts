@@ -11,19 +11,22 @@ import { type Headed, titleBlock } from './title-block.ts';
 export interface HeadWords {
   readonly document: string;
   readonly sheet: (n: number, many: number) => string;
+  /** What the name in the head is the name of; a job when left out. */
+  readonly of?: string;
 }
 
 /** `longest` is the widest name of a page: it decides how high the heads are. */
 export function headedPages(
   record: Headed & Pick<CoilRecord, 'paper'>,
-  { document, sheet }: HeadWords,
+  { document, sheet, of }: HeadWords,
   longest: string,
   measure: Measure,
   fill: (widthMm: number, heightMm: number) => readonly Body[],
 ): Page[] {
   const [paperWidth, paperHeight] = PAPER_MM[record.paper];
   const widthMm = paperWidth - 2 * MARGIN_MM.across;
-  const headOf = (part: string, n: string) => titleBlock(record, { document, part, sheet: n }, widthMm, measure);
+  const headOf = (part: string, n: string) =>
+    titleBlock(record, { document, part, sheet: n, ...(of === undefined ? {} : { of }) }, widthMm, measure);
   const head = headOf(longest, sheet(10, 10));
   const bodies = fill(widthMm, paperHeight - 2 * MARGIN_MM.along - head.heightMm - GAP_MM);
   return bodies.map((body, i) => {

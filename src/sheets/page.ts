@@ -15,6 +15,18 @@ export interface Page extends Drawing {
   readonly heightMm: number;
   /** Under the shapes. */
   readonly pictures?: readonly PlacedPicture[];
+  /** What links lead to. */
+  readonly anchor?: string;
+  readonly links?: readonly PageLink[];
+}
+
+/** A place to press that leads to the page of an anchor; x and y are its lower left corner. */
+export interface PageLink {
+  readonly x: number;
+  readonly y: number;
+  readonly widthMm: number;
+  readonly heightMm: number;
+  readonly to: string;
 }
 
 /** A picture in pixels; x and y are its lower left corner. */
@@ -139,6 +151,8 @@ export class Paper implements Measure {
       this.#pen = '';
       for (const picture of page.pictures ?? []) this.#place(picture, page.heightMm);
       for (const shape of page.shapes) this.#draw(shape, page.heightMm);
+      if (page.anchor !== undefined) this.#document.addNamedDestination(page.anchor);
+      for (const link of page.links ?? []) this.#lead(link, page.heightMm);
       if (++count % PAGES_AT_ONCE === 0) await this.#letGo();
     }
     this.#document.end();
@@ -150,6 +164,11 @@ export class Paper implements Measure {
     await new Promise((resolve) => setImmediate(resolve));
     for (const width of this.#widths) width.clear();
     for (const face of this.#faces) face.layoutCache = Object.create(null);
+  }
+
+  #lead({ x, y, widthMm, heightMm, to }: PageLink, height: number): void {
+    const top = (height - y - heightMm) * POINTS;
+    this.#document.goTo(x * POINTS, top, widthMm * POINTS, heightMm * POINTS, to);
   }
 
   #place({ png, x, y, widthMm, heightMm }: PlacedPicture, height: number): void {

@@ -12,6 +12,8 @@ export interface SheetName {
   readonly document: string;
   readonly part: string;
   readonly sheet: string;
+  /** What the name in the head is the name of; a job when left out. */
+  readonly of?: string;
 }
 
 const NAME_SIZES_MM = [5.6, 5, 4.4, 3.9];
@@ -45,7 +47,7 @@ export function titleBlock(record: Headed, name: SheetName, widthMm: number, mea
     rectangle(0, -heightMm, widthMm, heightMm, 'outline'),
     line(middleX, 0, middleX, -heightMm, 'thin'),
     line(rightX, 0, rightX, -heightMm, 'thin'),
-    label(2, -3.7, TITLE.job),
+    label(2, -3.7, name.of ?? TITLE.job),
     ...job.shapes.map((shape) => moved(shape, 2, -4.8)),
     label(middleX + 2, -4.6, name.document, { sizeMm: 4.2, bold: true }),
     label(middleX + 2, -8.7, name.part, { sizeMm: BODY_MM }),
