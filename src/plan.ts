@@ -10,7 +10,7 @@
  * search runs, and works while the pages are written.
  */
 import type { Job } from './job/job.ts';
-import { type PicturedPart, startKernel } from './kernel/client.ts';
+import { type Kernel, type PicturedPart, startKernel } from './kernel/client.ts';
 import { bedFiles, partFiles } from './kernel/files.ts';
 import { netlistFile } from './netlist/file.ts';
 import { listed, type Output, type OutputFile } from './record/listing.ts';
@@ -68,18 +68,29 @@ export interface Produced {
   readonly extra?: RecordExtra;
 }
 
+export interface ProduceOptions {
+  readonly version: string;
+  /** Starts what makes the parts; threads of their own when left out. */
+  readonly kernel?: () => Kernel;
+}
+
 /** The record and every file of the output folder. */
-export async function planJob(job: Job, options: { version: string }): Promise<Output<CoilRecord>> {
+export async function planJob(job: Job, options: ProduceOptions): Promise<Output<CoilRecord>> {
   return produce(() => ({ job, found: foundFor(job) }), options);
+}
+
+/** As {@link planJob} for a kind of a lot, whose parts lie on the beds of the lot. */
+export async function planKind(job: Job, options: ProduceOptions): Promise<Output<CoilRecord>> {
+  return produce(() => ({ job, found: foundFor(job), extra: { verb: 'plan', bedsOfLot: true } }), options);
 }
 
 /** Finds, and makes every file; `more` are files that only another verb has. */
 export async function produce(
   find: () => Produced,
-  options: { version: string },
+  options: ProduceOptions,
   more: (record: CoilRecord) => Promise<readonly OutputFile[]> = async () => [],
 ): Promise<Output<CoilRecord>> {
-  const kernel = startKernel();
+  const kernel = (options.kernel ?? startKernel)();
   try {
     const { job, found, extra } = find();
     // The parts need no figures at work: they are made while those are worked out.

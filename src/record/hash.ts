@@ -1,6 +1,5 @@
-/** The hash that names a record: SHA-256 over all of it but `hash`, `files` and `program`, keys sorted. */
+/** The hash that names a record of any verb: SHA-256 over all of it but `hash`, `files` and `program`, keys sorted. */
 import { createHash } from 'node:crypto';
-import type { CoilRecord } from './schema.ts';
 
 function canonical(value: unknown): unknown {
   if (Array.isArray(value)) return value.map(canonical);
@@ -9,10 +8,13 @@ function canonical(value: unknown): unknown {
   return Object.fromEntries(entries.map(([key, inner]) => [key, canonical(inner)]));
 }
 
-export function hashOf(record: Omit<CoilRecord, 'hash' | 'files' | 'program'>): string {
+/** One text for the same data, in whatever order its keys were written. */
+export const canonicalText = (value: unknown): string => JSON.stringify(canonical(value));
+
+export const sha256 = (bytes: Uint8Array | string): string => createHash('sha256').update(bytes).digest('hex');
+
+export function hashOf(record: object): string {
   const rest: Record<string, unknown> = { ...record };
   for (const key of ['hash', 'files', 'program']) delete rest[key];
-  return createHash('sha256')
-    .update(JSON.stringify(canonical(rest)))
-    .digest('hex');
+  return sha256(canonicalText(rest));
 }

@@ -1,5 +1,5 @@
 /** The record with the list of what else is written, as the first of the files itself. */
-import { createHash } from 'node:crypto';
+import { sha256 } from './hash.ts';
 
 export interface OutputFile {
   readonly path: string;
@@ -11,18 +11,17 @@ export interface OutputFile {
 
 export interface Output<R> {
   readonly record: R;
-  /** plan.json first. */
+  /** The record first. */
   readonly files: readonly OutputFile[];
 }
-
-const sha256 = (bytes: Uint8Array) => createHash('sha256').update(bytes).digest('hex');
 
 export function listed<R extends { files: { path: string; kind: string; sha256: string }[] }>(
   record: R,
   files: readonly OutputFile[],
+  name = 'plan.json',
 ): Output<R> {
   const entries = files.map(({ path, kind, bytes }) => ({ path, kind, sha256: sha256(bytes) }));
   const all = { ...record, files: entries };
   const json = new TextEncoder().encode(`${JSON.stringify(all, null, 2)}\n`);
-  return { record: all, files: [{ path: 'plan.json', kind: 'json', bytes: json, note: 'the record' }, ...files] };
+  return { record: all, files: [{ path: name, kind: 'json', bytes: json, note: 'the record' }, ...files] };
 }

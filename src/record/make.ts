@@ -200,7 +200,11 @@ function tapMethodOf({ method, unitTaps, layout }: Design, units: Job['units']):
 }
 
 /** What the record of another verb holds besides. */
-export type RecordExtra = Pick<CoilRecord, 'verb' | 'matched'> & { readonly warnings?: CoilRecord['warnings'] };
+export type RecordExtra = Pick<CoilRecord, 'verb' | 'matched'> & {
+  readonly warnings?: CoilRecord['warnings'];
+  /** Of a lot: its parts lie on beds of the lot, and the record has none of its own. */
+  readonly bedsOfLot?: true;
+};
 
 /** The record of a found design, files still to come; `parts` are its parts where they are already described. The schema is checked, so that nothing leaves in another shape. */
 export function makeRecord(
@@ -208,7 +212,7 @@ export function makeRecord(
   found: Found,
   version: string,
   parts = printedOf(job, found),
-  { warnings = [], ...extra }: RecordExtra = { verb: 'plan' },
+  { warnings = [], bedsOfLot, ...extra }: RecordExtra = { verb: 'plan' },
 ): CoilRecord {
   const { chosen } = found;
   const conditions = {
@@ -238,13 +242,14 @@ export function makeRecord(
     windings: [winding],
     surroundings: { ...figures.surroundings, ...ribbedLoss(chosen.former) },
     spread,
+    ...(job.asMade.diameterMm === 0 && job.asMade.pitch === 0 ? {} : { asMade: { ...job.asMade } }),
     coverage: figures.coverage,
     switchKinds: figures.switchKinds,
     settings: figures.settings,
     parts: entries,
-    beds: bedsOf(entries, printed.printer),
+    beds: bedsOfLot ? [] : bedsOf(entries, printed.printer),
     steps: stepsOf(job, chosen, winding),
-    checks: checksOf(chosen, spread, measuring, job.shop),
+    checks: checksOf(chosen, spread, measuring, job),
     corrections: correctionsOf(chosen, measuring, job.units),
     advice: adviceOf(chosen, measuring),
     measuring,

@@ -19,8 +19,9 @@ import {
   unitsOf,
 } from './units.ts';
 
-/** Numbers of the beds that hold a part, counted from 1. */
+/** Numbers of the beds that hold a part, counted from 1; a record without beds is one of a lot, which has them. */
 export function bedsWith(record: CoilRecord, part: string): string {
+  if (record.beds.length === 0) return LIST.ofLot;
   const numbers = record.beds.flatMap((bed, i) => (bed.items.some((item) => item.part === part) ? [`${i + 1}`] : []));
   return numbers.join(', ');
 }

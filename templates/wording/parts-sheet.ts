@@ -20,6 +20,7 @@ export const LIST = {
   size: (unit: string) => `size ${unit}, as it is printed`,
   file: 'file',
   bed: 'bed',
+  ofLot: 'lot',
   sheet: 'sheet',
   total: (pieces: string, grams: string, each: string) =>
     `${pieces}, ${grams} g if printed solid (${each}). Infill makes it less; the slicer says how much.`,
@@ -86,7 +87,8 @@ export const CAUTIONS = {
 export const CARD = {
   facts: (pieces: number, material: string, grams: string, size: string) =>
     `${LIST.piece(pieces)}, ${material}, ${grams} g ${pieces === 1 ? '' : 'each '}if solid, ${size}`,
-  where: (file: string, bed: string) => (bed === '' ? file : `${file}, bed ${bed}`),
+  where: (file: string, bed: string) =>
+    bed === '' ? file : bed === LIST.ofLot ? `${file}, on the beds of the lot` : `${file}, bed ${bed}`,
   use: (text: string) => `Use: ${text}`,
   print: (text: string) => `Print: ${text}`,
   scale: (text: string, unit: string) => `scale ${text}, sizes in ${unit}`,
