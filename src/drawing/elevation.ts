@@ -78,19 +78,25 @@ function halfWidth(record: CoilRecord): number {
   return Math.max(...reach);
 }
 
-/** Taps named beside the drawing, at most: more would make the column higher than a page. */
+/** Taps named beside the drawing where nothing else is said, at most: more would make the column higher than a page. */
 const MOST_NAMED = 40;
+
+/** Taps for whose names there is room beside a drawing of such a height, with those of datum, start and top. */
+export const namesIn = (heightMm: number): number => Math.max(4, Math.floor((heightMm + 10) / STEP) - 3);
+
+/** Of so many taps one in how many is named, the last always, so that `most` are. */
+export const oneNamedIn = (taps: number, most: number): number => Math.ceil(taps / most);
 
 /** The column of distances: what is named and where it lies. */
 function ordinateItems(
   record: CoilRecord,
   words: ElevationWords,
   length: WriteLength,
+  mostNamed: number,
 ): { name: string; z: number; value: string }[] {
   const winding = record.windings[0]!;
   const last = winding.taps.length;
-  // Of very many taps every second or third is named beside the drawing; the tap table has them all.
-  const keep = Math.ceil(last / MOST_NAMED);
+  const keep = oneNamedIn(last, mostNamed);
   const items = [
     { name: words.datum, z: 0 },
     { name: words.start, z: winding.startMm },
@@ -112,7 +118,8 @@ function ordinateWidths(
   measure: Measure,
   length: WriteLength,
 ): [number, number] {
-  const items = ordinateItems(record, words, length);
+  // Of all taps, so that the scale does not hang on which are named.
+  const items = ordinateItems(record, words, length, MOST_NAMED);
   return [
     Math.max(...items.map((item) => measure.width(item.name, SMALL_MM))),
     Math.max(...items.map((item) => measure.width(item.value, SMALL_MM, true))),
@@ -167,8 +174,9 @@ function ordinates(
   edge: number,
   measure: Measure,
   length: WriteLength,
+  mostNamed: number,
 ) {
-  const items = ordinateItems(record, words, length);
+  const items = ordinateItems(record, words, length, mostNamed);
   const [nameWidth, valueWidth] = ordinateWidths(record, words, measure, length);
   const places = spread(
     items.map((item) => item.z * s),
@@ -264,18 +272,19 @@ function handArrow(record: CoilRecord, y: number, words: ElevationWords): Shape[
   ];
 }
 
-/** The whole picture at a scale. */
+/** The whole picture at a scale; of more than `mostNamed` taps every second, third ... is named beside it. */
 export function elevation(
   record: CoilRecord,
   scale: number,
   words: ElevationWords,
   measure: Measure,
   length: WriteLength = millimetres,
+  mostNamed = MOST_NAMED,
 ): Elevation {
   const edge = halfWidth(record) * scale + 1;
   const top = record.former.lengthMm * scale;
   const r = (record.former.outsideDiameterMm / 2) * scale;
-  const column = ordinates(record, scale, words, edge, measure, length);
+  const column = ordinates(record, scale, words, edge, measure, length, mostNamed);
   const shapes: Shape[] = [
     ...formerOutline(record, scale),
     line(0, -3, 0, top + 2, 'hair', 'centre'),

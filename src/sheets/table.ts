@@ -123,7 +123,7 @@ export function table(
       cellLines(column, row[c] ?? '', sizeMm, column.bold ?? false, pad, measure),
     );
     const most = Math.max(...cells.map((lines) => lines.length));
-    const height = Math.max(rowMm, most * sizeMm * LEADING + 1.2);
+    const height = Math.max(rowMm, most * sizeMm * LEADING + (most > 1 ? 1.2 : 0.4));
     x = 0;
     columns.forEach((column, c) => {
       if (column.kind === 'tick') {

@@ -3,7 +3,7 @@ import * as TAP_WORDS from '../../templates/wording/tap-method.ts';
 import { CAUTIONS, DRAWING, FACTS, STEPS, TAPS } from '../../templates/wording/winding-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
-import { elevation, elevationScale, scaleText } from '../drawing/elevation.ts';
+import { elevation, elevationScale, namesIn, oneNamedIn, scaleText } from '../drawing/elevation.ts';
 import { endView, isStaggered } from '../drawing/end-view.ts';
 import { BODY_MM, CAP_SHARE, label, line, movedAll, rectangle, SMALL_MM } from '../drawing/shapes.ts';
 import { PANEL_MM, panelHeight, tapPicture } from '../drawing/tap-picture.ts';
@@ -77,7 +77,9 @@ export function coilDrawing(record: CoilRecord, widthMm: number, highMm: number,
   const units = unitsOf(record);
   const length = (mm: number) => lengthCell(mm, units);
   const scale = elevationScale(record, widthMm, highMm, words, measure, length);
-  const picture = elevation(record, scale, words, measure, length);
+  const most = namesIn(highMm);
+  const picture = elevation(record, scale, words, measure, length, most);
+  const oneIn = oneNamedIn(record.windings[0]!.taps.length, most);
   const head = heading(DRAWING.heading(scaleText(scale)), widthMm, measure);
   const spare = Math.max(0, widthMm - picture.leftMm - picture.rightMm);
   const drawn: Block = {
@@ -88,7 +90,13 @@ export function coilDrawing(record: CoilRecord, widthMm: number, highMm: number,
   const words8 = (text: string, bold = false) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM, bold });
   const notes = [
     words8(`${DRAWING.hand[record.frame.hand]} ${DRAWING.earthed[record.frame.earthedEnd]}`, true),
-    words8(`${DRAWING.seen(lengthUnit(units))} ${DRAWING.datumIs(record.frame.datum)}`),
+    words8(
+      [
+        DRAWING.seen(lengthUnit(units)),
+        DRAWING.datumIs(record.frame.datum),
+        ...(oneIn > 1 ? [DRAWING.named(oneIn)] : []),
+      ].join(' '),
+    ),
   ];
   return stack([head, drawn, ...notes], 1);
 }

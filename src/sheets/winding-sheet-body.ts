@@ -2,7 +2,7 @@
 import type { Measure } from '../drawing/boxes.ts';
 import { type Block, columns, heading, stack } from './block.ts';
 
-/** Between blocks, and between columns. */
+/** Between blocks, and between columns; where room is short the first may be less. */
 export const GAP = 3.5;
 export const COLUMN_GAP = 6;
 
@@ -12,6 +12,8 @@ export interface Body {
   readonly blocks: Block[];
   /** Stands at the foot of the sheet. */
   readonly foot?: Block;
+  /** Between the blocks; `GAP` where nothing is said. */
+  readonly gapMm?: number;
 }
 
 export interface Room {
@@ -20,8 +22,8 @@ export interface Room {
 }
 
 /** Of blocks one below the other. */
-export const height = (blocks: readonly Block[]) =>
-  blocks.reduce((sum, block) => sum + block.heightMm, Math.max(0, blocks.length - 1) * GAP);
+export const height = (blocks: readonly Block[], gapMm = GAP) =>
+  blocks.reduce((sum, block) => sum + block.heightMm, Math.max(0, blocks.length - 1) * gapMm);
 export const present = (block: Block | null): Block[] => (block === null ? [] : [block]);
 
 /** A page in two columns over an optional foot that takes the whole width. */
@@ -32,9 +34,9 @@ export interface Arrangement {
 }
 
 /** Whether both columns with the foot go into a height. */
-export function fits(arrangement: Arrangement, heightMm: number): boolean {
-  const foot = arrangement.foot ? arrangement.foot.heightMm + GAP : 0;
-  return Math.max(height(arrangement.left), height(arrangement.right)) + foot <= heightMm + 1e-9;
+export function fits(arrangement: Arrangement, heightMm: number, gapMm = GAP): boolean {
+  const foot = arrangement.foot ? arrangement.foot.heightMm + gapMm : 0;
+  return Math.max(height(arrangement.left, gapMm), height(arrangement.right, gapMm)) + foot <= heightMm + 1e-9;
 }
 
 /** Steps under their heading, in one column or two. */

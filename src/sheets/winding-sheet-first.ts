@@ -19,15 +19,23 @@ import {
 } from './winding-sheet-body.ts';
 
 /** Height of the drawing of the coil on page 1, the largest first. */
-const DRAWING_MM = [90, 84, 72, 60, 48, 42, 30];
-/** How closely the rest is set: a row of the tap table, the space between steps, and their type. */
-const CLOSENESS = [
+const DRAWING_MM = [90, 84, 72, 60, 48, 42, 30, 24];
+/** How closely the rest is set: a row of the tap table, the space between steps, their type, and the space between blocks. */
+interface Closeness {
+  readonly rowMm: number;
+  readonly gapMm: number;
+  readonly sizeMm: number;
+  readonly betweenMm?: number;
+}
+
+const CLOSENESS: readonly Closeness[] = [
   { rowMm: 5.4, gapMm: 1.4, sizeMm: BODY_MM },
   { rowMm: 5, gapMm: 1, sizeMm: BODY_MM },
   { rowMm: 4.7, gapMm: 0.6, sizeMm: BODY_MM },
   { rowMm: 4.5, gapMm: 0.4, sizeMm: BODY_MM },
   { rowMm: 4.5, gapMm: 0.4, sizeMm: SMALL_MM },
-] as const;
+  { rowMm: 4.2, gapMm: 0.2, sizeMm: SMALL_MM, betweenMm: 2 },
+];
 
 /** The most leading steps that `holds` lets pass; 0 when not one. */
 function mostSteps(items: readonly Block[], holds: (first: readonly Block[]) => boolean): number {
@@ -73,17 +81,19 @@ function tapTables(record: CoilRecord, widthMm: number, heightMm: number, measur
 export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, part: 'all' | 'winding' = 'all'): Body[] {
   const column = (room.widthMm - COLUMN_GAP) / 2;
   const strip = wind.facts(record, room.widthMm, measure);
-  const free = room.heightMm - strip.heightMm - GAP;
+  const freeWith = (betweenMm: number) => room.heightMm + GAP - strip.heightMm - 2 * betweenMm;
+  const free = freeWith(GAP);
   const method = wind.tapMethod(record, column, measure);
   const brief = wind.tapBriefly(record, column, measure);
   const angles = present(wind.tapAngles(record, column, measure));
   const wide = wind.cautions(record, room.widthMm, 2, measure);
   const narrow = wind.cautions(record, column, 1, measure);
   const items = wind.stepItems(record, column, measure, BODY_MM, part);
-  const page = ({ left, right, foot }: Arrangement): Body => ({
+  const page = ({ left, right, foot }: Arrangement, betweenMm = GAP): Body => ({
     part: TITLE.wind,
-    blocks: [strip, beside([{ ...stack(left, GAP), widthMm: column }, stack(right, GAP)], COLUMN_GAP)],
+    blocks: [strip, beside([{ ...stack(left, betweenMm), widthMm: column }, stack(right, betweenMm)], COLUMN_GAP)],
     ...(foot ? { foot } : {}),
+    gapMm: betweenMm,
   });
   // Most sheets take the first size: the others are drawn only when asked for.
   const drawn: Block[] = [];
@@ -91,7 +101,7 @@ export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, par
     drawn[size] ??= wind.coilDrawing(record, column, DRAWING_MM[size]!, measure);
     return drawn[size];
   };
-  for (const { rowMm, gapMm, sizeMm } of CLOSENESS) {
+  for (const { rowMm, gapMm, sizeMm, betweenMm = GAP } of CLOSENESS) {
     const items = wind.stepItems(record, column, measure, sizeMm, part);
     const taps = wind.tapTable(record, column, rowMm, measure, 0, undefined, sizeMm);
     const steps = stepsBlock(items, STEPS.heading, 1, gapMm, measure);
@@ -110,14 +120,15 @@ export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, par
         ...(sizeMm === SMALL_MM
           ? [
               { left: [drawing, brief], right: [taps, steps], foot: wide },
+              { left: [drawing, steps], right: [taps, brief], foot: wide },
               { left: [drawing, taps], right: [steps, brief], foot: wide },
               { left: [drawing, taps], right: [steps, brief, narrow] },
               { left: [drawing, brief, narrow], right: [taps, steps] },
             ]
           : []),
       ];
-      const found = whole.find((each) => fits(each, free));
-      if (found) return [page(found)];
+      const found = whole.find((each) => fits(each, freeWith(betweenMm), betweenMm));
+      if (found) return [page(found, betweenMm)];
     }
   }
 

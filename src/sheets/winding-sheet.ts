@@ -33,8 +33,8 @@ function stepsBlockOver(items: readonly Block[], measure: Measure): Block {
   return stepsBlock(items, STEPS.after, 2, 0.4, measure);
 }
 
-/** How the page to check by is set, the widest first: a row to write in, and the graph. */
-const CHECK_SIZES = [
+/** How the page to check by is set, the widest first: a row to write in, the graph, and the space between blocks. */
+const CHECK_SIZES: readonly { rowMm: number; graphMm: number; gapMm?: number }[] = [
   { rowMm: 6.6, graphMm: 58 },
   { rowMm: 6.6, graphMm: 48 },
   { rowMm: 6, graphMm: 42 },
@@ -43,7 +43,9 @@ const CHECK_SIZES = [
   { rowMm: 4.9, graphMm: 30 },
   { rowMm: 4.8, graphMm: 25 },
   { rowMm: 4.8, graphMm: 21 },
-] as const;
+  { rowMm: 4.5, graphMm: 21, gapMm: 2.5 },
+  { rowMm: 4.2, graphMm: 20, gapMm: 2 },
+];
 /** Share of the width that the left column takes. */
 const CHECK_SHARE = 0.48;
 
@@ -74,9 +76,9 @@ function checkPageWith(
   const doing = advice.corrections(record, right, measure);
   const sections = advised ? [] : advice.sections(record, right, measure);
   const sizes = check.formerSizes(record, left, measure);
-  for (const { rowMm, graphMm } of CHECK_SIZES) {
+  for (const { rowMm, graphMm, gapMm = GAP } of CHECK_SIZES) {
     const wide = [...first, ...check.tapChecks(record, room.widthMm, rowMm, measure, advised), ...settings];
-    const free = room.heightMm - height(wide) - sign.heightMm - 2 * GAP;
+    const free = room.heightMm + GAP - height(wide, gapMm) - sign.heightMm - 3 * gapMm;
     if (free < 0) continue;
     const before = check.checks(record, left, rowMm, measure);
     const line = twoCapacitors(record, left, graphMm, measure);
@@ -86,10 +88,10 @@ function checkPageWith(
       { left: [before, ...line], right: [doing, ...sections] },
       { left: line, right: [check.checks(record, right, rowMm, measure), doing, ...sections] },
     ];
-    const found = tries.find((each) => fits(each, free));
+    const found = tries.find((each) => fits(each, free, gapMm));
     if (!found) continue;
-    const columns = beside([{ ...stack(found.left, GAP), widthMm: left }, stack(found.right, GAP)], COLUMN_GAP);
-    return { part: TITLE.check, blocks: [...wide, columns], foot: sign };
+    const columns = beside([{ ...stack(found.left, gapMm), widthMm: left }, stack(found.right, gapMm)], COLUMN_GAP);
+    return { part: TITLE.check, blocks: [...wide, columns], foot: sign, gapMm };
   }
   return null;
 }
@@ -115,9 +117,9 @@ function toCheckBy(record: CoilRecord, room: Room, measure: Measure): Body[] {
   const page = checkPage(record, room, measure);
   if (page !== null) return [page];
   const half = (room.widthMm - COLUMN_GAP) / 2;
-  const { rowMm, graphMm } = CHECK_SIZES[2];
+  const { rowMm, graphMm } = CHECK_SIZES[2]!;
   const blocks = [
-    ...check.tapChecks(record, room.widthMm, CHECK_SIZES[3].rowMm, measure),
+    ...check.tapChecks(record, room.widthMm, CHECK_SIZES[3]!.rowMm, measure),
     ...check.settings(record, room.widthMm, 5.2, measure),
     ...pairs([
       stack([check.checks(record, half, rowMm, measure), check.formerSizes(record, half, measure)], GAP),
@@ -159,7 +161,7 @@ export function layOutWindingSheet(record: CoilRecord, measure: Measure): Page[]
   const bodies = bodiesOf(record, room, measure);
   return bodies.map((body, i) => {
     const top = { ...headOf(body.part, TITLE.sheet(i + 1, bodies.length)), heightMm: head.heightMm };
-    const content = stack([top, ...body.blocks], GAP);
+    const content = stack([top, ...body.blocks], body.gapMm ?? GAP);
     const shapes: Shape[] = content.shapes.map((shape) =>
       moved(shape, MARGIN_MM.across, paperHeight - MARGIN_MM.along),
     );

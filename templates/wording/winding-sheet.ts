@@ -46,6 +46,8 @@ export const DRAWING = {
   heading: (scale: string) => `The coil, scale ${scale}`,
   seen: (unit: string) =>
     `Start hole in front. Dots: full on this side, hollow behind. Heights: ${unit} from the datum to the wire centre.`,
+  /** One tap in `n` has its name beside the drawing. */
+  named: (n: number) => `One tap in ${n} is named here; the table has all.`,
   hand: {
     right: 'Climbs to the right on this side.',
     left: 'Climbs to the left on this side.',
