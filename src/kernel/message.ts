@@ -1,15 +1,13 @@
 /** What client and worker say to one another. */
 import type { Solid } from '../parts/solid.ts';
+import type { Numbered } from './hands.ts';
 import type { BedFile, BedOrder, PicturedPart } from './make.ts';
 
 export type Order =
   | { readonly kind: 'part'; readonly solid: Solid; readonly scale: readonly number[] }
   | { readonly kind: 'bed'; readonly bed: BedOrder };
 
-export interface Request {
-  readonly id: number;
-  readonly order: Order;
-}
+export type Request = Numbered<Order>;
 
 export type Reply =
   | { readonly id: number; readonly kind: 'part'; readonly part: PicturedPart }
