@@ -45,10 +45,12 @@ const wirePlanSchema = z.strictObject({
   shelfM: num.describe('on all reels of it before the lot'),
   unserved: num.int().describe('coils that no reel has enough left for'),
   unservedBound: num.int().describe('no plan leaves fewer'),
+  buyM: num.describe('all that they take'),
+  buyBoundM: num.describe('no plan that leaves as few unserved leaves less to buy'),
   scrapM: num.describe(
     'what is left on reels that were cut from and is too short for any coil of the lot in this wire',
   ),
-  scrapBoundM: num.describe('no plan that serves as many leaves less'),
+  scrapBoundM: num.describe('no plan that leaves as few unserved and as little to buy leaves less'),
   exact: z.boolean().describe('the plan is proven to be a best one'),
 });
 
