@@ -47,3 +47,38 @@ export interface KindReadings {
   readonly record: CoilRecord;
   readonly coils: readonly CoilReadings[];
 }
+
+/** What is to be said of a line of the file. */
+export interface FileNote {
+  readonly line: number;
+  /** Title of the column as written; null: of the line as a whole. */
+  readonly column: string | null;
+  /** Stable, kebab-case. */
+  readonly code: string;
+  /** `left out`: it counts nowhere; `kept`: it counts as it stands, and should be looked at. */
+  readonly fate: 'left out' | 'kept';
+  /** Figures that are left out by this note; 0 with `kept`. */
+  readonly figures: number;
+  readonly got: string;
+  readonly expected: string;
+  readonly todo: string;
+}
+
+/** Every figure of the file ends in exactly one of these: figures = readings + dial + missing + leftOut. */
+export interface FileCount {
+  /** Cells in which a reading could stand. */
+  readonly figures: number;
+  readonly readings: number;
+  readonly dial: number;
+  /** Blank. */
+  readonly missing: number;
+  readonly leftOut: number;
+}
+
+/** A file of readings as read. */
+export interface ReadingsFile {
+  readonly kinds: readonly KindReadings[];
+  /** In the order of their lines. */
+  readonly notes: readonly FileNote[];
+  readonly count: FileCount;
+}
