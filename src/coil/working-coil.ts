@@ -70,7 +70,8 @@ export class WorkingCoil {
     this.unitTaps = unitTaps;
   }
 
-  get #geometry(): FieldTables {
+  /** Geometry of the turns for the field, SI. */
+  get tables(): FieldTables {
     const { places, shape, turnShape, turns } = this.coil;
     const metres = Float64Array.from(places, (z) => z / 1e3);
     this.#tables ??= fieldTables(metres, turnShape, shape.wire.bareMm / 2e3, { turns });
@@ -81,9 +82,17 @@ export class WorkingCoil {
     if (this.#winding === null) {
       const nodes = nodesFor(this.coil.turns, [...this.unitTaps, ...this.taps.slice(0, -1)]);
       const sections = nodes.slice(1).map((to, i) => ({ from: nodes[i]!, to }));
-      this.#winding = coupledWinding(nodes, sectionInductances(this.#geometry, sections));
+      this.#winding = coupledWinding(nodes, sectionInductances(this.tables, sections));
     }
     return this.#winding;
+  }
+
+  /** Ohm a turn of the turns 0..turn and of those beyond, evenly over each, at a frequency. */
+  turnOhm(turn: number, kHz: number): { used: number; dead: number } {
+    const { resistance } = this.sections(kHz, [turn]);
+    const dead = this.coil.turns - turn;
+    const used = resistance[0]! / turn;
+    return { used, dead: dead > 1e-6 ? resistance[3]! / dead : used };
   }
 
   /** Strands of litz thin enough for their model at this frequency; solid wire always is. */
@@ -104,20 +113,20 @@ export class WorkingCoil {
     const solved =
       wire.strands > 1
         ? solveLitz(
-            this.#geometry,
+            this.tables,
             kHz * 1e3,
             rho,
             { strands: wire.strands, strandDiameter: wire.strandMm / 1e3, takeUp: LITZ_TAKE_UP },
             sections,
           )
-        : solveField(this.#geometry, kHz * 1e3, rho, sections);
+        : solveField(this.tables, kHz * 1e3, rho, sections);
     this.#solved.set(key, solved);
     return solved;
   }
 
   /** Low-frequency inductance of the turns from..to, uH. */
   inductanceUh(from: number, to: number): number {
-    return from === 0 ? this.coil.inductanceUh(to) : sectionInductances(this.#geometry, [{ from, to }])[0]! * 1e6;
+    return from === 0 ? this.coil.inductanceUh(to) : sectionInductances(this.tables, [{ from, to }])[0]! * 1e6;
   }
 
   /** Resistance and inductance at the ends of the turns from..turn in use, the rest as the switch leaves it. */

@@ -9,7 +9,7 @@ import { capacitanceFor } from '../physics/tuning.ts';
 import { workingCoilOf } from '../record/rebuild.ts';
 import type { Tap } from '../record/schema.ts';
 import type { FiguresRecord } from '../record/survey-schema.ts';
-import { capacitanceCards, NodeNames, positionCards, type TurnResistance, unitCard, windingCards } from './circuit.ts';
+import { capacitanceCards, NodeNames, positionCards, unitCard, windingCards } from './circuit.ts';
 import { headNotes, positionNotes } from './notes.ts';
 import { shrinkOf } from './shrink.ts';
 import { exact, plain } from './text.ts';
@@ -29,15 +29,6 @@ function tuningOf(record: FiguresRecord, tap: Tap): Record<'ccap' | 'cstray' | '
   }
   const ccap = capacitanceFor(tap.working.frequencyKhz * 1e3, tap.working.inductanceUh * 1e-6);
   return { ccap, cstray: 0, caerial: 0 };
-}
-
-/** Copper of the turns in use and of the dead ones at the working frequency, evenly over their turns. */
-function resistanceOf(coil: WorkingCoil, tap: Tap): TurnResistance {
-  const turn = coil.taps[tap.tap - 1]!;
-  const { resistance } = coil.sections(tap.working.frequencyKhz, [turn]);
-  const dead = coil.coil.turns - turn;
-  const used = resistance[0]! / turn;
-  return { used, dead: dead > 1e-6 ? resistance[3]! / dead : used };
 }
 
 /** A resistance across the set that loses what the former does at the working frequency. */
@@ -110,7 +101,7 @@ export function netlistOf(record: FiguresRecord, options: NetlistOptions = {}): 
     ...capacitanceCards(coil, names),
     '',
     '* ---- the winding: inductance and resistance of each stretch, couplings between all of them',
-    ...windingCards(winding, names, tap.turn, resistanceOf(coil, tap)),
+    ...windingCards(winding, names, tap.turn, coil.turnOhm(coil.taps[tap.tap - 1]!, tap.working.frequencyKhz)),
     '',
     `.ac lin 2001 ${exact(fromKhz * 1e3)} ${exact(toKhz * 1e3)}`,
     `.save v(${names.hot})`,

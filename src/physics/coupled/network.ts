@@ -50,12 +50,13 @@ export function connect(winding: CoupledWinding, connection: Connection): Networ
       G[i * index.length + j] = S[m * size + n]! - S[m * size + q]! - S[p * size + n]! + S[p * size + q]!;
     });
   });
-  for (const [a, b] of bridges(winding, connection, from, to)) bridge(G, index.length, a, b);
+  for (const [a, b] of bridges(winding, connection)) bridge(G, index.length, a, b);
   return { index, body, hot: index.indexOf(connection.earthed === 'from' ? to : from), G };
 }
 
-/** Pairs of nodes that the switch joins. */
-function bridges(winding: CoupledWinding, { rest, taps }: Connection, from: number, to: number): [number, number][] {
+/** Pairs of nodes of the winding that the switch joins; none of them is beyond a cut. */
+export function bridges(winding: CoupledWinding, { rest, taps, ...used }: Connection): [number, number][] {
+  const [from, to] = [nodeAt(winding, used.from), nodeAt(winding, used.to)];
   const last = winding.nodes.length - 1;
   if (rest === 'open' || rest === 'disconnected') return [];
   const ends = new Set([0, from, to, last]);

@@ -1,6 +1,6 @@
 import { MU0 } from '../constants.ts';
 import { allPositive, needPositive } from '../domain.ts';
-import { excitation } from './excite.ts';
+import { type Excitation, excitation } from './excite.ts';
 import type { SectionImpedance } from './impedance.ts';
 import { type Section, sectionInductances } from './sections.ts';
 import type { FieldTables } from './tables.ts';
@@ -43,23 +43,36 @@ export function solveLitz(
   const count = sections.length;
   const turn = tables.shape.length * takeUp;
   const direct = (4 * resistivity * turn) / (Math.PI * strandDiameter ** 2 * strands);
-  const omega = 2 * Math.PI * frequency;
-  // Of a turn, per (T peak)^2; one ampere peak loses R/2.
-  const eddy = (2 * strands * turn * Math.PI * omega ** 2 * strandDiameter ** 4) / (128 * resistivity);
+  const eddy = eddyPerTurn(tables, frequency, resistivity, { strands, strandDiameter, takeUp });
   const ownSquared = (MU0 / tables.wireRadius) ** 2 / (8 * Math.PI ** 2);
   const fields = sections.map((section) => excitation(tables, section));
   const resistance = new Float64Array(count * count);
   for (let s = 0; s < count; s++) {
-    for (let t = 0; t < count; t++) {
-      let sum = 0;
-      tables.presence.forEach((share, i) => {
-        const along = fields[s]!.along[i]! * fields[t]!.along[i]!;
-        sum += share * (along + fields[s]!.across[i]! * fields[t]!.across[i]!);
-      });
-      resistance[s * count + t] = (eddy * sum) / tables.wireRadius ** 2;
-    }
+    for (let t = 0; t < count; t++) resistance[s * count + t] = strandLoss(tables, eddy, fields[s]!, fields[t]!);
     const turns = sections[s]!.to - sections[s]!.from;
     resistance[s * count + s]! += turns * (direct + eddy * ownSquared);
   }
   return { sections, frequency, resistance, inductance };
+}
+
+/** What the strands of a turn lose per (T peak)^2, twice: one ampere peak loses R/2. */
+export function eddyPerTurn(
+  tables: FieldTables,
+  frequency: number,
+  resistivity: number,
+  { strands, strandDiameter, takeUp }: Bundle,
+): number {
+  const omega = 2 * Math.PI * frequency;
+  const turn = tables.shape.length * takeUp;
+  return (2 * strands * turn * Math.PI * omega ** 2 * strandDiameter ** 4) / (128 * resistivity);
+}
+
+/** Resistance (ohm) between the sources of two fields by the loss that they raise together in the strands. */
+export function strandLoss(tables: FieldTables, eddy: number, one: Excitation, other: Excitation): number {
+  let sum = 0;
+  tables.presence.forEach((share, i) => {
+    const along = one.along[i]! * other.along[i]!;
+    sum += share * (along + one.across[i]! * other.across[i]!);
+  });
+  return (eddy * sum) / tables.wireRadius ** 2;
 }

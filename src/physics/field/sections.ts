@@ -47,6 +47,15 @@ function piecesOf(tables: FieldTables, { from, to }: Section): Piece[] {
   return pieces;
 }
 
+/** The rings and arcs of a section, for another winding: radius, place and share of a circle, m. */
+export function ringsOf(tables: FieldTables, section: Section): { radius: number; place: number; fraction: number }[] {
+  return piecesOf(tables, section).map(({ ring, fraction, place }) => ({
+    radius: tables.radius,
+    place: place ?? tables.positions[ring]!,
+    fraction,
+  }));
+}
+
 /** How much of a circle of each ring a section holds. */
 export function weightsOf(tables: FieldTables, section: Section): Float64Array {
   const weights = new Float64Array(tables.positions.length);

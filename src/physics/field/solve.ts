@@ -73,8 +73,17 @@ export function solveField(
  * by the root of C.
  */
 export function solveMultipoles(tables: FieldTables, wire: WireResponse, sections: readonly Section[]) {
+  return solveExcitations(
+    tables,
+    wire,
+    sections.map((section) => excitation(tables, section)),
+  );
+}
+
+/** The same for fields of any origin. */
+export function solveExcitations(tables: FieldTables, wire: WireResponse, sources: readonly Excitation[]) {
   const solver = newSolver(tables, rootResponse(tables, wire));
-  const solved = sections.map((section) => solver.solve(excitation(tables, section)));
+  const solved = sources.map((source) => solver.solve(source));
   return { solved, products: solver.products() };
 }
 
@@ -97,6 +106,9 @@ function rootResponse(tables: FieldTables, wire: WireResponse): Multipoles {
   }
   return root;
 }
+
+/** Both systems of a field, across and along, when done. */
+export type Solved = readonly [Part, Part];
 
 /** One of the two systems of a section, when done: right-hand side, solution, what is left. */
 interface Part {
@@ -122,7 +134,7 @@ function newSolver(tables: FieldTables, root: Multipoles) {
   };
   return {
     products: () => products,
-    solve(source: Excitation): readonly [Part, Part] {
+    solve(source: Excitation): Solved {
       const b = [timesReal(root, source.across), timesReal(root, source.along)] as const;
       copy(b[0], across.residual);
       copy(b[1], along.residual);
@@ -147,7 +159,7 @@ function partOf(b: Multipoles, it: Iteration): Part {
  * b_s . x_t with the remaining residual put in once more, b_s . x_t + x_s . r_t: what errs in it is of the second order, and it is the
  * same with s and t exchanged.
  */
-function reaction(s: readonly [Part, Part], t: readonly [Part, Part]): [re: number, im: number] {
+export function reaction(s: Solved, t: Solved): [re: number, im: number] {
   let re = 0;
   let im = 0;
   const add = (a: Multipoles, b: Multipoles) => {
