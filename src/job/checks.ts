@@ -1,5 +1,5 @@
 /** What must hold between keys of a job. Each check names both values. */
-import { lengthText } from '../quantity/format.ts';
+import { lengthText, percentText } from '../quantity/format.ts';
 import { findMaterial } from '../stock/materials.ts';
 import type { Values } from './field.ts';
 import { type Finding, finding } from './finding.ts';
@@ -18,6 +18,7 @@ export function crossCheck(job: Readable): readonly Finding[] {
     ...checkUnits(job),
     ...checkPrinter(job),
     ...checkParts(job),
+    ...checkAsMade(job),
   ];
 }
 
@@ -165,6 +166,49 @@ function checkPrinter({ printer }: Readable): Finding[] {
       ),
     );
   }
+  return found;
+}
+
+/** Farther off than these no bench makes coils that a plan should follow: shares of the diameter and of the pitch. */
+const MOST_OF_DIAMETER = 0.05;
+const MOST_OF_PITCH = 0.1;
+
+/** How coils come out: within what a bench may be off, and of a pitch that a hand lays. */
+function checkAsMade({ 'as-made': made, former, winding }: Readable): Finding[] {
+  if (made === undefined) return [];
+  const found: Finding[] = [];
+  const least = former === undefined ? null : Math.min(...ends(former['outside-diameter']));
+  const most = MOST_OF_DIAMETER * (least ?? Number.POSITIVE_INFINITY);
+  if (least !== null && Math.abs(made.diameter) > most)
+    found.push(
+      finding(
+        'as-made',
+        ['as-made', 'diameter'],
+        `a diameter that comes out ${lengthText(made.diameter, 3)} off on a former of ${lengthText(least)}`,
+        `at most ${percentText(MOST_OF_DIAMETER)} of the former, ${lengthText(most)} either way`,
+        'check the sign and the number; measure the former, and state former.outside-diameter as it is',
+      ),
+    );
+  if (Math.abs(made.pitch) > MOST_OF_PITCH)
+    found.push(
+      finding(
+        'as-made',
+        ['as-made', 'pitch'],
+        `a pitch that comes out ${percentText(made.pitch)} off`,
+        `at most ${percentText(MOST_OF_PITCH)} either way`,
+        'check the sign and the number; a pitch that is another one is stated as winding.pitch',
+      ),
+    );
+  if (made.pitch !== 0 && former?.kind === 'printed' && former.body === 'ribbed' && winding !== undefined)
+    found.push(
+      finding(
+        'as-made',
+        ['as-made', 'pitch'],
+        'a pitch as it comes out for notches that are printed',
+        'as-made.pitch for turns that are laid by hand',
+        `remove as-made.pitch, and mend the z of printer.scale: ${percentText(1 / (1 + made.pitch))} of what it is`,
+      ),
+    );
   return found;
 }
 

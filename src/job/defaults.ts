@@ -35,6 +35,8 @@ export const DEFAULTS = {
   'shop.meter': '100 kHz',
   'shop.meter-accuracy': '1 %',
   'shop.capacitor-tolerance': '1 %',
+  'as-made.diameter': '0 mm',
+  'as-made.pitch': '0 %',
   units: 'metric',
 } as const;
 
@@ -55,7 +57,7 @@ const SECTIONS = ['former', 'winding', 'printer', 'shop'] as const;
 export function complete(written: unknown): Completed {
   if (!isData(written)) return { data: written, assumed: {} };
   const data: Data = { ...written };
-  for (const section of [...SECTIONS, 'want', 'set'] as const) {
+  for (const section of [...SECTIONS, 'want', 'set', 'as-made'] as const) {
     if (isData(data[section])) data[section] = { ...data[section] };
     // A heading whose lines are all commented out is a section left out.
     else if (data[section] === null) delete data[section];

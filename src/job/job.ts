@@ -116,6 +116,14 @@ export interface Shop {
   readonly capacitorTolerance: number;
 }
 
+/** What a bench makes of a plan. */
+export interface AsMade {
+  /** Added to the mean diameter of the turns; the former is made to its nominal diameter all the same. */
+  readonly diameterMm: number;
+  /** By how much the pitch of turns that are laid by hand comes out larger, a fraction; printed grooves and notches have their own. */
+  readonly pitch: number;
+}
+
 export interface Job {
   readonly name: string;
   /** YYYY-MM-DD. */
@@ -134,6 +142,7 @@ export interface Job {
   readonly celsius: number;
   readonly printer: Printer;
   readonly shop: Shop;
+  readonly asMade: AsMade;
   /** Null: what suits the former. */
   readonly parts: readonly (PartKind | 'all')[] | null;
   /** Where it was written: the file, and the line of every key that is in it, by dotted key. */

@@ -124,6 +124,7 @@ export function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string)
       capacitorsPf: ascending(shop.capacitors),
       capacitorTolerance: shop['capacitor-tolerance'],
     },
+    asMade: { diameterMm: read['as-made']?.diameter ?? 0, pitch: read['as-made']?.pitch ?? 0 },
     parts: read.parts ?? null,
     source: { file, lines: Object.fromEntries(lines) },
     given: written,

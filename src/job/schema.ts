@@ -205,6 +205,21 @@ const shopSchema = z
   })
   .describe('What is on the bench: for arbor and winding stand, and to measure with.');
 
+const asMadeSchema = z
+  .strictObject({
+    diameter: quantity(
+      'length',
+      'What the mean diameter of the turns comes out larger than planned, or smaller with a minus.',
+      { zero: true, negative: true },
+    ),
+    pitch: quantity(
+      'ratio',
+      'What the pitch of turns that are laid by hand comes out larger than planned, or smaller with a minus.',
+      { zero: true, negative: true },
+    ),
+  })
+  .describe('What this bench makes of a plan, from finished coils: the next is designed as it will come out.');
+
 export const jobSchema = z
   .strictObject({
     $schema: z.unknown().optional().meta({ description: 'For editors; not read.', type: 'string' }),
@@ -231,6 +246,7 @@ export const jobSchema = z
     temperature: quantity('temperature', 'Temperature of the copper at work.'),
     printer: printerSchema,
     shop: shopSchema,
+    'as-made': asMadeSchema.optional(),
     parts: partsField,
   })
   .meta({

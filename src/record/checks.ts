@@ -1,7 +1,7 @@
 /** What to measure besides the taps, with limits: the former, the winding under way, and resonance of the whole coil. */
 
 import type { Spread } from '../coil/tolerance.ts';
-import type { Shop } from '../job/job.ts';
+import type { AsMade, Shop } from '../job/job.ts';
 import type { Design } from '../solve/design.ts';
 import { lengthHalfMm } from './meter.ts';
 import type { Measuring } from './meter-schema.ts';
@@ -9,12 +9,12 @@ import { decimals } from './rounding.ts';
 import type { Check } from './schema.ts';
 import { overTwenty } from './steps.ts';
 
-export function checksOf(
-  design: Design,
-  spread: Spread,
-  measuring: Measuring,
-  shop: Pick<Shop, 'capacitorTolerance'>,
-): Check[] {
+interface CheckedJob {
+  readonly shop: Pick<Shop, 'capacitorTolerance'>;
+  readonly asMade: AsMade;
+}
+
+export function checksOf(design: Design, spread: Spread, measuring: Measuring, { shop, asMade }: CheckedJob): Check[] {
   const { former, coil, taps } = design;
   const checks: Check[] = [];
   const add = (what: string, nominal: number, low: number, high: number, unit: string, digits: number) =>
@@ -28,7 +28,9 @@ export function checksOf(
     });
   const diameter = former.outsideDiameterMm;
   const half = spread.diameterMm;
-  add('former, outside diameter', diameter, diameter - half, diameter + half, 'mm', 2);
+  // What the bench makes of the diameter can lie in the former or in how the wire beds on it: both will do.
+  const made = diameter + asMade.diameterMm;
+  add('former, outside diameter', made, Math.min(diameter, made) - half, Math.max(diameter, made) + half, 'mm', 2);
   if (coil.places.length >= 21) {
     const mm = overTwenty(design);
     const width = lengthHalfMm(coil, spread, 19);

@@ -131,6 +131,13 @@ export const recordSchema = z.strictObject({
       leadUh: num.describe('lead of a tap'),
     })
     .describe('half widths at 95 % of what the limits of every tap come from'),
+  asMade: z
+    .strictObject({
+      diameterMm: num.describe('what the mean diameter comes out larger than former and wire'),
+      pitch: num.describe('what the pitch of turns that are laid by hand comes out larger, a fraction'),
+    })
+    .optional()
+    .describe('what the bench makes of a plan, counted in every figure; left out: nothing else than planned'),
   coverage: z
     .strictObject({
       neighbours: z.array(

@@ -4,6 +4,8 @@ import type { Possible } from '../parts/parts.ts';
 import { strandLossValid } from '../physics/loss.ts';
 import { selfCapacitanceValid } from '../physics/medhurst.ts';
 import { ringsValid } from '../physics/ring-sum.ts';
+import { tidy } from '../quantity/format.ts';
+import type { Candidate } from '../solve/candidates.ts';
 import type { Found } from '../solve/search.ts';
 import type { CoilRecord, Former } from './schema.ts';
 
@@ -100,6 +102,7 @@ export function warningsOf(job: Job, found: Found, alternatives: number, coverag
       'pitch-uneven-layers',
       `A pitch of ${+pitchMm.toFixed(3)} mm is ${layers.toFixed(2)} layers of ${job.printer.layerMm} mm: the edges of the groove fall unevenly from turn to turn. ${+(Math.round(layers) * job.printer.layerMm).toFixed(3)} mm is ${Math.round(layers)}.`,
     );
+  if (job.asMade.diameterMm !== 0 || job.asMade.pitch !== 0) add('as-made', asMadeText(job, candidate.pitch.kind));
   if (former.kind === 'tube')
     add(
       'measure-the-tube',
@@ -111,6 +114,18 @@ export function warningsOf(job: Job, found: Found, alternatives: number, coverag
       `Only ${alternatives} other coils within what the job permits are better in some respect; permit more wires, diameters or pitches to see others.`,
     );
   return list;
+}
+
+/** What the bench makes of a plan, which the figures count on. */
+function asMadeText({ asMade }: Job, kind: Candidate['pitch']['kind']): string {
+  const { diameterMm, pitch } = asMade;
+  const signed = (value: number, unit: string) => `${value > 0 ? '+' : ''}${tidy(value, 4)} ${unit}`;
+  const diameter = diameterMm === 0 ? [] : [`mean diameter ${signed(diameterMm, 'mm')}`];
+  const laid = pitch === 0 || kind === 'groove' ? [] : [`pitch ${signed(100 * pitch, '%')}`];
+  const counted = [...diameter, ...laid];
+  const first = counted.length === 0 ? '' : `Worked out as this bench makes it (as-made): ${counted.join(', ')}.`;
+  if (pitch === 0 || kind !== 'groove') return first;
+  return `${first} The turns lie in a printed groove: as-made.pitch is not counted, the pitch follows printer.scale.`.trim();
 }
 
 /** Parts that would suit and cannot be made for this coil. */

@@ -7,6 +7,9 @@
  * the groove and a land of a quarter of a wire. A pitch that is stated is taken as it stands or not at all: on a printed
  * former it is close, or wide enough for a groove, or held by spacers that the job names. Ribs have a notch a turn: the
  * pitches of a groove.
+ *
+ * What the bench makes of a pitch (`as-made`) is in the pitch of close and spaced turns, so that holes, template and figures are
+ * those of the coil as it comes out; a groove's or notch's pitch is printed, and its error is one of the printer's scale.
  */
 import type { Job } from '../job/job.ts';
 import { spacers } from '../stock/spacers.ts';
@@ -77,8 +80,20 @@ export function leastGroovePitchMm(overallMm: number, layerMm: number): number {
   return layerMm * Math.max(LEAST_LAYERS, Math.ceil(needed / layerMm - 1e-9));
 }
 
-/** All pitches of a wire that the job permits. */
+/** Turns pressed nearer than this share of the least covered diameter are no turns side by side. */
+const SQUEEZED = 0.97;
+
+/** All pitches of a wire that the job permits, those that a hand lays as they come out. */
 function pitchesFor(job: Job, wire: Wire): Pitch[] {
+  const { pitch } = job.asMade;
+  const planned = pitchesPlanned(job, wire);
+  if (pitch === 0) return planned;
+  return planned
+    .map((one) => (one.kind === 'groove' ? one : { ...one, mm: round4(one.mm * (1 + pitch)) }))
+    .filter(({ kind, mm }) => kind === 'groove' || mm >= SQUEEZED * wire.overallLowMm);
+}
+
+function pitchesPlanned(job: Job, wire: Wire): Pitch[] {
   const asked = job.winding.pitch;
   const bare = wire.covering === 'bare';
   const printed = job.former.kind === 'printed';

@@ -44,9 +44,11 @@ export interface Estimate extends Size {
   readonly spread: number;
 }
 
-export function meanDiameterMm(candidate: Candidate): number {
+/** Twice the radius of the wire centre as the coil comes out: what the bench adds to the plan is in it. */
+export function meanDiameterMm({ asMade }: Pick<Job, 'asMade'>, candidate: Candidate): number {
+  const { pitch, formerMm, wire } = candidate;
   // A groove half a wire deep puts the wire's centre at the outside diameter.
-  return candidate.pitch.kind === 'groove' ? candidate.formerMm : candidate.formerMm + candidate.wire.overallMm;
+  return formerMm + (pitch.kind === 'groove' ? 0 : wire.overallMm) + asMade.diameterMm;
 }
 
 /** Diameter that stands for the turns in laws of round coils: the mean diameter, or on ribs that of the circle of a turn's area. */
@@ -55,7 +57,7 @@ export function roundDiameterMm(
   candidate: Candidate,
   method: TapMethod | undefined = candidate.methods[0],
 ): number {
-  const mean = meanDiameterMm(candidate);
+  const mean = meanDiameterMm(job, candidate);
   const { corners, bendMm } = cornersOn(ribSection(job, candidate.wire.overallMm, method), mean);
   return equivalentDiameterMm(mean, corners, bendMm);
 }
@@ -143,7 +145,7 @@ export function estimateOf(job: Job, demand: Demand, size: Size): Estimate {
   const diameter = roundDiameterMm(job, candidate);
   const targets = roughTargets(job, demand, size);
   const ribs = ribSection(job, wire.overallMm, candidate.methods[0]);
-  const turnM = Math.hypot(ribbedTurnMm(meanDiameterMm(candidate), ribs), pitch.mm) / 1e3;
+  const turnM = Math.hypot(ribbedTurnMm(meanDiameterMm(job, candidate), ribs), pitch.mm) / 1e3;
   let loss = 0;
   let firstTapTurns = turns;
   const looked = new Set([0, targets.length >> 1, targets.length - 1]);

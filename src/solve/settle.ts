@@ -76,7 +76,7 @@ export function coilOf(setting: Setting, state: Settled, turns: number): Coil {
   const { candidate, method } = setting;
   const gaps: Gap[] =
     method.gapMm > 0 ? [...state.unitTaps, ...state.taps].map((turn) => ({ turn, gapMm: method.gapMm })) : [];
-  const meanMm = meanDiameterMm({ ...candidate, formerMm: state.outsideMm });
+  const meanMm = meanDiameterMm(setting.job, { ...candidate, formerMm: state.outsideMm });
   return new Coil({
     wire: candidate.wire,
     meanDiameterMm: meanMm,

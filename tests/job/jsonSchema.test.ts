@@ -44,7 +44,10 @@ describe('the JSON Schema of a job', () => {
   });
 
   it('shows the defaults that the reader takes', () => {
-    const least = readJob('job: x\nwant: { inductance: 9 uH }\nset: { capacitor: 15 pF to 380 pF }', 'x').assumed;
+    const least = readJob(
+      'job: x\nwant: { inductance: 9 uH }\nset: { capacitor: 15 pF to 380 pF }\nas-made: {}',
+      'x',
+    ).assumed;
     const shown = keys(jobJsonSchema() as Node).filter(([, node]) => node.default !== undefined);
     expect(shown.length).toBeGreaterThan(15);
     for (const [key, node] of shown) expect([key, least[key]]).toEqual([key, node.default]);
