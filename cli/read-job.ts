@@ -37,14 +37,14 @@ async function readBytes(path: string, file: string, kind: FileKind): Promise<Ui
 async function asFault(error: unknown, path: string, file: string, kind: FileKind): Promise<unknown> {
   if (!(error instanceof Error) || !('code' in error)) return error;
   const fault = (code: string, got: string, todo: string) =>
-    new Fault(3, { code, place: { file }, got, expected: `${kind.file} in YAML or JSON`, todo });
+    new Fault(3, { code, place: { file }, got, expected: `${kind.file} in ${kind.form}`, todo });
   switch (error.code) {
     case 'ENOENT':
     case 'ENOTDIR': {
       const names = await readdir(dirname(path)).catch(() => []);
       const near = nearest(
         basename(path),
-        names.filter((name) => /\.(?:ya?ml|json)$/i.test(name)),
+        names.filter((name) => /\.(?:ya?ml|json|csv)$/i.test(name)),
       );
       const meant = near === null ? null : `did you mean ${join(dirname(file), near)}?`;
       return fault(

@@ -22,12 +22,13 @@ import { type Assumed, isData } from './defaults.ts';
 import { faultsOf, keyText } from './faults.ts';
 import { COIL_FILE } from './file-kind.ts';
 import type { Finding } from './finding.ts';
+import { nameOfFile } from './name.ts';
 import { readTree } from './tree.ts';
 
 /** Reads a measured coil, YAML or JSON. Throws a {@link Fault} with exit code 3. `file` is for messages and for a name. */
 export function readCoilFile(text: string, file: string): CoilFile {
   const tree = readTree(text, file, COIL_FILE);
-  const { data, assumed } = completeCoil(tree.data, nameOf(file));
+  const { data, assumed } = completeCoil(tree.data, nameOfFile(file, 'Measured coil'));
   const inWords = isData(data) && isData(data.coil) && typeof data.coil.wire === 'string';
   const schema = inWords ? textFileSchema : groupFileSchema;
   const parsed = schema.safeParse(data);
@@ -156,13 +157,6 @@ function toFile(read: ReadCoilFile, measured: Measured, written: unknown, assume
     given: leaves(written),
     assumed: { ...assumed, ...(read.spread.tap === undefined ? { 'spread.tap': tapSpread } : {}), ...inferred },
   };
-}
-
-/** The name of the file without its ending, for a coil that has none. */
-function nameOf(file: string): string {
-  const base = (file.split(/[\\/]/).at(-1) ?? '').replace(/\.(?:ya?ml|json)$/i, '').trim();
-  const plain = base.replace(/[\p{Cc}\p{Cf}\p{Zl}\p{Zp}\p{Cs}]/gu, '').slice(0, 60);
-  return plain === '' || plain === '-' ? 'Measured coil' : plain;
 }
 
 /** What was written, leaf by leaf, by dotted key; the key for editors is left out. */

@@ -26,6 +26,13 @@ export function readName(raw: unknown): Parsed<string> {
   return length > LONGEST_NAME ? refuse(`${length} characters`, 'write a shorter name') : { ok: true, value: name };
 }
 
+/** The name of the file without its ending, for what has no name of its own. */
+export function nameOfFile(file: string, fallback: string): string {
+  const base = (file.split(/[\\/]/).at(-1) ?? '').replace(/\.(?:ya?ml|json|csv|tsv)$/i, '').trim();
+  const plain = base.replace(/[\p{Cc}\p{Cf}\p{Zl}\p{Zp}\p{Cs}]/gu, '').slice(0, 60);
+  return plain === '' || plain === '-' ? fallback : plain;
+}
+
 /** A day of the calendar, YYYY-MM-DD. */
 export function readDate(raw: unknown): Parsed<string> {
   const match = typeof raw === 'string' ? /^(\d{4})-(\d{2})-(\d{2})$/.exec(raw) : null;

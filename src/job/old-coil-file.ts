@@ -9,6 +9,7 @@ import { isData } from './defaults.ts';
 import { faultsOf, keyText } from './faults.ts';
 import { OLD_COIL_FILE } from './file-kind.ts';
 import type { Job } from './job.ts';
+import { nameOfFile } from './name.ts';
 import { completeOld } from './old-coil/defaults.ts';
 import { measuredOld } from './old-coil/measured.ts';
 import { groupFileSchema, textFileSchema, type WAYS } from './old-coil/schema.ts';
@@ -31,7 +32,7 @@ export interface MatchFile {
 /** Reads an old coil, YAML or JSON. Throws a {@link Fault} with exit code 3. `file` is for messages and for a name. */
 export function readOldCoil(text: string, file: string): MatchFile {
   const tree = readTree(text, file, OLD_COIL_FILE);
-  const { data, assumed } = completeOld(tree.data, nameOf(file));
+  const { data, assumed } = completeOld(tree.data, nameOfFile(file, 'Old coil'));
   const inWords = isData(data) && isData(data.old) && typeof data.old.wire === 'string';
   const schema = inWords ? textFileSchema : groupFileSchema;
   const parsed = schema.safeParse(data);
@@ -78,10 +79,3 @@ const inOrder = (faults: readonly FaultParts[]): Fault =>
 
 const hasKey = (data: unknown, section: string, key: string): boolean =>
   isData(data) && isData(data[section]) && Object.hasOwn(data[section], key);
-
-/** The name of the file without its ending, for a coil that has none. */
-function nameOf(file: string): string {
-  const base = (file.split(/[\\/]/).at(-1) ?? '').replace(/\.(?:ya?ml|json)$/i, '').trim();
-  const plain = base.replace(/[\p{Cc}\p{Cf}\p{Zl}\p{Zp}\p{Cs}]/gu, '').slice(0, 60);
-  return plain === '' || plain === '-' ? 'Old coil' : plain;
-}

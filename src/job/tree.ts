@@ -5,7 +5,7 @@
 import { isAlias, isMap, isPair, isSeq, LineCounter, type Node, parseAllDocuments, visit, type YAMLError } from 'yaml';
 import { Fault, type FaultParts } from '../fault.ts';
 import { quote } from '../quantity/parse.ts';
-import { type FileKind, JOB_FILE } from './file-kind.ts';
+import { type FileKind, JOB_FILE, otherKind } from './file-kind.ts';
 
 export type Path = readonly (string | number)[];
 
@@ -31,7 +31,7 @@ export function decode(bytes: Uint8Array, file: string, kind: FileKind = JOB_FIL
       code: 'not-utf-8',
       place: { file },
       got: 'bytes that are not UTF-8 text',
-      expected: `${kind.noun} in YAML or JSON, in UTF-8`,
+      expected: `${kind.noun} in ${kind.form}, in UTF-8`,
       todo: 'save the file as UTF-8 text; PDF, ZIP and word processor files cannot be read',
     });
   }
@@ -48,7 +48,7 @@ export function readTree(text: string, file: string, kind: FileKind = JOB_FILE):
       code: 'too-deep',
       place: { file, line: deep },
       got: `more than ${DEEPEST} levels, one inside the other`,
-      expected: 'a job, which needs three',
+      expected: `${kind.noun}, which needs three or four`,
       todo: 'look for brackets or indents that are never closed',
     });
   }
@@ -74,15 +74,29 @@ export function readTree(text: string, file: string, kind: FileKind = JOB_FILE):
       code: 'several-documents',
       place: { file, line: second === undefined ? undefined : lines.linePos(second).line },
       got: `${documents.length} documents in one file`,
-      expected: 'one job a file',
-      todo: 'put each job into a file of its own and remove the line ---',
+      expected: `${kind.noun} in a file of its own`,
+      todo: 'put each into a file of its own and remove the line ---',
     });
   }
   const contents = document.contents as Node;
   refuseAliases(contents, lines, file);
   const data: unknown = document.toJS({ maxAliasCount: 0 });
   if (data === null || data === '') throw empty(file, kind);
-  return { data, lineOf: (path) => lineAt(contents, path, lines) };
+  const lineOf = (path: Path) => lineAt(contents, path, lines);
+  const other = otherKind(data, kind);
+  if (other !== null) throw notThis(other.kind, other.key, kind, file, other.key === null ? 1 : lineOf([other.key]));
+  return { data, lineOf };
+}
+
+/** One fault for a file of another kind: what it lacks of this one would only bury it. */
+function notThis(is: FileKind, key: string | null, asked: FileKind, file: string, line: number | undefined): Fault {
+  return new Fault(3, {
+    code: 'other-kind',
+    place: { file, line, key: key ?? undefined },
+    got: is.noun,
+    expected: `${asked.noun}, with ${asked.least}`,
+    todo: `give it to: coilwright ${is.verb} ${file}`,
+  });
 }
 
 function tooLarge(bytes: number, file: string, kind: FileKind): Fault {
