@@ -13,14 +13,14 @@ await rm(dist, { recursive: true, force: true });
 await mkdir(dist, { recursive: true });
 await build({
   absWorkingDir: root,
-  entryPoints: { coilwright: 'cli/main.ts', worker: 'src/kernel/worker.ts' },
+  entryPoints: { coilwright: 'cli/main.ts', worker: 'src/kernel/worker.ts', planner: 'src/lot/planner.ts' },
   outdir: dist,
   bundle: true,
   splitting: true,
   format: 'esm',
   platform: 'node',
   target: 'node20',
-  // Flat chunk names: the worker is found beside whichever chunk asks for it.
+  // Flat chunk names: worker and planner are found beside whichever chunk asks for it.
   chunkNames: '[name]-[hash]',
   minifySyntax: true,
   sourcemap: false,
