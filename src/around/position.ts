@@ -4,7 +4,6 @@
  * rest, and a second winding where there is one. What the set connects (tuning capacitor, aerial, detector, instruments) is not in
  * it: see `response.ts`. The same circuit as the netlist with `spread` at 1.
  */
-import type { Coil } from '../coil/coil.ts';
 import { formerLossOhm } from '../coil/positions.ts';
 import type { Rest, WorkingCoil } from '../coil/working-coil.ts';
 import { EARTH, type Network } from '../physics/circuit/network.ts';
@@ -15,7 +14,6 @@ import { NodeGroups } from './node-groups.ts';
 
 /** The other winding beside the main one, as its two ends see it. */
 export interface SecondSide {
-  readonly coil: Coil;
   /** H at this frequency. */
   readonly inductance: number;
   readonly resistance: number;
@@ -23,7 +21,9 @@ export interface SecondSide {
   mutual(from: number, to: number): number;
   /** F across it. */
   readonly selfCapacitance: number;
-  /** F between its free end and the main winding at a turn. */
+  /** ohm that its copper adds to the turns in use. */
+  readonly added: number;
+  /** F between the two where they lie over one another, at a turn of the main winding. */
   readonly between: readonly { readonly turn: number; readonly capacitance: number }[];
 }
 
@@ -69,11 +69,16 @@ export function positionNetwork(coil: WorkingCoil, turn: number, kHz: number, op
     toEarth(k, f);
   });
   for (const { turn: at, capacitance } of on.strays) toEarth(nodeIn(index, place(at)), capacitance);
-  for (const { turn: at, capacitance } of second?.between ?? [])
-    capacitors.push({ from: number(nodeIn(index, nearest(winding, at))), to: number(free!), capacitance });
+  // The voltage along the second winding rises evenly from earth: half of the capacitance to it counts at either end.
+  for (const { turn: at, capacitance } of second?.between ?? []) {
+    const node = nodeIn(index, nearest(winding, at));
+    toEarth(node, capacitance / 2);
+    capacitors.push({ from: number(node), to: number(free!), capacitance: capacitance / 2 });
+  }
   if (second !== null) toEarth(free!, second.selfCapacitance);
 
-  const copper = coil.turnOhm(turn, kHz);
+  const alone = coil.turnOhm(turn, kHz);
+  const copper = { ...alone, used: alone.used + (second?.added ?? 0) / turn };
   const series = formerLossOhm(
     coil.terminal(turn, kHz, 'open').inductanceUh,
     coil.coil.selfPf(turn),

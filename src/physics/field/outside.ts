@@ -21,7 +21,7 @@ export interface OuterRing {
  * Units: m. Domain: radius and from > 0, not on the ring itself (RangeError). Source: Smythe 1950, 7.10.
  * Accuracy: 1e-7 against the slopes of Maxwell's mutual inductance, of which it is the derivative, by differences.
  *
- * Example: ringField(0.05, 0.03, 0.04).axial = 5.41848e-6
+ * Example: ringField(0.05, 0.03, 0.04).axial = 4.82212e-6
  */
 export function ringField(radius: number, from: number, above: number): { axial: number; radial: number } {
   const span = Math.hypot(radius + from, above);
