@@ -65,6 +65,12 @@ function parser(terminal: Terminal, version: string): Argv {
       async (found) => (await import('./match.ts')).match(found, terminal, version),
     )
     .command(
+      VERBS.lot.written,
+      VERBS.lot.does,
+      async (one) => (await import('./lot.ts')).describeLot(one),
+      async (found) => (await import('./lot.ts')).lot(found, terminal, version),
+    )
+    .command(
       VERBS.stock.written,
       VERBS.stock.does,
       async (one) => (await import('./stock.ts')).describeStock(one),

@@ -7,6 +7,8 @@ export interface Terminal {
   readonly columns: number;
   /** It shows signs of ASCII alone. */
   readonly plain?: boolean;
+  /** Writes over the line that tells how far a run is; empty text takes the line away. Only where a person watches. */
+  readonly status?: ((text: string) => void) | undefined;
   /** Standard input, at most `most` bytes and one more. */
   readonly input: (most: number) => Promise<Uint8Array>;
   readonly folder: string;
@@ -22,8 +24,20 @@ export function systemTerminal(): Terminal {
     err: (text) => void process.stderr.write(text),
     columns: Math.min(WIDTH.most, Math.max(WIDTH.least, columns)),
     plain: isPlain(process.env, process.platform),
+    status: process.stderr.isTTY ? statusLine((text) => void process.stderr.write(text), columns) : undefined,
     input: readInput,
     folder: process.cwd(),
+  };
+}
+
+/** Writes over what it wrote before with blanks and returns of the carriage, which every terminal knows. */
+export function statusLine(write: (text: string) => void, columns: number): (text: string) => void {
+  let shown = 0;
+  return (text) => {
+    // A full line would be broken by some terminals.
+    const line = text.slice(0, columns - 1);
+    write(`\r${line.padEnd(shown)}${line === '' ? '\r' : ''}`);
+    shown = line.length;
   };
 }
 

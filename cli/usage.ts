@@ -1,6 +1,6 @@
 /** Wrong use of the command line: from what the parser says to a fault with exit code 2. */
 import { Fault, type FaultParts } from '../src/fault.ts';
-import { COIL_FILE, JOB_FILE, OLD_COIL_FILE } from '../src/job/file-kind.ts';
+import { COIL_FILE, type FileKind, JOB_FILE, LOT_FILE, OLD_COIL_FILE } from '../src/job/file-kind.ts';
 import { nearest } from '../src/job/nearest.ts';
 import { WrongUse } from './command-line.ts';
 import { COMMON_OPTIONS, isVerb, VERB_NAMES, VERBS, type Verb } from './verbs.ts';
@@ -28,13 +28,19 @@ function parts(message: string, given: readonly string[]): readonly FaultParts[]
   return [{ code: 'usage', got: message.toLowerCase(), expected: `options of ${verb} that go together`, todo: help }];
 }
 
+/** What each verb that takes a file takes, and what that is called in its fault. */
+const TAKEN: Partial<Record<Verb, readonly [kind: FileKind, word: string]>> = {
+  survey: [COIL_FILE, 'coil'],
+  match: [OLD_COIL_FILE, 'coil'],
+  lot: [LOT_FILE, 'lot'],
+};
+
 function noFile(verb: Verb): FaultParts {
-  const { noun, begin } = verb === 'survey' ? COIL_FILE : verb === 'match' ? OLD_COIL_FILE : JOB_FILE;
-  const word = verb === 'survey' || verb === 'match' ? 'coil' : 'job';
+  const [{ noun, begin, form }, word] = TAKEN[verb] ?? [JOB_FILE, 'job'];
   return {
     code: `no-${word}`,
     got: `${verb} without ${noun}`,
-    expected: `coilwright ${verb} ${word.toUpperCase()}, a file in YAML or JSON, or - for standard input`,
+    expected: `coilwright ${verb} ${word.toUpperCase()}, a file in ${form}, or - for standard input`,
     todo: `name the ${word} file; "${begin}" writes one to begin with`,
   };
 }

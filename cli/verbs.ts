@@ -3,7 +3,7 @@
 export const VERBS = {
   start: {
     written: 'start [name]',
-    does: 'write a commented job or coil file to begin with',
+    does: 'write a commented job, coil file or lot to begin with',
     options: ['out', 'list', 'schema'],
   },
   plan: {
@@ -20,6 +20,11 @@ export const VERBS = {
     written: 'match <coil>',
     does: 'infer an old coil from what can be measured of it, and make its replacement: every tap as it was',
     options: ['out', 'json', 'explain'],
+  },
+  lot: {
+    written: 'lot <file>',
+    does: 'make a lot: every kind of coil planned once, travellers, wire from reels, print beds, lists',
+    options: ['out', 'json'],
   },
   stock: {
     written: 'stock [what] [words..]',

@@ -7,7 +7,7 @@
 import type { Job } from '../job/job.ts';
 import { slug } from '../job/name.ts';
 import { canonicalText } from '../record/hash.ts';
-import type { Lot, LotPrinter } from './types.ts';
+import type { Lot } from './types.ts';
 
 export interface KindToPlan {
   /** A, B, ... Z, AA, in the order in which the lot first names them. */
@@ -49,39 +49,8 @@ export function kindsOf(lot: Lot): KindToPlan[] {
   });
 }
 
-/** The job as it is made in this lot: on its paper, with its date, on its printers, with or without jigs. */
-function jobInLot(job: Job, lot: Lot): Job {
-  const largest = largestOf(lot.printers);
-  const onLot =
-    largest === null
-      ? job
-      : {
-          ...job,
-          printer: { ...job.printer, bedXMm: largest.bedXMm, bedYMm: largest.bedYMm, heightMm: largest.heightMm },
-          given: {
-            ...job.given,
-            'printer.bed': `${largest.bedXMm} mm x ${largest.bedYMm} mm`,
-            'printer.height': `${largest.heightMm} mm`,
-          },
-          assumed: without(job.assumed, ['printer.bed', 'printer.height']),
-        };
-  return {
-    ...onLot,
-    paper: lot.paper,
-    date: lot.date ?? job.date,
-    parts: lot.jigs === 'once' ? job.parts : job.former.kind === 'printed' ? ['former'] : [],
-  };
-}
-
-/** The one that takes the largest former in one piece. */
-function largestOf(printers: readonly LotPrinter[]): LotPrinter | null {
-  const volume = ({ bedXMm, bedYMm, heightMm }: LotPrinter) => bedXMm * bedYMm * heightMm;
-  return printers.reduce<LotPrinter | null>(
-    (best, one) => (best === null || volume(one) > volume(best) ? one : best),
-    null,
-  );
-}
-
-function without(record: Readonly<Record<string, unknown>>, keys: readonly string[]): Record<string, unknown> {
-  return Object.fromEntries(Object.entries(record).filter(([key]) => !keys.includes(key)));
+/** The job as it is made in this lot: on its paper, with or without jigs. */
+function jobInLot(job: Job, { paper, jigs }: Lot): Job {
+  const formerAlone = job.former.kind === 'printed' ? (['former'] as const) : [];
+  return { ...job, paper, parts: jigs === 'once' ? job.parts : formerAlone };
 }

@@ -39,10 +39,6 @@ export async function openWork(work: string): Promise<void> {
   await mkdir(work, { recursive: true });
 }
 
-export async function closeWork(work: string): Promise<void> {
-  await rm(work, { recursive: true, force: true });
-}
-
 /** The finished unit, read and checked to the last byte; null when there is none, and then nothing of it is left. */
 export async function findUnit(work: string, key: string): Promise<Unit | null> {
   try {

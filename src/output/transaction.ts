@@ -42,8 +42,10 @@ export interface Names {
 export interface Held {
   /** Absolute path of the folder to be. */
   readonly target: string;
-  /** Beside it, on the same disk; the run that uses it makes it and takes it away. */
+  /** Beside it, on the same disk: where a long run keeps what is finished. The run makes it. */
   readonly work: string;
+  /** Takes the work folder away: all of it is written. */
+  readonly finished: () => Promise<void>;
   /** The whole folder, replacing a folder of ours that is there. */
   readonly write: (files: readonly OutputFile[]) => Promise<void>;
 }
@@ -83,7 +85,12 @@ export async function holding<T>(dir: string, run: (held: Held) => Promise<T>): 
     try {
       await mend(target, names);
       await judge(target);
-      return await run({ target, work: names.work, write: (files) => replace(target, names, files) });
+      return await run({
+        target,
+        work: names.work,
+        write: (files) => replace(target, names, files),
+        finished: () => rm(names.work, { recursive: true, force: true }),
+      });
     } finally {
       await rm(names.temporary, { recursive: true, force: true });
       await unlock();
