@@ -1,24 +1,26 @@
 /** What no cutting can better: sums that hold however coils are spread over reels. */
 import type { Cutting, Score } from './spools-problem.ts';
 
-/** Sums of lengths are looked for one by one up to here (as bits of one number); longer reels count with all that is on them. */
-const MOST_BITS = 1 << 21;
+/** Sums of lengths are looked for as bits of one number, while so many bits are written at most: about 30 ms. */
+const MOST_BITS = 30_000_000;
 
 /**
- * Of each reel the most that cuts can take from it, with all coils at hand: the largest sum of lengths that it holds.
+ * Of each reel the most that cuts can take from it, with all coils at hand: the largest sum of lengths that it holds. Of long
+ * reels with many lengths, which fill nearly anything, all that is on them.
  */
 export function fillable({ reels, lengths, counts }: Cutting): readonly number[] {
   const needed = lengths.reduce((sum, length, kind) => sum + length * counts[kind]!, 0);
   const most = Math.max(0, ...reels.filter((reel) => reel < needed));
-  if (most >= MOST_BITS) return reels.map((reel) => Math.min(reel, needed));
-  // Bit s: some coils are s long together. A count of n is put together from 1, 2, 4, ... and a rest.
-  let sums = 1n;
-  for (const [kind, length] of lengths.entries())
-    for (let left = Math.min(counts[kind]!, Math.floor(most / length)), step = 1; left > 0; step *= 2) {
-      const taken = Math.min(step, left);
-      sums = BigInt.asUintN(most + 1, sums | (sums << BigInt(length * taken)));
-      left -= taken;
-    }
+  // A count of n is put together from 1, 2, 4, ... and a rest.
+  const loads = lengths.flatMap((length, kind) => {
+    const found: number[] = [];
+    for (let left = Math.min(counts[kind]!, Math.floor(most / length)), step = 1; left > 0; left -= step, step *= 2)
+      found.push(length * Math.min(step, left));
+    return found;
+  });
+  if (loads.length * most > MOST_BITS) return reels.map((reel) => Math.min(reel, needed));
+  // Bit s: some coils are s long together.
+  const sums = loads.reduce((found, mm) => BigInt.asUintN(most + 1, found | (found << BigInt(mm))), 1n);
   // A digit holds four of them, the last one the lowest.
   const digits = sums.toString(16);
   const reached = (mm: number) =>
@@ -33,10 +35,10 @@ export function fillable({ reels, lengths, counts }: Cutting): readonly number[]
 
 /**
  * The figures that no cutting betters whose figures before are those of `score`.
+ * @param full as from `fillable`
  */
-export function boundOf(problem: Cutting, score: Score): Score {
+export function boundOf(problem: Cutting, full: readonly number[], score: Score): Score {
   const { lengths, counts } = problem;
-  const full = fillable(problem);
   const coils = counts.reduce((sum, n) => sum + n, 0);
   const needed = lengths.reduce((sum, length, kind) => sum + length * counts[kind]!, 0);
   const unserved = coils - mostServed(problem, full);

@@ -2,7 +2,7 @@
  * The best cutting by search of all of them: reel by reel, how many of each length, never which coil of a length. What could
  * not be better than the best one known is left out, and so is what leads to the same coils on the same reels, no better.
  */
-import { fewestReels, fillable } from './spools-bounds.ts';
+import { fewestReels } from './spools-bounds.ts';
 import { type Cuts, type Cutting, compareScores, type Score, scoreOf, scrapOf } from './spools-problem.ts';
 
 export interface Searched {
@@ -20,8 +20,11 @@ interface Prefix {
   readonly opened: number;
 }
 
-/** @param nodes cuttings of single reels that are looked at, at most */
-export function branchAndBound(problem: Cutting, start: Cuts, nodes: number): Searched {
+/**
+ * @param full as from `fillable`
+ * @param steps choices of how many of a length that are made, at most
+ */
+export function branchAndBound(problem: Cutting, full: readonly number[], start: Cuts, steps: number): Searched {
   const { reels, lengths, counts } = problem;
   // What is left of each length as one number; where it has too many digits the search would never end.
   const places = counts.map((_, kind) => counts.slice(0, kind).reduce((product, n) => product * (n + 1), 1));
@@ -31,7 +34,6 @@ export function branchAndBound(problem: Cutting, start: Cuts, nodes: number): Se
   const shortest = lengths.at(-1)!;
   const coils = counts.reduce((sum, n) => sum + n, 0);
   const needed = lengths.reduce((sum, length, kind) => sum + length * counts[kind]!, 0);
-  const full = fillable(problem);
   const after = (values: readonly number[]) =>
     values.map((_, reel) => values.slice(reel).reduce((sum, mm) => sum + mm, 0)).concat(0);
   const fullAfter = after(full);
@@ -40,7 +42,7 @@ export function branchAndBound(problem: Cutting, start: Cuts, nodes: number): Se
 
   let best = start;
   let bestScore = scoreOf(problem, start);
-  let left = nodes;
+  let left = steps;
   const chosen: number[][] = [];
 
   /** Figures that nothing which begins like this betters. */
@@ -95,8 +97,8 @@ export function branchAndBound(problem: Cutting, start: Cuts, nodes: number): Se
 
   /** Most of the longest first: the first cutting of a reel is a full one. */
   function fill(reel: number, prefix: Prefix, cut: number[], kind: number, restMm: number): void {
+    left--;
     if (kind === lengths.length) {
-      if (left-- <= 0) return;
       const usedMm = reels[reel]! - restMm;
       visit(reel + 1, {
         left: prefix.left.map((n, i) => n - cut[i]!),

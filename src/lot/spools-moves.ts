@@ -56,10 +56,9 @@ function pass(
       for (const to of bins) {
         if (to === from) continue;
         for (let back = -1; back < lengths.length; back++) {
-          if (work.left <= 0) return false;
+          if (work.left-- <= 0) return false;
           if (!has(from, there)) break;
           if (back >= 0 && (to.cut[back] === 0 || there.includes(back))) continue;
-          work.left--;
           const moreMm = thereMm - (back < 0 ? 0 : lengths[back]!);
           if (moreMm > to.restMm || -moreMm > from.restMm) continue;
           if (!helps(from, to, moreMm, there.length - (back < 0 ? 0 : 1), shortest)) continue;
