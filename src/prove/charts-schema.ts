@@ -40,7 +40,7 @@ export const chartSchema = z.strictObject({
   limits: limitsSchema.nullable().describe('of the record, in the unit of the chart'),
   points: z.array(chartPointSchema).describe('in the order of the file'),
   leftOut: z.array(text).describe('serials whose readings were taken with another meter frequency'),
-  centre: num.describe('mean'),
+  centre: num.describe('mean, as all limits without the outliers'),
   lower: num.describe('control limits of individuals'),
   upper: num,
   rangeCentre: num.describe('mean of the moving ranges'),

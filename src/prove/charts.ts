@@ -124,9 +124,10 @@ function taken(subject: Subject, coils: readonly CoilReadings[]): Taken {
 function chartOf({ subject, points, leftOut }: Taken): Chart {
   const { digits, fits: _fits, figure: _figure, ...about } = subject;
   const values = points.map(({ value }) => value);
-  const control = controlOf(values);
   const suspected = suspectedAmong(values.length);
   const outliers = new Set(suspected === 0 ? [] : outliersIn(values, suspected).outliers);
+  // A coil that does not belong to the rest, or one reading in a wrong unit, would hide all else behind its wide limits.
+  const control = controlOf(values, outliers);
   const capability = capabilityOf(values, subject.limits, control.inControl);
   const none = typeof capability === 'string';
   return {

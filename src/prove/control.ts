@@ -34,6 +34,13 @@ export interface Control {
 
 const mean = (values: readonly number[]) => values.reduce((sum, value) => sum + value, 0) / values.length;
 
+/** Values and ranges that limits are taken from. */
+function settled(values: readonly number[], ranges: readonly (number | null)[], leftOut: ReadonlySet<number>) {
+  const own = values.filter((_, i) => !leftOut.has(i));
+  const between = ranges.filter((range, i) => range !== null && !leftOut.has(i) && !leftOut.has(i - 1));
+  return { own, between: between as number[] };
+}
+
 /** Values of stretches of at least {@link RUN_LENGTH} on one side; one on the line ends a stretch. */
 function runs(values: readonly number[], centre: number, same: number): boolean[] {
   const side = values.map((value) => (Math.abs(value - centre) <= same ? 0 : Math.sign(value - centre)));
@@ -61,19 +68,21 @@ export function chancePercent(count: number): number {
 }
 
 /**
- * The chart of values in their order, in their own unit.
+ * The chart of values in their order, in their own unit. `leftOut` are those, by their index, that do not belong to the rest: limits are
+ * taken without them and their ranges, and they are held against the limits like any other.
  *
- * Domain: two values at least, all finite, RangeError otherwise.
+ * Domain: all finite, two neighbours at least that are not left out, RangeError otherwise.
  *
  * Example: controlOf([49.6, 47.6, 49.9, 51.3, 47.8, 51.2, 52.6, 52.4, 53.6, 52.1]).upper = 55.804
  */
-export function controlOf(values: readonly number[]): Control {
-  if (values.length < 2 || !values.every(Number.isFinite))
-    throw new RangeError(`a chart needs two finite values at least, got ${values.length}`);
+export function controlOf(values: readonly number[], leftOut: ReadonlySet<number> = new Set()): Control {
   const { d2, D4 } = rangeConstants(2);
   const ranges = values.map((value, i) => (i === 0 ? null : Math.abs(value - values[i - 1]!)));
-  const centre = mean(values);
-  const rangeCentre = mean(ranges.filter((range) => range !== null));
+  const { own, between } = settled(values, ranges, leftOut);
+  if (between.length === 0 || !values.every(Number.isFinite))
+    throw new RangeError(`a chart needs two finite values at least that are neighbours, got ${own.length}`);
+  const centre = mean(own);
+  const rangeCentre = mean(between);
   const reach = (3 * rangeCentre) / d2;
   const rangeUpper = D4 * rangeCentre;
   const same = SAME * Math.max(...values.map(Math.abs));
