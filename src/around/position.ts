@@ -77,7 +77,7 @@ export function positionNetwork(coil: WorkingCoil, turn: number, kHz: number, op
   }
   if (second !== null) toEarth(free!, second.selfCapacitance);
 
-  const alone = coil.turnOhm(turn, kHz);
+  const alone = coil.turnOhm(turn, kHz, options.rest);
   const copper = { ...alone, used: alone.used + (second?.added ?? 0) / turn };
   const series = formerLossOhm(
     coil.terminal(turn, kHz, 'open').inductanceUh,

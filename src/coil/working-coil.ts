@@ -87,12 +87,31 @@ export class WorkingCoil {
     return this.#winding;
   }
 
-  /** Ohm a turn of the turns 0..turn and of those beyond, evenly over each, at a frequency. */
-  turnOhm(turn: number, kHz: number): { used: number; dead: number } {
+  /**
+   * Ohm a turn of the turns 0..turn and of those beyond, evenly over each, at a frequency, for a circuit without resistances between
+   * sections: what loops of the rest lose together with the turns in use is given to those, so that the position comes out as it is.
+   */
+  turnOhm(turn: number, kHz: number, rest: Rest): { used: number; dead: number } {
     const { resistance } = this.sections(kHz, [turn]);
-    const dead = this.coil.turns - turn;
+    const turns = this.coil.turns - turn;
     const used = resistance[0]! / turn;
-    return { used, dead: dead > 1e-6 ? resistance[3]! / dead : used };
+    if (turns < 1e-6) return { used, dead: used };
+    const dead = resistance[3]! / turns;
+    if (rest === 'open' || rest === 'disconnected') return { used, dead };
+    const solved = this.sections(kHz, rest === 'shorted in sections' ? this.#beyond(turn) : [turn]);
+    const count = solved.sections.length;
+    const even = new Float64Array(count * count);
+    solved.sections.forEach(({ from, to }, s) => {
+      even[s * count + s] = (to - from) * (from < turn - 1e-6 ? used : dead);
+    });
+    const inUse = { from: 0, to: 1 };
+    const lost = terminalImpedance({ ...solved, resistance: even }, inUse, rest).resistance;
+    return { used: used + (terminalImpedance(solved, inUse, rest).resistance - lost) / turn, dead };
+  }
+
+  /** Taps from a turn on, but for the whole coil. */
+  #beyond(turn: number): number[] {
+    return this.taps.filter((tap) => tap >= turn - 1e-6 && tap < this.coil.turns - 1e-6);
   }
 
   /** Strands of litz thin enough for their model at this frequency; solid wire always is. */
@@ -132,7 +151,7 @@ export class WorkingCoil {
   /** Resistance and inductance at the ends of the turns from..turn in use, the rest as the switch leaves it. */
   terminal(turn: number, kHz: number, rest: Rest, from = 0): Terminal {
     const before = this.unitTaps.filter((tap) => tap <= from - 1e-6);
-    const later = this.taps.filter((tap) => tap >= turn - 1e-6 && tap < this.coil.turns - 1e-6);
+    const later = this.#beyond(turn);
     const begin = from > 0 ? [from] : [];
     const solved = this.sections(
       kHz,

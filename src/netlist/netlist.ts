@@ -101,7 +101,7 @@ export function netlistOf(record: FiguresRecord, options: NetlistOptions = {}): 
     ...capacitanceCards(coil, names),
     '',
     '* ---- the winding: inductance and resistance of each stretch, couplings between all of them',
-    ...windingCards(winding, names, tap.turn, coil.turnOhm(coil.taps[tap.tap - 1]!, tap.working.frequencyKhz)),
+    ...windingCards(winding, names, tap.turn, coil.turnOhm(coil.taps[tap.tap - 1]!, tap.working.frequencyKhz, rest)),
     '',
     `.ac lin 2001 ${exact(fromKhz * 1e3)} ${exact(toKhz * 1e3)}`,
     `.save v(${names.hot})`,
