@@ -95,7 +95,7 @@ describe('two coaxial windings', () => {
     for (const [kHz, inductance, resistance, mutual] of [
       [1e-6, 1e-12, 1e-9, 1e-6],
       [1e3, 4e-4, 0.02, 0.1],
-      [1e4, 1.5e-3, 0.04, 0.13],
+      [1e4, 1.5e-3, 0.04, 0.15],
     ] as const) {
       const exact = solveField(one, kHz * 1e3, COPPER, cut);
       const got = solvePair(solid(halves[0]), solid(halves[1]), kHz * 1e3, COPPER);
