@@ -29,8 +29,13 @@ export const umDown = (mm: number): number => Math.floor(mm * 1000 + NOISE_UM);
  * @throws Fault with exit 4 for all that does not fit: `part-larger-than-bed`, `part-taller-than-printer`
  */
 export function requireFit(parts: readonly BedPart[], printer: BedSize): void {
-  const faults = parts.flatMap((part) => [...bedFaults(part, printer), ...heightFaults(part, printer)]);
+  const faults = parts.flatMap((part) => fitFaults(part, printer));
   if (faults.length > 0) throw new Fault(4, faults);
+}
+
+/** As `requireFit`, as data: empty when the printer takes the part. */
+export function fitFaults(part: BedPart, printer: BedSize): readonly FaultParts[] {
+  return [...bedFaults(part, printer), ...heightFaults(part, printer)];
 }
 
 const text = (um: number) => String(um / 1000);

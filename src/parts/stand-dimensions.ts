@@ -4,7 +4,7 @@
  */
 import type { PartsRecord } from '../record/schema.ts';
 import { arborDimensions } from './arbor.ts';
-import { EDGE_MARGIN_MM } from './bed-layout.ts';
+import { EDGE_MARGIN_MM } from './bed-rectangles.ts';
 import { type ClampDimensions, clampDimensions } from './stand-clamp.ts';
 import { type ConeDimensions, coneDimensions, outsideMm } from './stand-cone.ts';
 import { M4, screwLengthMm } from './stand-hardware.ts';

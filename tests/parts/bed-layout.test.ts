@@ -2,7 +2,8 @@ import fc from 'fast-check';
 import { afterAll, describe, expect, test } from 'vitest';
 import { Fault } from '../../src/fault.ts';
 import type { BedPart, BedSize } from '../../src/parts/bed-fit.ts';
-import { type Bed, EDGE_MARGIN_MM, layOutBeds } from '../../src/parts/bed-layout.ts';
+import { type Bed, layOutBeds } from '../../src/parts/bed-layout.ts';
+import { EDGE_MARGIN_MM } from '../../src/parts/bed-rectangles.ts';
 
 /** A millionth of a millimetre beyond a micrometre is taken for noise, on both sides of a gap; and doubles add a little. */
 const NOISE_MM = 2.1e-6;
