@@ -13,6 +13,8 @@ export interface Box {
 export interface Measure {
   /** Width in millimetres of one line. */
   width(text: string, sizeMm: number, bold?: boolean): number;
+  /** Baseline to baseline as a share of the size, for text that is set more closely than usual. */
+  readonly leading?: number;
 }
 
 /** Depth of descenders below the baseline as a share of the size. */

@@ -55,7 +55,8 @@ function rectangles(rows: readonly (readonly boolean[])[]): Rect[] {
  * @throws Error for a text that no code holds (about 2000 signs)
  */
 export function qrCode(text: string, sizeMm: number, spare: Spare): QrCode {
-  const rows = encodeQR(text, 'raw', { ecc: spare, border: 0 });
+  const bordered = encodeQR(text, 'raw', { ecc: spare, border: 1 });
+  const rows = bordered.slice(1, -1).map((row) => row.slice(1, -1));
   const modules = rows.length;
   const moduleMm = sizeMm / (modules + 2 * QUIET_MODULES);
   const quiet = QUIET_MODULES * moduleMm;

@@ -10,6 +10,9 @@ import { table } from './table.ts';
 import { figures, fixed, signed } from './text.ts';
 import { lengthText, unitsOf } from './units.ts';
 
+/** A row of these tables, where room is not short. */
+const ROW_MM = 4.6;
+
 /** Taps with a column of their own; of more the first stands for those before the whole coil. */
 const MOST_COLUMNS = 3;
 
@@ -23,7 +26,7 @@ function when({ fromUh, toUh }: Correction): string {
 const change = (percent: number) => (percent === 0 ? '0' : signed(percent, 2));
 
 /** The whole coil: what can be done, from which reading on, and what that does to the taps. */
-export function corrections(record: CoilRecord, widthMm: number, measure: Measure): Block {
+export function corrections(record: CoilRecord, widthMm: number, measure: Measure, rowMm = ROW_MM): Block {
   const { taps } = record.windings[0]!;
   const last = taps.length - 1;
   const shown = taps.length <= MOST_COLUMNS ? taps.slice(0, -1).map((_, i) => i) : [0];
@@ -43,7 +46,7 @@ export function corrections(record: CoilRecord, widthMm: number, measure: Measur
   ]);
   const how = trusted ? ADVICE.how(figures(lowUh), figures(highUh)) : ADVICE.howNoMeter;
   const words = paragraph(how, widthMm, measure, { sizeMm: SMALL_MM });
-  const body = table(columns, rows, measure, { sizeMm: SMALL_MM, rowMm: 4.6 });
+  const body = table(columns, rows, measure, { sizeMm: SMALL_MM, rowMm });
   return { ...stack([heading(ADVICE.heading, widthMm, measure), stack([body, words], 0.8)], 0), widthMm };
 }
 
@@ -63,7 +66,7 @@ export function sectionParts(record: CoilRecord): Parts {
   const stretch = lengthText(stretchOf(record), unitsOf(record) === 'inch' ? 'inch' : 'metric', { digits: 0 });
   return [
     [ADVICE.aTurn, 18, CENTRE],
-    [ADVICE.longer(stretch), 12, RIGHT],
+    [ADVICE.longer(stretch), 14, RIGHT],
     [ADVICE.degrees, 9, RIGHT],
   ];
 }
@@ -78,7 +81,13 @@ export function sectionCells(record: CoilRecord, tap: number): string[] {
   ];
 }
 
-function sectionTable(record: CoilRecord, list: readonly AdviceTap[], widthMm: number, measure: Measure): Block {
+function sectionTable(
+  record: CoilRecord,
+  list: readonly AdviceTap[],
+  widthMm: number,
+  rowMm: number,
+  measure: Measure,
+): Block {
   const full = record.advice.length <= ONE_TABLE;
   const columns = columnsOf(widthMm, [
     [ADVICE.tap, 7, { ...CENTRE, bold: true }],
@@ -92,11 +101,11 @@ function sectionTable(record: CoilRecord, list: readonly AdviceTap[], widthMm: n
       : []),
     ...sectionCells(record, tap),
   ]);
-  return table(columns, rows, measure, { sizeMm: SMALL_MM, rowMm: 4.6 });
+  return table(columns, rows, measure, { sizeMm: SMALL_MM, rowMm });
 }
 
 /** Section by section, in blocks of so many taps as go on a page; of one tap nothing, for it is the whole coil. */
-export function sections(record: CoilRecord, widthMm: number, measure: Measure): Block[] {
+export function sections(record: CoilRecord, widthMm: number, measure: Measure, rowMm = ROW_MM): Block[] {
   const { advice } = record;
   if (advice.length < 2) return [];
   const blocks: Block[] = [];
@@ -105,10 +114,10 @@ export function sections(record: CoilRecord, widthMm: number, measure: Measure):
     const half = Math.ceil(some.length / 2);
     const body =
       advice.length <= ONE_TABLE
-        ? sectionTable(record, some, widthMm, measure)
+        ? sectionTable(record, some, widthMm, rowMm, measure)
         : beside(
             [some.slice(0, half), some.slice(half)].map((part) =>
-              sectionTable(record, part, (widthMm - 2) / 2, measure),
+              sectionTable(record, part, (widthMm - 2) / 2, rowMm, measure),
             ),
             2,
           );

@@ -133,7 +133,7 @@ function tapCheckTable(
 }
 
 /** Thousandths, or four figures when there are fewer than those. */
-const ohms = (value: number) => fixed(value, value < 0.1 ? 4 : value < 10 ? 3 : value < 100 ? 2 : 1);
+export const ohms = (value: number) => fixed(value, value < 0.1 ? 4 : value < 10 ? 3 : value < 100 ? 2 : 1);
 /** To a thousandth at least. */
 export const kiloHertz = (value: number) => fixed(value, value < 100 ? 2 : value < 1000 ? 1 : 0);
 

@@ -2,7 +2,7 @@
 import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { BODY_MM, CAP_SHARE, label, line, rectangle, SMALL_MM } from '../drawing/shapes.ts';
-import { type Block, LEADING, tickBox } from './block.ts';
+import { type Block, leadingOf, tickBox } from './block.ts';
 import { wrap } from './text.ts';
 
 export interface Column {
@@ -100,19 +100,20 @@ export function table(
 ): Block {
   const sizeMm = options.sizeMm ?? BODY_MM;
   const rowMm = options.rowMm ?? 5.2;
+  const leading = leadingOf(measure);
   const { columns, pad } = fitted(asked, rows, sizeMm, measure);
   const widthMm = columns.reduce((sum, column) => sum + column.widthMm, 0);
   const shapes: Shape[] = [];
   const heads = columns.map((column) => cellLines(column, column.head, SMALL_MM, true, pad, measure));
   const deepest = Math.max(...heads.map((lines) => lines.length));
-  const headMm = deepest * SMALL_MM * LEADING + 1.6;
+  const headMm = deepest * SMALL_MM * leading + 1.6;
   shapes.push(rectangle(0, -headMm, widthMm, headMm, 'hair', 0.92));
   let x = 0;
   columns.forEach((column, c) => {
     const lines = heads[c]!;
     const at = place(column, x, pad);
     lines.forEach((text, i) => {
-      const up = (lines.length - 1 - i) * SMALL_MM * LEADING;
+      const up = (lines.length - 1 - i) * SMALL_MM * leading;
       shapes.push(label(at.x, -headMm + 1.5 + up, text, { align: at.align, bold: true }));
     });
     x += column.widthMm;
@@ -123,7 +124,7 @@ export function table(
       cellLines(column, row[c] ?? '', sizeMm, column.bold ?? false, pad, measure),
     );
     const most = Math.max(...cells.map((lines) => lines.length));
-    const height = Math.max(rowMm, most * sizeMm * LEADING + (most > 1 ? 1.2 : 0.4));
+    const height = Math.max(rowMm, most * sizeMm * leading + (most > 1 ? 1.2 : 0.4));
     x = 0;
     columns.forEach((column, c) => {
       if (column.kind === 'tick') {
@@ -131,10 +132,10 @@ export function table(
       } else if (column.kind !== 'blank') {
         const lines = cells[c]!;
         const at = place(column, x, pad);
-        const middle = y - height / 2 + ((lines.length - 1) * sizeMm * LEADING) / 2;
+        const middle = y - height / 2 + ((lines.length - 1) * sizeMm * leading) / 2;
         lines.forEach((text, i) => {
           if (text === '') return;
-          const base = middle - i * sizeMm * LEADING - (CAP_SHARE * sizeMm) / 2;
+          const base = middle - i * sizeMm * leading - (CAP_SHARE * sizeMm) / 2;
           shapes.push(label(at.x, base, text, { align: at.align, sizeMm, bold: column.bold ?? false }));
         });
       }

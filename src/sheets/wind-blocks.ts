@@ -25,6 +25,33 @@ import {
   wireUnit,
 } from './units.ts';
 
+/** Moved from one cell to another at a time, the least width of a cell, and how often at most. */
+const SHIFT_MM = 1.5;
+const LEAST_CELL_MM = 22;
+const MOST_SHIFTS = 24;
+
+/** Widths at which the highest of some cells is lowest: it takes from cells that stay lower than it; as given where that gains nothing. */
+function levelled(given: readonly number[], heightOf: (cell: number, widthMm: number) => number): readonly number[] {
+  const widths = [...given];
+  const heights = widths.map((width, i) => heightOf(i, width));
+  let best = { widths: given, high: Math.max(...heights) };
+  for (let n = 0; n < MOST_SHIFTS; n++) {
+    const high = Math.max(...heights);
+    const to = heights.indexOf(high);
+    const from = widths
+      .map((width, i) => ({ i, width, after: i === to ? Infinity : heightOf(i, width - SHIFT_MM) }))
+      .filter(({ width, after }) => width - SHIFT_MM >= LEAST_CELL_MM && after < high - 1e-9)
+      .sort((a, b) => a.after - b.after || b.width - a.width)[0];
+    if (!from) break;
+    widths[from.i]! -= SHIFT_MM;
+    widths[to]! += SHIFT_MM;
+    for (const i of [from.i, to]) heights[i] = heightOf(i, widths[i]!);
+    const now = Math.max(...heights);
+    if (now < best.high - 1e-9) best = { widths: [...widths], high: now };
+  }
+  return best.widths;
+}
+
 /** Wire, winding, pitch, tension, what to have ready, the whole coil: one strip. */
 export function facts(record: CoilRecord, widthMm: number, measure: Measure): Block {
   const winding = record.windings[0]!;
@@ -49,16 +76,17 @@ export function facts(record: CoilRecord, widthMm: number, measure: Measure): Bl
     ],
     [FACTS.coil, `${figures(winding.inductanceUh)} µH`, FACTS.low],
   ];
-  const widths = shares(widthMm, [34, 30, 31, 29, 35, 27]);
-  const blocks = cells.map(([name, value, more], i) => {
-    const inner = widths[i]! - 3;
+  const cell = ([name, value, more]: [string, string, string], width: number): Block => {
+    const inner = width - 3;
     const parts = [
       paragraph(name, inner, measure, { sizeMm: SMALL_MM }),
       paragraph(value, inner, measure, { sizeMm: 3.4, bold: true }),
       paragraph(more, inner, measure, { sizeMm: SMALL_MM }),
     ];
-    return { ...stack(parts, 0.5), widthMm: widths[i]! };
-  });
+    return { ...stack(parts, 0.5), widthMm: width };
+  };
+  const widths = levelled(shares(widthMm, [34, 30, 31, 29, 35, 27]), (i, width) => cell(cells[i]!, width).heightMm);
+  const blocks = cells.map((each, i) => cell(each, widths[i]!));
   const row = beside(blocks, 0);
   const heightMm = row.heightMm + 2;
   const shapes: Shape[] = [rectangle(0, -heightMm, widthMm, heightMm, 'thin')];
@@ -235,21 +263,21 @@ export function tapBriefly(record: CoilRecord, widthMm: number, measure: Measure
   }
   const above = seenFromAbove(record, measure);
   const inner = widthMm - above.widthMm - 4;
-  const words = paragraph(`${DRAWING.above}. ${DRAWING.aboveWords}`, inner, measure, { sizeMm: SMALL_MM });
+  const words = paragraph(DRAWING.aboveBrief, inner, measure, { sizeMm: SMALL_MM });
   const left = { ...stack([...baring(record, inner, measure), words], 0.8), widthMm: inner };
   return { ...stack([head, panels, beside([left, above], 4)], 0.8), widthMm };
 }
 
-/**
- * The other steps, each with its box and number; steps that are rows of the tap table are named in their place. `part` leaves those
- * out that come when all is wound, or has those alone.
- */
+/** All steps; those up to the end of winding, with or without a word where the rest stand; or those that come when all is wound. */
+export type StepPart = 'all' | 'winding' | 'during' | 'after';
+
+/** The other steps, each with its box and number; steps that are rows of the tap table are named in their place. */
 export function stepItems(
   record: CoilRecord,
   widthMm: number,
   measure: Measure,
   sizeMm: number = BODY_MM,
-  part: 'all' | 'winding' | 'after' = 'all',
+  part: StepPart = 'all',
 ): Block[] {
   const items: Block[] = [];
   const steps = record.steps.filter(({ kind }) => part === 'all' || (kind === 'after') === (part === 'after'));

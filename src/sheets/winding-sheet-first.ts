@@ -3,7 +3,7 @@ import { STEPS, TITLE } from '../../templates/wording/winding-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import { BODY_MM, SMALL_MM } from '../drawing/shapes.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { type Block, beside, stack } from './block.ts';
+import { type Block, beside, closer, stack } from './block.ts';
 import * as wind from './wind-blocks.ts';
 import {
   type Arrangement,
@@ -26,6 +26,8 @@ interface Closeness {
   readonly gapMm: number;
   readonly sizeMm: number;
   readonly betweenMm?: number;
+  /** Lines nearer to one another. */
+  readonly close?: true;
 }
 
 const CLOSENESS: readonly Closeness[] = [
@@ -35,6 +37,7 @@ const CLOSENESS: readonly Closeness[] = [
   { rowMm: 4.5, gapMm: 0.4, sizeMm: BODY_MM },
   { rowMm: 4.5, gapMm: 0.4, sizeMm: SMALL_MM },
   { rowMm: 4.2, gapMm: 0.2, sizeMm: SMALL_MM, betweenMm: 2 },
+  { rowMm: 4.2, gapMm: 0.2, sizeMm: SMALL_MM, betweenMm: 2, close: true },
 ];
 
 /** The most leading steps that `holds` lets pass; 0 when not one. */
@@ -77,36 +80,53 @@ function tapTables(record: CoilRecord, widthMm: number, heightMm: number, measur
   return [part(0, most), ...more];
 }
 
+/** The blocks of page 1 that hang on how near lines are, and the drawing at each of its sizes. */
+function settled(record: CoilRecord, { widthMm }: Room, measure: Measure) {
+  const column = (widthMm - COLUMN_GAP) / 2;
+  const drawn: Block[] = [];
+  return {
+    measure,
+    strip: wind.facts(record, widthMm, measure),
+    method: wind.tapMethod(record, column, measure),
+    brief: wind.tapBriefly(record, column, measure),
+    angles: present(wind.tapAngles(record, column, measure)),
+    wide: wind.cautions(record, widthMm, 2, measure),
+    narrow: wind.cautions(record, column, 1, measure),
+    drawingOf: (size: number) => {
+      drawn[size] ??= wind.coilDrawing(record, column, DRAWING_MM[size]!, measure);
+      return drawn[size];
+    },
+  };
+}
+type Settled = ReturnType<typeof settled>;
+
 /** Page 1: of the arrangements that hold everything the first, set as widely as it allows; else the steps run on. */
 export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, part: 'all' | 'winding' = 'all'): Body[] {
   const column = (room.widthMm - COLUMN_GAP) / 2;
-  const strip = wind.facts(record, room.widthMm, measure);
-  const freeWith = (betweenMm: number) => room.heightMm + GAP - strip.heightMm - 2 * betweenMm;
-  const free = freeWith(GAP);
-  const method = wind.tapMethod(record, column, measure);
-  const brief = wind.tapBriefly(record, column, measure);
-  const angles = present(wind.tapAngles(record, column, measure));
-  const wide = wind.cautions(record, room.widthMm, 2, measure);
-  const narrow = wind.cautions(record, column, 1, measure);
-  const items = wind.stepItems(record, column, measure, BODY_MM, part);
-  const page = ({ left, right, foot }: Arrangement, betweenMm = GAP): Body => ({
+  const page = ({ left, right, foot }: Arrangement, strip: Block, betweenMm = GAP): Body => ({
     part: TITLE.wind,
     blocks: [strip, beside([{ ...stack(left, betweenMm), widthMm: column }, stack(right, betweenMm)], COLUMN_GAP)],
     ...(foot ? { foot } : {}),
     gapMm: betweenMm,
   });
-  // Most sheets take the first size: the others are drawn only when asked for.
-  const drawn: Block[] = [];
-  const drawingOf = (size: number) => {
-    drawn[size] ??= wind.coilDrawing(record, column, DRAWING_MM[size]!, measure);
-    return drawn[size];
-  };
-  for (const { rowMm, gapMm, sizeMm, betweenMm = GAP } of CLOSENESS) {
-    const items = wind.stepItems(record, column, measure, sizeMm, part);
-    const taps = wind.tapTable(record, column, rowMm, measure, 0, undefined, sizeMm);
-    const steps = stepsBlock(items, STEPS.heading, 1, gapMm, measure);
+  // Most sheets take the first setting: the others are set only when asked for.
+  const loose = settled(record, room, measure);
+  let close: Settled | null = null;
+  for (const { rowMm, gapMm, sizeMm, betweenMm = GAP, close: isClose } of CLOSENESS) {
+    if (isClose) close ??= settled(record, room, closer(measure));
+    const set = close ?? loose;
+    const { strip, method, brief, angles, wide, narrow } = set;
+    const free = room.heightMm + GAP - strip.heightMm - 2 * betweenMm;
+    const stepsOf = (of: wind.StepPart, words: string) => {
+      const items = wind.stepItems(record, column, set.measure, sizeMm, of);
+      return items.length === 0 ? null : stepsBlock(items, words, 1, gapMm, set.measure);
+    };
+    const steps = stepsOf(part, STEPS.heading)!;
+    const during = stepsOf('during', STEPS.heading)!;
+    const after = part === 'all' ? present(stepsOf('after', STEPS.after)) : [];
+    const taps = wind.tapTable(record, column, rowMm, set.measure, 0, undefined, sizeMm);
     for (const size of DRAWING_MM.keys()) {
-      const drawing = drawingOf(size);
+      const drawing = set.drawingOf(size);
       const whole: Arrangement[] = [
         { left: [drawing, method, ...angles], right: [taps, steps], foot: wide },
         { left: [drawing, method], right: [taps, ...angles, steps], foot: wide },
@@ -122,16 +142,20 @@ export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, par
               { left: [drawing, brief], right: [taps, steps], foot: wide },
               { left: [drawing, steps], right: [taps, brief], foot: wide },
               { left: [drawing, taps], right: [steps, brief], foot: wide },
+              ...(after.length > 0 ? [{ left: [drawing, during], right: [taps, brief, ...after], foot: wide }] : []),
               { left: [drawing, taps], right: [steps, brief, narrow] },
               { left: [drawing, brief, narrow], right: [taps, steps] },
             ]
           : []),
       ];
-      const found = whole.find((each) => fits(each, freeWith(betweenMm), betweenMm));
-      if (found) return [page(found, betweenMm)];
+      const found = whole.find((each) => fits(each, free, betweenMm));
+      if (found) return [page(found, strip, betweenMm)];
     }
   }
 
+  const { strip, method, angles, wide, narrow, drawingOf } = loose;
+  const free = room.heightMm - strip.heightMm - GAP;
+  const items = wind.stepItems(record, column, measure, BODY_MM, part);
   // Not all of it fits: the steps run on over the next pages, and what is left finds its place there too.
   const [taps, ...moreTaps] = tapTables(record, column, free, measure);
   const some: ((drawing: Block) => Arrangement)[] = [
@@ -153,7 +177,7 @@ export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, par
   const count = most >= 4 ? most : 0;
   const placed = new Set([...first.left, ...first.right, first.foot, ...(first.left.includes(narrow) ? [wide] : [])]);
   const bodies: Body[] = [
-    page(count > 0 ? under(items.slice(0, count)) : first),
+    page(count > 0 ? under(items.slice(0, count)) : first, strip),
     ...pairs(moreTaps).map((pair) => ({ part: TITLE.more, blocks: [beside(pair, COLUMN_GAP)] })),
     ...moreSteps(items.slice(count), count === 0, room.heightMm, measure),
   ];

@@ -7,7 +7,7 @@ import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { moved, SMALL_MM } from '../drawing/shapes.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { type Block, beside, stack } from './block.ts';
+import { type Block, beside, closer, stack } from './block.ts';
 import * as check from './check-blocks.ts';
 import * as advice from './check-blocks-advice.ts';
 import { twoCapacitors } from './check-blocks-line.ts';
@@ -22,7 +22,6 @@ import {
   fits,
   GAP,
   height,
-  pairs,
   type Room,
   stepsBlock,
 } from './winding-sheet-body.ts';
@@ -33,8 +32,8 @@ function stepsBlockOver(items: readonly Block[], measure: Measure): Block {
   return stepsBlock(items, STEPS.after, 2, 0.4, measure);
 }
 
-/** How the page to check by is set, the widest first: a row to write in, the graph, and the space between blocks. */
-const CHECK_SIZES: readonly { rowMm: number; graphMm: number; gapMm?: number }[] = [
+/** How the page to check by is set, the widest first: a row to write in, the graph, the space between blocks and between lines. */
+const CHECK_SIZES: readonly { rowMm: number; graphMm: number; gapMm?: number; close?: true }[] = [
   { rowMm: 6.6, graphMm: 58 },
   { rowMm: 6.6, graphMm: 48 },
   { rowMm: 6, graphMm: 42 },
@@ -43,11 +42,17 @@ const CHECK_SIZES: readonly { rowMm: number; graphMm: number; gapMm?: number }[]
   { rowMm: 4.9, graphMm: 30 },
   { rowMm: 4.8, graphMm: 25 },
   { rowMm: 4.8, graphMm: 21 },
+  { rowMm: 4.5, graphMm: 30, gapMm: 2.5 },
   { rowMm: 4.5, graphMm: 21, gapMm: 2.5 },
+  { rowMm: 4.2, graphMm: 36, gapMm: 2 },
+  { rowMm: 4.2, graphMm: 28, gapMm: 2 },
   { rowMm: 4.2, graphMm: 20, gapMm: 2 },
+  { rowMm: 4.2, graphMm: 36, gapMm: 2, close: true },
+  { rowMm: 4.2, graphMm: 28, gapMm: 2, close: true },
+  { rowMm: 4.2, graphMm: 20, gapMm: 2, close: true },
 ];
-/** Share of the width that the left column takes. */
-const CHECK_SHARE = 0.48;
+/** Share of the width that the left column takes, the first that does. */
+const CHECK_SHARES = [0.48, 0.44];
 
 /** Taps whose advice goes into their rows, where one unit of length leaves the room. */
 const ADVISED_FROM = 9;
@@ -69,40 +74,47 @@ function checkPageWith(
   advised: boolean,
   first: readonly Block[],
 ): Body | null {
-  const settings = check.settings(record, room.widthMm, 4.9, measure);
-  const sign = check.signature(room.widthMm, measure);
-  const left = (room.widthMm - COLUMN_GAP) * CHECK_SHARE;
-  const right = room.widthMm - COLUMN_GAP - left;
-  const doing = advice.corrections(record, right, measure);
-  const sections = advised ? [] : advice.sections(record, right, measure);
-  const sizes = check.formerSizes(record, left, measure);
-  for (const { rowMm, graphMm, gapMm = GAP } of CHECK_SIZES) {
-    const wide = [...first, ...check.tapChecks(record, room.widthMm, rowMm, measure, advised), ...settings];
+  for (const { rowMm, graphMm, gapMm = GAP, close } of CHECK_SIZES) {
+    const set = close ? closer(measure) : measure;
+    const sign = check.signature(room.widthMm, set);
+    const wide = [
+      ...first,
+      ...check.tapChecks(record, room.widthMm, rowMm, set, advised),
+      ...check.settings(record, room.widthMm, 4.9, set),
+    ];
     const free = room.heightMm + GAP - height(wide, gapMm) - sign.heightMm - 3 * gapMm;
     if (free < 0) continue;
-    const before = check.checks(record, left, rowMm, measure);
-    const line = twoCapacitors(record, left, graphMm, measure);
-    const tries: Arrangement[] = [
-      { left: [before, ...line, sizes], right: [doing, ...sections] },
-      { left: [...line, sizes], right: [check.checks(record, right, rowMm, measure), doing, ...sections] },
-      { left: [before, ...line], right: [doing, ...sections] },
-      { left: line, right: [check.checks(record, right, rowMm, measure), doing, ...sections] },
-    ];
-    const found = tries.find((each) => fits(each, free, gapMm));
-    if (!found) continue;
-    const columns = beside([{ ...stack(found.left, gapMm), widthMm: left }, stack(found.right, gapMm)], COLUMN_GAP);
-    return { part: TITLE.check, blocks: [...wide, columns], foot: sign, gapMm };
+    for (const share of CHECK_SHARES) {
+      const left = (room.widthMm - COLUMN_GAP) * share;
+      const right = room.widthMm - COLUMN_GAP - left;
+      const doing = advice.corrections(record, right, set, Math.min(4.6, rowMm));
+      const sections = advised ? [] : advice.sections(record, right, set, Math.min(4.6, rowMm));
+      const sizes = check.formerSizes(record, left, set);
+      const before = check.checks(record, left, rowMm, set);
+      const beforeRight = check.checks(record, right, rowMm, set);
+      const line = twoCapacitors(record, left, graphMm, set);
+      const tries: Arrangement[] = [
+        { left: [before, ...line, sizes], right: [doing, ...sections] },
+        { left: [...line, sizes], right: [beforeRight, doing, ...sections] },
+        { left: [before, ...line], right: [doing, ...sections] },
+        { left: line, right: [beforeRight, doing, ...sections] },
+      ];
+      const found = tries.find((each) => fits(each, free, gapMm));
+      if (!found) continue;
+      const columns = beside([{ ...stack(found.left, gapMm), widthMm: left }, stack(found.right, gapMm)], COLUMN_GAP);
+      return { part: TITLE.check, blocks: [...wide, columns], foot: sign, gapMm };
+    }
   }
   return null;
 }
 
 /** Blocks over as many pages as they need. */
-function flow(blocks: readonly Block[], first: string, more: string, heightMm: number): Body[] {
+function flow(blocks: readonly Block[], heightMm: number, gapMm: number): Body[] {
   const bodies: Body[] = [];
   let here: Block[] = [];
-  const close = () => bodies.push({ part: bodies.length === 0 ? first : more, blocks: here });
+  const close = () => bodies.push({ part: bodies.length === 0 ? TITLE.check : TITLE.checkMore, blocks: here, gapMm });
   for (const block of blocks) {
-    if (here.length > 0 && height([...here, block]) > heightMm) {
+    if (here.length > 0 && height([...here, block], gapMm) > heightMm + GAP - gapMm) {
       close();
       here = [];
     }
@@ -112,25 +124,37 @@ function flow(blocks: readonly Block[], first: string, more: string, heightMm: n
   return bodies;
 }
 
-/** Page 2; with more taps than it holds, as many pages as they need: the taps first, then what to do about them. */
-function toCheckBy(record: CoilRecord, room: Room, measure: Measure): Body[] {
-  const page = checkPage(record, room, measure);
+/**
+ * Page 2, `first` above all; with more taps than it holds, as many pages as they need: the taps first, then what to do about them,
+ * set as widely as goes without one page more.
+ */
+function toCheckBy(record: CoilRecord, room: Room, measure: Measure, first: readonly Block[] = []): Body[] {
+  const page = checkPage(record, room, measure, first);
   if (page !== null) return [page];
   const half = (room.widthMm - COLUMN_GAP) / 2;
-  const { rowMm, graphMm } = CHECK_SIZES[2]!;
-  const blocks = [
-    ...check.tapChecks(record, room.widthMm, CHECK_SIZES[3]!.rowMm, measure),
-    ...check.settings(record, room.widthMm, 5.2, measure),
-    ...pairs([
-      stack([check.checks(record, half, rowMm, measure), check.formerSizes(record, half, measure)], GAP),
-      stack(twoCapacitors(record, half, graphMm, measure), GAP),
-    ]).map((pair) => beside(pair, COLUMN_GAP)),
-    advice.corrections(record, room.widthMm, measure),
-    ...advice.sections(record, room.widthMm, measure),
-    check.signature(room.widthMm, measure),
-  ];
-  return flow(blocks, TITLE.check, TITLE.checkMore, room.heightMm);
+  const flowed = CHECK_SIZES.slice(2).map(({ rowMm, graphMm, gapMm = GAP, close }) => {
+    const set = close ? closer(measure) : measure;
+    const pair = [
+      stack([check.checks(record, half, rowMm, set), check.formerSizes(record, half, set)], gapMm),
+      stack(twoCapacitors(record, half, graphMm, set), gapMm),
+    ];
+    const blocks = [
+      ...first,
+      ...check.tapChecks(record, room.widthMm, Math.min(rowMm, 5.4), set),
+      ...check.settings(record, room.widthMm, 5.2, set),
+      beside(pair, COLUMN_GAP),
+      advice.corrections(record, room.widthMm, set),
+      ...advice.sections(record, room.widthMm, set),
+      check.signature(room.widthMm, set),
+    ];
+    return flow(blocks, room.heightMm, gapMm);
+  });
+  return fewest(flowed);
 }
+
+/** The list with the fewest entries, the first of its like. */
+const fewest = (lists: readonly Body[][]): Body[] =>
+  lists.reduce((best, each) => (each.length < best.length ? each : best));
 
 /**
  * All pages. What is done when the coil is wound moves to the page to check by where that saves a page: it is read then, and
@@ -138,16 +162,14 @@ function toCheckBy(record: CoilRecord, room: Room, measure: Measure): Body[] {
  */
 function bodiesOf(record: CoilRecord, room: Room, measure: Measure): Body[] {
   const first = toWindFrom(record, room, measure);
-  if (first.length > 1) {
-    const shorter = toWindFrom(record, room, measure, 'winding');
-    const column = (room.widthMm - COLUMN_GAP) / 2;
-    const items = wind.stepItems(record, column, measure, SMALL_MM, 'after');
-    if (shorter.length === 1 && items.length > 0) {
-      const page = checkPage(record, room, measure, [stepsBlockOver(items, measure)]);
-      if (page !== null) return [...shorter, page];
-    }
-  }
-  return [...first, ...toCheckBy(record, room, measure)];
+  if (first.length === 1) return [...first, ...toCheckBy(record, room, measure)];
+  const shorter = toWindFrom(record, room, measure, 'winding');
+  const items = wind.stepItems(record, (room.widthMm - COLUMN_GAP) / 2, measure, SMALL_MM, 'after');
+  const after = items.length > 0 ? [stepsBlockOver(items, measure)] : [];
+  return fewest([
+    [...shorter, ...toCheckBy(record, room, measure, after)],
+    [...first, ...toCheckBy(record, room, measure)],
+  ]);
 }
 
 /** The pages as drawings. */

@@ -58,6 +58,7 @@ export const DRAWING = {
   },
   datumIs: (words: string) => `Datum: ${words}.`,
   above: 'Seen from above',
+  aboveBrief: 'Seen from above: angles from S, counterclockwise.',
   aboveWords: 'Angles from the start hole S, counterclockwise; F is the finish.',
 } as const;
 

@@ -1,10 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { recordOf } from '../../src/plan.ts';
 import type { CoilRecord } from '../../src/record/schema.ts';
 import { Paper } from '../../src/sheets/page.ts';
 import { layOutWindingSheet, sheetFrame } from '../../src/sheets/winding-sheet.ts';
-import { jobOf, TUBE } from '../helpers/jobs.ts';
 import { evenTurns, fullRecord, layoutBoxes, layoutFaults } from '../helpers/layout.ts';
 import { sampleRecord } from '../helpers/sample.ts';
 
@@ -131,33 +129,6 @@ describe('winding sheet, laid out', () => {
       }
     console.log(`winding sheet, ${units}: ${sheets} sheets of two pages`);
     expect(sheets).toBe(10);
-  });
-
-  test('two pages for fifteen taps in staggered holes along a spaced winding on a tube of card', () => {
-    const record = recordOf(
-      jobOf({
-        ...TUBE,
-        want: { inductance: '14 uH to 205 uH', taps: 15 },
-        former: { ...TUBE.former, material: 'card' },
-        wire: ['26 AWG double cotton'],
-      }),
-      '1.2.3',
-    );
-    const pages = layOutWindingSheet(record, measure);
-    expect(layoutFaults(pages, sheetFrame, measure)).toEqual([]);
-    expect(pages.length).toBe(2);
-    // Every step, the last ones on the page to check by.
-    const words = pages
-      .map((page) =>
-        layoutBoxes([page], measure)
-          .map(({ text }) => text)
-          .join(' '),
-      )
-      .join(' ');
-    const said = record.steps.filter(({ kind }) => kind !== 'tap');
-    for (const { text } of said) expect(words).toContain(text);
-    expect(said.length).toBeGreaterThan(10);
-    expect(said.some(({ text }) => text.includes('shellac'))).toBe(true);
   });
 
   test('text set over text is noticed', () => {
