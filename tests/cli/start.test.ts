@@ -1,8 +1,10 @@
 import { mkdirSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
+import { readLotFile } from '../../src/job/lot-file.ts';
 import { readJob } from '../../src/job/read.ts';
 import { STARTERS } from '../../templates/jobs/starters.ts';
+import { LOTS } from '../../templates/lots/lots.ts';
 import { command, testTerminal } from './terminal.ts';
 
 describe('start', () => {
@@ -38,6 +40,45 @@ describe('start', () => {
     expect([exit, out]).toEqual([0, 'job.schema.json written; name it in a job: $schema: ./job.schema.json\n']);
     const shipped = readFileSync(new URL('../../templates/schemas/job.schema.json', import.meta.url), 'utf8');
     expect(readFileSync(join(folder, 'job.schema.json'), 'utf8')).toBe(shipped);
+  });
+
+  it('writes a lot with the jobs that it names, and keeps those that are there', async () => {
+    const terminal = testTerminal();
+    writeFileSync(join(terminal.folder, 'forty-coil-lot.yaml'), 'mine');
+    const { exit, out, err, folder } = await command(['start', 'saltmarsh-lot'], terminal);
+    expect([exit, err]).toEqual([0, '']);
+    expect(out).toBe(`saltmarsh-lot.yaml written; edit it, then: coilwright lot saltmarsh-lot.yaml
+low-bench-receiver.yaml written, which it names
+cracked-form-replacement.yaml written, which it names
+forty-coil-lot.yaml was there already and is kept; it names that
+`);
+    expect(readFileSync(join(folder, 'forty-coil-lot.yaml'), 'utf8')).toBe('mine');
+    const text = readFileSync(join(folder, 'saltmarsh-lot.yaml'), 'utf8');
+    expect(readdirSync(folder).sort()).toEqual(
+      [...new Set(readLotFile(text, 'x').entries.map(({ path }) => path)), 'saltmarsh-lot.yaml'].sort(),
+    );
+    const again = await command(['start', 'saltmarsh-lot'], testTerminal());
+    const there = testTerminal();
+    mkdirSync(join(there.folder, 'shop'));
+    await command(['start', 'saltmarsh-lot', '--out', 'shop/mine.yaml'], there);
+    expect(readdirSync(join(there.folder, 'shop')).length).toBe(readdirSync(again.folder).length);
+    expect((await command(['start', 'saltmarsh-lot', '--out', '-'])).out).toBe(text);
+  });
+
+  it('writes no job when the lot is there already', async () => {
+    const terminal = testTerminal();
+    writeFileSync(join(terminal.folder, 'saltmarsh-lot.yaml'), 'mine');
+    expect(await command(['start', 'saltmarsh-lot'], terminal)).toMatchObject({ exit: 5, out: '' });
+    expect(readdirSync(terminal.folder)).toEqual(['saltmarsh-lot.yaml']);
+  });
+
+  it('writes the schema of a lot, and lists the lots', async () => {
+    const shipped = readFileSync(new URL('../../templates/schemas/lot.schema.json', import.meta.url), 'utf8');
+    const { exit, out } = await command(['start', 'saltmarsh-lot', '--schema', '--out', '-']);
+    expect([exit, out]).toEqual([0, shipped]);
+    const list = (await command(['start', '--list'])).out;
+    for (const { name, use } of LOTS) expect(list).toMatch(new RegExp(`^${name} +${use}$`, 'm'));
+    expect(Math.max(...list.split('\n').map(({ length }) => length))).toBeLessThan(100);
   });
 
   it('never overwrites', async () => {

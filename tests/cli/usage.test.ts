@@ -112,7 +112,8 @@ coilwright: not a command
     `coilwright: not a command
   got       the starter "low-bench-reciever"
   expected  one of: low-bench-receiver, cracked-form-replacement,
-            forty-coil-lot, found-coil, found-sections, broken-form
+            forty-coil-lot, found-coil, found-sections, broken-form,
+            saltmarsh-lot
   to do     did you mean low-bench-receiver?
 `,
   ],

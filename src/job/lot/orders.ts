@@ -73,6 +73,7 @@ export function readOrders(text: string, file: string): readonly Ordered[] {
 /** Which cell of a row is which column. */
 function columnsOf({ line, cells }: CsvRow, file: string): ReadonlyMap<Column, number> {
   const at = new Map<Column, number>();
+  const meantBy = new Set<string | null>();
   const faults: FaultParts[] = [];
   const expected = `the columns ${NEEDED.join(', ')}, and where wanted ${COLUMNS.slice(NEEDED.length).join(', ')}`;
   const fault = (code: string, key: string | undefined, got: string, todo: string) =>
@@ -85,6 +86,7 @@ function columnsOf({ line, cells }: CsvRow, file: string): ReadonlyMap<Column, n
     else if (column !== undefined) at.set(column, index);
     else if (key !== '') {
       const meant = MEANT[key] ?? nearest(key, COLUMNS);
+      meantBy.add(meant);
       fault(
         'unknown-key',
         key.slice(0, 80),
@@ -93,7 +95,8 @@ function columnsOf({ line, cells }: CsvRow, file: string): ReadonlyMap<Column, n
       );
     }
   });
-  const missing = NEEDED.filter((column) => !at.has(column));
+  // One that was called otherwise has been told of.
+  const missing = NEEDED.filter((column) => !at.has(column) && !meantBy.has(column));
   if (missing.length > 0)
     fault(
       'missing-key',

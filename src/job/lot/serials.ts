@@ -24,7 +24,7 @@ function unfit(text: string): { readonly got: string; readonly todo: string } | 
     return { got: `the serial ${shown(text)}`, todo: 'write it without blanks and other signs' };
   if (!Number.isNaN(Number(text)))
     return {
-      got: `the serial ${shown(text)}, which a spreadsheet makes a number of`,
+      got: `the serial ${shown(text)}, which a spreadsheet takes for a number`,
       todo: `put letters in front, such as C-${text}`,
     };
   return null;
