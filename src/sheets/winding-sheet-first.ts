@@ -112,9 +112,9 @@ export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, par
   // Most sheets take the first setting: the others are set only when asked for.
   const loose = settled(record, room, measure);
   let close: Settled | null = null;
-  for (const { rowMm, gapMm, sizeMm, betweenMm = GAP, close: isClose } of CLOSENESS) {
+  const at = ({ rowMm, gapMm, sizeMm, betweenMm = GAP, close: isClose }: Closeness, sizes: Iterable<number>) => {
     if (isClose) close ??= settled(record, room, closer(measure));
-    const set = close ?? loose;
+    const set = isClose && close ? close : loose;
     const { strip, method, brief, angles, wide, narrow } = set;
     const free = room.heightMm + GAP - strip.heightMm - 2 * betweenMm;
     const stepsOf = (of: wind.StepPart, words: string) => {
@@ -125,7 +125,7 @@ export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, par
     const during = stepsOf('during', STEPS.heading)!;
     const after = part === 'all' ? present(stepsOf('after', STEPS.after)) : [];
     const taps = wind.tapTable(record, column, rowMm, set.measure, 0, undefined, sizeMm);
-    for (const size of DRAWING_MM.keys()) {
+    for (const size of sizes) {
       const drawing = set.drawingOf(size);
       const whole: Arrangement[] = [
         { left: [drawing, method, ...angles], right: [taps, steps], foot: wide },
@@ -149,9 +149,16 @@ export function toWindFrom(record: CoilRecord, room: Room, measure: Measure, par
           : []),
       ];
       const found = whole.find((each) => fits(each, free, betweenMm));
-      if (found) return [page(found, strip, betweenMm)];
+      if (found) return page(found, strip, betweenMm);
     }
-  }
+    return null;
+  };
+  // What does not go in at its closest, beside the least drawing, is not tried at every size before.
+  if (at(CLOSENESS.at(-1)!, [DRAWING_MM.length - 1]) !== null)
+    for (const closeness of CLOSENESS) {
+      const found = at(closeness, DRAWING_MM.keys());
+      if (found !== null) return [found];
+    }
 
   const { strip, method, angles, wide, narrow, drawingOf } = loose;
   const free = room.heightMm - strip.heightMm - GAP;

@@ -33,7 +33,13 @@ function stepsBlockOver(items: readonly Block[], measure: Measure): Block {
 }
 
 /** How the page to check by is set, the widest first: a row to write in, the graph, the space between blocks and between lines. */
-const CHECK_SIZES: readonly { rowMm: number; graphMm: number; gapMm?: number; close?: true }[] = [
+interface CheckSize {
+  readonly rowMm: number;
+  readonly graphMm: number;
+  readonly gapMm?: number;
+  readonly close?: true;
+}
+const CHECK_SIZES: readonly CheckSize[] = [
   { rowMm: 6.6, graphMm: 58 },
   { rowMm: 6.6, graphMm: 48 },
   { rowMm: 6, graphMm: 42 },
@@ -74,7 +80,7 @@ function checkPageWith(
   advised: boolean,
   first: readonly Block[],
 ): Body | null {
-  for (const { rowMm, graphMm, gapMm = GAP, close } of CHECK_SIZES) {
+  const at = ({ rowMm, graphMm, gapMm = GAP, close }: CheckSize): Body | null => {
     const set = close ? closer(measure) : measure;
     const sign = check.signature(room.widthMm, set);
     const wide = [
@@ -83,7 +89,7 @@ function checkPageWith(
       ...check.settings(record, room.widthMm, 4.9, set),
     ];
     const free = room.heightMm + GAP - height(wide, gapMm) - sign.heightMm - 3 * gapMm;
-    if (free < 0) continue;
+    if (free < 0) return null;
     for (const share of CHECK_SHARES) {
       const left = (room.widthMm - COLUMN_GAP) * share;
       const right = room.widthMm - COLUMN_GAP - left;
@@ -104,8 +110,16 @@ function checkPageWith(
       const columns = beside([{ ...stack(found.left, gapMm), widthMm: left }, stack(found.right, gapMm)], COLUMN_GAP);
       return { part: TITLE.check, blocks: [...wide, columns], foot: sign, gapMm };
     }
+    return null;
+  };
+  // What does not go in at its closest is not tried at every size before.
+  const closest = at(CHECK_SIZES.at(-1)!);
+  if (closest === null) return null;
+  for (const size of CHECK_SIZES) {
+    const found = at(size);
+    if (found !== null) return found;
   }
-  return null;
+  return closest;
 }
 
 /** Blocks over as many pages as they need. */
@@ -132,7 +146,8 @@ function toCheckBy(record: CoilRecord, room: Room, measure: Measure, first: read
   const page = checkPage(record, room, measure, first);
   if (page !== null) return [page];
   const half = (room.widthMm - COLUMN_GAP) / 2;
-  const flowed = CHECK_SIZES.slice(2).map(({ rowMm, graphMm, gapMm = GAP, close }) => {
+  const sizes = CHECK_SIZES.slice(2);
+  const flowed = ({ rowMm, graphMm, gapMm = GAP, close }: CheckSize): Body[] => {
     const set = close ? closer(measure) : measure;
     const pair = [
       stack([check.checks(record, half, rowMm, set), check.formerSizes(record, half, set)], gapMm),
@@ -148,8 +163,11 @@ function toCheckBy(record: CoilRecord, room: Room, measure: Measure, first: read
       check.signature(room.widthMm, set),
     ];
     return flow(blocks, room.heightMm, gapMm);
-  });
-  return fewest(flowed);
+  };
+  const widest = flowed(sizes[0]!);
+  const least = flowed(sizes.at(-1)!).length;
+  if (widest.length === least) return widest;
+  return flowed(sizes.find((size) => flowed(size).length === least)!);
 }
 
 /** The list with the fewest entries, the first of its like. */
