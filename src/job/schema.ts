@@ -123,7 +123,8 @@ const formerSchema = z
   })
   .describe('What the wire is wound on.');
 
-const readWire = (raw: unknown): Parsed<FoundWire> => {
+/** A wire of the stock by its size and covering in words. */
+export const readWire = (raw: unknown): Parsed<FoundWire> => {
   if (typeof raw !== 'string') {
     return {
       ok: false,

@@ -1,13 +1,12 @@
 /**
  * The lot file, defined once: keys, meaning, units. The JSON Schema that editors use and the reader are both made from it.
- * What depends on two keys at once is in `checks.ts` and `serials.ts`, the table of jobs in CSV in `orders.ts`.
+ * What depends on two keys at once is in `read.ts`, `entries.ts` and `serials.ts`, the table of jobs in CSV in `orders.ts`.
  */
 import * as z from 'zod';
 import { type Parsed, parseQuantity } from '../../quantity/parse.ts';
-import type { FoundWire } from '../../stock/find.ts';
-import { readWireText } from '../coil/schema.ts';
 import { choice, count, field, quantity, shown, size } from '../field.ts';
 import { readDate, readName } from '../name.ts';
+import { readWire } from '../schema.ts';
 import { readPath } from './path.ts';
 import { LARGEST_NUMBER, MOST_COILS, readNumbering, readPattern } from './serials.ts';
 
@@ -27,16 +26,6 @@ function readLeft(raw: unknown): Parsed<Left> {
   const refused = metres.got.includes('measures a weight') ? grams : metres;
   return { ...refused, expected };
 }
-
-const readWire = (raw: unknown): Parsed<FoundWire> =>
-  typeof raw === 'string'
-    ? readWireText(raw)
-    : {
-        ok: false,
-        got: shown(raw),
-        expected: 'a wire: a size and a covering, such as 24 AWG enamel',
-        todo: 'write AWG, SWG or mm behind the number, and the covering; "coilwright stock" lists them',
-      };
 
 const nameField = (doc: string) => field(readName, doc, { type: 'string', minLength: 1, maxLength: 80 });
 
