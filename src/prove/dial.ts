@@ -2,8 +2,8 @@
  * The dial of one coil in its set: from readings of angle and frequency, position by position, to the frequency at any angle between
  * them.
  *
- * In between runs a monotone cubic (monotone.ts) in 1/f², 1/f, log f or f against the angle, whichever foretells its own inner
- * readings best when each is left out: they are straight for capacitors whose plates are cut for even steps of capacitance,
+ * In between runs a monotone cubic (monotone.ts) in 1/f², 1/f, log f or f against the angle, whichever foretells the inner
+ * readings of all positions best when each is left out: they are straight for capacitors whose plates are cut for even steps of capacitance,
  * wavelength, ratio and frequency. Nothing is drawn beyond the first and last reading of a position.
  *
  * Accuracy against simulated capacitors of these four laws and one between them, with strays, 6 readings evenly over the span and
@@ -140,15 +140,26 @@ function sorted(
 }
 
 export interface DialSpan {
-  /** Degrees from stop to stop, up to 300. */
+  /** Degrees from stop to stop, {@link SPAN_DEG}. */
   readonly spanDeg: number;
 }
 
+/** Spans that a scale can be drawn for: numbers stand beside its arcs. */
+export const SPAN_DEG = { least: 60, most: 300 } as const;
+
 /**
  * The dial of a coil. @throws Fault 3 (`dial-not-drawn`) with the lines of readings that do not rise, lie outside the span or contradict
- * one another, and with every position of the record that has fewer than four
+ * one another, and with every position of the record that has fewer than four; Fault 4 (`dial-span`) for a span that no scale can be drawn for
  */
 export function dialOf(record: Pick<CoilRecord, 'windings'>, coil: CoilReadings, { spanDeg }: DialSpan): Dial {
+  const { least, most } = SPAN_DEG;
+  if (!(spanDeg >= least && spanDeg <= most))
+    throw new Fault(4, {
+      code: 'dial-span',
+      got: `a dial of ${spanDeg}°`,
+      expected: `${least} to ${most}° from stop to stop`,
+      todo: `state what the shaft turns through; ${spanDeg > most ? most : least}° is the nearest`,
+    });
   const taps = record.windings[0]!.taps.map(({ tap }) => tap);
   const foreign = coil.dial.filter(({ tap }) => !taps.includes(tap));
   const faults = foreign.map(({ tap, line }) =>
@@ -159,22 +170,28 @@ export function dialOf(record: Pick<CoilRecord, 'windings'>, coil: CoilReadings,
       'put the number of the switch position there',
     ),
   );
-  const positions = taps.map((tap): DialPosition | null => {
+  const read = taps.map((tap) => {
     const own = coil.dial.filter((reading) => reading.tap === tap);
     const { knots, faults: found } = sorted(tap, own, spanDeg);
     faults.push(...found);
-    if (found.length > 0) return null;
-    const ways = (Object.keys(POWERS) as SmoothIn[]).map((how) => ({ how, miss: missOf(knots, how) }));
-    const best = ways.reduce((a, b) => (b.miss < a.miss ? b : a));
-    return {
+    return { tap, knots };
+  });
+  if (faults.length > 0) throw new Fault(3, faults);
+  // One capacitor turns all positions: what is smooth for it is asked of all of them, or a lucky hit at one would decide there.
+  const ways = (Object.keys(POWERS) as SmoothIn[]).map((how) => {
+    const misses = read.map(({ knots }) => missOf(knots, how));
+    return { how, misses, worst: Math.max(...misses) };
+  });
+  const best = ways.reduce((a, b) => (b.worst < a.worst ? b : a));
+  const positions = read.map(
+    ({ tap, knots }, i): DialPosition => ({
       tap,
       readings: knots,
       smoothIn: best.how,
-      missPercent: significant(best.miss, 3),
+      missPercent: significant(best.misses[i]!, 3),
       lowKhz: knots[0]!.frequencyKhz,
       highKhz: knots.at(-1)!.frequencyKhz,
-    };
-  });
-  if (faults.length > 0) throw new Fault(3, faults);
-  return { serial: coil.serial, spanDeg, positions: positions.filter((one) => one !== null) };
+    }),
+  );
+  return { serial: coil.serial, spanDeg, positions };
 }
