@@ -6,7 +6,7 @@
 import { lstat, mkdir, readdir, readFile, rename, rm } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import { sync, writeSynced } from '../output/disk.ts';
-import { hashOf, sha256 } from '../record/hash.ts';
+import { canonicalText, sha256 } from '../record/hash.ts';
 import type { OutputFile } from '../record/listing.ts';
 
 export interface UnitFile {
@@ -27,7 +27,7 @@ export interface Unit {
 const MANIFEST = '.unit.json';
 
 /** The key of what comes of `what` alone: of data that can be written as JSON, and of the version of the program. */
-export const keyOf = (what: unknown, version: string): string => hashOf({ what, version }).slice(0, 40);
+export const keyOf = (what: unknown, version: string): string => sha256(canonicalText({ what, version })).slice(0, 40);
 
 /** Absolute path of a file of a unit. */
 export const unitPath = (work: string, key: string, path: string): string => join(work, key, path);
@@ -75,7 +75,7 @@ export async function writeUnit(work: string, key: string, files: readonly Outpu
   };
   await writeSynced(
     join(temporary, MANIFEST),
-    new TextEncoder().encode(JSON.stringify({ ...unit, hash: hashOf(unit) })),
+    new TextEncoder().encode(JSON.stringify({ unit, hash: sha256(canonicalText(unit)) })),
   );
   for (const folder of folders) await sync(folder);
   await rename(temporary, join(work, key));
@@ -84,8 +84,8 @@ export async function writeUnit(work: string, key: string, files: readonly Outpu
 }
 
 function readManifest(text: string): Unit | null {
-  const { hash, ...unit } = JSON.parse(text) as Unit & { readonly hash: string };
-  return hashOf(unit) === hash ? unit : null;
+  const { unit, hash } = JSON.parse(text) as { readonly unit: Unit; readonly hash: string };
+  return sha256(canonicalText(unit)) === hash ? unit : null;
 }
 
 /** All files of the manifest, and no others. */
