@@ -71,6 +71,12 @@ function parser(terminal: Terminal, version: string): Argv {
       async (found) => (await import('./lot.ts')).lot(found, terminal, version),
     )
     .command(
+      VERBS.prove.written,
+      VERBS.prove.does,
+      async (one) => (await import('./prove.ts')).describeProve(one),
+      async (found) => (await import('./prove.ts')).prove(found, terminal, version),
+    )
+    .command(
       VERBS.stock.written,
       VERBS.stock.does,
       async (one) => (await import('./stock.ts')).describeStock(one),

@@ -14,12 +14,17 @@ export async function readJobText(file: string, terminal: Terminal, kind: FileKi
   return decode(bytes, file, kind);
 }
 
-/** No more is read than says that the file is too large; a pipe or a device is read as a file is. */
-async function readBytes(path: string, file: string, kind: FileKind): Promise<Uint8Array> {
+/** No more is read than says that the file is too large; a pipe or a device is read as a file is. Throws a Fault with exit code 3. */
+export async function readBytes(
+  path: string,
+  file: string,
+  kind: FileKind,
+  largest = LARGEST_BYTES,
+): Promise<Uint8Array> {
   try {
     const handle = await open(path, 'r');
     try {
-      const buffer = Buffer.alloc(LARGEST_BYTES + 1);
+      const buffer = Buffer.alloc(largest + 1);
       let length = 0;
       for (;;) {
         const { bytesRead } = await handle.read(buffer, length, buffer.length - length, null);

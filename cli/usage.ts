@@ -1,6 +1,6 @@
 /** Wrong use of the command line: from what the parser says to a fault with exit code 2. */
 import { Fault, type FaultParts } from '../src/fault.ts';
-import { COIL_FILE, type FileKind, JOB_FILE, LOT_FILE, OLD_COIL_FILE } from '../src/job/file-kind.ts';
+import { COIL_FILE, type FileKind, JOB_FILE, LOT_FILE, OLD_COIL_FILE, READINGS_FILE } from '../src/job/file-kind.ts';
 import { nearest } from '../src/job/nearest.ts';
 import { WrongUse } from './command-line.ts';
 import { COMMON_OPTIONS, isVerb, VERB_NAMES, VERBS, type Verb } from './verbs.ts';
@@ -33,6 +33,7 @@ const TAKEN: Partial<Record<Verb, readonly [kind: FileKind, word: string]>> = {
   survey: [COIL_FILE, 'coil'],
   match: [OLD_COIL_FILE, 'coil'],
   lot: [LOT_FILE, 'lot'],
+  prove: [READINGS_FILE, 'readings'],
 };
 
 function noFile(verb: Verb): FaultParts {

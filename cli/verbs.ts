@@ -26,6 +26,11 @@ export const VERBS = {
     does: 'make a lot: every kind of coil planned once, travellers, wire from reels, print beds, lists',
     options: ['out', 'json'],
   },
+  prove: {
+    written: 'prove <readings>',
+    does: 'judge finished coils by what was measured: pass, fail, what saves them, what they have in common, charts, dial',
+    options: ['from', 'out', 'dial', 'json'],
+  },
   stock: {
     written: 'stock [what] [words..]',
     does: 'list the wires, tubes, materials and spacers that are known',

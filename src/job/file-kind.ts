@@ -68,6 +68,16 @@ export const ORDERS_FILE: FileKind = {
   mark: null,
   verb: 'lot',
 };
+/** Readings of finished coils. */
+export const READINGS_FILE: FileKind = {
+  noun: 'readings',
+  file: 'a file of readings',
+  form: 'CSV',
+  least: 'titles over the columns, and a reading',
+  begin: 'coilwright lot',
+  mark: null,
+  verb: 'prove',
+};
 
 const KINDS = [OLD_COIL_FILE, COIL_FILE, LOT_FILE, JOB_FILE] as const;
 

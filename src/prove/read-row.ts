@@ -88,7 +88,7 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
       : place;
   }
   const figure = figureOf(cell, what, unit);
-  if (!figure.ok) return figure;
+  if (!figure.ok) return told(figure.code, figure.got, figure.expected, figure.todo);
   const conditions = joined(column.conditions, joined(row.words.conditions, row.conditions.conditions));
   const left =
     row.conditions.rest === ''

@@ -105,5 +105,8 @@ export function causesOf(
   );
   const contrary = apart.map((index) => RESCUE.cause.apart(RESCUE.where(index + 1, last)));
   const causes = [...counted.slice(0, 1), ...contrary, ...loose, ...turns, ...same, ...joints.slice(0, 1)];
-  return causes.length > 0 || !out ? causes : [RESCUE.cause.unknown];
+  if (causes.length > 0 || !out) return causes;
+  const outside = seen.filter((one) => one.out);
+  if (outside.some(({ offTurns }) => Math.abs(offTurns) >= 0.5)) return [RESCUE.cause.unknown];
+  return [RESCUE.cause.small(outside.map(({ index }) => RESCUE.where(index + 1, last)).join(', '))];
 }

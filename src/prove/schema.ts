@@ -107,7 +107,7 @@ const kindSchema = z.strictObject({
   coils: z.array(coilSchema).describe('in the order of the file'),
   systematic: systematicSchema.nullable().describe('null: too little was read'),
   charts: z.array(chartSchema),
-  firstOff: text.nullable().describe('path of the job for the next lot; null: nothing to put right'),
+  firstOff: text.nullable().describe('path of the job for the next lot; null: nothing is put right'),
 });
 
 export const proofSchema = z.strictObject({
@@ -131,7 +131,7 @@ export const proofSchema = z.strictObject({
     .describe('cells for readings of the file: each is a reading, of a dial, blank, or left out by a note'),
   tally: tallySchema,
   kinds: z.array(kindSchema).min(1),
-  dial: dialSchema.nullable(),
+  dials: z.array(dialSchema).describe('of the coils whose dial was read'),
   notes: z.array(noteSchema),
   files: z.array(z.strictObject({ path: text, kind: text, sha256: text })),
 });

@@ -30,6 +30,8 @@ export const RESCUE = {
       high
         ? `The resistance of ${tap} is high: a joint, a clip, or thinner wire.`
         : `The resistance of ${tap} is low: turns that touch bare, or thicker wire.`,
+    small: (taps: string) =>
+      `Off by less than half a turn at ${taps}: the place of the tap, the wire about it, or the reading itself.`,
     unknown: 'No one fault explains these readings.',
   },
   doing: {
@@ -61,7 +63,11 @@ export const MARK = { pass: 'P', fail: 'F', missing: '–', again: 'R' } as cons
 
 export const PROOF = {
   document: 'Proof sheet',
-  summary: 'what passed and what did not',
+  parts: {
+    summary: 'what passed, what did not',
+    marks: 'coil by coil',
+    file: 'the file of readings',
+  },
   record: (hash: string) => `proof ${hash}`,
   sheet: (n: number, of: number) => `sheet ${n} of ${of}`,
   tally: {
@@ -83,6 +89,7 @@ export const PROOF = {
   table: {
     heading: (job: string) => `Coil by coil: ${job}`,
     more: (job: string) => `Coil by coil: ${job}, continued`,
+    part: (job: string, from: number, to: number) => `${job}, taps ${from} to ${to}`,
     serial: 'serial',
     state: 'coil',
     other: 'other',
@@ -90,7 +97,6 @@ export const PROOF = {
     off: 'farthest off %',
     at: (percent: string, tap: number) => `${percent} at ${tap}`,
     none: 'no serial',
-    lacks: 'to be read',
   },
   failing: {
     heading: 'Coils that fail, and what to do',
@@ -99,7 +105,9 @@ export const PROOF = {
     coil: (serial: string, can: string) => `${serial}: ${can}.`,
     out: (taps: string) => `Outside stay: ${taps}.`,
     expected: (figures: string) => `Then expected: ${figures}.`,
-    tap: (tap: number, before: string, after: string) => `tap ${tap} ${before} to ${after} %`,
+    do: (actions: string) => `To do: ${actions}.`,
+    more: (count: number) => `and ${count} more`,
+    tap: (tap: string, before: string, after: string) => `${tap} ${before} to ${after} %`,
     readings: (list: string) => `Outside: ${list}.`,
     reading: (what: string, value: string, low: string, high: string, line: number) =>
       `${what} ${value} (limits ${low} to ${high}, line ${line})`,
@@ -127,12 +135,20 @@ export const PROOF = {
   },
   systematic: {
     heading: (job: string) => `What the coils have in common: ${job}`,
+    left: (serial: string, text: string) => `${serial} left out: ${text}`,
     few: 'Too little was read to tell what the coils have in common.',
     next: (path: string) => `The job for the next lot, centred by this: ${path}.`,
-    apart: (text: string, measure: string) => `${text} ${measure}`,
   },
   remarks: {
     heading: 'Remarks',
     item: (serial: string, where: string, remark: string) => `${serial}${where}: ${remark}`,
+  },
+} as const;
+
+export const DIAL_NOTE = {
+  none: {
+    got: 'no reading of a dial in the file',
+    expected: 'rows of quantity dial: a frequency, and how far the dial was turned as condition, such as 30 deg',
+    todo: 'read the dial at four angles or more of every position, or leave --dial out',
   },
 } as const;
