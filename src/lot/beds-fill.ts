@@ -19,18 +19,23 @@ export interface Stack {
   readonly left: number;
 }
 
+/** With as many equal boxes on a bed, rows are not bettered by more than a few. */
+const MANY = 50;
+
 /**
  * Most area covered, then closest together, of several orders and rules; of a single part also in rows of both ways to lie.
  * All pieces fit the sheet. Empty only when nothing is left.
  */
 export function fillBed(stacks: readonly Stack[], sheet: Sheet): readonly Place[] {
   const there = stacks.filter(({ left }) => left > 0);
+  const plain = there.length === 1 ? rows(there[0]!, sheet) : [];
+  if (plain.some(({ length }) => length >= MANY))
+    return plain.reduce((best, rowed) => (fuller(rowed, best) ? rowed : best));
   const layouts = (there.length > 1 ? ORDERS : ORDERS.slice(0, 1)).flatMap((order) => {
     const sorted = there.toSorted((a, b) => order(b.piece) - order(a.piece) || a.piece.index - b.piece.index);
     return RULES.map((rule) => greedy(sorted, rule, sheet));
   });
-  if (there.length === 1) layouts.push(...rows(there[0]!, sheet));
-  return layouts.reduce((best, layout) => (fuller(layout, best) ? layout : best), []);
+  return [...plain, ...layouts].reduce((best, layout) => (fuller(layout, best) ? layout : best), []);
 }
 
 function fuller(a: readonly Place[], b: readonly Place[]): boolean {

@@ -10,7 +10,7 @@ export interface RepeatedBed {
 }
 
 /** With more pieces than this they are not laid out one by one: the time grows with pieces times beds. */
-const SINGLY = 120;
+const SINGLY = 40;
 
 /**
  * Three ways are tried: every piece on the first bed with room; the fullest bed of all parts as often as it can be had, and

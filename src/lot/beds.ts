@@ -60,12 +60,15 @@ export function layOutLot(pieces: readonly LotPiece[], printers: readonly LotPri
       const { id, ...size } = bedPartOf(of);
       const piece = { index, width: umUp(size.widthMm), depth: umUp(size.depthMm) };
       const takers = printers.flatMap((printer, i) => (fitFaults({ id, ...size }, printer).length === 0 ? [i] : []));
-      return { of, piece, takers };
+      const full = printers.map((_, i) =>
+        takers.length > 1 && takers.includes(i) ? capacityOf(piece, sheets[i]!) : of.quantity,
+      );
+      return { of, piece, takers, full };
     });
     // On every printer, or as far as can be on one of them: a few pieces are not worth a bed of each.
     const ways = [null, ...printers.keys()]
       .slice(0, printers.length === 1 ? 1 : undefined)
-      .map((only) => layOutGroup(boxes, shared(boxes, printers, sheets, beds, only), sheets));
+      .map((only) => layOutGroup(boxes, shared(boxes, printers, beds, only), sheets));
     const cost = (way: readonly Laid[]) => {
       const all = [...beds, ...way].map(({ printer, massG, count }) => ({ printer, massG, count }));
       return busiest(all, printers) + BED_G * way.reduce((sum, { count }) => sum + count, 0);
@@ -127,6 +130,8 @@ interface Box {
   readonly piece: Piece;
   /** Printers by their index. */
   readonly takers: readonly number[];
+  /** Copies on one bed of each printer; all, where only one printer takes it. */
+  readonly full: readonly number[];
 }
 
 interface Laid extends BedLoad {
@@ -142,7 +147,6 @@ interface Laid extends BedLoad {
 function shared(
   boxes: readonly Box[],
   printers: readonly LotPrinter[],
-  sheets: readonly Sheet[],
   beds: readonly BedLoad[],
   only: number | null,
 ): readonly (readonly number[])[] {
@@ -156,19 +160,15 @@ function shared(
       b.of.massG * b.of.quantity - a.of.massG * a.of.quantity ||
       a.piece.index - b.piece.index,
   );
-  for (const { of, piece, takers } of order) {
+  for (const { of, piece, takers, full } of order) {
     const among = only !== null && takers.includes(only) ? [only] : takers;
-    const full = among.map((printer) => (among.length === 1 ? of.quantity : capacityOf(piece, sheets[printer]!)));
     for (let left = of.quantity; left > 0; ) {
-      const after = among.map(
-        (printer, i) => (loadG[printer]! + Math.min(left, full[i]!) * of.massG) / printers[printer]!.count,
-      );
-      const least = after.indexOf(Math.min(...after));
-      const printer = among[least]!;
-      const taken = Math.min(left, full[least]!);
-      shares[printer]![piece.index]! += taken;
-      loadG[printer]! += taken * of.massG;
-      left -= taken;
+      const taken = (printer: number) => Math.min(left, full[printer]!);
+      const after = among.map((printer) => (loadG[printer]! + taken(printer) * of.massG) / printers[printer]!.count);
+      const printer = among[after.indexOf(Math.min(...after))]!;
+      shares[printer]![piece.index]! += taken(printer);
+      loadG[printer]! += taken(printer) * of.massG;
+      left -= taken(printer);
     }
   }
   return shares;
