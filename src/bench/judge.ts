@@ -2,7 +2,7 @@
 import { VERDICT } from '../../templates/wording/bench-verdict.ts';
 import { CHECKS } from '../../templates/wording/winding-sheet.ts';
 import { TEMPERATURE_COEFFICIENT } from '../physics/copper.ts';
-import { short, signed } from '../sheets/text.ts';
+import { short, signed } from '../quantity/decimals.ts';
 import type { Judgement, Quantity, Question, Verdict } from './api.ts';
 import { type JudgedRecord, questionsOf } from './questions.ts';
 

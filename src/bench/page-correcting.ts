@@ -1,7 +1,7 @@
 /** Correction while winding: takes a length, works out what it changes, and moves the stops when that is wanted. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
-import { figures, signed } from '../sheets/text.ts';
-import { lengthText, unitsOf, wireText } from '../sheets/units.ts';
+import { figures, signed } from '../quantity/decimals.ts';
+import { lengthText, unitsOf, wireText } from '../quantity/written.ts';
 import type { CorrectedStop, Correction, LengthMeasure, LengthOver, Progress } from './api.ts';
 import { correct, measurable, placesOf } from './correction.ts';
 import { plannedAgain, turnOf } from './counter.ts';

@@ -1,6 +1,6 @@
 /** Counting: by key, click or touch, held at every stop until what is to be done there is done. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
-import { lengthText, unitsOf, wireText } from '../sheets/units.ts';
+import { lengthText, unitsOf, wireText } from '../quantity/written.ts';
 import type { Stop } from './api.ts';
 import { plannedMm } from './correction.ts';
 import { confirmStop, countTurn, heldBy, NOTHING, nextStop, takeBack, turnOf, turnsToGo } from './counter.ts';

@@ -5,8 +5,8 @@ import { axialAt } from '../coil/layout.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import { type Elevation, elevation, elevationScale, frontOfTurn } from '../drawing/elevation.ts';
 import { svgOf } from '../drawing/svg.ts';
+import { lengthCell, unitsOf } from '../quantity/written.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { lengthCell, unitsOf } from '../sheets/units.ts';
 import { svgEl } from './page-dom.ts';
 
 /** Room that the drawing is laid out for, so that its type is legible on a phone; it grows with the page. */

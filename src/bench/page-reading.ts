@@ -1,7 +1,7 @@
 /** Readings: asked for, judged by the record's limits, kept, and saved as a file. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
-import { fixed, signed } from '../sheets/text.ts';
-import { unitsOf } from '../sheets/units.ts';
+import { fixed, signed } from '../quantity/decimals.ts';
+import { unitsOf } from '../quantity/written.ts';
 import type { Judgement, Question } from './api.ts';
 import { judge, questionsOf } from './judge.ts';
 import { byId, setText } from './page-dom.ts';

@@ -1,6 +1,6 @@
 /** How stops and turns are called on the page. */
 import { BENCH } from '../../templates/wording/bench-page.ts';
-import { short } from '../sheets/text.ts';
+import { short } from '../quantity/decimals.ts';
 import type { Stop } from './api.ts';
 
 type Named = Pick<Stop, 'kind' | 'number'>;

@@ -1,7 +1,7 @@
 /** What to measure at the bench, with limits, from the record. */
 import { VERDICT } from '../../templates/wording/bench-verdict.ts';
+import { short } from '../quantity/decimals.ts';
 import type { CoilRecord, Tap } from '../record/schema.ts';
-import { short } from '../sheets/text.ts';
 import type { Question } from './api.ts';
 
 export type JudgedRecord = Pick<

@@ -2,7 +2,7 @@
 import { CORRECTION } from '../../templates/wording/steps.ts';
 import { Coil } from '../coil/coil.ts';
 import type { Job } from '../job/job.ts';
-import { lengthText } from '../sheets/units.ts';
+import { lengthText } from '../quantity/written.ts';
 import type { Design } from '../solve/design.ts';
 import type { AdviceTap, Correction } from './advice-schema.ts';
 import type { Measuring } from './meter-schema.ts';

@@ -7,7 +7,7 @@ import { HOW } from '../../templates/wording/steps.ts';
 import { FORMER_SHARE } from '../coil/positions.ts';
 import type { Job } from '../job/job.ts';
 import { type Possible, possibleParts } from '../parts/parts.ts';
-import { lengthText } from '../sheets/units.ts';
+import { lengthText } from '../quantity/written.ts';
 import { alternativesTo, WORTH } from '../solve/alternatives.ts';
 import { setCapacitance } from '../solve/demand.ts';
 import type { Design } from '../solve/design.ts';

@@ -2,7 +2,7 @@
 import { STEP } from '../../templates/wording/steps.ts';
 import { Coil } from '../coil/coil.ts';
 import type { Job } from '../job/job.ts';
-import { forcesText, lengthText, wireText } from '../sheets/units.ts';
+import { forcesText, lengthText, wireText } from '../quantity/written.ts';
 import type { Design } from '../solve/design.ts';
 import { findMaterial } from '../stock/materials.ts';
 import { ribName } from './rib-name.ts';

@@ -4,7 +4,7 @@ import { type Box, overlap, textBox } from '../../src/drawing/boxes.ts';
 import { elevation, elevationScale, frontOfTurn } from '../../src/drawing/elevation.ts';
 import { seamLines } from '../../src/drawing/seam-lines.ts';
 import { Paper } from '../../src/sheets/page.ts';
-import { lengthCell } from '../../src/sheets/units.ts';
+import { lengthCell } from '../../src/quantity/written.ts';
 import { DRAWING } from '../../templates/wording/winding-sheet.ts';
 import { splitRecord } from '../helpers/joints.ts';
 import { ribbedRecord } from '../helpers/ribbed.ts';

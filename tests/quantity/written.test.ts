@@ -14,7 +14,7 @@ import {
   wireCell,
   wireText,
   wireUnit,
-} from '../../src/sheets/units.ts';
+} from '../../src/quantity/written.ts';
 
 describe('lengths on paper', () => {
   it('tells an exact inch in each of the three ways', () => {
