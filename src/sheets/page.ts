@@ -90,6 +90,8 @@ export class Paper implements Measure {
 
   /** The weight and dash that the page is set to. */
   #pen = '';
+  /** The grey that it fills with, 0 to 255; null: not known. */
+  #grey: number | null = null;
 
   constructor(info: DocumentInfo) {
     const options = {
@@ -149,6 +151,7 @@ export class Paper implements Measure {
     for await (const page of pages) {
       this.#document.addPage({ size: [page.widthMm * POINTS, page.heightMm * POINTS], margin: 0 }).strokeColor('black');
       this.#pen = '';
+      this.#grey = null;
       for (const picture of page.pictures ?? []) this.#place(picture, page.heightMm);
       for (const shape of page.shapes) this.#draw(shape, page.heightMm);
       if (page.anchor !== undefined) this.#document.addNamedDestination(page.anchor);
@@ -216,9 +219,16 @@ export class Paper implements Measure {
     }
     if (fill === undefined) to.stroke();
     else {
-      const grey = Math.round(fill * 255);
-      to.fillAndStroke([grey, grey, grey], 'black');
+      this.#fillWith(Math.round(fill * 255));
+      // The stroke is black on every page; left out, it is not set anew for each shape.
+      (to as unknown as { fillAndStroke(): void }).fillAndStroke();
     }
+  }
+
+  #fillWith(grey: number): void {
+    if (grey === this.#grey) return;
+    this.#grey = grey;
+    this.#document.fillColor([grey, grey, grey]);
   }
 
   #write(text: Text, x: number, y: number): void {
@@ -226,9 +236,8 @@ export class Paper implements Measure {
     const width = this.width(text.text, text.sizeMm, text.bold) * POINTS;
     const left = text.align === 'right' ? width : text.align === 'centre' ? width / 2 : 0;
     const drop = text.anchor === 'middle' ? (CAP_SHARE * text.sizeMm * POINTS) / 2 : 0;
-    to.font(text.bold ? 'bold' : 'plain')
-      .fontSize(text.sizeMm * POINTS)
-      .fillColor('black');
+    to.font(text.bold ? 'bold' : 'plain').fontSize(text.sizeMm * POINTS);
+    this.#fillWith(0);
     const turned = text.turnDeg !== undefined && text.turnDeg !== 0;
     if (turned) to.save().rotate(-text.turnDeg!, { origin: [x, y] });
     to.text(text.text, x - left, y + drop, { lineBreak: false, baseline: 'alphabetic' });
