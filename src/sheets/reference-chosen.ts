@@ -46,7 +46,7 @@ export function others(record: FiguresRecord, widthMm: number, measure: Measure)
     [CHOSEN.worst, 12, RIGHT],
     [CHOSEN.loss, 14, RIGHT],
     [CHOSEN.taps, 23, {}],
-    [CHOSEN.better, 38, {}],
+    [CHOSEN.better, 64, {}],
   ];
   // Two units in one cell would leave no room for the words: inches stand in a row of their own below.
   const first = units === 'both' ? 'metric' : units;

@@ -7,10 +7,10 @@ import { REFERENCE } from '../../templates/wording/reference-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import type { ExplainedRecord } from '../explain/explain.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { stack } from './block.ts';
+import { closer, stack } from './block.ts';
 import { headedPages } from './headed.ts';
 import { type Page, Paper } from './page.ts';
-import { type Body, Filling } from './parted.ts';
+import { type Body, Filling, GAP_MM } from './parted.ts';
 import { noOthers, others, why } from './reference-chosen.ts';
 import { explained } from './reference-explained.ts';
 import * as ranges from './reference-ranges.ts';
@@ -54,10 +54,21 @@ function fill(record: ReferenceRecord, widthMm: number, heightMm: number, measur
   return pages.bodies;
 }
 
+/** A last page that holds less than this of its height is done without where nearer lines save it. */
+const SCANT_SHARE = 0.35;
+
+/** The pages, their lines nearer where that saves a page with little on it. */
+function filled(record: ReferenceRecord, widthMm: number, heightMm: number, measure: Measure): Body[] {
+  const pages = fill(record, widthMm, heightMm, measure);
+  if (stack(pages.at(-1)!.blocks, GAP_MM).heightMm > SCANT_SHARE * heightMm) return pages;
+  const near = fill(record, widthMm, heightMm, closer(measure));
+  return near.length < pages.length ? near : pages;
+}
+
 /** The pages as drawings. */
 export function layOutReferenceSheet(record: ReferenceRecord, measure: Measure): Page[] {
   return headedPages(record, REFERENCE, REFERENCE.figures, measure, (widthMm, heightMm) =>
-    fill(record, widthMm, heightMm, measure),
+    filled(record, widthMm, heightMm, measure),
   );
 }
 
