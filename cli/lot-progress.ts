@@ -35,7 +35,7 @@ export function progressText({ stage, done, of, found }: LotProgress, elapsedMs:
   if (made > 0) {
     const each = elapsedMs / made;
     const left = each * (of - done) + (stage === 'kinds' ? AFTER_KINDS * each * of : 0);
-    parts.push(`about ${timeText(left)} left`);
+    parts.push(`${timeText(left)} left`);
   }
   return parts.join(', ');
 }
@@ -44,5 +44,5 @@ export function progressText({ stage, done, of, found }: LotProgress, elapsedMs:
 function timeText(ms: number): string {
   const seconds = ms / 1000;
   if (seconds < 10) return 'a few seconds';
-  return seconds < 120 ? `${5 * Math.round(seconds / 5)} s` : `${Math.round(seconds / 60)} min`;
+  return seconds < 120 ? `about ${5 * Math.round(seconds / 5)} s` : `about ${Math.round(seconds / 60)} min`;
 }

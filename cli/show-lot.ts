@@ -1,5 +1,4 @@
 /** What `lot` says when it is done: kinds and coils, wire from the reels, what to buy, beds and runs, what was written. */
-import { dirname } from 'node:path/posix';
 import type { LotRecord } from '../src/lot/schema.ts';
 import type { MadeLot } from '../src/lot.ts';
 import { tidy } from '../src/quantity/format.ts';
@@ -87,7 +86,9 @@ function wire({ wires, spools }: LotRecord, columns: number): string[] {
     ['used m', true],
     ['rest m', true],
   ] as const;
-  const rows = spools.map(({ spool, wire, leftM, usedM, restM, serials }) => [
+  const cut = spools.filter(({ serials }) => serials.length > 0);
+  const untouched = spools.length - cut.length;
+  const rows = cut.map(({ spool, wire, leftM, usedM, restM, serials }) => [
     short(spool, 24),
     wire,
     `${serials.length}`,
@@ -100,7 +101,11 @@ function wire({ wires, spools }: LotRecord, columns: number): string[] {
     const proof = exact ? 'no plan is better' : `no plan leaves less than ${metres(scrapBoundM)} m`;
     return unserved > 0 && scrapM === 0 ? [] : item(`${scrap}; ${proof}`, columns);
   });
-  return [...fitted('Wire from the reels', titles, rows, columns), ...notes];
+  return [
+    ...(cut.length === 0 ? ['Wire from the reels'] : fitted('Wire from the reels', titles, rows, columns)),
+    ...notes,
+    ...(untouched === 0 ? [] : item(`not cut from: ${counted(untouched, 'reel')}`, columns)),
+  ];
 }
 
 function toBuy({ toBuy }: LotRecord, columns: number): string[] {
@@ -129,9 +134,9 @@ function printing({ beds, runs, materials }: LotRecord, columns: number): string
 function written(files: MadeLot['files'], folder: string, columns: number): string[] {
   const top = files.filter(({ path }) => !path.includes('/'));
   const below = new Map<string, number>();
-  for (const { path } of files.filter((file) => file.path.includes('/'))) {
-    const of = dirname(path);
-    below.set(of, (below.get(of) ?? 0) + 1);
+  for (const { path } of files) {
+    const of = path.split('/')[0]!;
+    if (of !== path) below.set(of, (below.get(of) ?? 0) + 1);
   }
   const rows = [
     ...top.map(({ path, size, note }) => [path, sizeText(size), note] as const),

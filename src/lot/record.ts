@@ -46,7 +46,7 @@ export function lotRecord(lot: Lot, kinds: readonly PlannedKind[], version: stri
     beds: [...beds],
     runs: [...runs],
     materials: materialsOf(beds),
-    warnings: [...wires.wires.flatMap(wireWarnings), ...kinds.flatMap(kindWarnings)],
+    warnings: [...wires.wires.flatMap(wireWarnings), ...kindWarnings(kinds)],
   };
   return lotSchema.parse({ ...body, program: `coilwright ${version}`, hash: hashOf(body), files: [] });
 }
@@ -97,9 +97,11 @@ function wireWarnings({ wire, coils, unserved, buyM }: LotWire): LotRecord['warn
   return [{ code: 'wire-to-buy', text }];
 }
 
-function kindWarnings({ kind, record }: PlannedKind): LotRecord['warnings'] {
-  const count = record.warnings.length;
-  if (count === 0) return [];
-  const text = `Kind ${kind}, ${record.job}: ${count === 1 ? 'one warning' : `${count} warnings`}, on its winding sheet and in its plan.json.`;
+/** One for all kinds, which may be many: what each warns of stands on its own sheets. */
+function kindWarnings(kinds: readonly PlannedKind[]): LotRecord['warnings'] {
+  const some = kinds.filter(({ record }) => record.warnings.length > 0);
+  if (some.length === 0) return [];
+  const counts = some.map(({ kind, record }) => `${kind} (${record.warnings.length})`).join(', ');
+  const text = `Warnings of kinds, on their winding sheets and in their plan.json: ${counts}.`;
   return [{ code: 'kind-warnings', text }];
 }
