@@ -6,7 +6,7 @@ import { tmpdir } from 'node:os';
 import { basename, dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { checkNetlist } from './ngspice.mjs';
-import { measureRulers } from './rulers.mjs';
+import { measureRulers, pagesOf } from './rulers.mjs';
 
 const root = join(dirname(fileURLToPath(import.meta.url)), '..', '..');
 const program = join(root, 'dist', 'coilwright.js');
@@ -58,15 +58,17 @@ function pdf(path, record) {
 
 let rulers = 0;
 let worstRuler = 0;
-/** A page at true scale, measured as it is rendered. */
+/** Every page at true scale, measured as it is rendered. */
 function trueScale(path, { paper }) {
   if (!has('pdftoppm')) return;
-  for (const [axis, mm] of Object.entries(measureRulers(path))) {
-    // What a print may be off; a dot is 0.042 mm.
-    check(`${path}: the ruler ${axis} on ${paper} is 100 mm`, mm !== null && Math.abs(mm - 100) < 0.1, `${mm} mm`);
-    rulers++;
-    worstRuler = Math.max(worstRuler, Math.abs((mm ?? 0) - 100));
-  }
+  for (let page = 1; page <= pagesOf(path); page++)
+    for (const [axis, mm] of Object.entries(measureRulers(path, page))) {
+      // What a print may be off; a dot is 0.042 mm.
+      const what = `${path}: the ruler ${axis} on page ${page}, ${paper}, is 100 mm`;
+      check(what, mm !== null && Math.abs(mm - 100) < 0.1, `${mm} mm`);
+      rulers++;
+      worstRuler = Math.max(worstRuler, Math.abs((mm ?? 0) - 100));
+    }
 }
 
 let slices = 0;
@@ -181,6 +183,23 @@ function netlist(path, record) {
   worstResonance = Math.max(worstResonance, checkNetlist(path, record, simulate, count));
 }
 
+/** A tube whose template takes several pages: each of them has its rulers. */
+function tiled() {
+  const [job, out] = [join(work, 'tiled.json'), join(work, 'tiled')];
+  const former = { kind: 'tube', 'outside-diameter': '130 mm', longest: '330 mm' };
+  const wanted = { want: { inductance: ['30 uH', '300 uH'] }, wire: ['18 AWG enamel'], winding: { pitch: 'spaced' } };
+  writeFileSync(
+    job,
+    JSON.stringify({ job: 'Tiled', former, ...wanted, paper: 'Letter', units: 'both', parts: ['coupon'] }),
+  );
+  const { status, stderr } = run(process.execPath, [program, 'plan', job, '--out', out]);
+  check('plan a wide tube', status === 0, stderr);
+  if (status !== 0) return;
+  const path = join(out, 'wrap-template.pdf');
+  if (has('pdfinfo')) check('the template of a wide tube takes several pages', pagesOf(path) > 1, path);
+  trueScale(path, JSON.parse(readFileSync(join(out, 'plan.json'), 'utf8')));
+}
+
 /** The bench page, driven in a browser by tests of their own. */
 function benchPage() {
   if (!has('/usr/bin/chromium')) return;
@@ -225,6 +244,7 @@ try {
     }
   }
   check('there are starter jobs', starters.length > 0, jobs);
+  tiled();
 } finally {
   rmSync(work, { recursive: true, force: true });
 }

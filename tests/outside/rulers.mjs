@@ -60,6 +60,12 @@ function ruler(count, line) {
   return null;
 }
 
+/** How many pages a document has, by what pdfinfo says; 1 where it says nothing. */
+export function pagesOf(pdf) {
+  const { stdout } = spawnSync('pdfinfo', [pdf], { encoding: 'utf8' });
+  return Number(/^Pages:\s+(\d+)/m.exec(stdout ?? '')?.[1] ?? 1);
+}
+
 /** Lengths of the rulers to the right and upwards on a page, in mm; null where none was found. */
 export function measureRulers(pdf, page = 1) {
   const image = grey(pdf, page, dirname(pdf));
