@@ -2,8 +2,9 @@
  * What all coils of a kind have in common: the most likely error of diameter, pitch and gaps, of the meter and its leads, of known
  * capacitors, given every reading, with 95 % limits.
  *
- *     readings ──> slots with what was expected ──> slips, miscounts left out ──> mixed model ──> far ones left out ──> what is off
- *      (types)      (systematic-model)               (systematic-left-out)        (systematic-fit, -columns, -mixed)     (here)
+ *     readings ──> slots with what was expected ──> slips, miscounts, strangers ──> mixed model ──> far ones left out ──> what is off
+ *      (types)      (systematic-model)               out (-left-out, -strangers)     (-fit, -columns,  (-left-out)         (here)
+ *                                                                                     -mixed)
  *
  * Least squares with priors (the most likely values a posteriori, JCGM 101:2008 names the state of knowledge that limits stand for):
  * instruments may be off as the shop states, the bench by four times the record's spread. What the readings cannot separate stays
@@ -19,10 +20,11 @@ import { decimals, significant } from '../record/rounding.ts';
 import { chanceOfChiSquare } from './chance.ts';
 import { type Column, Z95 } from './systematic-columns.ts';
 import { expectedOf, type KindFit } from './systematic-fit.ts';
-import { fitRobust, fittingOf, type LeftOut, withoutMiscounts } from './systematic-left-out.ts';
+import { fitRobust, fittingOf, type LeftOut } from './systematic-left-out.ts';
 import { WEIGHT } from './systematic-mixed.ts';
 import { deviationOf, type KindModel, modelOf, type Slot } from './systematic-model.ts';
 import { FITTED, type Systematic, UNKNOWNS, type Unknown, type UnknownName } from './systematic-schema.ts';
+import { withoutStrangers } from './systematic-strangers.ts';
 import type { KindReadings } from './types.ts';
 
 export type { Systematic, Unknown } from './systematic-schema.ts';
@@ -251,7 +253,7 @@ export function systematicOf({ record, coils: given }: KindReadings): Systematic
   const model = modelOf(record);
   const leftOut: LeftOut[] = [];
   const readable = given.flatMap((coil) => fittingOf(model, coil, leftOut) ?? []);
-  const counted = withoutMiscounts(model, readable, leftOut);
+  const counted = withoutStrangers(model, readable, leftOut);
   if (counted.length === 0) return null;
   const { coils, found } = fitRobust(model, counted, leftOut);
   const { fit, slots, columns } = found;

@@ -7,7 +7,8 @@ import { type Lot, NOTHING, normals, simulated, type Truth } from './simulated.t
 
 export interface Tally {
   lots: number;
-  /** Of each unknown: lots whose limits hold the truth, and lots that call it off. */
+  /** Of each unknown: lots that have it, lots whose limits hold the truth, and lots that call it off. */
+  readonly seen: Map<string, number>;
   readonly held: Map<string, number>;
   readonly called: Map<string, number>;
   /** Unknowns called off to the wrong side. */
@@ -22,6 +23,7 @@ export interface Tally {
 
 export const tally = (): Tally => ({
   lots: 0,
+  seen: new Map(),
   held: new Map(),
   called: new Map(),
   wrongSide: 0,
@@ -83,6 +85,7 @@ export function add(to: Tally, record: CoilRecord, lot: Lot): Systematic {
   for (const one of found.unknowns) {
     const truth = truthOf(one, lot.truth);
     if (truth === null) continue;
+    more(to.seen, one.name);
     if (one.low <= truth && truth <= one.high) more(to.held, one.name);
     if (!one.significant) continue;
     more(to.called, one.name);
