@@ -380,6 +380,16 @@ describe('runs', () => {
     ]);
   });
 
+  test('serve the first serials first: by the time of printing, not machine by machine', () => {
+    const lot = { pieces: [piece('A', 'former', 200, 200, 4)], printers: [bench(220, 220, 2)] };
+    const coils = ['K1', 'K2', 'K3', 'K4'].map((serial) => ({ serial, kind: 'A' }));
+    const runs = listRuns(check(lot), lot.printers, lot.pieces, coils);
+    expect(runs.map((machine) => machine.runs.map(({ serials }) => serials.join()))).toEqual([
+      ['K1', 'K3'],
+      ['K2', 'K4'],
+    ]);
+  });
+
   test('name a former in sections with each of its pieces, the first serial first', () => {
     const pieces = [piece('A', 'former-1', 100, 100, 4), piece('A', 'former-2', 100, 100, 4, { massG: 20 })];
     const beds: LotBed[] = pieces.map(({ kind, part, name, massG }, i) => ({
