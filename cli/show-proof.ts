@@ -29,8 +29,7 @@ export function showProof(
   const told = failing.slice(0, MOST_COILS).map(({ serial, rescue, taps }) => {
     const { can, causes, actions, out } = rescue!;
     const head = `${serial === '' ? 'no serial' : serial}: can be saved: ${can}.`;
-    const stays =
-      out.length === 0 ? [] : [`Outside stay: ${out.map((tap) => RESCUE.where(tap, taps.length)).join(', ')}.`];
+    const stays = out.length === 0 ? [] : [`Outside stay: ${RESCUE.several(out, taps.length)}.`];
     const todo = actions.length === 0 ? [] : [`To do: ${actions.map(({ doing }) => doing).join('; ')}.`];
     return [head, ...causes.slice(0, 2), ...todo, ...stays].join(' ');
   });

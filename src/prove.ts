@@ -16,10 +16,12 @@ import type { LotRecord } from './lot/schema.ts';
 import { chartsOf } from './prove/charts.ts';
 import type { Dial } from './prove/charts-schema.ts';
 import { dialOf } from './prove/dial.ts';
+import { firstOffJob } from './prove/first-off.ts';
 import { believable, judgeKind, type KindProof, makeProof } from './prove/make.ts';
 import { readReadings } from './prove/read.ts';
-import type { ProofRecord } from './prove/schema.ts';
+import type { ProofFirstOff, ProofRecord } from './prove/schema.ts';
 import { systematicOf } from './prove/systematic.ts';
+import type { Systematic } from './prove/systematic-schema.ts';
 import type { FileNote, KindReadings } from './prove/types.ts';
 import { listed, type Output, type OutputFile } from './record/listing.ts';
 import type { CoilRecord } from './record/schema.ts';
@@ -93,11 +95,15 @@ export function proofOf(input: ProveInput, version: string): Proof {
   const { text, file, records, lots, searched, name, sha256 } = input;
   const read = readReadings(text, file, records, { lots, searched });
   const { dials, notes } = dialsOf(read.kinds, input.dial);
+  const nameOf = names();
+  const firstOffs: OutputFile[] = [];
   const kinds = read.kinds.map((kind): KindProof => {
     const coils = judgeKind(kind);
     const sound = believable(kind, coils);
     const systematic = systematicOf(sound);
-    return { record: kind.record, coils, systematic, charts: chartsOf(sound), firstOff: null };
+    const next = systematic === null ? null : nextJob(kind.record, systematic, nameOf);
+    if (next?.file) firstOffs.push(next.file);
+    return { record: kind.record, coils, systematic, charts: chartsOf(sound), firstOff: next?.told ?? null };
   });
   const record = makeProof(
     {
@@ -111,7 +117,24 @@ export function proofOf(input: ProveInput, version: string): Proof {
     },
     version,
   );
-  return { record, dials, firstOffs: [] };
+  return { record, dials, firstOffs };
+}
+
+/** The job for the next lot of a kind, where there is something to put right. */
+function nextJob(
+  record: CoilRecord,
+  systematic: Systematic,
+  nameOf: (text: string) => string,
+): { readonly told: ProofFirstOff; readonly file: OutputFile | null } {
+  const next = firstOffJob(record, systematic);
+  const notes = [...next.notes];
+  if (!next.ok) return { told: { path: null, why: next.why, changes: [], notes }, file: null };
+  const path = `first-off/${nameOf(record.job)}.yaml`;
+  const bytes = new TextEncoder().encode(next.yaml);
+  return {
+    told: { path, why: null, changes: next.changes.map((change) => ({ ...change })), notes },
+    file: { path, kind: 'yaml', bytes, note: 'the job for the next lot, centred' },
+  };
 }
 
 /** Names for what comes once a coil or a kind: their slug, with a number where it was taken. */
@@ -155,10 +178,10 @@ export async function prove(input: ProveInput, { version }: { version: string })
   files.push(...firstOffs);
   if (dials.length > 0) {
     const { dialSheet } = await import('./sheets/dial-sheet.ts');
-    const nameOf = names();
+    const dialName = names();
     const { diameterMm } = input.dial ?? USUAL_DIAL;
     for (const { of, dial } of dials) {
-      const path = `dial-${nameOf(dial.serial)}.pdf`;
+      const path = `dial-${dialName(dial.serial)}.pdf`;
       files.push({
         path,
         kind: 'pdf',

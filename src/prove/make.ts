@@ -6,7 +6,15 @@ import { judgeCoil } from './judge.ts';
 import { Asking } from './judge-at.ts';
 import { rescueOf } from './rescue.ts';
 import { Turned } from './rescue-effects.ts';
-import { type ProofCoil, type ProofKind, type ProofRecord, proofSchema, type State, type Tally } from './schema.ts';
+import {
+  type ProofCoil,
+  type ProofFirstOff,
+  type ProofKind,
+  type ProofRecord,
+  proofSchema,
+  type State,
+  type Tally,
+} from './schema.ts';
 import type { Systematic } from './systematic-schema.ts';
 import type { FileNote, KindReadings, ReadingsFile } from './types.ts';
 
@@ -43,7 +51,7 @@ export interface KindProof {
   readonly coils: readonly ProofCoil[];
   readonly systematic: Systematic | null;
   readonly charts: readonly Chart[];
-  readonly firstOff: string | null;
+  readonly firstOff: ProofFirstOff | null;
 }
 
 export interface ProofParts {

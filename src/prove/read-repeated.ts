@@ -1,4 +1,5 @@
 /** What was measured more than once: the last line counts, the others are named. */
+import type { Told } from './read-row.ts';
 import type { DialReading, FileNote, Reading } from './types.ts';
 
 /** A figure of a file, a reading or one of a dial. */
@@ -8,7 +9,7 @@ export interface Read {
   readonly reading: Reading | null;
   readonly dial: DialReading | null;
   /** What is to be said of it though it counts. */
-  readonly note: Pick<FileNote, 'code' | 'got' | 'expected' | 'todo'> | null;
+  readonly note: Told | null;
 }
 
 /** Temperature is no condition of a resistance of its own: it is reckoned to 20 degrees before it is judged. */

@@ -2,7 +2,7 @@
 import { csvNumber } from '../csv/read.ts';
 import { quote } from '../quantity/parse.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import type { Columns, FigureColumn } from './read-columns.ts';
+import type { Columns, FigureColumn, Role } from './read-columns.ts';
 import { figureOf } from './read-figure.ts';
 import type { Read } from './read-repeated.ts';
 import { swappedWith } from './read-swapped.ts';
@@ -19,7 +19,10 @@ import {
 import type { DialReading, FileNote, Reading } from './types.ts';
 
 /** Of a note, without its place. */
-export type Told = Pick<FileNote, 'code' | 'got' | 'expected' | 'todo'>;
+export type Told = Pick<FileNote, 'code' | 'got' | 'expected' | 'todo'> & {
+  /** The column at fault, where it is not that of the figure. */
+  readonly role?: Role | undefined;
+};
 
 export interface Row {
   readonly line: number;
@@ -44,7 +47,13 @@ export function conditionsOf(columns: Columns, cell: (index: number | undefined)
   return conditionsIn([words, ...more].join('; '));
 }
 
-const told = (code: string, got: string, expected: string, todo: string): Told => ({ code, got, expected, todo });
+const told = (code: string, got: string, expected: string, todo: string, role?: Role): Told => ({
+  code,
+  got,
+  expected,
+  todo,
+  role,
+});
 
 /** What the row and its column say together, or what is wrong with it. */
 export function readingOf(row: Row, column: FigureColumn, cell: string, alone: boolean): Read | Told {
@@ -58,6 +67,7 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
       quote(row.unit),
       'a unit such as uH, kHz, ohm or mm',
       'write it out, or leave the cell empty and put the unit beside the figure',
+      'unit',
     );
   const named: What | null = column.what ?? row.words.what;
   if (named === null && column.what === null && row.quantity !== '')
@@ -66,6 +76,7 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
       quote(row.quantity),
       'inductance, resonance, resistance, length, diameter, turns or dial',
       'use one of these words',
+      'quantity',
     );
   const by = cellUnit ?? unit;
   const what = named ?? (by === null ? null : whatOf(by));
@@ -75,6 +86,7 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
       `${quote(cell)}, of which nobody says what it measures`,
       'a quantity, or a unit that tells it',
       'fill in the column quantity',
+      'quantity',
     );
   const place = tapIn(row, column, what, count);
   if (typeof place === 'object' && place !== null) {
@@ -98,6 +110,7 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
           quote(row.conditions.rest),
           'a condition such as 100 pF, 100 kHz or 23 degC',
           'it was passed over; write it with its unit if it counts',
+          'condition',
         );
   const { value } = figure;
   const { taps } = record.windings[0]!;
@@ -119,6 +132,7 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
       `${quote(cell)} without the capacitor it was taken with`,
       'a condition such as 100 pF',
       'write it into the column condition, or over the column',
+      'condition',
     );
   const swapped = swappedWith(record, { what, tap: place, conditions, value }, row);
   if (swapped !== null) return swapped;
@@ -160,11 +174,17 @@ function tapIn(row: Row, column: FigureColumn, what: What, count: number): numbe
   if (free) return null;
   if (written === null) {
     if (count === 1) return 1;
-    return told('no-tap', 'no tap', taps, 'write it into the column tap, or over the column');
+    return told('no-tap', 'no tap', taps, 'write it into the column tap, or over the column', 'tap');
   }
   const tap = written === 'whole' ? count : written;
   if (tap === undefined || tap < 1 || tap > count)
-    return told('tap-unknown', tap === undefined ? quote(row.tap) : `tap ${tap}`, taps, 'write the number of the tap');
+    return told(
+      'tap-unknown',
+      tap === undefined ? quote(row.tap) : `tap ${tap}`,
+      taps,
+      'write the number of the tap',
+      'tap',
+    );
   return tap;
 }
 

@@ -28,6 +28,8 @@ export interface ReadOptions {
   readonly searched?: string;
 }
 
+const NO_NOTE: Told = { code: '', got: '', expected: '', todo: '' };
+
 /** A coil as it is gathered. */
 interface Gathered {
   readonly hash: string;
@@ -138,10 +140,13 @@ export function readReadings(
     };
     for (const column of filledIn) {
       const read = readingOf(row, column, cell(column.index), filledIn.length === 1);
-      if ('code' in read) out(column.title, read, 1);
-      else coil.read.push(read);
-      if (!('code' in read) && read.note !== null)
-        notes.push({ line, column: column.title, fate: 'kept', figures: 0, ...read.note });
+      const { role, ...note } = 'code' in read ? read : (read.note ?? NO_NOTE);
+      const at = (role === undefined ? null : titleOf(role)) ?? column.title;
+      if ('code' in read) out(at, note, 1);
+      else {
+        coil.read.push(read);
+        if (read.note !== null) notes.push({ line, column: at, fate: 'kept', figures: 0, ...note });
+      }
     }
     if (remark !== '' && filledIn.length !== 1 && !coil.remarks.includes(remark)) coil.remarks.push(remark);
   }

@@ -9,7 +9,7 @@ import type { Judged, ProofTap } from './schema.ts';
 const NEAR = 0.3;
 const MOST = 3;
 /** Taps that differ by no more than this share of their mean are off alike. */
-const ALIKE = 0.4;
+const ALIKE = 0.5;
 /** Wires of excess at F that are loose turns rather than the rule. */
 export const LOOSE_WIRES = 0.5;
 
@@ -36,12 +36,16 @@ function turnCauses(seen: readonly Seen[], last: number): string[] {
     if (!one.out && carried === 0) return;
     const off = whole(one.offTurns - carried);
     if (off === null) return;
+    const before = seen[i - 1];
+    // What is off already before the section is no fault of the section.
+    const alreadyOff = before?.out === true && whole(before.offTurns) === null;
     const behind = seen.slice(i + 1);
     const stays =
       behind.length === 0
         ? one.index === last - 1
         : behind.every(({ offTurns }) => Math.abs(offTurns - carried - off) < 0.5);
     if (stays) {
+      if (alreadyOff) return;
       causes.push(
         RESCUE.cause.miscount(seen[i - 1] === undefined ? 0 : seen[i - 1]!.index + 1, one.index + 1, last, off),
       );
@@ -108,5 +112,12 @@ export function causesOf(
   if (causes.length > 0 || !out) return causes;
   const outside = seen.filter((one) => one.out);
   if (outside.some(({ offTurns }) => Math.abs(offTurns) >= 0.5)) return [RESCUE.cause.unknown];
-  return [RESCUE.cause.small(outside.map(({ index }) => RESCUE.where(index + 1, last)).join(', '))];
+  return [
+    RESCUE.cause.small(
+      RESCUE.several(
+        outside.map(({ index }) => index + 1),
+        last,
+      ),
+    ),
+  ];
 }

@@ -229,6 +229,6 @@ export function rescueOf(record: CoilRecord, coil: Omit<ProofCoil, 'rescue'>, tu
       };
     }),
     out,
-    why: reasons.join(' '),
+    why: reasons,
   };
 }

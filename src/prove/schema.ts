@@ -85,7 +85,7 @@ const rescueSchema = z.strictObject({
     )
     .describe('with an electrical reading'),
   out: z.array(num.int()).describe('taps that stay outside their limits'),
-  why: text.describe('what it rests on, or why nothing helps'),
+  why: z.array(text).describe('what it rests on, or why nothing helps'),
 });
 
 const coilSchema = z.strictObject({
@@ -99,6 +99,13 @@ const coilSchema = z.strictObject({
 
 const tallySchema = z.strictObject({ coils: num.int(), pass: num.int(), fail: num.int(), missing: num.int() });
 
+const firstOffSchema = z.strictObject({
+  path: text.nullable().describe('of the job for the next lot; null: there is none'),
+  why: text.nullable().describe('why there is none'),
+  changes: z.array(z.strictObject({ key: text, before: text.describe('empty: it was not there'), after: text, text })),
+  notes: z.array(text).describe('what was found and is not put into the job'),
+});
+
 const kindSchema = z.strictObject({
   hash: text.describe('of its record'),
   job: text,
@@ -107,7 +114,7 @@ const kindSchema = z.strictObject({
   coils: z.array(coilSchema).describe('in the order of the file'),
   systematic: systematicSchema.nullable().describe('null: too little was read'),
   charts: z.array(chartSchema),
-  firstOff: text.nullable().describe('path of the job for the next lot; null: nothing is put right'),
+  firstOff: firstOffSchema.nullable().describe('null: too little was read'),
 });
 
 export const proofSchema = z.strictObject({
@@ -144,5 +151,6 @@ export type Judged = z.infer<typeof judgedSchema>;
 export type TwoCapacitors = z.infer<typeof lineSchema>;
 export type Rescue = z.infer<typeof rescueSchema>;
 export type RescueAction = z.infer<typeof actionSchema>;
+export type ProofFirstOff = z.infer<typeof firstOffSchema>;
 export type Tally = z.infer<typeof tallySchema>;
 export type State = (typeof STATES)[number];

@@ -2,11 +2,11 @@
 import { MARK, PROOF, RESCUE } from '../../templates/wording/proof.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import { SMALL_MM } from '../drawing/shapes.ts';
-import { isOut } from '../prove/judge.ts';
+import { isElectrical, isOut } from '../prove/judge.ts';
 import type { Judged, ProofCoil, ProofKind, ProofRecord, ProofTap } from '../prove/schema.ts';
-import { type Block, heading, list, paragraph } from './block.ts';
+import { type Block, heading, list, paragraph, stack } from './block.ts';
 import { type Head, type Parted, parted } from './parted.ts';
-import { figures, fixed, signed } from './text.ts';
+import { figures, fixed, sentence, signed } from './text.ts';
 
 const CENTRE = { align: 'centre' } as const;
 const RIGHT = { align: 'right' } as const;
@@ -78,47 +78,104 @@ export function systematic(
           ...found.diagnosis,
           ...found.leftOut.map(({ serial, text }) => words.left(serial === '' ? PROOF.table.none : serial, text)),
         ];
-  if (firstOff !== null) items.push(words.next(firstOff));
+  if (firstOff !== null) {
+    const { path, why, changes, notes: more } = firstOff;
+    if (path !== null) items.push(words.next(path, changes.map(({ key, after }) => `${key} ${after}`).join(', ')));
+    else if (why !== null) items.push(words.none(why));
+    items.push(...more);
+  }
   return told(words.heading(job), items, widthMm, measure);
 }
 
 const allOf = ({ readings, taps }: ProofCoil): Judged[] => [...readings, ...taps.flatMap((tap) => tap.readings)];
 /** A figure more than elsewhere: a reading outside shows that it is. */
 const exact = (value: number) => `${Number(value.toPrecision(5))}`;
-const valueText = ({ value, unit }: Judged) => (unit === '' ? exact(value) : `${exact(value)} ${unit}`);
-/** As many as a person takes in; the rest stands in the record. */
-const MOST_OUT = 6;
+/** Readings of one coil that are named one by one; the rest stands in the record. */
+const MOST_OUT = 3;
 
-function failingText(coil: ProofCoil): string {
+/** Taps that are electrically outside with the farthest of them, and other readings that are. */
+function outside(coil: ProofCoil): string {
   const words = PROOF.failing;
-  const { can, causes, actions, taps, out, why } = coil.rescue!;
+  const taps = coil.taps.filter(({ readings }) => readings.some((one) => isElectrical(one) && isOut(one)));
+  const parts: string[] = [];
+  if (taps.length > 0) {
+    const size = ({ deviationPercent }: ProofTap) => Math.abs(deviationPercent ?? 0);
+    const far = taps.reduce((a, b) => (size(b) > size(a) ? b : a));
+    const named = RESCUE.several(
+      taps.map(({ tap }) => tap),
+      coil.taps.length,
+    );
+    const off = signed(far.deviationPercent ?? 0, 1);
+    parts.push(taps.length === 1 ? words.one(named, off) : words.far(named, off, far.tap));
+  }
+  const others = allOf(coil).filter((one) => !isElectrical(one) && isOut(one));
+  for (const { what, value, unit, low, high } of others.slice(0, MOST_OUT))
+    parts.push(words.reading(what, `${exact(value)} ${unit}`.trim(), exact(low!), exact(high!)));
+  if (others.length > MOST_OUT) parts.push(words.more(others.length - MOST_OUT));
+  return parts.join('; ');
+}
+
+/** Said once below the table rather than at every coil. */
+const COMMON: readonly string[] = [RESCUE.why.acts, RESCUE.why.length, RESCUE.why.held, RESCUE.why.again];
+
+function toDo(coil: ProofCoil): string {
+  const words = PROOF.failing;
+  const { actions, taps, out, why } = coil.rescue!;
   const last = coil.taps.length;
-  const outside = allOf(coil).filter(isOut);
-  const shown = outside.slice(0, MOST_OUT).map((one) => {
-    const { what, low, high, line } = one;
-    return words.reading(what, valueText(one), exact(low!), exact(high!), line);
-  });
-  if (outside.length > MOST_OUT) shown.push(words.more(outside.length - MOST_OUT));
   const changed = taps.filter(({ beforePercent, afterPercent }) => Math.abs(beforePercent - afterPercent) > 0.05);
   const expected = changed.map(({ tap, beforePercent, afterPercent }) =>
     words.tap(RESCUE.where(tap, last), signed(beforePercent, 1), signed(afterPercent, 1)),
   );
   return [
-    words.coil(serialOf(coil), words.can[can]),
-    words.readings(shown.join('; ')),
-    ...causes,
-    ...(actions.length > 0 ? [words.do(actions.map(({ doing }) => doing).join('; '))] : []),
+    ...(actions.length > 0 ? [sentence(actions.map(({ doing }) => doing).join('; '))] : []),
     ...(expected.length > 0 ? [words.expected(expected.join(', '))] : []),
-    ...(out.length > 0 ? [words.out(out.map((tap) => RESCUE.where(tap, last)).join(', '))] : []),
-    ...(why === '' ? [] : [why]),
+    ...(out.length > 0 ? [words.out(RESCUE.several(out, last))] : []),
+    ...why.filter((text) => !COMMON.includes(text)),
   ].join(' ');
 }
 
+const failingIn = ({ kinds }: ProofRecord) =>
+  kinds.flatMap(({ coils }) => coils.filter(({ rescue }) => rescue !== null));
+
 /** Coils that fail: what is outside, what it looks like, what to do, and what is then expected. */
-export function failing({ kinds }: ProofRecord, widthMm: number, measure: Measure): Block[] {
-  const coils = kinds.flatMap((kind) => kind.coils.filter(({ rescue }) => rescue !== null));
-  const { heading: words, none } = PROOF.failing;
-  return told(words, coils.length === 0 ? [none] : coils.map(failingText), widthMm, measure);
+export function failing(record: ProofRecord, widthMm: number, measure: Measure): Parted {
+  const words = PROOF.failing;
+  const heads: Head[] = [
+    [words.serial, 24, { bold: true }],
+    [words.saved, 14, {}],
+    [words.outside, 38, {}],
+    [words.looks, 50, {}],
+    [words.toDo, 60, {}],
+  ];
+  const rows = failingIn(record).map((coil) => [
+    serialOf(coil),
+    words.can[coil.rescue!.can],
+    outside(coil),
+    coil.rescue!.causes.join(' '),
+    toDo(coil),
+  ]);
+  return parted(
+    words.head,
+    heads,
+    rows.map((row) => [row]),
+    widthMm,
+    measure,
+  );
+}
+
+/** What holds for several coils of that table; that no coil fails. */
+export function failingHow(record: ProofRecord, widthMm: number, measure: Measure): Block {
+  const coils = failingIn(record);
+  if (coils.length === 0)
+    return stack(
+      [
+        heading(PROOF.failing.head.heading, widthMm, measure),
+        paragraph(PROOF.failing.none, widthMm, measure, { sizeMm: SMALL_MM }),
+      ],
+      0,
+    );
+  const said = COMMON.filter((text) => coils.some(({ rescue }) => rescue!.why.includes(text)));
+  return paragraph([...said, PROOF.failing.figures].join(' '), widthMm, measure, { sizeMm: SMALL_MM });
 }
 
 /** Readings that are not of their coil; empty without any. */

@@ -13,27 +13,29 @@ import { type Body, Filling, type Parted } from './parted.ts';
 import * as blocks from './proof-blocks.ts';
 import { frameOf } from './sheet-frame.ts';
 
-/** Of a table that goes on: its rows, and its heading with the head of the columns, mm. */
-const ROW_MM = 4.7;
-const HEADS_MM = 14;
 /** A table is not begun for fewer rows. */
 const LEAST_ROWS = 3;
 /** Items of a list that are laid out at once: looking for what fits takes time with the square of them. */
 const ITEMS_AT_ONCE = 40;
 
-/** As `putParted`, for tables of any length: no more rows than a page may hold are tried on it. */
+/** As `putParted`, for tables of any length: every row is measured once, and no more of them are tried on a page than it may hold. */
 function putRows(pages: Filling, table: Parted, part: string): void {
+  const { groups } = table;
+  const heads = table.block([], false).heightMm;
+  const heights = groups.map((group) => table.block([group], false).heightMm - heads);
   let from = 0;
-  while (from < table.groups.length) {
-    const room = Math.floor((pages.left - HEADS_MM) / ROW_MM);
-    if (room < Math.min(LEAST_ROWS, table.groups.length - from)) {
+  while (from < groups.length) {
+    let to = from;
+    for (let left = pages.left - heads; to < groups.length && left >= heights[to]!; to++) left -= heights[to]!;
+    if (to - from < Math.min(LEAST_ROWS, groups.length - from) && pages.bodies.at(-1)!.blocks.length > 0) {
       pages.page(part);
       continue;
     }
     const begun = from;
-    const groups = table.groups.slice(begun, begun + room);
-    pages.putParted({ groups, block: (some, more) => table.block(some, more || begun > 0) }, part);
-    from += groups.length;
+    to = Math.max(to, from + 1);
+    const some = groups.slice(begun, to);
+    pages.putParted({ groups: some, block: (rows, more) => table.block(rows, more || begun > 0) }, part);
+    from = to;
   }
 }
 
@@ -49,7 +51,8 @@ function fill(record: ProofRecord, widthMm: number, heightMm: number, measure: M
   putRows(pages, blocks.tallies(record, widthMm, measure), summary);
   pages.put(blocks.inputText(record, widthMm, measure), summary);
   for (const kind of record.kinds) putItems(pages, blocks.systematic(kind, widthMm, measure), summary);
-  putItems(pages, blocks.failing(record, widthMm, measure), summary);
+  putRows(pages, blocks.failing(record, widthMm, measure), summary);
+  pages.put(blocks.failingHow(record, widthMm, measure), summary);
   putItems(pages, blocks.again(record, widthMm, measure), summary);
   for (const kind of record.kinds)
     for (const table of blocks.marks(kind, widthMm, measure)) putRows(pages, table, marks);

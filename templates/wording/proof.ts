@@ -13,8 +13,26 @@ export const JUDGED = {
 const turnsText = (turns: number) => `${Number(turns.toFixed(2))} turn${turns === 1 ? '' : 's'}`;
 const where = (tap: number, last: number) => (tap === last ? 'the whole coil' : `tap ${tap}`);
 
+/** `tap 2`; `taps 1, 3 to 6 and the whole coil`. */
+function several(taps: readonly number[], last: number): string {
+  const runs: [number, number][] = [];
+  for (const tap of taps) {
+    const run = runs.at(-1);
+    if (tap === last) continue;
+    if (run !== undefined && run[1] === tap - 1) run[1] = tap;
+    else runs.push([tap, tap]);
+  }
+  const parts = runs.flatMap(([from, to]) =>
+    to - from < 2 ? (from === to ? [`${from}`] : [`${from}`, `${to}`]) : [`${from} to ${to}`],
+  );
+  const single = parts.length === 1 && !parts[0]!.includes(' ');
+  const named = parts.length === 0 ? [] : [`${single ? 'tap' : 'taps'} ${parts.join(', ')}`];
+  return [...named, ...(taps.includes(last) ? ['the whole coil'] : [])].join(' and ');
+}
+
 export const RESCUE = {
   where,
+  several,
   cause: {
     counted: (tap: number, off: number) =>
       `By the count ${turnsText(Math.abs(off))} ${off < 0 ? 'too few' : 'too many'} up to tap ${tap}.`,
@@ -99,18 +117,23 @@ export const PROOF = {
     none: 'no serial',
   },
   failing: {
-    heading: 'Coils that fail, and what to do',
+    head: { heading: 'Coils that fail, and what to do', more: 'Coils that fail, continued' },
     none: 'No coil fails.',
-    can: { yes: 'can be saved', partly: 'can be saved in part', no: 'cannot be saved' },
-    coil: (serial: string, can: string) => `${serial}: ${can}.`,
-    out: (taps: string) => `Outside stay: ${taps}.`,
-    expected: (figures: string) => `Then expected: ${figures}.`,
-    do: (actions: string) => `To do: ${actions}.`,
+    serial: 'serial',
+    saved: 'saved',
+    outside: 'outside its limits',
+    looks: 'looks like',
+    toDo: 'what to do',
+    can: { yes: 'yes', partly: 'in part', no: 'no' },
+    one: (tap: string, percent: string) => `${tap}, ${percent} %`,
+    far: (taps: string, percent: string, tap: number) => `${taps}; farthest ${percent} % at ${tap}`,
+    reading: (what: string, value: string, low: string, high: string) => `${what} ${value} (${low} to ${high})`,
     more: (count: number) => `and ${count} more`,
+    out: (taps: string) => `Outside stay ${taps}.`,
+    expected: (figures: string) => `Then ${figures}.`,
     tap: (tap: string, before: string, after: string) => `${tap} ${before} to ${after} %`,
-    readings: (list: string) => `Outside: ${list}.`,
-    reading: (what: string, value: string, low: string, high: string, line: number) =>
-      `${what} ${value} (limits ${low} to ${high}, line ${line})`,
+    figures:
+      'Percent: of the inductance, against what the meter or the capacitor should show; every reading with its limits and its line stands in proof.json.',
   },
   again: {
     heading: 'To be read again',
@@ -137,7 +160,8 @@ export const PROOF = {
     heading: (job: string) => `What the coils have in common: ${job}`,
     left: (serial: string, text: string) => `${serial} left out: ${text}`,
     few: 'Too little was read to tell what the coils have in common.',
-    next: (path: string) => `The job for the next lot, centred by this: ${path}.`,
+    next: (path: string, changes: string) => `The job for the next lot, centred by this: ${path}, with ${changes}.`,
+    none: (why: string) => `No job for the next lot: ${why}`,
   },
   remarks: {
     heading: 'Remarks',

@@ -29,7 +29,7 @@ const WRONG: readonly (readonly [readonly string[], string])[] = [
     [],
     `coilwright: not a command
   got       no verb
-  expected  one of: start, plan, survey, match, lot, stock
+  expected  one of: start, plan, survey, match, lot, prove, stock
   to do     see: coilwright --help
 `,
   ],
@@ -37,7 +37,7 @@ const WRONG: readonly (readonly [readonly string[], string])[] = [
     ['pln', 'job.yaml'],
     `coilwright: not a command
   got       the verb "pln"
-  expected  one of: start, plan, survey, match, lot, stock
+  expected  one of: start, plan, survey, match, lot, prove, stock
   to do     did you mean plan?
 `,
   ],
@@ -45,7 +45,7 @@ const WRONG: readonly (readonly [readonly string[], string])[] = [
     ['wind'],
     `coilwright: not a command
   got       the verb "wind"
-  expected  one of: start, plan, survey, match, lot, stock
+  expected  one of: start, plan, survey, match, lot, prove, stock
   to do     see: coilwright --help
 `,
   ],
