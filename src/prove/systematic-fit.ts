@@ -36,11 +36,17 @@ const ROUNDS = 3;
 export const foundOf = ({ columns, fit }: Pick<KindFit, 'columns' | 'fit'>, name: Column['name']): number =>
   fit.x[columns.findIndex((column) => column.name === name)] ?? 0;
 
-const shapeOf = (found: KindFit): Shape => ({
-  diameterMm: foundOf(found, 'diameter'),
-  pitch: foundOf(found, 'pitch'),
-  gaps: foundOf(found, 'gaps'),
-});
+/** Steps of the shapes that columns are taken about: near enough to what is found, and the same coils serve again. */
+const GRID: Shape = { diameterMm: 0.1, pitch: 2e-3, gaps: 0.1 };
+
+const shapeOf = (found: KindFit): Shape => {
+  const near = (name: Column['name'], step: number) => Math.round(foundOf(found, name) / step) * step;
+  return {
+    diameterMm: near('diameter', GRID.diameterMm),
+    pitch: near('pitch', GRID.pitch),
+    gaps: near('gaps', GRID.gaps),
+  };
+};
 
 /** Where an unknown stands in the shape that columns are taken about; all but those of the shape count from 0. */
 const originOf = (about: Shape, { name }: Column): number =>

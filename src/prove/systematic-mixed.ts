@@ -56,7 +56,7 @@ export interface MixedFit {
 export const WEIGHT = 3;
 const ROUNDS = 120;
 /** Rounds end when no standard deviation moves by more than this part. */
-const STILL = 1e-3;
+const STILL = 3e-3;
 
 interface Pattern {
   readonly rows: readonly number[];

@@ -56,6 +56,7 @@ export class KindModel {
   readonly taps: readonly Tap[];
   readonly #slots = new Map<string, Slot | null>();
   readonly #shapes = new Map<string, Coil>();
+  readonly #perTurn = new Map<number, number>();
   readonly #measuring = new Map<string, Measuring>();
   readonly #nominal: ReadonlyMap<string, number>;
 
@@ -98,8 +99,12 @@ export class KindModel {
 
   /** ln L a turn at a tap. */
   perTurn({ turn }: Slot): number {
+    const known = this.#perTurn.get(turn);
+    if (known !== undefined) return known;
     const back = Math.min(0.5, turn / 2);
-    return Math.log(this.coil.inductanceUh(turn) / this.coil.inductanceUh(turn - back)) / back;
+    const per = Math.log(this.coil.inductanceUh(turn) / this.coil.inductanceUh(turn - back)) / back;
+    this.#perTurn.set(turn, per);
+    return per;
   }
 
   /** What a reading is one of; null for what is not fitted, and where the meter is not to be trusted. */

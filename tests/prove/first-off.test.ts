@@ -113,10 +113,10 @@ describe('the job for the next coil', () => {
           expect(same).toEqual(was);
         },
       ),
-      { numRuns: 120, seed: 11 },
+      { numRuns: 60, seed: 11 },
     );
     console.log(`first-off: jobs read back ${tried}`);
-    expect(tried).toBeGreaterThan(60);
+    expect(tried).toBeGreaterThan(40);
   });
 
   it('is read from the keys of every starter', () => {
