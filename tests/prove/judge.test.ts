@@ -69,7 +69,7 @@ describe('a coil', () => {
       [...GOOD, { ...BLANK, quantity: 'turns' as const, tap: 2, value: RECORD.windings[0]!.taps[1]!.turn + 1 }],
       'fail pass fail pass',
     ],
-  ])('%s: %s', (_what, readings, expected) => {
+  ])('%s', (_what, readings, expected) => {
     expect(states(readings)).toBe(expected);
   });
 

@@ -4,6 +4,7 @@ import { describe, expect, it } from 'vitest';
 import { judge, questionsOf } from '../../src/bench/judge.ts';
 import { rowOf, toCsv } from '../../src/bench/readings-csv.ts';
 import { Fault } from '../../src/fault.ts';
+import { readingsSheet } from '../../src/lot/readings-sheet.ts';
 import type { LotRecord } from '../../src/lot/schema.ts';
 import { type ReadOptions, readReadings } from '../../src/prove/read.ts';
 import type { ReadingsFile } from '../../src/prove/types.ts';
@@ -199,6 +200,32 @@ ${RECORD.hash};X9;1;20`,
       '8 other-kind left out',
       '9 foreign-serial kept',
     ]);
+  });
+
+  it('takes the readings sheet of a lot once it is filled in, and tells when it is not', () => {
+    const kinds = new Map([
+      ['A', RECORD],
+      ['B', OTHER],
+    ]);
+    const blank = readingsSheet(LOT, kinds);
+    expect(faultOf(() => read(blank, TWO, { lots: [LOT] })).faults[0]!.code).toBe('no-readings');
+    const [head, ...lines] = blank.trim().split('\r\n');
+    const value = head!.split(',').indexOf('value');
+    const filled = lines.map((line) => {
+      const cells = line.split(',');
+      const [low, high] = [cells[value + 2]!, cells[value + 3]!];
+      return cells.with(value, low === '' ? '' : `${(Number(low) + Number(high)) / 2}`).join(',');
+    });
+    const file = read([head, ...filled].join('\r\n'), TWO, { lots: [LOT] });
+    const asked = [RECORD, RECORD, OTHER].reduce((sum, record) => sum + questionsOf(record).length, 0);
+    expect(file.notes).toEqual([]);
+    expect(file.count).toMatchObject({ figures: asked, readings: asked - file.count.missing, leftOut: 0 });
+    expect(file.kinds.map(({ coils }) => coils.map(({ serial }) => serial))).toEqual([
+      ['KR-0001', 'KR-0002'],
+      ['KR-0003'],
+    ]);
+    console.log(`readings sheet: ${file.count.readings} of ${asked} rows filled in`);
+    expect(file.count.readings).toBeGreaterThan(40);
   });
 
   it('names records that are not there, whose they are, and where it looked', () => {
