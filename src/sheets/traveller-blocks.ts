@@ -119,25 +119,20 @@ const SIGN_MM = 9;
 
 /** Who wound and who checks, with signature and date; the name of who checks where the lot says it. */
 export function signatures(checkedBy: string | null, widthMm: number, measure: Measure): Block {
-  const starts = [0, 0.5 * widthMm, 0.8 * widthMm];
-  const rows = [
-    [RESULT.wound, null],
-    [RESULT.checked, checkedBy],
-  ] as const;
-  const shapes: Shape[] = [rectangle(0, -2 * SIGN_MM, widthMm, 2 * SIGN_MM, 'outline')];
-  shapes.push(line(0, -SIGN_MM, widthMm, -SIGN_MM, 'thin'));
-  for (const x of starts.slice(1)) shapes.push(line(x, 0, x, -2 * SIGN_MM, 'thin'));
-  rows.forEach(([who, name], i) => {
-    const y = -i * SIGN_MM;
-    shapes.push(label(2, y - 3.6, who));
-    shapes.push(label(starts[1]! + 2, y - 3.6, RESULT.signature), label(starts[2]! + 2, y - 3.6, RESULT.date));
-    if (name === null) return;
-    const indent = measure.width(RESULT.checked, SMALL_MM) + 5;
-    const room = starts[1]! - indent - 2;
-    const told = nameIn(name, room, measure);
-    shapes.push(...movedAll(told, indent, y - (SIGN_MM - told.heightMm) / 2));
+  const starts = [0, 0.5 * widthMm, 0.8 * widthMm] as const;
+  const indent = measure.width(RESULT.checked, SMALL_MM) + 5;
+  const name = checkedBy === null ? null : nameIn(checkedBy, starts[1] - indent - 2, measure);
+  const heights = [SIGN_MM, Math.max(SIGN_MM, (name?.heightMm ?? 0) + 1.6)] as const;
+  const heightMm = heights[0] + heights[1];
+  const shapes: Shape[] = [rectangle(0, -heightMm, widthMm, heightMm, 'outline')];
+  shapes.push(line(0, -heights[0], widthMm, -heights[0], 'thin'));
+  for (const x of starts.slice(1)) shapes.push(line(x, 0, x, -heightMm, 'thin'));
+  [RESULT.wound, RESULT.checked].forEach((who, i) => {
+    const y = (i === 0 ? 0 : -heights[0]) - 3.6;
+    shapes.push(label(2, y, who), label(starts[1] + 2, y, RESULT.signature), label(starts[2] + 2, y, RESULT.date));
   });
-  return { widthMm, heightMm: 2 * SIGN_MM, shapes };
+  if (name) shapes.push(...movedAll(name, indent, -heights[0] - (heights[1] - name.heightMm) / 2));
+  return { widthMm, heightMm, shapes };
 }
 
 /** In the type of the body where one line or two take it, else smaller. */

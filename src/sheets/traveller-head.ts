@@ -97,13 +97,16 @@ interface Cell {
 
 const REEL = 1;
 /** Of the cells of the strip. */
-const SHARES = [32, 24, 29, 31, 32, 39];
+const SHARES = [32, 24, 29, 31, 32, 39] as const;
+const VALUE_MM = 3.4;
+/** Lines of a reel's name in its cell; with more it has a row of its own. */
+const REEL_LINES = 2;
 
 function cellBlock({ name, value, more }: Cell, widthMm: number, measure: Measure): Block {
   const inner = widthMm - 3;
   const parts = [
     paragraph(name, inner, measure, { sizeMm: SMALL_MM }),
-    paragraph(value, inner, measure, { sizeMm: 3.4, bold: true }),
+    paragraph(value, inner, measure, { sizeMm: VALUE_MM, bold: true }),
     paragraph(more, inner, measure, { sizeMm: SMALL_MM }),
   ];
   return { ...stack(parts, 0.4), widthMm };
@@ -153,6 +156,15 @@ export interface Strip {
   readonly reels: ReadonlyMap<string | null, readonly Shape[]>;
 }
 
+/** A long name of a reel, in a row over the whole width. */
+function reelRow(spool: string | null, widthMm: number, measure: Measure): Block {
+  const { name, value, more } = reelCell(spool);
+  const indent = measure.width(name, SMALL_MM) + 3;
+  const told = paragraph(`${value}; ${more}`, widthMm - 3 - indent, measure, { sizeMm: SMALL_MM, bold: true });
+  const named = paragraph(name, indent, measure, { sizeMm: SMALL_MM });
+  return { widthMm, heightMm: told.heightMm, shapes: [...named.shapes, ...movedAll(told, indent, 0)] };
+}
+
 export function kindStrip(
   kind: LotKind,
   record: CoilRecord,
@@ -160,22 +172,36 @@ export function kindStrip(
   widthMm: number,
   measure: Measure,
 ): Strip {
-  const widths = shares(widthMm, SHARES);
+  const all = [...spools];
+  const reelWidth = shares(widthMm, SHARES)[REEL]!;
+  const isLong = all.some((spool) => {
+    const value = paragraph(reelCell(spool).value, reelWidth - 3, measure, { sizeMm: VALUE_MM, bold: true });
+    return value.shapes.length > REEL_LINES;
+  });
+  const widths = shares(widthMm, isLong ? SHARES.toSpliced(REEL, 1) : SHARES);
   const starts = widths.map((_, i) => widths.slice(0, i).reduce((sum, width) => sum + width, 0));
   const cells: (Cell | null)[] = kindCells(kind, record);
-  cells.splice(REEL, 0, null);
+  if (!isLong) cells.splice(REEL, 0, null);
   const blocks = cells.map((cell, i) => cell && cellBlock(cell, widths[i]!, measure));
-  const reels = new Map([...spools].map((spool) => [spool, cellBlock(reelCell(spool), widths[REEL]!, measure)]));
-  const heights = [...blocks, ...reels.values()].map((block) => block?.heightMm ?? 0);
-  const heightMm = Math.max(...heights) + 2;
-  const place = (block: Block, i: number) => movedAll(block, starts[i]! + 1.5, -1.2);
+  const reels = new Map(
+    all.map((spool) => [
+      spool,
+      isLong ? reelRow(spool, widthMm, measure) : cellBlock(reelCell(spool), reelWidth, measure),
+    ]),
+  );
+  const most = (some: Iterable<Block | null>) => Math.max(0, ...[...some].map((block) => block?.heightMm ?? 0));
+  const cellsMm = Math.max(most(blocks), isLong ? 0 : most(reels.values())) + 2;
+  const heightMm = cellsMm + (isLong ? most(reels.values()) + 2 : 0);
   const shapes: Shape[] = [
     rectangle(0, -heightMm, widthMm, heightMm, 'thin'),
-    ...starts.slice(1).map((x) => line(x, 0, x, -heightMm, 'hair')),
-    ...blocks.flatMap((block, i) => (block ? place(block, i) : [])),
+    ...starts.slice(1).map((x) => line(x, 0, x, -cellsMm, 'hair')),
+    ...(isLong ? [line(0, -cellsMm, widthMm, -cellsMm, 'hair')] : []),
+    ...blocks.flatMap((block, i) => (block ? movedAll(block, starts[i]! + 1.5, -1.2) : [])),
   ];
+  const placed = (block: Block) =>
+    isLong ? movedAll(block, 1.5, -cellsMm - 1.2) : movedAll(block, starts[REEL]! + 1.5, -1.2);
   return {
     block: { widthMm, heightMm, shapes },
-    reels: new Map([...reels].map(([spool, block]) => [spool, place(block, REEL)])),
+    reels: new Map([...reels].map(([spool, block]) => [spool, placed(block)])),
   };
 }

@@ -34,6 +34,8 @@ export interface KindPages {
 
 const GAP_MM = 2.6;
 const COLUMN_GAP_MM = 6;
+/** Of the width, where the readings stand beside the result. */
+const READINGS_SHARE = 0.56;
 /** Lines for remarks: as many at least, and no more. */
 const LINES = { least: 2, most: 14 } as const;
 
@@ -74,12 +76,11 @@ interface Around {
   readonly measure: Measure;
 }
 
-/** Two columns of which either may be empty. */
-function columns(left: Block | null, right: Block | null, widthMm: number): Block[] {
-  const column = (widthMm - COLUMN_GAP_MM) / 2;
+/** Two columns of which either may be empty, and how wide the left one is. */
+function columns(left: Block | null, right: Block | null, leftMm: number): Block[] {
   if (left === null && right === null) return [];
-  const blank: Block = { widthMm: column, heightMm: 0, shapes: [] };
-  return [beside([{ ...(left ?? blank), widthMm: column }, right ?? blank], COLUMN_GAP_MM)];
+  const blank: Block = { widthMm: leftMm, heightMm: 0, shapes: [] };
+  return [beside([{ ...(left ?? blank), widthMm: leftMm }, right ?? blank], COLUMN_GAP_MM)];
 }
 
 /** Steps and readings over the table; nothing where room is short. */
@@ -88,7 +89,7 @@ function above({ record, widthMm, measure }: Around, setting: Setting): Block[] 
   if (words === 'sheet') return [];
   const column = (widthMm - COLUMN_GAP_MM) / 2;
   const readings = otherReadings(record, Math.min(rowMm, 7), sizeMm, column, measure);
-  return columns(steps(record, 'before', { words, sizeMm }, column, measure), readings, widthMm);
+  return columns(steps(record, 'before', { words, sizeMm }, column, measure), readings, column);
 }
 
 /**
@@ -97,17 +98,18 @@ function above({ record, widthMm, measure }: Around, setting: Setting): Block[] 
  */
 function below({ record, widthMm, measure }: Around, setting: Setting, freeMm: number): Block[] | null {
   const { words, rowMm, sizeMm } = setting;
-  const column = (widthMm - COLUMN_GAP_MM) / 2;
   const short = words === 'sheet';
+  const leftMm = (widthMm - COLUMN_GAP_MM) * (short ? READINGS_SHARE : 0.5);
+  const rightMm = widthMm - COLUMN_GAP_MM - leftMm;
   const left = short
-    ? otherReadings(record, rowMm, sizeMm, column, measure)
-    : steps(record, 'after', { words, sizeMm }, column, measure);
-  const over = short ? stepsElsewhere(record, column, measure) : null;
+    ? otherReadings(record, rowMm, sizeMm, leftMm, measure)
+    : steps(record, 'after', { words, sizeMm }, leftMm, measure);
+  const over = short ? stepsElsewhere(record, rightMm, measure) : null;
   const overMm = over === null ? 0 : over.heightMm + GAP_MM;
-  const bare = result(0, column, measure).heightMm;
+  const bare = result(0, rightMm, measure).heightMm;
   const lines = Math.min(LINES.most, Math.floor((freeMm - overMm - bare) / LINE_MM));
   if (lines < LINES.least || (left?.heightMm ?? 0) > freeMm) return null;
-  return columns(left, stack([...(over ? [over] : []), result(lines, column, measure)], GAP_MM), widthMm);
+  return columns(left, stack([...(over ? [over] : []), result(lines, rightMm, measure)], GAP_MM), leftMm);
 }
 
 interface Room {
@@ -121,13 +123,24 @@ function onOnePage(around: Around, strip: Block, room: Room): Block[][] | null {
   const { record, widthMm, measure } = around;
   const rows = travellerRows(record);
   const foot = signatures(around.checkedBy, widthMm, measure);
-  for (const setting of SETTINGS) {
+  const set = (setting: Setting): Block[][] | null => {
     const table = travellerTable(record, rows, [0, rows.length], setting, widthMm, measure);
     const before = [strip, ...above(around, setting), table];
     const under = below(around, setting, room.firstMm - height(before) - foot.heightMm - 2 * GAP_MM);
-    if (under) return [[...before, ...under, foot]];
+    return under && [[...before, ...under, foot]];
+  };
+  // Each is set more closely than the one before: the widest that fits is found by halving.
+  let fits = SETTINGS.length - 1;
+  let found = set(SETTINGS[fits]!);
+  if (found === null) return null;
+  let tooWide = -1;
+  while (fits - tooWide > 1) {
+    const middle = (fits + tooWide) >> 1;
+    const tried = set(SETTINGS[middle]!);
+    if (tried) [fits, found] = [middle, tried];
+    else tooWide = middle;
   }
-  return null;
+  return found;
 }
 
 const LONG: Setting = { words: 'first', rowMm: 6.6, sizeMm: SMALL_MM };
