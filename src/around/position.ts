@@ -31,6 +31,8 @@ export interface Position {
   readonly network: Network;
   /** Node where the set is connected. */
   readonly hot: number;
+  /** Node of the start; `EARTH` where that is the earthed end. */
+  readonly start: number;
   /** Node of every tap, the whole coil last; `EARTH` of one that is earthed. */
   readonly taps: readonly number[];
   /** Node of the free end of the second winding, whose other end is earthed; null without one. */
@@ -96,6 +98,7 @@ export function positionNetwork(coil: WorkingCoil, turn: number, kHz: number, op
       conductances,
     },
     hot: number(hot),
+    start: number(nodeIn(index, 0)),
     taps: coil.taps.map((tap) => number(nodeIn(index, place(tap)))),
     second: free === null ? null : number(free),
   };

@@ -26,8 +26,8 @@ export interface Load {
   readonly capacitance: number;
 }
 
-/** Where aerial and detector are connected: a tap, counted from 1, or the second winding. */
-export type Contact = number | 'second';
+/** Where aerial and detector are connected: a tap, counted from 1; 0, the start of a coil whose finish is earthed; the second winding; whichever end is hot. */
+export type Contact = number | 'second' | 'hot';
 
 export interface Connected {
   readonly aerial: { readonly at: Contact; readonly source: SourceImpedance } | null;
@@ -48,9 +48,9 @@ export class Ports {
   }
 
   /** Its place among the ports; null of a contact that lies on earth, or is not there. */
-  at(contact: Contact | 'hot'): number | null {
-    const { hot, taps, second } = this.#position;
-    const node = contact === 'hot' ? hot : contact === 'second' ? second : taps[contact - 1];
+  at(contact: Contact): number | null {
+    const { hot, start, taps, second } = this.#position;
+    const node = contact === 'hot' ? hot : contact === 'second' ? second : contact === 0 ? start : taps[contact - 1];
     const place = node === null || node === undefined ? -1 : this.#nodes.indexOf(node);
     return place < 0 ? null : place;
   }
@@ -175,6 +175,19 @@ export function tunedTo(ports: Ports, connected: Connected, kHz: number): TunedT
     hotGain: sizeOf(found.hot),
     power: gain ** 2 * connected.detector.load.conductance,
   };
+}
+
+/** Capacitance at the hot end that tunes a position to a frequency, pF, as in `tunedTo`, and nothing else. Null where a contact is on earth. */
+export function tuningFor(ports: Ports, connected: Connected, kHz: number): number | null {
+  const omega = 2e3 * Math.PI * kHz;
+  const at = voltagesAt(ports, connected, omega, 0);
+  return at === null ? null : (-inverseOf(at.atHot).im / omega) * 1e12;
+}
+
+/** Volts at the detector per volt of the aerial's source with this capacitance at the hot end, pF; 0 where a contact is on earth. */
+export function gainAt(ports: Ports, connected: Connected, kHz: number, tuningPf: number): number {
+  const at = voltagesAt(ports, connected, 2e3 * Math.PI * kHz, tuningPf * 1e-12);
+  return at === null ? 0 : sizeOf(at.detector);
 }
 
 /** Voltage at the detector this far off, with the tuning as it is, over that on frequency; the stronger of the two sides. */

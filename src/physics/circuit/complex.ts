@@ -37,26 +37,25 @@ export const sizeOf = ({ re, im }: Complex): number => Math.hypot(re, im);
  */
 export function inverseMatrix(matrix: ComplexMatrix): ComplexMatrix {
   const { size } = matrix;
-  const [ar, ai] = [matrix.re.slice(), matrix.im.slice()];
-  const out = zeroMatrix(size);
-  for (let i = 0; i < size; i++) out.re[i * size + i] = 1;
+  // In place: each column, once cleared, takes that of the inverse. Rows that changed places are columns that do in the end.
+  const [re, im] = [matrix.re.slice(), matrix.im.slice()];
+  const swapped = new Int32Array(size);
   for (let column = 0; column < size; column++) {
-    const pivot = pivotOf(ar, ai, size, column);
-    swapRows(ar, ai, size, pivot, column);
-    swapRows(out.re, out.im, size, pivot, column);
-    const at = column * size + column;
-    const scale = inverseOf({ re: ar[at]!, im: ai[at]! });
-    scaleRow(ar, ai, size, column, scale);
-    scaleRow(out.re, out.im, size, column, scale);
-    for (let row = 0; row < size; row++) {
-      if (row === column) continue;
-      const factor = { re: ar[row * size + column]!, im: ai[row * size + column]! };
-      if (factor.re === 0 && factor.im === 0) continue;
-      takeRow(ar, ai, size, row, column, factor);
-      takeRow(out.re, out.im, size, row, column, factor);
+    const pivot = pivotOf(re, im, size, column);
+    swapped[column] = pivot;
+    if (pivot !== column) {
+      swapRows(re, size, pivot, column);
+      swapRows(im, size, pivot, column);
     }
+    clearColumn(re, im, size, column);
   }
-  return out;
+  for (let column = size - 1; column >= 0; column--) {
+    const other = swapped[column]!;
+    if (other === column) continue;
+    swapColumns(re, size, other, column);
+    swapColumns(im, size, other, column);
+  }
+  return { size, re, im };
 }
 
 function pivotOf(re: Float64Array, im: Float64Array, size: number, column: number): number {
@@ -64,36 +63,57 @@ function pivotOf(re: Float64Array, im: Float64Array, size: number, column: numbe
   let most = 0;
   for (let row = column; row < size; row++) {
     const at = row * size + column;
-    const square = re[at]! ** 2 + im[at]! ** 2;
-    if (square > most) [best, most] = [row, square];
+    const square = re[at]! * re[at]! + im[at]! * im[at]!;
+    if (square > most) {
+      best = row;
+      most = square;
+    }
   }
   if (!(most > 0 && most < Number.POSITIVE_INFINITY)) throw new RangeError('a matrix without an inverse');
   return best;
 }
 
-function swapRows(re: Float64Array, im: Float64Array, size: number, a: number, b: number): void {
-  if (a === b) return;
-  for (const part of [re, im]) {
-    const kept = part.slice(a * size, (a + 1) * size);
-    part.copyWithin(a * size, b * size, (b + 1) * size);
-    part.set(kept, b * size);
-  }
-}
-
-function scaleRow(re: Float64Array, im: Float64Array, size: number, row: number, by: Complex): void {
-  for (let at = row * size; at < (row + 1) * size; at++) {
-    const [r, i] = [re[at]!, im[at]!];
-    re[at] = r * by.re - i * by.im;
-    im[at] = r * by.im + i * by.re;
-  }
-}
-
-/** row -= factor * other */
-function takeRow(re: Float64Array, im: Float64Array, size: number, row: number, other: number, by: Complex): void {
+function swapRows(part: Float64Array, size: number, a: number, b: number): void {
   for (let k = 0; k < size; k++) {
-    const from = other * size + k;
-    const at = row * size + k;
-    re[at]! -= by.re * re[from]! - by.im * im[from]!;
-    im[at]! -= by.re * im[from]! + by.im * re[from]!;
+    const kept = part[a * size + k]!;
+    part[a * size + k] = part[b * size + k]!;
+    part[b * size + k] = kept;
+  }
+}
+
+function swapColumns(part: Float64Array, size: number, a: number, b: number): void {
+  for (let k = 0; k < size; k++) {
+    const kept = part[k * size + a]!;
+    part[k * size + a] = part[k * size + b]!;
+    part[k * size + b] = kept;
+  }
+}
+
+/** One step of Gauss and Jordan about the element (column, column). */
+function clearColumn(re: Float64Array, im: Float64Array, size: number, column: number): void {
+  const own = column * size;
+  const [pr, pi] = [re[own + column]!, im[own + column]!];
+  const square = pr * pr + pi * pi;
+  const [sr, si] = [pr / square, -pi / square];
+  re[own + column] = 1;
+  im[own + column] = 0;
+  for (let k = own; k < own + size; k++) {
+    const [r, i] = [re[k]!, im[k]!];
+    re[k] = r * sr - i * si;
+    im[k] = r * si + i * sr;
+  }
+  for (let row = 0; row < size; row++) {
+    const from = row * size;
+    const fr = re[from + column]!;
+    const fi = im[from + column]!;
+    if (row === column || (fr === 0 && fi === 0)) continue;
+    re[from + column] = 0;
+    im[from + column] = 0;
+    for (let k = 0; k < size; k++) {
+      const r = re[own + k]!;
+      const i = im[own + k]!;
+      re[from + k]! -= fr * r - fi * i;
+      im[from + k]! -= fr * i + fi * r;
+    }
   }
 }
