@@ -1,6 +1,8 @@
 /** What must hold between keys of a job. Each check names both values. */
 import { lengthText, percentText } from '../quantity/format.ts';
 import { findMaterial } from '../stock/materials.ts';
+import { checkAerial } from './around/aerial.ts';
+import { checkSecond } from './around/second.ts';
 import type { Values } from './field.ts';
 import { type Finding, finding } from './finding.ts';
 import type { ReadJob } from './schema.ts';
@@ -19,6 +21,8 @@ export function crossCheck(job: Readable): readonly Finding[] {
     ...checkPrinter(job),
     ...checkParts(job),
     ...checkAsMade(job),
+    ...checkSecond(job),
+    ...checkAerial(job),
   ];
 }
 

@@ -4,7 +4,9 @@
  */
 
 import { parseQuantity } from '../quantity/parse.ts';
+import { isRange } from '../quantity/range.ts';
 import { findMaterial } from '../stock/materials.ts';
+import { aroundDefaults } from './around/aerial-defaults.ts';
 
 export const DEFAULTS = {
   paper: 'A4',
@@ -37,6 +39,11 @@ export const DEFAULTS = {
   'shop.capacitor-tolerance': '1 %',
   'as-made.diameter': '0 mm',
   'as-made.pitch': '0 %',
+  'second.pitch': 'close',
+  'aerial.kind': 'dummy',
+  'aerial.to': 'best',
+  'detector.kind': 'galena crystal',
+  'detector.to': 'best',
   units: 'metric',
 } as const;
 
@@ -57,7 +64,7 @@ const SECTIONS = ['former', 'winding', 'printer', 'shop'] as const;
 export function complete(written: unknown): Completed {
   if (!isData(written)) return { data: written, assumed: {} };
   const data: Data = { ...written };
-  for (const section of [...SECTIONS, 'want', 'set', 'as-made'] as const) {
+  for (const section of [...SECTIONS, 'want', 'set', 'as-made', 'second', 'aerial', 'detector'] as const) {
     if (isData(data[section])) data[section] = { ...data[section] };
     // A heading whose lines are all commented out is a section left out.
     else if (data[section] === null) delete data[section];
@@ -85,6 +92,8 @@ function dependent(data: Data): Record<string, Assumed[string] | undefined> {
     'former.material': printed ? printMaterial(at(data, 'printer', 'material')) : 'card',
     'former.mounting': printed ? 'ears' : 'none',
     'former.flanges': printed,
+    'second.end': secondEnd(data),
+    ...aroundDefaults(isData(data.aerial) ? data.aerial : {}, isData(data.detector) ? data.detector : {}),
     'shop.capacitors': ['100 pF', '330 pF'],
     'former.body': printed ? 'full' : undefined,
     'former.ribs': printed && at(data, 'former', 'body') === 'ribbed' ? 12 : undefined,
@@ -92,6 +101,14 @@ function dependent(data: Data): Record<string, Assumed[string] | undefined> {
     'printer.line': nozzle === null ? '0.45 mm' : `${Number((nozzle * 1.125).toFixed(3))} mm`,
     'printer.layer': nozzle === null ? '0.2 mm' : `${Number((nozzle / 2).toFixed(3))} mm`,
   };
+}
+
+/** What slides, or stands beside, does so at the upper end: below is the foot. */
+function secondEnd(data: Data): string {
+  const coupling = at(data, 'second', 'coupling');
+  if (at(data, 'second', 'kind') === 'beside') return 'finish';
+  if (typeof coupling === 'string' && isRange(coupling)) return 'finish';
+  return at(data, 'winding', 'earthed') === 'finish' ? 'finish' : 'start';
 }
 
 /** The material of jigs serves for the former too; one that cannot be printed is reported where it was written. */

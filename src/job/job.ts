@@ -1,5 +1,7 @@
 /** A job as the planner takes it: plain data, complete, checked, in the units that the names end in. */
 import type { Wire } from '../stock/wire.ts';
+import type { JobAerial, JobDetector } from './around/aerial.ts';
+import type { JobSecond } from './around/second.ts';
 import type {
   BODIES,
   MOUNTINGS,
@@ -135,6 +137,10 @@ export interface Job {
   readonly former: JobFormer;
   readonly wires: readonly Wire[] | 'stock';
   readonly winding: JobWinding;
+  /** Null: none. */
+  readonly second: JobSecond | null;
+  readonly aerial: JobAerial | null;
+  readonly detector: JobDetector | null;
   readonly prefer: Preference;
   /** Frequency for the loss estimate when there is no set; null when not given. */
   readonly atKhz: number | null;

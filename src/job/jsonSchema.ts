@@ -16,6 +16,7 @@ export function jobJsonSchema(): Record<string, unknown> {
     ...Object.keys(DEFAULTS),
     ...['former', 'winding', 'printer', 'shop', 'shop.capacitors'],
     ...['outside-diameter', 'longest', 'material', 'mounting', 'flanges'].map((key) => `former.${key}`),
+    'second.end',
     ...['line', 'layer'].map((key) => `printer.${key}`),
   ]);
   relax(schema, '', filled);

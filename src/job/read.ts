@@ -5,6 +5,8 @@
 import { Fault, type FaultParts } from '../fault.ts';
 import type { FoundWire } from '../stock/find.ts';
 import type { Wire } from '../stock/wire.ts';
+import { toAerial, toDetector } from './around/aerial.ts';
+import { toSecond } from './around/second.ts';
 import { crossCheck, type Readable } from './checks.ts';
 import { type Assumed, complete, isData } from './defaults.ts';
 import { faultsOf, keyText } from './faults.ts';
@@ -97,6 +99,9 @@ export function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string)
       units: winding.units ?? null,
       finishTrim: winding['finish-trim'],
     },
+    second: toSecond(read.second),
+    aerial: toAerial(read.aerial),
+    detector: toDetector(read.detector),
     prefer: read.prefer,
     atKhz: read.at ?? null,
     celsius: read.temperature,

@@ -5,8 +5,9 @@
  */
 import * as z from 'zod';
 import type { Parsed } from '../quantity/parse.ts';
-import { type FoundWire, findWire } from '../stock/find.ts';
 import { findMaterial } from '../stock/materials.ts';
+import { aerialSchema, detectorSchema } from './around/aerial-schema.ts';
+import { secondSchema } from './around/second-schema.ts';
 import {
   choice,
   choiceOrLength,
@@ -25,6 +26,9 @@ import {
   values,
 } from './field.ts';
 import { readDate, readName } from './name.ts';
+import { readWire } from './wire-field.ts';
+
+export { readWire } from './wire-field.ts';
 
 export const SPACINGS = ['even ratio', 'even turns', 'even frequency'] as const;
 export const SWITCHES = ['open', 'shorted', 'shorted in sections', 'disconnected'] as const;
@@ -122,20 +126,6 @@ const formerSchema = z
     flanges: flag('Rims at both ends. True when printed, false on a tube.'),
   })
   .describe('What the wire is wound on.');
-
-/** A wire of the stock by its size and covering in words. */
-export const readWire = (raw: unknown): Parsed<FoundWire> => {
-  if (typeof raw !== 'string') {
-    return {
-      ok: false,
-      got: shown(raw),
-      expected: 'a wire: a size and a covering, such as 24 AWG enamel',
-      todo: 'write AWG, SWG or mm behind the number, and the covering; "coilwright stock" lists them',
-    };
-  }
-  const found = findWire(raw.slice(0, 200));
-  return found.ok ? { ok: true, value: found } : found;
-};
 
 const windingSchema = z
   .strictObject({
@@ -242,6 +232,9 @@ export const jobSchema = z
       type: 'string',
     }).optional(),
     winding: windingSchema,
+    second: secondSchema.optional(),
+    aerial: aerialSchema.optional(),
+    detector: detectorSchema.optional(),
     prefer: choice(PREFERENCES, 'What the best coil is.'),
     at: quantity('frequency', 'Frequency at which losses are compared when there is no set.').optional(),
     temperature: quantity('temperature', 'Temperature of the copper at work.'),

@@ -11,7 +11,8 @@ export type KindName =
   | 'angle'
   | 'temperature'
   | 'mass'
-  | 'wire';
+  | 'wire'
+  | 'height';
 
 export interface Kind {
   /** With its article, for messages: `a length`. */
@@ -39,4 +40,5 @@ export const KINDS: Readonly<Record<KindName, Kind>> = {
   temperature: { noun: 'a temperature', unit: 'degC', low: -80, high: 300, offered: ['degC'], example: '20 degC' },
   mass: { noun: 'a weight', unit: 'g', low: 1e-3, high: 1e5, offered: ['g', 'oz'], example: '35 g' },
   wire: { noun: 'a length of wire', unit: 'm', low: 1e-2, high: 1e4, offered: ['m', 'ft'], example: '15.2 m' },
+  height: { noun: 'a height', unit: 'm', low: 1e-2, high: 1e3, offered: ['m', 'ft'], example: '8 m or 26 ft' },
 };

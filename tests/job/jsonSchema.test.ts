@@ -28,7 +28,7 @@ describe('the JSON Schema of a job', () => {
     expect(existsSync(shipped) ? readFileSync(shipped, 'utf8') : '').toBe(text);
   });
 
-  it('describes every key, and asks only for job, want and the capacitor of a set', () => {
+  it('describes every key, and asks only for job, want the capacitor of a set and the kind of a second winding', () => {
     const schema = jobJsonSchema() as Node;
     const all = keys(schema);
     console.log(`keys in the schema: ${all.length}`);
@@ -40,12 +40,13 @@ describe('the JSON Schema of a job', () => {
     ]).toEqual([
       ['job', 'want'],
       ['set', 'capacitor'],
+      ['second', 'kind'],
     ]);
   });
 
   it('shows the defaults that the reader takes', () => {
     const least = readJob(
-      'job: x\nwant: { inductance: 9 uH }\nset: { capacitor: 15 pF to 380 pF }\nas-made: {}',
+      'job: x\nwant: { inductance: 9 uH }\nset: { capacitor: 15 pF to 380 pF }\nas-made: {}\nsecond: { kind: sleeve, turns: 5 }\naerial: {}\ndetector: {}',
       'x',
     ).assumed;
     const shown = keys(jobJsonSchema() as Node).filter(([, node]) => node.default !== undefined);
