@@ -4,7 +4,7 @@
  */
 import PDFDocument from 'pdfkit';
 import type { Measure } from '../drawing/boxes.ts';
-import type { Drawing, Shape, Stroke, Text } from '../drawing/drawing.ts';
+import type { Drawing, Polyline, Shape, Stroke, Text } from '../drawing/drawing.ts';
 import { CAP_SHARE } from '../drawing/shapes.ts';
 import { DASH_MM, WEIGHT_MM } from '../drawing/stroke.ts';
 import { fontFiles } from './fonts.ts';
@@ -45,6 +45,7 @@ export interface DocumentInfo {
 }
 
 const POINTS = 72 / 25.4;
+type Point = readonly [number, number];
 /** Pages written before the library's memory is let go. */
 const PAGES_AT_ONCE = 50;
 
@@ -79,6 +80,13 @@ function setPlainly(face: Face): void {
     const advanceWidth = positions.reduce((sum, position) => sum + position.advanceWidth, 0);
     return { glyphs, positions, advanceWidth };
   };
+}
+
+/** A rectangle along the axes: written as one, which the hundreds of modules of a code are worth. */
+function isUpright({ closed, points }: Polyline): boolean {
+  if (!closed || points.length !== 4) return false;
+  const [[ax, ay], [bx, by], [cx, cy], [dx, dy]] = points as [Point, Point, Point, Point];
+  return ay === by && bx === cx && cy === dy && dx === ax;
 }
 
 /** A document to lay out for and then to write, once. */
@@ -197,6 +205,12 @@ export class Paper implements Measure {
         this.#ink(shape, shape.fill);
         return;
       default: {
+        const [a, , c] = shape.points;
+        if (shape.fill !== undefined && isUpright(shape)) {
+          to.rect(x(a![0]), y(a![1]), x(c![0]) - x(a![0]), y(c![1]) - y(a![1]));
+          this.#ink(shape, shape.fill);
+          return;
+        }
         shape.points.forEach(([px, py], i) => {
           if (i === 0) to.moveTo(x(px), y(py));
           else to.lineTo(x(px), y(py));
