@@ -123,8 +123,8 @@ export const BOUGHT = {
   formers: (count: number) => (count === 1 ? '1 former' : `${count} formers`),
 } as const;
 
-export const CAUTIONS = { heading: 'Take care', more: 'Take care, continued' } as const;
-export const NOTES = { heading: 'What to know', more: 'What to know, continued' } as const;
+export const CAUTIONS = { heading: 'Take care' } as const;
+export const NOTES = { heading: 'What to know' } as const;
 
 export const LABELS = {
   document: 'Labels',

@@ -75,8 +75,6 @@ export const TABLE = {
   length: (unit: string) => `wound length ${unit}`,
   ohms: 'DC Ω',
   meter: 'µH or kHz',
-  uh: 'µH',
-  kHz: 'kHz',
   read: 'read',
   none: '–',
   between: (low: string, high: string) => `${low}–${high}`,
