@@ -21,6 +21,7 @@ import type { Output, OutputFile } from './record/listing.ts';
 import { makeRecord } from './record/make.ts';
 import { matchedOf } from './record/matched.ts';
 import type { CoilRecord } from './record/schema.ts';
+import { withSecond } from './solve/second.ts';
 
 /** What is on hand, the old coil's own where the file is silent. */
 function jobFor({ job, asOld, boreMm }: MatchFile, inferred: InferredCoil): Job {
@@ -149,7 +150,8 @@ function matched(file: MatchFile): Produced {
   const chosen = tried.of;
   const block = matchedOf({ name: job.name, old: file.old, inferred, work, chosen, worked, was });
   const extra = { verb: 'match' as const, matched: block, warnings: warningsOf(file, inferred, chosen) };
-  return { job: chosen.job, found: chosen.found, extra };
+  // The taps follow the old coil: no other one is looked for.
+  return { job: chosen.job, found: withSecond(chosen.job, chosen.found, null), extra };
 }
 
 /** The record alone; throws the faults of exit 3 and 4. */

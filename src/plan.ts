@@ -18,6 +18,7 @@ import { makeRecord, printedOf, type RecordExtra } from './record/make.ts';
 import type { CoilRecord } from './record/schema.ts';
 import { refusal } from './solve/refusal.ts';
 import { type Found, search } from './solve/search.ts';
+import { withSecond } from './solve/second.ts';
 
 /** The record alone; throws the fault of exit 4 when nothing fits. */
 export function recordOf(job: Job, version: string): CoilRecord {
@@ -27,7 +28,7 @@ export function recordOf(job: Job, version: string): CoilRecord {
 function foundFor(job: Job): Found {
   const found = search(job);
   if (!('chosen' in found)) throw refusal(job, found);
-  return found;
+  return withSecond(job, found);
 }
 
 /** What is wrapped round a former or laid on it; nothing round ribs, whose holes are printed and between which is air. */

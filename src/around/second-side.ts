@@ -2,6 +2,9 @@
 import type { CoilPair } from '../coil/pair.ts';
 import type { SecondSide } from './position.ts';
 
+/** Of the gap between two windings, partly plastic and partly air: an estimate. */
+export const BETWEEN_PERMITTIVITY = 2;
+
 /** `permittivity` of what lies between the two, for their capacitance. */
 export function secondSide(pair: CoilPair, turn: number, kHz: number, permittivity: number): SecondSide {
   const at = pair.at(turn, kHz);

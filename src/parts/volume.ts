@@ -55,8 +55,8 @@ function holesVolume(d: FormerDimensions): number {
   let sum = 0;
   for (const hole of d.holes) {
     const r = hole.diameterMm / 2;
-    // A wire hole lies in the groove, which has already taken about half its depth over the hole's width.
-    const inGroove = hole.purpose !== 'anchor' && hole.purpose !== 'mount' ? (d.groove?.depthMm ?? 0) / 2 : 0;
+    // A hole of the main winding lies in the groove, which has already taken about half its depth over the hole's width.
+    const inGroove = hole.turn !== null ? (d.groove?.depthMm ?? 0) / 2 : 0;
     sum += r * r * (0.75 * Math.PI + 1) * (d.outsideR - d.boreR - inGroove);
   }
   return sum;

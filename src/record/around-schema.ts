@@ -4,7 +4,7 @@ import * as z from 'zod';
 const text = z.string();
 const num = z.number();
 
-/** Where something is connected: a tap by its number, or the second winding. */
+/** Where something is connected: a tap by its number, 0 for the start of a coil whose finish is earthed, or the second winding. */
 export const contactSchema = z.union([num.int(), z.literal('second')]);
 
 export const SECOND_KINDS = ['same former', 'sleeve', 'inner', 'beside'] as const;
@@ -14,11 +14,14 @@ const secondSchema = z.strictObject({
   turns: num,
   wire: z.strictObject({ name: text, bareMm: num, overallMm: num }),
   pitchMm: num,
+  spacerMm: num.describe('of what is wound along between its turns; 0 when wound close'),
   meanDiameterMm: num,
   startMm: num.describe(
     'Z of the wire centre at its start hole, in the frame of the main coil; where it slides, at the tightest place',
   ),
+  finishMm: num.describe('Z of the wire centre at its finish hole, there'),
   turnPositionsMm: z.array(num).describe('Z of the wire centre at the middle of each turn, there'),
+  distanceMm: num.describe('edge to edge of both windings along the axis; below 0 where they lie over one another'),
   wireLengthM: num.describe('without the ends that are left long'),
   leadsM: num,
   wireMassG: num,
@@ -67,6 +70,10 @@ const aerialSchema = z.strictObject({
   capacitancePf: num,
   inductanceUh: num.describe('in series'),
   resistanceOhm: num.describe('in series: earth, wire and radiation together'),
+  shunt: z
+    .strictObject({ capacitancePf: num, resistanceOhm: num })
+    .nullable()
+    .describe('one behind the other across the inductance, of the dummy aerial; null: none'),
   seriesPf: num.nullable().describe('of a capacitor between aerial and coil; null: none'),
   to: contactSchema.nullable().describe('where the job connects it; null: wherever is best'),
   source: text.describe('where the capacitance comes from, and its status'),
@@ -76,6 +83,7 @@ const detectorSchema = z.strictObject({
   kind: text,
   resistanceKohm: num.describe('in parallel, with what follows it'),
   capacitancePf: num,
+  with: text.nullable().describe('what the figures are for; null of one that is stated'),
   to: num.int().nullable().describe('where the job connects it; null: wherever is best'),
   source: text,
 });
@@ -91,10 +99,14 @@ const rowSchema = z.strictObject({
   off10Db: num,
   off18Db: num,
   off20Db: num,
+  dead: z.boolean().describe('a contact lies on turns that are not in use there'),
 });
 
+/** Null where the job has no aerial: something coupled as loosely as can be to the hot end stands for it. */
+const aerialAt = contactSchema.nullable();
+
 const pairSchema = z.strictObject({
-  aerial: contactSchema,
+  aerial: aerialAt,
   detector: num.int(),
   rows: z
     .array(rowSchema)
@@ -103,8 +115,10 @@ const pairSchema = z.strictObject({
 
 const bestSchema = z.strictObject({
   use: z.enum(['strongest', 'most selective', 'balanced']),
-  aerial: contactSchema,
+  aerial: aerialAt,
   detector: num.int(),
+  outputDb: num.describe('mean over the frequencies, as of the rows'),
+  off9Db: num.describe('mean over the frequencies'),
   why: text,
 });
 
@@ -118,11 +132,11 @@ export const aroundSchema = z.strictObject({
         tap: num.int(),
         lowKhz: num.nullable(),
         highKhz: num.nullable(),
-        aerial: contactSchema,
+        aerial: aerialAt,
         detector: num.int(),
       }),
     )
-    .describe('of every position as it will be in the set, with the balanced pair; null: beyond what it can tune'),
+    .describe('of every position as it will be in the set, with the balanced pair; null: it tunes nothing near there'),
   channelsKhz: z.array(num).describe('frequencies of the table'),
   pairs: z.array(pairSchema).describe('every aerial contact with every detector tap'),
   best: z.array(bestSchema),
@@ -132,3 +146,7 @@ export const aroundSchema = z.strictObject({
 export type Around = z.infer<typeof aroundSchema>;
 export type SecondEntry = z.infer<typeof secondSchema>;
 export type AroundPair = z.infer<typeof pairSchema>;
+export type AerialEntry = z.infer<typeof aerialSchema>;
+export type DetectorEntry = z.infer<typeof detectorSchema>;
+export type BestEntry = z.infer<typeof bestSchema>;
+export type AerialAt = z.infer<typeof aerialAt>;

@@ -9,6 +9,8 @@
 import * as z from 'zod';
 import { PARTS } from '../job/schema.ts';
 import { adviceTapSchema, correctionSchema } from './advice-schema.ts';
+import { aroundSchema } from './around-schema.ts';
+import type { SecondPlaces } from './around-second.ts';
 import { formerSchema } from './former-schema.ts';
 import { matchedSchema } from './match-schema.ts';
 import { measuringSchema } from './meter-schema.ts';
@@ -175,6 +177,7 @@ export const recordSchema = z.strictObject({
       'what the two switches of a two-switch coil set, one row a tens contact; empty or left out for one switch',
     ),
   windings: z.array(windingSchema).min(1),
+  around: aroundSchema.optional().describe('second winding, aerial, detector; absent where the job has none'),
   former: formerSchema,
   tapMethod: z.strictObject({
     name: z.enum(['twisted loop', 'lifted turn', 'cut pair', 'lug', 'drawn in']),
@@ -239,4 +242,6 @@ export type PartsRecord = Pick<
     | 'wire'
     | 'tensionHighN'
   >[];
+  /** The second winding, for what it is wound on. */
+  readonly around?: { readonly second: SecondPlaces | null } | undefined;
 };

@@ -15,8 +15,22 @@ import { lengthText, lengthWord, unitsOf } from './units.ts';
 export const checkSize = (record: CoilRecord): string =>
   lengthText(50, unitsOf(record) === 'metric' ? 'metric' : 'both', { digits: 1, trim: true });
 
+/** Of a sheet for another surface than the main former's: what it is for, and what its lower edge is. */
+export interface SurfaceWords {
+  readonly part: string;
+  readonly set: string;
+  readonly edge: string;
+}
+
 /** What to do with the sheet. */
-function instructions(record: CoilRecord, drawn: Developed, tiled: boolean, widthMm: number, measure: Measure): Block {
+function instructions(
+  record: CoilRecord,
+  drawn: Developed,
+  tiled: boolean,
+  widthMm: number,
+  measure: Measure,
+  surface: SurfaceWords | null,
+): Block {
   const { former } = record;
   const units = unitsOf(record);
   const taps = record.windings[0]!.taps.length > 1;
@@ -30,7 +44,8 @@ function instructions(record: CoilRecord, drawn: Developed, tiled: boolean, widt
   const words = [
     WRAP.print(units === 'metric' ? WRAP.rulers : WRAP.rulersInch, checkSize(record)),
     WRAP.side,
-    `${set} ${former.kind === 'tube' ? WRAP.jig : WRAP.printed}${taps ? ` ${WRAP.taps[record.tapMethod.name]}` : ''}${former.joints.length > 0 ? ` ${WRAP.sections}` : ''}`,
+    surface?.set ??
+      `${set} ${former.kind === 'tube' ? WRAP.jig : WRAP.printed}${taps ? ` ${WRAP.taps[record.tapMethod.name]}` : ''}${former.joints.length > 0 ? ` ${WRAP.sections}` : ''}`,
     ...(former.kind === 'tube' ? [WRAP.seam(short(drawn.seamDeg, 1))] : []),
     WRAP.measure(
       named(former.outsideDiameterMm / 2, 3),
@@ -69,13 +84,15 @@ export function templateHead(
   sheet: string,
   widthMm: number,
   measure: Measure,
+  surface: SurfaceWords | null = null,
 ): Block {
   const tiled = tiling.tiles.length > 1;
-  const part = tiled ? WRAP.tile(here.name) : WRAP.part('1:1');
+  const whole = tiled ? WRAP.tile(here.name) : WRAP.part('1:1');
+  const part = surface === null ? whole : `${surface.part}, ${whole}`;
   const title = titleBlock(record, { document: WRAP.document, part, sheet }, widthMm, measure);
   const map = tileMap(tiling, here);
   const wordsWidth = tiled ? widthMm - map.widthMm - 4 : widthMm;
-  const words = instructions(record, drawn, tiled, wordsWidth, measure);
+  const words = instructions(record, drawn, tiled, wordsWidth, measure, surface);
   const shapes: Shape[] = [...title.shapes, ...movedAll(words, 0, -title.heightMm - 1.5)];
   if (tiled) shapes.push(...movedAll(map, widthMm - map.widthMm - 0.5, -title.heightMm - 2));
   const under = Math.max(words.heightMm, tiled ? map.heightMm + 0.5 : 0);

@@ -12,6 +12,7 @@ import * as check from './check-blocks.ts';
 import * as advice from './check-blocks-advice.ts';
 import { twoCapacitors } from './check-blocks-line.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
+import { secondBlock } from './second-block.ts';
 import { frameOf, MARGIN_MM } from './sheet-frame.ts';
 import { titleBlock } from './title-block.ts';
 import * as wind from './wind-blocks.ts';
@@ -87,6 +88,7 @@ function checkPageWith(
       ...first,
       ...check.tapChecks(record, room.widthMm, rowMm, set, advised),
       ...check.settings(record, room.widthMm, 4.9, set),
+      ...secondBlock(record, room.widthMm, Math.min(rowMm, 4.6), set),
     ];
     const free = room.heightMm + GAP - height(wide, gapMm) - sign.heightMm - 3 * gapMm;
     if (free < 0) return null;
@@ -157,6 +159,7 @@ function toCheckBy(record: CoilRecord, room: Room, measure: Measure, first: read
       ...first,
       ...check.tapChecks(record, room.widthMm, Math.min(rowMm, 5.4), set),
       ...check.settings(record, room.widthMm, 5.2, set),
+      ...secondBlock(record, room.widthMm, Math.min(rowMm, 4.6), set),
       beside(pair, COLUMN_GAP),
       advice.corrections(record, room.widthMm, set),
       ...advice.sections(record, room.widthMm, set),

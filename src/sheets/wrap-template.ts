@@ -22,7 +22,8 @@ import { arrow, label, line, moved, movedAll, SMALL_MM } from '../drawing/shapes
 import { type Developed, developed, SCALE_MM, TAB_MM } from '../drawing/template.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { PAPER_MM, type Page, Paper } from './page.ts';
-import { checkSize, templateHead } from './template-head.ts';
+import { secondSurface } from './second-surface.ts';
+import { checkSize, type SurfaceWords, templateHead } from './template-head.ts';
 import { type Joint, joints, SHARED_MM, type Tile, type Tiling, tile } from './tiles.ts';
 import { lengthText, unitsOf } from './units.ts';
 
@@ -55,7 +56,7 @@ const wholeOf = (drawn: Developed): Box => ({
 });
 
 /** The way to lay the paper that needs the fewest pages; upright when it makes no difference. */
-function formatOf(record: CoilRecord, drawn: Developed, measure: Measure): Format {
+function formatOf(record: CoilRecord, drawn: Developed, measure: Measure, other: SurfaceWords | null): Format {
   const [short, long] = PAPER_MM[record.paper];
   const whole = wholeOf(drawn);
   const formats = [
@@ -72,7 +73,7 @@ function formatOf(record: CoilRecord, drawn: Developed, measure: Measure): Forma
       2 * TEMPLATE_MARGIN_MM -
       foot -
       HEAD_GAP -
-      templateHead(record, drawn, tiling, tiling.tiles[0]!, TITLE.sheet(10, 10), inner, measure).heightMm;
+      templateHead(record, drawn, tiling, tiling.tiles[0]!, TITLE.sheet(10, 10), inner, measure, other).heightMm;
     const one = tile(whole, Infinity, Infinity);
     let roomHeightMm = room(one);
     let tiling = tile(whole, roomWidthMm, roomHeightMm);
@@ -106,10 +107,12 @@ function datumWords(
   here: Tile,
   taken: readonly Box[],
   measure: Measure,
+  other: SurfaceWords | null,
 ): Shape[] {
   if (here.row > 0) return [];
   const { bottomMm } = drawn;
-  const words = bottomMm === 0 ? WRAP.datum : WRAP.aboveDatum(lengthText(bottomMm, unitsOf(record)));
+  const words =
+    other !== null ? other.edge : bottomMm === 0 ? WRAP.datum : WRAP.aboveDatum(lengthText(bottomMm, unitsOf(record)));
   const width = measure.width(words, SMALL_MM);
   // As low as there is room, clear of the dashed edge of the winding.
   for (let up = 0.5; up < 25; up += 0.5) {
@@ -203,10 +206,18 @@ function surface(drawn: Developed, here: Tile): Box {
   };
 }
 
-/** The pages as drawings. */
+/** The pages as drawings: the main former, then what a second winding is wound on where that is another body. */
 export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[] {
+  const second = secondSurface(record);
+  return [
+    ...surfacePages(record, measure, null),
+    ...(second === null ? [] : surfacePages(second.record, measure, second.words)),
+  ];
+}
+
+function surfacePages(record: CoilRecord, measure: Measure, other: SurfaceWords | null): Page[] {
   const drawn = developed(record, measure);
-  const format = formatOf(record, drawn, measure);
+  const format = formatOf(record, drawn, measure, other);
   const { tiling } = format;
   const { shapes: seams, taken: used } = joined(tiling, drawn);
   const all = [...drawn.shapes, ...seams];
@@ -222,7 +233,7 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
   const inner = format.widthMm - 2 * TEMPLATE_MARGIN_MM;
 
   const page = (here: Tile, n: number, content: readonly Shape[]): Page => {
-    const top = templateHead(record, drawn, tiling, here, TITLE.sheet(n, many), inner, measure);
+    const top = templateHead(record, drawn, tiling, here, TITLE.sheet(n, many), inner, measure, other);
     return {
       widthMm: format.widthMm,
       heightMm: format.heightMm,
@@ -257,7 +268,7 @@ export function layOutWrapTemplate(record: CoilRecord, measure: Measure): Page[]
       shapes.push(...info(record).map((shape) => moved(shape, place.x + 2, place.y + 2)));
       taken.push({ left: place.x, right: place.x + INFO.width + 4, bottom: place.y, top: place.y + INFO.height + 4 });
     }
-    shapes.push(...datumWords(record, drawn, here, taken, measure));
+    shapes.push(...datumWords(record, drawn, here, taken, measure, other));
     return page(here, i + 1, shapes.map(toPage));
   });
   // A surface too full for the square: it gets a page.

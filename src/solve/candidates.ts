@@ -56,7 +56,8 @@ function looseness(wire: Wire): number {
   return wire.covering === 'enamel' || wire.covering === 'enamel heavy' ? 1.02 : 1;
 }
 
-const closePitch = (wire: Wire): Pitch => ({
+/** Turn against turn. */
+export const closePitch = (wire: Wire): Pitch => ({
   kind: 'close',
   mm: round4(wire.overallMm * looseness(wire)),
   spacerMm: 0,

@@ -25,6 +25,8 @@ export interface Splitting {
   /** Greatest thickness over the wire's covering. */
   readonly overallMm: number;
   readonly axialMm: (turn: number) => number;
+  /** Z between which another winding lies, so that no seam may. */
+  readonly keepClear?: { readonly lowMm: number; readonly highMm: number };
   /** Longest former that the job allows; for a longer one no seams are looked for. */
   readonly mostMm: number;
   readonly printer: {
@@ -115,8 +117,11 @@ function placesOf(it: Splitting, j: Joining): Place[] {
   const spigotMm = spigotFor(j.boreR);
   const depth = former.groove?.depthMm ?? 0;
   const places: Place[] = [];
+  const { keepClear } = it;
+  const clear = (z: number) =>
+    keepClear === undefined || z + j.marginMm <= keepClear.lowMm || z - depth - j.marginMm >= keepClear.highMm;
   for (let z = lowest; z <= highest; z += FLAT_STEP_MM)
-    if (z <= span.fromMm - j.marginMm || z - depth >= span.toMm + j.marginMm)
+    if (clear(z) && (z <= span.fromMm - j.marginMm || z - depth >= span.toMm + j.marginMm))
       for (const keyDeg of [0, 90, 180, 270]) places.push({ turn: null, seamMm: z, climbMm: 0, keyDeg, spigotMm });
   const step = KEY_STEP / former.segments;
   // Two turns from the end: a ridge may lie over the last one.

@@ -14,6 +14,7 @@ import { type Breach, type Design, designOf, variantsOf } from './design.ts';
 import { type Estimate, estimateOf, roughSection, roughTargets, type Size, sizeOf } from './estimate.ts';
 import { ALL_ASPECTS, ASPECTS, type Aspect, aspectOf } from './prefer.ts';
 import { FAMILIES, type Ranked, rankedByField, refine } from './refine.ts';
+import type { SecondDesign } from './second.ts';
 import { coverageEstimate } from './working.ts';
 
 /** How much worse than the best design an estimate may be and still be worked out. */
@@ -42,6 +43,8 @@ export interface Found {
   readonly feasible: number;
   /** The nearest to the least loss, ranked by the field of every turn; empty when something else is preferred. */
   readonly ranked: readonly Ranked[];
+  /** The second winding on the chosen coil, where the job has one and it has been placed. */
+  readonly second?: SecondDesign;
 }
 
 export interface NotFound {
