@@ -90,6 +90,7 @@ function sample(kind: KindName): string {
     temperature: '0 degC to 40 degC',
     mass: '20 g to 40 g',
     wire: '10 m to 20 m',
+    height: '5 m to 10 m',
   };
   return samples[kind];
 }

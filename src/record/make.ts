@@ -18,6 +18,8 @@ import type { Found } from '../solve/search.ts';
 import { spreadInWords, spreadOf } from '../solve/spread.ts';
 import { DEFAULT_AT_KHZ } from '../solve/working.ts';
 import { adviceOf, correctionsOf } from './advice.ts';
+import { aroundOf } from './around.ts';
+import { secondEntryOf, secondPlacesOf } from './around-second.ts';
 import { checksOf } from './checks.ts';
 import { figuresOf } from './figures.ts';
 import { hashOf } from './hash.ts';
@@ -25,6 +27,7 @@ import { measuringOf } from './meter.ts';
 import { askedFor, bedsOf, entriesOf, printerOf, wantedOf } from './printed.ts';
 import { decimals, deg, mm, significant } from './rounding.ts';
 import { type Alternative, type CoilRecord, type Former, type Hole, type PartsRecord, recordSchema } from './schema.ts';
+import { secondStepsOf } from './second-steps.ts';
 import { stepsOf } from './steps.ts';
 import { leftOutWarnings, warningsOf } from './warnings.ts';
 import { placesOf, windingOf } from './winding.ts';
@@ -181,6 +184,7 @@ export function printedOf(job: Job, found: Found): Printed {
     wanted: wantedOf(job, chosen),
     tapMethod: tapMethodOf(chosen, job.units),
     windings: [placesOf(chosen)],
+    ...(found.second === undefined ? {} : { around: { second: secondPlacesOf(found.second) } }),
   };
   const { solids, leftOut } = possibleParts(record, askedFor(job));
   const not = leftOut.map(({ kind }) => kind);
@@ -228,8 +232,22 @@ export function makeRecord(
   const spread = spreadOf(job, chosen);
   const measuring = measuringOf(working, winding.taps, job.shop, spread, conditions.lossTangent);
   const { candidate } = chosen;
-  const { record: printed, solids, leftOut } = parts;
+  const {
+    record: { around: _, ...printed },
+    solids,
+    leftOut,
+  } = parts;
+  const around = aroundOf({
+    job,
+    coil: working,
+    taps: winding.taps,
+    rest: conditions.rest,
+    lossTangent: conditions.lossTangent,
+    second:
+      found.second === undefined ? null : { entry: secondEntryOf(found.second, winding.taps), pair: found.second.pair },
+  });
   const entries = entriesOf(solids);
+  const steps = stepsOf(job, chosen, winding);
   const alternatives = shownOf(job, found, lossFactor);
   const body: Omit<CoilRecord, 'hash' | 'files' | 'program'> = {
     record: 1,
@@ -240,6 +258,7 @@ export function makeRecord(
     units: job.units,
     demand: demandOf(job, found),
     windings: [winding],
+    ...(around === null ? {} : { around }),
     surroundings: { ...figures.surroundings, ...ribbedLoss(chosen.former) },
     spread,
     ...(job.asMade.diameterMm === 0 && job.asMade.pitch === 0 ? {} : { asMade: { ...job.asMade } }),
@@ -248,7 +267,9 @@ export function makeRecord(
     settings: figures.settings,
     parts: entries,
     beds: bedsOfLot ? [] : bedsOf(entries, printed.printer),
-    steps: stepsOf(job, chosen, winding),
+    steps: around?.second
+      ? [...steps, ...secondStepsOf(job, around.second, steps.length, winding.inductanceUh)]
+      : steps,
     checks: checksOf(chosen, spread, measuring, job),
     corrections: correctionsOf(chosen, measuring, job.units),
     advice: adviceOf(chosen, measuring),
@@ -258,6 +279,7 @@ export function makeRecord(
       tube: chosen.former.kind === 'tube',
       material: chosen.former.material,
       enamel: candidate.wire.covering.startsWith('enamel') || candidate.wire.strands > 1,
+      aerial: job.aerial?.kind ?? null,
     }),
     chosen: {
       prefer: job.prefer,
@@ -272,6 +294,7 @@ export function makeRecord(
       ...warnings,
       ...warningsOf(job, found, alternatives.length, figures.coverage),
       ...leftOutWarnings(leftOut),
+      ...(found.second?.warnings ?? []),
     ],
     given: { ...job.given },
     assumed: { ...job.assumed, ...derivedOf(job, chosen), ...spreadInWords(spread) },

@@ -3,6 +3,8 @@
  * kinds side by side, why this coil and which others, what all was taken with, and how the figures come about. It reads the record
  * of any verb and nothing else: same record, same bytes.
  */
+import { AROUND } from '../../templates/wording/around-sheet.ts';
+import { wireAerialCautions } from '../../templates/wording/cautions.ts';
 import { REFERENCE } from '../../templates/wording/reference-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import type { ExplainedRecord } from '../explain/explain.ts';
@@ -11,6 +13,7 @@ import { closer, stack } from './block.ts';
 import { headedPages } from './headed.ts';
 import { type Page, Paper } from './page.ts';
 import { type Body, Filling, GAP_MM } from './parted.ts';
+import * as set from './reference-around.ts';
 import { noOthers, others, why } from './reference-chosen.ts';
 import { explained } from './reference-explained.ts';
 import * as ranges from './reference-ranges.ts';
@@ -24,6 +27,21 @@ const CURVES_MM = { least: 110, wanted: 150 } as const;
 
 /** A record of any verb; one of a plan also tells why it chose. */
 export type ReferenceRecord = ExplainedRecord & { readonly chosen?: CoilRecord['chosen'] | null };
+
+/** A page of its own for what hangs on the coil, and more where it takes more. */
+function around(record: ReferenceRecord, pages: Filling, widthMm: number, measure: Measure): void {
+  const found = set.connectedOf(record);
+  if (found === null) return;
+  const { part } = AROUND;
+  pages.page(part);
+  pages.put(set.connected(found, wireAerialCautions(found.aerial?.kind ?? null), widthMm, measure), part);
+  for (const block of [set.uses(found, widthMm, measure), set.maps(found, widthMm, measure)])
+    if (block !== null) pages.put(block, part);
+  const ranges = set.setRanges(record, found, widthMm, measure);
+  if (ranges !== null) pages.putParted(ranges, part);
+  const notes = set.aroundNotes(found, widthMm, measure);
+  if (notes !== null) pages.put(notes, part);
+}
 
 function fill(record: ReferenceRecord, widthMm: number, heightMm: number, measure: Measure): Body[] {
   const pages = new Filling(heightMm);
@@ -41,6 +59,7 @@ function fill(record: ReferenceRecord, widthMm: number, heightMm: number, measur
     pages.putParted(kinds, REFERENCE.kinds);
     pages.put(stack(ranges.kindNotes(record, widthMm, measure), 0.8), REFERENCE.kinds);
   }
+  around(record, pages, widthMm, measure);
   const { chosen = null } = record;
   if (chosen !== null) {
     pages.put(why(chosen, widthMm, measure), REFERENCE.chosen);

@@ -1,0 +1,60 @@
+/** The fixed words of the page on the set around the coil, in the reference sheet. */
+
+export const AROUND = {
+  part: 'the set around the coil',
+  heading: 'The set around the coil',
+  aerial: (kind: string, circuit: string, to: string) => `Aerial, ${kind}: ${circuit}; ${to}.`,
+  detector: (kind: string, load: string, to: string) => `Detector, ${kind}: ${load}; ${to}.`,
+  kinds: { dummy: 'standard dummy', capacitor: 'by its capacitance' } as Readonly<Record<string, string>>,
+  across: (shunt: string) => `, across the inductance ${shunt} in series`,
+  series: (pf: string) => `, and ${pf} between it and the coil`,
+  with: (what: string) => ` with ${what}`,
+  best: 'its place is chosen below',
+  fixed: (contact: string) => `on ${contact}, as the job says`,
+  source: (text: string) => `Source: ${text}`,
+  use: {
+    heading: 'What to connect where',
+    more: 'What to connect where, continued',
+    use: 'use',
+    aerial: 'aerial on',
+    detector: 'detector on',
+    output: 'output dB',
+    off: '9 kHz off dB',
+    why: 'why',
+    how: (kHz: string) =>
+      `Output: power into the detector for the same signal in the aerial, 0 dB the best of all pairs at each frequency. 9 kHz off: what is left of a channel there. Both are means over those of ${kHz} kHz that the pair tunes with both on turns in use, each with the switch position that serves best.`,
+  },
+  contact: (at: number | 'second' | null) =>
+    at === null ? 'none' : at === 'second' ? 'second winding' : at === 0 ? 'start S' : `tap ${at}`,
+  short: (at: number | 'second' | null) => (at === null ? '–' : at === 'second' ? '2nd' : at === 0 ? 'S' : `${at}`),
+  map: {
+    heading: (kHz: string) => `Every pair at ${kHz} kHz`,
+    output: 'Output dB',
+    off: 'Left of a channel 9 kHz off, dB',
+    detector: 'detector on tap',
+    aerial: 'aerial on',
+    none: '–',
+    signs: {
+      strongest: 'strongest',
+      'most selective': 'most selective',
+      balanced: 'balanced',
+      dead: 'a contact on turns not in use',
+      untuned: 'not tuned',
+    },
+    words: 'Minus signs are left out: 12 is 12 dB down. The table over the whole band is in the record, plan.json.',
+    many: 'There are too many pairs to draw; the table of them all is in the record, plan.json.',
+    nothing: 'No pair is tuned at that frequency.',
+  },
+  ranges: {
+    heading: (aerial: string, detector: string) =>
+      `Ranges as they will be in the set: aerial on ${aerial}, detector on ${detector} (balanced)`,
+    more: 'Ranges as they will be in the set, continued',
+    tap: 'tap',
+    alone: 'coil alone kHz',
+    set: 'in the set kHz',
+    low: 'lower edge moves %',
+    high: 'upper edge moves %',
+    nothing: 'tunes nothing near',
+  },
+  caution: 'Caution',
+} as const;
