@@ -8,6 +8,7 @@ import type { Measure } from './boxes.ts';
 import type { Drawing, Shape } from './drawing.ts';
 import { formerOutline, turns } from './elevation-body.ts';
 import { seamLines } from './seam-lines.ts';
+import { secondHere, secondTurns } from './second-turns.ts';
 import { arrow, arrowHead, circle, earthSymbol, label, line, polyline, SMALL_MM } from './shapes.ts';
 import { spread } from './spread.ts';
 
@@ -108,6 +109,12 @@ function ordinateItems(
       })),
     { name: words.top, z: record.former.lengthMm },
   ];
+  const second = secondHere(record);
+  if (second !== null) {
+    for (const { label: name, axialMm } of second.holes)
+      if (name === 'P1' || name === 'P2') items.push({ name, z: axialMm });
+    items.sort((a, b) => a.z - b.z);
+  }
   return items.map((item) => ({ ...item, value: length(item.z) }));
 }
 
@@ -289,6 +296,7 @@ export function elevation(
     ...formerOutline(record, scale),
     line(0, -3, 0, top + 2, 'hair', 'centre'),
     ...turns(record, scale),
+    ...secondTurns(record, scale),
     ...seams(record, scale, edge, words),
     ...dots(record, scale),
     ...leads(record, scale, edge),

@@ -9,6 +9,7 @@ import type { Box, Measure } from './boxes.ts';
 import type { Line, Shape } from './drawing.ts';
 import { type Marked, placeLabels } from './labels.ts';
 import { seamLines } from './seam-lines.ts';
+import { secondHere } from './second-turns.ts';
 import { circle, label, line, polyline, rectangle } from './shapes.ts';
 import { loopMarks, markAtTap } from './tap-marks.ts';
 
@@ -127,6 +128,14 @@ function alongLine({ x1, y1, x2, y2 }: Line): Box[] {
   });
 }
 
+/** Of a second winding on the same former. */
+function secondEdges(record: CoilRecord): number[] {
+  const second = secondHere(record);
+  if (second === null) return [];
+  const half = second.wire.overallMm / 2;
+  return [second.startMm - half, second.finishMm + half];
+}
+
 export function developed(record: CoilRecord, measure: Measure): Developed {
   const { former } = record;
   const winding = record.windings[0]!;
@@ -144,7 +153,7 @@ export function developed(record: CoilRecord, measure: Measure): Developed {
     ...angleScale(seam, circumference, top),
   ];
   const half = winding.wire.overallMm / 2;
-  const edges = [winding.startMm - half, winding.finishMm + half];
+  const edges = [winding.startMm - half, winding.finishMm + half, ...secondEdges(record)];
   for (const z of edges) shapes.push(line(0, z, circumference, z, 'hair', 'dashed'));
   const lines: Box[] = edges.map((z): Box => ({ left: 0, right: circumference, bottom: z - 0.1, top: z + 0.1 }));
   for (const places of seamLines(record, seam, seam + 360)) {

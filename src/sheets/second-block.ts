@@ -18,14 +18,15 @@ export function secondBlock(record: CoilRecord, widthMm: number, rowMm: number, 
   const length = (mm: number, digits = 2) => lengthCell(mm, units, { digits });
   const { body, holes, slide, wanted } = second;
   const end = second.startMm > record.windings[0]!.finishMm ? 'finish' : 'start';
+  const at = (name: string) => holes.find(({ label }) => label === name)!;
   const cells: [string, number, string][] = [
     [WORDS.wire, 26, second.wire.name],
     [WORDS.turns, 9, `${second.turns}`],
     [WORDS.pitch(unit), 14, lengthCell(second.pitchMm, units, { digits: 3, trim: true })],
     [WORDS.cut, 16, wireText(second.wireLengthM + second.leadsM, units)],
-    [WORDS.height('P1', unit), 17, length(second.startMm)],
-    [WORDS.height('P2', unit), 17, length(second.finishMm)],
-    [WORDS.angle, 14, short(holes.find(({ label }) => label === 'P1')!.angleDeg, 1)],
+    [WORDS.height('P1', unit), 17, length(at('P1').axialMm)],
+    [WORDS.height('P2', unit), 17, length(at('P2').axialMm)],
+    [WORDS.angle, 14, short(at('P1').angleDeg, 1)],
     ...(body === null ? [] : [[WORDS.edge(unit), 17, length(body.lowMm, 1)] as [string, number, string]]),
     [WORDS.alone, 13, figures(second.inductanceUh)],
     [WORDS.mutual, 13, figures(second.mutualUh)],

@@ -11,7 +11,12 @@ export function secondSurface(record: CoilRecord): { record: CoilRecord; words: 
   const main = record.windings[0]!;
   const down = (z: number) => Math.round(1e4 * (z - body.lowMm)) / 1e4;
   return {
-    words: { part: SECOND_TEMPLATE.part[kind], set: SECOND_TEMPLATE.set, edge: SECOND_TEMPLATE.edge },
+    words: {
+      part: SECOND_TEMPLATE.part[kind],
+      set: SECOND_TEMPLATE.set,
+      edge: SECOND_TEMPLATE.edge,
+      from: SECOND_TEMPLATE.from,
+    },
     record: {
       ...record,
       former: {

@@ -20,6 +20,8 @@ export interface SurfaceWords {
   readonly part: string;
   readonly set: string;
   readonly edge: string;
+  /** Where heights are counted from. */
+  readonly from: string;
 }
 
 /** What to do with the sheet. */
@@ -53,6 +55,7 @@ function instructions(
       named(PAPER_THICKNESS_MM, 1),
       lengthText(drawn.circumferenceMm, units),
       lengthWord(units),
+      surface?.from,
     ),
     ...(drawn.unlabelled.length > 0 ? [WRAP.unlabelled(drawn.unlabelled.join(', '))] : []),
     ...(tiled ? [WRAP.tiles] : []),

@@ -20,7 +20,7 @@ import { chooseSecond, MET, type Unreached } from './second/choose.ts';
 import { asWallHoles, awayFrom, holesAmong, holesAt } from './second/holes.ts';
 import { lengthened } from './second/longer.ts';
 import { edgesOf, standingOut } from './second/main-coil.ts';
-import { type NoRoom, type Room, roomFor } from './second/room.ts';
+import { holeSpanMm, type NoRoom, type Room, roomFor } from './second/room.ts';
 import { type Mark, scaleOf } from './second/scale.ts';
 import { SecondTurns } from './second/turns.ts';
 
@@ -44,6 +44,8 @@ export interface SecondDesign {
 }
 
 const round = (mm: number) => Math.round(mm * 1e3) / 1e3;
+/** So many times a shorter coil is looked for, each as much shorter as the one before was too long. */
+const SHORTER = 3;
 /** Thinner a spacer between turns is none. */
 const LEAST_SPACER_MM = 0.05;
 
@@ -161,7 +163,7 @@ function place(job: Job, design: Design, wish: JobSecond): Placed | TooLong {
   const span = room.bodySpan(n, startMm, looseMm);
   const places = {
     startMm,
-    finishMm: startMm + n * pitchMm,
+    finishMm: startMm + holeSpanMm(n, pitchMm, wire.overallMm),
     meanDiameterMm: room.meanDiameterMm,
     wireMm: wire.overallMm,
     hand: job.winding.hand,
@@ -213,7 +215,7 @@ function place(job: Job, design: Design, wish: JobSecond): Placed | TooLong {
             lengthMm: round(span.highMm - span.lowMm),
             lowMm: round(span.lowMm),
           },
-    holes: holes.map((hole) => ({ ...hole, axialMm: round(hole.axialMm + shift) })),
+    holes: holes.map((hole) => ({ ...hole, axialMm: hole.axialMm + shift })),
     distanceMm,
     why: whyOf(design, wish, n, coupling),
     warnings: warningsOf(wish, turns, n, coupling),
@@ -285,22 +287,38 @@ function warningsOf(wish: JobSecond, turns: SecondTurns, n: number, coupling: nu
 export function withSecond(job: Job, found: Found, again: ((job: Job) => Found | null) | null = searchAgain): Found {
   const wish = job.second;
   if (wish === null) return found;
-  const placed = place(job, found.chosen, wish);
-  if ('second' in placed) return { ...found, chosen: placed.design, second: placed.second };
-  const longestMm = job.former.longestMm - Math.ceil(placed.overMm);
-  const shorter = again === null || longestMm <= 0 ? null : again({ ...job, former: { ...job.former, longestMm } });
-  const second = shorter === null ? null : place(job, shorter.chosen, wish);
-  if (shorter !== null && second !== null && 'second' in second)
-    return { ...shorter, chosen: second.design, second: second.second };
-  const { overMm, lengthMm, why } = placed;
+  const first = place(job, found.chosen, wish);
+  if ('second' in first) return { ...found, chosen: first.design, second: first.second };
+  let { longestMm } = job.former;
+  let overMm = first.overMm;
+  for (let round = 0; again !== null && round < SHORTER; round++) {
+    longestMm -= Math.ceil(overMm);
+    const shorter = longestMm > 0 ? again({ ...job, former: { ...job.former, longestMm } }) : null;
+    if (shorter === null) break;
+    const placed = placedOrNot(job, shorter.chosen, wish);
+    if (placed === null) break;
+    if ('second' in placed) return { ...shorter, chosen: placed.design, second: placed.second };
+    overMm = placed.overMm;
+  }
+  const { lengthMm, why } = first;
   throw fault(
     job,
     'kind',
     'second-length',
-    `a former ${lengthText(lengthMm, 1)} long with the second winding beyond the ${wish.end}, ${lengthText(overMm, 1)} too long: ${why}`,
-    `${lengthText(Math.max(0, lengthMm - overMm), 1)} or less`,
+    `a former ${lengthText(lengthMm, 1)} long with the second winding beyond the ${wish.end}, ${lengthText(first.overMm, 1)} too long: ${why}`,
+    `${lengthText(Math.max(0, lengthMm - first.overMm), 1)} or less`,
     `raise former.longest to ${lengthText(Math.ceil(lengthMm), 0)}, take a tighter second.coupling, fewer second.turns, or second.kind: sleeve, inner or beside`,
   );
+}
+
+/** Null on a coil that cannot have it at all. */
+function placedOrNot(job: Job, design: Design, wish: JobSecond): Placed | TooLong | null {
+  try {
+    return place(job, design, wish);
+  } catch (error) {
+    if (error instanceof Fault) return null;
+    throw error;
+  }
 }
 
 function searchAgain(job: Job): Found | null {

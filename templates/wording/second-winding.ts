@@ -66,4 +66,5 @@ export const SECOND_TEMPLATE = {
   part: { sleeve: 'for the sleeve', inner: 'for the inner former', beside: 'for the former beside' },
   set: 'Lower edge: set it flush with the lower edge of what the second winding is wound on; P1 is below. The holes are printed: this strip checks and marks them. Dashed: edges of the winding.',
   edge: 'lower edge',
+  from: 'the lower edge',
 } as const;

@@ -30,8 +30,8 @@ export const WRAP = {
   },
   sections: 'Thin line all round: the seam of the sections.',
   unlabelled: (names: string) => `No room for the label of ${names}: see the tap table of the winding sheet.`,
-  measure: (outside: string, half: string, paper: string, round: string, unit: string) =>
-    `Across: angle × (outside radius ${outside} + ${half}, half of ${paper} paper); ${round} once round. Up: ${unit} from the datum.`,
+  measure: (outside: string, half: string, paper: string, round: string, unit: string, from = 'the datum') =>
+    `Across: angle × (outside radius ${outside} + ${half}, half of ${paper} paper); ${round} once round. Up: ${unit} from ${from}.`,
   tiles:
     'Join the tiles so that crosses of the same letter cover one another; cut one of the two along the line of crosses.',
   overlap: ['overlap here:', 'edge to this line'],

@@ -78,6 +78,12 @@ export function leastDistanceMm(
 /** Distance along the axis of the hole that ties an end from the one it comes out at. */
 export const tieMm = (wireMm: number): number => wireHoleMm(wireMm, 1) + 1.2;
 
+/** Along the axis from the hole of the start to that of the finish: of so few turns that the two would meet, as much as keeps them apart. */
+export function holeSpanMm(turns: number, pitchMm: number, wireMm: number): number {
+  const hole = wireHoleMm(wireMm, 1);
+  return Math.max(turns * pitchMm, hole / 2 + hole * Math.SQRT1_2 + WEB_MM);
+}
+
 const mm = (value: number) => `${Number(value.toFixed(2))} mm`;
 
 export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire, pitchMm: number): Room | NoRoom {
@@ -90,6 +96,7 @@ export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire,
   const made = job.asMade.diameterMm;
   const line = job.printer.lineMm;
   const edges = edgesOf(design);
+  const spanMm = (turns: number) => holeSpanMm(turns, pitchMm, w);
 
   if (kind === 'same former' || kind === 'beside') {
     const least = leastDistanceMm(design, kind, end, marginMm, w);
@@ -103,7 +110,7 @@ export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire,
     const bounds = (turns: number): Spread => {
       const [from, to] = [stated ?? least, stated ?? MOST_OFF_MM];
       if (way > 0) return { lowMm: edges.highMm + from + w / 2, highMm: edges.highMm + to + w / 2 };
-      const top = (d: number) => edges.lowMm - d - w / 2 - turns * pitchMm;
+      const top = (d: number) => edges.lowMm - d - w / 2 - spanMm(turns);
       return { lowMm: top(to), highMm: top(from) };
     };
     const outsideMm = former.outsideDiameterMm;
@@ -115,7 +122,7 @@ export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire,
       way,
       bounds,
       farthestMm: (turns) => (way > 0 ? bounds(turns).highMm : bounds(turns).lowMm),
-      bodySpan: (turns, tight) => ({ lowMm: tight - marginMm, highMm: tight + turns * pitchMm + marginMm }),
+      bodySpan: (turns, tight) => ({ lowMm: tight - marginMm, highMm: tight + spanMm(turns) + marginMm }),
     };
   }
 
@@ -153,7 +160,7 @@ export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire,
   const { lengthMm } = former;
   const bounds = (turns: number): Spread => ({
     lowMm: Math.max(free.lowMm + marginMm, -MOST_OFF_MM),
-    highMm: Math.min(free.highMm - marginMm - turns * pitchMm, lengthMm + MOST_OFF_MM),
+    highMm: Math.min(free.highMm - marginMm - spanMm(turns), lengthMm + MOST_OFF_MM),
   });
   return {
     meanDiameterMm: body.outsideMm + w + made,
@@ -165,10 +172,10 @@ export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire,
       const { lowMm, highMm } = bounds(turns);
       if (way > 0)
         return Math.min(highMm, Math.max(lengthMm - GUIDE_MM + marginMm, tight + lengthMm - GUIDE_MM - free.lowMm));
-      return Math.max(lowMm, Math.min(GUIDE_MM - marginMm - turns * pitchMm, tight + GUIDE_MM - free.highMm));
+      return Math.max(lowMm, Math.min(GUIDE_MM - marginMm - spanMm(turns), tight + GUIDE_MM - free.highMm));
     },
     bodySpan(turns, tight, loose) {
-      const own = { lowMm: tight - marginMm, highMm: tight + turns * pitchMm + marginMm };
+      const own = { lowMm: tight - marginMm, highMm: tight + spanMm(turns) + marginMm };
       if (way > 0) return { ...own, lowMm: Math.min(own.lowMm, lengthMm - GUIDE_MM - (loose - tight)) };
       return { ...own, highMm: Math.max(own.highMm, GUIDE_MM + (tight - loose)) };
     },
