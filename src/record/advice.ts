@@ -148,7 +148,7 @@ export function adviceOf(
   return taps.map(({ turn }, i) => {
     const nominal = coil.inductanceUh(turn);
     const by = (uh: number) => uh / nominal - 1;
-    const many = by((i < taps.length - 1 ? coil : more).inductanceUh(turn + 1));
+    const many = by((turn + 1 > coil.turns ? more : coil).inductanceUh(turn + 1));
     const few = turn > 1 ? by(coil.inductanceUh(turn - 1)) : -1;
     const back = Math.min(SLOPE_TURNS, turn / 2);
     const on = Math.min(SLOPE_TURNS, coil.turns - turn);
