@@ -107,3 +107,22 @@ describe.each(RECORDS)('advice for %s', (name, record) => {
     expect(readings).toBeGreaterThan(20);
   });
 });
+
+it('a tap less than a turn from the finish has a turn to come for its advice', () => {
+  const record = recordOf(
+    jobOf({
+      ...RANGE,
+      want: { inductance: '3 uH to 12 uH', taps: 15, spacing: 'even turns' },
+      wire: ['0.5 mm enamel'],
+      winding: { 'tap-layout': 'staggered' },
+    }),
+    '1.2.3',
+  );
+  const { taps, turns } = record.windings[0]!;
+  const before = taps.at(-2)!;
+  expect(before.turn + 1).toBeGreaterThan(turns);
+  const { manyPercent } = record.advice[before.tap - 1]!;
+  // A turn more of about 15 is some 10 % of the inductance.
+  expect(manyPercent).toBeGreaterThan(5);
+  expect(manyPercent).toBeLessThan(25);
+});
