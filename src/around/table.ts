@@ -157,24 +157,34 @@ export function rangeOf(
       }
       // Losses and crowding are those of the edge itself.
       const there = portsOf(arrangement, turn, Math.sqrt(here * next));
-      return crossing((kHz) => tuning(kHz, there) - end, here / STEP ** 0.2, next * STEP ** 0.2, way);
+      const slack = STEP ** (0.2 * way);
+      return crossing((kHz) => tuning(kHz, there) - end, here / slack, next * slack, way);
     }
   };
   return { lowKhz: edge(-1), highKhz: edge(1) };
 }
 
-/** Where a function that falls with frequency is 0, between two frequencies in either order. */
+/** Where a function that falls with frequency is 0, between two frequencies in either order; 1e-9 of the frequency. */
 function crossing(of: (kHz: number) => number, a: number, b: number, way: 1 | -1): number {
   let [low, high] = way > 0 ? [a, b] : [b, a];
   let [atLow, atHigh] = [of(low), of(high)];
-  for (let i = 0; i < 30 && high / low - 1 > 1e-7; i++) {
-    // The chord, kept off the ends so that both sides close in.
-    const share = Math.min(0.97, Math.max(0.03, atLow / (atLow - atHigh)));
-    const middle = low + (high - low) * (Number.isFinite(share) ? share : 0.5);
+  let kept = 0;
+  let middle = (low + high) / 2;
+  for (let i = 0; i < 40 && high / low - 1 > 1e-9; i++) {
+    // The chord (Illinois): an end that stays counts half as much the next time, so that both close in.
+    const chord = low + ((high - low) * atLow) / (atLow - atHigh);
+    middle = chord > low && chord < high ? chord : (low + high) / 2;
     const at = of(middle);
-    if (Math.abs(at) < 1e-6) return middle;
-    if (at > 0) [low, atLow] = [middle, at];
-    else [high, atHigh] = [middle, at];
+    if (Math.abs(at) < 1e-7) return middle;
+    if (at > 0) {
+      [low, atLow] = [middle, at];
+      if (kept > 0) atHigh /= 2;
+      kept = 1;
+    } else {
+      [high, atHigh] = [middle, at];
+      if (kept < 0) atLow /= 2;
+      kept = -1;
+    }
   }
-  return (low + high) / 2;
+  return middle;
 }
