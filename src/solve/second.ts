@@ -218,7 +218,7 @@ function place(job: Job, design: Design, wish: JobSecond): Placed | TooLong {
     holes: holes.map((hole) => ({ ...hole, axialMm: hole.axialMm + shift })),
     distanceMm,
     why: whyOf(design, wish, n, coupling),
-    warnings: warningsOf(wish, turns, n, coupling),
+    warnings: warningsOf(wish, turns, pair, coupling),
   };
   return { design: longer.design, second };
 }
@@ -259,10 +259,13 @@ function whyOf(design: Design, wish: JobSecond, n: number, coupling: number): st
   return `${n} turns (${turns}) ${where}; ${asked}`;
 }
 
+/** With the lowest position it should couple by this share of what it does with the whole coil. */
+const LOOSE_SHARE = 0.2;
 /** Further off than this from the inductance asked for is said. */
 const UH_OFF = 0.02;
 
-function warningsOf(wish: JobSecond, turns: SecondTurns, n: number, coupling: number): CoilRecord['warnings'] {
+function warningsOf(wish: JobSecond, turns: SecondTurns, pair: CoilPair, coupling: number): CoilRecord['warnings'] {
+  const n = pair.second.turns;
   const list: CoilRecord['warnings'] = [];
   const wanted = wish.coupling?.highest ?? null;
   if (wanted !== null && Math.abs(coupling / wanted - 1) > MET)
@@ -275,6 +278,12 @@ function warningsOf(wish: JobSecond, turns: SecondTurns, n: number, coupling: nu
     list.push({
       code: 'second-inductance',
       text: `The second winding has ${inductanceText(uh)} with ${n} whole turns, not ${inductanceText(wish.inductanceUh)}.`,
+    });
+  const lowest = pair.coupling(pair.main.taps[0]);
+  if (lowest < LOOSE_SHARE * coupling)
+    list.push({
+      code: 'second-loose-tap',
+      text: `The second winding lies at the end whose turns the lower positions leave out: with position 1 it couples by ${tidy(lowest, 2)} only, with the whole coil by ${tidy(coupling, 2)}. Towards the start all positions would couple.`,
     });
   return list;
 }
