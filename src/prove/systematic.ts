@@ -15,6 +15,7 @@
 import tQuantile from '@stdlib/stats-base-dists-t-quantile';
 import { SYSTEMATIC } from '../../templates/wording/systematic.ts';
 import { cholesky, dot, solveWith } from '../match/linear.ts';
+import { fixed, signed } from '../quantity/decimals.ts';
 import { tidy } from '../quantity/format.ts';
 import { decimals, significant } from '../record/rounding.ts';
 import { chanceOfChiSquare } from './chance.ts';
@@ -98,7 +99,9 @@ function withinWords({ name, capacitancePf }: Column & { readonly name: UnknownN
     : SYSTEMATIC.within[name](size);
 }
 
-const signed = (value: number, digits: number) => `${value > 0 ? '+' : ''}${tidy(Number(value.toFixed(digits)), 4)}`;
+/** Decimals that show two figures of a limit: what it bounds is not known better. */
+const decimalsFor = (half: number): number =>
+  half > 0 ? Math.min(6, Math.max(0, 1 - Math.floor(Math.log10(half)))) : 2;
 
 /** What an unknown does to the inductance read of the whole coil, a fraction for each unit; null: nothing. */
 function onWhole({ model }: Fitted, { name, per }: Column): number | null {
@@ -118,11 +121,11 @@ function unknownOf(fitted: Fitted, column: Column & { readonly name: UnknownName
   const total = common.reduce((sum, { weight, mean }) => sum + weight * mean ** 2, 0);
   const explained = common.reduce((sum, { slot, weight, mean }) => sum + weight * mean * per(slot) * estimate, 0);
   const percent = name === 'diameter' ? (100 * estimate) / model.coil.shape.meanDiameterMm : null;
-  const digits = unit === 'µH' ? 4 : unit === 'pF' ? 2 : 3;
+  const digits = decimalsFor(scale * half);
   const is = Math.abs(estimate) > half;
   const size = SYSTEMATIC.signed(
     signed(scale * estimate, digits),
-    tidy(scale * half, 2),
+    fixed(scale * half, digits),
     unit,
     percent === null ? null : signed(percent, 2),
   );

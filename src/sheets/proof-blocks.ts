@@ -141,11 +141,11 @@ const failingIn = ({ kinds }: ProofRecord) =>
 export function failing(record: ProofRecord, widthMm: number, measure: Measure): Parted {
   const words = PROOF.failing;
   const heads: Head[] = [
-    [words.serial, 24, { bold: true }],
+    [words.serial, 22, { bold: true }],
     [words.saved, 14, {}],
-    [words.outside, 38, {}],
-    [words.looks, 50, {}],
-    [words.toDo, 60, {}],
+    [words.outside, 62, {}],
+    [words.looks, 42, {}],
+    [words.toDo, 46, {}],
   ];
   const rows = failingIn(record).map((coil) => [
     serialOf(coil),

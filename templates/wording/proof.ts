@@ -88,6 +88,7 @@ export const PROOF = {
   },
   record: (hash: string) => `proof ${hash}`,
   sheet: (n: number, of: number) => `sheet ${n} of ${of}`,
+  of: 'readings',
   tally: {
     heading: 'Coils',
     kind: 'kind',
