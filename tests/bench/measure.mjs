@@ -22,9 +22,9 @@ export function once(args, mostMs) {
   const ms = Number(process.hrtime.bigint() - from) / 1e6;
   if (run.error?.code === 'ETIMEDOUT') return { ms, mb: Number.NaN, stopped: true };
   if (run.status !== 0) throw new Error(`node ${args.join(' ')} ended with ${run.status}: ${run.stderr}`);
-  const mb = Number(readFileSync(rss, 'utf8')) / 1024;
+  const [kb, us] = readFileSync(rss, 'utf8').split(' ').map(Number);
   rmSync(dir, { recursive: true });
-  return { ms, mb, stopped: false };
+  return { ms, mb: kb / 1024, cpuMs: us / 1000, stopped: false };
 }
 
 /** Medians of `runs` paired runs after one of each to warm up; `ratio` is the median of the ratios pair by pair. */
