@@ -116,28 +116,26 @@ function down(db: number): string {
   return db > 0 && Number(text) > 0 ? `+${text}` : text;
 }
 
-/** The two grids, side by side or one below the other. */
-export function maps(around: Around, widthMm: number, measure: Measure): Block | null {
+/** The two grids, side by side or one below the other, where each may go on a page of its own. */
+export function maps(around: Around, widthMm: number, measure: Measure): Block[] {
   const found = mapsOf(around);
-  if (found === null || around.pairs.length < 2) return null;
+  if (found === null || around.pairs.length < 2) return [];
   const head = heading(AROUND.map.heading(khz(found.kHz)), widthMm, measure);
   const words = (text: string) => paragraph(text, widthMm, measure, SMALL);
   if (found.output.cells.flat().every(({ text }) => text === null))
-    return stack([head, words(AROUND.map.nothing)], 0.5);
+    return [stack([head, words(AROUND.map.nothing)], 0.5)];
   const half = (widthMm - GAP_MM) / 2;
   const least = Math.max(mapLeastMm(found.output, measure), mapLeastMm(found.off, measure));
-  if (least > widthMm || found.output.rows.length > MOST_ROWS) return stack([head, words(AROUND.map.many)], 0.5);
+  if (least > widthMm || found.output.rows.length > MOST_ROWS) return [stack([head, words(AROUND.map.many)], 0.5)];
   const drawn = (map: PairMap, width: number): Block => ({ widthMm: width, ...drawPairMap(map, width, measure) });
-  const both =
-    least <= half
-      ? beside([drawn(found.output, half), drawn(found.off, half)], GAP_MM)
-      : stack([drawn(found.output, widthMm), drawn(found.off, widthMm)], 3);
-  const legend = drawLegend(mapSigns(), widthMm, measure);
-  return stack([head, both, { widthMm, ...legend }, words(AROUND.map.words)], 1);
+  const signs = [{ widthMm, ...drawLegend(mapSigns(), widthMm, measure) }, words(AROUND.map.words)];
+  if (least <= half)
+    return [stack([head, beside([drawn(found.output, half), drawn(found.off, half)], GAP_MM), ...signs], 1)];
+  return [stack([head, drawn(found.output, widthMm)], 1), stack([drawn(found.off, widthMm), ...signs], 1)];
 }
 
-/** More rows in two grids do not go on a page. */
-const MOST_ROWS = 24;
+/** More rows than these are no picture any more. */
+const MOST_ROWS = 26;
 
 /** What every position tunes with the balanced pair. Null where there is none. */
 export function setRanges(record: FiguresRecord, around: Around, widthMm: number, measure: Measure): Parted | null {

@@ -35,8 +35,8 @@ function around(record: ReferenceRecord, pages: Filling, widthMm: number, measur
   const { part } = AROUND;
   pages.page(part);
   pages.put(set.connected(found, wireAerialCautions(found.aerial?.kind ?? null), widthMm, measure), part);
-  for (const block of [set.uses(found, widthMm, measure), set.maps(found, widthMm, measure)])
-    if (block !== null) pages.put(block, part);
+  const uses = set.uses(found, widthMm, measure);
+  for (const block of [...(uses === null ? [] : [uses]), ...set.maps(found, widthMm, measure)]) pages.put(block, part);
   const ranges = set.setRanges(record, found, widthMm, measure);
   if (ranges !== null) pages.putParted(ranges, part);
   const notes = set.aroundNotes(found, widthMm, measure);
