@@ -105,7 +105,7 @@ export async function killLots({ kills, seed, say = () => undefined }) {
       }
       // Later moments weigh as much as earlier ones though what was finished makes the next run shorter.
       for (let times = n % 2 === 0 ? 1 : 3; times > 0; times--) {
-        if (!(await run(base, out, 50 + next() * wholeMs))) break;
+        if (!(await run(base, out, (0.15 + next()) * wholeMs))) break;
         killed++;
         const stage = stageOf(base, out);
         stages.set(stage, (stages.get(stage) ?? 0) + 1);
