@@ -28,7 +28,7 @@ export const AROUND_NOTES = {
   noDetector: 'The job has no detector: one of 1 MΩ is taken, which draws next to nothing.',
   slides: 'The second winding is counted at its tightest place.',
   short: (tuned: number, all: number, from: string, to: string) =>
-    `No pair of contacts tunes all ${all} frequencies from ${from} to ${to} with both on turns in use; the best tune ${tuned}. A smaller capacitor in series with the aerial (aerial.series), or a lower tap for it, pulls the coil less.`,
+    `No pair of contacts tunes all ${all} frequencies from ${from} to ${to} with both on turns in use; the best tune ${tuned}. A smaller capacitor in series with the aerial (aerial.series), or a looser place for it, pulls the coil less.`,
   none: 'No pair of contacts tunes any of these frequencies with both on turns in use: the aerial is too large for the coil. Put a capacitor in series with it (aerial.series).',
   quarter: (from: string) =>
     `From ${from} on, 0.6 of its quarter wave, the wire is no longer a capacitor with an inductance: figures above that are a guide only.`,
