@@ -1,5 +1,6 @@
 /** The starter jobs, one a user. Each is also a test. */
 
+import coupled from './coupled-aerial-receiver.yaml';
 import cracked from './cracked-form-replacement.yaml';
 import forty from './forty-coil-lot.yaml';
 import bench from './low-bench-receiver.yaml';
@@ -20,4 +21,5 @@ export const STARTERS: readonly [Starter, ...Starter[]] = [
     text: cracked,
   },
   { name: 'forty-coil-lot', use: 'a lot: an inductance range shared out among taps', text: forty },
+  { name: 'coupled-aerial-receiver', use: 'an aerial on a second winding that slides, and a detector', text: coupled },
 ];

@@ -12,6 +12,6 @@ export const LOTS: readonly [LotStarter, ...LotStarter[]] = [
     name: 'saltmarsh-lot',
     use: 'forty coils of three jobs, with reels and printers: for lot',
     text: saltmarsh,
-    jobs: STARTERS,
+    jobs: STARTERS.filter(({ name }) => saltmarsh.includes(`job: ${name}.yaml`)),
   },
 ];

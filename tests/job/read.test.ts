@@ -190,6 +190,7 @@ describe('a job', () => {
       return `${name}: ${job.want.kind}, ${job.former.kind}, ${job.winding.hand}`;
     });
     expect(read).toEqual([
+      'coupled-aerial-receiver.yaml: range, printed, right',
       'cracked-form-replacement.yaml: list, tube, left',
       'forty-coil-lot.yaml: range, printed, right',
       'low-bench-receiver.yaml: band, printed, right',

@@ -20,7 +20,8 @@ function readCoupling(raw: unknown): Parsed<Range> {
     return refused(shown(raw), 'write one number, or two with "to" between');
   const written = String(raw);
   const one = isRange(written) ? null : parseQuantity(written, 'ratio');
-  if (one?.ok === false) return { ...one, expected: EXPECTED };
+  if (one?.ok === false)
+    return refused(one.got, `write a number from ${COUPLINGS.least} to ${COUPLINGS.most}, or two with "to" between`);
   const both = one === null ? parseRange(written, 'ratio') : null;
   if (both?.ok === false) return { ...both, expected: EXPECTED };
   const found = both?.ok ? both.value : { low: one!.value, high: one!.value };

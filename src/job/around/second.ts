@@ -115,8 +115,8 @@ export function checkSecond({ second, former }: Readable): Finding[] {
     add(
       'pitch',
       'second-pitch',
-      `a pitch of ${lengthText(pitch)} for wire ${lengthText(wire.wire.overallMm)} thick`,
-      `${lengthText(wire.wire.overallMm)} or more`,
+      `a pitch of ${lengthText(pitch, 3)} for wire ${lengthText(wire.wire.overallMm, 3)} thick`,
+      `${lengthText(wire.wire.overallMm, 3)} or more`,
       'widen second.pitch, or take a thinner wire',
     );
   return found;
