@@ -1,7 +1,8 @@
 /** One writer a folder. The lock is a file beside the folder that names its process. */
 import { randomBytes } from 'node:crypto';
-import { lstat, open, readFile, rename, rm } from 'node:fs/promises';
+import { lstat, open, readdir, readFile, rename, rm } from 'node:fs/promises';
 import { hostname } from 'node:os';
+import { basename, dirname, join } from 'node:path';
 import { setTimeout as wait } from 'node:timers/promises';
 import { Fault } from '../fault.ts';
 import { isErrno } from './faults.ts';
@@ -24,7 +25,10 @@ export async function lock(path: string, target: string, patienceMs = 10_000): P
   const mine: Holder = { pid: process.pid, host: hostname(), token: randomBytes(8).toString('hex') };
   const until = Date.now() + patienceMs;
   for (;;) {
-    if (await create(path, mine)) return () => release(path, mine);
+    if (await create(path, mine)) {
+      await sweep(path);
+      return () => release(path, mine);
+    }
     const text = await readFile(path, 'utf8').catch(() => null);
     if (text !== null && (await isStale(path, text))) {
       await remove(path, text);
@@ -85,8 +89,22 @@ async function remove(path: string, text: string): Promise<void> {
     if (isErrno(error, 'ENOENT')) return;
     throw error;
   }
-  if ((await readFile(aside, 'utf8')) === text) await rm(aside, { force: true });
+  const found = await readFile(aside, 'utf8').catch(() => null);
+  // Gone: another run has swept it, which it does only with a lock that nobody holds.
+  if (found === null || found === text) await rm(aside, { force: true });
   else await rename(aside, path);
+}
+
+/** Clears away locks of processes that are gone, which a run killed in {@link remove} had put aside. */
+async function sweep(path: string): Promise<void> {
+  const folder = dirname(path);
+  const aside = `${basename(path)}-`;
+  for (const name of await readdir(folder).catch(() => [])) {
+    if (!name.startsWith(aside) || !/^[0-9a-f]{8}$/.test(name.slice(aside.length))) continue;
+    const left = join(folder, name);
+    const text = await readFile(left, 'utf8').catch(() => null);
+    if (text !== null && (await isStale(left, text))) await rm(left, { force: true });
+  }
 }
 
 async function release(path: string, mine: Holder): Promise<void> {

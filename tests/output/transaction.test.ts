@@ -280,6 +280,19 @@ describe('the lock', () => {
     expect(existsSync(path)).toBe(false);
   });
 
+  it('put aside by a run that was killed then is cleared away, that of a living process is not', async () => {
+    const base = scratch();
+    const coil = join(base, 'coil');
+    const path = namesBeside(coil).lock;
+    const text = (pid: number) => JSON.stringify({ pid, host: hostname(), token: 'x' });
+    writeFileSync(`${path}-00c0ffee`, text(deadPid()));
+    writeFileSync(`${path}-0badcafe`, text(process.pid));
+    writeFileSync(`${path}-mine`, text(deadPid()));
+    await writeFolder(coil, FIRST);
+    const beside = Object.keys(below(base)).filter((name) => name.startsWith('.'));
+    expect(beside.sort()).toEqual(['.coil.coilwright-lock-0badcafe', '.coil.coilwright-lock-mine']);
+  });
+
   it('half made is taken over when it is old', async () => {
     const coil = join(scratch(), 'coil');
     const path = namesBeside(coil).lock;
