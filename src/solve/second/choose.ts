@@ -15,6 +15,8 @@ export const MET = 5e-3;
 export const NEAR_ENOUGH = 0.05;
 /** Share of the main coil's turns to begin with. */
 const FIRST_SHARE = 0.1;
+/** Where more turns couple by this share of the most that fewer did, still more are not tried. */
+const PAST = 0.97;
 /** Longer than so many times the main coil more turns couple no tighter. */
 const LONGEST_SHARE = 1.5;
 
@@ -90,10 +92,13 @@ export function chooseSecond(
   const last =
     given ?? Math.max(first, Math.min(MOST_SECOND_TURNS, Math.ceil((LONGEST_SHARE * mainMm) / turns.shape.pitchMm)));
   const tried: Reached[] = [];
+  let most = 0;
   for (let n = first; n <= last; n++) {
     const one = reached(turns, room, n, sliding ? coupling.highest : null);
     if (one === null) break;
     tried.push(one);
+    most = Math.max(most, one.most);
+    if (one.most < PAST * most) break;
     if (one.most < coupling.highest || one.least > coupling.lowest) continue;
     const far = room.way > 0 ? room.bounds(n).highMm : room.bounds(n).lowMm;
     const startMm = turns.placeFor(n, coupling.highest, one.tightMm, far);
