@@ -37,6 +37,10 @@ export const DEFAULTS = {
   'shop.meter': '100 kHz',
   'shop.meter-accuracy': '1 %',
   'shop.capacitor-tolerance': '1 %',
+  'shop.generator': '50 ohm',
+  'shop.generator-coupling': '1 pF',
+  'shop.probe-capacitance': '10 pF',
+  'shop.probe-resistance': '10 Mohm',
   'as-made.diameter': '0 mm',
   'as-made.pitch': '0 %',
   'second.pitch': 'close',
@@ -46,6 +50,14 @@ export const DEFAULTS = {
   'detector.to': 'best',
   units: 'metric',
 } as const;
+
+/** What a job says of generator and probe; where it says nothing of any, nobody is asked to measure with them. */
+export const INSTRUMENT_KEYS = [
+  'shop.generator',
+  'shop.generator-coupling',
+  'shop.probe-capacitance',
+  'shop.probe-resistance',
+] as const;
 
 export type Data = Record<string, unknown>;
 export type Assumed = Record<string, string | number | boolean | readonly string[]>;

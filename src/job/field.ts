@@ -174,13 +174,24 @@ export function scales(doc: Doc) {
 
 /** Words, or else a length: the pitch. */
 export function choiceOrLength<const W extends string>(words: readonly W[], doc: Doc) {
+  return choiceOr(words, 'length', doc, '0.6 mm');
+}
+
+/** Words, or else a quantity of a kind. */
+export function choiceOr<const W extends string>(
+  words: readonly W[],
+  kind: KindName,
+  doc: Doc,
+  example = KINDS[kind].example,
+) {
   return field<W | number>(
     (raw) => {
       if (typeof raw === 'string' && !/\d/.test(raw)) {
         const chosen = readChoice(raw, words);
-        return chosen.ok ? chosen : { ...chosen, expected: `${chosen.expected}, or a length such as 0.6 mm` };
+        const { noun } = KINDS[kind];
+        return chosen.ok ? chosen : { ...chosen, expected: `${chosen.expected}, or ${noun} such as ${example}` };
       }
-      return readQuantity(raw, 'length', {});
+      return readQuantity(raw, kind, {});
     },
     doc,
     { anyOf: [{ enum: [...words] }, { type: 'string' }] },

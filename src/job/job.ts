@@ -116,6 +116,19 @@ export interface Shop {
   /** Ascending. */
   readonly capacitorsPf: readonly number[];
   readonly capacitorTolerance: number;
+  /** Absent of a record from before they were asked for; what is usual is then taken. */
+  readonly instruments?: BenchInstruments | undefined;
+}
+
+/** Generator and oscilloscope probe at the hot end. */
+export interface BenchInstruments {
+  readonly generatorOhm: number;
+  /** Between generator and hot end; null: a loop so loose that it loads nothing. */
+  readonly couplingPf: number | null;
+  readonly probePf: number;
+  readonly probeOhm: number;
+  /** Whether the job says anything of them. */
+  readonly stated: boolean;
 }
 
 /** What a bench makes of a plan. */

@@ -8,7 +8,7 @@ import type { Wire } from '../stock/wire.ts';
 import { toAerial, toDetector } from './around/aerial.ts';
 import { toSecond } from './around/second.ts';
 import { crossCheck, type Readable } from './checks.ts';
-import { type Assumed, complete, isData } from './defaults.ts';
+import { type Assumed, complete, INSTRUMENT_KEYS, isData } from './defaults.ts';
 import { faultsOf, keyText } from './faults.ts';
 import type { Values } from './field.ts';
 import type { Diameters, Job, Want } from './job.ts';
@@ -128,6 +128,13 @@ export function toJob(read: ReadJob, tree: Tree, assumed: Assumed, file: string)
       meterAccuracy: shop['meter-accuracy'],
       capacitorsPf: ascending(shop.capacitors),
       capacitorTolerance: shop['capacitor-tolerance'],
+      instruments: {
+        generatorOhm: shop.generator,
+        couplingPf: shop['generator-coupling'] === 'loop' ? null : shop['generator-coupling'],
+        probePf: shop['probe-capacitance'],
+        probeOhm: shop['probe-resistance'],
+        stated: INSTRUMENT_KEYS.some((key) => !Object.hasOwn(assumed, key)),
+      },
     },
     asMade: { diameterMm: read['as-made']?.diameter ?? 0, pitch: read['as-made']?.pitch ?? 0 },
     parts: read.parts ?? null,

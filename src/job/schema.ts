@@ -10,6 +10,7 @@ import { aerialSchema, detectorSchema } from './around/aerial-schema.ts';
 import { secondSchema } from './around/second-schema.ts';
 import {
   choice,
+  choiceOr,
   choiceOrLength,
   choiceOrList,
   count,
@@ -193,6 +194,23 @@ const shopSchema = z
       'Known capacitors to measure resonance with; two or more, the smaller and the greater far apart, for the two-capacitor method.',
     ),
     'capacitor-tolerance': quantity('ratio', 'How well they are known.'),
+    generator: quantity('resistance', 'Of the source of the signal generator: 50 ohm, or 600 ohm of an older one.'),
+    'generator-coupling': choiceOr(
+      ['loop'],
+      'capacitance',
+      'What it is coupled to the hot end by: a capacitance such as 1 pF, or loop for one so loose that it loads nothing.',
+    ),
+    'probe-capacitance': quantity(
+      'capacitance',
+      'Of the oscilloscope probe, which lies at the hot end; 0 pF without.',
+      {
+        zero: true,
+      },
+    ),
+    'probe-resistance': quantity(
+      'resistance',
+      'Of the probe. At radio frequency it is far below that at DC: its data sheet tells.',
+    ),
   })
   .describe('What is on the bench: for arbor and winding stand, and to measure with.');
 

@@ -23,6 +23,7 @@ import { secondEntryOf, secondPlacesOf } from './around-second.ts';
 import { checksOf } from './checks.ts';
 import { figuresOf } from './figures.ts';
 import { hashOf } from './hash.ts';
+import { instrumentsOf } from './instruments.ts';
 import { measuringOf } from './meter.ts';
 import { askedFor, bedsOf, entriesOf, printerOf, wantedOf } from './printed.ts';
 import { decimals, deg, mm, significant } from './rounding.ts';
@@ -230,7 +231,10 @@ export function makeRecord(
   const lossFactor = fieldLoss(job, chosen);
   const winding = windingOf(job, chosen, figures.taps);
   const spread = spreadOf(job, chosen);
-  const measuring = measuringOf(working, winding.taps, job.shop, spread, conditions.lossTangent);
+  const measuring = {
+    ...measuringOf(working, winding.taps, job.shop, spread, conditions.lossTangent),
+    instruments: instrumentsOf(working, winding.taps, job.shop, conditions.lossTangent),
+  };
   const { candidate } = chosen;
   const {
     record: { around: _, ...printed },

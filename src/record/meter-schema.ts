@@ -1,5 +1,6 @@
 /** What instruments on the bench will show of the finished coil, in the record. Keys end in their unit. */
 import * as z from 'zod';
+import { instrumentsSchema } from './instruments-schema.ts';
 
 const num = z.number();
 
@@ -47,6 +48,7 @@ export const measuringSchema = z.strictObject({
   lengths: z.array(lengthSchema),
   resonances: z.array(resonanceSchema).describe('every tap with every known capacitor, taps first'),
   line: lineSchema.describe('for the method of two capacitors'),
+  instruments: instrumentsSchema.optional().describe('with generator and probe on it; absent of older records'),
 });
 
 export type Measuring = z.infer<typeof measuringSchema>;

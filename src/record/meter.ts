@@ -6,61 +6,25 @@
 import { formerLossOhm } from '../coil/positions.ts';
 import type { Spread } from '../coil/tolerance.ts';
 import type { WorkingCoil } from '../coil/working-coil.ts';
-import type { Shop } from '../job/job.ts';
-import { resonanceBracket } from '../physics/coupled/coupled.ts';
-import { terminalImpedance } from '../physics/field/field.ts';
+import {
+  type AtKhz,
+  type Bench,
+  CLIP_PF,
+  resonanceAt,
+  SELF_SPREAD,
+  sectionsAt,
+  workedBetween,
+} from './bench-figures.ts';
 import type { Doubt, Measuring } from './meter-schema.ts';
 import { decimals, mm, significant } from './rounding.ts';
 import type { Tap } from './schema.ts';
 
 /** Of the clip leads of a meter, zeroed shorted: what a few centimetres that lie otherwise leave (common practice). */
 const LEAD_UH = 0.02;
-/** What clips and a loose coupling put across the coil (common practice). */
-const CLIP_PF = 1;
-/** Medhurst's table is stated to 5 %. */
-const SELF_SPREAD = 0.05;
 /** Below this the meter sees more resistance than coil. */
 const LEAST_Q = 1;
 /** Share of the reactance that the capacitance may take before a reading is one of a resonance rather than of a coil. */
 const MOST_RISE = 0.5;
-
-type Bench = Pick<Shop, 'meterKhz' | 'meterAccuracy' | 'capacitorsPf' | 'capacitorTolerance'>;
-
-interface AtKhz {
-  readonly inductanceUh: number;
-  readonly resistanceOhm: number;
-}
-
-/** So low that no current crowds. */
-const NO_CROWDING_KHZ = 1e-3;
-
-/**
- * Inductance and resistance of every tap from the start, the rest open; one solution of the field serves all. Where sections end
- * within a turn their sum is a few parts in a thousand off the whole, at every frequency alike: the share by which the current's
- * crowding lowers it is taken from there, and the inductance itself from the ring sum.
- */
-function sectionsAt(coil: WorkingCoil, kHz: number): AtKhz[] {
-  const [solved, plain] = [coil.sections(kHz, coil.taps), coil.sections(NO_CROWDING_KHZ, coil.taps)];
-  return coil.taps.map((turn, i) => {
-    const used = { from: 0, to: i + 1 };
-    const { inductance, resistance } = terminalImpedance(solved, used, 'open');
-    const share = inductance / terminalImpedance(plain, used, 'open').inductance;
-    return { inductanceUh: share * coil.coil.inductanceUh(turn), resistanceOhm: resistance };
-  });
-}
-
-/**
- * First resonance with so much capacitance from the start to a turn: start earthed, no leads. kHz, and half of what is not known.
- * Pieces of turns make the circuit's own inductance a little off, as in `sectionsAt`: that is put right here.
- */
-function resonanceAt(coil: WorkingCoil, turn: number, pf: number): { kHz: number; halfKhz: number } {
-  const { winding, on } = coil.circuit(turn, pf, 'open');
-  const { first } = resonanceBracket(winding, { ...on, earthed: 'from', strays: [] });
-  const node = winding.nodes.findIndex((each) => Math.abs(each - turn) < 1e-6);
-  const circuitUh = winding.fromStart[node * winding.nodes.length + node]! * 1e6;
-  const scale = Math.sqrt(circuitUh / coil.coil.inductanceUh(turn)) / 1e3;
-  return { kHz: first.mean * scale, halfKhz: first.uncertainty * scale };
-}
 
 /**
  * The inductance that a meter shows at its frequency: of the capacitor that would resonate with the turns there, so that the
@@ -137,35 +101,15 @@ function meterTap(
   };
 }
 
-/** Frequencies at which the crowding of the current is worked out; between them it is taken in between in their logarithm. */
-const MOST_SOLVED = 5;
-
-/** Low-frequency inductance over that of the field, of every tap, at any frequency between two. */
-function crowdingBetween(coil: WorkingCoil, lowKhz: number, highKhz: number): (index: number, kHz: number) => number {
-  const ratio = highKhz / lowKhz;
-  const count = Math.min(MOST_SOLVED, 1 + Math.ceil(Math.log2(ratio) + 1e-9));
-  const solved = Array.from({ length: count }, (_, i) =>
-    sectionsAt(coil, lowKhz * ratio ** (count > 1 ? i / (count - 1) : 0)).map(
-      ({ inductanceUh }, tap) => coil.coil.inductanceUh(coil.taps[tap]!) / inductanceUh,
-    ),
-  );
-  return (index, kHz) => {
-    if (count === 1) return solved[0]![index]!;
-    const place = Math.min(Math.max((Math.log(kHz / lowKhz) / Math.log(ratio)) * (count - 1), 0), count - 1);
-    const i = Math.min(Math.floor(place), count - 2);
-    return solved[i]![index]! + (place - i) * (solved[i + 1]![index]! - solved[i]![index]!);
-  };
-}
-
 function resonancesOf(coil: WorkingCoil, taps: readonly Tap[], shop: Bench): Measuring['resonances'] {
   const plain = taps.flatMap((tap, index) =>
     shop.capacitorsPf.map((pf) => ({ tap, index, pf, ...resonanceAt(coil, coil.taps[index]!, pf) })),
   );
   if (plain.length === 0) return [];
   const all = plain.map(({ kHz }) => kHz);
-  const crowding = crowdingBetween(coil, Math.min(...all), Math.max(...all));
+  const worked = workedBetween(coil, Math.min(...all), Math.max(...all));
   return plain.map(({ tap, index, pf, kHz: plainKhz, halfKhz }) => {
-    const kHz = plainKhz * Math.sqrt(crowding(index, plainKhz));
+    const kHz = plainKhz * Math.sqrt(worked(index, plainKhz).crowding);
     const own = coil.coil.selfPf(coil.taps[index]!);
     const capacitance = Math.hypot(shop.capacitorTolerance * pf, SELF_SPREAD * own, CLIP_PF) / (2 * (pf + own));
     const inductance = (tap.inductanceHighUh - tap.inductanceLowUh) / (4 * tap.inductanceUh);

@@ -33,6 +33,16 @@ export const shopSchema = z.strictObject({
   meterAccuracy: num.describe('a fraction of the reading'),
   capacitorsPf: z.array(num).describe('known capacitors, ascending'),
   capacitorTolerance: num.describe('a fraction'),
+  instruments: z
+    .strictObject({
+      generatorOhm: num,
+      couplingPf: num.nullable().describe('between generator and hot end; null: a loose loop that loads nothing'),
+      probePf: num,
+      probeOhm: num,
+      stated: z.boolean().describe('false: nothing was said of them, what is usual was taken'),
+    })
+    .optional()
+    .describe('generator and oscilloscope probe; absent of older records'),
 });
 
 export const partSchema = z.strictObject({

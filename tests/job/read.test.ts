@@ -89,6 +89,10 @@ describe('a job', () => {
       'shop.meter-accuracy': '1 %',
       'shop.capacitor-tolerance': '1 %',
       'shop.capacitors': ['100 pF', '330 pF'],
+      'shop.generator': '50 ohm',
+      'shop.generator-coupling': '1 pF',
+      'shop.probe-capacitance': '10 pF',
+      'shop.probe-resistance': '10 Mohm',
       units: 'metric',
     });
   });
