@@ -38,7 +38,19 @@ export const TAP_LAYOUTS = ['auto', 'in line', 'staggered'] as const;
 export const BODIES = ['full', 'ribbed'] as const;
 export const MOUNTINGS = ['ears', 'base', 'none'] as const;
 /** What can be printed; `all` in a job stands for every one that suits its former. */
-export const PARTS = ['former', 'arbor', 'stand', 'saddle', 'comb', 'loop gauge', 'coupon'] as const;
+export const PARTS = [
+  'former',
+  'second former',
+  'carriage',
+  'arbor',
+  'stand',
+  'saddle',
+  'comb',
+  'loop gauge',
+  'coupon',
+] as const;
+/** Of these every coil has its own; the others are jigs that serve any number of them. */
+export const COIL_PARTS: readonly (typeof PARTS)[number][] = ['former', 'second former', 'carriage'];
 export const SHAFTS = ['round', 'hexagon'] as const;
 export const UNITS = ['metric', 'inch', 'both'] as const;
 export const PREFERENCES = ['least loss', 'compact', 'least wire', 'closest taps'] as const;

@@ -7,6 +7,7 @@
 import type { Job } from '../job/job.ts';
 import { slug } from '../job/name.ts';
 import { canonicalText } from '../record/hash.ts';
+import { ownPartsOf } from '../record/printed.ts';
 import type { Lot } from './types.ts';
 
 export interface KindToPlan {
@@ -51,6 +52,5 @@ export function kindsOf(lot: Lot): KindToPlan[] {
 
 /** The job as it is made in this lot: on its paper, with or without jigs. */
 function jobInLot(job: Job, { paper, jigs }: Lot): Job {
-  const formerAlone = job.former.kind === 'printed' ? (['former'] as const) : [];
-  return { ...job, paper, parts: jigs === 'once' ? job.parts : formerAlone };
+  return { ...job, paper, parts: jigs === 'once' ? job.parts : ownPartsOf(job) };
 }

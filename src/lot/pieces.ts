@@ -1,4 +1,5 @@
-/** The printed parts of a lot as pieces to lay out: formers as often as there are coils, jigs once, equal ones once for all kinds. */
+/** The printed parts of a lot as pieces to lay out: formers and what else belongs to a coil as often as there are coils, jigs once, equal ones once for all kinds. */
+import { COIL_PARTS } from '../job/schema.ts';
 import type { PartEntry } from '../record/schema.ts';
 import type { LotPiece } from './beds.ts';
 import type { PlannedKind } from './planned.ts';
@@ -29,7 +30,7 @@ export function piecesOf(kinds: readonly PlannedKind[]): LotPiece[] {
 }
 
 const partsOf = ({ record }: PlannedKind, formers: boolean): PartEntry[] =>
-  record.parts.filter((part) => (part.kind === 'former') === formers);
+  record.parts.filter(({ kind }) => COIL_PARTS.includes(kind) === formers);
 
 const settingsOf = ({ record: { printer } }: PlannedKind) => ({
   layerMm: printer.layerMm,
@@ -45,7 +46,7 @@ function fileHash({ record }: PlannedKind, { path }: PartEntry): string {
 
 function piece(kind: PlannedKind, entry: PartEntry, letters: readonly string[], quantity: number): LotPiece {
   const { part, name, material, sizeMm, massG } = entry;
-  const perCoil = entry.kind === 'former' ? entry.quantity : 0;
+  const perCoil = COIL_PARTS.includes(entry.kind) ? entry.quantity : 0;
   return {
     kind: kind.kind,
     part,

@@ -1,5 +1,6 @@
 /** Makes the record of a lot out of its planned kinds: wire from reels, parts on beds, beds on machines. */
 
+import { COIL_PARTS } from '../job/schema.ts';
 import { tidy } from '../quantity/format.ts';
 import { hashOf } from '../record/hash.ts';
 import { decimals, significant } from '../record/rounding.ts';
@@ -58,7 +59,7 @@ function lineOf({ kind, folder, job, serials, record }: PlannedKind): LotKind {
   const chosen = job.wires === 'stock' ? undefined : job.wires.find(({ name }) => name === winding.wire.name);
   const wire = chosen ?? wireNamed(winding.wire.name);
   if (wire === undefined) throw new Error(`${winding.wire.name} is neither in the job nor in stock`);
-  const formers = record.parts.filter((part) => part.kind === 'former');
+  const formers = record.parts.filter((part) => COIL_PARTS.includes(part.kind));
   return {
     kind,
     job: record.job,

@@ -6,16 +6,20 @@ import { Fault, type FaultParts } from '../fault.ts';
 import type { PartKind } from '../job/job.ts';
 import type { PartsRecord } from '../record/schema.ts';
 import { arborParts } from './arbor.ts';
+import { carriageParts } from './carriage.ts';
 import { combParts } from './comb.ts';
 import { couponParts } from './coupon.ts';
 import { formerParts } from './former.ts';
 import { loopGaugeParts } from './loop-gauge.ts';
 import { saddleParts } from './saddle.ts';
+import { secondParts } from './second.ts';
 import type { Solid } from './solid.ts';
 import { standParts } from './stand.ts';
 
 const MAKERS: Readonly<Record<PartKind, (record: PartsRecord) => Solid[]>> = {
   former: formerParts,
+  'second former': secondParts,
+  carriage: carriageParts,
   arbor: arborParts,
   stand: standParts,
   saddle: saddleParts,

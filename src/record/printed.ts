@@ -1,6 +1,7 @@
 /** What of the record concerns printing: the printer, which parts are wanted, and the list of the parts themselves. */
+import { slides } from '../job/around/second.ts';
 import type { Job, PartKind } from '../job/job.ts';
-import { PARTS } from '../job/schema.ts';
+import { COIL_PARTS, PARTS } from '../job/schema.ts';
 import { layOutBeds } from '../parts/bed-layout.ts';
 import { type Solid, stlPath } from '../parts/solid.ts';
 import type { Design } from '../solve/design.ts';
@@ -15,21 +16,38 @@ export function printerOf({ printer }: Job): PrinterFigures {
   return { ...rest, scale: [...scale], material: found.material.name, densityGCm3: found.material.densityGPerCm3 };
 }
 
+/** What belongs to a second winding. */
+function secondParts({ second }: Job): Partial<Record<PartKind, boolean>> {
+  const own = second !== null && second.kind !== 'same former';
+  // A sleeve that stays where it is lies on the winding.
+  return { 'second former': own, carriage: own && (second.kind !== 'sleeve' || slides(second)) };
+}
+
+/** The parts that a coil cannot do without, whatever jigs there are. */
+export function ownPartsOf(job: Job): PartKind[] {
+  const has: Partial<Record<PartKind, boolean>> = { former: job.former.kind === 'printed', ...secondParts(job) };
+  return COIL_PARTS.filter((part) => has[part]);
+}
+
 /** The parts that suit a coil: what its former and its way of winding have no use for is left out. */
-function suitable({ former, method, candidate }: Pick<Design, 'former' | 'method' | 'candidate'>): PartKind[] {
-  const not: Partial<Record<PartKind, boolean>> = {
-    former: former.kind !== 'printed',
-    saddle: former.kind === 'printed',
-    comb: candidate.pitch.kind !== 'spacer',
-    'loop gauge': method.name !== 'twisted loop',
+function suitable(
+  job: Job,
+  { former, method, candidate }: Pick<Design, 'former' | 'method' | 'candidate'>,
+): PartKind[] {
+  const has: Partial<Record<PartKind, boolean>> = {
+    former: former.kind === 'printed',
+    ...secondParts(job),
+    saddle: former.kind !== 'printed',
+    comb: candidate.pitch.kind === 'spacer',
+    'loop gauge': method.name === 'twisted loop',
   };
-  return PARTS.filter((part) => not[part] !== true);
+  return PARTS.filter((part) => has[part] !== false);
 }
 
 /** Left out, all but the winding stand, which is hours of printing and serves every later coil too. */
 export function wantedOf(job: Job, design: Pick<Design, 'former' | 'method' | 'candidate'>): PartKind[] {
-  if (job.parts === null) return suitable(design).filter((part) => part !== 'stand');
-  if (job.parts.includes('all')) return suitable(design);
+  if (job.parts === null) return suitable(job, design).filter((part) => part !== 'stand');
+  if (job.parts.includes('all')) return suitable(job, design);
   return PARTS.filter((part) => job.parts?.includes(part));
 }
 

@@ -15,6 +15,7 @@ import { splitRecord } from '../helpers/joints.ts';
 import { layoutBoxes, layoutFaults } from '../helpers/layout.ts';
 import { readPdf } from '../helpers/pdf.ts';
 import { sampleRecord } from '../helpers/sample.ts';
+import { withSecondWinding } from '../helpers/second.ts';
 
 const measure = new Paper({ title: 'measure', subject: 'measure' });
 
@@ -193,7 +194,10 @@ describe('parts sheet, read back', () => {
     let parts = 0;
     for (const kind of ['printed', 'tube'] as const) {
       const not = kind === 'printed' ? 'saddle' : 'former';
-      const record = { ...sampleRecord({ kind }), wanted: PARTS.filter((part) => part !== not) };
+      const record = {
+        ...withSecondWinding(sampleRecord({ kind }), { kind: kind === 'printed' ? 'inner' : 'sleeve', travelMm: 30 }),
+        wanted: PARTS.filter((part) => part !== not),
+      };
       const views = viewsOf(record);
       for (const { part } of partsOf(record)) {
         expect(views.get(part)?.length ?? 0, part).toBeGreaterThan(0);
@@ -234,7 +238,13 @@ describe('parts sheet, read back', () => {
 });
 
 describe('parts sheet in other units', () => {
-  const jigs = { ...sampleRecord(), wanted: PARTS.filter((part) => part !== 'saddle') };
+  const sample = withSecondWinding(sampleRecord(), { kind: 'beside', travelMm: 40, turns: 14 });
+  const jigs = {
+    ...sample,
+    // So that no length reads like a mass.
+    printer: { ...sample.printer, clearanceMm: 0.4 },
+    wanted: PARTS.filter((part) => part !== 'saddle'),
+  };
 
   test.each(['inch', 'both'] as const)('%s: every size of every part, and nothing overlaps', (units) => {
     const record = { ...withParts(jigs, []), units };

@@ -3,15 +3,19 @@ import type { PartKind } from '../../job/job.ts';
 import type { PartsRecord } from '../../record/schema.ts';
 import type { View } from '../views.ts';
 import { arborViews } from './arbor-views.ts';
+import { carriageViews } from './carriage-views.ts';
 import { combViews } from './comb-views.ts';
 import { couponViews } from './coupon-views.ts';
 import { formerViews } from './former-views.ts';
 import { loopGaugeViews } from './loop-gauge-views.ts';
 import { saddleViews } from './saddle-views.ts';
+import { secondViews } from './second-views.ts';
 import { standViews } from './stand-views.ts';
 
 const MAKERS: Partial<Record<PartKind, (record: PartsRecord) => Readonly<Record<string, readonly View[]>>>> = {
   former: formerViews,
+  'second former': secondViews,
+  carriage: carriageViews,
   arbor: arborViews,
   stand: standViews,
   saddle: saddleViews,

@@ -11,10 +11,12 @@
  *
  * inner: a tube in the bore, clear of what taps leave there.
  *
- * A sleeve or inner tube whose winding lies beyond the end of the former is as much longer as keeps it guided by a centimetre.
+ * A sleeve or inner tube whose winding lies beyond the end of the former is as much longer as keeps it guided by a centimetre. One
+ * that slides stands out of the former at every place, so that a carriage can hold it there and its scale can be read.
  */
-import type { JobSecond } from '../../job/around/second.ts';
+import { type JobSecond, slides } from '../../job/around/second.ts';
 import type { Job } from '../../job/job.ts';
+import { DISC_MM, STANDS_OUT_MM } from '../../parts/carriage-dimensions.ts';
 import type { Wire } from '../../stock/wire.ts';
 import type { Design } from '../design.ts';
 import { WEB_MM, wireHoleMm } from '../tap-methods.ts';
@@ -134,11 +136,19 @@ export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire,
       got: `taps by ${design.method.name} that stand out from ${mm(taps.lowMm)} up, and ${foot === null ? 'their leads' : 'the foot of the former'} below`,
       expected: 'an end of the main winding over which a sleeve comes on',
     };
-  const standsOn = job.former.mounting !== 'none' ? 0 : Number.NEGATIVE_INFINITY;
-  const free: Spread = {
-    lowMm: taps !== null && way > 0 ? taps.highMm : kind === 'sleeve' ? (foot ?? Number.NEGATIVE_INFINITY) : standsOn,
-    highMm: taps !== null && way < 0 ? taps.lowMm : Number.POSITIVE_INFINITY,
-  };
+  const { lengthMm } = former;
+  const mounted = job.former.mounting !== 'none';
+  // The end of the former at which it stands out: what is screwed down, or has a foot, has only one.
+  const out = way > 0 || (kind === 'sleeve' ? foot !== null : mounted) ? 1 : -1;
+  const [endless, none] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  // An inner tube leaves the other end to what its carriage is held by.
+  const free: Spread =
+    kind === 'sleeve'
+      ? {
+          lowMm: taps !== null && way > 0 ? taps.highMm : (foot ?? none),
+          highMm: taps !== null && way < 0 ? taps.lowMm : endless,
+        }
+      : { lowMm: out > 0 ? DISC_MM : none, highMm: out > 0 ? endless : lengthMm - DISC_MM };
   const play = job.printer.clearanceMm;
   const tube = 2 * LINES.tube * line;
   let body: { insideMm: number; outsideMm: number };
@@ -157,7 +167,6 @@ export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire,
         expected: `room for one ${mm(LEAST_INSIDE_MM + tube)} wide`,
       };
   }
-  const { lengthMm } = former;
   const bounds = (turns: number): Spread => ({
     lowMm: Math.max(free.lowMm + marginMm, -MOST_OFF_MM),
     highMm: Math.min(free.highMm - marginMm - spanMm(turns), lengthMm + MOST_OFF_MM),
@@ -175,9 +184,13 @@ export function roomFor(job: Job, design: Design, second: JobSecond, wire: Wire,
       return Math.max(lowMm, Math.min(GUIDE_MM - marginMm - spanMm(turns), tight + GUIDE_MM - free.highMm));
     },
     bodySpan(turns, tight, loose) {
-      const own = { lowMm: tight - marginMm, highMm: tight + spanMm(turns) + marginMm };
-      if (way > 0) return { ...own, lowMm: Math.min(own.lowMm, lengthMm - GUIDE_MM - (loose - tight)) };
-      return { ...own, highMm: Math.max(own.highMm, GUIDE_MM + (tight - loose)) };
+      let [lowMm, highMm] = [tight - marginMm, tight + spanMm(turns) + marginMm];
+      if (way > 0) lowMm = Math.min(lowMm, lengthMm - GUIDE_MM - (loose - tight));
+      else highMm = Math.max(highMm, GUIDE_MM + (tight - loose));
+      if (!slides(second)) return { lowMm, highMm };
+      if (out > 0) highMm = Math.max(highMm, lengthMm + STANDS_OUT_MM[kind] + Math.max(0, tight - loose));
+      else lowMm = Math.min(lowMm, -STANDS_OUT_MM[kind] - Math.max(0, loose - tight));
+      return { lowMm, highMm };
     },
   };
 }
