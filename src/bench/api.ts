@@ -164,11 +164,20 @@ export interface Correction {
   readonly lacksMm: number;
 }
 
-export type Quantity = 'diameter' | 'length' | 'resistance' | 'inductance' | 'resonance' | 'other';
+/** `probed resonance`: with generator and probe on the coil. `width`: between 0.707 of what the probe shows then. */
+export type Quantity =
+  | 'diameter'
+  | 'length'
+  | 'resistance'
+  | 'inductance'
+  | 'resonance'
+  | 'probed resonance'
+  | 'width'
+  | 'other';
 
 /** Something to measure, with its limits. */
 export interface Question {
-  /** Stable: `former`, `turns-20`, `length-3`, `ohm-3`, `uh-3`, `khz-3-100`, or `check-5` of one that is not known. */
+  /** Stable: `former`, `turns-20`, `length-3`, `ohm-3`, `uh-3`, `khz-3-100`, `probed-3-100`, `width-3-100`, or `check-5` of one that is not known. */
   readonly key: string;
   readonly quantity: Quantity;
   /** Null: not of a tap. */
@@ -183,7 +192,7 @@ export interface Question {
   readonly high: number | null;
   /** Decimals to show. */
   readonly digits: number;
-  /** Of a resonance. */
+  /** Of a resonance or a width; 0: with no capacitor. */
   readonly capacitancePf: number | null;
   /** Of the meter, of an inductance. */
   readonly frequencyKhz: number | null;
@@ -212,7 +221,7 @@ export interface ReadingRow {
   readonly serial: string;
   readonly tap: number | null;
   readonly quantity: string;
-  /** What it was measured with or at: `100 pF`, `23.5 degC`, `100 kHz`; '' none. */
+  /** What it was measured with or at: `100 pF`, `100 pF, probe`, `23.5 degC`, `100 kHz`; '' none. */
   readonly condition: string;
   readonly value: number | null;
   /** In letters of ASCII: mm, ohm, uH, kHz. */

@@ -23,6 +23,9 @@ const FAR: Readonly<Record<Quantity, number>> = {
   resistance: 1.6,
   inductance: 1.6,
   resonance: 1.3,
+  'probed resonance': 1.3,
+  // A shorted turn takes most of Q, and is no slip of the pen.
+  width: 10,
   other: 2,
 };
 /** What units are mistaken by. */
@@ -32,6 +35,8 @@ const SLIPS: Readonly<Record<Quantity, readonly number[]>> = {
   resistance: [1e3],
   inductance: [1e3, 1e6],
   resonance: [1e3, 1e6],
+  'probed resonance': [1e3, 1e6],
+  width: [1e3, 1e6],
   other: [],
 };
 /** How near a slip of the unit comes to what was meant. */
@@ -64,6 +69,7 @@ function misread(
   const other = questionsOf(record).find(
     (one) =>
       tap !== null &&
+      quantity !== 'width' &&
       one.tap !== null &&
       one.tap !== tap &&
       one.quantity === quantity &&
@@ -108,6 +114,25 @@ function inductanceAdvice(record: JudgedRecord, tap: number, uh: number, deviati
   return advice;
 }
 
+/** Over the upper limit of a width by this factor it is no longer a matter of the bench: a shorted turn, or a joint. */
+export const SHORTED_FROM = 2;
+
+function widthAdvice(
+  record: JudgedRecord,
+  { tap, capacitancePf, high }: Question,
+  side: Side,
+  value: number,
+): string[] {
+  const words = VERDICT.width;
+  const row = record.measuring.instruments?.rows.find((one) => one.tap === tap && one.capacitancePf === capacitancePf);
+  const { frequencyKhz = null, q = null } = row ?? {};
+  return [
+    ...(high !== null && value > SHORTED_FROM * high ? [words.shorted] : []),
+    words[side],
+    ...(frequencyKhz === null || q === null ? [] : [words.q((frequencyKhz / value).toFixed(0), q.toFixed(0))]),
+  ];
+}
+
 function doubtAdvice(record: JudgedRecord, { doubt }: Question): string[] {
   if (doubt === null) return [];
   return [VERDICT.doubt(CHECKS.doubts[doubt](short(record.measuring.leadUh, 3)))];
@@ -143,7 +168,8 @@ function adviceOf(
     }
     case 'inductance':
       return [...doubtAdvice(record, question), ...inductanceAdvice(record, tap!, value, deviation, side)];
-    case 'resonance': {
+    case 'resonance':
+    case 'probed resonance': {
       const words = VERDICT.resonance;
       const ratio = (nominal / value) ** 2;
       // As if the meter showed it: its limits and the trims are stated for the meter.
@@ -153,8 +179,11 @@ function adviceOf(
           ? []
           : inductanceAdvice(record, tap!, shown * ratio, 100 * (ratio - 1), side === 'low' ? 'high' : 'low');
       const size = Math.abs(100 * (ratio - 1)).toFixed(1);
-      return [words[side](size), words.couple, ...byInductance];
+      const about = quantity === 'resonance' ? words.couple : VERDICT.probed[side];
+      return [words[side](size), about, ...byInductance];
     }
+    case 'width':
+      return widthAdvice(record, question, side, value);
     case 'other':
       return [VERDICT.other[side]];
   }

@@ -61,7 +61,7 @@ export function readingsPart(app: App): void {
   const whole = (question: Question) => question.tap === null || question.tap === taps;
   const tables: ReadingsTable[] = [
     { caption: words.whole, open: true, readings: all.filter(whole).map(shown) },
-    ...(['length', 'resistance', 'inductance', 'resonance', 'diameter', 'other'] as const).map((quantity) => ({
+    ...(Object.keys(words.byTap) as (keyof typeof words.byTap)[]).map((quantity) => ({
       caption: words.byTap[quantity],
       open: false,
       readings: all.filter((question) => !whole(question) && question.quantity === quantity).map(shown),

@@ -94,7 +94,42 @@ function tapQuestions(record: JudgedRecord, one: Tap): Question[] {
         digits: decimalsOf(entry.frequencyKhz),
         capacitancePf: entry.capacitancePf,
       });
-  return questions;
+  return [...questions, ...probedQuestions(record, tap, where)];
+}
+
+/** Resonance and width with generator and probe on the coil; where the job states such instruments, nobody else has them. */
+function probedQuestions({ measuring, shop }: JudgedRecord, tap: number, where: string): Question[] {
+  if (!shop.instruments?.stated) return [];
+  const rows = measuring.instruments?.rows ?? [];
+  return rows
+    .filter((row) => row.tap === tap)
+    .flatMap((row): Question[] => {
+      const { capacitancePf, frequencyKhz, widthKhz } = row;
+      const pf = short(capacitancePf, 3);
+      const base = { ...PLAIN, tap, unit: 'kHz', capacitancePf };
+      return [
+        {
+          ...base,
+          key: `probed-${tap}-${pf}`,
+          quantity: 'probed resonance',
+          what: VERDICT.what.probed(where, pf),
+          low: row.lowKhz,
+          nominal: frequencyKhz,
+          high: row.highKhz,
+          digits: decimalsOf(frequencyKhz ?? row.aloneKhz),
+        },
+        {
+          ...base,
+          key: `width-${tap}-${pf}`,
+          quantity: 'width',
+          what: VERDICT.what.width(where, pf),
+          low: row.widthLowKhz,
+          nominal: widthKhz,
+          high: row.widthHighKhz,
+          digits: decimalsOf(widthKhz ?? 1),
+        },
+      ];
+    });
 }
 
 /** All questions: former and winding first, then tap by tap. Their keys are stable and differ. */

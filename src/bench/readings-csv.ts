@@ -87,7 +87,11 @@ export interface About {
   readonly remark?: string;
 }
 
+/** What the two that are taken with a probe have in the column `condition`. */
+const PROBED = 'probe';
+
 function conditionOf({ quantity, capacitancePf, frequencyKhz }: Question, celsius: number | null): string {
+  if (quantity === 'probed resonance' || quantity === 'width') return `${capacitancePf} pF, ${PROBED}`;
   if (capacitancePf !== null) return `${capacitancePf} pF`;
   if (frequencyKhz !== null) return `${frequencyKhz} kHz`;
   return quantity === 'resistance' && celsius !== null ? `${celsius} degC` : '';
@@ -106,7 +110,7 @@ export function rowOf(
     record: record.hash,
     serial,
     tap,
-    quantity: tap === null ? `${quantity} ${key}` : quantity,
+    quantity: tap === null ? `${quantity} ${key}` : quantity === 'probed resonance' ? 'resonance' : quantity,
     condition: conditionOf(question, celsius),
     value,
     unit: ASCII_UNITS[unit] ?? unit,

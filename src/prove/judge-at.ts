@@ -5,6 +5,7 @@
 import type { Question } from '../bench/api.ts';
 import type { JudgedRecord } from '../bench/questions.ts';
 import { questionsOf } from '../bench/questions.ts';
+import { instrumentsOf, USUAL } from '../record/instruments.ts';
 import { measuringOf } from '../record/meter.ts';
 import { workingCoilOf } from '../record/rebuild.ts';
 import type { CoilRecord } from '../record/schema.ts';
@@ -23,6 +24,7 @@ const SAME_KHZ = 1e-3;
 function conditionOf(record: CoilRecord, { quantity, capacitancePf, frequencyKhz }: Reading): string | null {
   const { meterKhz } = record.shop;
   if (quantity === 'resonance') return `${capacitancePf} pF`;
+  if (quantity === 'probed resonance' || quantity === 'width') return `${capacitancePf} pF, probe`;
   if (quantity !== 'inductance' || frequencyKhz === null) return null;
   return Math.abs(frequencyKhz / meterKhz - 1) <= SAME_KHZ ? null : `${frequencyKhz} kHz`;
 }
@@ -52,8 +54,27 @@ export class Asking {
     return known;
   }
 
+  /** With generator and probe and one capacitor, 0 for none: what the record has of it, the rest worked out anew. */
+  #probed(pf: number): JudgedRecord {
+    const record = this.#record;
+    const { measuring } = record;
+    const { taps } = record.windings[0]!;
+    const shop = {
+      ...record.shop,
+      capacitorsPf: pf === 0 ? [] : [pf],
+      instruments: { ...(record.shop.instruments ?? USUAL), stated: true },
+    };
+    const anew = instrumentsOf(workingCoilOf(record), taps, shop, record.surroundings.formerLossTangent);
+    const known = measuring.instruments?.rows ?? [];
+    const rows = anew.rows
+      .filter(({ capacitancePf }) => capacitancePf === pf)
+      .map((row) => known.find((one) => one.tap === row.tap && one.capacitancePf === pf) ?? row);
+    return { ...record, shop, measuring: { ...measuring, instruments: { ...anew, rows } } };
+  }
+
   /** With one capacitor, so that it is asked for at every tap; or with a meter of another frequency. */
   #at({ quantity, capacitancePf, frequencyKhz }: Reading): JudgedRecord {
+    if (quantity === 'probed resonance' || quantity === 'width') return this.#probed(capacitancePf!);
     const record = this.#record;
     const { measuring } = record;
     const pf = quantity === 'resonance' ? capacitancePf : null;

@@ -2,12 +2,13 @@
  * Pass, fail or missing, reading by reading, tap by tap, coil by coil. A reading is judged as the bench page judges it.
  *
  * A tap **passes** with one inductance or resonance within its limits at least, and nothing outside. It **fails** with a
- * reading outside its limits; a meter that the record does not trust at that tap fails nothing. Else it is **missing**: no
+ * reading outside its limits; a meter that the record does not trust at that tap fails nothing, and a width only from twice its
+ * upper limit on, for it measures capacitor, probe and coupling as well as the coil. Else it is **missing**: no
  * electrical reading that can be judged, or one so far off that it is not of this coil and has to be taken again. A coil fails
  * with a tap or a reading of no tap (former, 20 turns) that fails; it passes when every tap passes and no reading has to be taken again.
  */
 import { JUDGED } from '../../templates/wording/proof.ts';
-import { judge } from '../bench/judge.ts';
+import { judge, SHORTED_FROM } from '../bench/judge.ts';
 import { SQUARE } from '../record/meter.ts';
 import { decimals, significant } from '../record/rounding.ts';
 import type { CoilRecord } from '../record/schema.ts';
@@ -18,7 +19,7 @@ import type { CoilReadings, Reading } from './types.ts';
 /** A count this far off is a turn off: counts are in whole turns or in what a spoke of the former shows. */
 const MISCOUNT = 0.5;
 
-const ELECTRICAL: readonly Reading['quantity'][] = ['inductance', 'resonance'];
+const ELECTRICAL: readonly Reading['quantity'][] = ['inductance', 'resonance', 'probed resonance'];
 export const isElectrical = ({ quantity }: Pick<Reading, 'quantity'>): boolean => ELECTRICAL.includes(quantity);
 export const isOut = ({ verdict, trusted }: Pick<Judged, 'verdict' | 'trusted'>): boolean =>
   trusted && (verdict === 'low' || verdict === 'high');
@@ -29,6 +30,8 @@ const UNITS = {
   resistance: 'Ω',
   inductance: 'µH',
   resonance: 'kHz',
+  'probed resonance': 'kHz',
+  width: 'kHz',
   turns: '',
   other: '',
 };
@@ -96,7 +99,7 @@ export function judgeReading(record: CoilRecord, asking: Asking, reading: Readin
     high: rounded(high),
     deviationPercent: percent(deviationPercent),
     verdict,
-    trusted: question.doubt === null,
+    trusted: question.doubt === null && (quantity !== 'width' || (high !== null && value > SHORTED_FROM * high)),
     advice: [...advice],
   };
 }
@@ -141,7 +144,7 @@ export function inductanceOff({
 /** Electrical readings that can be judged, those with the narrowest limits first, in terms of the inductance. */
 export function electricalOf(readings: readonly Judged[]): Judged[] {
   const width = ({ quantity, low, nominal, high }: Judged) =>
-    ((high! - low!) / nominal!) * (quantity === 'resonance' ? 2 : 1);
+    ((high! - low!) / nominal!) * (quantity === 'inductance' ? 1 : 2);
   return readings
     .filter((one) => isElectrical(one) && one.low !== null && one.nominal !== null && one.verdict !== 'implausible')
     .sort((a, b) => Number(b.trusted) - Number(a.trusted) || width(a) - width(b));

@@ -20,6 +20,8 @@ const KIND: Readonly<Record<Exclude<What, 'turns' | 'other'>, KindName>> = {
   resistance: 'resistance',
   inductance: 'inductance',
   resonance: 'frequency',
+  'probed resonance': 'frequency',
+  width: 'width',
   dial: 'frequency',
 };
 

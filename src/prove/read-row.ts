@@ -74,7 +74,7 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
     return told(
       'quantity-unknown',
       quote(row.quantity),
-      'inductance, resonance, resistance, length, diameter, turns or dial',
+      'inductance, resonance, width, resistance, length, diameter, turns or dial',
       'use one of these words',
       'quantity',
     );
@@ -108,7 +108,7 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
       : told(
           'condition-unknown',
           quote(row.conditions.rest),
-          'a condition such as 100 pF, 100 kHz or 23 degC',
+          'a condition such as 100 pF, probe, 100 kHz or 23 degC',
           'it was passed over; write it with its unit if it counts',
           'condition',
         );
@@ -126,7 +126,8 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
     const dial: DialReading = { line, tap: place!, degrees, frequencyKhz: value };
     return { line, column: column.title, note: left, reading: null, dial };
   }
-  if (what === 'resonance' && (conditions.capacitancePf === null || conditions.capacitancePf <= 0))
+  const quantity = what === 'resonance' && conditions.probed ? 'probed resonance' : what;
+  if (lacksCapacitor(quantity, conditions.capacitancePf))
     return told(
       'no-capacitor',
       `${quote(cell)} without the capacitor it was taken with`,
@@ -134,22 +135,27 @@ export function readingOf(row: Row, column: FigureColumn, cell: string, alone: b
       'write it into the column condition, or over the column',
       'condition',
     );
-  const swapped = swappedWith(record, { what, tap: place, conditions, value }, row);
+  const swapped = swappedWith(record, { what: quantity, tap: place, conditions, value }, row);
   if (swapped !== null) return swapped;
   const reading: Reading = {
     line,
-    quantity: what,
+    quantity,
     tap: place,
     value,
     written: cell,
-    capacitancePf: what === 'resonance' ? conditions.capacitancePf : null,
+    capacitancePf: TAKEN_WITH.includes(quantity) ? conditions.capacitancePf : null,
     frequencyKhz: what === 'inductance' ? (conditions.frequencyKhz ?? record.shop.meterKhz) : null,
     celsius: what === 'resistance' ? conditions.celsius : null,
-    key: keyOf(record, what, column.key ?? row.words.key, place === null ? null : taps[place - 1]!.tap, conditions),
+    key: keyOf(record, quantity, column.key ?? row.words.key, place === null ? null : taps[place - 1]!.tap, conditions),
     remark: alone ? row.remark : '',
   };
   return { line, column: column.title, note: left, reading, dial: null };
 }
+
+/** What a known capacitor belongs to. With a probe it may be none: 0 pF. */
+const TAKEN_WITH: readonly What[] = ['resonance', 'probed resonance', 'width'];
+const lacksCapacitor = (what: What, pf: number | null): boolean =>
+  TAKEN_WITH.includes(what) && (pf === null || pf < 0 || (pf === 0 && what === 'resonance'));
 
 /** Of the column `unit`, else of the title; null: none stated; undefined: one that is not known. */
 function unitFor(row: Row, column: FigureColumn): Unit | null | undefined {
@@ -163,6 +169,7 @@ function joined(first: Conditions, second: Conditions): Conditions {
     frequencyKhz: first.frequencyKhz ?? second.frequencyKhz,
     celsius: first.celsius ?? second.celsius,
     degrees: first.degrees ?? second.degrees,
+    probed: first.probed || second.probed,
   };
 }
 
@@ -208,6 +215,10 @@ function keyOf(
       return frequencyKhz === null || frequencyKhz === record.shop.meterKhz ? `uh-${tap}` : null;
     case 'resonance':
       return `khz-${tap}-${Number(capacitancePf!.toFixed(3))}`;
+    case 'probed resonance':
+      return `probed-${tap}-${Number(capacitancePf!.toFixed(3))}`;
+    case 'width':
+      return `width-${tap}-${Number(capacitancePf!.toFixed(3))}`;
     case 'other':
       return key;
     default:

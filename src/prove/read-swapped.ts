@@ -39,7 +39,7 @@ export function swappedWith(
     (one) =>
       one.quantity === what &&
       one.tap === tap &&
-      (what !== 'resonance' || one.capacitancePf === conditions.capacitancePf),
+      (one.capacitancePf === null || one.capacitancePf === conditions.capacitancePf),
   );
   if (question === undefined) return null;
   for (const side of ['low', 'high'] as const) {

@@ -14,9 +14,17 @@ export interface Conditions {
   readonly frequencyKhz: number | null;
   readonly celsius: number | null;
   readonly degrees: number | null;
+  /** With generator and probe on the coil. */
+  readonly probed: boolean;
 }
 
-export const NO_CONDITIONS: Conditions = { capacitancePf: null, frequencyKhz: null, celsius: null, degrees: null };
+export const NO_CONDITIONS: Conditions = {
+  capacitancePf: null,
+  frequencyKhz: null,
+  celsius: null,
+  degrees: null,
+  probed: false,
+};
 
 export interface Words {
   /** Null: none is named. */
@@ -80,6 +88,9 @@ const FACTORS: Readonly<Record<string, number>> = {
 /** A number and a unit of a condition. */
 const CONDITION = /([+-]?\d+(?:[.,]\d+)?)\s*(pf|nf|uf|hz|khz|mhz|deg\s?c|deg\s?f|celsius|c|degrees?|deg)(?![a-z])/gi;
 
+/** Said of a reading that was taken with generator and probe on the coil. */
+const PROBE = /\b(?:(?:signal )?generator (?:and|with) )?(?:oscilloscope )?probed?\b/gi;
+
 /** The conditions named in a text, and what of it is none. */
 export function conditionsIn(text: string): { readonly conditions: Conditions; readonly rest: string } {
   let conditions = NO_CONDITIONS;
@@ -96,7 +107,11 @@ export function conditionsIn(text: string): { readonly conditions: Conditions; r
     conditions = { ...conditions, [key]: Number(value.toPrecision(12)) };
     return ' ';
   });
-  return { conditions, rest: tidied(rest.replace(/(?<![a-z])(?:at|with|and)(?![a-z])|[;,:/]/gi, ' ')) };
+  const bare = rest.replace(PROBE, () => {
+    conditions = { ...conditions, probed: true };
+    return ' ';
+  });
+  return { conditions, rest: tidied(bare.replace(/(?<![a-z])(?:at|with|and)(?![a-z])|[;,:/]/gi, ' ')) };
 }
 
 const tidied = (text: string) => text.replace(/\s+/g, ' ').trim();
@@ -111,6 +126,7 @@ const NAMES: readonly (readonly [RegExp, What, string | null])[] = [
   [/\blength\b/, 'length', null],
   [/\bresistance\b|\bdc\b|^r$/, 'resistance', null],
   [/\binductance\b|^l$/, 'inductance', null],
+  [/\b(?:band)?width(?: of resonance)?\b/, 'width', null],
   [/\bresonance\b|\bresonant\b|\bfrequency\b|^f$/, 'resonance', null],
 ];
 /** Said beside a quantity, and told by it already. */

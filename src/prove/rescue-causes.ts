@@ -107,8 +107,19 @@ export function causesOf(
       RESCUE.cause.resistance(RESCUE.where(tap, last), verdict === 'high'),
     ),
   );
+  const wide = taps.flatMap(({ tap, readings }) =>
+    outIn(readings, 'width').map(() => RESCUE.cause.wide(RESCUE.where(tap, last))),
+  );
   const contrary = apart.map((index) => RESCUE.cause.apart(RESCUE.where(index + 1, last)));
-  const causes = [...counted.slice(0, 1), ...contrary, ...loose, ...turns, ...same, ...joints.slice(0, 1)];
+  const causes = [
+    ...counted.slice(0, 1),
+    ...contrary,
+    ...loose,
+    ...turns,
+    ...same,
+    ...joints.slice(0, 1),
+    ...wide.slice(0, 1),
+  ];
   if (causes.length > 0 || !out) return causes;
   const outside = seen.filter((one) => one.out);
   if (outside.some(({ offTurns }) => Math.abs(offTurns) >= 0.5)) return [RESCUE.cause.unknown];

@@ -22,7 +22,17 @@ const noteSchema = z.strictObject({
 
 const judgedSchema = z.strictObject({
   line: num.int().describe('of the file'),
-  quantity: z.enum(['diameter', 'length', 'resistance', 'inductance', 'resonance', 'other', 'turns']),
+  quantity: z.enum([
+    'diameter',
+    'length',
+    'resistance',
+    'inductance',
+    'resonance',
+    'probed resonance',
+    'width',
+    'other',
+    'turns',
+  ]),
   what: text.describe('in words'),
   key: text.nullable().describe('of the question at the bench, where it asks the same'),
   written: text,
@@ -38,7 +48,9 @@ const judgedSchema = z.strictObject({
   verdict: z.enum(['pass', 'low', 'high', 'implausible', 'not judged']),
   trusted: z
     .boolean()
-    .describe('false: the meter is not to be trusted at this tap; outside its limits it fails nothing'),
+    .describe(
+      'false: the meter is not to be trusted at this tap, or a width is not twice its upper limit; outside its limits it fails nothing',
+    ),
   advice: z.array(text),
   remark: text,
 });

@@ -13,7 +13,7 @@ export interface Reading {
   readonly value: number;
   /** As typed, for messages and tables. */
   readonly written: string;
-  /** Of a resonance: the known capacitor. */
+  /** Of a resonance or a width: the known capacitor; 0 where it was taken with the probe alone. */
   readonly capacitancePf: number | null;
   /** Of an inductance: the frequency of the meter. */
   readonly frequencyKhz: number | null;

@@ -5,6 +5,7 @@ export type KindName =
   | 'inductance'
   | 'capacitance'
   | 'frequency'
+  | 'width'
   | 'ratio'
   | 'scale'
   | 'resistance'
@@ -33,6 +34,7 @@ export const KINDS: Readonly<Record<KindName, Kind>> = {
   inductance: { noun: 'an inductance', unit: 'uH', low: 1e-3, high: 1e6, offered: ['uH', 'mH'], example: '240 uH' },
   capacitance: { noun: 'a capacitance', unit: 'pF', low: 1e-2, high: 1e6, offered: ['pF', 'nF'], example: '380 pF' },
   frequency: { noun: 'a frequency', unit: 'kHz', low: 1, high: 1e6, offered: ['kHz', 'MHz'], example: '530 kHz' },
+  width: { noun: 'a width', unit: 'kHz', low: 1e-3, high: 1e5, offered: ['kHz', 'Hz'], example: '3.4 kHz' },
   ratio: { noun: 'a proportion', unit: '1', low: 1e-6, high: 1, offered: ['%'], example: '5 % or 0.05' },
   scale: { noun: 'a scale', unit: '1', low: 0.9, high: 1.1, offered: ['%'], example: '100.3 %' },
   resistance: { noun: 'a resistance', unit: 'ohm', low: 1e-6, high: 1e9, offered: ['ohm', 'kohm'], example: '2.5 ohm' },

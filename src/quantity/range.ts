@@ -83,6 +83,7 @@ function sample(kind: KindName): string {
     inductance: '20 uH to 240 uH',
     capacitance: '15 pF to 380 pF',
     frequency: '530 kHz to 1700 kHz',
+    width: '2 kHz to 5 kHz',
     ratio: '5 % to 10 %',
     scale: '100 % to 100.5 %',
     resistance: '1 ohm to 5 ohm',

@@ -1,7 +1,7 @@
 /**
  * What generator and probe will show of the finished coil: resonance and width of every tap with what the two do to it counted in,
- * beside what they would be without. Start earthed, the rest open, no switch: as in `meter.ts`, whose resonance stands for the coil
- * alone; the instruments move it by the ratio that the network with losses has with and without them.
+ * beside what they would be without. Start earthed, the rest open, no switch: as in `meter.ts`, whose resonance this is with
+ * what probe and coupling add to the capacitor; what loss does to it, and the width, are those of the network with losses.
  */
 import { BenchCoil, type Seen } from '../around/bench.ts';
 import { formerLossOhm } from '../coil/positions.ts';
@@ -13,7 +13,7 @@ import { significant } from './rounding.ts';
 import type { Tap } from './schema.ts';
 
 /** Where a shop says nothing. What a passive divider of ten has at DC; common practice. */
-const USUAL: BenchInstruments = { generatorOhm: 50, couplingPf: 1, probePf: 10, probeOhm: 1e7, stated: false };
+export const USUAL: BenchInstruments = { generatorOhm: 50, couplingPf: 1, probePf: 10, probeOhm: 1e7, stated: false };
 
 /** Probes of one type differ by about so much, and so does a twisted pair of wires that couples (common practice, from memory). */
 const TOLERANCE = 0.2;
@@ -76,26 +76,28 @@ export function instrumentsOf(
   const addedPf = instruments.probePf + (instruments.couplingPf ?? 0);
   const plain = situationsOf(taps, shop.capacitorsPf).map((one) => {
     const turn = coil.taps[one.index]!;
-    const found = resonanceAt(coil, turn, one.pf);
-    const actingPf = one.pf + coil.coil.selfPf(turn);
-    return { ...one, found, actingPf, nearKhz: found.kHz * Math.sqrt(actingPf / (actingPf + addedPf)) };
+    return { ...one, found: resonanceAt(coil, turn, one.pf), loaded: resonanceAt(coil, turn, one.pf + addedPf) };
   });
   const worked = workedBetween(
     coil,
-    Math.min(...plain.map(({ nearKhz }) => nearKhz)),
+    Math.min(...plain.map(({ loaded }) => loaded.kHz)),
     Math.max(...plain.map(({ found }) => found.kHz)),
   );
-  const rows = plain.map(({ tap, index, pf, found, actingPf, nearKhz }): InstrumentsRow => {
-    const at = (kHz: number) => benchCoil(coil, index, kHz, worked(index, kHz), lossTangent);
-    const { crowding } = worked(index, found.kHz);
-    const alone = at(found.kHz).seen(pf, null, found.kHz * Math.sqrt(crowding));
-    const bench = at(nearKhz);
-    const seen = bench.seen(pf, instruments, nearKhz);
-    // Both of one network, so that its coarseness and the frequency of its figures cancel.
-    const without = bench.seen(pf, null, found.kHz * Math.sqrt(crowding));
-    const aloneKhz = found.kHz * Math.sqrt(crowding);
-    const shift = worked(index, nearKhz).crowding / crowding;
-    const kHz = seen === null || without === null ? null : ((aloneKhz * seen.kHz) / without.kHz) * Math.sqrt(shift);
+  const rows = plain.map(({ tap, index, pf, found, loaded }): InstrumentsRow => {
+    const at = ({ kHz: plainKhz }: { kHz: number }) => {
+      const works = worked(index, plainKhz);
+      return {
+        bench: benchCoil(coil, index, plainKhz, works, lossTangent),
+        kHz: plainKhz * Math.sqrt(works.crowding),
+      };
+    };
+    const { bench: bare, kHz: aloneKhz } = at(found);
+    const alone = bare.seen(pf, null, aloneKhz);
+    const { bench, kHz: loadedKhz } = at(loaded);
+    const seen = bench.seen(pf, instruments, loadedKhz);
+    // What loss does to the peak; where the capacitance of the coil lies is in `loaded`, in both of its ways.
+    const without = bench.seen(pf + addedPf, null, loadedKhz);
+    const kHz = seen === null || without === null ? null : (loadedKhz * seen.kHz) / without.kHz;
     return {
       tap: tap.tap,
       capacitancePf: pf,
@@ -104,9 +106,8 @@ export function instrumentsOf(
       aloneQ: rounded(alone === null ? null : alone.kHz / alone.widthKhz, 3),
       ...(seen === null || kHz === null
         ? NOT_SEEN
-        : limited(tap, kHz, seen, found.halfKhz / found.kHz, {
+        : limited(tap, kHz, seen, loaded.halfKhz / loaded.kHz, {
             pf,
-            actingPf,
             tolerance: shop.capacitorTolerance,
             own: coil.coil.selfPf(coil.taps[index]!),
             instruments,
@@ -137,8 +138,6 @@ const NOT_SEEN = {
 interface Acting {
   readonly pf: number;
   readonly own: number;
-  /** Both. */
-  readonly actingPf: number;
   readonly tolerance: number;
   readonly instruments: BenchInstruments;
 }
@@ -149,9 +148,9 @@ interface Acting {
  * what known capacitor and probe lose themselves can only widen it, and stands on top of the upper limit.
  */
 function limited(tap: Tap, kHz: number, seen: Seen, spread: number, acting: Acting) {
-  const { pf, own, actingPf, tolerance, instruments } = acting;
+  const { pf, own, tolerance, instruments } = acting;
   const { probePf, couplingPf } = instruments;
-  const allPf = actingPf + probePf + (couplingPf ?? 0);
+  const allPf = pf + own + probePf + (couplingPf ?? 0);
   const capacitance = Math.hypot(
     tolerance * pf,
     SELF_SPREAD * own,

@@ -162,6 +162,8 @@ export const BENCH = {
       resistance: 'DC resistance at every tap',
       inductance: 'Inductance at every tap',
       resonance: 'Resonance at every tap',
+      'probed resonance': 'Resonance with generator and probe, at every tap',
+      width: 'Width of the resonance with generator and probe, at every tap',
       diameter: 'Diameters',
       other: 'Others',
     },

@@ -1,5 +1,7 @@
 /** What the bench page says about a reading. Percentages come with their sign, figures without a unit unless one stands here. */
 
+const beside = (pf: string) => (pf === '0' ? 'the probe alone' : `${pf} pF and probe`);
+
 export const VERDICT = {
   what: {
     former: 'former, outside diameter',
@@ -10,6 +12,8 @@ export const VERDICT = {
     resistance: (where: string) => `DC resistance at 20 °C, ${where}`,
     inductance: (where: string, kHz: string) => `meter at ${kHz} kHz, ${where}`,
     resonance: (where: string, pf: string) => `resonance with ${pf} pF, ${where}`,
+    probed: (where: string, pf: string) => `resonance with ${beside(pf)}, ${where}`,
+    width: (where: string, pf: string) => `width at 0.707 with ${beside(pf)}, ${where}`,
   },
   notAFigure: 'A reading is a figure above 0.',
   unit: (unit: string) => `Looks like a slip of the unit: the reading is wanted in ${unit}.`,
@@ -56,6 +60,17 @@ export const VERDICT = {
     low: (percent: string) => `Too low: inductance or stray capacitance is high, by ${percent} % if it is inductance.`,
     high: (percent: string) => `Too high: inductance is low, by ${percent} % if the capacitor is true.`,
     couple: 'Couple more loosely and keep hands and metal a diameter away before believing it.',
+  },
+  probed: {
+    low: 'A probe set to ×1 adds about 100 pF: look at its switch, and at the coupling of the generator.',
+    high: 'Look whether probe and generator are those of the job, and whether the capacitor is on.',
+  },
+  width: {
+    q: (q: string, nominal: string) => `It stands for a Q of ${q}; ${nominal} was expected, instruments counted in.`,
+    low: 'Narrower than this coil can be: take the two frequencies again where 0.707 of the most is left, and keep the generator’s level even.',
+    high: 'Couple the generator more loosely first; then try another capacitor, and look for damp or metal about the coil, a joint that is not through, and what the probe’s data sheet says of its resistance at this frequency.',
+    shorted:
+      'So wide a resonance is what a shorted turn gives, which lowers the inductance too: look for bare wire that touches.',
   },
   other: { low: 'Below its limits.', high: 'Above its limits.' },
 } as const;

@@ -48,6 +48,8 @@ export const RESCUE = {
       high
         ? `The resistance of ${tap} is high: a joint, a clip, or thinner wire.`
         : `The resistance of ${tap} is low: turns that touch bare, or thicker wire.`,
+    wide: (tap: string) =>
+      `The resonance of ${tap} is more than twice as wide as it may be: a shorted turn, or a joint that is not through.`,
     small: (taps: string) =>
       `Off by less than half a turn at ${taps}: the place of the tap, the wire about it, or the reading itself.`,
     unknown: 'No one fault explains these readings.',
@@ -104,7 +106,7 @@ export const PROOF = {
   input: (file: string, figures: number, readings: number, dial: number, missing: number, leftOut: number) =>
     `Read from ${file}: ${figures} places for readings, of them ${readings} readings${dial > 0 ? ` and ${dial} of a dial` : ''}, ${missing} blank, ${leftOut} left out.`,
   meaning:
-    'P pass: an inductance or a resonance within its limits, and nothing outside. F fail: a reading outside its limits; a meter that the record does not trust at a tap fails nothing. R: a reading so far off that it is not of this coil, to be taken again. – missing: no electrical reading that can be judged. A coil passes when every tap has P; it fails with one F, in the column “other” too (former, 20 turns).',
+    'P pass: an inductance or a resonance within its limits, and nothing outside. F fail: a reading outside its limits; a meter that the record does not trust at a tap fails nothing, nor does a width below twice its upper limit. R: a reading so far off that it is not of this coil, to be taken again. – missing: no electrical reading that can be judged. A coil passes when every tap has P; it fails with one F, in the column “other” too (former, 20 turns).',
   table: {
     heading: (job: string) => `Coil by coil: ${job}`,
     more: (job: string) => `Coil by coil: ${job}, continued`,
