@@ -1,7 +1,6 @@
 /** `lot`: reads a lot and its jobs, makes all of it, or carries on where a run was killed, and says what came of it. */
 import { rmdir } from 'node:fs/promises';
 import { join, resolve } from 'node:path';
-import type { Argv } from 'yargs';
 import { LOT_FILE } from '../src/job/file-kind.ts';
 import { readLot } from '../src/job/lot-file.ts';
 import { slug } from '../src/job/name.ts';
@@ -9,27 +8,11 @@ import type { makeLot } from '../src/lot.ts';
 import { checkFolder, holding } from '../src/output/transaction.ts';
 import { checkOut } from './check-out.ts';
 import { lotProgress } from './lot-progress.ts';
+import { outPage } from './page.ts';
 import { readJobText } from './read-job.ts';
 import { showLot } from './show-lot.ts';
 import { shownFolder } from './shown-folder.ts';
-import type { Terminal } from './terminal.ts';
-
-export function describeLot(yargs: Argv) {
-  return yargs
-    .positional('file', {
-      type: 'string',
-      demandOption: true,
-      describe: 'file of a lot, YAML or JSON, or a table of jobs in CSV; - for standard input',
-    })
-    .option('out', {
-      type: 'string',
-      requiresArg: true,
-      describe: 'folder to write; out/<name of the lot> when left out',
-    })
-    .option('json', { type: 'boolean', default: false, describe: 'print the record of the lot, and nothing else' })
-    .example('$0 lot saltmarsh-lot.yaml', 'writes out/saltmarsh-lot')
-    .example('$0 lot orders.csv --out winter', 'a lot from a table of jobs and quantities');
-}
+import { say, type Terminal } from './terminal.ts';
 
 export interface LotOptions {
   readonly file: string;
@@ -61,11 +44,8 @@ export async function runLot(options: LotOptions, terminal: Terminal, version: s
       await rmdir(work).catch(() => undefined);
     }
   });
-  terminal.out(
-    options.json
-      ? `${JSON.stringify(made.record, null, 2)}\n`
-      : showLot(made, shownFolder(terminal.folder, target), terminal.columns),
-  );
+  if (options.json) terminal.out(`${JSON.stringify(made.record, null, 2)}\n`);
+  else say(terminal, showLot(made, shownFolder(terminal.folder, target), outPage(terminal)));
 }
 
 /** With the real pipeline. */

@@ -1,28 +1,12 @@
 /** `match`: reads an old coil, infers it, finds its replacement, writes the output folder, says what came of it. */
-import type { Argv } from 'yargs';
 import { OLD_COIL_FILE } from '../src/job/file-kind.ts';
 import { readOldCoil } from '../src/job/old-coil-file.ts';
 import type { matchCoil } from '../src/match.ts';
 import { checkOut } from './check-out.ts';
-import { describeProduce, type ProduceOptions, produceFolder } from './produce.ts';
+import { type ProduceOptions, produceFolder } from './produce.ts';
 import { readJobText } from './read-job.ts';
 import { showMatch } from './show-match.ts';
 import type { Terminal } from './terminal.ts';
-
-export function describeMatch(yargs: Argv) {
-  return describeProduce(
-    yargs.positional('coil', {
-      type: 'string',
-      demandOption: true,
-      describe: 'file of an old coil, YAML or JSON; - for standard input',
-    }),
-  )
-    .example('$0 match broken-form.yaml', 'writes out/broken-form')
-    .example(
-      '$0 match - --out coil --json < old.yaml',
-      'reads standard input, writes the folder coil, prints the record',
-    );
-}
 
 export interface MatchOptions extends ProduceOptions {
   readonly coil: string;
@@ -40,7 +24,8 @@ export async function runMatch(
 ): Promise<void> {
   checkOut(options.out);
   const file = readOldCoil(await readJobText(options.coil, terminal, OLD_COIL_FILE), options.coil);
-  await produceFolder(options, terminal, file.job.name, async () => (await load())(file, { version }), showMatch);
+  const make = async (tell: (stage: string) => void) => (await load())(file, { version, tell });
+  await produceFolder(options, terminal, file.job.name, make, showMatch);
 }
 
 /** With the real matcher. */

@@ -1,26 +1,10 @@
 /** `plan`: reads a job, plans it, writes the output folder, says what came of it. */
-import type { Argv } from 'yargs';
 import { readJob } from '../src/job/read.ts';
 import type { planJob } from '../src/plan.ts';
 import { checkOut } from './check-out.ts';
-import { describeProduce, type ProduceOptions, produceFolder } from './produce.ts';
+import { type ProduceOptions, produceFolder } from './produce.ts';
 import { readJobText } from './read-job.ts';
 import type { Terminal } from './terminal.ts';
-
-export function describePlan(yargs: Argv) {
-  return describeProduce(
-    yargs.positional('job', {
-      type: 'string',
-      demandOption: true,
-      describe: 'job file, YAML or JSON; - for standard input',
-    }),
-  )
-    .example('$0 plan low-bench-receiver.yaml', 'writes out/low-bench-receiver')
-    .example(
-      '$0 plan - --out coil --json < job.yaml',
-      'reads standard input, writes the folder coil, prints the record',
-    );
-}
 
 export interface PlanOptions extends ProduceOptions {
   readonly job: string;
@@ -38,7 +22,7 @@ export async function runPlan(
 ): Promise<void> {
   checkOut(options.out);
   const job = readJob(await readJobText(options.job, terminal), options.job);
-  await produceFolder(options, terminal, job.name, async () => (await load())(job, { version }));
+  await produceFolder(options, terminal, job.name, async (tell) => (await load())(job, { version, tell }));
 }
 
 /** With the real planner. */

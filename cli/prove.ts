@@ -1,46 +1,19 @@
 /** `prove`: reads what was measured of finished coils, judges it by their records, writes the proof, says what came of it. */
 import { dirname, join, resolve } from 'node:path';
-import type { Argv } from 'yargs';
 import { Fault } from '../src/fault.ts';
 import { READINGS_FILE } from '../src/job/file-kind.ts';
 import { nameOfFile, slug } from '../src/job/name.ts';
 import { checkFolder, writeFolder } from '../src/output/transaction.ts';
 import type { DialWish } from '../src/prove.ts';
+import { atWork } from './at-work.ts';
 import { checkOut } from './check-out.ts';
 import { findRecords } from './find-records.ts';
+import { errPage, outPage } from './page.ts';
 import { readBytes } from './read-job.ts';
 import { decodeReadings, LARGEST_READINGS } from './read-readings.ts';
 import { showNotes, showProof } from './show-proof.ts';
 import { shownFolder } from './shown-folder.ts';
-import type { Terminal } from './terminal.ts';
-
-export function describeProve(yargs: Argv) {
-  return yargs
-    .positional('readings', {
-      type: 'string',
-      demandOption: true,
-      describe: 'readings of finished coils in CSV, from the bench page, a lot or a spreadsheet; - for standard input',
-    })
-    .option('from', {
-      type: 'string',
-      requiresArg: true,
-      describe: 'folder below which the records of the coils lie; out and the folder of the readings when left out',
-    })
-    .option('out', {
-      type: 'string',
-      requiresArg: true,
-      describe: 'folder to write; out/<name of the file>-proof when left out',
-    })
-    .option('dial', {
-      type: 'string',
-      requiresArg: true,
-      describe:
-        'diameter of the dial to draw from readings of one, with its span if it is not 180 deg: "150 mm, 270 deg"',
-    })
-    .option('json', { type: 'boolean', default: false, describe: 'print the record of the proof, and nothing else' })
-    .example('$0 prove out/saltmarsh-lot/readings.csv', 'writes out/readings-proof')
-    .example('$0 prove bench.csv --from out/low-bench-receiver --dial "120 mm"', 'records of one folder, and a dial');
-}
+import { say, type Terminal } from './terminal.ts';
 
 export interface ProveOptions {
   readonly readings: string;
@@ -96,12 +69,11 @@ export async function prove(options: ProveOptions, terminal: Terminal, version: 
     });
   const { prove: proveReadings } = await import('../src/prove.ts');
   const { sha256 } = await import('../src/record/hash.ts');
-  const made = await proveReadings({ name, file, text, sha256: sha256(bytes), ...found, dial, notes }, { version });
-  const folder = await writeFolder(target, made.files);
-  terminal.err(showNotes(made.record, terminal.columns));
-  terminal.out(
-    options.json
-      ? `${JSON.stringify(made.record, null, 2)}\n`
-      : showProof(made, shownFolder(terminal.folder, folder), terminal.columns, terminal.plain ?? false),
+  const made = await atWork(terminal, name, () =>
+    proveReadings({ name, file, text, sha256: sha256(bytes), ...found, dial, notes }, { version }),
   );
+  const folder = await writeFolder(target, made.files);
+  terminal.err(showNotes(made.record, errPage(terminal), terminal.quiet ?? false));
+  if (options.json) terminal.out(`${JSON.stringify(made.record, null, 2)}\n`);
+  else say(terminal, showProof(made, shownFolder(terminal.folder, folder), outPage(terminal)));
 }

@@ -1,6 +1,7 @@
 /** The explanation of a tap as text: one figure after the other, each with all that it takes to check it by hand. */
 import type { Explanation, Figure } from '../src/explain/explain.ts';
 import { tidy } from '../src/quantity/format.ts';
+import { heading, hung, type Page, pageText, paragraph, shown } from './page.ts';
 import { wrap } from './table.ts';
 
 const HEAD = 10;
@@ -9,36 +10,40 @@ const BESIDE = 24;
 /** With less room than this nothing stands side by side. */
 const NARROW = 54;
 
-/** Plain text, no wider than `columns`. */
-export function showExplain({ job, hash, tap, turn, figures }: Explanation, columns: number): string {
-  const title = `Tap ${tap} of ${job}: how its figures come about`;
-  const where = `${tidy(turn)} turns from the start; record ${hash.slice(0, 12)}`;
-  const blocks = figures.map((figure, index) => block(figure, index + 1, columns));
-  return `${[[...wrap(title, columns), ...wrap(where, columns)], ...blocks].map((lines) => lines.join('\n')).join('\n\n')}\n`;
+export function showExplain({ job, hash, tap, turn, figures }: Explanation, page: Page): string {
+  return pageText([
+    [
+      ...heading(page, `Tap ${tap} of ${job}: how its figures come about`),
+      ...paragraph(page, `${tidy(turn)} turns from the start; record ${hash.slice(0, 12)}`),
+    ],
+    ...figures.map((figure, index) => block(figure, index + 1, page)),
+  ]);
 }
 
-function block(figure: Figure, number: number, columns: number): string[] {
+function block(figure: Figure, number: number, page: Page): string[] {
   const { value, unit, recorded, formula, source, inputs, intermediates, validity, error } = figure;
   const inRecord = recorded === null ? 'not in it; a check by hand of the next' : withUnit(recorded, unit);
   return [
-    ...wrap(`${number}  ${figure.figure} = ${withUnit(value, unit)}`, columns),
-    ...hung('record', inRecord, columns),
-    ...hung('formula', formula, columns),
-    ...hung('source', source, columns),
+    ...heading(page, `${number}  ${figure.figure} = ${withUnit(value, unit)}`),
+    ...headed(page, 'record', inRecord),
+    ...headed(page, 'formula', formula),
+    ...headed(page, 'source', source),
     ...rows(
+      page,
       'from',
       inputs.map((one) => ({ ...one, formula: '' })),
-      columns,
     ),
-    ...rows('by way of', intermediates, columns),
-    ...hung(
+    ...rows(page, 'by way of', intermediates),
+    ...headed(
+      page,
       'holds for',
       `${validity.domain}; ${validity.inside ? 'so it is here' : 'NOT SO HERE, take it with care'}`,
-      columns,
     ),
-    ...hung('error', error, columns),
+    ...headed(page, 'error', error),
   ];
 }
+
+const headed = (page: Page, head: string, text: string): string[] => hung(page, head.padEnd(HEAD + 2), text);
 
 const withUnit = (value: number, unit: string) =>
   unit === '' || unit === '°' ? tidy(value) + unit : `${tidy(value)} ${unit}`;
@@ -51,8 +56,18 @@ interface Row {
 }
 
 /** Names, values and how they follow, in columns; on a narrow page one under the other. */
-function rows(head: string, list: readonly Row[], columns: number): string[] {
-  const room = columns - HEAD - 2;
+function rows(page: Page, head: string, all: readonly Row[]): string[] {
+  const list = all.map((row) => ({
+    ...row,
+    name: shown(page, row.name),
+    unit: shown(page, row.unit),
+    formula: shown(page, row.formula),
+  }));
+  if (page.plain === true)
+    return list.map(({ name, value, unit, formula }) =>
+      [`${head}: ${name} = ${withUnit(value, unit)}`, ...(formula === '' ? [] : [formula])].join(', '),
+    );
+  const room = page.columns - HEAD - 2;
   const lines = room < NARROW ? stacked(list, room) : inColumns(list, room);
   return lines.map((line, i) => `${(i === 0 ? head : '').padEnd(HEAD)}  ${line}`.trimEnd());
 }
@@ -78,8 +93,4 @@ function inColumns(list: readonly Row[], room: number): string[] {
     const line = `${last.padEnd(nameWidth)}  ${(values[index] ?? '').padEnd(valueWidth)}  ${first}`;
     return [...names.slice(0, -1), line, ...further.map((text) => indent + text)];
   });
-}
-
-function hung(head: string, text: string, columns: number): string[] {
-  return wrap(text, columns - HEAD - 2).map((line, i) => `${(i === 0 ? head : '').padEnd(HEAD)}  ${line}`);
 }

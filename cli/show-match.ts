@@ -2,42 +2,36 @@
 import { frequencyText, lengthText, significantText, tidy, wireText } from '../src/quantity/format.ts';
 import type { Matched } from '../src/record/match-schema.ts';
 import type { CoilRecord } from '../src/record/schema.ts';
-import { inAscii } from './show-survey.ts';
-import { lay, wrap } from './table.ts';
+import { type Figure, hung, list, type Page, pageText, table } from './page.ts';
 
-/** Plain text, no wider than `columns`, no colours; empty for a record that replaces nothing. */
-export function showMatch({ matched }: CoilRecord, columns: number, plain: boolean): string {
+/** Empty for a record that replaces nothing. */
+export function showMatch({ matched }: CoilRecord, page: Page): string {
   if (matched === undefined) return '';
-  const sections = [
-    oldCoil(matched, columns),
-    oldTaps(matched, columns),
-    against(matched, columns),
+  return pageText([
+    oldCoil(matched, page),
+    oldTaps(matched, page),
+    against(matched, page),
     list(
+      page,
       'Both ways',
       matched.ways.map(({ way, text }) => (way === matched.replacement ? `${text} (made)` : text)),
-      columns,
     ),
     list(
+      page,
       'Lost taps',
       matched.proposals
         .filter(({ confidence }) => confidence >= 0.01)
         .map(({ text, confidence }) => `${text}, confidence ${tidy(100 * confidence, 2)} %`),
-      columns,
     ),
     list(
+      page,
       'What would narrow the limits most',
       matched.next.map(
         ({ key, text, nowPercent, thenPercent }) =>
           `${text} (${key}): the widest from ± ${tidy(nowPercent, 2)} % to ± ${tidy(thenPercent, 2)} %`,
       ),
-      columns,
     ),
-  ];
-  const text = sections
-    .filter((lines) => lines.length > 0)
-    .map((lines) => lines.join('\n'))
-    .join('\n\n');
-  return `${plain ? inAscii(text) : text}\n`;
+  ]);
 }
 
 type Limits = Matched['old']['bareMm'];
@@ -45,7 +39,7 @@ type Limits = Matched['old']['bareMm'];
 const half = ({ low, high }: Limits) => (high - low) / 2;
 const mm = (of: Limits, digits: number) => `${lengthText(of.value, digits)} ± ${lengthText(half(of), digits)}`;
 
-function oldCoil({ old, fit }: Matched, columns: number): string[] {
+function oldCoil({ old, fit }: Matched, page: Page): string[] {
   const pitch = old.pitchMm.map((of) => mm(of, 4)).join(', ');
   const sections =
     old.pitchMm.length > 1
@@ -59,20 +53,20 @@ function oldCoil({ old, fit }: Matched, columns: number): string[] {
       ? []
       : [`measurements against the coil: chi-square ${tidy(fit.chiSquare, 3)} with ${fit.freedom} to spare`]),
   ];
-  return list('The old coil (± are 95 % limits)', facts, columns);
+  return list(page, 'The old coil (± are 95 % limits)', facts);
 }
 
-type Column = readonly [title: string, cell: (tap: Matched['old']['taps'][number]) => string];
+type OldTap = Matched['old']['taps'][number];
 
 const uh = (value: number) => significantText(value, 4);
-const others = (tap: Matched['old']['taps'][number]) =>
+const others = (tap: OldTap) =>
   tap.candidates
     .filter(({ weight }) => weight >= 0.02)
     .slice(0, 3)
     .map(({ turn, weight }) => `${tidy(turn)} ${(100 * weight).toFixed(0)}%`)
     .join(' ');
 
-const OLD: readonly Column[] = [
+const OLD: readonly Figure<OldTap>[] = [
   ['tap', (tap) => tap.name],
   ['turn', (tap) => tidy(Number(tap.turn.toFixed(3)))],
   ['µH', (tap) => uh(tap.inductanceUh.value)],
@@ -90,20 +84,19 @@ const OLD: readonly Column[] = [
   ['Q', (tap) => tap.working.q.toFixed(0)],
 ];
 
-function oldTaps({ old }: Matched, columns: number): string[] {
+function oldTaps({ old }: Matched, page: Page): string[] {
   const wide = old.taps.some(({ range }) => range !== null) ? OLD : OLD.filter(([title]) => !title.endsWith('kHz'));
-  const rows = tableOf(wide, old.taps, columns);
-  const band =
+  const marked =
     old.bandLowKhz === null || old.bandHighKhz === null
       ? []
-      : [`  marked ${frequencyText(old.bandLowKhz)} to ${frequencyText(old.bandHighKhz)}`];
-  return ['Its positions, and what they tuned', ...rows, ...band];
+      : hung(page, '  ', `marked ${frequencyText(old.bandLowKhz)} to ${frequencyText(old.bandHighKhz)}`);
+  return [...table(page, 'Its positions, and what they tuned', wide, old.taps), ...marked];
 }
 
-type Against = readonly [title: string, cell: (tap: Matched['comparison'][number]) => string];
 const signed = (value: number) => `${value > 0 ? '+' : ''}${value.toFixed(2)}`;
 
-const AGAINST: readonly Against[] = [
+/** Heads of two columns side by side are short; each says the whole where it stands alone. */
+const AGAINST: readonly Figure<Matched['comparison'][number]>[] = [
   ['tap', (one) => String(one.tap)],
   ['turn old', (one) => tidy(Number(one.oldTurn.toFixed(3)))],
   ['new', (one) => tidy(Number(one.newTurn.toFixed(3)))],
@@ -117,36 +110,11 @@ const AGAINST: readonly Against[] = [
   ['new', (one) => one.newQ.toFixed(0)],
 ];
 
-function against({ comparison, worst, replacement }: Matched, columns: number): string[] {
+function against({ comparison, worst, replacement }: Matched, page: Page): string[] {
+  const figures = AGAINST.map(([head, cell], i): Figure<Matched['comparison'][number]> => {
+    const whole = head === 'new' ? (AGAINST[i - 1]?.[0] ?? '').replace('old', 'new') : head;
+    return [page.plain === true ? whole : head, cell];
+  });
   const text = `worst: tap ${worst.tap}, ${signed(worst.workingPercent)} %`;
-  return [`Old against new, ${replacement}, µH at work; ${text}`, ...tableOf(AGAINST, comparison, columns)];
-}
-
-/** As many of the columns as the page holds, the first ones first. */
-function tableOf<T>(
-  figures: readonly (readonly [string, (one: T) => string])[],
-  rows: readonly T[],
-  columns: number,
-): string[] {
-  for (let count = figures.length; count > 0; count--) {
-    const used = figures.slice(0, count);
-    const table = lay(
-      used.map(([title]) => title),
-      rows.map((row) => used.map(([, cell]) => cell(row))),
-      used.map(() => true),
-    );
-    if (count === 1 || table.every((line) => line.length + 2 <= columns))
-      return table.map((line) => `  ${line}`.slice(0, columns));
-  }
-  return [];
-}
-
-function list(title: string, items: readonly string[], columns: number): string[] {
-  if (items.length === 0) return [];
-  return [
-    ...wrap(title, columns),
-    ...items.flatMap((text) =>
-      wrap(text, columns - 4).map((line, index) => (index === 0 ? `  - ${line}` : `    ${line}`)),
-    ),
-  ];
+  return table(page, `Old against new, ${replacement}, µH at work; ${text}`, figures, comparison);
 }

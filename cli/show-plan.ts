@@ -8,45 +8,37 @@ import {
   tidy,
   wireText,
 } from '../src/quantity/format.ts';
+import type { OutputFile } from '../src/record/listing.ts';
 import type { CoilRecord, Tap } from '../src/record/schema.ts';
+import { fileList } from './file-list.ts';
+import { type Figure, heading, hung, list, type Page, pageText, paragraph, table } from './page.ts';
+import { showElevation } from './show-elevation.ts';
 import { showRanges } from './show-ranges.ts';
 import { settingsTable } from './show-settings.ts';
-import { lay, wrap } from './table.ts';
 
-export interface Written {
-  readonly path: string;
-  readonly bytes: Uint8Array;
-  readonly note: string;
+type Made = Pick<OutputFile, 'path' | 'bytes' | 'note'>;
+
+/** `folder` is where the files went. */
+export function showPlan(record: CoilRecord, folder: string, files: readonly Made[], page: Page): string {
+  return pageText([
+    [...heading(page, record.job), ...paragraph(page, record.demand.text)],
+    chosen(record, page),
+    showElevation(record, page),
+    tapTable(record, page),
+    settingsTable(record, page),
+    showRanges(record, page),
+    others(record, page),
+    list(
+      page,
+      'Warnings',
+      record.warnings.map(({ text }) => text),
+      'trouble',
+    ),
+    written(record, folder, files, page),
+  ]);
 }
 
-/** Plain text, no wider than `columns`, no colours. `folder` is where the files went. */
-export function showPlan(
-  record: CoilRecord,
-  folder: string,
-  files: readonly Written[],
-  columns: number,
-  plain = false,
-): string {
-  const chart = showRanges(record, columns - 2, plain);
-  const sections = [
-    [...wrap(record.job, columns), ...wrap(record.demand.text, columns)],
-    chosen(record, columns),
-    tapTable(record, columns),
-    settingsTable(record, columns),
-    chart.length === 0
-      ? []
-      : ['What they tune; on the right how far the next reaches into it', ...chart.map((row) => `  ${row}`)],
-    others(record, columns),
-    record.warnings.length === 0 ? [] : ['Warnings', ...record.warnings.flatMap(({ text }) => item(text, columns))],
-    written(record, folder, files, columns),
-  ];
-  return `${sections
-    .filter((lines) => lines.length > 0)
-    .map((lines) => lines.join('\n'))
-    .join('\n\n')}\n`;
-}
-
-function chosen(record: CoilRecord, columns: number): string[] {
+function chosen(record: CoilRecord, page: Page): string[] {
   const winding = record.windings[0];
   if (winding === undefined) return [];
   const { former, tapMethod } = record;
@@ -61,11 +53,11 @@ function chosen(record: CoilRecord, columns: number): string[] {
     `taps: ${tapMethod.name}, ${tapMethod.layout}; ${tapMethod.why}`,
     `why this one: ${record.chosen.why}`,
   ];
-  return ['The coil', ...facts.flatMap((fact) => item(fact, columns))];
+  return list(page, 'The coil', facts);
 }
 
 /** Columns of the tap table, the most needed first; what does not fit the page is in plan.json and on the sheet. */
-const TAP_COLUMNS: readonly (readonly [title: string, cell: (tap: Tap) => string])[] = [
+const TAP_COLUMNS: readonly Figure<Tap>[] = [
   ['tap', (tap) => String(tap.tap)],
   ['turn', (tap) => tap.turn.toFixed(3)],
   ['angle', (tap) => `${tap.angleDeg.toFixed(1)}°`],
@@ -83,73 +75,61 @@ function signed(percent: number): string {
   return percent > 0 && Number(text) !== 0 ? `+${text}` : text;
 }
 
-function tapTable(record: CoilRecord, columns: number): string[] {
+function tapTable(record: CoilRecord, page: Page): string[] {
   const taps = record.windings[0]?.taps ?? [];
   const used = TAP_COLUMNS.filter(([title]) => title !== 'kHz' || taps.some((tap) => tap.range !== null));
-  for (let count = used.length; count > 0; count -= 1) {
-    const shown = used.slice(0, count);
-    const rows = lay(
-      shown.map(([title]) => title),
-      taps.map((tap) => shown.map(([, cell]) => cell(tap))),
-      shown.map(() => true),
-    );
-    if (count === 1 || rows.every((row) => row.length + 2 <= columns)) {
-      const kind = taps[0]?.working.kind;
-      const note = shown.some(([title]) => title === 'Q') && kind !== undefined ? ` (Q: ${kind})` : '';
-      return [`Taps${note}`, ...rows.map((row) => `  ${row}`)];
-    }
-  }
-  return [];
+  const kind = taps[0]?.working.kind;
+  const title = (shown: readonly string[]) => `Taps${shown.includes('Q') && kind !== undefined ? ` (Q: ${kind})` : ''}`;
+  return table(page, title, used, taps);
 }
 
-function others(record: CoilRecord, columns: number): string[] {
-  const winding = record.windings[0];
-  if (winding === undefined || record.alternatives.length === 0) return [];
-  const letter = (index: number) => String.fromCharCode('a'.charCodeAt(0) + index);
-  const row = (name: string, figures: readonly number[]) => [
-    name,
-    ...FIGURES.map(([, digits], i) => (figures[i] ?? 0).toFixed(digits)),
+/** One of the coils that were possible, as a row. */
+interface Possible {
+  readonly name: string;
+  readonly figures: readonly number[];
+  /** How it is wound, and what speaks for it. */
+  readonly about: string;
+}
+
+function possible(record: CoilRecord): readonly Possible[] {
+  const winding = record.windings[0]!;
+  const { chosen, former } = record;
+  const own: Possible = {
+    name: '*',
+    figures: [
+      former.outsideDiameterMm,
+      winding.pitchMm,
+      winding.turns,
+      former.lengthMm,
+      winding.wireLengthM,
+      chosen.massG,
+      chosen.worstTapPercent,
+      1000 * chosen.lossFactor,
+    ],
+    about: `${winding.wire.name}, ${winding.pitchKind}: the one chosen, by ${chosen.prefer}`,
+  };
+  const rest = record.alternatives.map((one, index): Possible => {
+    const { formerMm, pitchMm, turns, lengthMm, wireM, massG, worstTapPercent, lossFactor } = one;
+    return {
+      name: String.fromCharCode('a'.charCodeAt(0) + index),
+      figures: [formerMm, pitchMm, turns, lengthMm, wireM, massG, worstTapPercent, 1000 * lossFactor],
+      about: `${one.wire}, ${one.pitchKind}, ${one.tapMethod}: better in ${one.betterIn.join(', ')}`,
+    };
+  });
+  return [own, ...rest];
+}
+
+function others(record: CoilRecord, page: Page): string[] {
+  if (record.windings[0] === undefined || record.alternatives.length === 0) return [];
+  const rows = possible(record);
+  const figures: readonly Figure<Possible>[] = [
+    ['', ({ name }) => (page.plain === true ? (name === '*' ? 'the one chosen' : name) : name)],
+    ...FIGURES.map(([title, digits], i) => [title, (row: Possible) => (row.figures[i] ?? 0).toFixed(digits)] as const),
+    ...(page.plain === true ? [['wound', ({ about }: Possible) => about] as const] : []),
   ];
-  const first = row('*', [
-    record.former.outsideDiameterMm,
-    winding.pitchMm,
-    winding.turns,
-    record.former.lengthMm,
-    winding.wireLengthM,
-    record.chosen.massG,
-    record.chosen.worstTapPercent,
-    1000 * record.chosen.lossFactor,
-  ]);
-  const rest = record.alternatives.map((one, index) =>
-    row(letter(index), [
-      one.formerMm,
-      one.pitchMm,
-      one.turns,
-      one.lengthMm,
-      one.wireM,
-      one.massG,
-      one.worstTapPercent,
-      1000 * one.lossFactor,
-    ]),
-  );
-  const rows = lay(
-    ['', ...FIGURES.map(([title]) => title)],
-    [first, ...rest],
-    ['', ...FIGURES].map((_, index) => index > 0),
-  );
-  const legend = record.alternatives.flatMap((one, index) =>
-    hung(
-      `  ${letter(index)}  `,
-      `${one.wire}, ${one.pitchKind}, ${one.tapMethod}: better in ${one.betterIn.join(', ')}`,
-      columns,
-    ),
-  );
-  return [
-    ...wrap(`What else was possible (${record.chosen.feasible} of ${record.chosen.tried} tried fit)`, columns),
-    ...rows.map((line) => `  ${line}`),
-    ...hung('  *  ', `${winding.wire.name}, ${winding.pitchKind}: the one chosen, by ${record.chosen.prefer}`, columns),
-    ...legend,
-  ];
+  const title = `What else was possible (${record.chosen.feasible} of ${record.chosen.tried} tried fit)`;
+  const legend = page.plain === true ? [] : rows.flatMap(({ name, about }) => hung(page, `  ${name}  `, about));
+  return [...table(page, title, figures, rows), ...legend];
 }
 
 const FIGURES: readonly (readonly [title: string, digits: number])[] = [
@@ -163,28 +143,10 @@ const FIGURES: readonly (readonly [title: string, digits: number])[] = [
   ['1000/Q', 2],
 ];
 
-function written(record: CoilRecord, folder: string, files: readonly Written[], columns: number): string[] {
-  const name = Math.max(...files.map(({ path }) => path.length)) + 2;
-  const lines = files.flatMap(({ path, bytes, note }) =>
-    hung(`  ${path.padEnd(name)}${sizeText(bytes.length).padStart(8)}  `, note, columns),
-  );
+function written(record: CoilRecord, folder: string, files: readonly Made[], page: Page): string[] {
   const assumed = Object.keys(record.assumed).length;
   const left = assumed === 1 ? '1 value was' : `${assumed} values were`;
-  const remark = assumed === 0 ? [] : wrap(`${left} left to the program; plan.json lists them under assumed.`, columns);
-  return [...wrap(`Written to ${folder}`, columns), ...lines, ...remark];
-}
-
-/** Decimal: 1 kB is 1000 bytes. */
-function sizeText(bytes: number): string {
-  return bytes < 1e6 ? `${(bytes / 1e3).toFixed(1)} kB` : `${(bytes / 1e6).toFixed(2)} MB`;
-}
-
-const item = (text: string, columns: number): string[] => hung('  - ', text, columns);
-
-/** The text behind its mark, further lines under its first word; on a narrow page under the mark. */
-function hung(mark: string, text: string, columns: number): string[] {
-  const indent = mark.length > columns / 2 ? 4 : mark.length;
-  if (indent < mark.length)
-    return [mark.trimEnd(), ...wrap(text, columns - indent).map((line) => ' '.repeat(indent) + line)];
-  return wrap(text, columns - indent).map((line, index) => (index === 0 ? mark : ' '.repeat(indent)) + line);
+  const remark = `${left} left to the program; plan.json lists them under assumed.`;
+  const sized = files.map(({ path, bytes, note }) => ({ path, size: bytes.length, note }));
+  return [...fileList(page, folder, sized), ...(assumed === 0 ? [] : paragraph(page, remark))];
 }

@@ -8,6 +8,7 @@
 import { placeOn, written } from '../src/drawing/log-axis.ts';
 import { axisOf, type ChartPosition } from '../src/drawing/range-chart.ts';
 import type { FiguresRecord } from '../src/record/survey-schema.ts';
+import { drawing, list, type Page } from './page.ts';
 
 interface Signs {
   readonly own: string;
@@ -23,16 +24,34 @@ const PLAIN: Signs = { own: '-', shared: '=', second: '.', band: ':', edge: '|' 
 const LEFT = 6;
 const RIGHT = 9;
 
-/** Lines no wider than `columns`; none when the record has no ranges. `plain`: signs of ASCII alone. */
-export function showRanges(record: FiguresRecord, columns: number, plain: boolean): string[] {
-  const positions = record.windings[0]!.taps.flatMap(({ tap, range }) => (range === null ? [] : [{ tap, ...range }]));
+/** The section of a page, in words on a plain one; nothing when the record has no ranges. */
+export function showRanges(record: FiguresRecord, page: Page): string[] {
+  if (page.plain === true) return list(page, 'What they tune', spoken(positionsOf(record)));
+  const title = 'What they tune; on the right how far the next reaches into it';
+  return drawing(page, title, rangeChart(record, page.columns - 2, page.ascii === true));
+}
+
+const spoken = (positions: readonly ChartPosition[]): string[] =>
+  positions.map((own, i) => {
+    const reach = reachText(own, positions[i + 1]);
+    const next = reach.startsWith('gap') ? `, ${reach} to the next` : `, the next reaches ${reach} into it`;
+    const range = `${own.lowKhz.toFixed(0)} to ${own.highKhz.toFixed(0)} kHz`;
+    return `tap ${own.tap}: ${range}${reach === '' ? '' : next}`;
+  });
+
+const positionsOf = (record: FiguresRecord) =>
+  record.windings[0]!.taps.flatMap(({ tap, range }) => (range === null ? [] : [{ tap, ...range }]));
+
+/** Lines no wider than `columns`; none when the record has no ranges. */
+export function rangeChart(record: FiguresRecord, columns: number, ascii: boolean): string[] {
+  const positions = positionsOf(record);
   if (positions.length === 0) return [];
   const { bandLowKhz, bandHighKhz } = record.demand;
   const band = bandLowKhz === null || bandHighKhz === null ? null : { lowKhz: bandLowKhz, highKhz: bandHighKhz };
   const cells = Math.max(12, columns - LEFT - RIGHT - 2);
   const axis = axisOf({ positions, band }, cells);
   const cell = (kHz: number) => Math.min(cells - 1, Math.max(0, Math.floor(placeOn(axis, kHz))));
-  const signs = plain ? PLAIN : DRAWN;
+  const signs = ascii ? PLAIN : DRAWN;
   const rows = positions.map((own, i) => {
     const line = Array.from({ length: cells }, () => ' ');
     const fill = (from: number, to: number, sign: string) => {

@@ -1,10 +1,10 @@
 /** What the two switches of a two-switch coil set, for the terminal: nothing for one switch. */
 import { significantText } from '../src/quantity/format.ts';
 import type { CoilRecord, Setting } from '../src/record/schema.ts';
-import { lay, wrap } from './table.ts';
+import { type Figure, hung, type Page, table } from './page.ts';
 
 /** The most needed first; what does not fit the page is in plan.json and on the sheet. */
-const COLUMNS: readonly (readonly [title: string, cell: (row: Setting) => string])[] = [
+const COLUMNS: readonly Figure<Setting>[] = [
   ['tens', (row) => String(row.tens)],
   ['turns', (row) => `${row.turnsLeast}..${row.turnsMost}`],
   [
@@ -19,25 +19,12 @@ const COLUMNS: readonly (readonly [title: string, cell: (row: Setting) => string
   ['Q', (row) => row.q.toFixed(0)],
 ];
 
-/** Lines no wider than `columns`: the unit taps, then a row for each tens contact, from its last unit to unit 0. */
-export function settingsTable(record: CoilRecord, columns: number): string[] {
+/** The unit taps, then a row for each tens contact, from its last unit to unit 0. */
+export function settingsTable(record: CoilRecord, page: Page): string[] {
   const rows = record.settings ?? [];
   if (rows.length === 0) return [];
   const places = (record.windings[0]?.unitTaps ?? []).map((tap) => `u${tap.unit} ${tap.turn.toFixed(3)}`).join(', ');
   const used = COLUMNS.filter(([title]) => title !== 'kHz' || rows.some((row) => row.lowKhz !== null));
-  for (let count = used.length; ; count -= 1) {
-    const shown = used.slice(0, count);
-    const lines = lay(
-      shown.map(([title]) => title),
-      rows.map((row) => shown.map(([, cell]) => cell(row))),
-      shown.map(() => true),
-    );
-    if (count > 1 && lines.some((line) => line.length + 2 > columns)) continue;
-    const units = wrap(`units switch: S as 0, then at turn ${places}`, columns - 2);
-    return [
-      'Both switches, last unit to unit 0',
-      ...units.map((line) => `  ${line}`),
-      ...lines.map((line) => `  ${line}`),
-    ];
-  }
+  const [title = '', ...lines] = table(page, 'Both switches, last unit to unit 0', used, rows);
+  return [title, ...hung(page, '  ', `units switch: S as 0, then at turn ${places}`), ...lines];
 }

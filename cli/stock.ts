@@ -1,5 +1,4 @@
 /** `stock`: lists the wires, tubes, materials and spacers that are known, with where their figures come from. */
-import type { ArgumentsCamelCase, Argv } from 'yargs';
 import { Fault, type FaultExit, type FaultParts } from '../src/fault.ts';
 import { nearest } from '../src/job/nearest.ts';
 import { findWire } from '../src/stock/find.ts';
@@ -9,12 +8,15 @@ import { type Spacer, spacers } from '../src/stock/spacers.ts';
 import { type Tube, tubes } from '../src/stock/tubes.ts';
 import type { Wire } from '../src/stock/wire.ts';
 import { allWires } from '../src/stock/wires.ts';
-import { type Column, layTable, wrap } from './table.ts';
+import { outPage, type Page, paragraph, table } from './page.ts';
+import { type Column, layTable } from './source-table.ts';
+import { say, type Terminal } from './terminal.ts';
+import { STOCK_KINDS } from './verbs.ts';
 
-export const STOCK_KINDS = ['wires', 'tubes', 'materials', 'spacers'] as const;
+export { STOCK_KINDS } from './verbs.ts';
 export type StockKind = (typeof STOCK_KINDS)[number];
 
-export interface StockOptions {
+export interface StockOptions extends Page {
   /** Left out: wires. */
   readonly what?: StockKind | undefined;
   /** Words that the name must have. */
@@ -24,8 +26,6 @@ export interface StockOptions {
   readonly toMm?: number | undefined;
   readonly json: boolean;
   readonly out: (text: string) => void;
-  /** Width of the page in characters. */
-  readonly columns: number;
 }
 
 const fixed = (value: number, places: number): string => value.toFixed(places);
@@ -115,9 +115,23 @@ function show<T extends { readonly name: string; readonly status: string }>(
     options.out(`${JSON.stringify({ stock: what, count: stock.length, items: stock }, tidyNumbers, 2)}\n`);
     return;
   }
-  options.out(layTable(stock, columns, source, options.columns));
+  options.out(
+    options.plain === true ? spoken(options, what, stock, columns, source) : layTable(stock, columns, source, options),
+  );
   options.out(`\n${stock.length} ${stock.length === 1 ? what.slice(0, -1) : what}\n`);
-  if (remark !== undefined) options.out(`${wrap(remark, options.columns).join('\n')}\n`);
+  if (remark !== undefined) options.out(`${paragraph(options, remark).join('\n')}\n`);
+}
+
+/** Each figure of each on a line of its own, and where it comes from. */
+function spoken<T>(
+  page: Page,
+  what: StockKind,
+  stock: readonly T[],
+  columns: readonly Column<T>[],
+  source: (one: T) => readonly string[],
+): string {
+  const figures = columns.map(({ title, cell }) => [title, cell] as const);
+  return `${table(page, what, [...figures, ['from', (one: T) => source(one).join(', ')] as const], stock).join('\n')}\n`;
 }
 
 /**
@@ -165,17 +179,6 @@ interface StockArguments {
   readonly json: boolean;
 }
 
-export function describeStock(yargs: Argv) {
-  return yargs
-    .positional('what', { type: 'string', describe: 'wires (taken when left out), tubes, materials or spacers' })
-    .positional('words', { type: 'string', array: true, describe: 'words that the name must have' })
-    .option('from', { type: 'string', requiresArg: true, describe: 'least diameter, such as 0.3mm (wires: bare)' })
-    .option('to', { type: 'string', requiresArg: true, describe: 'greatest diameter, such as 0.6mm or 0.02in' })
-    .option('json', { type: 'boolean', default: false, describe: 'write the list as JSON' })
-    .example('$0 stock 24 awg enamel', 'the 24 AWG wires with enamel')
-    .example('$0 stock wires cotton --from 0.4mm --to 0.7mm', 'cotton-covered wire of these bare diameters');
-}
-
 const isKind = (text: string | undefined): text is StockKind => STOCK_KINDS.some((kind) => kind === text);
 
 /** Units are loaded only when a diameter was written. */
@@ -189,7 +192,7 @@ async function readDiameter(option: 'from' | 'to', written: string | undefined):
 }
 
 /** Reads the arguments, lists to standard output. A first word that is no kind of stock begins the filter on wires. */
-export async function stock(given: ArgumentsCamelCase<StockArguments>): Promise<void> {
+export async function stock(given: StockArguments, terminal: Terminal): Promise<void> {
   const { what, words = [] } = given;
   const fromMm = await readDiameter('from', given.from);
   const toMm = await readDiameter('to', given.to);
@@ -209,7 +212,8 @@ export async function stock(given: ArgumentsCamelCase<StockArguments>): Promise<
     fromMm,
     toMm,
     json: given.json,
-    out: (text) => process.stdout.write(text),
-    columns: process.stdout.columns ?? 80,
+    // What JSON was asked for is printed even where nothing is to be said.
+    out: (text) => (given.json ? terminal.out(text) : say(terminal, text)),
+    ...outPage(terminal),
   });
 }

@@ -3,7 +3,7 @@ import { Fault, type FaultParts } from '../src/fault.ts';
 import { COIL_FILE, type FileKind, JOB_FILE, LOT_FILE, OLD_COIL_FILE, READINGS_FILE } from '../src/job/file-kind.ts';
 import { nearest } from '../src/job/nearest.ts';
 import { WrongUse } from './command-line.ts';
-import { COMMON_OPTIONS, isVerb, VERB_NAMES, VERBS, type Verb } from './verbs.ts';
+import { isVerb, optionsOf, VERB_NAMES, type Verb } from './verbs.ts';
 
 /** A fault for what the parser has against the arguments `given`; anything else is handed back as it is. */
 export function asUsageFault(error: unknown, given: readonly string[]): unknown {
@@ -66,7 +66,7 @@ function unknownWord(word: string, verb: Verb, given: readonly string[]): FaultP
       todo: 'remove it; put a name with blanks in quotes',
     };
   }
-  const options = [...VERBS[verb].options, ...COMMON_OPTIONS];
+  const options = Object.keys(optionsOf(verb));
   const near = nearest(word, options);
   return {
     code: 'unknown-option',

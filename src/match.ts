@@ -15,7 +15,7 @@ import { infer } from './match/infer.ts';
 import { oldAtWork } from './match/old-at-work.ts';
 import { asItWas, asItWorked, type Replacement, type Tried } from './match/replace.ts';
 import type { Contradiction, InferredCoil } from './match/types.ts';
-import { type Produced, produce } from './plan.ts';
+import { type Produced, type ProduceOptions, produce } from './plan.ts';
 import { lengthText, percentText, tidy } from './quantity/format.ts';
 import type { Output, OutputFile } from './record/listing.ts';
 import { makeRecord } from './record/make.ts';
@@ -167,6 +167,6 @@ async function comparison(record: CoilRecord): Promise<readonly OutputFile[]> {
 }
 
 /** The record and every file of the output folder. */
-export async function matchCoil(file: MatchFile, options: { version: string }): Promise<Output<CoilRecord>> {
+export async function matchCoil(file: MatchFile, options: ProduceOptions): Promise<Output<CoilRecord>> {
   return produce(() => matched(file), options, comparison);
 }

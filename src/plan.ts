@@ -73,6 +73,8 @@ export interface ProduceOptions {
   readonly version: string;
   /** Starts what makes the parts; threads of their own when left out. */
   readonly kernel?: () => Kernel;
+  /** Told what begins, in words for a person who waits. */
+  readonly tell?: ((stage: string) => void) | undefined;
 }
 
 /** The record and every file of the output folder. */
@@ -93,6 +95,7 @@ export async function produce(
 ): Promise<Output<CoilRecord>> {
   const kernel = (options.kernel ?? startKernel)();
   try {
+    options.tell?.('choosing the coil');
     const { job, found, extra } = find();
     // The parts need no figures at work: they are made while those are worked out.
     const parts = printedOf(job, found);
@@ -100,7 +103,9 @@ export async function produce(
     const making = Promise.all(parts.solids.map((solid) => kernel.part(solid, scale)));
     // A failure of a thread is reported when it is awaited below, not as an unhandled rejection meanwhile.
     making.catch(() => undefined);
+    options.tell?.('its figures at work');
     const record = makeRecord(job, found, options.version, parts, extra);
+    options.tell?.('the sheets');
     const beds = making.then((parts) => bedFiles(kernel, record, parts));
     beds.catch(() => undefined);
     const { windingSheet } = await import('./sheets/winding-sheet.ts');
@@ -109,6 +114,7 @@ export async function produce(
     const ranges = await referenceSheet(record);
     const { benchPage } = await import('./bench/page.ts');
     const page = await benchPage(record);
+    options.tell?.('the parts');
     const made = await making;
     const partsSheet = await partsSheetFile(record, made);
     const files: OutputFile[] = [

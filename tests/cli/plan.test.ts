@@ -278,7 +278,7 @@ describe('a job that plan refuses', () => {
 describe('what plan says', () => {
   const shown = async (columns: number) => {
     const { record, files } = await planned();
-    return showPlan(record, 'out/x', files, columns);
+    return showPlan(record, 'out/x', files, { columns });
   };
 
   it.each([40, 60, 80, 110])('fits %d columns', async (columns) => {

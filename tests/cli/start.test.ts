@@ -11,12 +11,14 @@ describe('start', () => {
   it('writes the job of the builder when none is named', async () => {
     const { exit, out, err, folder } = await command(['start']);
     expect([exit, err]).toEqual([0, '']);
-    expect(out).toBe('low-bench-receiver.yaml written; edit it, then: coilwright plan low-bench-receiver.yaml\n');
-    expect(readdirSync(folder)).toEqual(['low-bench-receiver.yaml']);
+    expect(out).toBe(`low-bench-receiver.yaml written; edit it, then: coilwright plan low-bench-receiver.yaml
+job.schema.json written, by which an editor completes and checks it
+`);
+    expect(readdirSync(folder).sort()).toEqual(['job.schema.json', 'low-bench-receiver.yaml']);
   });
 
   it('lists the starters, each of which it writes and which can be read', async () => {
-    const list = (await command(['start', '--list'])).out;
+    const list = (await command(['start', '--list'], testTerminal('', 110))).out;
     for (const { name, use } of STARTERS) {
       expect(list).toContain(`${name} `);
       expect(list).toContain(use);
@@ -29,15 +31,18 @@ describe('start', () => {
 
   it('writes to a file of another name, or to standard output', async () => {
     const { exit, out, folder } = await command(['start', 'forty-coil-lot.yaml', '--out', 'mine.yaml']);
-    expect([exit, out]).toEqual([0, 'mine.yaml written; edit it, then: coilwright plan mine.yaml\n']);
-    expect(readdirSync(folder)).toEqual(['mine.yaml']);
+    expect([exit, out.split('\n')[0]]).toEqual([0, 'mine.yaml written; edit it, then: coilwright plan mine.yaml']);
+    expect(readdirSync(folder).sort()).toEqual(['job.schema.json', 'mine.yaml']);
     const printed = await command(['start', 'forty-coil-lot', '--out', '-']);
     expect(printed.out).toBe(readFileSync(join(folder, 'mine.yaml'), 'utf8'));
   });
 
   it('writes the schema', async () => {
     const { exit, out, folder } = await command(['start', '--schema']);
-    expect([exit, out]).toEqual([0, 'job.schema.json written; name it in a job: $schema: ./job.schema.json\n']);
+    expect([exit, out]).toEqual([
+      0,
+      'job.schema.json written; name it in the file of a job: $schema: ./job.schema.json\n',
+    ]);
     const shipped = readFileSync(new URL('../../templates/schemas/job.schema.json', import.meta.url), 'utf8');
     expect(readFileSync(join(folder, 'job.schema.json'), 'utf8')).toBe(shipped);
   });
@@ -51,11 +56,16 @@ describe('start', () => {
 low-bench-receiver.yaml written, which it names
 cracked-form-replacement.yaml written, which it names
 forty-coil-lot.yaml was there already and is kept; it names that
+lot.schema.json written, by which an editor completes and checks it
+job.schema.json written, by which an editor completes and checks it
 `);
     expect(readFileSync(join(folder, 'forty-coil-lot.yaml'), 'utf8')).toBe('mine');
     const text = readFileSync(join(folder, 'saltmarsh-lot.yaml'), 'utf8');
     expect(readdirSync(folder).sort()).toEqual(
-      [...new Set(readLotFile(text, 'x').entries.map(({ path }) => path)), 'saltmarsh-lot.yaml'].sort(),
+      [
+        ...new Set(readLotFile(text, 'x').entries.map(({ path }) => path)),
+        ...['saltmarsh-lot.yaml', 'lot.schema.json', 'job.schema.json'],
+      ].sort(),
     );
     const again = await command(['start', 'saltmarsh-lot'], testTerminal());
     const there = testTerminal();
@@ -76,9 +86,12 @@ forty-coil-lot.yaml was there already and is kept; it names that
     const shipped = readFileSync(new URL('../../templates/schemas/lot.schema.json', import.meta.url), 'utf8');
     const { exit, out } = await command(['start', 'saltmarsh-lot', '--schema', '--out', '-']);
     expect([exit, out]).toEqual([0, shipped]);
-    const list = (await command(['start', '--list'])).out;
+    const list = (await command(['start', '--list'], testTerminal('', 110))).out;
     for (const { name, use } of LOTS) expect(list).toMatch(new RegExp(`^${name} +${use}$`, 'm'));
-    expect(Math.max(...list.split('\n').map(({ length }) => length))).toBeLessThan(100);
+    for (const columns of [40, 80, 110]) {
+      const { out: narrow } = await command(['start', '--list'], testTerminal('', columns));
+      expect(Math.max(...narrow.split('\n').map(({ length }) => length))).toBeLessThanOrEqual(columns);
+    }
   });
 
   it('never overwrites', async () => {

@@ -1,9 +1,9 @@
 import { existsSync, mkdirSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { showRanges } from '../../cli/show-ranges.ts';
-import { inAscii } from '../../cli/show-survey.ts';
-import { isPlain } from '../../cli/terminal.ts';
+import { inAscii } from '../../cli/page.ts';
+import { rangeChart } from '../../cli/show-ranges.ts';
+import { isAscii } from '../../cli/terminal.ts';
 import { surveyRecordSchema } from '../../src/record/survey-schema.ts';
 import { COILS } from '../../templates/coils/coils.ts';
 import { sampleRecord } from '../helpers/sample.ts';
@@ -88,7 +88,9 @@ describe('survey', () => {
       const terminal = testTerminal();
       expect(await command(['start', name], terminal)).toMatchObject({
         exit: 0,
-        out: `${name}.yaml written; edit it, then: coilwright survey ${name}.yaml\n`,
+        out: `${name}.yaml written; edit it, then: coilwright survey ${name}.yaml
+coil.schema.json written, by which an editor completes and checks it
+`,
       });
       const { exit, out, err } = await command(['survey', `${name}.yaml`], terminal);
       expect([exit, err]).toEqual([0, '']);
@@ -100,10 +102,10 @@ describe('survey', () => {
 
   it('fits the page, in ASCII where the terminal has no more', async () => {
     for (const columns of [40, 60, 80, 110])
-      for (const plain of [false, true]) {
-        const { out } = await command(['survey', '-'], { ...testTerminal(COIL, columns), plain });
+      for (const ascii of [false, true]) {
+        const { out } = await command(['survey', '-'], { ...testTerminal(COIL, columns), ascii });
         expect(Math.max(...out.split('\n').map((line) => [...line].length))).toBeLessThanOrEqual(columns);
-        expect(/^[\n -~]*$/.test(out)).toBe(plain);
+        expect(/^[\n -~]*$/.test(out)).toBe(ascii);
       }
   });
 
@@ -182,11 +184,11 @@ describe('the chart in the terminal', () => {
     { ...winding.taps[0]!, range: { ...range, lowKhz: 1000, highKhz: 2000, secondLowKhz: null, secondHighKhz: null } },
     { ...winding.taps[1]!, range: { ...range, lowKhz: 500, highKhz: 1250, secondLowKhz: null, secondHighKhz: null } },
   ];
-  const of = (columns: number, plain: boolean) =>
-    showRanges(
+  const of = (columns: number, ascii: boolean) =>
+    rangeChart(
       { ...record, windings: [{ ...winding, taps }], demand: { ...record.demand, bandLowKhz: null } },
       columns,
-      plain,
+      ascii,
     );
 
   it('draws a bar a position, shared stretches darker', () => {
@@ -205,7 +207,7 @@ describe('the chart in the terminal', () => {
 
   it('is empty without ranges', () => {
     const none = taps.map((tap) => ({ ...tap, range: null }));
-    expect(showRanges({ ...record, windings: [{ ...winding, taps: none }] }, 80, false)).toEqual([]);
+    expect(rangeChart({ ...record, windings: [{ ...winding, taps: none }] }, 80, false)).toEqual([]);
   });
 
   it('knows terminals that show ASCII alone', () => {
@@ -217,8 +219,8 @@ describe('the chart in the terminal', () => {
       [{ LC_ALL: '', LANG: 'de_DE.UTF-8' }, false],
       [{}, true],
     ];
-    for (const [env, plain] of cases) expect([env, isPlain(env, 'linux')]).toEqual([env, plain]);
-    expect(isPlain({}, 'win32')).toBe(false);
+    for (const [env, ascii] of cases) expect([env, isAscii(env, 'linux')]).toEqual([env, ascii]);
+    expect(isAscii({}, 'win32')).toBe(false);
     expect(inAscii('52.5 µH ± 1, 20 °C, 2 Ω – ’x’ ☃')).toBe("52.5 uH +- 1, 20 deg C, 2 ohm - 'x' ?");
   });
 });

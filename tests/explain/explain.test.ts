@@ -164,13 +164,13 @@ describe('an explanation', () => {
   test('fits every page from 40 to 110 columns and says where a law does not hold', () => {
     for (const columns of [40, 80, 110]) {
       for (const [, record] of records) {
-        const text = showExplain(explainTap(record, 1), columns);
+        const text = showExplain(explainTap(record, 1), { columns });
         const longest = Math.max(...text.split('\n').map((line) => line.length));
         expect(longest, `${columns}`).toBeLessThanOrEqual(columns);
         expect(text).not.toMatch(/NaN|undefined|null|Infinity/);
       }
     }
-    const lowest = showExplain(explainTap(records[3]![1], 2), 80);
+    const lowest = showExplain(explainTap(records[3]![1], 2), { columns: 80 });
     expect(lowest).toContain('NOT SO HERE');
   });
 });

@@ -118,12 +118,9 @@ describe('a two-switch coil, whole', () => {
   });
 
   it.each([40, 60, 80, 110])('is said in %d columns', (columns) => {
-    const said = showPlan(
-      record,
-      'out/x',
-      [{ path: 'plan.json', bytes: Buffer.alloc(9), note: 'the record' }],
+    const said = showPlan(record, 'out/x', [{ path: 'plan.json', bytes: Buffer.alloc(9), note: 'the record' }], {
       columns,
-    );
+    });
     const lines = said.split('\n');
     expect(Math.max(...lines.map((line) => [...line].length))).toBeLessThanOrEqual(Math.max(columns, 72));
     const start = lines.findIndex((line) => line.startsWith('Both switches'));
