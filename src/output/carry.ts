@@ -1,5 +1,5 @@
 /** Carries what is not ours from the old folder into the new one. */
-import { copyFile, link, lstat, mkdir, readdir, readlink, symlink, utimes } from 'node:fs/promises';
+import { copyFile, link, lstat, mkdir, readdir, readlink, rename, symlink, utimes } from 'node:fs/promises';
 import { join } from 'node:path';
 import { sync } from './disk.ts';
 import { isErrno, refuseFolder } from './faults.ts';
@@ -43,6 +43,30 @@ export async function carryOver(
       'something that coilwright did not make, where it would write a file of its own',
       'rename it or move it elsewhere; nothing was changed',
     );
+  }
+}
+
+/**
+ * Gives what was put into the old folder, or saved anew there, between {@link carryOver} and the change of names its second name
+ * as well. `from` is the backup, `to` the new folder in its place.
+ */
+export async function carryLate(
+  from: string,
+  to: string,
+  ours: ReadonlySet<string>,
+  written: ReadonlySet<string>,
+  below = '',
+): Promise<void> {
+  for (const entry of await readdir(join(from, below), { withFileTypes: true })) {
+    const path = below === '' ? entry.name : `${below}/${entry.name}`;
+    const [source, goal] = [join(from, path), join(to, path)];
+    if (entry.isDirectory()) await carryLate(from, to, ours, written, path);
+    else if (!ours.has(path) && !written.has(path) && (entry.isFile() || entry.isSymbolicLink())) {
+      const [late, there] = await Promise.all([lstat(source), lstat(goal).catch(() => null)]);
+      if (there !== null && (there.ino === late.ino || there.mtimeMs >= late.mtimeMs)) continue;
+      await mkdir(join(to, below), { recursive: true });
+      await rename(source, goal);
+    }
   }
 }
 

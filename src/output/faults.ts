@@ -22,12 +22,19 @@ const CAUSES: Readonly<Record<string, readonly [got: string, todo: string]>> = {
   EEXIST: ['a path that leads through a file', 'choose another folder with --out'],
   ENAMETOOLONG: ['a path that is too long for the file system', 'choose a shorter folder with --out'],
   ELOOP: ['a path of symbolic links that lead in a circle', 'choose another folder with --out'],
-  EBUSY: ['a folder that is in use', 'close what has it open, and run again'],
+  ENOTEMPTY: ['a folder that something else was put into meanwhile', 'run again, or choose another folder with --out'],
+  EBUSY: [
+    'a folder that is in use, or at which a disk is mounted',
+    'close what has it open, or choose a folder below it with --out',
+  ],
   ENOENT: ['a path that cannot be made', 'choose another folder with --out'],
 };
 
-/** A fault for what the file system answered; anything else is handed back as it is. */
-export function outputFault(error: unknown, target: string): unknown {
+/**
+ * A fault for what the file system answered; anything else is handed back as it is. `outcome` says how things stand now, behind
+ * what to do.
+ */
+export function outputFault(error: unknown, target: string, outcome = 'nothing was changed'): unknown {
   if (!(error instanceof Error) || !('code' in error) || typeof error.code !== 'string' || error instanceof Fault) {
     return error;
   }
@@ -42,7 +49,7 @@ export function outputFault(error: unknown, target: string): unknown {
     place: { file: target },
     got,
     expected: 'a folder that can be written',
-    todo: `${todo}; nothing was changed`,
+    todo: `${todo}; ${outcome}`,
   });
 }
 

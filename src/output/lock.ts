@@ -1,16 +1,18 @@
 /** One writer a folder. The lock is a file beside the folder that names its process. */
 import { randomBytes } from 'node:crypto';
-import { lstat, open, readdir, readFile, rename, rm } from 'node:fs/promises';
+import { lstat, open, readFile, rm } from 'node:fs/promises';
 import { hostname } from 'node:os';
-import { basename, dirname, join } from 'node:path';
 import { setTimeout as wait } from 'node:timers/promises';
 import { Fault } from '../fault.ts';
 import { isErrno } from './faults.ts';
+import { birthOf, isGone } from './process.ts';
 
 interface Holder {
   readonly pid: number;
   readonly host: string;
   readonly token: string;
+  /** Tells it from a later process with the same number; null where the system does not say. */
+  readonly born: string | null;
 }
 
 /** A lock without a readable holder is being made, or was left half made; after this it counts as left. */
@@ -22,17 +24,17 @@ const PAUSE_MS = 25;
  * Fault with exit code 5. Returns what releases it.
  */
 export async function lock(path: string, target: string, patienceMs = 10_000): Promise<() => Promise<void>> {
-  const mine: Holder = { pid: process.pid, host: hostname(), token: randomBytes(8).toString('hex') };
+  const token = randomBytes(8).toString('hex');
+  const mine: Holder = { pid: process.pid, host: hostname(), token, born: await birthOf(process.pid) };
   const until = Date.now() + patienceMs;
   for (;;) {
     if (await create(path, mine)) {
-      await sweep(path);
+      await removeLeft(breaking(path));
       return () => release(path, mine);
     }
     const text = await readFile(path, 'utf8').catch(() => null);
-    if (text !== null && (await isStale(path, text))) {
-      await remove(path, text);
-    } else if (Date.now() >= until) {
+    if (text !== null && (await isLeft(path, text))) await takeAway(path, mine);
+    if (Date.now() >= until) {
       const holder = parse(text ?? '');
       throw new Fault(5, {
         code: 'locked',
@@ -44,66 +46,55 @@ export async function lock(path: string, target: string, patienceMs = 10_000): P
         expected: 'one run at a time for one folder',
         todo: `wait for it to end; if there is no such run, remove ${path}`,
       });
-    } else {
-      await wait(PAUSE_MS);
     }
+    await wait(PAUSE_MS);
   }
 }
 
+/** Whether it was made; not when one is there. Nothing is left of one that could not be written. */
 async function create(path: string, mine: Holder): Promise<boolean> {
+  const handle = await open(path, 'wx').catch((error: unknown) => {
+    if (isErrno(error, 'EEXIST')) return null;
+    throw error;
+  });
+  if (handle === null) return false;
   try {
-    const handle = await open(path, 'wx');
-    try {
-      await handle.writeFile(JSON.stringify(mine));
-    } finally {
-      await handle.close();
-    }
-    return true;
+    await handle.writeFile(JSON.stringify(mine)).finally(() => handle.close());
   } catch (error) {
-    if (isErrno(error, 'EEXIST')) return false;
+    await rm(path, { force: true }).catch(() => undefined);
     throw error;
   }
+  return true;
 }
 
-async function isStale(path: string, text: string): Promise<boolean> {
+/** The process that wrote it is no more, or wrote nothing for long. */
+async function isLeft(path: string, text: string): Promise<boolean> {
   const holder = parse(text);
   if (holder === null) {
     const found = await lstat(path).catch(() => null);
     return found !== null && Date.now() - found.mtimeMs > HALF_MADE_MS;
   }
-  if (holder.host !== hostname()) return false;
-  try {
-    process.kill(holder.pid, 0);
-    return false;
-  } catch (error) {
-    return isErrno(error, 'ESRCH');
-  }
+  return holder.host === hostname() && (await isGone(holder.pid, holder.born));
 }
 
-/** Removes the lock that was read, and not one that another run has put there since. */
-async function remove(path: string, text: string): Promise<void> {
-  const aside = `${path}-${randomBytes(4).toString('hex')}`;
-  try {
-    await rename(path, aside);
-  } catch (error) {
-    if (isErrno(error, 'ENOENT')) return;
-    throw error;
-  }
-  const found = await readFile(aside, 'utf8').catch(() => null);
-  // Gone: another run has swept it, which it does only with a lock that nobody holds.
-  if (found === null || found === text) await rm(aside, { force: true });
-  else await rename(aside, path);
+async function removeLeft(path: string): Promise<void> {
+  const text = await readFile(path, 'utf8').catch(() => null);
+  if (text !== null && (await isLeft(path, text))) await rm(path, { force: true });
 }
 
-/** Clears away locks of processes that are gone, which a run killed in {@link remove} had put aside. */
-async function sweep(path: string): Promise<void> {
-  const folder = dirname(path);
-  const aside = `${basename(path)}-`;
-  for (const name of await readdir(folder).catch(() => [])) {
-    if (!name.startsWith(aside) || !/^[0-9a-f]{8}$/.test(name.slice(aside.length))) continue;
-    const left = join(folder, name);
-    const text = await readFile(left, 'utf8').catch(() => null);
-    if (text !== null && (await isStale(left, text))) await rm(left, { force: true });
+const breaking = (path: string): string => `${path}-breaking`;
+
+/**
+ * Removes a lock that was left, unless another run does. Whoever looks and then removes must be alone in it: another that has
+ * looked before would remove the lock that was made since.
+ */
+async function takeAway(path: string, mine: Holder): Promise<void> {
+  const alone = breaking(path);
+  if (!(await create(alone, mine))) return removeLeft(alone);
+  try {
+    await removeLeft(path);
+  } finally {
+    await rm(alone, { force: true });
   }
 }
 
@@ -116,13 +107,14 @@ function parse(text: string): Holder | null {
   try {
     const found: unknown = JSON.parse(text);
     if (typeof found !== 'object' || found === null) return null;
-    const { pid, host, token } = found as Record<string, unknown>;
+    const { pid, host, token, born = null } = found as Record<string, unknown>;
     return typeof pid === 'number' &&
       Number.isInteger(pid) &&
       pid > 0 &&
       typeof host === 'string' &&
-      typeof token === 'string'
-      ? { pid, host, token }
+      typeof token === 'string' &&
+      (typeof born === 'string' || born === null)
+      ? { pid, host, token, born }
       : null;
   } catch {
     return null;

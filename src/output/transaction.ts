@@ -2,7 +2,8 @@
  * One folder, written whole or not at all, for every verb that writes.
  *
  *     lock -> mend what a killed run left -> judge the folder that is there -> write a new one beside it, synced
- *          -> give what is not ours a second name in it -> old to backup -> new into place -> backup away -> unlock
+ *          -> give what is not ours a second name in it -> old to backup -> new into place -> what came late -> backup away
+ *          -> unlock
  *
  * At every moment the old folder or the new one is whole, under its name or as the backup; the next run puts a backup
  * back. A folder is ours when its record says so; the files that lists are what may be replaced. A run that takes long holds
@@ -10,7 +11,7 @@
  */
 import { access, constants, lstat, mkdir, readdir, rename, rm, rmdir } from 'node:fs/promises';
 import { basename, dirname, join, resolve } from 'node:path';
-import { carryOver, secondName } from './carry.ts';
+import { carryLate, carryOver, secondName } from './carry.ts';
 import { sync, writeSynced } from './disk.ts';
 import { isErrno, outputFault, refuseFolder } from './faults.ts';
 import { lock } from './lock.ts';
@@ -79,8 +80,10 @@ export async function holding<T>(dir: string, run: (held: Held) => Promise<T>): 
     throw refuseFolder(target, 'the root of the file system', 'choose a folder below it');
   }
   const names = namesBeside(target);
+  let begun = false;
   try {
     await mkdir(dirname(target), { recursive: true });
+    begun = true;
     const unlock = await lock(names.lock, target);
     try {
       await mend(target, names);
@@ -89,13 +92,16 @@ export async function holding<T>(dir: string, run: (held: Held) => Promise<T>): 
         target,
         work: names.work,
         write: (files) => replace(target, names, files),
-        finished: () => rm(names.work, { recursive: true, force: true }),
+        finished: () => takeAway(names.work, target),
       });
     } finally {
-      await rm(names.temporary, { recursive: true, force: true });
-      await unlock();
+      // What cannot be cleared away now the next run clears away; how this one has ended counts.
+      await rm(names.temporary, { recursive: true, force: true }).catch(() => undefined);
+      await unlock().catch(() => undefined);
     }
   } catch (error) {
+    if (begun && isErrno(error, 'ENOENT'))
+      throw refuseFolder(target, 'a folder that was taken away while it was written, or one above it', 'run again');
     throw outputFault(error, target);
   }
 }
@@ -106,11 +112,13 @@ async function replace(target: string, names: Names, files: readonly OutputFile[
   await writeAll(names.temporary, files);
   if (ours === null) {
     await rename(names.temporary, target);
+    await sync(dirname(target)).catch((error: unknown) => {
+      throw outputFault(error, target, 'the new folder is there, and may not outlast a loss of power');
+    });
   } else {
     await carryOver(target, names.temporary, ours, written);
-    await swap(target, names);
+    await swap(target, names, ours, written);
   }
-  await sync(dirname(target));
 }
 
 /**
@@ -120,7 +128,9 @@ async function replace(target: string, names: Names, files: readonly OutputFile[
 export async function checkFolder(dir: string): Promise<void> {
   const target = resolve(dir);
   try {
-    if ((await judge(target)) === null) await access(await nearestThere(dirname(target)), constants.W_OK);
+    await judge(target);
+    // Renaming needs the folder above, whether ours is there or not.
+    await access(await nearestThere(dirname(target)), constants.W_OK);
   } catch (error) {
     throw outputFault(error, target);
   }
@@ -147,8 +157,12 @@ async function mend(target: string, names: Names): Promise<void> {
   // Killed between the two renames: the old folder lies under the backup name only.
   if (there === 'nothing') return rename(names.backup, target);
   if (there === 'folder') {
-    // Killed while clearing away: the new folder has all that was not ours.
-    if ((await filesOf(target)) !== null) return rm(names.backup, { recursive: true, force: true });
+    // Killed while clearing away: the new folder has all that was not ours, but for what came at the last moment.
+    if ((await filesOf(target)) !== null) {
+      const ours = await filesOf(names.backup);
+      if (ours !== null) await carryLate(names.backup, target, ours, new Set());
+      return rm(names.backup, { recursive: true, force: true });
+    }
     if ((await readdir(target)).length === 0) {
       await rmdir(target);
       return rename(names.backup, target);
@@ -203,14 +217,35 @@ async function writeAll(folder: string, files: readonly OutputFile[]): Promise<v
 }
 
 /** When the second rename fails the first is undone. */
-async function swap(target: string, names: Names): Promise<void> {
+async function swap(
+  target: string,
+  names: Names,
+  ours: ReadonlySet<string>,
+  written: ReadonlySet<string>,
+): Promise<void> {
   await rename(target, names.backup);
   try {
     await rename(names.temporary, target);
   } catch (error) {
-    await rename(names.backup, target);
+    await rename(names.backup, target).catch(() => {
+      throw outputFault(error, target, `the folder that was there waits as ${names.backup}; the next run puts it back`);
+    });
     throw error;
   }
-  await sync(dirname(target));
-  await rm(names.backup, { recursive: true, force: true });
+  try {
+    await sync(dirname(target));
+    await carryLate(names.backup, target, ours, written);
+  } catch (error) {
+    throw outputFault(error, target, `the new folder is whole; the one before it still lies as ${names.backup}`);
+  }
+  await takeAway(names.backup, target);
+}
+
+/** Removes what is needed no more once the new folder is in its place. */
+async function takeAway(path: string, target: string): Promise<void> {
+  try {
+    await rm(path, { recursive: true, force: true });
+  } catch (error) {
+    throw outputFault(error, target, `the new folder is whole; only ${path} could not be removed, remove it yourself`);
+  }
 }

@@ -1,4 +1,4 @@
-import { spawnSync } from 'node:child_process';
+import { spawn, spawnSync } from 'node:child_process';
 import {
   existsSync,
   lstatSync,
@@ -12,10 +12,13 @@ import {
 } from 'node:fs';
 import { hostname } from 'node:os';
 import { join } from 'node:path';
+import { setTimeout as wait } from 'node:timers/promises';
 import { describe, expect, it } from 'vitest';
 import { Fault } from '../../src/fault.ts';
+import { carryLate } from '../../src/output/carry.ts';
 import { outputFault } from '../../src/output/faults.ts';
 import { lock } from '../../src/output/lock.ts';
+import { birthOf } from '../../src/output/process.ts';
 import { checkFolder, holding, namesBeside, writeFolder } from '../../src/output/transaction.ts';
 import { below, faultOf, output, scratch } from './folder.ts';
 
@@ -119,6 +122,42 @@ describe('a folder that is written', () => {
     });
     expect(lstatSync(join(coil, 'notes.txt')).mtimeMs).toBe(2_000_000);
     expect(readFileSync(join(base, 'outside'), 'utf8')).toBe('outside');
+  });
+});
+
+describe('what comes into the folder while it is written', () => {
+  it('goes over into the new one: put in, or saved anew, after the rest was carried', async () => {
+    const base = scratch();
+    const coil = join(base, 'coil');
+    const { backup } = namesBeside(coil);
+    await writeFolder(coil, SECOND);
+    for (const folder of [backup, coil]) mkdirSync(join(folder, 'photos'), { recursive: true });
+    writeFileSync(join(backup, 'notes.txt'), 'late');
+    writeFileSync(join(coil, 'notes.txt'), 'early');
+    utimesSync(join(coil, 'notes.txt'), 1000, 2000);
+    writeFileSync(join(backup, 'photos', 'a.jpg'), 'late');
+    writeFileSync(join(backup, 'sheet.pdf'), 'first');
+    writeFileSync(join(coil, 'photos', 'b.jpg'), 'mine');
+    symlinkSync('nowhere', join(backup, 'link'));
+    await carryLate(backup, coil, new Set(['sheet.pdf']), new Set());
+    expect(below(coil)).toEqual({
+      ...SECOND_BELOW,
+      'notes.txt': 'late',
+      'photos/a.jpg': 'late',
+      'photos/b.jpg': 'mine',
+      link: '-> nowhere',
+    });
+  });
+
+  it('also when the run was killed while it cleared away', async () => {
+    const coil = join(scratch(), 'coil');
+    const { backup } = namesBeside(coil);
+    await writeFolder(coil, SECOND);
+    await writeFolder(backup, FIRST);
+    writeFileSync(join(backup, 'notes.txt'), 'late');
+    await writeFolder(coil, SECOND);
+    expect(below(coil)).toEqual({ ...SECOND_BELOW, 'notes.txt': 'late' });
+    expect(existsSync(backup)).toBe(false);
   });
 });
 
@@ -280,18 +319,55 @@ describe('the lock', () => {
     expect(existsSync(path)).toBe(false);
   });
 
-  it('put aside by a run that was killed then is cleared away, that of a living process is not', async () => {
-    const base = scratch();
-    const coil = join(base, 'coil');
-    const path = namesBeside(coil).lock;
+  it('for taking over, left by a run that was killed then, is cleared away and stops nobody', async () => {
     const text = (pid: number) => JSON.stringify({ pid, host: hostname(), token: 'x' });
-    writeFileSync(`${path}-00c0ffee`, text(deadPid()));
-    writeFileSync(`${path}-0badcafe`, text(process.pid));
-    writeFileSync(`${path}-mine`, text(deadPid()));
-    await writeFolder(coil, FIRST);
-    const beside = Object.keys(below(base)).filter((name) => name.startsWith('.'));
-    expect(beside.sort()).toEqual(['.coil.coilwright-lock-0badcafe', '.coil.coilwright-lock-mine']);
+    for (const left of [false, true]) {
+      const base = scratch();
+      const coil = join(base, 'coil');
+      const path = namesBeside(coil).lock;
+      writeFileSync(`${path}-breaking`, text(deadPid()));
+      if (left) writeFileSync(path, text(deadPid()));
+      await writeFolder(coil, FIRST);
+      expect(Object.keys(below(base)).filter((name) => name.startsWith('.'))).toEqual([]);
+    }
   });
+
+  it('of a number that another process has since is taken over; a process is known by its birth', async () => {
+    const born = await birthOf(process.pid);
+    const coil = join(scratch(), 'coil');
+    const path = namesBeside(coil).lock;
+    const text = (when: string | null) =>
+      JSON.stringify({ pid: process.pid, host: hostname(), token: 'x', born: when });
+    for (const when of [born, null]) {
+      writeFileSync(path, text(when));
+      expect((await faultOf(lock(path, coil, 60))).code).toBe('locked');
+    }
+    // Only where the system tells births apart.
+    if (born === null) return;
+    writeFileSync(path, text('another boot 17'));
+    await writeFolder(coil, FIRST);
+    expect(existsSync(path)).toBe(false);
+  });
+
+  it.runIf(process.platform === 'linux')(
+    'of a process that has ended and is asked by nobody how is taken over',
+    async () => {
+      const coil = join(scratch(), 'coil');
+      // The shell becomes a program that waits for no child, so that the child stays known as ended.
+      const parent = spawn('sh', ['-c', 'sleep 0 & echo $!; exec sleep 20'], { stdio: ['ignore', 'pipe', 'ignore'] });
+      try {
+        const pid = Number(await new Promise((done) => parent.stdout.once('data', (data) => done(String(data)))));
+        const ended = () => readFileSync(`/proc/${pid}/stat`, 'utf8').includes(') Z ');
+        while (!ended()) await wait(10);
+        process.kill(pid, 0);
+        writeFileSync(namesBeside(coil).lock, JSON.stringify({ pid, host: hostname(), token: 'x' }));
+        await writeFolder(coil, FIRST);
+        expect(below(coil)).toMatchObject({ 'sheet.pdf': 'first' });
+      } finally {
+        parent.kill('SIGKILL');
+      }
+    },
+  );
 
   it('half made is taken over when it is old', async () => {
     const coil = join(scratch(), 'coil');
