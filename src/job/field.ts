@@ -62,6 +62,12 @@ const described = (doc: Doc, kind: KindName): Doc =>
   `${doc} ${capital(KINDS[kind].noun)}, such as ${KINDS[kind].example}.`;
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 
+/** The sentence with how one is written, unless it shows that itself, in quotes. */
+const shownHow = (doc: Doc, how: string): Doc => (/"[^"]*\d[^"]*"/.test(doc) ? doc : `${doc} ${capital(how)}.`);
+
+/** What is expected where nothing is written: how one is written, with an example. */
+const howWritten = (refused: Parsed<unknown>): string => (refused.ok ? '' : refused.expected);
+
 /** One quantity, in the unit of its kind. */
 export function quantity(kind: KindName, doc: Doc, allowed: Allowed = {}) {
   const type = KINDS[kind].unit === '1' ? ['string', 'number'] : 'string';
@@ -70,7 +76,8 @@ export function quantity(kind: KindName, doc: Doc, allowed: Allowed = {}) {
 
 /** A range, low end first. */
 export function range(kind: KindName, doc: Doc) {
-  return field((raw) => (typeof raw === 'string' ? parseRange(raw, kind) : readRangeOf(raw, kind)), doc, {
+  const told = shownHow(doc, howWritten(parseRange('', kind)));
+  return field((raw) => (typeof raw === 'string' ? parseRange(raw, kind) : readRangeOf(raw, kind)), told, {
     type: 'string',
   });
 }
@@ -95,8 +102,11 @@ export function values(kind: KindName, doc: Doc) {
       }
       return { list: readList(raw, context, (one) => readQuantity(one, kind, {}), KINDS[kind].noun) };
     })
-    .meta({ description: doc, anyOf: [{ type: 'string' }, jsonList({ type: 'string' })] });
+    .meta({ description: listed(doc, kind), anyOf: [{ type: 'string' }, jsonList({ type: 'string' })] });
 }
+
+const listed = (doc: Doc, kind: KindName): Doc =>
+  shownHow(doc, `${KINDS[kind].noun}, such as ${KINDS[kind].example}, or a list`);
 
 /** One entry, or a list of at least one. */
 export function listOf<T>(read: (raw: unknown) => Parsed<T>, noun: string, doc: Doc, json: Json) {
@@ -108,7 +118,7 @@ export function listOf<T>(read: (raw: unknown) => Parsed<T>, noun: string, doc: 
 
 /** Quantities, one or a list. */
 export function quantities(kind: KindName, doc: Doc) {
-  return listOf((raw) => readQuantity(raw, kind, {}), KINDS[kind].noun, doc, { type: 'string' });
+  return listOf((raw) => readQuantity(raw, kind, {}), KINDS[kind].noun, listed(doc, kind), { type: 'string' });
 }
 
 const MOST = 200;
@@ -169,7 +179,10 @@ export function scales(doc: Doc) {
         });
       return z.NEVER;
     })
-    .meta({ description: doc, anyOf: [{ type: ['string', 'number'] }, jsonList({ type: ['string', 'number'] })] });
+    .meta({
+      description: shownHow(doc, `${KINDS.scale.noun}, such as ${KINDS.scale.example}`),
+      anyOf: [{ type: ['string', 'number'] }, jsonList({ type: ['string', 'number'] })],
+    });
 }
 
 /** Words, or else a length: the pitch. */
@@ -193,7 +206,7 @@ export function choiceOr<const W extends string>(
       }
       return readQuantity(raw, kind, {});
     },
-    doc,
+    shownHow(doc, `one of these words, or ${KINDS[kind].noun} such as ${example}`),
     { anyOf: [{ enum: [...words] }, { type: 'string' }] },
   );
 }
@@ -209,7 +222,10 @@ export function choiceOrList<const W extends string>(words: readonly W[], kind: 
       refuse(context, { ...chosen, expected: `${chosen.expected}, or a list such as [20 uH, 80 uH, 240 uH]` });
       return z.NEVER;
     })
-    .meta({ description: doc, anyOf: [{ enum: [...words] }, jsonList({ type: 'string' })] });
+    .meta({
+      description: shownHow(doc, `of a list each is ${KINDS[kind].noun}, such as ${KINDS[kind].example}`),
+      anyOf: [{ enum: [...words] }, jsonList({ type: 'string' })],
+    });
 }
 
 /** A whole number. */
@@ -244,5 +260,5 @@ export function size(doc: Doc) {
     const refused = parseSize('');
     return refused.ok ? refused : { ...refused, got: shown(raw) };
   };
-  return field(read, doc, { type: 'string' });
+  return field(read, shownHow(doc, howWritten(parseSize(''))), { type: 'string' });
 }

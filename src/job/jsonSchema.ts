@@ -1,6 +1,7 @@
 /** The JSON Schema of a job file, for editors; shipped as `templates/schemas/job.schema.json`. */
 import * as z from 'zod';
 import { DEFAULTS } from './defaults.ts';
+import { type EditorNode, forEditors } from './editor.ts';
 import { jobSchema } from './schema.ts';
 
 interface Node {
@@ -10,7 +11,10 @@ interface Node {
 }
 
 /** Draft 2020-12. A key with a default is not required: it is filled in before the job is read. */
-export function jobJsonSchema(): Record<string, unknown> {
+export const jobJsonSchema = (): Record<string, unknown> => forEditors(jobKeys());
+
+/** The same before its descriptions are completed, for files that share keys with a job. */
+export function jobKeys(): EditorNode {
   const schema = z.toJSONSchema(jobSchema, { io: 'input', unrepresentable: 'any' }) as Node;
   const filled = new Set([
     ...Object.keys(DEFAULTS),

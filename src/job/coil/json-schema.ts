@@ -1,5 +1,6 @@
 /** The JSON Schema of a coil file, for editors; shipped as `templates/schemas/coil.schema.json`. */
 import * as z from 'zod';
+import { type EditorNode, forEditors } from '../editor.ts';
 import { COIL_DEFAULTS } from './defaults.ts';
 import { groupFileSchema, textFileSchema } from './schema.ts';
 
@@ -20,7 +21,7 @@ export function coilJsonSchema(): Record<string, unknown> {
     keys.wire = { description, anyOf: [words, group] };
   }
   relax(schema, '', new Set([...Object.keys(COIL_DEFAULTS), 'name', 'spread']));
-  return schema;
+  return forEditors(schema as EditorNode);
 }
 
 function relax(node: Node, prefix: string, filled: ReadonlySet<string>): void {

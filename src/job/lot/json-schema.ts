@@ -1,5 +1,6 @@
 /** The JSON Schema of a lot file, for editors; shipped as `templates/schemas/lot.schema.json`. */
 import * as z from 'zod';
+import { type EditorNode, forEditors } from '../editor.ts';
 import { LOT_DEFAULTS, listedLotSchema, tabledLotSchema } from './schema.ts';
 
 interface Node {
@@ -20,5 +21,5 @@ export function lotJsonSchema(): Record<string, unknown> {
   }
   for (const [key, value] of Object.entries(LOT_DEFAULTS)) keys[key] = { ...keys[key], default: value };
   schema.required = ['coils'];
-  return schema;
+  return forEditors(schema as EditorNode);
 }

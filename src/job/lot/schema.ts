@@ -54,7 +54,7 @@ const spoolSchema = z.strictObject({
   wire: field(readWire, 'Size and covering, such as 0.5 mm enamel.', { type: 'string' }),
   left: field(
     readLeft,
-    'What is on it: metres or feet; or the weight of the wire without the reel, in grams or ounces.',
+    'What is on it: metres or feet; or the weight of the wire without the reel, in grams or ounces, such as 120 m or 250 g.',
     {
       type: 'string',
     },

@@ -1,6 +1,7 @@
 /** The JSON Schema of an old coil's file, for editors; shipped as `templates/schemas/match.schema.json`. */
 import * as z from 'zod';
-import { jobJsonSchema } from '../jsonSchema.ts';
+import { type EditorNode, forEditors } from '../editor.ts';
+import { jobKeys } from '../jsonSchema.ts';
 import { OLD_DEFAULTS } from './defaults.ts';
 import { groupFileSchema, textFileSchema } from './schema.ts';
 
@@ -15,7 +16,7 @@ interface Node {
 export function oldCoilJsonSchema(): Record<string, unknown> {
   const of = (schema: z.ZodType) => z.toJSONSchema(schema, { io: 'input', unrepresentable: 'any' }) as Node;
   const schema = of(groupFileSchema);
-  const job = jobJsonSchema() as Node;
+  const job = jobKeys() as Node;
   const own = schema.properties ?? {};
   for (const key of Object.keys(own)) {
     const shared = job.properties?.[key];
@@ -28,7 +29,10 @@ export function oldCoilJsonSchema(): Record<string, unknown> {
     old.wire = { description, anyOf: [words, group] };
   }
   for (const keys of [(old.taps?.items as Node | undefined)?.properties, old.whole?.properties])
-    if (keys?.inductance !== undefined) keys.inductance = { anyOf: [{ type: 'string' }, keys.inductance] };
+    if (keys?.inductance !== undefined) {
+      const { description, ...group } = keys.inductance;
+      keys.inductance = { description, anyOf: [{ type: 'string' }, group] };
+    }
   if (old.taps !== undefined) old.taps.items = { anyOf: [old.taps.items, { const: 'lost' }, { type: 'number' }] };
   schema.required = ['old'];
   for (const [dotted, value] of Object.entries(OLD_DEFAULTS)) {
@@ -40,5 +44,5 @@ export function oldCoilJsonSchema(): Record<string, unknown> {
     holder.required = holder.required.filter((key) => key !== second);
     if (holder.required.length === 0) delete holder.required;
   }
-  return schema;
+  return forEditors(schema as EditorNode);
 }

@@ -112,12 +112,19 @@ export function readWritten(raw: unknown, read: ReadValue, noun: string): Parsed
   return value.ok ? { ok: true, value: { value: value.value, uncertainty: null } } : value;
 }
 
-const json = (type: string | string[]) => ({
+const json = (type: string | string[], how: string) => ({
   anyOf: [
     { type },
     {
       type: 'object',
-      properties: { value: { type }, uncertainty: { type: ['string', 'number'] } },
+      properties: {
+        value: { type, description: `What was measured: ${how}.` },
+        uncertainty: {
+          type: ['string', 'number'],
+          description:
+            'Half of the 95 % limits, in the unit of the value or as a percentage such as 0.5 %; what is usual for the tool when left out.',
+        },
+      },
       required: ['value'],
       additionalProperties: false,
     },
@@ -130,11 +137,15 @@ export function reading(kind: KindName, doc: Doc, allowed: Allowed = {}) {
   return field(
     (raw) => readWritten(raw, valueReader(kind, allowed), noun),
     `${doc} ${noun.charAt(0).toUpperCase()}${noun.slice(1)}, such as ${example}; or with ± and its uncertainty.`,
-    json('string'),
+    json('string', `${noun}, such as ${example}`),
   );
 }
 
 /** A field of a measured plain number. */
 export function plainReading(read: ReadValue, noun: string, doc: Doc) {
-  return field((raw) => readWritten(raw, read, noun), doc, json(['number', 'string']));
+  return field(
+    (raw) => readWritten(raw, read, noun),
+    doc,
+    json(['number', 'string'], `${noun}, a number without a unit`),
+  );
 }

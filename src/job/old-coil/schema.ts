@@ -75,7 +75,7 @@ const inductance = z
       .meta({ description: 'Half of the 95 % limits, beside what meter.accuracy says.' }),
     at: quantity('frequency', 'Frequency of the meter for this reading; meter.frequency when left out.').optional(),
   })
-  .describe('Inductance from the start to here.');
+  .describe('Inductance from the start to here, such as 240 uH.');
 
 const resonance = z
   .strictObject({
