@@ -44,8 +44,9 @@ export function wireText(m: number): string {
   return `${trimmed(m, 2)} m`;
 }
 
-/** `2.31 Ω`, `14.2 kΩ`. */
+/** `2.31 Ω`, `14.2 kΩ`, `10 MΩ`. */
 export function resistanceText(ohm: number): string {
+  if (Math.abs(ohm) >= 1e6) return `${tidy(ohm / 1e6, 3)} MΩ`;
   return Math.abs(ohm) >= 1e4 ? `${tidy(ohm / 1e3, 3)} kΩ` : `${tidy(ohm, 3)} Ω`;
 }
 

@@ -150,6 +150,8 @@ export function twoCapacitors(record: CoilRecord, widthMm: number, graphMm: numb
     inductancePercent === null || selfHalfPf === null
       ? LINE.second
       : LINE.known(short(100 * shop.capacitorTolerance, 3), short(inductancePercent, 1), short(selfHalfPf, 1));
+  const { instruments } = shop;
+  const addedPf = instruments?.stated ? instruments.probePf + (instruments.couplingPf ?? 0) : 0;
   const drawn: Block = {
     widthMm,
     heightMm: graphMm,
@@ -163,6 +165,7 @@ export function twoCapacitors(record: CoilRecord, widthMm: number, graphMm: numb
         ...LINE.formula(figures(FACTOR)).map((text, i) => result(text, LINE.formulaUnits[i]!, widthMm, measure)),
         small(LINE.how),
         small(`${expect} ${open}`),
+        ...(addedPf > 0 ? [small(LINE.probed(short(addedPf, 1)))] : []),
       ],
       0.3,
     ),

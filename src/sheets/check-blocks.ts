@@ -3,6 +3,7 @@ import { CHECKS } from '../../templates/wording/winding-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import type { Shape } from '../drawing/drawing.ts';
 import { label, line, SMALL_MM } from '../drawing/shapes.ts';
+import { capacitanceText, resistanceText } from '../quantity/format.ts';
 import type { CoilRecord, Setting, Tap } from '../record/schema.ts';
 import { type Block, heading, paragraph, stack } from './block.ts';
 import { sectionCells, sectionParts, sectionWords } from './check-blocks-advice.ts';
@@ -59,15 +60,21 @@ export function tapChecks(
   const parts = Math.ceil(taps.length / ROWS);
   const each = Math.ceil(taps.length / parts);
   const { former } = record;
+  const tables = (probed: boolean) =>
+    Array.from({ length: parts }, (_, i) =>
+      tapCheckTable(record, taps.slice(i * each, (i + 1) * each), widthMm, rowMm, measure, { advised, probed }),
+    );
+  const wider = isProbed(record) ? tables(true) : [];
+  // Two columns more may be more than the page is wide.
+  const probed = wider.length > 0 && wider.every((one) => one.widthMm <= widthMm + 1e-6);
   const words = [
-    `${meterWords(record)} ${CHECKS.limitsHold(dominants(record))} ${CHECKS.measureHow}`,
+    `${meterWords(record)} ${CHECKS.limitsHold(dominants(record))} ${measureWords(record, probed)}`,
     `${sentence(former.material)} ${sentence(former.stiffness)}`,
     ...(advised ? [sectionWords(record)] : []),
   ].map((text) => paragraph(text, widthMm, measure, { sizeMm: SMALL_MM }));
-  return Array.from({ length: parts }, (_, i) => {
+  return (probed ? wider : tables(false)).map((body, i) => {
     const head = heading(i === 0 ? CHECKS.taps : CHECKS.tapsMore, widthMm, measure);
-    const body = [head, tapCheckTable(record, taps.slice(i * each, (i + 1) * each), widthMm, rowMm, measure, advised)];
-    return stack(i === parts - 1 ? [stack(body, 0), stack(words, 0.3)] : body, 0.8);
+    return stack(i === parts - 1 ? [stack([head, body], 0), stack(words, 0.3)] : [head, body], 0.8);
   });
 }
 
@@ -81,13 +88,32 @@ function meterCell({ lowUh, highUh, doubt }: CoilRecord['measuring']['meter'][nu
 /** The known capacitor that taps are measured with: the largest, beside which strays count least. */
 export const tapCapacitorPf = (record: CoilRecord): number | null => record.shop.capacitorsPf.at(-1) ?? null;
 
+/** Whether whoever measures has stated generator and probe: then the table says what these will show. */
+export const isProbed = ({ shop, measuring }: CoilRecord): boolean =>
+  shop.instruments?.stated === true && measuring.instruments !== undefined;
+
+/** A width is not read nearer. */
+const twoFigures = (value: number) => fixed(value, value < 1 ? 2 : value < 10 ? 1 : 0);
+
+/** Limits of resonance and width with generator and probe, each with room to write. */
+function probedCells({ measuring }: CoilRecord, tap: number, pf: number): string[] {
+  const row = measuring.instruments?.rows.find((one) => one.tap === tap && one.capacitancePf === pf);
+  if (row === undefined || row.lowKhz === null || row.widthLowKhz === null) return [CHECKS.none, '', CHECKS.none, ''];
+  return [
+    between(kiloHertz(row.lowKhz), kiloHertz(row.highKhz!)),
+    '',
+    between(twoFigures(row.widthLowKhz), twoFigures(row.widthHighKhz!)),
+    '',
+  ];
+}
+
 function tapCheckTable(
   record: CoilRecord,
   taps: readonly Tap[],
   widthMm: number,
   rowMm: number,
   measure: Measure,
-  advised: boolean,
+  { advised, probed }: { readonly advised: boolean; readonly probed: boolean },
 ): Block {
   const { measuring, shop } = record;
   const read = advised ? 12 : 14;
@@ -103,12 +129,19 @@ function tapCheckTable(
     [CHECKS.read, read, BLANK],
     [CHECKS.meterShows(short(shop.meterKhz, 3)), 22, CENTRE],
     [CHECKS.read, read, BLANK],
-    ...(pf === null
-      ? []
-      : ([
-          [CHECKS.resonance(short(pf, 3)), 20, CENTRE],
+    ...(probed
+      ? ([
+          [pf === null ? CHECKS.probedAlone : CHECKS.probed(short(pf, 3)), 20, CENTRE],
           [CHECKS.read, read, BLANK],
-        ] as const)),
+          [CHECKS.width, 13, CENTRE],
+          [CHECKS.read, read, BLANK],
+        ] as const)
+      : pf === null
+        ? []
+        : ([
+            [CHECKS.resonance(short(pf, 3)), 20, CENTRE],
+            [CHECKS.read, read, BLANK],
+          ] as const)),
     [CHECKS.good, advised ? 7 : 9, TICK],
     ...(advised ? sectionParts(record) : []),
   ]);
@@ -124,7 +157,11 @@ function tapCheckTable(
       '',
       meterCell(measuring.meter[tap - 1]!),
       '',
-      ...(found === undefined ? [] : [between(kiloHertz(found.lowKhz), kiloHertz(found.highKhz)), '']),
+      ...(probed
+        ? probedCells(record, tap, pf ?? 0)
+        : found === undefined
+          ? []
+          : [between(kiloHertz(found.lowKhz), kiloHertz(found.highKhz)), '']),
       '',
       ...(advised ? sectionCells(record, tap) : []),
     ];
@@ -136,6 +173,22 @@ function tapCheckTable(
 export const ohms = (value: number) => fixed(value, value < 0.1 ? 4 : value < 10 ? 3 : value < 100 ? 2 : 1);
 /** To a thousandth at least. */
 export const kiloHertz = (value: number) => fixed(value, value < 100 ? 2 : value < 1000 ? 1 : 0);
+
+/** How to measure; with generator and probe, where they are stated. */
+function measureWords(record: CoilRecord, probed: boolean): string {
+  const { instruments } = record.shop;
+  if (!probed || instruments === undefined) {
+    const elsewhere = isProbed(record) ? ` ${CHECKS.probedElsewhere}` : '';
+    return `${CHECKS.measureHow} ${CHECKS.resonanceHow}${elsewhere}`;
+  }
+  const { generatorOhm, couplingPf, probePf, probeOhm } = instruments;
+  const generator = CHECKS.generator(
+    resistanceText(generatorOhm),
+    couplingPf === null ? null : capacitanceText(couplingPf),
+  );
+  const probe = CHECKS.probe(capacitanceText(probePf), resistanceText(probeOhm));
+  return `${CHECKS.measureHow} ${CHECKS.probedHow(generator, probe)}`;
+}
 
 /** Which meter, where it can be trusted, and what to take where it cannot. */
 function meterWords(record: CoilRecord): string {

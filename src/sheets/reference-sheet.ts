@@ -5,6 +5,7 @@
  */
 import { AROUND } from '../../templates/wording/around-sheet.ts';
 import { wireAerialCautions } from '../../templates/wording/cautions.ts';
+import { INSTRUMENTS } from '../../templates/wording/instruments.ts';
 import { REFERENCE } from '../../templates/wording/reference-sheet.ts';
 import type { Measure } from '../drawing/boxes.ts';
 import type { ExplainedRecord } from '../explain/explain.ts';
@@ -16,6 +17,7 @@ import { type Body, Filling, GAP_MM } from './parted.ts';
 import * as set from './reference-around.ts';
 import { noOthers, others, why } from './reference-chosen.ts';
 import { explained } from './reference-explained.ts';
+import { type BenchRecord, instruments, instrumentWords } from './reference-instruments.ts';
 import * as ranges from './reference-ranges.ts';
 import { wiring } from './reference-wiring.ts';
 import { frameOf } from './sheet-frame.ts';
@@ -26,7 +28,7 @@ const CHART_SHARE = 0.62;
 const CURVES_MM = { least: 110, wanted: 150 } as const;
 
 /** A record of any verb; one of a plan also tells why it chose. */
-export type ReferenceRecord = ExplainedRecord & { readonly chosen?: CoilRecord['chosen'] | null };
+export type ReferenceRecord = ExplainedRecord & BenchRecord & { readonly chosen?: CoilRecord['chosen'] | null };
 
 /** A page of its own for what hangs on the coil, and more where it takes more. */
 function around(record: ReferenceRecord, pages: Filling, widthMm: number, measure: Measure): void {
@@ -60,6 +62,12 @@ function fill(record: ReferenceRecord, widthMm: number, heightMm: number, measur
     pages.put(stack(ranges.kindNotes(record, widthMm, measure), 0.8), REFERENCE.kinds);
   }
   around(record, pages, widthMm, measure);
+  const bench = instruments(record, widthMm, measure);
+  const words = instrumentWords(record, widthMm, measure);
+  if (bench !== null && words !== null) {
+    pages.putParted(bench, INSTRUMENTS.part);
+    pages.put(words, INSTRUMENTS.part);
+  }
   const { chosen = null } = record;
   if (chosen !== null) {
     pages.put(why(chosen, widthMm, measure), REFERENCE.chosen);

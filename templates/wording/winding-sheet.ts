@@ -125,7 +125,18 @@ export const CHECKS = {
     'Measure resonance with a known capacitor there, or take an instrument with four wires and a higher frequency.',
   limitsHold: (inputs: string) => `Limits hold for 95 of 100 coils; widened most by ${inputs}.`,
   measureHow:
-    'S on the earthy terminal, turns beyond the tap open, a diameter clear all round; leads zeroed. Four wires below 1 Ω. Resonance: couple loosely, no probe on the coil.',
+    'S on the earthy terminal, turns beyond the tap open, a diameter clear all round; leads zeroed. Four wires below 1 Ω.',
+  resonanceHow: 'Resonance: couple loosely, no probe on the coil.',
+  probed: (pf: string) => `kHz, ${pf} pF + probe`,
+  probedElsewhere: 'With generator and probe: in the reference sheet.',
+  probedAlone: 'kHz, probe alone',
+  width: 'width kHz',
+  generator: (ohm: string, pf: string | null) =>
+    pf === null ? `a loose loop from the generator (${ohm})` : `the generator (${ohm}) through ${pf}`,
+  probe: (pf: string, ohm: string) => `probe (${pf}, ${ohm})`,
+  /** Common practice. */
+  probedHow: (generator: string, probe: string) =>
+    `Resonance: ${generator} and the ${probe} on the tap, whatever they do to it counted in; width: between the two frequencies with 0.707 of the most. Much wider: couple more loosely, look at capacitor and joints, for damp and metal; twice as wide: for a shorted turn.`,
   dominant: (input: string, first: number, last: number) =>
     first === last ? `${input} (tap ${first})` : `${input} (taps ${first} to ${last})`,
   between: (low: string, high: string) => `${low} – ${high}`,
@@ -207,6 +218,9 @@ export const LINE = {
   formulaUnits: ['µH', 'pF'],
   how: 'Whole coil, S earthed; y is (1000/f)². Draw the readings in: sound ones lie on a straight line. Its slope gives L; it meets the axis C₀ left of 0, the coil’s own capacitance and clips.',
   expect: (uh: string, pf: string) => `Expected: L ${uh} µH, C₀ ${pf} pF; grey: the limits.`,
+  /** Of a graph that holds without them. */
+  probed: (pf: string) =>
+    `With generator and probe on the coil the line lies ${pf} pF further left: C₀ is so much more.`,
   known: (percent: string, uhPercent: string, pf: string) =>
     `Capacitors known to ${percent} % leave ± ${uhPercent} % of L and ± ${pf} pF of C₀ open.`,
   second: 'A second known capacitor is needed, two to four times the first.',

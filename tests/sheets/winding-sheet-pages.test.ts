@@ -2,6 +2,7 @@
 import { expect, test } from 'vitest';
 import { readJob } from '../../src/job/read.ts';
 import { recordOf } from '../../src/plan.ts';
+import { tapChecks } from '../../src/sheets/check-blocks.ts';
 import { Paper } from '../../src/sheets/page.ts';
 import { layOutWindingSheet, sheetFrame } from '../../src/sheets/winding-sheet.ts';
 import { jobText, type Parts, RANGE, TUBE } from '../helpers/jobs.ts';
@@ -49,4 +50,45 @@ test('two pages for many taps on both papers; three only where both units tell o
     }
   console.log(`winding sheet: ${sheets} sheets of many taps`);
   expect(sheets).toBe(12);
+});
+
+test('what generator and probe show stands in the table of taps where they are stated and two columns more fit', () => {
+  let probed = 0;
+  let sheets = 0;
+  for (const [taps, units] of [
+    [5, 'metric'],
+    [12, 'metric'],
+    [12, 'both'],
+  ] as const) {
+    const parts = {
+      ...RANGE,
+      want: { ...RANGE.want, taps },
+      units,
+      shop: { generator: '600 ohm' },
+    } as unknown as Parts;
+    const record = recordOf(readJob(jobText(parts), 'test'), '1.2.3');
+    const pages = layOutWindingSheet(record, measure);
+    expect(layoutFaults(pages, sheetFrame, measure), `${taps} ${units}`).toEqual([]);
+    expect(pages.length, `${taps} ${units}`).toBe(2);
+    const all = pages.flatMap((page) => layoutBoxes([page], measure).map(({ text }) => text)).join(' ');
+    const row = record.measuring.instruments!.rows[0]!;
+    const limits = `${Math.round(row.lowKhz!)}–${Math.round(row.highKhz!)}`;
+    const there = all.includes(limits);
+    if (there) probed++;
+    expect(all.includes('(600 Ω) through 1 pF'), `${taps} ${units}`).toBe(there);
+    expect(all.includes('in the reference sheet'), `${taps} ${units}`).toBe(!there);
+    sheets++;
+  }
+  console.log(`winding sheets with instruments: ${sheets}, ${probed} with their columns`);
+  expect(probed).toBeGreaterThan(1);
+  const record = recordOf(
+    readJob(jobText({ ...RANGE, shop: { generator: '600 ohm' } } as unknown as Parts), 'test'),
+    '1',
+  );
+  const narrow = (mm: number) =>
+    tapChecks(record, mm, 5, measure)
+      .flatMap(({ shapes }) => shapes)
+      .flatMap((shape) => ('text' in shape ? [shape.text] : []))
+      .join(' ');
+  expect([narrow(180), narrow(110)].map((all) => all.includes('in the reference sheet'))).toEqual([false, true]);
 });
