@@ -13,6 +13,7 @@ import type { Job } from './job/job.ts';
 import { type Kernel, type PicturedPart, startKernel } from './kernel/client.ts';
 import { bedFiles, partFiles } from './kernel/files.ts';
 import { netlistFile } from './netlist/file.ts';
+import { setNetlistFiles } from './netlist/set.ts';
 import { listed, type Output, type OutputFile } from './record/listing.ts';
 import { makeRecord, printedOf, type RecordExtra } from './record/make.ts';
 import type { CoilRecord } from './record/schema.ts';
@@ -130,6 +131,7 @@ export async function produce(
       },
       ...(await rangePlateFile(record)),
       netlistFile(record),
+      ...setNetlistFiles(record),
       ...partsSheet,
       ...partFiles(record, made),
       ...(await beds),

@@ -49,18 +49,11 @@ export class NodeNames {
   }
 }
 
-/** Ohm a turn of the turns in use and of the dead ones. */
-export interface TurnResistance {
-  readonly used: number;
-  readonly dead: number;
-}
-
-/** Inductances (shrunk by the parameter), couplings between all of them, resistance in series. */
+/** Inductances (shrunk by the parameter), couplings between all of them, resistance in series: `ohm` tells that of the turns from..to. */
 export function windingCards(
   winding: CoupledWinding,
   names: NodeNames,
-  usedTurns: number,
-  ohm: TurnResistance,
+  ohm: (from: number, to: number) => string,
 ): string[] {
   const { nodes, fromStart } = winding;
   const size = nodes.length;
@@ -68,10 +61,8 @@ export function windingCards(
   const mutual = (s: number, t: number) => at(s, t) - at(s - 1, t) - at(s, t - 1) + at(s - 1, t - 1);
   const cards: string[] = [];
   for (let s = 1; s < size; s++) {
-    const turns = nodes[s]! - nodes[s - 1]!;
-    const each = nodes[s]! <= usedTurns + 1e-9 ? ohm.used : ohm.dead;
     cards.push(`L${s} ${names.beyond(s - 1)} x${s} {shrink*${exact(mutual(s, s))}}`);
-    cards.push(`R${s} x${s} ${names.before(s)} ${exact(turns * each)}`);
+    cards.push(`R${s} x${s} ${names.before(s)} ${ohm(nodes[s - 1]!, nodes[s]!)}`);
   }
   for (let s = 1; s < size; s++) {
     for (let t = s + 1; t < size; t++) {

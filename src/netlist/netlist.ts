@@ -73,6 +73,7 @@ export function netlistOf(record: FiguresRecord, options: NetlistOptions = {}): 
   const names = new NodeNames(winding, coil, rest);
   const { ccap, cstray, caerial } = tuningOf(record, tap);
   const { fromKhz, toKhz } = sweepOf(tap);
+  const ohm = coil.turnOhm(coil.taps[tap.tap - 1]!, tap.working.frequencyKhz, rest);
   const lines = [
     `* ${plain(record.job)} - tapped coil, record ${plain(record.hash, 16)}`,
     ...headNotes(record, names.hot, position),
@@ -101,7 +102,7 @@ export function netlistOf(record: FiguresRecord, options: NetlistOptions = {}): 
     ...capacitanceCards(coil, names),
     '',
     '* ---- the winding: inductance and resistance of each stretch, couplings between all of them',
-    ...windingCards(winding, names, tap.turn, coil.turnOhm(coil.taps[tap.tap - 1]!, tap.working.frequencyKhz, rest)),
+    ...windingCards(winding, names, (from, to) => exact((to - from) * (to <= tap.turn + 1e-9 ? ohm.used : ohm.dead))),
     '',
     `.ac lin 2001 ${exact(fromKhz * 1e3)} ${exact(toKhz * 1e3)}`,
     `.save v(${names.hot})`,

@@ -12,6 +12,7 @@ import type { Job } from '../job/job.ts';
 import { quarterWave } from '../physics/aerial.ts';
 import { frequencyText, tidy } from '../quantity/format.ts';
 import { aerialEntry, detectorEntry } from './around-aerial.ts';
+import { loadOf, NO_AERIAL } from './around-arrangement.ts';
 import type {
   AerialAt,
   AerialEntry,
@@ -37,10 +38,6 @@ export interface AroundInput {
 
 /** Frequencies of the table, by how many positions there are: every one costs a network a position. */
 const channelCount = (taps: number): number => (taps <= 8 ? 7 : taps <= 16 ? 5 : 3);
-/** Stands for no aerial: next to nothing, at the hot end. pF. */
-const LOOSE_PF = 0.01;
-/** Stands for no detector, ohm. */
-const NO_LOAD_OHM = 1e6;
 /** Of its quarter wave a wire is no longer a capacitor with an inductance. */
 const WIRE_SHARE = 0.6;
 const WEAK_Q = 10;
@@ -126,13 +123,8 @@ function tabled(
     capacitorLowPf: set.capacitorLowPf,
     capacitorHighPf: set.capacitorHighPf,
     strayPf: set.strayPf + set.aerialPf,
-    source: aerialImpedance(
-      aerial ?? { resistanceOhm: 0, inductanceUh: 0, capacitancePf: LOOSE_PF, shunt: null, seriesPf: null },
-    ),
-    load: {
-      conductance: 1 / (detector === null ? NO_LOAD_OHM : detector.resistanceKohm * 1e3),
-      capacitance: (detector?.capacitancePf ?? 0) * 1e-12,
-    },
+    source: aerialImpedance(aerial ?? NO_AERIAL),
+    load: loadOf(detector),
   };
   const channelsKhz = channelsOf(input);
   const { aerials, detectors } = contactsOf(input, aerial, detector);

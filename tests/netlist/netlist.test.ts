@@ -8,6 +8,7 @@ import { workingCoilOf } from '../../src/record/rebuild.ts';
 import type { FiguresRecord } from '../../src/record/survey-schema.ts';
 import { surveyRecordOf } from '../../src/survey.ts';
 import { jobOf } from '../helpers/jobs.ts';
+import { moved } from './moved.ts';
 import { parse, resonancesOf } from './solve.ts';
 
 const SWITCHES = ['open', 'shorted', 'shorted in sections', 'disconnected'] as const;
@@ -23,21 +24,6 @@ function record(rest: (typeof SWITCHES)[number], earthed: 'start' | 'finish', mo
   };
   const set = { capacitor: '15 pF to 380 pF', stray: '12 pF', aerial: '60 pF', lead: '3 pF', switch: rest };
   return surveyRecordOf(readCoilFile(JSON.stringify({ coil, set, at: '1 MHz', ...more }), 'coil.json'), '0');
-}
-
-/** The text with the block of another position active: asterisks moved as the notes in it say. */
-function moved(text: string, position: number): string {
-  let block = 0;
-  return text
-    .split('\n')
-    .map((line) => {
-      const [, begins] = /^\* position (\d+)/.exec(line) ?? [];
-      if (begins !== undefined) block = Number(begins);
-      else if (line.startsWith('* end of positions')) block = 0;
-      else if (block > 0) return (block === position ? '' : '*') + line.replace(/^\*/, '');
-      return line;
-    })
-    .join('\n');
 }
 
 /** Both are the same circuit; what differs is rounding of 15 digits through an inverse: 1e-6 leaves room for nothing else. */

@@ -6,10 +6,12 @@ export interface Parsed {
   readonly params: Record<string, number>;
   readonly L: { name: string; a: string; b: string; value: number }[];
   readonly K: { a: string; b: string; value: number }[];
-  readonly C: { node: string; value: number }[];
+  readonly C: { a: string; b: string; value: number }[];
   readonly R: { a: string; b: string; value: number }[];
   /** Sources of 0 V: what they join is one node. */
   readonly joined: [string, string][];
+  /** Sources of alternating voltage or current that are not 0, from a to b. */
+  readonly sources: { kind: 'V' | 'I'; a: string; b: string; value: number }[];
 }
 
 export function parse(text: string, override: Record<string, number> = {}): Parsed {
@@ -20,21 +22,24 @@ export function parse(text: string, override: Record<string, number> = {}): Pars
     if (name !== undefined) params[name] = override[name] ?? Number(value);
   }
   const number = (word: string) => (word.startsWith('{') ? Number(evaluate(word.slice(1, -1), params)) : Number(word));
-  const parsed: Parsed = { params, L: [], K: [], C: [], R: [], joined: [] };
+  const parsed: Parsed = { params, L: [], K: [], C: [], R: [], joined: [], sources: [] };
   for (const card of cards) {
     const [name = '', a = '', b = '', value = ''] = card.split(' ');
     if (/^L/.test(name)) parsed.L.push({ name, a, b, value: number(value) });
     if (/^K/.test(name)) parsed.K.push({ a, b, value: number(value) });
     if (/^R/.test(name)) parsed.R.push({ a, b, value: number(value) });
-    if (/^C/.test(name)) parsed.C.push({ node: a, value: number(value) });
-    if (/^V/.test(name)) parsed.joined.push([a, b]);
+    if (/^C/.test(name)) parsed.C.push({ a, b, value: number(value) });
+    const [, strength] = / AC (\S+)$/.exec(card) ?? [];
+    if (strength !== undefined)
+      parsed.sources.push({ kind: name.startsWith('V') ? 'V' : 'I', a, b, value: number(strength) });
+    else if (/^V/.test(name)) parsed.joined.push([a, b]);
     if (!/^[LKRCVI.]/.test(name)) throw new Error(`a card that nobody knows: ${card}`);
   }
   return parsed;
 }
 
-/** Resonances without losses, Hz, lowest first: eigenvalues of sqrt(C) K^-1 sqrt(C), K = D' L^-1 D, which are 1/omega^2. */
-export function resonancesOf(net: Parsed): number[] {
+/** Nodes that sources of 0 V make one: by the name that stands for all, earth where it is among them. */
+export function joinedOf(net: Parsed) {
   const parent = new Map<string, string>();
   const root = (node: string): string => (parent.has(node) ? root(parent.get(node)!) : node);
   const join = (a: string, b: string) => {
@@ -42,6 +47,12 @@ export function resonancesOf(net: Parsed): number[] {
     if (x !== y) parent.set(x === '0' ? y : x, x === '0' ? x : y);
   };
   for (const [a, b] of net.joined) join(a, b);
+  return { root, join };
+}
+
+/** Resonances without losses, Hz, lowest first: eigenvalues of sqrt(C) K^-1 sqrt(C), K = D' L^-1 D, which are 1/omega^2. */
+export function resonancesOf(net: Parsed): number[] {
+  const { root, join } = joinedOf(net);
   // A small resistance in series carries the same current as its inductance; across the set or to a floating part it is left out.
   for (const { a, b } of net.R) if (a.startsWith('x')) join(a, b);
   const count = net.L.length;
@@ -68,8 +79,9 @@ export function resonancesOf(net: Parsed): number[] {
     }
   }
   const capacitance = nodes.map(() => 0);
-  for (const { node, value } of net.C) {
-    const at = nodes.indexOf(root(node));
+  for (const { a, b, value } of net.C) {
+    if (b !== '0') throw new Error(`a capacitor between ${a} and ${b} in a circuit with capacitors to earth alone`);
+    const at = nodes.indexOf(root(a));
     if (at >= 0) capacitance[at]! += value;
   }
   const compliance = invert(floated(net, nodes, root, stiffness));
