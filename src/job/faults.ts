@@ -1,6 +1,7 @@
 /** From the issues of the schema to faults with file, line and key. */
 import type * as z from 'zod';
 import type { FaultParts } from '../fault.ts';
+import { cut, visible } from '../quantity/parse.ts';
 import { shown } from './field.ts';
 import { nearest } from './nearest.ts';
 import { jobSchema } from './schema.ts';
@@ -69,7 +70,7 @@ function unknownKey(path: Path, tree: Tree, file: string, shape: Keys): FaultPar
   const comma = /^\d/.test(key) ? 'write the decimal point as a point: a comma parts two keys' : null;
   return {
     code: 'unknown-key',
-    place: { file, line: tree.lineOf(path), key: keyText(path).slice(0, 80) },
+    place: { file, line: tree.lineOf(path), key: visible(cut(keyText(path), 80)) },
     got: 'a key that is not known',
     expected: `one of: ${known.join(', ')}`,
     todo: near === null ? (comma ?? 'remove the key, or put it where it belongs') : `did you mean ${near}?`,

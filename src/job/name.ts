@@ -1,6 +1,6 @@
 /** Name and date of a job. */
 import { createHash } from 'node:crypto';
-import type { Parsed } from '../quantity/parse.ts';
+import { cut, type Parsed } from '../quantity/parse.ts';
 import { shown } from './field.ts';
 
 const LONGEST_NAME = 80;
@@ -29,7 +29,7 @@ export function readName(raw: unknown): Parsed<string> {
 /** The name of the file without its ending, for what has no name of its own. */
 export function nameOfFile(file: string, fallback: string): string {
   const base = (file.split(/[\\/]/).at(-1) ?? '').replace(/\.(?:ya?ml|json|csv|tsv)$/i, '').trim();
-  const plain = base.replace(/[\p{Cc}\p{Cf}\p{Zl}\p{Zp}\p{Cs}]/gu, '').slice(0, 60);
+  const plain = cut(base.normalize('NFC').replace(/[\p{Cc}\p{Cf}\p{Zl}\p{Zp}\p{Cs}]/gu, ''), 60).trim();
   return plain === '' || plain === '-' ? fallback : plain;
 }
 

@@ -124,6 +124,15 @@ function bounded(quantity: Quantity, kind: KindName, allowed: Allowed, refuse: R
 
 /** The text as written, in quotes, cut when long, without characters that would disturb a terminal. */
 export function quote(text: string): string {
-  const plain = text.replace(/[\p{Cc}\p{Cf}\p{Zl}\p{Zp}]/gu, '?');
-  return plain.length > 60 ? `"${plain.slice(0, 57)}..."` : `"${plain}"`;
+  // Looked at from the front only: a cell may hold a whole file.
+  const plain = visible(cut(text, 120));
+  return plain.length > 60 ? `"${cut(plain, 57)}..."` : `"${plain}"`;
 }
+
+/** At most so many UTF-16 units from the front, no character cut in half. */
+export function cut(text: string, most: number): string {
+  return text.slice(0, most).replace(/[\ud800-\udbff]$/, '');
+}
+
+/** On one line, without characters that steer a terminal or are no text. */
+export const visible = (text: string): string => text.replace(/[\p{Cc}\p{Cf}\p{Cs}\p{Zl}\p{Zp}]/gu, '?');

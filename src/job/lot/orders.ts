@@ -1,7 +1,7 @@
 /** The table of jobs in CSV: `job` and `quantity`, and where wanted `serials` and `first-serial`, a row each. */
 import { type CsvRow, isBlank, readCsv, unguarded } from '../../csv/read.ts';
 import { Fault, type FaultParts } from '../../fault.ts';
-import type { Parsed } from '../../quantity/parse.ts';
+import { cut, type Parsed, visible } from '../../quantity/parse.ts';
 import { shown } from '../field.ts';
 import { nearest } from '../nearest.ts';
 import { readPath } from './path.ts';
@@ -89,7 +89,7 @@ function columnsOf({ line, cells }: CsvRow, file: string): ReadonlyMap<Column, n
       meantBy.add(meant);
       fault(
         'unknown-key',
-        key.slice(0, 80),
+        visible(cut(key, 80)),
         'a column that is not known',
         meant === null ? 'remove the column' : `did you mean ${meant}?`,
       );
