@@ -1,5 +1,6 @@
 /** What a printer can take at all, and for what it cannot, the nearest printer that would. */
 import { Fault, type FaultParts } from '../fault.ts';
+import type { Solid } from './solid.ts';
 
 export interface BedPart {
   readonly id: string;
@@ -31,6 +32,24 @@ export const umDown = (mm: number): number => Math.floor(mm * 1000 + NOISE_UM);
 export function requireFit(parts: readonly BedPart[], printer: BedSize): void {
   const faults = parts.flatMap((part) => fitFaults(part, printer));
   if (faults.length > 0) throw new Fault(4, faults);
+}
+
+/** As `requireFit`, for solids before they are listed: as large as they are in their files. */
+export function requireSolidsFit(
+  solids: readonly Solid[],
+  printer: BedSize & { readonly scale: readonly number[] },
+): void {
+  requireFit(
+    solids.map(({ part, quantity, expected: { minMm, maxMm } }) => {
+      const [widthMm, depthMm, heightMm] = maxMm.map((most, i) => (most - minMm[i]!) * printer.scale[i]!) as [
+        number,
+        number,
+        number,
+      ];
+      return { id: part, quantity, widthMm, depthMm, heightMm };
+    }),
+    printer,
+  );
 }
 
 /** As `requireFit`, as data: empty when the printer takes the part. */

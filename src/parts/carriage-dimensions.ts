@@ -28,8 +28,9 @@ const LONG_TICK_MM = 3.4;
 /** From a tick to its number, and round both. */
 export const GAP_MM = 0.8;
 const FIGURE_MM = { across: 3, along: 2.6 } as const;
-/** Half the angle of each of the four lobes. */
-const LOBE_DEG = 15;
+/** Half the width of each of the four arms, and the most of it that the middle is wide. */
+const HALF_ARM_MM = 5;
+const ARM_SHARE = 0.6;
 /** Walls round the rail, in printed lines. */
 const WALL_LINES = 3;
 /** Beyond the last mark. */
@@ -43,12 +44,12 @@ export interface CarriageMark {
   readonly text: string | null;
 }
 
-/** A disc with four lobes that fits into a bore, cut out between them for wires. All in mm. */
+/** A disc with four arms that fits into a bore, open between them for wires. All in mm. */
 export interface Disc {
   readonly part: 'carriage-plug' | 'carriage-hub';
   readonly quantity: number;
-  /** Radius of the lobes: that of the bore less half the clearance. */
-  readonly lobeR: number;
+  /** Radius of the arms: that of the bore less half the clearance. */
+  readonly armR: number;
   /** Radius between them. */
   readonly coreR: number;
   readonly depthMm: number;
@@ -142,8 +143,8 @@ export function carriageDimensions(record: PartsRecord): CarriageDimensions {
   };
   return {
     rail: { ...rail, lengthMm: endMm + tailMm },
-    plug: { part: 'carriage-plug', quantity: 1, lobeR: plugR, depthMm: DISC_MM, ...slot },
-    hub: { part: 'carriage-hub', quantity: two ? 2 : 1, lobeR: hubR, depthMm, ...slot },
+    plug: { part: 'carriage-plug', quantity: 1, armR: plugR, depthMm: DISC_MM, ...slot },
+    hub: { part: 'carriage-hub', quantity: two ? 2 : 1, armR: hubR, depthMm, ...slot },
     out: lies.out,
     railZeroMm: lies.zeroMm,
     tightMm,
@@ -239,22 +240,23 @@ function withNumbers(
   }));
 }
 
-/** Outline of a disc with its lobes shrunk by `insetMm`: counterclockwise, seen whole from its middle. */
-export function discOutline({ lobeR, coreR }: Disc, insetMm = 0): Point2[] {
-  const r = Math.max(lobeR - insetMm, coreR);
+/** Outline of a disc with its arms shortened by `insetMm`: counterclockwise, seen whole from its middle. */
+export function discOutline({ armR, coreR }: Disc, insetMm = 0): Point2[] {
+  const half = Math.min(HALF_ARM_MM, ARM_SHARE * coreR);
   const points: Point2[] = [];
-  const arc = (radius: number, fromDeg: number, toDeg: number, chords: number) => {
+  const arc = (radius: number, from: number, to: number, chords: number) => {
     for (let i = 0; i <= chords; i++) {
-      const a = ((fromDeg + ((toDeg - fromDeg) * i) / chords) * Math.PI) / 180;
+      const a = from + ((to - from) * i) / chords;
       points.push([radius * Math.cos(a), radius * Math.sin(a)]);
     }
   };
-  const rad = Math.PI / 180;
-  const onLobe = chordsFor(lobeR, 2 * LOBE_DEG * rad, 4);
-  const between = chordsFor(coreR, (90 - 2 * LOBE_DEG) * rad, 6);
-  for (const middle of [0, 90, 180, 270]) {
-    arc(r, middle - LOBE_DEG, middle + LOBE_DEG, onLobe);
-    arc(coreR, middle + LOBE_DEG, middle + 90 - LOBE_DEG, between);
+  const [onArm, onCore] = [Math.asin(half / armR), Math.asin(half / coreR)];
+  const quarter = Math.PI / 2;
+  const [armChords, coreChords] = [chordsFor(armR, 2 * onArm, 2), chordsFor(coreR, quarter - 2 * onCore, 2)];
+  for (const middle of [0, 1, 2, 3].map((k) => k * quarter)) {
+    // An even number, so that a point lies on the axis and the box is as wide as the bore asks.
+    arc(armR - insetMm, middle - onArm, middle + onArm, 2 * Math.ceil(armChords / 2));
+    arc(coreR, middle + onCore, middle + quarter - onCore, coreChords);
   }
   return points;
 }

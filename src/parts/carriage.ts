@@ -4,6 +4,7 @@
  */
 import { Fault } from '../fault.ts';
 import type { PartsRecord } from '../record/schema.ts';
+import { requireSolidsFit } from './bed-fit.ts';
 import { type CarriageDimensions, carriageDimensions, type Disc, discOutline, GAP_MM } from './carriage-dimensions.ts';
 import { textStrokes, textWidthMm } from './lettering.ts';
 import { secondOnItsOwn } from './second-dimensions.ts';
@@ -15,11 +16,13 @@ import { CUT_MM, cutMm3, plainer, STROKE_MM } from './words.ts';
 /** Ticks run out over the edge of the rail by this. */
 const OVER_MM = 0.5;
 
-/** @throws Fault (exit 4) as `carriageDimensions`, and `carriage-long` */
+/** @throws Fault (exit 4) as `carriageDimensions`, `carriage-long`, and as `requireFit` */
 export function carriageParts(record: PartsRecord): Solid[] {
   const d = carriageDimensions(record);
   requireBed(record, d);
-  return [railSolid(record, d), discSolid(record, d, d.plug), discSolid(record, d, d.hub)];
+  const solids = [railSolid(record, d), discSolid(record, d, d.plug), discSolid(record, d, d.hub)];
+  requireSolidsFit(solids, record.printer);
+  return solids;
 }
 
 /**
@@ -135,8 +138,8 @@ function discSolid(record: PartsRecord, d: CarriageDimensions, disc: Disc): Soli
       bodies: 1,
       genus: 1,
       genusIs: '1 hole for the rail',
-      minMm: [-disc.lobeR, -disc.lobeR, 0],
-      maxMm: [disc.lobeR, disc.lobeR, depthMm],
+      minMm: [-disc.armR, -disc.armR, 0],
+      maxMm: [disc.armR, disc.armR, depthMm],
       volumeMm3: area * (depthMm - c) + foot - bored,
     },
     use: plug ? plugUse(record, d) : hubUse(record, d),

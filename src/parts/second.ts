@@ -10,6 +10,7 @@
  */
 import { Fault } from '../fault.ts';
 import type { PartsRecord } from '../record/schema.ts';
+import { requireSolidsFit } from './bed-fit.ts';
 import { at, PROUD_MM, teardrop } from './holes.ts';
 import { type SecondDimensions, secondDimensions, secondOnItsOwn } from './second-dimensions.ts';
 import { areaOf } from './shapes.ts';
@@ -18,7 +19,7 @@ import { turned } from './volume.ts';
 
 const NAMES = { sleeve: 'Sleeve', 'inner-former': 'Inner former', 'beside-former': 'Former beside' } as const;
 
-/** @throws Fault (exit 4) `no-second-former`, `second-former-tall` */
+/** @throws Fault (exit 4) `no-second-former`, `second-former-tall`, and as `requireFit` */
 export function secondParts(record: PartsRecord): Solid[] {
   const d = secondDimensions(record);
   requireHeight(record, d);
@@ -27,7 +28,7 @@ export function secondParts(record: PartsRecord): Solid[] {
   const body = secondSkin(d);
   const holes = d.holes.map((hole) => cutter(d, hole));
   const widest = (d.outsideMm / 2 + d.rimMm) * Math.cos(Math.PI / d.segments);
-  return [
+  const solids: Solid[] = [
     {
       part: d.part,
       name: NAMES[d.part],
@@ -50,6 +51,8 @@ export function secondParts(record: PartsRecord): Solid[] {
         'print standing as it lies in the file, P1 below, no supports; seam opposite the holes; no carbon- or metal-filled filament',
     },
   ];
+  requireSolidsFit(solids, printer);
+  return solids;
 }
 
 /** The turned body: outside with its rims, bore. */

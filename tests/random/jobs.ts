@@ -87,9 +87,29 @@ export function randomJob(seed: number): string {
     spool: `${between(40, 160, 1)} x ${between(20, 100, 1)} mm`,
     'spool-bore': mm(between(9, 30, 0.5)),
   };
+  // Drawn last, so that what a seed gave before it still gives.
+  const secondWinding = () => {
+    if (!maybe(0.3)) return {};
+    const kind = pick(['same former', 'sleeve', 'sleeve', 'inner', 'inner', 'beside', 'beside']);
+    const tight = between(0.03, kind === 'beside' ? 0.1 : 0.3);
+    const slides = kind !== 'same former' && maybe(0.6);
+    const loose = Number((tight * between(0.2, 0.8)).toFixed(3));
+    const asked = maybe(0.3)
+      ? { turns: pick([1, 2, 4, 8, 15, 30]) }
+      : { coupling: slides && loose < tight ? `${loose} to ${tight}` : tight };
+    return {
+      set: { capacitor: '15 pF to 380 pF' },
+      second: {
+        kind,
+        ...asked,
+        wire: pick(['0.2 mm enamel', '0.4 mm enamel', '26 AWG double cotton']),
+        end: pick(['start', 'finish', 'finish']),
+      },
+    };
+  };
   const some = printed ? ['former', 'coupon'] : ['saddle', 'coupon'];
   const parts = maybe(0.35) ? 'all' : pick([undefined, undefined, some, ['arbor', 'stand'], ['comb', 'loop gauge']]);
-  return JSON.stringify({
+  const job = {
     job: `Random ${seed}`,
     want:
       taps === 1
@@ -106,5 +126,6 @@ export function randomJob(seed: number): string {
     printer,
     shop,
     ...(parts === undefined ? {} : { parts }),
-  });
+  };
+  return JSON.stringify({ ...job, ...secondWinding() });
 }

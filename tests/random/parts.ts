@@ -8,6 +8,7 @@ import { printedOf } from '../../src/record/make.ts';
 import { bedsOf, entriesOf } from '../../src/record/printed.ts';
 import { refusal } from '../../src/solve/refusal.ts';
 import { search } from '../../src/solve/search.ts';
+import { withSecond } from '../../src/solve/second.ts';
 import { randomJob } from './jobs.ts';
 
 export interface Outcome {
@@ -29,7 +30,7 @@ export async function partsOutcome(seed: number, full: boolean): Promise<Outcome
     const job = readJob(randomJob(seed), `random ${seed}`);
     const found = search(job);
     if (!('chosen' in found)) throw refusal(job, found);
-    const { record: planned } = printedOf(job, found);
+    const { record: planned } = printedOf(job, withSecond(job, found));
     const fine = full || planned.former.joints.length > 0;
     const segments = fine ? planned.former.segments : Math.min(COARSE, planned.former.segments);
     const record = { ...planned, former: { ...planned.former, segments } };
@@ -63,6 +64,7 @@ export async function partsOutcome(seed: number, full: boolean): Promise<Outcome
       windings[0]!.pitchKind,
       ...(former.joints.length > 0 ? [`${former.joints.length + 1} sections`] : []),
       ...(former.base === null ? [] : ['base']),
+      ...(record.around?.second == null ? [] : [`second: ${record.around.second.kind}`]),
       ...solids.map(({ kind }) => kind),
     ];
     if (solids.length === 0) return { ...none, result: 'refused', said: ['nothing wanted'] };

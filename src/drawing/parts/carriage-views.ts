@@ -50,13 +50,13 @@ function railViews(d: CarriageDimensions): View[] {
 }
 
 function discViews(disc: Disc): View[] {
-  const { lobeR, coreR, depthMm, slotWidthMm, slotDepthMm } = disc;
+  const { armR, coreR, depthMm, slotWidthMm, slotDepthMm } = disc;
   return [
     {
       title: 'plan',
       shapes: [outline(discOutline(disc)), box(-slotWidthMm / 2, -slotDepthMm / 2, slotWidthMm, slotDepthMm)],
       dimensions: [
-        across(-lobeR, lobeR, 0, 'above', said`dia ${size(2 * lobeR)}`),
+        across(-armR, armR, 0, 'above', said`dia ${size(2 * armR)}`),
         across(-slotWidthMm / 2, slotWidthMm / 2, -slotDepthMm / 2, 'below'),
         upright(-slotDepthMm / 2, slotDepthMm / 2, slotWidthMm / 2, 'right'),
         callout(-coreR * Math.SQRT1_2, -coreR * Math.SQRT1_2, 'left', said`dia ${size(2 * coreR)}`),
@@ -64,8 +64,8 @@ function discViews(disc: Disc): View[] {
     },
     {
       title: 'elevation',
-      shapes: [box(-lobeR, 0, 2 * lobeR, depthMm)],
-      dimensions: [upright(0, depthMm, lobeR, 'right')],
+      shapes: [box(-armR, 0, 2 * armR, depthMm)],
+      dimensions: [upright(0, depthMm, armR, 'right')],
     },
   ];
 }
