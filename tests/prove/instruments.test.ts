@@ -6,6 +6,8 @@ import { recordOf } from '../../src/plan.ts';
 import { judgeCoil } from '../../src/prove/judge.ts';
 import { Asking } from '../../src/prove/judge-at.ts';
 import { readReadings } from '../../src/prove/read.ts';
+import { proofSchema } from '../../src/prove/schema.ts';
+import { proofOf } from '../../src/prove.ts';
 import type { CoilRecord } from '../../src/record/schema.ts';
 import { jobOf, type Parts } from '../helpers/jobs.ts';
 
@@ -127,5 +129,34 @@ describe('readings with generator and probe', () => {
     expect(said(1.3 * width.high!)).not.toMatch(/shorted/);
     expect(said(2.5 * width.high!)).toMatch(/shorted turn/);
     expect(judge(RECORD, width, width.nominal!).advice).toEqual([]);
+  });
+
+  it('stand in the proof: a coil that passes by them alone, one with a resonance too wide', () => {
+    const rows = asked(RECORD).filter(({ capacitancePf }) => capacitancePf === 330);
+    const lines = ['1', '2'].flatMap((serial) =>
+      rows.map((question) => {
+        const wide = serial === '2' && question.key === 'width-3-330';
+        const value = Number((question.nominal! * (wide ? 6 : 1)).toPrecision(6));
+        return rowOf(RECORD, question, value, judge(RECORD, question, value), { serial });
+      }),
+    );
+    const { record } = proofOf(
+      {
+        name: 'r',
+        file: 'r.csv',
+        text: toCsv(lines),
+        sha256: '0'.repeat(64),
+        records: new Map([[RECORD.hash, RECORD]]),
+        lots: [],
+        searched: 'here',
+        dial: null,
+        notes: [],
+      },
+      '1.2.3',
+    );
+    expect(proofSchema.parse(record).count).toMatchObject({ figures: 12, readings: 12, leftOut: 0 });
+    const coils = record.kinds[0]!.coils;
+    expect(coils.map(({ state }) => state)).toEqual(['pass', 'fail']);
+    expect(coils[1]!.rescue!.causes.join(' ')).toContain('The resonance of the whole coil is more than twice as wide');
   });
 });
