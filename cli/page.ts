@@ -125,7 +125,11 @@ function facts<T>(page: Page, [first, ...rest]: readonly Figure<T>[], row: T): s
   const [title, cell] = first!;
   return [
     shown(page, `${title} ${cell(row)}`.trim()),
-    ...rest.flatMap(([head, of]) => (of(row) === '' ? [] : [shown(page, `${head}: ${of(row)}`)])),
+    ...rest.flatMap(([head, of], i) => {
+      // Beside a number it says enough; alone it does not.
+      const name = head === '±' ? `${head} of ${rest[i - 1]?.[0]}` : head;
+      return of(row) === '' ? [] : [shown(page, `${name}: ${of(row)}`)];
+    }),
   ];
 }
 

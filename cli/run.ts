@@ -45,7 +45,8 @@ function asked(own: Terminal, given: readonly string[]): Terminal {
   };
 }
 
-async function showTrouble(error: unknown, given: readonly string[], terminal: Terminal): Promise<number> {
+/** What went wrong, on standard error; answers with the exit code. */
+export async function showTrouble(error: unknown, given: readonly string[], terminal: Terminal): Promise<number> {
   const { asUsageFault } = await import('./usage.ts');
   const { showFault, showMistake } = await import('./show-fault.ts');
   const fault = asUsageFault(error, given);

@@ -34,6 +34,7 @@ const APART_CELLS = 2;
 
 /** The section of a page; none on a plain one, where the table of the taps says the same. */
 export function showElevation(record: CoilRecord | SurveyRecord, page: Page): string[] {
+  if (page.plain === true) return [];
   const from = record.verb === 'survey' ? 'the start' : 'the foot';
   const title = `The coil on its side, start to the left, mm from ${from}`;
   return drawing(page, title, elevation(record, lengthOf(record), page.columns - 2, page.ascii === true));
