@@ -44,6 +44,11 @@ export function readCsv(text: string, what: CsvWhat): CsvTable {
 /** Nothing but blanks in any cell: a row that a spreadsheet left behind. */
 export const isBlank = ({ cells }: CsvRow): boolean => cells.every((cell) => cell.trim() === '');
 
+/** Two hundred thousand rows of a dozen cells; each takes some dozens of bytes. */
+const MOST_CELLS = 4_000_000;
+const MOST_COLUMNS = 2000;
+const FEWER = 'check that this is the right file; save the table anew without what is empty';
+
 const SEPARATORS = [',', ';', '\t'] as const;
 
 function separatorOf(source: string): CsvTable['separator'] {
@@ -69,7 +74,11 @@ function rowsOf(source: string, separator: CsvTable['separator'], what: CsvWhat)
   let cells: string[] = [];
   let [line, begun, at] = [1, 1, 0];
   let written = false;
+  let all = 0;
   const end = () => {
+    // An empty row takes as much as one with a cell.
+    all += Math.max(1, cells.length);
+    if (all > MOST_CELLS) throw fault(begun, `more than ${MOST_CELLS} cells`, 'a table of at most so many', FEWER);
     if (written) rows.push({ line: begun, cells });
     line++;
     begun = line;
@@ -91,6 +100,8 @@ function rowsOf(source: string, separator: CsvTable['separator'], what: CsvWhat)
       cells.push(cell);
       if (cell.trim() !== '') written = true;
     }
+    if (cells.length > MOST_COLUMNS)
+      throw fault(begun, `more than ${MOST_COLUMNS} cells in one line`, 'a line of at most so many', FEWER);
     const stop = source[at];
     if (stop === separator) {
       at++;

@@ -10,7 +10,7 @@
  */
 import { csvNumber, isBlank, readCsv, unguarded } from '../csv/read.ts';
 import type { LotRecord } from '../lot/schema.ts';
-import { quote } from '../quantity/parse.ts';
+import { cut, quote } from '../quantity/parse.ts';
 import type { CoilRecord } from '../record/schema.ts';
 import { type Columns, columnsOf } from './read-columns.ts';
 import { noColumns, noRecords, nothingRead } from './read-faults.ts';
@@ -30,12 +30,20 @@ export interface ReadOptions {
 
 const NO_NOTE: Told = { code: '', got: '', expected: '', todo: '' };
 
+/** Longest title, figure or remark that is looked at. */
+const LONGEST_CELL = 500;
+/** Ends of lines, marks of direction and halves of characters: they would steer a terminal, and no font has them. */
+const STEERS = /[\p{Cc}\p{Zl}\p{Zp}\p{Cs}\u061c\u200e\u200f\u202a-\u202e\u2066-\u2069\ufeff\ufffe\uffff]/gu;
+
+/** What a cell says, on one line. */
+const textOf = (cell: string): string => cut(unguarded(cell), LONGEST_CELL).replace(STEERS, ' ').trim();
+
 /** A coil as it is gathered. */
 interface Gathered {
   readonly hash: string;
   readonly serial: string;
   readonly read: Read[];
-  readonly remarks: string[];
+  readonly remarks: Set<string>;
 }
 
 /**
@@ -55,7 +63,7 @@ export function readReadings(
   });
   const rows = table.rows.filter((row) => !isBlank(row));
   const filled = (index: number) => rows.filter(({ cells }) => (cells[index] ?? '').trim() !== '').length;
-  const columns = columnsOf(table.header.cells.map(unguarded), table.header.line, filled);
+  const columns = columnsOf(table.header.cells.map(textOf), table.header.line, filled);
   if (columns.figures.length === 0) throw noColumns(file, table.header.line, columns);
 
   const notes: FileNote[] = [...columns.notes];
@@ -68,7 +76,7 @@ export function readReadings(
   let leftOut = 0;
 
   for (const { line, cells: raw } of rows) {
-    const cells = raw.map((cell) => unguarded(cell).trim());
+    const cells = raw.map(textOf);
     const cell = (index: number | undefined) => (index === undefined ? '' : (cells[index] ?? ''));
     const { roles } = columns;
     const filledIn = columns.figures.filter(({ index }) => !isMissing(cell(index)));
@@ -91,7 +99,7 @@ export function readReadings(
         null,
         {
           code: 'too-many-cells',
-          got: `${cells.length} cells: ${quote(raw.join(table.separator))}`,
+          got: `${cells.length} cells: ${quote(cells.join(table.separator))}`,
           expected: `${columns.titles.length}, as in the header`,
           todo,
         },
@@ -123,7 +131,7 @@ export function readReadings(
       notes.push({ line, fate: 'kept', figures: 0, ...placed.note, column: titleOf('serial') });
     }
     const key = `${placed.hash} ${placed.serial}`;
-    const coil = coils.get(key) ?? { hash: placed.hash, serial: placed.serial, read: [], remarks: [] };
+    const coil = coils.get(key) ?? { hash: placed.hash, serial: placed.serial, read: [], remarks: new Set<string>() };
     coils.set(key, coil);
     const record = records.get(placed.hash)!;
     const row: Row = {
@@ -148,7 +156,7 @@ export function readReadings(
         if (read.note !== null) notes.push({ line, column: at, fate: 'kept', figures: 0, ...note });
       }
     }
-    if (remark !== '' && filledIn.length !== 1 && !coil.remarks.includes(remark)) coil.remarks.push(remark);
+    if (remark !== '' && filledIn.length !== 1) coil.remarks.add(remark);
   }
   if (lost.size > 0) throw noRecords(file, lost, options.searched);
 
@@ -164,7 +172,7 @@ export function readReadings(
       serial: coil.serial,
       readings: kept.flatMap(({ reading }) => (reading === null ? [] : [reading])),
       dial: kept.flatMap((one) => (one.dial === null ? [] : [one.dial])),
-      remarks: coil.remarks,
+      remarks: [...coil.remarks],
     };
     readings += made.readings.length;
     dial += made.dial.length;

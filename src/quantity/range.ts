@@ -3,13 +3,16 @@ import { KINDS, type KindName } from './kind.ts';
 import { normalise } from './normalise.ts';
 import { type Parsed, parseQuantity, quote, type Range } from './parse.ts';
 
+/** Longest text that is looked at: runs of blanks are gone through again from each of them. */
+const LONGEST = 200;
+
 const BETWEEN = / *(?:\bto\b|(?<=\d)to(?=\d)|\.\.\.?|\u2026|[\u2013\u2014]) */u;
 /** A number that waits for the unit behind the second one. */
 const UNITLESS = /^[+-]?[\d./ -]+(?:[eE][+-]?\d+)?$/;
 
 /** Whether the text is meant as a range. */
 export function isRange(written: string): boolean {
-  return BETWEEN.test(written);
+  return written.length <= LONGEST && BETWEEN.test(written);
 }
 
 /** A range, low end first; `60 to 90 mm` gives both ends the unit. Ends must differ. */
@@ -68,7 +71,7 @@ export function parseSize(written: string): Parsed<{ readonly x: number; readonl
 
 /** Splits once; the first part borrows the unit of the second when it has none. Null when there are not two parts. */
 function pair(written: string, between: RegExp): readonly [string, string] | null {
-  if (written.length > 200) return null;
+  if (written.length > LONGEST) return null;
   const parts = written.split(between);
   if (parts.length !== 2 || parts[0] === undefined || parts[1] === undefined) return null;
   const first = normalise(parts[0]);

@@ -2,7 +2,9 @@
  * The words in which the trade asks for wire: coverings with their synonyms, sizes, numbers. Everything is lower case with
  * single blanks, as {@link tidy} leaves it.
  */
+
 import { closest } from 'fastest-levenshtein';
+import { quote } from '../quantity/parse.ts';
 import type { Series } from './size.ts';
 import type { Covering } from './wire.ts';
 
@@ -81,7 +83,4 @@ export function nearestSeries(word: string): Series {
 }
 
 /** Long input is cut, so that a message stays readable. */
-export function quoted(text: string): string {
-  const shown = text.length > 60 ? `${text.slice(0, 57)}...` : text;
-  return `"${shown}"`;
-}
+export const quoted = quote;

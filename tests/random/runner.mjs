@@ -9,15 +9,27 @@ import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
 
 const here = dirname(fileURLToPath(import.meta.url));
-/** Seeds to a child, so that what one case leaves behind cannot help or harm the rest. */
+/** Seeds to a child where nothing else is said, so that what one case leaves behind cannot help or harm the rest. */
 const BATCH = 20;
 
 /**
  * Outcomes of the seeds from `first` on until `enough` of them says so, or `most` seeds were taken. `entry` is a file beside this
  * one that prints the outcome (one line of JSON with its `seed`) of each of its arguments; `order` makes an argument of a seed.
- * `prepare` puts beside the bundle what it reads. Throws when a child ends badly.
+ * `prepare` puts beside the bundle what it reads. `external`: packages that are not bundled. A child that is silent for `patienceMs` is ended. Throws when one ends badly.
  */
-export async function outcomesOf({ name, entry, first, most, fresh, enough, order = String, prepare = () => {} }) {
+export async function outcomesOf({
+  name,
+  entry,
+  first,
+  most,
+  fresh,
+  enough,
+  order = String,
+  prepare = () => {},
+  size = BATCH,
+  patienceMs = null,
+  external = [],
+}) {
   const cache = join(here, '..', '..', 'node_modules', '.cache', `random-${name}`);
   const log = join(cache, `${first}.jsonl`);
   mkdirSync(cache, { recursive: true });
@@ -30,7 +42,8 @@ export async function outcomesOf({ name, entry, first, most, fresh, enough, orde
     platform: 'node',
     format: 'esm',
     logLevel: 'error',
-    external: ['@jscad/stl-serializer'],
+    external: ['@jscad/stl-serializer', ...external],
+    loader: { '.yaml': 'text' },
     banner: { js: "import { createRequire as __c } from 'node:module'; const require = __c(import.meta.url);" },
   });
   prepare(cache);
@@ -53,7 +66,7 @@ export async function outcomesOf({ name, entry, first, most, fresh, enough, orde
   /** Seeds that are still to do, in order, as many as a batch takes; none when there is enough. */
   function batchOf() {
     const batch = [];
-    while (batch.length < BATCH && !enough(taken()) && next - first <= most) {
+    while (batch.length < size && !enough(taken()) && next - first <= most) {
       if (!outcomes.has(next)) batch.push(order(next));
       next++;
     }
@@ -66,7 +79,16 @@ export async function outcomesOf({ name, entry, first, most, fresh, enough, orde
       if (batch.length === 0) return;
       const child = spawn(process.execPath, [bundle, ...batch], { stdio: ['ignore', 'pipe', 'inherit'] });
       const ended = new Promise((resolve) => child.on('close', resolve));
+      let silent = null;
+      const wait = () => {
+        clearTimeout(silent);
+        if (patienceMs !== null) silent = setTimeout(() => child.kill('SIGKILL'), patienceMs);
+      };
+      wait();
+      let answered = 0;
       for await (const line of createInterface({ input: child.stdout })) {
+        wait();
+        answered++;
         const outcome = JSON.parse(line);
         outcomes.set(outcome.seed, outcome);
         appendFileSync(log, `${line}\n`);
@@ -74,7 +96,8 @@ export async function outcomesOf({ name, entry, first, most, fresh, enough, orde
         if (outcome.result === 'failed') console.log(`seed ${outcome.seed} failed: ${outcome.said.join('; ')}`);
       }
       const code = await ended;
-      if (code !== 0) throw new Error(`a batch ended with code ${code}: ${batch.join(' ')}`);
+      clearTimeout(silent);
+      if (code !== 0) throw new Error(`a batch ended with code ${code} at ${batch[answered]}: ${batch.join(' ')}`);
     }
   }
   await Promise.all(Array.from({ length: Math.min(2, availableParallelism()) }, work));
