@@ -111,12 +111,14 @@ async function replace(target: string, names: Names, files: readonly OutputFile[
   const ours = await judge(target);
   await writeAll(names.temporary, files);
   if (ours === null) {
+    await demandAll(names.temporary, files);
     await rename(names.temporary, target);
     await sync(dirname(target)).catch((error: unknown) => {
       throw outputFault(error, target, 'the new folder is there, and may not outlast a loss of power');
     });
   } else {
     await carryOver(target, names.temporary, ours, written);
+    await demandAll(names.temporary, files);
     await swap(target, names, ours, written);
   }
 }
@@ -203,17 +205,24 @@ async function kindOf(path: string): Promise<'nothing' | 'folder' | 'link' | 'ot
   }
 }
 
+/** Folders are made once: one that is taken away meanwhile must not come again with the rest of the files alone. */
 async function writeAll(folder: string, files: readonly OutputFile[]): Promise<void> {
-  await mkdir(folder);
   const folders = new Set([folder]);
+  for (const { path } of files)
+    for (let cut = path.indexOf('/'); cut > 0; cut = path.indexOf('/', cut + 1))
+      folders.add(join(folder, path.slice(0, cut)));
+  for (const one of folders) await mkdir(one);
   for (const file of files) {
     const full = join(folder, file.path);
-    await mkdir(dirname(full), { recursive: true });
-    for (let one = dirname(full); one.length > folder.length; one = dirname(one)) folders.add(one);
     if ('bytes' in file) await writeSynced(full, file.bytes);
     else await secondName(file.source, full);
   }
   for (const one of folders) await sync(one);
+}
+
+/** Somebody may clear away the folder above while it is written; what would come into place then is no whole. */
+async function demandAll(folder: string, files: readonly OutputFile[]): Promise<void> {
+  for (const { path } of files) await lstat(join(folder, path));
 }
 
 /** When the second rename fails the first is undone. */
