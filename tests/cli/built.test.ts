@@ -20,6 +20,7 @@ async function coilwright(folder: string, ...given: string[]): Promise<Ended> {
   try {
     const { stdout, stderr } = await promisify(execFile)(process.execPath, [PROGRAM, ...given], {
       cwd: folder,
+      env: { ...process.env, COLUMNS: '80' },
       maxBuffer: 1e8,
     });
     return { code: 0, stdout, stderr };
@@ -71,7 +72,7 @@ describe('the built program', () => {
   to do     choose another folder with --out; nothing was changed
 `,
     });
-    expect(readdirSync(folder).sort()).toEqual(['low-bench-receiver.yaml', 'mine']);
+    expect(readdirSync(folder).sort()).toEqual(['job.schema.json', 'low-bench-receiver.yaml', 'mine']);
     expect(readFileSync(join(folder, 'mine', 'thesis.txt'), 'utf8')).toBe('mine');
   });
 
