@@ -5,6 +5,7 @@
  */
 import { Fault, type FaultParts, type Place } from '../fault.ts';
 import type { Lot } from '../lot/types.ts';
+import { visible } from '../quantity/parse.ts';
 import { type FileKind, JOB_FILE, LOT_FILE, ORDERS_FILE } from './file-kind.ts';
 import type { Job } from './job.ts';
 import { numberedEntries } from './lot/entries.ts';
@@ -127,7 +128,7 @@ async function named<T>(place: Place, work: () => Promise<T>): Promise<T> {
     return await work();
   } catch (error) {
     if (!(error instanceof Fault)) throw error;
-    const where = `named in ${place.file === '-' ? 'the lot' : place.file}, line ${place.line}`;
+    const where = `named in ${place.file === '-' ? 'the lot' : visible(place.file ?? '')}, line ${place.line}`;
     throw new Fault(
       error.exit,
       error.faults.map((parts) => ({ ...parts, got: `${parts.got}; ${where}` })),
