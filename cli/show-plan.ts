@@ -12,6 +12,7 @@ import type { OutputFile } from '../src/record/listing.ts';
 import type { CoilRecord, Tap } from '../src/record/schema.ts';
 import { fileList } from './file-list.ts';
 import { type Figure, heading, hung, list, type Page, pageText, paragraph, table } from './page.ts';
+import { showAround } from './show-around.ts';
 import { showElevation } from './show-elevation.ts';
 import { showRanges } from './show-ranges.ts';
 import { settingsTable } from './show-settings.ts';
@@ -27,6 +28,7 @@ export function showPlan(record: CoilRecord, folder: string, files: readonly Mad
     tapTable(record, page),
     settingsTable(record, page),
     showRanges(record, page),
+    showAround(record, page),
     others(record, page),
     list(
       page,
