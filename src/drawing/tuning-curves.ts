@@ -83,7 +83,9 @@ export function drawTuningCurves(drawn: TuningCurves, widthMm: number, heightMm:
   shapes.push(label(middle, FOOT_MM - 8.6, CURVES.across, { align: 'centre', bold: true }));
   const alone = { low: Math.max(pfAxis.low - drawn.fixedPf, 1), high: pfAxis.high - drawn.fixedPf };
   const xAlone = (pf: number) => x(pf + drawn.fixedPf);
-  for (const pf of written(alone, xAlone, widthOf, 1.6)) {
+  // What would stand under the unit of the frequencies is left out.
+  const clear = (pf: number) => xAlone(pf) - widthOf(pf) / 2 >= LEFT_MM - 1;
+  for (const pf of written(alone, xAlone, widthOf, 1.6).filter(clear)) {
     shapes.push(line(xAlone(pf), top, xAlone(pf), top + 1, 'thin'));
     shapes.push(label(xAlone(pf), top + 2, `${pf}`, { align: 'centre' }));
   }

@@ -53,8 +53,9 @@ export function secondPlacesOf(second: SecondDesign): SecondPlaces {
 export function secondEntryOf(second: SecondDesign, taps: readonly Tap[]): SecondEntry {
   return {
     ...secondPlacesOf(second),
-    working: taps.map(({ tap, turn, working: { frequencyKhz } }) => {
-      const at = second.pair.at(turn, frequencyKhz);
+    working: taps.map(({ tap, working: { frequencyKhz } }) => {
+      // Not the turn as the record rounds it, which may lie beyond the end of the coil.
+      const at = second.pair.at(second.pair.main.taps[tap - 1]!, frequencyKhz);
       return {
         tap,
         frequencyKhz,

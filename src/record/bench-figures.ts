@@ -73,7 +73,8 @@ export function workedBetween(
   highKhz: number,
 ): (index: number, kHz: number) => WorkedOut {
   const ratio = highKhz / lowKhz;
-  const count = Math.min(MOST_SOLVED, 1 + Math.ceil(Math.log2(ratio) + 1e-9));
+  // One capacitor on a coil of one position: there is nothing between.
+  const count = ratio > 1 ? Math.min(MOST_SOLVED, 1 + Math.ceil(Math.log2(ratio) + 1e-9)) : 1;
   const solved = Array.from({ length: count }, (_, i) =>
     sectionsAt(coil, lowKhz * ratio ** (count > 1 ? i / (count - 1) : 0)).map(
       ({ inductanceUh, resistanceOhm, deadOhm }, tap): WorkedOut => ({

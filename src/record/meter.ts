@@ -163,7 +163,8 @@ function lineOf(coil: WorkingCoil, resonances: Measuring['resonances'], toleranc
  * reading of the rule.
  */
 export function lengthHalfMm(coil: WorkingCoil['coil'], spread: Spread, turns: number): number {
-  const before = coil.shape.gaps.filter(({ turn }) => turn < turns - 1e-9);
+  // The gap of a tap is no part of the length up to it; `turns` may be rounded to six decimals.
+  const before = coil.shape.gaps.filter(({ turn }) => turn < turns - 1e-5);
   const gaps = Math.hypot(...before.map(({ gapMm }) => spread.gap * gapMm));
   return Math.hypot(spread.pitch * coil.shape.pitchMm * turns, gaps, 0.05 * coil.shape.wire.overallMm);
 }

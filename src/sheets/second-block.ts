@@ -32,8 +32,12 @@ export function secondBlock(record: CoilRecord, widthMm: number, rowMm: number, 
     [WORDS.mutual, 13, figures(second.mutualUh)],
     [WORDS.coupling, 15, fixed(second.coupling, 3)],
   ];
-  const parts: Parts = cells.map(([head, share]) => [head, share, CENTRE]);
-  const row = table(columnsOf(widthMm, parts), [cells.map(([, , text]) => text)], measure, { rowMm, sizeMm: SMALL_MM });
+  // Lengths in two units side by side take two rows.
+  const rows = units === 'both' && body !== null ? [cells.slice(0, 6), cells.slice(6)] : [cells];
+  const tables = rows.map((row) => {
+    const parts: Parts = row.map(([head, share]) => [head, share, CENTRE]);
+    return table(columnsOf(widthMm, parts), [row.map(([, , text]) => text)], measure, { rowMm, sizeMm: SMALL_MM });
+  });
   const tie = Math.abs(holes[0]!.axialMm - second.startMm);
   const told = [
     body === null
@@ -48,7 +52,7 @@ export function secondBlock(record: CoilRecord, widthMm: number, rowMm: number, 
     ...(slide === null ? [] : [WORDS.heights]),
     WORDS.working(second.working.map(({ tap, coupling }) => `${tap}: ${short(coupling, 3)}`).join(', ')),
   ].join(' ');
-  const blocks = [heading(WORDS.heading(second.kind, end), widthMm, measure), row];
+  const blocks = [heading(WORDS.heading(second.kind, end), widthMm, measure), ...tables];
   if (slide !== null && wanted !== null) {
     const words = slide.travelMm < 0 ? WORDS.scale.down : WORDS.scale.up;
     const scale: Parts = [

@@ -3,6 +3,7 @@
  * loss there. They serve to prune; the best few are looked at by the field and the coupled circuit (`refine.ts`), and only
  * those figures are reported.
  */
+import { LITZ_TAKE_UP } from '../coil/coil.ts';
 import type { Job } from '../job/job.ts';
 import { DENSITY, dcResistance } from '../physics/copper.ts';
 import { deadEndCapacitance } from '../physics/coupled/two-nodes.ts';
@@ -136,9 +137,9 @@ export function copperMm2({ strandMm, strands }: Wire): number {
   return (Math.PI / 4) * strandMm ** 2 * strands;
 }
 
-/** Mass of the copper in so much wire, g. */
+/** Mass of the copper in so much wire, g; strands are longer than the bundle that they are twisted to. */
 export function copperG(wire: Wire, metres: number): number {
-  return metres * copperMm2(wire) * (DENSITY / 1e3);
+  return metres * (wire.strands > 1 ? LITZ_TAKE_UP : 1) * copperMm2(wire) * (DENSITY / 1e3);
 }
 
 /** 1/Q of a section. */
