@@ -2,6 +2,7 @@
 import { Fault } from '../../src/fault.ts';
 import { readJob } from '../../src/job/read.ts';
 import { makeRecord } from '../../src/record/make.ts';
+import type { CoilRecord } from '../../src/record/schema.ts';
 import { type Page, Paper } from '../../src/sheets/page.ts';
 import { layOutPartsSheet, partsFrame } from '../../src/sheets/parts-sheet.ts';
 import { layOutRangePlate, plateFrame } from '../../src/sheets/range-plate.ts';
@@ -52,6 +53,24 @@ export function sheetJob(seed: number): string {
   });
 }
 
+/** Every sheet of a record as drawings: what is wrong with their texts, and how many pages and texts there are. */
+export function sheetFaults(record: CoilRecord): { faults: string[]; pages: number; texts: number } {
+  const paper = new Paper({ title: 'x', subject: 'x' });
+  const sheets: [name: string, pages: readonly Page[], frame: (page: Page) => ReturnType<typeof sheetFrame>][] = [
+    ['winding sheet', layOutWindingSheet(record, paper), sheetFrame],
+    ['reference sheet', layOutReferenceSheet(record, paper), referenceFrame],
+    ['range plate', layOutRangePlate(record, paper), plateFrame],
+    ['parts sheet', layOutPartsSheet(record, new Map(), paper), partsFrame],
+  ];
+  if (record.former.body === 'full') sheets.push(['wrap template', layOutWrapTemplate(record, paper), templateFrame]);
+  const faults = sheets.flatMap(([name, pages, frame]) =>
+    layoutFaults(pages, frame, paper).map((fault) => `${name}: ${fault}`),
+  );
+  const pages = sheets.flatMap(([, list]) => list);
+  const texts = pages.reduce((sum, page) => sum + page.shapes.filter(({ shape }) => shape === 'text').length, 0);
+  return { faults, pages: pages.length, texts };
+}
+
 /** Never throws. */
 export function sheetsOutcome(seed: number): SheetsOutcome {
   const none = { seed, pages: 0, texts: 0 };
@@ -60,21 +79,9 @@ export function sheetsOutcome(seed: number): SheetsOutcome {
     const found = search(job);
     if (!('chosen' in found)) return { ...none, result: 'refused', said: ['nothing-fits'] };
     const record = makeRecord(job, found, '0.0.0');
-    const paper = new Paper({ title: 'x', subject: 'x' });
-    const sheets: [name: string, pages: readonly Page[], frame: (page: Page) => ReturnType<typeof sheetFrame>][] = [
-      ['winding sheet', layOutWindingSheet(record, paper), sheetFrame],
-      ['reference sheet', layOutReferenceSheet(record, paper), referenceFrame],
-      ['range plate', layOutRangePlate(record, paper), plateFrame],
-      ['parts sheet', layOutPartsSheet(record, new Map(), paper), partsFrame],
-    ];
-    if (record.former.body === 'full') sheets.push(['wrap template', layOutWrapTemplate(record, paper), templateFrame]);
-    const faults = sheets.flatMap(([name, pages, frame]) =>
-      layoutFaults(pages, frame, paper).map((fault) => `${name}: ${fault}`),
-    );
-    const pages = sheets.flatMap(([, list]) => list);
-    const texts = pages.reduce((sum, page) => sum + page.shapes.filter(({ shape }) => shape === 'text').length, 0);
+    const { faults, pages, texts } = sheetFaults(record);
     if (faults.length > 0) return { ...none, result: 'failed', said: faults.slice(0, 8) };
-    return { seed, result: 'made', said: [], pages: pages.length, texts };
+    return { seed, result: 'made', said: [], pages, texts };
   } catch (error) {
     if (error instanceof Fault && (error.exit === 3 || error.exit === 4))
       return { ...none, result: 'refused', said: error.faults.map(({ code }) => code) };
