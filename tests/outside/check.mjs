@@ -5,6 +5,7 @@ import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'n
 import { tmpdir } from 'node:os';
 import { basename, dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { outcomesOf, tally } from '../random/runner.mjs';
 import { checkNetlist } from './ngspice.mjs';
 import { measureRulers, pagesOf } from './rulers.mjs';
 
@@ -183,6 +184,58 @@ function netlist(path, record) {
   worstResonance = Math.max(worstResonance, checkNetlist(path, record, simulate, count));
 }
 
+/** The netlist of the set as it is written: its peak is a row of the table, as near as a circuit of that Q tells. */
+function setNetlist(path, record) {
+  if (!has('ngspice')) return;
+  const { stdout, stderr } = run('ngspice', ['-b', path]);
+  const peak = Number(/^resonance\s*=\s*([\d.e+-]+)/m.exec(stdout)?.[1]) / 1e3;
+  const rows = record.around.pairs.flatMap((pair) => pair.rows);
+  const good = rows.length === 0 ? peak > 0 : rows.some(({ kHz, q }) => Math.abs(peak / kHz - 1) < 1e-3 + 1 / q ** 2);
+  check(`ngspice -b ${path}: the peak is a row of the table`, good, `${peak} kHz\n${stdout}${stderr}`);
+}
+
+/** Sets around starters and around random coils, each at several positions, contacts and frequencies of its table. */
+async function arrangements(starters) {
+  if (!has('ngspice')) return;
+  const wanted = quick ? 4 : 50;
+  const made = (outcomes) => outcomes.filter(({ result }) => result !== 'refused').length;
+  for (const [of, name, options] of [
+    [
+      'starters',
+      'around-starters',
+      {
+        most: starters.length - 1,
+        enough: (outcomes) => outcomes.length >= starters.length,
+        order: (seed) => `${seed}:${join(jobs, starters[seed - 1])}`,
+        size: 1,
+      },
+    ],
+    ['random sets', 'around', { most: 20 * wanted, enough: (outcomes) => made(outcomes) >= wanted, size: 4 }],
+  ]) {
+    const { outcomes } = await outcomesOf({ name, entry: 'around-batch.ts', first: 1, fresh: true, ...options });
+    const counted = outcomes.filter(({ result }) => result !== 'refused');
+    for (const { seed, result, said } of counted)
+      check(`ngspice: ${of}, seed ${seed}, as the table`, result === 'made', said.join('\n'));
+    const least = of === 'starters' ? starters.length : wanted;
+    check(
+      `ngspice: ${least} ${of} were made`,
+      counted.length >= least,
+      JSON.stringify(outcomes.map(({ said }) => said)),
+    );
+    const looks = counted.flatMap((one) => one.looks);
+    const figures = (key, from) => from.map((look) => look[key]).filter((value) => value !== null);
+    const worst = (key, from = looks) => `${(100 * Math.max(0, ...figures(key, from))).toFixed(4)} %`;
+    const sharp = looks.filter(({ q }) => q > 50);
+    console.log(
+      `ngspice, ${of}: ${counted.length} (${outcomes.length - counted.length} refused), ${looks.length} looks; worst resonance ` +
+        `${worst('resonance')}, width ${worst('width')}, against the row ${worst('rowWidth')}; ${figures('peak', looks).length} peaks at the ` +
+        `detector ${worst('peak')}, ${figures('peakWidth', looks).length} widths ${worst('peakWidth')}, gain ${worst('gain')}; of ` +
+        `${sharp.length} with Q above 50 peak against the table ${worst('pulled', sharp)}, width ${worst('pulledWidth', sharp)}`,
+    );
+    console.log(`  ${tally(counted.map(({ kinds }) => kinds))}`);
+  }
+}
+
 /** A tube whose template takes several pages: each of them has its rulers. */
 function tiled() {
   const [job, out] = [join(work, 'tiled.json'), join(work, 'tiled')];
@@ -233,18 +286,22 @@ try {
     if (status !== 0) continue;
     const record = JSON.parse(readFileSync(join(out, 'plan.json'), 'utf8'));
     check(`plan ${name}: a hole pattern`, record.files.filter(({ kind }) => kind === 'svg').length === 1, out);
-    check(`plan ${name}: a netlist`, record.files.filter(({ kind }) => kind === 'netlist').length === 1, out);
+    const netlists = record.files.filter(({ kind }) => kind === 'netlist').map(({ path }) => path);
+    const wanted = record.around === undefined ? ['coil.cir'] : ['coil.cir', 'set.cir'];
+    check(`plan ${name}: ${wanted.join(' and ')}`, netlists.join() === wanted.join(), netlists.join());
     for (const file of record.files) {
       if (file.kind === 'pdf') pdf(join(out, file.path), record);
       if (file.path === 'wrap-template.pdf') trueScale(join(out, file.path), record);
       if (file.kind === 'stl') stl(join(out, file.path), record, !quick || name === starters[0]);
       if (file.kind === '3mf') threemf(join(out, file.path), record);
       if (file.kind === 'svg') svg(join(out, file.path));
-      if (file.kind === 'netlist') netlist(join(out, file.path), record);
+      if (file.path === 'coil.cir') netlist(join(out, file.path), record);
+      if (file.path === 'set.cir') setNetlist(join(out, file.path), record);
     }
   }
   check('there are starter jobs', starters.length > 0, jobs);
   tiled();
+  await arrangements(starters);
 } finally {
   rmSync(work, { recursive: true, force: true });
 }
