@@ -161,7 +161,9 @@ export function rangeOf(
       return crossing((kHz) => tuning(kHz, there) - end, here / slack, next * slack, way);
     }
   };
-  return { lowKhz: edge(-1), highKhz: edge(1) };
+  const [lowKhz, highKhz] = [edge(-1), edge(1)];
+  // Another resonance close on either side leaves nothing to tune.
+  return lowKhz < highKhz ? { lowKhz, highKhz } : null;
 }
 
 /** Where a function that falls with frequency is 0, between two frequencies in either order; 1e-9 of the frequency. */

@@ -67,8 +67,8 @@ export function measuringClaims(claims: Claims, record: CoilRecord, coil: PlainC
     const found = onBench(record, coil, circuit, tap.turn, pf);
     const { root, off } = crowdingOf(record, tap);
     const kHz = (found.hz * root) / 1e3;
-    // Far above where the crowding of the current was taken there is more of it.
-    const farOff = kHz > 1.5 * tap.working.frequencyKhz ? 0.008 : 0;
+    // Far above where the crowding of the current was taken there is more of it, most with few turns, whose wire has more of the field in it.
+    const farOff = kHz > 1.5 * tap.working.frequencyKhz ? 0.008 + 0.08 / tap.turn : 0;
     const within = (6e-4 + 2 * off + farOff + ofUh(w.corners)) * kHz;
     claims.near(`${p}frequencyKhz`, one.frequencyKhz, kHz, within, about);
     const own = selfPf(record, coil, tap.turn);
@@ -242,7 +242,11 @@ function instrumentClaims(claims: Claims, record: CoilRecord, coil: PlainCoil, c
       `${q}aloneKhz`,
       row.aloneKhz,
       (found.hz * root) / 1e3,
-      (1e-3 + 2 * off + (row.aloneKhz > 1.5 * tap.working.frequencyKhz ? 0.008 : 0) + ofUh(w.corners)) * row.aloneKhz,
+      (1e-3 +
+        2 * off +
+        (row.aloneKhz > 1.5 * tap.working.frequencyKhz ? 0.008 + 0.08 / tap.turn : 0) +
+        ofUh(w.corners)) *
+        row.aloneKhz,
       about,
     );
     if (row.aloneQ !== null && row.aloneWidthKhz !== null) {
