@@ -16,8 +16,25 @@ import {
 import { join } from 'node:path';
 import { coilwright, demand, leftIn, must, putMine, told, withoutMine } from './ground.mjs';
 
-const mount = (...words) => spawnSync('mount', words, { stdio: 'ignore' }).status === 0;
-const unmount = (path) => spawnSync('umount', [path], { stdio: 'ignore' });
+/** Disks that are mounted now; a run that is broken off takes them away too. */
+const mounted = new Set();
+
+function mount(...words) {
+  if (spawnSync('mount', words, { stdio: 'ignore' }).status !== 0) return false;
+  mounted.add(words.at(-1));
+  return true;
+}
+
+function unmount(path) {
+  spawnSync('umount', [path], { stdio: 'ignore' });
+  mounted.delete(path);
+}
+
+for (const signal of ['SIGINT', 'SIGTERM'])
+  process.once(signal, () => {
+    for (const path of mounted) unmount(path);
+    process.exit(130);
+  });
 
 /** Whether a disk in memory can be mounted here: only the root of a machine that lets it. */
 export function canMount(base) {
