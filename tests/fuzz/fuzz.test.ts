@@ -16,7 +16,7 @@ it('damaged files of every kind are read whole or refused with place, value and 
   console.log(`damaged files: ${[...seen].map(([what, n]) => `${what} ${n}`).join(', ')}`);
   expect(failed).toEqual([]);
   for (const kind of KINDS) expect(seen.get(kind), kind).toBeGreaterThan(9);
-  for (const result of ['refused', 'accepted', 'made']) expect(seen.get(result), result).toBeGreaterThan(0);
+  for (const result of ['refused', 'made']) expect(seen.get(result), result).toBeGreaterThan(0);
 });
 
 it('the checks see a refusal that lacks something, and data that are none', () => {

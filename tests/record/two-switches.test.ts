@@ -219,19 +219,20 @@ describe.each(RECORDS)('%s', (_name, record, parts) => {
 });
 
 it('is mirrored by the other hand', () => {
-  const [right, left] = ['right', 'left'].map((hand) => recordOf(jobOf(change(LOOPS, 'winding', { hand })), '1.2.3'));
+  const [, right, parts] = RECORDS[0]!;
+  const left = recordOf(jobOf(change(parts, 'winding', { hand: 'left' })), '1.2.3');
   const mirrored = (angle: number) => (360 - angle) % 360;
   const places = (record: CoilRecord) => [
     ...(record.windings[0]!.unitTaps ?? []).map(({ turn, positionMm, angleDeg }) => [turn, positionMm, angleDeg]),
     ...record.holes.map(({ turn, axialMm, angleDeg }) => [turn, axialMm, angleDeg]),
   ];
-  const [a, b] = [places(right!), places(left!)];
+  const [a, b] = [places(right), places(left)];
   expect(a.length).toBeGreaterThan(12);
   a.forEach(([turn, z, angle], i) => {
     expect(b[i]!.slice(0, 2)).toEqual([turn, z]);
     expect(Math.abs(b[i]![2]! - mirrored(angle!))).toBeLessThan(1e-3);
   });
-  expect(right!.settings!.map((row) => row.inductancesUh)).toEqual(left!.settings!.map((row) => row.inductancesUh));
+  expect(right.settings!.map((row) => row.inductancesUh)).toEqual(left.settings!.map((row) => row.inductancesUh));
 });
 
 describe('is refused', () => {
