@@ -35,19 +35,22 @@ beforeAll(() => {
 
 describe('the built program', () => {
   // The others are made by `npm run check:outside`, and one by every lot of the tests.
-  it.each(STARTERS.map(({ name }) => name).filter((name) => /cracked|coupled/.test(name)))('takes %s from start to finish', async (name) => {
-    const { folder } = testTerminal();
-    expect(await coilwright(folder, 'start', name)).toMatchObject({ code: 0, stderr: '' });
-    const planned = await coilwright(folder, 'plan', `${name}.yaml`);
-    expect(planned).toMatchObject({ code: 0, stderr: '' });
-    const widest = Math.max(...planned.stdout.split('\n').map((line) => [...line].length));
-    expect(widest).toBeLessThanOrEqual(80);
-    const out = join(folder, 'out', name);
-    const record = recordSchema.parse(JSON.parse(readFileSync(join(out, 'plan.json'), 'utf8')));
-    expect(readdirSync(out).sort()).toEqual(['plan.json', ...record.files.map(({ path }) => path)].sort());
-    expect(record.alternatives.length).toBeGreaterThanOrEqual(4);
-    expect(readdirSync(join(folder, 'out'))).toEqual([name]);
-  });
+  it.each(STARTERS.map(({ name }) => name).filter((name) => /cracked|coupled/.test(name)))(
+    'takes %s from start to finish',
+    async (name) => {
+      const { folder } = testTerminal();
+      expect(await coilwright(folder, 'start', name)).toMatchObject({ code: 0, stderr: '' });
+      const planned = await coilwright(folder, 'plan', `${name}.yaml`);
+      expect(planned).toMatchObject({ code: 0, stderr: '' });
+      const widest = Math.max(...planned.stdout.split('\n').map((line) => [...line].length));
+      expect(widest).toBeLessThanOrEqual(80);
+      const out = join(folder, 'out', name);
+      const record = recordSchema.parse(JSON.parse(readFileSync(join(out, 'plan.json'), 'utf8')));
+      expect(readdirSync(out).sort()).toEqual(['plan.json', ...record.files.map(({ path }) => path)].sort());
+      expect(record.alternatives.length).toBeGreaterThanOrEqual(4);
+      expect(readdirSync(join(folder, 'out'))).toEqual([name]);
+    },
+  );
 
   it('says what is wrong with the place to write to, and changes nothing', async () => {
     const { folder } = testTerminal();
