@@ -26,6 +26,7 @@ export const AROUND_NOTES = {
   noAerial:
     'The job has no aerial: output is told for one that is coupled as loosely as can be to the hot end, and what it would do to the coil is not counted.',
   noDetector: 'The job has no detector: one of 1 MΩ is taken, which draws next to nothing.',
+  ends: 'The figures take P1 of the second winding to the aerial and P2 to earth.',
   slides: 'The second winding is counted at its tightest place.',
   short: (tuned: number, all: number, from: string, to: string) =>
     `No pair of contacts tunes all ${all} frequencies from ${from} to ${to} with both on turns in use; the best tune ${tuned}. A smaller capacitor in series with the aerial (aerial.series), or a looser place for it, pulls the coil less.`,

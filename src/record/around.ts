@@ -225,6 +225,7 @@ function notesOf(
   const [from, to] = [channelsKhz[0]!, channelsKhz.at(-1)!];
   if (aerial === null) notes.push(AROUND_NOTES.noAerial);
   if (detector === null) notes.push(AROUND_NOTES.noDetector);
+  if (table.some((pair) => pair.aerial === 'second')) notes.push(AROUND_NOTES.ends);
   if (second?.entry.slide && table.some((pair) => pair.aerial === 'second')) notes.push(AROUND_NOTES.slides);
   const tuned = tunesMost(table);
   if (tuned === 0) notes.push(AROUND_NOTES.none);

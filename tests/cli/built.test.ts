@@ -35,7 +35,7 @@ beforeAll(() => {
 
 describe('the built program', () => {
   // The others are made by `npm run check:outside`, and one by every lot of the tests.
-  it.each(STARTERS.map(({ name }) => name).filter((name) => /cracked|coupled/.test(name)))(
+  it.each(STARTERS.map(({ name }) => name).filter((name) => /coupled/.test(name)))(
     'takes %s from start to finish',
     async (name) => {
       const { folder } = testTerminal();
