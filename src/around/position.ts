@@ -4,7 +4,7 @@
  * rest, and a second winding where there is one. What the set connects (tuning capacitor, aerial, detector, instruments) is not in
  * it: see `response.ts`. The same circuit as the netlist with `spread` at 1.
  */
-import { formerLossOhm } from '../coil/positions.ts';
+import { formerShuntOhm } from '../coil/positions.ts';
 import type { Rest, WorkingCoil } from '../coil/working-coil.ts';
 import { EARTH, type Network } from '../physics/circuit/network.ts';
 import { selfCapacitances } from '../physics/coupled/capacitance.ts';
@@ -50,7 +50,8 @@ export interface PositionOptions {
 export function positionNetwork(coil: WorkingCoil, turn: number, kHz: number, options: PositionOptions): Position {
   const { winding, on } = coil.circuit(turn, 0, options.rest);
   const circuit: TunedCircuit = { ...on, distribution: 'spread' };
-  const { index, body, hot } = connect(winding, circuit);
+  const connected = connect(winding, circuit);
+  const { index, body, hot } = connected;
   const groups = new NodeGroups(index.length);
   const nodeAt = (k: number, of = 0) => index.findIndex((node, i) => node === k && body[i] === of);
   const place = (at: number) => winding.nodes.findIndex((node) => Math.abs(node - at) < 1e-6);
@@ -67,7 +68,7 @@ export function positionNetwork(coil: WorkingCoil, turn: number, kHz: number, op
   });
   const capacitors: { from: number; to: number; capacitance: number }[] = [];
   const toEarth = (k: number, capacitance: number) => capacitors.push({ from: number(k), to: EARTH, capacitance });
-  selfCapacitances(winding, connect(winding, circuit), on.earthed, on.selfCapacitance, 'spread').forEach((f, k) => {
+  selfCapacitances(winding, connected, on.earthed, on.selfCapacitance, 'spread').forEach((f, k) => {
     toEarth(k, f);
   });
   for (const { turn: at, capacitance } of on.strays) toEarth(nodeIn(index, place(at)), capacitance);
@@ -81,14 +82,9 @@ export function positionNetwork(coil: WorkingCoil, turn: number, kHz: number, op
 
   const alone = coil.turnOhm(turn, kHz, options.rest);
   const copper = { ...alone, used: alone.used + (second?.added ?? 0) / turn };
-  const series = formerLossOhm(
-    coil.terminal(turn, kHz, 'open').inductanceUh,
-    coil.coil.selfPf(turn),
-    options.lossTangent,
-    kHz,
-  );
-  const reactance = 2e-3 * Math.PI * kHz * coil.terminal(turn, kHz, 'open').inductanceUh;
-  const conductances = series > 0 ? [{ from: number(hot), to: EARTH, conductance: series / reactance ** 2 }] : [];
+  const { inductanceUh } = coil.terminal(turn, kHz, 'open');
+  const shunt = formerShuntOhm(inductanceUh, coil.coil.selfPf(turn), options.lossTangent, kHz);
+  const conductances = Number.isFinite(shunt) ? [{ from: number(hot), to: EARTH, conductance: 1 / shunt }] : [];
   return {
     network: {
       nodes: groups.count,

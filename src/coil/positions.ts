@@ -52,6 +52,12 @@ export function formerLossOhm(inductanceUh: number, selfPf: number, lossTangent:
   return reactance ** 2 * omega * FORMER_SHARE * selfPf * 1e-12 * lossTangent;
 }
 
+/** The same loss as a resistance in parallel with the turns, ohm; infinite without any. */
+export function formerShuntOhm(inductanceUh: number, selfPf: number, lossTangent: number, kHz: number): number {
+  const reactance = 2e-3 * Math.PI * kHz * inductanceUh;
+  return reactance ** 2 / formerLossOhm(inductanceUh, selfPf, lossTangent, kHz);
+}
+
 export function atFrequency(
   coil: WorkingCoil,
   turn: number,

@@ -4,7 +4,7 @@
  */
 import { CONTROL } from '../../templates/wording/control-charts.ts';
 import type { Chart, ChartPoint } from '../prove/charts-schema.ts';
-import { fixed, signed } from '../sheets/text.ts';
+import { fixed, signed } from '../quantity/decimals.ts';
 import type { Measure } from './boxes.ts';
 import { beyondMark, type MarkSizes, offMark, outlierMark, runMark, valueMark } from './chart-marks.ts';
 import type { Drawing, Shape } from './drawing.ts';

@@ -1,5 +1,5 @@
 /** An upright axis of values in even steps: places, and the round values to write on it. */
-import { fixed } from '../sheets/text.ts';
+import { fixed } from '../quantity/decimals.ts';
 
 export interface ValueAxis {
   readonly low: number;

@@ -1,21 +1,15 @@
 /** The JSON Schema of a job file, for editors; shipped as `templates/schemas/job.schema.json`. */
-import * as z from 'zod';
 import { DEFAULTS } from './defaults.ts';
 import { type EditorNode, forEditors } from './editor.ts';
 import { jobSchema } from './schema.ts';
-
-interface Node {
-  properties?: Record<string, Node>;
-  required?: string[];
-  [key: string]: unknown;
-}
+import { type Node, nodeOf, relax } from './schema-node.ts';
 
 /** Draft 2020-12. A key with a default is not required: it is filled in before the job is read. */
-export const jobJsonSchema = (): Record<string, unknown> => forEditors(jobKeys());
+export const jobJsonSchema = (): Record<string, unknown> => forEditors(jobKeys() as EditorNode);
 
 /** The same before its descriptions are completed, for files that share keys with a job. */
-export function jobKeys(): EditorNode {
-  const schema = z.toJSONSchema(jobSchema, { io: 'input', unrepresentable: 'any' }) as Node;
+export function jobKeys(): Node {
+  const schema = nodeOf(jobSchema);
   const filled = new Set([
     ...Object.keys(DEFAULTS),
     ...['former', 'winding', 'printer', 'shop', 'shop.capacitors'],
@@ -23,18 +17,6 @@ export function jobKeys(): EditorNode {
     'second.end',
     ...['line', 'layer'].map((key) => `printer.${key}`),
   ]);
-  relax(schema, '', filled);
+  relax(schema, DEFAULTS, filled);
   return schema;
-}
-
-function relax(node: Node, prefix: string, filled: ReadonlySet<string>): void {
-  if (node.required !== undefined) {
-    node.required = node.required.filter((key) => !filled.has(`${prefix}${key}`));
-    if (node.required.length === 0) delete node.required;
-  }
-  for (const [key, inner] of Object.entries(node.properties ?? {})) {
-    const dotted = `${prefix}${key}`;
-    if (Object.hasOwn(DEFAULTS, dotted)) inner.default = DEFAULTS[dotted as keyof typeof DEFAULTS];
-    relax(inner, `${dotted}.`, filled);
-  }
 }

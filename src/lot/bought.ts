@@ -3,8 +3,8 @@
  * screws, shafts and strips by the words in which a part or a tap is described.
  */
 import { BOUGHT } from '../../templates/wording/lot-sheet.ts';
+import { lengthsText, lengthText, unitsOf, wireText } from '../quantity/written.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { lengthsText, lengthText, unitsOf, wireText } from '../sheets/units.ts';
 import { recordOfKind } from './kind-record.ts';
 import type { LotRecord } from './schema.ts';
 

@@ -3,7 +3,7 @@
  * The circuit is that of the record's ranges: nodes at taps and turns, every stretch coupled to every other,
  * self-capacitance along the turns or at the open end, leads, the set's capacitor.
  */
-import { FORMER_SHARE, formerLossOhm } from '../coil/positions.ts';
+import { FORMER_SHARE, formerShuntOhm } from '../coil/positions.ts';
 import type { Rest, WorkingCoil } from '../coil/working-coil.ts';
 import { capacitanceFor } from '../physics/tuning.ts';
 import { workingCoilOf } from '../record/rebuild.ts';
@@ -35,12 +35,11 @@ function tuningOf(record: FiguresRecord, tap: Tap): Record<'ccap' | 'cstray' | '
 function formerCard(record: FiguresRecord, coil: WorkingCoil, tap: Tap, hot: string): string[] {
   const { formerLossTangent } = record.surroundings;
   const { frequencyKhz, inductanceUh } = tap.working;
-  const series = formerLossOhm(inductanceUh, coil.coil.selfPf(tap.turn), formerLossTangent, frequencyKhz);
-  if (series === 0) return [];
-  const reactance = 2e-3 * Math.PI * frequencyKhz * inductanceUh;
+  const shunt = formerShuntOhm(inductanceUh, coil.coil.selfPf(tap.turn), formerLossTangent, frequencyKhz);
+  if (!Number.isFinite(shunt)) return [];
   return [
     `* loss of the former: ${FORMER_SHARE * 100} percent of the self-capacitance has its loss tangent`,
-    `Rformer ${hot} 0 ${exact(reactance ** 2 / series)}`,
+    `Rformer ${hot} 0 ${exact(shunt)}`,
   ];
 }
 

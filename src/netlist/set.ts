@@ -7,7 +7,7 @@ import { aerialElements } from '../around/aerial.ts';
 import { type Contact, type TunedTo, tunedTo } from '../around/response.ts';
 import { secondSide } from '../around/second-side.ts';
 import { type Arrangement, portsOf } from '../around/table.ts';
-import { formerLossOhm } from '../coil/positions.ts';
+import { formerShuntOhm } from '../coil/positions.ts';
 import { arrangementOf, NO_AERIAL, setOf } from '../record/around-arrangement.ts';
 import type { Around } from '../record/around-schema.ts';
 import type { OutputFile } from '../record/listing.ts';
@@ -89,8 +89,7 @@ function positionParams(set: Arrangement, turn: number, { kHz, ccapPf, tuned }: 
   const shrink = 1 / coil.crowding(turn, kHz);
   const { used, dead } = coil.turnOhm(turn, kHz, rest);
   const { inductanceUh } = coil.terminal(turn, kHz, 'open');
-  const former = formerLossOhm(inductanceUh, coil.coil.selfPf(turn), lossTangent, kHz);
-  const reactance = 2e-3 * Math.PI * kHz * inductanceUh;
+  const rformer = formerShuntOhm(inductanceUh, coil.coil.selfPf(turn), lossTangent, kHz);
   const params: [name: string, value: number][] = [
     ['ccap', ccapPf * 1e-12],
     ['shrink', shrink],
@@ -98,7 +97,7 @@ function positionParams(set: Arrangement, turn: number, { kHz, ccapPf, tuned }: 
       `ohm${k + 1}`,
       tap <= turn + 1e-9 ? used + (side?.added ?? 0) / turn : dead,
     ]),
-    ...(former > 0 ? [['rformer', reactance ** 2 / former] as [string, number]] : []),
+    ...(Number.isFinite(rformer) ? [['rformer', rformer] as [string, number]] : []),
   ];
   if (side !== null) {
     const { turns } = coil.coil;

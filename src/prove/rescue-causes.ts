@@ -1,7 +1,7 @@
 /** What the readings of a failing coil look like: a miscount, a tap in the wrong place, all alike, loose end turns, a bad joint. */
 import { RESCUE } from '../../templates/wording/proof.ts';
+import { fixed, signed } from '../quantity/decimals.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { fixed, signed } from '../sheets/text.ts';
 import { isOut } from './judge.ts';
 import type { Judged, ProofTap } from './schema.ts';
 

@@ -8,9 +8,9 @@
  * leaves out is of second order. tests/prove/rescue.test.ts does what is said to simulated coils and works them out anew.
  */
 import { RESCUE } from '../../templates/wording/proof.ts';
+import { fixed } from '../quantity/decimals.ts';
 import { decimals } from '../record/rounding.ts';
 import type { CoilRecord } from '../record/schema.ts';
-import { fixed } from '../sheets/text.ts';
 import { electricalOf, inductanceOff, isOut } from './judge.ts';
 import { causesOf, excessAtFinish, LOOSE_WIRES, type Seen } from './rescue-causes.ts';
 import { END_TURNS, type EndMove, finishMove, startMove, type Trim, Turned, trimsOf } from './rescue-effects.ts';

@@ -4,7 +4,7 @@
  * what probe and coupling add to the capacitor; what loss does to it, and the width, are those of the network with losses.
  */
 import { BenchCoil, type Seen } from '../around/bench.ts';
-import { formerLossOhm } from '../coil/positions.ts';
+import { formerShuntOhm } from '../coil/positions.ts';
 import type { WorkingCoil } from '../coil/working-coil.ts';
 import type { BenchInstruments } from '../job/job.ts';
 import { type Bench, CLIP_PF, resonanceAt, SELF_SPREAD, type WorkedOut, workedBetween } from './bench-figures.ts';
@@ -51,14 +51,12 @@ function benchCoil(
 ): BenchCoil {
   const turn = coil.taps[index]!;
   const inductanceUh = coil.coil.inductanceUh(turn) / crowding;
-  const reactance = 2e-3 * Math.PI * kHz * inductanceUh;
-  const series = formerLossOhm(inductanceUh, coil.coil.selfPf(turn), lossTangent, kHz);
   return new BenchCoil(coil.circuit(turn, 0, 'open').winding, {
     turn,
     inductanceUh,
     usedOhm,
     deadOhm,
-    formerSiemens: series / reactance ** 2,
+    formerSiemens: 1 / formerShuntOhm(inductanceUh, coil.coil.selfPf(turn), lossTangent, kHz),
     selfPf: coil.coil.selfPf(coil.coil.turns),
   });
 }

@@ -1,8 +1,9 @@
 /** Files to be damaged: every starter, tables of jobs, readings of coils, and files generated from the schemas. */
+
 import * as fc from 'fast-check';
 import { stringify } from 'yaml';
 import { questionsOf } from '../../src/bench/questions.ts';
-import { rowOf, toCsv } from '../../src/bench/readings-csv.ts';
+import { COLUMNS, rowOf, toCsv } from '../../src/bench/readings-csv.ts';
 import { coilJsonSchema } from '../../src/job/coil/json-schema.ts';
 import { jobJsonSchema } from '../../src/job/jsonSchema.ts';
 import { lotJsonSchema } from '../../src/job/lot/json-schema.ts';
@@ -151,19 +152,7 @@ function arbitraryOf(kind: Kind): fc.Arbitrary<string> {
       ? tables(
           kind === 'orders'
             ? ['job', 'quantity', 'serials', 'first-serial']
-            : [
-                'record',
-                'serial',
-                'tap',
-                'quantity',
-                'condition',
-                'value',
-                'unit',
-                'low',
-                'high',
-                'remark',
-                'tap 1 (uH)',
-              ],
+            : [...COLUMNS.filter((column) => column !== 'verdict'), 'tap 1 (uH)'],
         )
       : fc
           .tuple(schemaValue(schema() as Node), fc.boolean())
