@@ -23,14 +23,12 @@ export interface ProveOptions {
   readonly json: boolean;
 }
 
-/** Stops that most capacitors turn between. */
-const USUAL_SPAN_DEG = 180;
-
 async function dialFrom(text: string): Promise<DialWish> {
   const { parseQuantity } = await import('../src/quantity/parse.ts');
+  const { USUAL_DIAL } = await import('../src/prove/dial.ts');
   const [size = '', turn] = text.split(/[,;]/).map((part) => part.trim());
   const diameter = parseQuantity(size, 'length');
-  const span = turn === undefined ? { ok: true as const, value: USUAL_SPAN_DEG } : parseQuantity(turn, 'angle');
+  const span = turn === undefined ? { ok: true as const, value: USUAL_DIAL.spanDeg } : parseQuantity(turn, 'angle');
   for (const read of [diameter, span])
     if (!read.ok) {
       const { got, expected, todo } = read;

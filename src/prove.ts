@@ -15,7 +15,7 @@ import { slug } from './job/name.ts';
 import type { LotRecord } from './lot/schema.ts';
 import { chartsOf } from './prove/charts.ts';
 import type { Dial } from './prove/charts-schema.ts';
-import { dialOf } from './prove/dial.ts';
+import { dialOf, USUAL_DIAL } from './prove/dial.ts';
 import { firstOffJob } from './prove/first-off.ts';
 import { believable, judgeKind, type KindProof, makeProof } from './prove/make.ts';
 import { readReadings } from './prove/read.ts';
@@ -55,8 +55,6 @@ export interface Proof {
   readonly dials: readonly { readonly of: CoilRecord; readonly dial: Dial }[];
   readonly firstOffs: readonly OutputFile[];
 }
-
-const USUAL_DIAL: DialWish = { diameterMm: 150, spanDeg: 180 };
 
 /** Dials that can be drawn; why one cannot is a note, unless it was asked for: then the Fault is thrown. */
 function dialsOf(kinds: readonly KindReadings[], wish: DialWish | null) {

@@ -139,6 +139,9 @@ function sorted(
   return { knots, faults };
 }
 
+/** What is taken where nothing is asked for: a dial that suits most sets, between the stops of most capacitors. */
+export const USUAL_DIAL = { diameterMm: 150, spanDeg: 180 } as const;
+
 export interface DialSpan {
   /** Degrees from stop to stop, {@link SPAN_DEG}. */
   readonly spanDeg: number;

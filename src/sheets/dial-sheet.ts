@@ -28,8 +28,6 @@ export interface DialOptions {
   readonly diameterMm: number;
 }
 
-export const DIAL_DEFAULTS = { diameterMm: 150, spanDeg: 180 } as const;
-
 /** Largest dial that goes beside the ruler, whole millimetres. */
 export const largestDialMm = (paper: CoilRecord['paper']): number =>
   Math.floor(PAPER_MM[paper][0] - 2 * MARGIN_MM.across - RULER_BREADTH_MM - 2);

@@ -1,12 +1,13 @@
 import { beforeAll, describe, expect, test } from 'vitest';
 import { positionNetwork } from '../../src/around/position.ts';
-import { type Connected, leftOf, Ports, resonanceOf, tunedTo } from '../../src/around/response.ts';
+import { type Connected, leftOf, Ports, tunedTo } from '../../src/around/response.ts';
 import { secondSide } from '../../src/around/second-side.ts';
 import { Coil } from '../../src/coil/coil.ts';
 import { CoilPair } from '../../src/coil/pair.ts';
 import { atFrequency } from '../../src/coil/positions.ts';
 import { WorkingCoil } from '../../src/coil/working-coil.ts';
 import { findWire } from '../../src/stock/find.ts';
+import { resonanceOf } from './resonance.ts';
 
 const LOSS = 0.01;
 const TAPS = [14, 22, 32.5, 48];
@@ -72,7 +73,7 @@ describe('a position as a network', () => {
     for (const turn of TAPS) {
       const ports = portsOf(turn, 900);
       const tuned = tunedTo(ports, nothing(1), 900)!;
-      const seen = resonanceOf(ports, nothing(1), tuned.tuningPf, 900)!;
+      const seen = resonanceOf(ports, tuned.tuningPf, 900)!;
       // A coil with resistance has no reactance 1/(2 Q^2) below the peak of its impedance.
       expect(Math.abs(seen.kHz / 900 - 1)).toBeLessThan(0.6 / tuned.q ** 2);
       expect(Math.abs(seen.widthKhz / tuned.bandwidthKhz - 1)).toBeLessThan(0.01);

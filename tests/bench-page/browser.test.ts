@@ -12,7 +12,7 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { stopsOf } from '../../src/bench/counter.ts';
 import { questionsOf } from '../../src/bench/judge.ts';
 import { benchPage } from '../../src/bench/page.ts';
-import { fromCsv } from '../../src/bench/readings-csv.ts';
+import { fromCsv } from '../helpers/readings.ts';
 import { sampleRecord } from '../helpers/sample.ts';
 import { notDriven, openBrowser } from './chromium.ts';
 

@@ -3,8 +3,9 @@ import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import type { ReadingRow } from '../../src/bench/api.ts';
 import { judge, questionsOf } from '../../src/bench/judge.ts';
-import { COLUMNS, fromCsv, rowOf, toCsv } from '../../src/bench/readings-csv.ts';
+import { COLUMNS, rowOf, toCsv } from '../../src/bench/readings-csv.ts';
 import { Fault } from '../../src/fault.ts';
+import { fromCsv } from '../helpers/readings.ts';
 import { sampleRecord } from '../helpers/sample.ts';
 
 /** Names as people, and people who mean harm, write them. */

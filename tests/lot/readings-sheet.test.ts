@@ -1,9 +1,10 @@
 /** The readings sheet: every question of every coil once, read back as the bench page's file is, and nothing a spreadsheet works out. */
 import { expect, test } from 'vitest';
 import { questionsOf } from '../../src/bench/questions.ts';
-import { COLUMNS, fromCsv } from '../../src/bench/readings-csv.ts';
+import { COLUMNS } from '../../src/bench/readings-csv.ts';
 import { readingsLines, readingsSheet } from '../../src/lot/readings-sheet.ts';
 import { lotOf } from '../helpers/lot.ts';
+import { fromCsv } from '../helpers/readings.ts';
 import { sampleRecord } from '../helpers/sample.ts';
 
 const HASH = 'a0'.repeat(32);

@@ -1,7 +1,7 @@
 /** Readings with generator and probe: asked where the job states them, written as CSV, taken back and judged. */
 import { describe, expect, it } from 'vitest';
 import { judge, questionsOf, SHORTED_FROM } from '../../src/bench/judge.ts';
-import { fromCsv, rowOf, toCsv } from '../../src/bench/readings-csv.ts';
+import { rowOf, toCsv } from '../../src/bench/readings-csv.ts';
 import { recordOf } from '../../src/plan.ts';
 import { judgeCoil } from '../../src/prove/judge.ts';
 import { Asking } from '../../src/prove/judge-at.ts';
@@ -10,6 +10,7 @@ import { proofSchema } from '../../src/prove/schema.ts';
 import { proofOf } from '../../src/prove.ts';
 import type { CoilRecord } from '../../src/record/schema.ts';
 import { jobOf, type Parts } from '../helpers/jobs.ts';
+import { fromCsv } from '../helpers/readings.ts';
 
 const PARTS: Parts = {
   want: { inductance: '2 uH to 60 uH', taps: 3 },

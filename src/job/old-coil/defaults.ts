@@ -14,9 +14,6 @@ export const OLD_DEFAULTS = {
   contradictions: 'refuse',
 } as const;
 
-/** What replaces a default of a job, because the old coil is at hand: said by the caller once it is inferred. */
-export const BY_THE_OLD = ['former.outside-diameter', 'wire'] as const;
-
 /** A list entry that is only a word or a number. */
 function tapOf(raw: unknown): unknown {
   if (raw === 'lost' || raw === null) return { lost: true };
